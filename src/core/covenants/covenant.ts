@@ -1,0 +1,68 @@
+import type { PlainDate } from '../calendar/plainDate.ts';
+import type { Decimal } from '../money/decimal.ts';
+import type { MeasureCode } from '../measures/measure.ts';
+import type { StatementScope } from '../statements/statement.ts';
+
+export const OPERATORS = ['<=', '<', '>=', '>'] as const;
+export type Operator = (typeof OPERATORS)[number];
+
+export const isMaximum = (operator: Operator): boolean => operator === '<=' || operator === '<';
+
+/** One row of the level schedule. `until` is inclusive; null is without end. A null level is a covenant holiday. */
+export interface CovenantLevel {
+  readonly from: PlainDate;
+  readonly until: PlainDate | null;
+  readonly level: Decimal | null;
+}
+
+/** How the agreement defines EBITDA and debt for this covenant. */
+export interface CovenantDefinition {
+  /** Share of EBITDA that capped add-backs may reach; null is no cap. */
+  readonly addBackCap: Decimal | null;
+  /** 'before': share of EBITDA before the capped add-backs; 'after': of EBITDA including them. */
+  readonly addBackCapBasis: 'before' | 'after';
+  readonly leasesInDebt: boolean;
+  /** The most cash that may be netted; null is no limit. */
+  readonly cashNettingCap: Decimal | null;
+  /** Counts undrawn commitments towards minimum liquidity. */
+  readonly undrawnCountsAsLiquidity: boolean;
+}
+
+export interface AddBack {
+  readonly id: number;
+  readonly periodEnd: PlainDate;
+  readonly months: number;
+  readonly label: string;
+  readonly amount: Decimal;
+  readonly capped: boolean;
+  readonly reason: string;
+}
+
+/** A lender's decision to give up one failed test. The failure stays underneath. */
+export interface Waiver {
+  readonly testDate: PlainDate;
+  readonly grantedOn: PlainDate;
+  readonly until: PlainDate | null;
+  readonly conditions: string;
+}
+
+export interface Covenant {
+  readonly id: number;
+  readonly facilityId: number;
+  readonly name: string;
+  readonly clause: string;
+  readonly measure: MeasureCode;
+  readonly operator: Operator;
+  /** Decimal places that the agreement rounds the ratio to before comparing; null compares unrounded. */
+  readonly roundingPlaces: number | null;
+  readonly scope: StatementScope;
+  readonly currency: string;
+  readonly firstTestOn: PlainDate;
+  /** 3, 6 or 12. */
+  readonly everyMonths: number;
+  readonly definition: CovenantDefinition;
+  /** In date order, without gaps that are meant as holidays: a day outside every row has no level in force. */
+  readonly levels: readonly CovenantLevel[];
+  readonly addBacks: readonly AddBack[];
+  readonly waivers: readonly Waiver[];
+}

@@ -1,0 +1,53 @@
+import type { PlainDate } from '../calendar/plainDate.ts';
+
+export const QUALITY_BANDS = [
+  'well supported',
+  'broadly supported',
+  'needs explanation',
+  'weakly supported',
+] as const;
+export type QualityBand = (typeof QUALITY_BANDS)[number];
+
+export const QUALITY_BLOCKS = ['unexplained accruals', 'sharpest stretch', 'cash conversion'] as const;
+export type QualityBlockName = (typeof QUALITY_BLOCKS)[number];
+
+export interface QualityBlock {
+  readonly name: QualityBlockName;
+  readonly weight: number;
+  /** 0 (no reason to ask) to 1; null where the block is not available, with the reason. */
+  readonly risk: number | null;
+  readonly reason: string | null;
+  /** Raw figures behind the block, by name, for the method line ("receivableDays", "receivableDaysYearAgo", …). */
+  readonly figures: Readonly<Record<string, number>>;
+  readonly peers: number;
+}
+
+/** The score of one quarter end. */
+export interface QuarterScore {
+  readonly quarterEnd: PlainDate;
+  readonly score: number | null;
+  readonly noScoreReason: string | null;
+  /** Weight available, 0 to 100. */
+  readonly coverage: number;
+  readonly blocks: readonly QualityBlock[];
+  readonly sectorPeers: number;
+  readonly bookPeers: number;
+  /** Weight given to the sector in the peer percentiles, 0 to 1; the rest leans on the whole book. */
+  readonly sectorWeight: number;
+  readonly derivedCashFlow: boolean;
+}
+
+export interface ReportingQuality {
+  readonly headline: number | null;
+  readonly band: QualityBand | null;
+  /** One quarter end only. */
+  readonly provisional: boolean;
+  readonly noScoreReason: string | null;
+  readonly latest: QuarterScore | null;
+  /** Oldest first. */
+  readonly history: readonly QuarterScore[];
+  readonly explanations: readonly string[];
+  readonly whatWouldChangeIt: string | null;
+  /** Remarks that stand beside the number: unaudited, derived, does not tie, growing fast, few peers. */
+  readonly remarks: readonly string[];
+}

@@ -1,0 +1,16 @@
+/// <reference types="astro/client" />
+import type { Person as SignedInPerson } from './server/auth/policy.ts';
+
+declare global {
+  namespace App {
+    interface Locals {
+      /** A person with a live session, or nobody. */
+      person: SignedInPerson | null;
+      sessionId: string | null;
+      requestId: string;
+      /** The client's address as the socket (or the named proxy) gives it. */
+      address: string;
+      now: Date;
+    }
+  }
+}

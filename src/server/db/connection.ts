@@ -1,0 +1,37 @@
+/** The connection pool. One process, one pool. */
+import { Sequelize } from 'sequelize';
+import { env } from '../config/env.ts';
+
+/** Money comes back as text, counts as numbers, an unsafe BIGINT as an error. */
+const DIALECT_OPTIONS = {
+  supportBigNumbers: false,
+  bigNumberStrings: false,
+  decimalAsNumber: false,
+  bigIntAsNumber: true,
+  insertIdAsNumber: true,
+  checkNumberRange: true,
+  connectTimeout: 5_000,
+} as const;
+
+export function connect(url: string, poolSize = 10): Sequelize {
+  return new Sequelize(url, {
+    dialect: 'mariadb',
+    timezone: '+00:00',
+    logging: false,
+    pool: { max: poolSize, min: 0, acquire: 15_000, idle: 10_000 },
+    dialectOptions: DIALECT_OPTIONS,
+  });
+}
+
+let pool: Sequelize | null = null;
+
+export function database(): Sequelize {
+  pool ??= connect(env().DATABASE_URL);
+  return pool;
+}
+
+export async function closeDatabase(): Promise<void> {
+  const open = pool;
+  pool = null;
+  await open?.close();
+}
