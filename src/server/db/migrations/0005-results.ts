@@ -26,6 +26,7 @@ export const migration: Migration = {
       borrowers_failed int unsigned not null default 0,
       cross_section_id bigint unsigned null,
       failure varchar(1000) null,
+      mailed_through datetime(3) null,
       version int unsigned not null default 1,
       unique key runs_date (business_date, kind)
     ) engine=InnoDB default charset=utf8mb4 collate=utf8mb4_unicode_ci`,
@@ -39,6 +40,7 @@ export const migration: Migration = {
       lease_until datetime(6) null,
       tries int unsigned not null default 0,
       failure varchar(1000) null,
+      output mediumtext null,
       primary key (run_id, phase, borrower_id),
       key run_tasks_state (run_id, phase, state),
       constraint run_tasks_run foreign key (run_id) references runs (id)
@@ -131,6 +133,7 @@ export const migration: Migration = {
       due_on date not null,
       counter int unsigned not null default 1,
       condition_gone_at datetime(3) null,
+      last_seen_at datetime(3) null,
       put_off_until date null,
       put_off_count tinyint unsigned not null default 0,
       raised_at datetime(3) not null,
@@ -161,6 +164,7 @@ export const migration: Migration = {
       what varchar(40) not null,
       text varchar(1000) not null,
       key alert_events_alert (alert_id, id),
+      key alert_events_at (at, id),
       key alert_events_person (person_id),
       constraint alert_events_alert foreign key (alert_id) references alerts (id),
       constraint alert_events_person foreign key (person_id) references people (id)
