@@ -16,6 +16,21 @@ export type AlertKind = (typeof ALERT_KINDS)[number];
 export const SEVERITIES = ['urgent', 'soon', 'note'] as const;
 export type Severity = (typeof SEVERITIES)[number];
 
+/** The life of an alert; 'closed' and 'superseded' end it, every other state is open. */
+export const ALERT_STATES = [
+  'raised',
+  'taken',
+  'waiting for borrower',
+  'waiting for analyst',
+  'assessed',
+  'put off',
+  'carried into a proposal',
+  'closing to be confirmed',
+  'closed',
+  'superseded',
+] as const;
+export type AlertState = (typeof ALERT_STATES)[number];
+
 /** What the night found, before it is held against the alerts that are open. */
 export interface AlertFinding {
   readonly kind: AlertKind;

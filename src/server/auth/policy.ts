@@ -4,6 +4,8 @@
  * 'desk' is yes on the person's own desks, 'all' on every desk, 'self' asks the service to hold the person
  * against the subject (owner, deputy, proposer) as well.
  */
+import type { DeskScope } from '../db/deskScope.ts';
+
 export const ROLES = [
   'analyst',
   'relationship manager',
@@ -59,9 +61,7 @@ export interface Person {
   readonly deskIds: readonly number[];
 }
 
-/** The desks on which the person may do this: every desk, some, or none. */
-export type DeskScope = 'all' | readonly number[];
-
+/** The desks on which the person may do this. */
 export function deskScope(person: Person, action: Action): DeskScope {
   const row: Partial<Record<Role, Reach>> = TABLE[action];
   const reaches = person.roles.map((role) => row[role]);

@@ -10,6 +10,9 @@ export interface Actor {
   readonly now: Date;
 }
 
+/** A signed-in person: what most services ask for. */
+export type PersonActor = Actor & { readonly person: Person };
+
 /** The product acting by itself. */
 export const systemActor = (name: string, now: Date): Actor => ({
   person: null,

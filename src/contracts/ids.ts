@@ -1,0 +1,9 @@
+import { z } from 'zod';
+
+const id = z
+  .string()
+  .regex(/^[1-9]\d{0,15}$/)
+  .transform(Number);
+
+/** `/…/[id]`: a positive whole number; anything else is not there. */
+export const idParams = z.object({ id });

@@ -1,0 +1,143 @@
+import { z } from 'zod';
+import {
+  newWatchlistProposal,
+  type NewWatchlistProposal,
+  type ProposalDecision,
+} from '../../contracts/watchlist.ts';
+import { err, ok } from '../../core/result.ts';
+import { deskScope } from '../auth/policy.ts';
+import {
+  decideProposal as decideRecord,
+  findProposal,
+  withdrawProposal as withdrawRecord,
+  type ProposalRecord,
+} from '../db/repositories/proposals.ts';
+import { changeEntry, insertEntry, standingEntry } from '../db/repositories/watchlist.ts';
+import type { Transaction } from 'sequelize';
+import type { PersonActor } from './actor.ts';
+import { audit, write, type Outcome } from './write.ts';
+
+const stored = z.string().transform((text) => newWatchlistProposal.parse(JSON.parse(text)));
+
+/** The other person's word. The UPDATE itself refuses the proposer; what follows here only says why. */
+export function decideProposal(
+  actor: PersonActor,
+  request: { id: number; version: number },
+  decision: ProposalDecision,
+): Promise<Outcome<{ id: number; state: 'approved' | 'declined' }>> {
+  const state = decision.decision === 'approve' ? 'approved' : 'declined';
+  return write(actor, 'decide-proposal', { ...request, decision }, async (tx) => {
+    const proposal = await findProposal(tx, request.id, deskScope(actor.person, 'decide'));
+    if (!proposal) return err({ kind: 'not-found', what: 'proposal' });
+    const decided = await decideRecord(tx, {
+      ...request,
+      state,
+      decidedBy: actor.person.id,
+      text: decision.text,
+      now: actor.now,
+    });
+    if (!decided) return refusal(proposal, request.version, actor.person.id);
+
+    const content = stored.parse(proposal.content);
+    if (state === 'approved') {
+      const applied = await apply(tx, actor, proposal, content);
+      if (!applied.ok) return applied;
+    }
+    await audit(tx, actor, {
+      action: 'decide-proposal',
+      subjectKind: 'proposal',
+      subjectId: String(proposal.id),
+      borrowerId: proposal.borrowerId,
+      deskId: proposal.deskId,
+      summary: `${state === 'approved' ? 'Approved' : 'Declined'}: ${proposal.borrowerName}, watchlist ${content.change} at ${content.grade}, proposed by ${proposal.proposedBy}`,
+      before: { state: proposal.state },
+      after: { state, text: decision.text },
+    });
+    return ok({ id: proposal.id, state });
+  });
+}
+
+export function withdrawProposal(
+  actor: PersonActor,
+  request: { id: number; version: number },
+): Promise<Outcome<{ id: number }>> {
+  return write(actor, 'withdraw-proposal', request, async (tx) => {
+    const proposal = await findProposal(tx, request.id, deskScope(actor.person, 'propose'));
+    if (!proposal) return err({ kind: 'not-found', what: 'proposal' });
+    if (proposal.proposedById !== actor.person.id)
+      return err({
+        kind: 'not-allowed',
+        detail: 'Only the person who proposed this can withdraw it. Nothing was changed.',
+      });
+    if (!(await withdrawRecord(tx, { ...request, personId: actor.person.id })))
+      return refusal(proposal, request.version, null);
+    await audit(tx, actor, {
+      action: 'withdraw-proposal',
+      subjectKind: 'proposal',
+      subjectId: String(proposal.id),
+      borrowerId: proposal.borrowerId,
+      deskId: proposal.deskId,
+      summary: `Withdrew the watchlist proposal for ${proposal.borrowerName}`,
+      before: { state: proposal.state },
+      after: { state: 'withdrawn' },
+    });
+    return ok({ id: proposal.id });
+  });
+}
+
+async function apply(
+  tx: Transaction,
+  actor: PersonActor,
+  proposal: ProposalRecord,
+  content: NewWatchlistProposal,
+): Promise<Outcome<null>> {
+  const terms = {
+    proposalId: proposal.id,
+    grade: content.grade,
+    reason: content.reason,
+    ownerId: content.ownerId,
+    plan: content.plan,
+    nextReviewOn: content.nextReviewOn,
+  };
+  if (content.change === 'entry') {
+    await insertEntry(tx, {
+      ...terms,
+      borrowerId: proposal.borrowerId,
+      enteredOn: actor.now.toISOString().slice(0, 10),
+    });
+    return ok(null);
+  }
+  const standing = await standingEntry(tx, proposal.borrowerId);
+  const changed =
+    standing &&
+    (await changeEntry(tx, {
+      ...terms,
+      id: standing.id,
+      version: standing.version,
+      state: content.change === 'exit' ? 'probation' : 'active',
+    }));
+  if (!changed)
+    return err({
+      kind: 'conflict',
+      detail: `${proposal.borrowerName} is no longer on the watchlist as proposed. Nothing was changed. Decline this proposal and have it made again.`,
+    });
+  return ok(null);
+}
+
+function refusal(proposal: ProposalRecord, version: number, deciderId: number | null): Outcome<never> {
+  if (proposal.state !== 'proposed')
+    return err({
+      kind: 'conflict',
+      detail: `This proposal was ${proposal.state}${proposal.decidedBy ? ` by ${proposal.decidedBy}` : ''}. Nothing was changed.`,
+    });
+  if (deciderId !== null && proposal.proposedById === deciderId)
+    return err({
+      kind: 'not-allowed',
+      detail: 'You proposed this; another committee member decides it. Nothing was changed.',
+    });
+  return err({
+    kind: 'stale',
+    detail: `This proposal changed since you opened it (you saw version ${version}). Nothing was changed. Read it again and decide.`,
+    currentVersion: proposal.version,
+  });
+}
