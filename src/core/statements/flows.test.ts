@@ -1,0 +1,201 @@
+import { describe, expect, test } from 'vitest';
+import { decimal } from '../money/decimal.ts';
+import { currentStatements, knownStatements } from './currentStatements.ts';
+import { balanceAt, flowOver, lastTwelveMonths, quarterFlow } from './flows.ts';
+import type { Reading } from './reading.ts';
+import { buildStatement } from './statement.fixture.ts';
+
+const amount = (reading: Reading): string =>
+  reading.kind === 'value' ? reading.value.toFixed() : reading.kind;
+
+describe('the statement in force', () => {
+  test('is the latest version of a period', () => {
+    const first = buildStatement('2025-12-31', 12, { revenue: 100 });
+    const second = buildStatement('2025-12-31', 12, { revenue: 97 }, { version: 2 });
+    expect(currentStatements([second, first], { scope: 'group', asOf: '2026-06-30' })).toEqual([second]);
+  });
+
+  test('is audited over reviewed over management, whatever the version', () => {
+    const audited = buildStatement('2025-12-31', 12, { revenue: 100 }, { basis: 'audited' });
+    const reviewed = buildStatement('2025-12-31', 12, { revenue: 98 }, { basis: 'reviewed', version: 5 });
+    const management = buildStatement('2025-12-31', 12, { revenue: 97 }, { version: 9 });
+    const selection = { scope: 'group', asOf: '2026-06-30' } as const;
+    expect(currentStatements([management, audited, reviewed], selection)).toEqual([audited]);
+    expect(currentStatements([management, reviewed], selection)).toEqual([reviewed]);
+  });
+
+  test('is never a forecast, never of another scope, never received after the day', () => {
+    const statements = [
+      buildStatement('2025-12-31', 12, { revenue: 1 }, { basis: 'forecast' }),
+      buildStatement('2025-12-31', 12, { revenue: 2 }, { scope: 'stand-alone' }),
+      buildStatement('2025-12-31', 12, { revenue: 3 }, { receivedOn: '2026-03-02' }),
+    ];
+    expect(currentStatements(statements, { scope: 'group', asOf: '2026-03-01' })).toEqual([]);
+    expect(currentStatements(statements, { scope: 'group', asOf: '2026-03-02' })).toHaveLength(1);
+  });
+});
+
+describe('balances and exact periods', () => {
+  test('a period end within six days of a month end belongs to that month', () => {
+    const statements = [buildStatement('2025-12-28', 0, { cash: 7 })];
+    expect(amount(balanceAt(statements, 'cash', '2025-12-31'))).toBe('7');
+  });
+
+  test('a zero is a zero and a blank is missing, named by line and period', () => {
+    const statements = [buildStatement('2025-12-31', 0, { cash: 0 })];
+    expect(amount(balanceAt(statements, 'cash', '2025-12-31'))).toBe('0');
+    expect(balanceAt(statements, 'inventory', '2025-12-31')).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'inventory', periodEnd: '2025-12-31', months: 0 }],
+    });
+    expect(flowOver(statements, 'revenue', '2025-12-31', 12)).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'statement', periodEnd: '2025-12-31', months: 12 }],
+    });
+  });
+
+  test('depreciation and amortisation are put together where the sheet gives them apart', () => {
+    const apart = [buildStatement('2025-12-31', 12, { depreciation: 3, amortisation: 0.7 })];
+    const sum = [buildStatement('2025-12-31', 12, { depreciation_and_amortisation: 3.7 })];
+    for (const statements of [apart, sum])
+      expect(amount(flowOver(statements, 'depreciation_and_amortisation', '2025-12-31', 12))).toBe('3.7');
+  });
+});
+
+describe('a quarter', () => {
+  const yearToDate = [
+    buildStatement('2025-03-31', 3, { revenue: 20 }),
+    buildStatement('2025-09-30', 9, { revenue: 66 }),
+    buildStatement('2025-12-31', 12, { revenue: 95 }),
+  ];
+
+  test('is the three-month statement, else a difference of years to date', () => {
+    expect(amount(quarterFlow(yearToDate, 'revenue', '2025-03-31', 12))).toBe('20');
+    expect(amount(quarterFlow(yearToDate, 'revenue', '2025-12-31', 12))).toBe('29');
+  });
+
+  test('is missing where a year to date is missing, and says which', () => {
+    expect(quarterFlow(yearToDate, 'revenue', '2025-09-30', 12)).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'statement', periodEnd: '2025-06-30', months: 6 }],
+    });
+  });
+
+  test('never crosses a year end', () => {
+    expect(
+      amount(
+        quarterFlow(
+          [...yearToDate, buildStatement('2026-03-31', 3, { revenue: 22 })],
+          'revenue',
+          '2026-03-31',
+          12,
+        ),
+      ),
+    ).toBe('22');
+  });
+});
+
+describe('twelve months', () => {
+  const pieces = [
+    buildStatement('2024-09-30', 9, { revenue: 74 }),
+    buildStatement('2024-12-31', 12, { revenue: 100 }),
+    buildStatement('2025-09-30', 9, { revenue: 82 }),
+  ];
+
+  test('are year to date + last full year - the same year to date a year earlier, each with its sign', () => {
+    const reading = lastTwelveMonths(pieces, 'revenue', '2025-09-30', 12);
+    expect(amount(reading)).toBe('108');
+    expect(reading.kind === 'value' && reading.inputs.map(({ sign, months }) => [sign, months])).toEqual([
+      [1, 9],
+      [1, 12],
+      [-1, 9],
+    ]);
+  });
+
+  test('are missing where any part is missing, with the gap named', () => {
+    expect(lastTwelveMonths(pieces.slice(1), 'revenue', '2025-09-30', 12)).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'statement', periodEnd: '2024-09-30', months: 9 }],
+    });
+  });
+
+  test('are four quarters where there is no year to date', () => {
+    const quarters = ['2024-12-31', '2025-03-31', '2025-06-30', '2025-09-30'].map((end, index) =>
+      buildStatement(end as '2024-12-31', 3, { revenue: 20 + index }),
+    );
+    expect(amount(lastTwelveMonths(quarters, 'revenue', '2025-09-30', 12))).toBe('86');
+  });
+
+  const quarterly = (last: number) => [
+    ...[20, 30, 25].map((revenue, index) =>
+      buildStatement((['2025-03-31', '2025-06-30', '2025-09-30'] as const)[index]!, 3, { revenue }),
+    ),
+    buildStatement('2025-12-31', 3, { revenue: last }),
+  ];
+
+  test('by two routes may differ by what rounding explains and no more', () => {
+    // five figures rounded to whole units: tolerance 5 x 1 / 2 = 2.5
+    const year = buildStatement('2025-12-31', 12, { revenue: 100 });
+    expect(amount(lastTwelveMonths([year, ...quarterly(27.5)], 'revenue', '2025-12-31', 12))).toBe('100');
+    const apart = lastTwelveMonths([year, ...quarterly(27.6)], 'revenue', '2025-12-31', 12);
+    expect(apart.kind === 'not-meaningful' && apart.reason).toMatch(/100 by .* and 102\.6 by four quarters/);
+  });
+
+  test('that rest on an audited year supersede quarters on management figures', () => {
+    const audited = buildStatement('2025-12-31', 12, { revenue: 100 }, { basis: 'audited' });
+    expect(amount(lastTwelveMonths([audited, ...quarterly(40)], 'revenue', '2025-12-31', 12))).toBe('100');
+  });
+});
+
+describe('a restatement', () => {
+  const selection = { scope: 'group', asOf: '2026-12-31' } as const;
+  const originals = [
+    buildStatement('2024-09-30', 9, { revenue: 74, cogs: 40 }, { receivedOn: '2024-11-10' }),
+    buildStatement('2024-12-31', 12, { revenue: 100, cogs: 60 }, { receivedOn: '2025-02-20' }),
+    buildStatement('2025-09-30', 9, { revenue: 82, cogs: 45 }, { receivedOn: '2025-11-10' }),
+  ];
+  const restated = (end: '2024-09-30' | '2024-12-31', months: number, revenue: number, cogs: number) =>
+    buildStatement(end, months, { revenue, cogs }, { version: 2, receivedOn: '2025-11-10' });
+
+  test('of both parts gives the same twelve months (97 - 71 = 100 - 74)', () => {
+    const all = knownStatements(
+      [...originals, restated('2024-12-31', 12, 97, 60), restated('2024-09-30', 9, 71, 40)],
+      selection,
+    );
+    expect(amount(lastTwelveMonths(all, 'revenue', '2025-09-30', 12))).toBe('108');
+  });
+
+  test('of one part alone is not mixed into twelve months', () => {
+    const onlyYear = [...originals, restated('2024-12-31', 12, 97, 60)];
+    const onlyNineMonths = [...originals, restated('2024-09-30', 9, 71, 40)];
+    for (const all of [onlyYear, onlyNineMonths]) {
+      const reading = lastTwelveMonths(all, 'revenue', '2025-09-30', 12);
+      expect(reading.kind === 'not-meaningful' && reading.reason).toContain('not mixed');
+    }
+  });
+
+  test('leaves lines alone that it did not change', () => {
+    const all = [...originals, restated('2024-12-31', 12, 97, 60)];
+    expect(amount(lastTwelveMonths(all, 'cogs', '2025-09-30', 12))).toBe('65');
+  });
+
+  test('is not what a new version is that comes before any later period', () => {
+    const closed = buildStatement(
+      '2024-12-31',
+      12,
+      { revenue: 97 },
+      { version: 2, receivedOn: '2025-03-31' },
+    );
+    expect(amount(lastTwelveMonths([...originals, closed], 'revenue', '2025-09-30', 12))).toBe('105');
+  });
+});
+
+test('amounts enter as decimals, not doubles', () => {
+  const statements = [0.1, 0.2, 0.3, 0.4].map((revenue, index) =>
+    buildStatement((['2025-03-31', '2025-06-30', '2025-09-30', '2025-12-31'] as const)[index]!, 3, {
+      revenue,
+    }),
+  );
+  const reading = lastTwelveMonths(statements, 'revenue', '2025-12-31', 12);
+  expect(reading.kind === 'value' && reading.value.eq(decimal(1))).toBe(true);
+});

@@ -1,0 +1,32 @@
+import type { LineItemCode } from './lineItems.ts';
+import type { InputUsed } from './reading.ts';
+import type { Statement } from './statement.ts';
+
+/**
+ * The cells of one statement that make up a line, or null where the line is not there. Blank is not zero.
+ *
+ * `depreciation_and_amortisation` is the one line that sheets give either whole or in parts: depreciation and
+ * amortisation where both are there, else the sum as the sheet gives it, else depreciation alone (a sheet without
+ * a row for amortisation). It is put together here and nowhere else.
+ *
+ * @example lineInputs(statement, 'revenue')?.length // => 1
+ */
+export function lineInputs(statement: Statement, line: LineItemCode): readonly InputUsed[] | null {
+  if (line !== 'depreciation_and_amortisation') return cells(statement, [line]);
+  return (
+    cells(statement, ['depreciation', 'amortisation']) ??
+    cells(statement, ['depreciation_and_amortisation']) ??
+    cells(statement, ['depreciation'])
+  );
+}
+
+function cells(statement: Statement, lines: readonly LineItemCode[]): readonly InputUsed[] | null {
+  const { id: statementId, periodEnd, months } = statement;
+  const inputs: InputUsed[] = [];
+  for (const line of lines) {
+    const amount = statement.amounts[line];
+    if (!amount) return null;
+    inputs.push({ statementId, line, sign: 1, amount, periodEnd, months });
+  }
+  return inputs;
+}
