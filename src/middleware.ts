@@ -1,0 +1,29 @@
+/** The door: every request passes these stages, outermost first. The pieces are in src/server/http. */
+import { sequence } from 'astro:middleware';
+import { isOutage } from './server/db/inTransaction.ts';
+import {
+  headerStage,
+  methodStage,
+  originStage,
+  outageStage,
+  refusalStage,
+  requestStage,
+  requireUserStage,
+  sessionStage,
+} from './server/http/stages.ts';
+import { currentPerson } from './server/services/currentPerson.ts';
+import { recordRefusal } from './server/services/recordRefusal.ts';
+
+/** The server hands in the socket's address; the development server has none to hand in. */
+const isDevelopment = import.meta.env.DEV;
+
+export const onRequest = sequence(
+  requestStage((context) => (isDevelopment ? context.clientAddress : 'unknown')),
+  headerStage(isDevelopment),
+  outageStage(isOutage),
+  originStage,
+  sessionStage(currentPerson),
+  refusalStage(recordRefusal),
+  requireUserStage,
+  methodStage,
+);

@@ -1,0 +1,42 @@
+/** Desks, their heads and members. */
+import type { Transaction } from 'sequelize';
+import { execute, select } from '../sql.ts';
+
+export interface Desk {
+  readonly id: number;
+  readonly name: string;
+  readonly headId: number | null;
+  readonly version: number;
+}
+
+export async function listDesks(tx: Transaction): Promise<Desk[]> {
+  const rows = await select<{ id: number; name: string; head_id: number | null; version: number }>(
+    tx,
+    'select id, name, head_id, version from desks order by name, id',
+  );
+  return rows.map((row) => ({ id: row.id, name: row.name, headId: row.head_id, version: row.version }));
+}
+
+/** A desk comes with the counter that its alert lists watch. */
+export async function insertDesk(
+  tx: Transaction,
+  desk: { name: string; headId: number | null },
+): Promise<number> {
+  const { insertId } = await execute(tx, 'insert into desks (name, head_id) values (:name, :headId)', desk);
+  await execute(tx, 'insert into desk_changes (desk_id) values (:insertId)', { insertId });
+  return insertId;
+}
+
+export async function setDeskHead(tx: Transaction, deskId: number, headId: number): Promise<void> {
+  await execute(tx, 'update desks set head_id = :headId, version = version + 1 where id = :deskId', {
+    deskId,
+    headId,
+  });
+}
+
+export async function addDeskMember(tx: Transaction, deskId: number, personId: number): Promise<void> {
+  await execute(tx, 'insert ignore into desk_members (desk_id, person_id) values (:deskId, :personId)', {
+    deskId,
+    personId,
+  });
+}

@@ -1,0 +1,157 @@
+/** The stages that every request passes, outermost first; src/middleware.ts puts them in order. */
+import { randomUUID } from 'node:crypto';
+import type { APIContext, MiddlewareHandler } from 'astro';
+import { env } from '../config/env.ts';
+import type { SignedIn } from '../auth/sessions.ts';
+import { clientAddress } from './address.ts';
+import { setMissingHeaders } from './headers.ts';
+import { log } from './log.ts';
+import { isApi, isOpen } from './openPaths.ts';
+import { isOwnRequest, ownOrigin } from './origin.ts';
+import { problemResponse } from './problem.ts';
+import { outagePage } from './outagePage.ts';
+import { clearSessionCookie, readSessionCookie } from './sessionCookie.ts';
+
+const RETRY_AFTER_SECONDS = 10;
+
+/** Request id, clock and address. An error page passes here a second time and keeps what the first pass set. */
+export const requestStage =
+  (socketAddress: (context: APIContext) => string): MiddlewareHandler =>
+  (context, next) => {
+    const { locals, request } = context;
+    locals.person = null;
+    locals.sessionId = null;
+    locals.requestId ??= randomUUID();
+    locals.now = new Date();
+    locals.address = clientAddress(
+      locals.address ?? socketAddress(context),
+      request.headers.get('x-forwarded-for'),
+      env().BEHIND_PROXY,
+    );
+    return next();
+  };
+
+export const headerStage =
+  (isDevelopment: boolean): MiddlewareHandler =>
+  async (context, next) => {
+    const response = await next();
+    setMissingHeaders(response.headers, isDevelopment);
+    response.headers.set('x-request-id', context.locals.requestId);
+    return response;
+  };
+
+/** What was thrown is a bug or an outage: the reader learns which, and a number to ask with; the log learns why. */
+export const outageStage =
+  (isOutage: (error: unknown) => boolean): MiddlewareHandler =>
+  async (context, next) => {
+    try {
+      return await next();
+    } catch (error) {
+      const { requestId } = context.locals;
+      const path = context.url.pathname;
+      log().error({ err: error, requestId, method: context.request.method, path }, 'request failed');
+      if (isOutage(error))
+        return isApi(path) ? outageProblem(context) : outagePage(requestId, RETRY_AFTER_SECONDS);
+      if (!isApi(path)) return new Response(null, { status: 500 });
+      return problemResponse(context, {
+        status: 500,
+        title: 'Failed',
+        detail: `Something failed that should not. Give your administrator the request number ${requestId}.`,
+      });
+    }
+  };
+
+export const originStage: MiddlewareHandler = (context, next) => {
+  const { request, url, locals } = context;
+  if (isOwnRequest(request.method, url.pathname, request.headers, ownOrigin())) return next();
+  const { requestId, address } = locals;
+  log().warn({ requestId, address, method: request.method, path: url.pathname }, 'foreign origin refused');
+  return problemResponse(context, {
+    status: 403,
+    title: 'Not from here',
+    detail: `This request did not come from a page of ${ownOrigin()}. Nothing was changed. Open the product at that address and try again.`,
+  });
+};
+
+export const sessionStage =
+  (currentPerson: (token: string, now: Date) => Promise<SignedIn | null>): MiddlewareHandler =>
+  async (context, next) => {
+    const token = readSessionCookie(context.cookies);
+    if (!token) return next();
+    const signedIn = await currentPerson(token, context.locals.now);
+    if (signedIn) {
+      context.locals.person = signedIn.person;
+      context.locals.sessionId = signedIn.sessionId;
+    } else clearSessionCookie(context.cookies);
+    return next();
+  };
+
+export interface Refusal {
+  readonly person: SignedIn['person'];
+  readonly status: number;
+  readonly method: string;
+  readonly path: string;
+  readonly requestId: string;
+  readonly address: string;
+  readonly now: Date;
+}
+
+/** A signed-in person who asks for what they may not have, or may not see, leaves a line in the audit log. */
+export const refusalStage =
+  (record: (refusal: Refusal) => Promise<void>): MiddlewareHandler =>
+  async (context, next) => {
+    const response = await next();
+    const { person, requestId, address, now } = context.locals;
+    const isNamedThing = Object.keys(context.params).some((name) => name !== 'path');
+    if (person && (response.status === 403 || (response.status === 404 && isNamedThing)))
+      await record({
+        person,
+        status: response.status,
+        method: context.request.method,
+        path: context.url.pathname,
+        requestId,
+        address,
+        now,
+      });
+    return response;
+  };
+
+/** Deny by default: only what is listed as open answers somebody who is not signed in. */
+export const requireUserStage: MiddlewareHandler = (context, next) => {
+  const { pathname, search } = context.url;
+  if (context.locals.person || isOpen(pathname, context.routePattern)) return next();
+  if (isApi(pathname))
+    return problemResponse(context, {
+      status: 401,
+      title: 'Sign in first',
+      detail:
+        'Your session has ended or you are not signed in. Nothing was changed. Sign in and send this again.',
+    });
+  const wanted = pathname === '/' ? '' : `?next=${encodeURIComponent(pathname + search)}`;
+  return context.redirect(`/sign-in${wanted}`, 303);
+};
+
+/** Astro answers an unknown method of a route with an empty 404, which would become a page. */
+export const methodStage: MiddlewareHandler = async (context, next) => {
+  const response = await next();
+  if (
+    !isApi(context.url.pathname) ||
+    response.status !== 404 ||
+    response.body !== null ||
+    context.request.method === 'HEAD'
+  )
+    return response;
+  return problemResponse(context, {
+    status: 405,
+    title: 'Method not known here',
+    detail: `This address does not take ${context.request.method}. Nothing was changed.`,
+  });
+};
+
+const outageProblem = (context: APIContext): Response =>
+  problemResponse(context, {
+    status: 503,
+    title: 'Database does not answer',
+    detail: 'The database does not answer. Nothing was changed. Try again in a few seconds.',
+    retryAfterSeconds: RETRY_AFTER_SECONDS,
+  });
