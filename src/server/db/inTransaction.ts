@@ -3,6 +3,8 @@ import { database } from './connection.ts';
 
 /** Deadlock, lock wait, snapshot conflict, cluster not ready, cluster certification. */
 const WORTH_ANOTHER_TRY = new Set([1213, 1205, 1020, 1047, 1180]);
+/** The connector's own numbers: connection closed already, socket closed unexpectedly, command on a closed connection. */
+const CLOSED_MEANWHILE = new Set([45001, 45009, 45013]);
 const MOST_TRIES = 5;
 
 function errorNumber(error: unknown): number | null {
@@ -39,14 +41,20 @@ export function isOutage(error: unknown): boolean {
  */
 export async function inTransaction<T>(work: (tx: Transaction) => Promise<T>): Promise<T> {
   for (let attempt = 1; ; attempt += 1) {
+    let begun = false;
     try {
       return await database().transaction(
         { isolationLevel: Transaction.ISOLATION_LEVELS.REPEATABLE_READ },
-        work,
+        (tx) => {
+          begun = true;
+          return work(tx);
+        },
       );
     } catch (error) {
       const number = errorNumber(error);
-      if (attempt >= MOST_TRIES || number === null || !WORTH_ANOTHER_TRY.has(number)) throw error;
+      // A pooled connection that the server closed meanwhile shows itself at BEGIN, before anything was done.
+      const isWorthATry = number !== null && (begun ? WORTH_ANOTHER_TRY : CLOSED_MEANWHILE).has(number);
+      if (attempt >= MOST_TRIES || !isWorthATry) throw error;
       await new Promise((resume) => setTimeout(resume, 20 * attempt * (1 + Math.random())));
     }
   }

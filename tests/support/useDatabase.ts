@@ -1,0 +1,10 @@
+/**
+ * First import of every test that speaks to the database: points the application's settings at the test run's
+ * database before anything reads them.
+ */
+import { inject } from 'vitest';
+
+process.env['DATABASE_URL'] = inject('databaseUrl');
+process.env['DATABASE_OWNER_URL'] = inject('databaseOwnerUrl');
+process.env['AUDIT_KEY'] = 'key-of-the-test-run-0123456789abcdefgh';
+process.env['LOG_LEVEL'] = 'silent';
