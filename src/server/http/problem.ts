@@ -14,21 +14,22 @@ export interface PlainProblem {
 }
 
 /** `type` is a stable name of the kind of problem: the title in lower case, as a relative address. */
+export const problemBody = (requestId: string, problem: PlainProblem): ProblemBody => ({
+  type: `/problems/${problem.title.toLowerCase().replaceAll(/[^a-z]+/g, '-')}`,
+  title: problem.title,
+  status: problem.status,
+  detail: problem.detail,
+  instance: `urn:request:${requestId}`,
+  ...(problem.errors && { errors: problem.errors }),
+  ...(problem.currentVersion !== undefined && { currentVersion: problem.currentVersion }),
+});
+
 export function problemResponse(
   context: Pick<APIContext, 'locals'>,
   problem: ServiceProblem | PlainProblem,
 ): Response {
-  const plain = 'kind' in problem ? toPlain(problem) : problem;
-  const body: ProblemBody = {
-    type: `/problems/${plain.title.toLowerCase().replaceAll(/[^a-z]+/g, '-')}`,
-    title: plain.title,
-    status: plain.status,
-    detail: plain.detail,
-    instance: `urn:request:${context.locals.requestId}`,
-    ...(plain.errors && { errors: plain.errors }),
-    ...(plain.currentVersion !== undefined && { currentVersion: plain.currentVersion }),
-  };
-  return new Response(JSON.stringify(body), {
+  const plain = plainProblem(problem);
+  return new Response(JSON.stringify(problemBody(context.locals.requestId, plain)), {
     status: plain.status,
     headers: {
       'content-type': 'application/problem+json; charset=utf-8',
@@ -37,19 +38,21 @@ export function problemResponse(
   });
 }
 
+export const fieldErrors = (error: z.ZodError): FieldError[] =>
+  error.issues.map((issue) => ({ field: issue.path.join('.'), code: issue.code, message: issue.message }));
+
 export function invalidInput(context: Pick<APIContext, 'locals'>, error: z.ZodError): Response {
-  const errors = error.issues.map((issue) => ({
-    field: issue.path.join('.'),
-    code: issue.code,
-    message: issue.message,
-  }));
   return problemResponse(context, {
     status: 422,
     title: 'Cannot be used',
     detail: 'Some of what was sent cannot be used; each field says why. Nothing was changed.',
-    errors,
+    errors: fieldErrors(error),
   });
 }
+
+/** Status, title and words of a problem, whichever shape it comes in. */
+export const plainProblem = (problem: ServiceProblem | PlainProblem): PlainProblem =>
+  'kind' in problem ? toPlain(problem) : problem;
 
 function toPlain(problem: ServiceProblem): PlainProblem {
   switch (problem.kind) {
@@ -57,6 +60,8 @@ function toPlain(problem: ServiceProblem): PlainProblem {
       return { status: 404, title: 'Not found', detail: 'There is nothing here that you can see.' };
     case 'not-allowed':
       return { status: 403, title: 'Not allowed', detail: problem.detail };
+    case 'not-signed-in':
+      return { status: 401, title: 'Not signed in', detail: problem.detail };
     case 'stale':
       return {
         status: 412,
