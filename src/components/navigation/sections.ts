@@ -1,0 +1,49 @@
+/** The sections of the top bar. Only a section that exists stands here. */
+export interface Section {
+  readonly key: SectionKey;
+  readonly name: string;
+  readonly href: string;
+}
+
+export type SectionKey = 'alerts' | 'watchlist' | 'borrowers' | 'imports' | 'reviews' | 'settings' | 'audit';
+
+interface SectionRule extends Section {
+  /** Roles that see it; none named is everybody who reads borrowers. */
+  readonly roles: readonly string[];
+}
+
+const READERS = ['analyst', 'relationship manager', 'committee member', 'auditor'];
+
+const SECTIONS: readonly SectionRule[] = [
+  { key: 'alerts', name: 'Alerts', href: '/alerts', roles: READERS },
+  { key: 'watchlist', name: 'Watchlist', href: '/watchlist', roles: READERS },
+  { key: 'borrowers', name: 'Borrowers', href: '/borrowers', roles: READERS },
+  { key: 'imports', name: 'Imports', href: '/imports', roles: READERS },
+  { key: 'settings', name: 'Desk settings', href: '/settings', roles: ['administrator'] },
+  {
+    key: 'audit',
+    name: 'Audit log',
+    href: '/audit',
+    roles: ['committee member', 'administrator', 'auditor'],
+  },
+];
+
+/** What a person with these roles sees in the top bar, in its order. The server decides again on every page. */
+export function sectionsFor(roles: readonly string[]): readonly Section[] {
+  return SECTIONS.filter((section) => section.roles.some((role) => roles.includes(role))).map(
+    ({ key, name, href }) => ({ key, name, href }),
+  );
+}
+
+export const readsBorrowers = (roles: readonly string[]): boolean =>
+  READERS.some((role) => roles.includes(role));
+
+/** "Analyst, Northern desk": the first role and the desks, as the top bar prints them. */
+export function roleAndDesk(roles: readonly string[], desks: readonly string[]): string {
+  const role = roles.map(sentenceCase).join(' and ') || 'No role';
+  const named = desks.length > 2 ? `${desks.length} desks` : desks.join(' and ');
+  return named ? `${role}, ${named}` : role;
+}
+
+const sentenceCase = (text: string, position: number): string =>
+  position === 0 ? text.charAt(0).toUpperCase() + text.slice(1) : text;

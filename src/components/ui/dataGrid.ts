@@ -1,0 +1,25 @@
+import { columnVisibilityFeature, metaHelper, rowSortingFeature, tableFeatures } from '@tanstack/react-table';
+import type { EntryPlace } from './Table.tsx';
+
+/** What the sheet needs to know of a column besides its content. */
+export interface GridColumnMeta {
+  readonly numeric?: boolean;
+  readonly entry?: EntryPlace;
+  /** Content is a whole NameCell and brings its own <th>. */
+  readonly namesRow?: boolean;
+  /** Name in the column choice and for an empty head. */
+  readonly name?: string;
+  /** Stays whatever is chosen. */
+  readonly fixed?: boolean;
+}
+
+/**
+ * The features that every table of the product uses: sorting and the choice of columns. Rows come sorted from the
+ * server (pass `manualSorting: true`), so that a page of a long list is right.
+ */
+export const gridFeatures = tableFeatures({
+  rowSortingFeature,
+  columnVisibilityFeature,
+  columnMeta: metaHelper<GridColumnMeta>(),
+});
+export type GridFeatures = typeof gridFeatures;
