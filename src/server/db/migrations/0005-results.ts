@@ -229,6 +229,7 @@ export const migration: Migration = {
       headers text not null,
       state varchar(16) not null,
       tries int unsigned not null default 0,
+      unknown_outcomes tinyint unsigned not null default 0,
       next_try_at datetime(3) not null,
       lease_until datetime(6) null,
       fence bigint unsigned not null default 0,
