@@ -25,6 +25,8 @@ export const migration: Migration = {
       scope varchar(16) null,
       layout_key char(64) null,
       reading longtext not null,
+      open_questions smallint unsigned not null,
+      periods smallint unsigned not null,
       uploaded_by bigint unsigned not null,
       uploaded_at datetime(3) not null,
       accepted_by bigint unsigned null,
