@@ -1,5 +1,5 @@
 /** By when an alert is to be assessed and decided, in business days from the day it is raised or worsens. */
-import { addBusinessDays } from '../calendar/businessDays.ts';
+import { daysOn } from '../calendar/deadline.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { AlertKind, Severity } from './alert.ts';
 
@@ -36,7 +36,7 @@ export interface AlertDue {
 export function alertDue(kind: AlertKind, severity: Severity, from: PlainDate): AlertDue {
   const clock = kind === 'test not met' ? TEST_NOT_MET : BY_SEVERITY[severity];
   return {
-    assessBy: clock.assessWithin === null ? null : addBusinessDays(from, clock.assessWithin),
-    decideBy: addBusinessDays(from, clock.decideWithin),
+    assessBy: clock.assessWithin === null ? null : daysOn(from, clock.assessWithin, 'business'),
+    decideBy: daysOn(from, clock.decideWithin, 'business'),
   };
 }
