@@ -6,6 +6,8 @@ declare global {
     interface Locals {
       /** A person with a live session, or nobody. */
       person: SignedInPerson | null;
+      /** Names of the person's desks, for the top bar. */
+      deskNames: readonly string[];
       sessionId: string | null;
       requestId: string;
       /** The client's address as the socket (or the named proxy) gives it. */

@@ -2,7 +2,7 @@ import { z } from 'zod';
 
 const id = z
   .string()
-  .regex(/^[1-9]\d{0,15}$/)
+  .regex(/^[1-9]\d{0,14}$/)
   .transform(Number);
 
 /** `/…/[id]`: a positive whole number; anything else is not there. */

@@ -5,6 +5,10 @@
 export type ServiceProblem =
   | { readonly kind: 'not-found'; readonly what: string }
   | { readonly kind: 'not-allowed'; readonly detail: string }
+  /** The name or the password is wrong; the answer does not say which. */
+  | { readonly kind: 'not-signed-in'; readonly detail: string }
+  /** A link that was used up or has run out. */
+  | { readonly kind: 'gone'; readonly detail: string }
   | { readonly kind: 'stale'; readonly detail: string; readonly currentVersion: number }
   | { readonly kind: 'conflict'; readonly detail: string }
   | { readonly kind: 'invalid'; readonly detail: string; readonly errors: readonly FieldError[] }

@@ -25,6 +25,7 @@ const TOUCH_EVERY_MS = 60_000;
 
 export interface SignedIn {
   readonly person: Person;
+  readonly deskNames: readonly string[];
   /** SHA-256 of the token: names the session without being able to use it. */
   readonly sessionId: string;
 }
@@ -43,7 +44,7 @@ export async function personOfToken(tx: Transaction, token: string, now: Date): 
   if (!session) return null;
   const sessionId = tokenHash(token);
   if (now.getTime() - session.lastSeenAt.getTime() >= TOUCH_EVERY_MS) await touchSession(tx, sessionId, now);
-  return { person: user.person, sessionId };
+  return { person: toPerson(user.record), deskNames: user.record.deskNames, sessionId };
 }
 
 export const endSession = (tx: Transaction, sessionId: string): Promise<boolean> =>
@@ -82,7 +83,7 @@ class TransactionAdapter implements Adapter {
     const { person } = found;
     return [
       { id: token, userId: person.id, expiresAt, attributes: { lastSeenAt: found.lastSeenAt } },
-      { id: person.id, attributes: { person: toPerson(person) } },
+      { id: person.id, attributes: { record: person } },
     ];
   }
 
@@ -124,14 +125,14 @@ const luciaOn = (tx: Transaction, now: Date) =>
   new Lucia(new TransactionAdapter(tx, now), {
     sessionExpiresIn: new TimeSpan(env().SESSION_LIFETIME_HOURS, 'h'),
     getSessionAttributes: ({ lastSeenAt }) => ({ lastSeenAt: lastSeenAt ?? now }),
-    getUserAttributes: ({ person }) => ({ person }),
+    getUserAttributes: ({ record }) => ({ record }),
   });
 
 declare module 'lucia' {
   interface Register {
     Lucia: ReturnType<typeof luciaOn>;
     UserId: number;
-    DatabaseUserAttributes: { person: Person };
+    DatabaseUserAttributes: { record: PersonRecord };
     DatabaseSessionAttributes: { lastSeenAt?: Date };
   }
 }

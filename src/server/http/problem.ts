@@ -62,6 +62,8 @@ function toPlain(problem: ServiceProblem): PlainProblem {
       return { status: 403, title: 'Not allowed', detail: problem.detail };
     case 'not-signed-in':
       return { status: 401, title: 'Not signed in', detail: problem.detail };
+    case 'gone':
+      return { status: 410, title: 'No longer there', detail: problem.detail };
     case 'stale':
       return {
         status: 412,

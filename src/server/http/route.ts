@@ -9,7 +9,8 @@ import type { z } from 'zod';
 import type { ServiceProblem } from '../../contracts/problem.ts';
 import type { Result } from '../../core/result.ts';
 import { mayAnywhere, type Action, type Person } from '../auth/policy.ts';
-import { problemResponse, invalidInput } from './problem.ts';
+import { invalidInput, problemResponse } from './problem.ts';
+import { givenTwice, idempotencyKey, readJson, repeatedName, roleMayNot, SIGN_IN_FIRST } from './request.ts';
 
 export interface RequestActor {
   readonly person: Person;
@@ -45,6 +46,9 @@ export interface DefinedRoute extends APIRoute {
   readonly can: Action | 'signed in';
 }
 
+/** `can` of a route, for the test that lists them all. */
+export type RouteRight = Action | 'signed in' | 'anyone';
+
 export function defineRoute<
   Params = Record<string, never>,
   Query = Record<string, never>,
@@ -53,19 +57,11 @@ export function defineRoute<
 >(definition: RouteDefinition<Params, Query, Body, Value>): DefinedRoute {
   const handle = async (context: APIContext): Promise<Response> => {
     const { person, requestId, address, now } = context.locals;
-    if (!person)
-      return problemResponse(context, {
-        status: 401,
-        title: 'Sign in first',
-        detail:
-          'Your session has ended or you are not signed in. Nothing was changed. Sign in and send this again.',
-      });
+    if (!person) return problemResponse(context, SIGN_IN_FIRST);
     if (definition.can !== 'signed in' && !mayAnywhere(person, definition.can))
-      return problemResponse(context, {
-        status: 403,
-        title: 'Not allowed',
-        detail: `Your role may not do this (${definition.can}). Nothing was changed.`,
-      });
+      return problemResponse(context, roleMayNot(definition.can));
+    const key = idempotencyKey(context.request);
+    if (!key.ok) return problemResponse(context, key.error);
 
     const params = definition.params?.safeParse(context.params);
     if (params && !params.success)
@@ -74,19 +70,16 @@ export function defineRoute<
         title: 'Not found',
         detail: 'There is nothing here that you can see.',
       });
+    const twice = repeatedName(context.url.searchParams);
+    if (twice !== null) return problemResponse(context, givenTwice(twice));
     const query = definition.query?.safeParse(Object.fromEntries(context.url.searchParams));
     if (query && !query.success) return invalidInput(context, query.error);
 
     let body: Body = null as Body;
     if (definition.body) {
-      if (!context.request.headers.get('content-type')?.startsWith('application/json'))
-        return problemResponse(context, {
-          status: 415,
-          title: 'Wrong content type',
-          detail: 'This address takes application/json. Nothing was changed.',
-        });
-      const json: unknown = await context.request.json().catch(() => undefined);
-      const parsed = definition.body.safeParse(json);
+      const json = await readJson(context.request);
+      if (!json.ok) return problemResponse(context, json.error);
+      const parsed = definition.body.safeParse(json.value);
       if (!parsed.success) return invalidInput(context, parsed.error);
       body = parsed.data;
     }
@@ -104,7 +97,7 @@ export function defineRoute<
         person,
         requestId,
         address,
-        idempotencyKey: context.request.headers.get('idempotency-key'),
+        idempotencyKey: key.value,
         now,
       },
       params: params?.data as Params,

@@ -10,6 +10,8 @@ import { isApi, isOpen } from './openPaths.ts';
 import { isOwnRequest, ownOrigin } from './origin.ts';
 import { problemResponse } from './problem.ts';
 import { outagePage } from './outagePage.ts';
+import { ownPath } from './ownPath.ts';
+import { SIGN_IN_FIRST, wantsPage } from './request.ts';
 import { clearSessionCookie, readSessionCookie } from './sessionCookie.ts';
 
 const RETRY_AFTER_SECONDS = 10;
@@ -20,6 +22,7 @@ export const requestStage =
   (context, next) => {
     const { locals, request } = context;
     locals.person = null;
+    locals.deskNames = [];
     locals.sessionId = null;
     locals.requestId ??= randomUUID();
     locals.now = new Date();
@@ -81,6 +84,7 @@ export const sessionStage =
     const signedIn = await currentPerson(token, context.locals.now);
     if (signedIn) {
       context.locals.person = signedIn.person;
+      context.locals.deskNames = signedIn.deskNames;
       context.locals.sessionId = signedIn.sessionId;
     } else clearSessionCookie(context.cookies);
     return next();
@@ -120,15 +124,11 @@ export const refusalStage =
 export const requireUserStage: MiddlewareHandler = (context, next) => {
   const { pathname, search } = context.url;
   if (context.locals.person || isOpen(pathname, context.routePattern)) return next();
-  if (isApi(pathname))
-    return problemResponse(context, {
-      status: 401,
-      title: 'Sign in first',
-      detail:
-        'Your session has ended or you are not signed in. Nothing was changed. Sign in and send this again.',
-    });
-  const wanted = pathname === '/' ? '' : `?next=${encodeURIComponent(pathname + search)}`;
-  return context.redirect(`/sign-in${wanted}`, 303);
+  if (!isApi(pathname)) return context.redirect(signInFor(ownPath(pathname + search, '')), 303);
+  if (!wantsPage(context.request)) return problemResponse(context, SIGN_IN_FIRST);
+  const formPage = context.request.headers.get('referer') ?? '';
+  const path = URL.canParse(formPage) ? new URL(formPage).pathname + new URL(formPage).search : '';
+  return context.redirect(signInFor(ownPath(path, ''), { ended: '1' }), 303);
 };
 
 /** Astro answers an unknown method of a route with an empty 404, which would become a page. */
@@ -147,6 +147,11 @@ export const methodStage: MiddlewareHandler = async (context, next) => {
     detail: `This address does not take ${context.request.method}. Nothing was changed.`,
   });
 };
+
+function signInFor(path: string, more: Record<string, string> = {}): string {
+  const query = new URLSearchParams(path === '' || path === '/' ? more : { next: path, ...more });
+  return query.size === 0 ? '/sign-in' : `/sign-in?${query.toString()}`;
+}
 
 const outageProblem = (context: APIContext): Response =>
   problemResponse(context, {

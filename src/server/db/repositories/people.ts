@@ -10,6 +10,8 @@ export interface PersonRecord {
   readonly isActive: boolean;
   readonly roles: readonly string[];
   readonly deskIds: readonly number[];
+  /** In the order of the names, not of the ids. */
+  readonly deskNames: readonly string[];
 }
 
 /** What checking a password needs, and nothing else. */
@@ -27,19 +29,21 @@ export const mailKey = (address: string): string => address.trim().toLowerCase()
 /** Roles and desks of the person aliased `p`, as comma-separated text. */
 export const ROLES_AND_DESKS = `
   (select group_concat(r.role order by r.role) from person_roles r where r.person_id = p.id) as roles,
-  (select group_concat(m.desk_id order by m.desk_id) from desk_members m where m.person_id = p.id) as desk_ids`;
+  (select group_concat(m.desk_id order by m.desk_id) from desk_members m where m.person_id = p.id) as desk_ids,
+  (select group_concat(d.name order by d.name separator '\\n')
+   from desk_members m join desks d on d.id = m.desk_id where m.person_id = p.id) as desk_names`;
 
-export const rolesOf = (text: string | null): string[] => (text === null ? [] : text.split(','));
+interface RolesAndDesks {
+  readonly roles: string | null;
+  readonly desk_ids: string | null;
+  readonly desk_names: string | null;
+}
 
-export const deskIdsOf = (text: string | null): number[] => rolesOf(text).map(Number);
-
-interface PersonRow {
+export interface PersonRow extends RolesAndDesks {
   readonly id: number;
   readonly name: string;
   readonly email: string;
   readonly is_active: number;
-  readonly roles: string | null;
-  readonly desk_ids: string | null;
 }
 
 export async function findPerson(tx: Transaction, id: number): Promise<PersonRecord | null> {
@@ -48,7 +52,7 @@ export async function findPerson(tx: Transaction, id: number): Promise<PersonRec
     `select p.id, p.name, p.email, p.is_active, ${ROLES_AND_DESKS} from people p where p.id = :id`,
     { id },
   );
-  return row && toPerson(row);
+  return row && toPersonRecord(row);
 }
 
 /** Active people in the order of their names. */
@@ -58,7 +62,7 @@ export async function listActivePeople(tx: Transaction): Promise<PersonRecord[]>
     `select p.id, p.name, p.email, p.is_active, ${ROLES_AND_DESKS}
      from people p where p.is_active = 1 order by p.name, p.id`,
   );
-  return rows.map(toPerson);
+  return rows.map(toPersonRecord);
 }
 
 export async function findSignIn(tx: Transaction, email: string): Promise<SignInRecord | null> {
@@ -136,8 +140,19 @@ export async function findByUnsubscribeHash(
   return row && { id: row.id, name: row.name, wantsDigest: row.wants_digest === 1 };
 }
 
-export async function setWantsDigest(tx: Transaction, id: number, wantsDigest: boolean): Promise<void> {
-  await execute(tx, 'update people set wants_digest = :wantsDigest, version = version + 1 where id = :id', {
+export async function wantsDigest(tx: Transaction, id: number): Promise<boolean> {
+  const row = await selectOne<{ wants_digest: number }>(
+    tx,
+    'select wants_digest from people where id = :id',
+    {
+      id,
+    },
+  );
+  return row?.wants_digest === 1;
+}
+
+export async function setWantsDigest(tx: Transaction, id: number, wanted: boolean): Promise<void> {
+  await execute(tx, 'update people set wants_digest = :wanted, version = version + 1 where id = :id', {
     id,
     wantsDigest,
   });
@@ -160,11 +175,12 @@ const toSignIn = (row: SignInRow | null): SignInRecord | null =>
     isActive: row.is_active === 1,
   };
 
-const toPerson = (row: PersonRow): PersonRecord => ({
+export const toPersonRecord = (row: PersonRow): PersonRecord => ({
   id: row.id,
   name: row.name,
   email: row.email,
   isActive: row.is_active === 1,
-  roles: rolesOf(row.roles),
-  deskIds: deskIdsOf(row.desk_ids),
+  roles: row.roles?.split(',') ?? [],
+  deskIds: row.desk_ids?.split(',').map(Number) ?? [],
+  deskNames: row.desk_names?.split('\n') ?? [],
 });

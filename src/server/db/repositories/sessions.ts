@@ -1,7 +1,7 @@
 /** Sessions by the SHA-256 of their token; `expires_at` is the end that no use can move. */
 import type { Transaction } from 'sequelize';
 import { execute, selectOne } from '../sql.ts';
-import { deskIdsOf, ROLES_AND_DESKS, rolesOf, type PersonRecord } from './people.ts';
+import { ROLES_AND_DESKS, toPersonRecord, type PersonRecord, type PersonRow } from './people.ts';
 
 export interface SessionRecord {
   readonly id: string;
@@ -13,37 +13,23 @@ export interface SessionRecord {
 
 /** The session with the person as the database has them at this moment; nobody where the person is not active. */
 export async function findSession(tx: Transaction, id: string): Promise<SessionRecord | null> {
-  const row = await selectOne<{
-    id: string;
-    created_at: Date;
-    last_seen_at: Date;
-    expires_at: Date;
-    person_id: number;
-    name: string;
-    email: string;
-    roles: string | null;
-    desk_ids: string | null;
-  }>(
+  const row = await selectOne<
+    PersonRow & { session_id: string; created_at: Date; last_seen_at: Date; expires_at: Date }
+  >(
     tx,
-    `select s.id, s.created_at, s.last_seen_at, s.expires_at, s.person_id, p.name, p.email, ${ROLES_AND_DESKS}
+    `select s.id as session_id, s.created_at, s.last_seen_at, s.expires_at,
+       p.id, p.name, p.email, p.is_active, ${ROLES_AND_DESKS}
      from sessions s join people p on p.id = s.person_id
      where s.id = :id and p.is_active = 1`,
     { id },
   );
   return (
     row && {
-      id: row.id,
+      id: row.session_id,
       createdAt: row.created_at,
       lastSeenAt: row.last_seen_at,
       expiresAt: row.expires_at,
-      person: {
-        id: row.person_id,
-        name: row.name,
-        email: row.email,
-        isActive: true,
-        roles: rolesOf(row.roles),
-        deskIds: deskIdsOf(row.desk_ids),
-      },
+      person: toPersonRecord(row),
     }
   );
 }

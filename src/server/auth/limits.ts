@@ -1,0 +1,90 @@
+/**
+ * How often may somebody try? Counters in the database, so that several servers share them and a restart forgets
+ * nothing. Three counters guard a sign-in: account and address together, the address alone, the account alone.
+ *
+ * The last would let a stranger lock a person out from afar; so an address from which the person has signed in
+ * during the last thirty days does not ask it. Every counter ends by itself, and a refused try does not prolong it.
+ */
+import { createHash } from 'node:crypto';
+import type { Transaction } from 'sequelize';
+import { mailKey } from '../db/repositories/people.ts';
+import { addPoints, deleteCounter, findCounter } from '../db/repositories/rateLimits.ts';
+
+export interface Limit {
+  readonly name: string;
+  readonly points: number;
+  readonly windowSeconds: number;
+}
+
+const QUARTER_HOUR = 900;
+
+export const SIGN_IN_HERE: Limit = { name: 'sign-in-here', points: 10, windowSeconds: QUARTER_HOUR };
+export const SIGN_IN_ADDRESS: Limit = { name: 'sign-in-address', points: 100, windowSeconds: QUARTER_HOUR };
+export const SIGN_IN_ACCOUNT: Limit = { name: 'sign-in-account', points: 50, windowSeconds: QUARTER_HOUR };
+export const FORGOT_ADDRESS: Limit = { name: 'forgot-address', points: 20, windowSeconds: 3_600 };
+export const FORGOT_ACCOUNT: Limit = { name: 'forgot-account', points: 3, windowSeconds: 3_600 };
+export const ONE_TIME_LINK: Limit = { name: 'one-time-link', points: 30, windowSeconds: QUARTER_HOUR };
+
+const KNOWN_ADDRESS: Limit = { name: 'known-address', points: 1, windowSeconds: 30 * 86_400 };
+
+/** Counts one try; answers the seconds to wait where there are too many, or null. */
+export async function countTry(
+  tx: Transaction,
+  limit: Limit,
+  who: string,
+  now: Date,
+): Promise<number | null> {
+  const nowMs = now.getTime();
+  const key = keyOf(limit, who);
+  const before = await findCounter(tx, key, nowMs);
+  if (before && before.points >= limit.points) return secondsUntil(before.endsAtMs, nowMs);
+  const endsAtMs = nowMs + limit.windowSeconds * 1_000;
+  const after = await addPoints(tx, { key, points: 1, nowMs, endsAtMs });
+  return after.points > limit.points ? secondsUntil(after.endsAtMs, nowMs) : null;
+}
+
+/** Counts one try to sign in; answers the seconds to wait, or null where the password may be looked at. */
+export async function countSignIn(
+  tx: Transaction,
+  account: string,
+  address: string,
+  now: Date,
+): Promise<number | null> {
+  const here = accountAt(account, address);
+  const isKnown = (await findCounter(tx, keyOf(KNOWN_ADDRESS, here), now.getTime())) !== null;
+  const waits = [
+    await countTry(tx, SIGN_IN_ADDRESS, address, now),
+    await countTry(tx, SIGN_IN_HERE, here, now),
+    isKnown ? null : await countTry(tx, SIGN_IN_ACCOUNT, mailKey(account), now),
+  ].filter((wait) => wait !== null);
+  return waits.length === 0 ? null : Math.max(...waits);
+}
+
+/** After the right password: the tries of this person count no longer, and the address is theirs for a while. */
+export async function forgiveSignIn(
+  tx: Transaction,
+  account: string,
+  address: string,
+  now: Date,
+): Promise<void> {
+  const here = accountAt(account, address);
+  const nowMs = now.getTime();
+  await deleteCounter(tx, keyOf(SIGN_IN_HERE, here));
+  await addPoints(tx, { key: keyOf(SIGN_IN_ADDRESS, address), points: -1, nowMs, endsAtMs: nowMs });
+  await deleteCounter(tx, keyOf(KNOWN_ADDRESS, here));
+  await addPoints(tx, {
+    key: keyOf(KNOWN_ADDRESS, here),
+    points: 1,
+    nowMs,
+    endsAtMs: nowMs + KNOWN_ADDRESS.windowSeconds * 1_000,
+  });
+}
+
+const accountAt = (account: string, address: string): string => `${mailKey(account)} ${address}`;
+
+/** Hashed: what people type into the name field is at times their password. */
+const keyOf = (limit: Limit, who: string): string =>
+  `${limit.name}:${createHash('sha256').update(who).digest('hex')}`;
+
+const secondsUntil = (endsAtMs: number, nowMs: number): number =>
+  Math.max(1, Math.ceil((endsAtMs - nowMs) / 1_000));
