@@ -10,7 +10,7 @@ import { err, ok } from '../../core/result.ts';
 import { deskScope } from '../auth/policy.ts';
 import { rememberAnswer, listAnswers } from '../db/repositories/importAnswers.ts';
 import { findImportForUpdate, markAccepted, type ImportRecord } from '../db/repositories/imports.ts';
-import { raiseInputVersion } from '../db/repositories/inputVersions.ts';
+import { raiseInputVersion } from '../db/repositories/borrowers.ts';
 import { loadStatements } from '../db/repositories/statementInputs.ts';
 import { insertStatementVersions, type DeliveredStatement } from '../db/repositories/statements.ts';
 import type { PersonActor } from './actor.ts';

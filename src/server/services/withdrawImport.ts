@@ -1,6 +1,6 @@
 import { err, ok } from '../../core/result.ts';
 import { deskScope } from '../auth/policy.ts';
-import { raiseInputVersion } from '../db/repositories/inputVersions.ts';
+import { raiseInputVersion } from '../db/repositories/borrowers.ts';
 import { findImportForUpdate, markWithdrawn } from '../db/repositories/imports.ts';
 import { endStatementsOfImport } from '../db/repositories/statementEnds.ts';
 import type { PersonActor } from './actor.ts';

@@ -26,7 +26,7 @@ export async function loadStatements(
        framework, currency, rounding_unit as roundingUnit, tie, statement_version as version,
        received_on as receivedOn, import_id as importId, ${LINE_COLUMNS}
      from statements
-     where borrower_id in (:borrowerIds) and known_from <= :knownAt
+     where borrower_id in (:borrowerIds) and known_from <= :knownAt and (known_to is null or known_to > :knownAt)
      order by borrower_id, period_end, months, scope, statement_version, id`,
     { borrowerIds, knownAt },
   );
