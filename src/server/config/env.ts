@@ -28,10 +28,15 @@ const schema = z.object({
   SESSION_LIFETIME_HOURS: z.coerce.number().int().min(1).default(12),
   /** 1: the named proxy in front appends the client's address to X-Forwarded-For. */
   BEHIND_PROXY: flag.default(false),
+  /** 0: the worker starts no nightly run by itself; runs are started by hand or by another worker. */
+  NIGHT_SCHEDULE: flag.default(true),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
 });
 
 export type Env = z.infer<typeof schema>;
+
+/** The names, in the order of .env.example. */
+export const SETTING_NAMES = Object.keys(schema.shape);
 
 let read: Env | null = null;
 
