@@ -8,7 +8,13 @@ export const QUALITY_BANDS = [
 ] as const;
 export type QualityBand = (typeof QUALITY_BANDS)[number];
 
-export const QUALITY_BLOCKS = ['unexplained accruals', 'sharpest stretch', 'cash conversion'] as const;
+export const QUALITY_BLOCKS = [
+  'unexplained accruals',
+  'sharpest stretch',
+  'cash conversion',
+  'published screens',
+  'accrual noise',
+] as const;
 export type QualityBlockName = (typeof QUALITY_BLOCKS)[number];
 
 export interface QualityBlock {

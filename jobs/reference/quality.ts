@@ -1,0 +1,337 @@
+/** Reads the reporting-quality vectors into the core's own functions. */
+import { z } from 'zod';
+import { balanceSheetAccruals } from '#core/accruals/balanceSheetAccruals.ts';
+import { cashConversion } from '#core/accruals/cashConversion.ts';
+import { cashFlowAccruals } from '#core/accruals/cashFlowAccruals.ts';
+import { daysOutstanding } from '#core/accruals/daysOutstanding.ts';
+import { jonesModel, type JonesModel } from '#core/accruals/jones.ts';
+import { gated } from '#core/quality/blockParts.ts';
+import { bandAfter, bandOf, headlineOf } from '#core/quality/headline.ts';
+import { compositeScore } from '#core/quality/quarterScore.ts';
+import { QUALITY_TABLE } from '#core/quality/qualityTable.ts';
+import { QUALITY_BANDS, QUALITY_BLOCKS, type QualityBlockName } from '#core/quality/score.ts';
+import { fScoreRisk, mScoreRisk } from '#core/quality/screens.ts';
+import { standingOf } from '#core/quality/standing.ts';
+import { stretchOf } from '#core/quality/stretch.ts';
+import type { Result } from '#core/result.ts';
+import { binaryResponse } from '#core/statistics/binaryResponse.ts';
+import { leastSquares } from '#core/statistics/leastSquares.ts';
+import { midRank, rankCounts } from '#core/statistics/percentile.ts';
+import { rankAuc } from '#core/statistics/rankAuc.ts';
+
+type Topic = (inputs: unknown) => Record<string, unknown>;
+
+const numbers = z.array(z.number());
+const share = z.number().nullable();
+
+const balances = z.object({
+  current_assets: z.number(),
+  cash: z.number(),
+  current_liabilities: z.number(),
+  short_term_debt: z.number(),
+  tax_payable: z.number(),
+  total_assets: z.number(),
+});
+const twoYears = z.object({
+  p: balances,
+  c: balances,
+  flow: z.object({ net_income: z.number(), cfo: z.number(), depreciation: z.number() }),
+});
+
+const operatingBalances = (given: z.infer<typeof balances>) => ({
+  currentAssets: given.current_assets,
+  cash: given.cash,
+  currentLiabilities: given.current_liabilities,
+  shortTermDebt: given.short_term_debt,
+  taxPayable: given.tax_payable,
+  totalAssets: given.total_assets,
+});
+
+const sloan: Topic = (inputs) => {
+  const { p, c, flow } = twoYears.parse(inputs);
+  return { ...balanceSheetAccruals(operatingBalances(p), operatingBalances(c), flow.depreciation) };
+};
+
+const cash_flow_accruals: Topic = (inputs) => {
+  const { p, c, flow } = twoYears.parse(inputs);
+  const accruals = cashFlowAccruals({
+    netIncome: flow.net_income,
+    cashFromOperations: flow.cfo,
+    openingAssets: p.total_assets,
+    closingAssets: c.total_assets,
+  });
+  return {
+    accruals: accruals.accruals,
+    scaled_average: accruals.scaledAverage,
+    scaled_opening: accruals.scaledOpening,
+    percent_accruals: accruals.percent,
+  };
+};
+
+const cash_conversion: Topic = (inputs) => {
+  const given = z
+    .object({
+      ebitda: z.number(),
+      cfo: z.number(),
+      interest_paid: z.number(),
+      tax_paid: z.number(),
+      opening_nwc: z.number(),
+      sales: z.number(),
+      sales_prior: z.number(),
+    })
+    .parse(inputs);
+  const conversion = cashConversion({
+    ebitda: given.ebitda,
+    cashFromOperations: given.cfo,
+    interestPaid: given.interest_paid,
+    taxPaid: given.tax_paid,
+    openingWorkingCapital: given.opening_nwc,
+    revenue: given.sales,
+    priorRevenue: given.sales_prior,
+  });
+  return {
+    cash_before_finance_and_tax: conversion?.cashBeforeFinanceAndTax ?? null,
+    conversion: conversion?.conversion ?? null,
+    growth_absorption: conversion?.growthAbsorption ?? null,
+    conversion_growth_neutral: conversion?.growthNeutral ?? null,
+  };
+};
+
+const days: Topic = (inputs) => {
+  const given = z
+    .object({
+      receivables: z.number(),
+      revenue_quarter: z.number(),
+      receivables_ly: z.number(),
+      revenue_quarter_ly: z.number(),
+      inventory: z.number(),
+      cogs_two_quarters: z.number(),
+      inventory_ly: z.number(),
+      cogs_two_quarters_ly: z.number(),
+    })
+    .parse(inputs);
+  const receivables = daysOutstanding({
+    balance: given.receivables,
+    flow: given.revenue_quarter,
+    balanceYearAgo: given.receivables_ly,
+    flowYearAgo: given.revenue_quarter_ly,
+    quarters: 1,
+  });
+  const inventory = daysOutstanding({
+    balance: given.inventory,
+    flow: given.cogs_two_quarters,
+    balanceYearAgo: given.inventory_ly,
+    flowYearAgo: given.cogs_two_quarters_ly,
+    quarters: 2,
+  });
+  return {
+    dso: receivables?.days ?? null,
+    dso_ly: receivables?.daysYearAgo ?? null,
+    dso_change: receivables?.change ?? null,
+    dio: inventory?.days ?? null,
+    dio_ly: inventory?.daysYearAgo ?? null,
+    dio_change: inventory?.change ?? null,
+  };
+};
+
+const JONES_NAMES: Readonly<Record<string, JonesModel>> = {
+  jones_1991: 'jones-1991',
+  jones_const: 'jones-constant',
+  mjones_const: 'modified-constant',
+  kothari: 'kothari',
+  unexplained: 'with-cash-flow',
+  mjones_dss1995: 'modified-1995',
+};
+
+const jones: Topic = (inputs) => {
+  const given = z
+    .object({
+      lag_assets: numbers,
+      total_accruals: numbers,
+      d_revenue: numbers,
+      d_receivables: numbers,
+      ppe_gross: numbers,
+      roa_prior: numbers,
+      cfo: numbers,
+    })
+    .parse(inputs);
+  const firms = given.lag_assets.map((lagAssets, k) => ({
+    lagAssets,
+    totalAccruals: given.total_accruals[k]!,
+    revenueChange: given.d_revenue[k]!,
+    receivablesChange: given.d_receivables[k]!,
+    ppeGross: given.ppe_gross[k]!,
+    priorReturnOnAssets: given.roa_prior[k]!,
+    cashFromOperations: given.cfo[k]!,
+  }));
+  return Object.fromEntries(
+    Object.entries(JONES_NAMES).map(([name, model]) => {
+      const { coefficients, residuals, rSquared } = valueOf(jonesModel(model, firms));
+      return [name, { coef: coefficients, r2: rSquared, residuals }];
+    }),
+  );
+};
+
+const peer_percentile: Topic = (inputs) => {
+  const given = z
+    .object({
+      own: z.number(),
+      peers: numbers,
+      book: numbers,
+      k_full: z.literal(QUALITY_TABLE.peers.fullSectorPeers),
+    })
+    .parse(inputs);
+  const [sector, book] = [ascending(given.peers), ascending(given.book)];
+  const standing = standingOf(given.own, { sector, book, ownInSector: null, ownInBook: null });
+  return {
+    sector: midRank(rankCounts(sector, given.own)),
+    book: midRank(rankCounts(book, given.own)),
+    weight_sector: standing?.sectorWeight ?? null,
+    percentile: standing?.percentile ?? null,
+  };
+};
+
+const stretch: Topic = (inputs) => {
+  const plain = z.object({ receivables: share, inventory: share, capitalised: share });
+  const withGate = z.object({
+    receivables_percentile: z.number(),
+    receivables_change: z.number(),
+    gate: z.literal(QUALITY_TABLE.gates.daysUp),
+    inventory: share,
+    capitalised: share,
+  });
+  const given = z.union([plain, withGate]).parse(inputs);
+  const receivables =
+    'receivables' in given
+      ? given.receivables
+      : gated(given.receivables_percentile, given.receivables_change < QUALITY_TABLE.gates.daysUp);
+  const { inventory, capitalised } = given;
+  return { receivables, stretch: stretchOf({ receivables, inventory, capitalised })?.risk ?? null };
+};
+
+const BLOCK_KEYS: Readonly<Record<QualityBlockName, string>> = {
+  'unexplained accruals': 'unexplained',
+  'sharpest stretch': 'stretch',
+  'cash conversion': 'conversion',
+  'published screens': 'screens',
+  'accrual noise': 'noise',
+};
+
+const composite: Topic = (inputs) => {
+  const risks = z.record(z.string(), share).parse(inputs);
+  const { coverage, score } = compositeScore(
+    QUALITY_BLOCKS.map((name) => ({
+      weight: QUALITY_TABLE.weights[name],
+      risk: risks[BLOCK_KEYS[name]] ?? null,
+    })),
+  );
+  return { coverage: coverage / 100, score, band: score === null ? null : bandOf(score) };
+};
+
+const screens: Topic = (inputs) => {
+  const given = z.object({ m: numbers, f: numbers }).parse(inputs);
+  return { m_risk: given.m.map(mScoreRisk), f_risk: given.f.map(fScoreRisk) };
+};
+
+const headline: Topic = (inputs) => {
+  const given = z.object({ quarter_scores: z.array(share) }).parse(inputs);
+  const { headline: mean, quarters, provisional } = headlineOf(given.quarter_scores);
+  return {
+    headline: mean,
+    band: mean === null ? null : bandOf(mean),
+    provisional,
+    note: quarters === 2 ? 'two quarters' : '',
+  };
+};
+
+const band_change: Topic = (inputs) => {
+  const given = z.object({ previous: z.enum(QUALITY_BANDS), headline: z.number() }).parse(inputs);
+  return { band: bandAfter(given.previous, given.headline) };
+};
+
+const regression: Topic = (inputs) => {
+  const table = z.object({ columns: z.array(z.string()), rows: z.array(numbers) }).safeParse(inputs);
+  if (table.success && table.data.columns.at(-1) === 'grade') return binaryFits(table.data.rows);
+  const [response, columns] = regressionSample(inputs);
+  const fit = valueOf(leastSquares(response, columns, { constant: true }));
+  return {
+    coef: fit.coefficients,
+    se: fit.standardErrors,
+    resid_sd: fit.residualStandardDeviation,
+    r2: fit.rSquared,
+  };
+};
+
+/** The response and one array per regressor, out of the ways in which the file writes a sample. */
+function regressionSample(inputs: unknown): [number[], number[][]] {
+  const given = z
+    .union([
+      z.object({ rows: z.array(numbers) }),
+      z.object({ invest: numbers, value: numbers, capital: numbers }),
+      z.object({ x: z.array(numbers), y: numbers }),
+      z.object({ x: numbers, y: numbers }),
+    ])
+    .parse(inputs);
+  if ('rows' in given) {
+    const [response = [], ...columns] = transposed(given.rows);
+    return [response, columns];
+  }
+  if ('invest' in given) return [given.invest, [given.value, given.capital]];
+  const { x, y } = given;
+  if (x.every((row) => typeof row !== 'number')) return [y, transposed(x)];
+  const plain = numbers.parse(x);
+  // Wampler's sets name only x: y is a polynomial of the fifth degree in it.
+  return isWampler(plain)
+    ? [y, [1, 2, 3, 4, 5].map((power) => plain.map((value) => value ** power))]
+    : [y, [plain]];
+}
+
+const isWampler = (x: readonly number[]): boolean => x.length === 21 && x.every((value, k) => value === k);
+
+function binaryFits(rows: readonly (readonly number[])[]): Record<string, unknown> {
+  const columns = transposed(rows);
+  const isYes = (columns.pop() ?? []).map((value) => value === 1);
+  return {
+    probit: valueOf(binaryResponse('probit', isYes, columns)).coefficients,
+    logit: valueOf(binaryResponse('logit', isYes, columns)).coefficients,
+  };
+}
+
+const auc: Topic = (inputs) => {
+  const given = z.object({ score: numbers, label: numbers }).parse(inputs);
+  return {
+    auc: valueOf(
+      rankAuc(
+        given.score,
+        given.label.map((label) => label === 1),
+      ),
+    ).estimate,
+  };
+};
+
+/** By the names of the vector file. */
+export const topics: Record<string, Topic> = {
+  auc,
+  band_change,
+  cash_conversion,
+  cash_flow_accruals,
+  composite,
+  days,
+  headline,
+  jones,
+  peer_percentile,
+  regression,
+  screens,
+  sloan,
+  stretch,
+};
+
+function valueOf<T, E extends { readonly kind: string }>(result: Result<T, E>): T {
+  if (!result.ok) throw new Error(`no result: ${result.error.kind}`);
+  return result.value;
+}
+
+const ascending = (values: readonly number[]): number[] => [...values].sort((a, b) => a - b);
+
+const transposed = (rows: readonly (readonly number[])[]): number[][] =>
+  (rows[0] ?? []).map((_, column) => rows.map((row) => row[column]!));

@@ -1,0 +1,50 @@
+import type { ComparedFigure } from './comparedFigures.ts';
+import type { PeerInputs } from './peerFigures.ts';
+import { QUALITY_TABLE } from './qualityTable.ts';
+import type { QualityBlock, QualityBlockName } from './score.ts';
+import type { Standing } from './standing.ts';
+
+/** What a block is built from: its context, its shape with and without a risk, and its figures by name. */
+export interface BlockContext {
+  readonly peer: PeerInputs;
+  readonly compared: Readonly<Record<ComparedFigure, number | null>>;
+  /** Null where the figure is missing or there is nobody to compare with. */
+  readonly standing: (figure: ComparedFigure) => Standing | null;
+}
+
+/** Null from a block that nothing feeds: it is left out of the list, and coverage is the lower for it. */
+export type Block = (context: BlockContext) => QualityBlock | null;
+
+const { weights, gates } = QUALITY_TABLE;
+
+export const NOBODY = 'no peers in the sector and fewer than ten other borrowers to compare with';
+
+export const gated = (risk: number, isImmaterial: boolean): number =>
+  isImmaterial ? Math.min(risk, gates.cap) : risk;
+
+export const block = (name: QualityBlockName, risk: number, place: Standing | null): QualityBlock => ({
+  name,
+  weight: weights[name],
+  risk,
+  reason: null,
+  figures: {},
+  peers: place ? (place.medianOf === 'sector' ? place.sectorPeers : place.bookOthers) : 0,
+});
+
+export const without = (
+  name: QualityBlockName,
+  reason: string,
+  figures: Readonly<Record<string, number>> = {},
+): QualityBlock => ({ name, weight: weights[name], risk: null, reason, figures, peers: 0 });
+
+/** Under the figure's name: the middle of the peers and how many they are, the percentile, and whose middle it is. */
+export const placeFigures = (name: string, place: Standing | null): Record<string, number> =>
+  place
+    ? {
+        [`${name}PeerMedian`]: place.median,
+        [`${name}Peers`]: place.medianOf === 'sector' ? place.sectorPeers : place.bookOthers,
+        [`${name}MedianOfBook`]: place.medianOf === 'book' ? 1 : 0,
+        [`${name}Percentile`]: place.percentile,
+        [`${name}SectorWeight`]: place.sectorWeight,
+      }
+    : {};

@@ -1,0 +1,97 @@
+/** One quarter end's score out of the blocks, and what each block adds to it. */
+import { unexplainedAccruals } from './accrualModel.ts';
+import { BLOCKS } from './blocks.ts';
+import { comparedFigures } from './comparedFigures.ts';
+import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
+import type { CrossSection, QuarterCrossSection } from './crossSection.ts';
+import type { PeerInputs } from './peerFigures.ts';
+import { QUALITY_TABLE } from './qualityTable.ts';
+import type { QualityBlock, QuarterScore } from './score.ts';
+import { otherFirms, standingIn } from './standing.ts';
+
+/**
+ * The weighted mean of the risks that are there, turned round: 100 is well supported. Null below the least coverage.
+ *
+ * `coverage` is the weight that is there, of 100. Source: methods.md B6.
+ *
+ * @example compositeScore([{ weight: 35, risk: 0.5 }, { weight: 40, risk: 0.5 }]) // => { coverage: 75, score: 50 }
+ */
+export function compositeScore(blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[]): {
+  readonly coverage: number;
+  readonly score: number | null;
+} {
+  const coverage = availableWeight(blocks);
+  if (coverage < QUALITY_TABLE.fewestCoverage) return { coverage, score: null };
+  return { coverage, score: blocks.reduce((sum, block) => sum + pointsOf(block, coverage), 0) };
+}
+
+/** What a block adds to the score: the points of all blocks sum to it. */
+export const pointsOf = (block: Pick<QualityBlock, 'weight' | 'risk'>, coverage: number): number =>
+  block.risk === null ? 0 : (100 * block.weight * (1 - block.risk)) / coverage;
+
+export const availableWeight = (blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[]): number =>
+  blocks.reduce((sum, block) => sum + (block.risk === null ? 0 : block.weight), 0);
+
+/**
+ * The score of one borrower at one quarter end among the peers as stored, itself left out. No score has its reason.
+ *
+ * Source: methods.md B6 and A2 (accounts that do not tie are not scored).
+ *
+ * @example scoreQuarter(peer, crossSection).score // => 63.2
+ */
+export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): QuarterScore {
+  const quarterEnd = comparisonQuarterEnd(peer.quarterEnd);
+  const section = crossSection.quarters.find((quarter) => quarter.quarterEnd === quarterEnd);
+  const refused = refusal(peer, section);
+  if (refused !== null || !section) return unscored(peer, section, refused ?? 'no peers');
+  const compared = comparedFigures(peer, unexplainedAccruals(section.accrualModel, peer));
+  const blocks = BLOCKS.flatMap(
+    (assess) =>
+      assess({
+        peer,
+        compared,
+        standing: (figure) => {
+          const value = compared[figure];
+          return value === null ? null : standingIn(section, peer, figure, value);
+        },
+      }) ?? [],
+  );
+  const { coverage, score } = compositeScore(blocks);
+  return {
+    ...unscored(peer, section, ''),
+    score,
+    noScoreReason: score === null ? thinCoverage(coverage, blocks) : null,
+    coverage: peer.derivedCashFlow ? Math.min(coverage, QUALITY_TABLE.mostCoverageDerived) : coverage,
+    blocks,
+  };
+}
+
+function refusal(peer: PeerInputs, section: QuarterCrossSection | undefined): string | null {
+  if (!peer.ties) return 'The accounts do not tie, so they are not scored.';
+  if (peer.cashFlowPresentationChanged)
+    return 'The presentation of the cash flow statement changed within the twelve months and the year before was not restated.';
+  return section ? null : 'No other accounts of this quarter end are in the book as of last night.';
+}
+
+function unscored(
+  peer: PeerInputs,
+  section: QuarterCrossSection | undefined,
+  noScoreReason: string,
+): QuarterScore {
+  const others = section ? otherFirms(section, peer) : { sectorPeers: 0, bookPeers: 0 };
+  return {
+    quarterEnd: peer.quarterEnd,
+    score: null,
+    noScoreReason,
+    coverage: 0,
+    blocks: [],
+    ...others,
+    sectorWeight: Math.min(1, others.sectorPeers / QUALITY_TABLE.peers.fullSectorPeers),
+    derivedCashFlow: peer.derivedCashFlow,
+  };
+}
+
+function thinCoverage(coverage: number, blocks: readonly QualityBlock[]): string {
+  const absent = blocks.flatMap(({ name, reason }) => (reason === null ? [] : [`${name} (${reason})`]));
+  return `Only ${coverage} of 100 points of weight are available and ${QUALITY_TABLE.fewestCoverage} are needed. Not available: ${absent.join('; ')}.`;
+}

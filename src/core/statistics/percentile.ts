@@ -1,0 +1,67 @@
+/**
+ * The value below which a share of the sample lies, by straight lines between order statistics: position
+ * (n - 1) x share. This is type 7 of Hyndman & Fan (1996), the default of R and numpy.
+ *
+ * `sorted` ascends and is not empty; `share` runs from 0 to 1. Throws RangeError for an empty sample.
+ *
+ * @example linearPercentile([1, 2, 3, 4], 0.5) // => 2.5
+ */
+export function linearPercentile(sorted: ArrayLike<number>, share: number): number {
+  if (sorted.length === 0) throw new RangeError('linearPercentile needs at least one point');
+  const position = (sorted.length - 1) * share;
+  const below = Math.floor(position);
+  const low = sorted[below]!;
+  const high = sorted[Math.min(below + 1, sorted.length - 1)]!;
+  return low + (position - below) * (high - low);
+}
+
+/** How many of the ascending sample lie below a value and how many equal it. Takes log2(n) steps. */
+export interface RankCounts {
+  readonly below: number;
+  readonly equal: number;
+  readonly n: number;
+}
+
+export function rankCounts(sorted: ArrayLike<number>, value: number): RankCounts {
+  const below = firstIndex(sorted, (member) => member >= value);
+  const upTo = firstIndex(sorted, (member) => member > value);
+  return { below, equal: upTo - below, n: sorted.length };
+}
+
+/** The same counts with one member left out: a borrower is not compared with itself. */
+export function withoutMember(counts: RankCounts, value: number, member: number): RankCounts {
+  return {
+    below: counts.below - (member < value ? 1 : 0),
+    equal: counts.equal - (member === value ? 1 : 0),
+    n: counts.n - 1,
+  };
+}
+
+/**
+ * Mid-rank percentile, 0 to 1: the share below plus half the share that is equal. Null where there is nobody to
+ * compare with.
+ *
+ * @example midRank({ below: 2, equal: 1, n: 5 }) // => 0.5
+ */
+export const midRank = ({ below, equal, n }: RankCounts): number | null =>
+  n === 0 ? null : (below + equal / 2) / n;
+
+/** Median of an ascending sample with one member left out, if given; null where nothing is left. */
+export function medianWithout(sorted: ArrayLike<number>, member: number | null): number | null {
+  const gap = member === null ? sorted.length : rankCounts(sorted, member).below;
+  const n = sorted.length - (member === null ? 0 : 1);
+  if (n <= 0) return null;
+  const at = (place: number): number => sorted[place < gap ? place : place + 1]!;
+  return (at(Math.floor((n - 1) / 2)) + at(Math.floor(n / 2))) / 2;
+}
+
+function firstIndex(sorted: ArrayLike<number>, isReached: (member: number) => boolean): number {
+  let low = 0;
+  let high = sorted.length;
+  while (low < high) {
+    const middle = (low + high) >>> 1;
+    if (isReached(sorted[middle]!)) high = middle;
+    else low = middle + 1;
+  }
+  return low;
+}
