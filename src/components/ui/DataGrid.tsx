@@ -65,7 +65,7 @@ function GridCellContent<TRow extends RowData>({ cell }: { readonly cell: GridCe
   const content = <FlexRender cell={cell} />;
   if (meta?.namesRow) return <Fragment>{content}</Fragment>;
   return (
-    <Cell numeric={meta?.numeric} entry={meta?.entry}>
+    <Cell numeric={meta?.numeric} entry={meta?.entry} nowrap={meta?.nowrap}>
       {content}
     </Cell>
   );

@@ -56,10 +56,11 @@ export function HeadCell({ children, numeric, sorted, onSort, label, className }
     >
       {onSort ? (
         <button type="button" className="sort" onClick={onSort}>
-          {children}
+          {!numeric && children}
           <span className="sort-mark" aria-hidden="true">
             {sorted === 'descending' ? '↓' : '↑'}
           </span>
+          {numeric && children}
         </button>
       ) : (
         (children ?? <span className="sr-only">{label}</span>)
@@ -100,13 +101,19 @@ interface CellProps {
   readonly children?: ReactNode;
   readonly numeric?: boolean;
   readonly entry?: EntryPlace;
+  /** A short word that must not be cut in two: a person's name, a date. */
+  readonly nowrap?: boolean;
   readonly className?: string;
   readonly colSpan?: number;
 }
 
-export function Cell({ children, numeric, entry, className, colSpan }: CellProps) {
+export function Cell({ children, numeric, entry, nowrap, className, colSpan }: CellProps) {
   return (
-    <td className={classes(numeric && 'numeric', className)} data-entry={entry} colSpan={colSpan}>
+    <td
+      className={classes(numeric && 'numeric', nowrap && 'whitespace-nowrap', className)}
+      data-entry={entry}
+      colSpan={colSpan}
+    >
       {children}
     </td>
   );
@@ -117,12 +124,14 @@ interface NameCellProps {
   readonly name: ReactNode;
   readonly href?: string;
   readonly beside?: ReactNode;
+  /** Left out where a narrow screen folds the row, unless `keepSecond`. */
   readonly second?: ReactNode;
+  readonly keepSecond?: boolean;
   readonly current?: boolean;
   readonly onFollow?: (event: MouseEvent<HTMLAnchorElement>) => void;
 }
 
-export function NameCell({ name, href, beside, second, current, onFollow }: NameCellProps) {
+export function NameCell({ name, href, beside, second, keepSecond, current, onFollow }: NameCellProps) {
   return (
     <th scope="row" role="rowheader" data-entry="main">
       {href === undefined ? (
@@ -132,8 +141,10 @@ export function NameCell({ name, href, beside, second, current, onFollow }: Name
           {name}
         </a>
       )}
-      {beside && <span className="type-second type-small ml-2">{beside}</span>}
-      {second && <span className="type-second block">{second}</span>}
+      {beside && <span className="row-beside type-second type-small">{beside}</span>}
+      {second && (
+        <span className={classes('row-second type-second', keepSecond && 'row-second-kept')}>{second}</span>
+      )}
     </th>
   );
 }

@@ -5,6 +5,7 @@ import type { EntryPlace } from './Table.tsx';
 export interface GridColumnMeta {
   readonly numeric?: boolean;
   readonly entry?: EntryPlace;
+  readonly nowrap?: boolean;
   /** Content is a whole NameCell and brings its own <th>. */
   readonly namesRow?: boolean;
   /** Name in the column choice and for an empty head. */
