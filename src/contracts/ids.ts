@@ -7,3 +7,6 @@ const id = z
 
 /** `/…/[id]`: a positive whole number; anything else is not there. */
 export const idParams = z.object({ id });
+
+/** `/…/[id]/cells/[line]`: one line of one statement. */
+export const lineParams = z.object({ id, line: z.string().max(40) });

@@ -6,34 +6,48 @@ import {
   type WatchlistRow,
   type WatchlistView,
 } from '../../contracts/watchlist.ts';
+import type { Transaction } from 'sequelize';
 import { ok } from '../../core/result.ts';
 import { deskScope } from '../auth/policy.ts';
+import type { DeskScope } from '../db/deskScope.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { listProposals, type ProposalRecord } from '../db/repositories/proposals.ts';
-import { listWatchlist as listRecords, type WatchlistRecord } from '../db/repositories/watchlist.ts';
+import {
+  listWatchlist as listRecords,
+  standingEntry,
+  type WatchlistRecord,
+} from '../db/repositories/watchlist.ts';
 import type { PersonActor } from './actor.ts';
 import type { Outcome } from './write.ts';
 
 const PROPOSALS_SHOWN = 100;
 
 /** What stands on the watchlist of the desks that the person reads, and what waits for a decision. */
-export function listWatchlist(
-  actor: PersonActor,
-  borrowerId: number | null = null,
-): Promise<Outcome<WatchlistView>> {
+export function listWatchlist(actor: PersonActor): Promise<Outcome<WatchlistView>> {
   const scope = deskScope(actor.person, 'read borrower');
   return inTransaction(async (tx) => {
-    const today = actor.now.toISOString().slice(0, 10);
-    const entries = (await listRecords(tx, scope)).map((record) => toWatchlistRow(record, today));
-    const proposals = await listProposals(tx, scope, { borrowerId, limit: PROPOSALS_SHOWN });
+    const entries = await listRecords(tx, scope);
+    const proposals = await listProposals(tx, scope, { borrowerId: null, limit: PROPOSALS_SHOWN });
     return ok({
-      entries: borrowerId === null ? entries : entries.filter((entry) => entry.borrowerId === borrowerId),
+      entries: entries.map((record) => toWatchlistRow(record, actor.now)),
       proposals: proposals.map(toProposalRow),
     });
   });
 }
 
-const toWatchlistRow = (record: WatchlistRecord, today: string): WatchlistRow => ({
+/** The same for one borrower's page. */
+export async function borrowerWatch(
+  tx: Transaction,
+  scope: DeskScope,
+  borrowerId: number,
+  now: Date,
+): Promise<{ watchlist: WatchlistRow | null; proposals: ProposalRow[] }> {
+  const standing = await standingEntry(tx, borrowerId);
+  const proposals = await listProposals(tx, scope, { borrowerId, limit: PROPOSALS_SHOWN });
+  return { watchlist: standing && toWatchlistRow(standing, now), proposals: proposals.map(toProposalRow) };
+}
+
+const toWatchlistRow = (record: WatchlistRecord, now: Date): WatchlistRow => ({
   id: record.id,
   borrowerId: record.borrowerId,
   borrowerName: record.borrowerName,
@@ -43,7 +57,7 @@ const toWatchlistRow = (record: WatchlistRecord, today: string): WatchlistRow =>
   ownerName: record.ownerName,
   plan: record.plan,
   nextReviewOn: record.nextReviewOn,
-  reviewOverdue: record.nextReviewOn < today,
+  reviewOverdue: record.nextReviewOn < now.toISOString().slice(0, 10),
   enteredOn: record.enteredOn,
   state: record.state,
   proposedBy: record.proposedBy,
