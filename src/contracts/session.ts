@@ -67,7 +67,13 @@ export const firstSetUp = z.object({
 });
 export type FirstSetUp = z.infer<typeof firstSetUp>;
 
-export const unsubscribeQuery = z.object({ token: linkToken });
+/** A mail program sends the second (RFC 8058) and has the token in the address; our own page sends the first. */
+export const unsubscribeForm = z.object({
+  token: linkToken.optional(),
+  'List-Unsubscribe': z.literal('One-Click').optional(),
+});
+
+export const digestChoice = z.object({ digest: z.enum(['wanted', 'not wanted']) });
 
 /** Asked of the platform itself: its list and what it accepts differ by the old names. */
 export function isTimeZone(zone: string): boolean {

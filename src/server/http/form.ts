@@ -37,8 +37,8 @@ interface FormDefinition<Right extends RouteRight, Body, Value> {
     readonly body: Body;
     readonly context: APIContext;
   }) => Promise<Result<Value, ServiceProblem>>;
-  /** Sets cookies where that is the point, and says where a form leads to. */
-  readonly done: (value: Value, context: APIContext) => string;
+  /** Sets cookies where that is the point, and says where a form leads to; null is answered as JSON is. */
+  readonly done: (value: Value, context: APIContext) => string | null;
   /** Answer to JSON; 204 where left out. */
   readonly present?: (value: Value) => Response;
 }
@@ -78,7 +78,7 @@ export function defineForm<Right extends RouteRight, Body, Value>(
     const result = await definition.run({ actor, body: parsed.data, context });
     if (!result.ok) return refuse(plainProblem(result.error));
     const location = definition.done(result.value, context);
-    if (isForm) return context.redirect(location, 303);
+    if (isForm && location !== null) return context.redirect(location, 303);
     return definition.present?.(result.value) ?? new Response(null, { status: 204 });
   };
   return Object.assign(handle, { can });

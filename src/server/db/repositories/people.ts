@@ -154,7 +154,7 @@ export async function wantsDigest(tx: Transaction, id: number): Promise<boolean>
 export async function setWantsDigest(tx: Transaction, id: number, wanted: boolean): Promise<void> {
   await execute(tx, 'update people set wants_digest = :wanted, version = version + 1 where id = :id', {
     id,
-    wantsDigest,
+    wanted,
   });
 }
 
