@@ -1,0 +1,128 @@
+/**
+ * The night: every borrower's peer figures, the cross-section out of them, every borrower's assessment, the mail.
+ *
+ * One run per business date. Its cut-off is fixed when the attempt begins; a borrower that fails is marked with its
+ * reason and the rest goes on; a run that was cut goes on where it stopped, and ends as if it had not been.
+ */
+import { randomUUID } from 'node:crypto';
+import type { RunKind, RunPhase } from '../../contracts/runs.ts';
+import type { PlainDate } from '../../core/calendar/plainDate.ts';
+import { METHOD_VERSION } from '../../core/policy.ts';
+import { buildCrossSection, type CrossSection, type PeerInputs } from '../../core/quality/crossSection.ts';
+import { inTransaction, isOutage } from '../db/inTransaction.ts';
+import { findCrossSection, storeCrossSection } from '../db/repositories/crossSections.ts';
+import { releaseLock, takeLock, type HeldLock } from '../db/repositories/jobLocks.ts';
+import { interruptRun, setCrossSection, setPhase, type RunRecord } from '../db/repositories/runs.ts';
+import { dropOutputs, listOutputs } from '../db/repositories/runTasks.ts';
+import { systemActor } from './actor.ts';
+import { assessWithin } from './assessBorrower.ts';
+import { beginRun } from './beginRun.ts';
+import { eachBorrower, LOCK_SECONDS, NIGHT_LOCK, RunLockLost } from './eachBorrower.ts';
+import { finishNight, type RunSummary } from './finishNight.ts';
+import { peersOfBorrower } from './peersOfBorrower.ts';
+
+export interface NightCommand {
+  readonly businessDate: PlainDate;
+  readonly kind: RunKind;
+  /** Null: by schedule or from the command line. */
+  readonly startedBy: number | null;
+  readonly now: Date;
+  /** By hand: a date that is done is computed once more, as another attempt. */
+  readonly again?: boolean;
+}
+
+/** What the night does with one borrower; a test puts a fault in its place. */
+export interface NightSteps {
+  readonly assessWithin: typeof assessWithin;
+  readonly peersOfBorrower: typeof peersOfBorrower;
+}
+
+/** Not done: another run is going on, or the date is done and was not asked for again. */
+export interface SkippedRun {
+  readonly outcome: 'skipped';
+  readonly reason: string;
+}
+
+export async function runNight(
+  command: NightCommand,
+  steps: NightSteps = { assessWithin, peersOfBorrower },
+): Promise<RunSummary | SkippedRun> {
+  const lock = await inTransaction((tx) =>
+    takeLock(tx, { name: NIGHT_LOCK, owner: randomUUID(), seconds: LOCK_SECONDS }),
+  );
+  if (!lock) return { outcome: 'skipped', reason: 'Another run is going on. Nothing was started.' };
+  let run: RunRecord | null = null;
+  try {
+    run = await inTransaction((tx) => beginRun(tx, command));
+    const result = run ? await compute(run, lock, steps) : alreadyDone(command);
+    await inTransaction((tx) => releaseLock(tx, lock));
+    return result;
+  } catch (error) {
+    await giveUp(run, lock, error);
+    throw error;
+  }
+}
+
+const alreadyDone = ({ businessDate }: NightCommand): SkippedRun => ({
+  outcome: 'skipped',
+  reason: `The run for ${businessDate} is done already. Start it by hand to compute the date again.`,
+});
+
+/** A lost lock or a lost database leaves the run as it is: whoever comes next goes on with it. */
+async function giveUp(run: RunRecord | null, lock: HeldLock, error: unknown): Promise<void> {
+  if (error instanceof RunLockLost || isOutage(error)) return;
+  await inTransaction(async (tx) => {
+    if (run) await interruptRun(tx, run.id, error instanceof Error ? error.message : String(error));
+    await releaseLock(tx, lock);
+  });
+}
+
+async function compute(run: RunRecord, lock: HeldLock, steps: NightSteps): Promise<RunSummary> {
+  const night = { run, lock };
+  await enter(run, 'tests');
+  await eachBorrower(night, 'tests', async (tx, borrowerId) =>
+    JSON.stringify(await steps.peersOfBorrower(tx, borrowerId, run.knownAt, run.businessDate)),
+  );
+
+  await enter(run, 'cross-section');
+  const crossSection = await crossSectionOf(run);
+
+  await enter(run, 'scores');
+  const actor = systemActor(`night-${run.id}-${run.attempt}`, run.knownAt);
+  await eachBorrower(night, 'scores', async (tx, borrowerId) => {
+    const { knownAt, businessDate: asOf } = run;
+    const done = await steps.assessWithin(tx, actor, borrowerId, {
+      runId: run.id,
+      knownAt,
+      asOf,
+      crossSection,
+    });
+    if (!done.ok) throw new Error(`borrower ${borrowerId} is ${done.error.kind}`);
+    return JSON.stringify(done.value.alerts);
+  });
+
+  await enter(run, 'mail');
+  return inTransaction((tx) => finishNight(tx, night));
+}
+
+const enter = (run: RunRecord, phase: RunPhase): Promise<void> =>
+  inTransaction((tx) => setPhase(tx, run.id, phase));
+
+/** The attempt's own cross-section, built once: a run that goes on finds it. */
+async function crossSectionOf(run: RunRecord): Promise<CrossSection> {
+  return inTransaction(async (tx) => {
+    const stored = run.crossSectionId === null ? null : await findCrossSection(tx, run.crossSectionId);
+    if (stored) return stored;
+    const peers = (await listOutputs(tx, run.id, 'tests')).flatMap(
+      (text) => JSON.parse(text) as PeerInputs[],
+    );
+    const crossSection = await storeCrossSection(
+      tx,
+      { runId: run.id, asOf: run.businessDate, knownAt: run.knownAt, methodVersion: METHOD_VERSION },
+      (version) => buildCrossSection(peers, version),
+    );
+    await setCrossSection(tx, run.id, crossSection.version);
+    await dropOutputs(tx, run.id, 'tests');
+    return crossSection;
+  });
+}
