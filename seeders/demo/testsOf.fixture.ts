@@ -1,0 +1,72 @@
+/** Covenant tests by plain ratio arithmetic, apart from the product's own. */
+import type { MeasureCode } from '../../src/core/measures/measure.ts';
+import { addBacksOfYear } from './addBackPlans.ts';
+import type { DemoBorrower } from './demoBorrower.ts';
+import type { DemoCovenant } from './demoCovenant.ts';
+import type { DemoQuarter } from './demoLines.ts';
+import { currentRatio, interestCover, liquidity, netLeverage, totalLeverage, yearEbitda } from './ratios.ts';
+
+type Read = (quarters: readonly DemoQuarter[], index: number, addBacks: number) => number | null;
+
+const READ: Readonly<Record<MeasureCode, Read>> = {
+  'net-leverage': netLeverage,
+  'total-leverage': (quarters, index) => totalLeverage(quarters, index),
+  'interest-cover': (quarters, index) => interestCover(quarters, index),
+  'current-ratio': (quarters, index) => currentRatio(quarters, index),
+  'minimum-liquidity': (quarters, index) => liquidity(quarters, index),
+};
+
+export interface DemoTest {
+  readonly level: number | null;
+  readonly value: number | null;
+  readonly withoutAddBacks: number | null;
+  readonly addBacks: number;
+  readonly ebitda: number;
+}
+
+export function testsOf({ quarters }: DemoBorrower, covenant: DemoCovenant | undefined): DemoTest[] {
+  if (!covenant) throw new Error('a covenant expected');
+  return quarters.flatMap(({ quarterEnd }, index) => {
+    if (quarterEnd < covenant.firstTestOn) return [];
+    const row = covenant.levels.find(
+      ({ from, until }) => from <= quarterEnd && (until === null || until >= quarterEnd),
+    );
+    const addBacks = addBacksOfYear(quarters, index, covenant.addBacks);
+    return {
+      level: row?.level ?? null,
+      value: READ[covenant.measure](quarters, index, addBacks),
+      withoutAddBacks: READ[covenant.measure](quarters, index, 0),
+      addBacks,
+      ebitda: yearEbitda(quarters, index) ?? Number.NaN,
+    };
+  });
+}
+
+export interface Room {
+  readonly level: number;
+  /** Share of the level; negative where the test is not met. */
+  readonly room: number;
+  readonly roomWithoutAddBacks: number;
+}
+
+/** Of each test that has a level, oldest first. A cover with no interest to pay leaves all the room there is. */
+export function roomsOf(borrower: DemoBorrower, measure: string): Room[] {
+  const covenant = borrower.covenants.find((one) => one.measure === measure);
+  if (!covenant) throw new Error(`${borrower.name} has no ${measure}`);
+  const isMaximum = covenant.operator.startsWith('<');
+  const roomOf = (value: number | null, level: number): number => {
+    if (value === null) return Number.NaN;
+    if (measure === 'interest-cover' && value < 0) return Number.POSITIVE_INFINITY;
+    return isMaximum ? 1 - value / level : value / level - 1;
+  };
+  return testsOf(borrower, covenant).flatMap(({ level, value, withoutAddBacks }) =>
+    level === null
+      ? []
+      : { level, room: roomOf(value, level), roomWithoutAddBacks: roomOf(withoutAddBacks, level) },
+  );
+}
+
+export const lowestRoom = (borrower: DemoBorrower): number =>
+  Math.min(
+    ...borrower.covenants.flatMap(({ measure }) => roomsOf(borrower, measure).map(({ room }) => room)),
+  );
