@@ -130,6 +130,8 @@ export default tseslint.config(
         URL: 'readonly',
         performance: 'readonly',
         fetch: 'readonly',
+        AbortController: 'readonly',
+        AbortSignal: 'readonly',
         setTimeout: 'readonly',
         clearTimeout: 'readonly',
         setInterval: 'readonly',

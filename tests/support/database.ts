@@ -8,7 +8,7 @@ declare module 'vitest' {
   interface ProvidedContext {
     databaseUrl: string;
     databaseOwnerUrl: string;
-    databaseServer: { port: number; socket: string };
+    databaseServer: { port: number; socket: string; adminUser: string };
   }
 }
 
@@ -19,7 +19,11 @@ export async function setup(project: TestProject): Promise<void> {
   await grantToApplication(ownerUrl, url);
   project.provide('databaseUrl', url);
   project.provide('databaseOwnerUrl', ownerUrl);
-  project.provide('databaseServer', { port: server.port, socket: server.socket });
+  project.provide('databaseServer', {
+    port: server.port,
+    socket: server.socket,
+    adminUser: server.adminUser,
+  });
 }
 
 export const teardown = (): Promise<void> => releaseServer();

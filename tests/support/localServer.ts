@@ -9,6 +9,7 @@ import { startDatabase } from '../../jobs/database.mjs';
 interface LocalServer {
   readonly port: number;
   readonly socket: string;
+  readonly adminUser: string;
   readonly stop: () => Promise<void>;
 }
 
@@ -44,6 +45,7 @@ async function start(): Promise<LocalServer> {
   return {
     port: server.port,
     socket: server.socket,
+    adminUser: server.adminUser,
     stop: async () => {
       await server.stop();
       rmSync(directory, { recursive: true, force: true });
@@ -58,9 +60,9 @@ export interface FreshDatabase {
   readonly url: string;
 }
 
-export async function freshDatabase(server: Pick<LocalServer, 'port' | 'socket'>): Promise<FreshDatabase> {
+export async function freshDatabase(server: Omit<LocalServer, 'stop'>): Promise<FreshDatabase> {
   const name = `t${randomBytes(6).toString('hex')}`;
-  const root = await mariadb.createConnection({ socketPath: server.socket, user: 'root' });
+  const root = await mariadb.createConnection({ socketPath: server.socket, user: server.adminUser });
   try {
     await root.query(`create database ${name} character set utf8mb4 collate utf8mb4_unicode_ci`);
     await root.query(`create user '${name}o'@'127.0.0.1' identified by '${name}'`);

@@ -25,7 +25,6 @@ export type SendOutcome =
 
 export interface MailTransport {
   readonly send: (message: OutgoingMessage) => Promise<SendOutcome>;
-  readonly close: () => void;
 }
 
 /** The lender's SMTP server, or the local sink where none is configured. */
@@ -68,7 +67,6 @@ export function mailTransport(settings = env()): MailTransport {
         return outcomeOf(error);
       }
     },
-    close: () => transport.close(),
   };
 }
 

@@ -12,7 +12,7 @@ import {
   putBack,
   type ClaimedMail,
 } from '../db/repositories/outbox.ts';
-import type { MailTransport, SendOutcome } from '../mail/transport.ts';
+import { mailTransport, type MailTransport, type SendOutcome } from '../mail/transport.ts';
 import { systemActor } from './actor.ts';
 import { audit } from './write.ts';
 
@@ -31,7 +31,10 @@ export interface MailSummary {
 }
 
 /** Sends what is due, at most fifty; stops at the first try that reaches no server. */
-export async function sendDueMail(now: Date, transport: MailTransport): Promise<MailSummary> {
+export async function sendDueMail(
+  now: Date,
+  transport: MailTransport = sharedTransport(),
+): Promise<MailSummary> {
   await takeUpLostMail(now);
   const summary = { sent: 0, putBack: 0, failed: 0 };
   for (let count = 0; count < MOST_PER_CALL; count += 1) {
@@ -44,6 +47,9 @@ export async function sendDueMail(now: Date, transport: MailTransport): Promise<
   }
   return summary;
 }
+
+let shared: MailTransport | null = null;
+const sharedTransport = (): MailTransport => (shared ??= mailTransport());
 
 /** Waits double from half a minute to an hour. */
 export const waitMs = (tries: number): number =>
