@@ -38,8 +38,11 @@ export const headerStage =
   (isDevelopment: boolean): MiddlewareHandler =>
   async (context, next) => {
     const response = await next();
-    setMissingHeaders(response.headers, isDevelopment);
     response.headers.set('x-request-id', context.locals.requestId);
+    // An empty 404 or 500 becomes the error page, which passes here itself and keeps what stands on the empty one.
+    if (response.body === null && (response.status === 404 || response.status === 500)) return response;
+    response.headers.delete('x-astro-reroute');
+    setMissingHeaders(response.headers, isDevelopment);
     return response;
   };
 
