@@ -1,7 +1,11 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { Decimal } from '../money/decimal.ts';
+import type { AddBack, MeasureDefinition } from '../measures/definition.ts';
 import type { MeasureCode } from '../measures/measure.ts';
 import type { StatementScope } from '../statements/statement.ts';
+
+export type { AddBack } from '../measures/definition.ts';
+export type CovenantDefinition = MeasureDefinition;
 
 export const OPERATORS = ['<=', '<', '>=', '>'] as const;
 export type Operator = (typeof OPERATORS)[number];
@@ -13,29 +17,6 @@ export interface CovenantLevel {
   readonly from: PlainDate;
   readonly until: PlainDate | null;
   readonly level: Decimal | null;
-}
-
-/** How the agreement defines EBITDA and debt for this covenant. */
-export interface CovenantDefinition {
-  /** Share of EBITDA that capped add-backs may reach; null is no cap. */
-  readonly addBackCap: Decimal | null;
-  /** 'before': share of EBITDA before the capped add-backs; 'after': of EBITDA including them. */
-  readonly addBackCapBasis: 'before' | 'after';
-  readonly leasesInDebt: boolean;
-  /** The most cash that may be netted; null is no limit. */
-  readonly cashNettingCap: Decimal | null;
-  /** Counts undrawn commitments towards minimum liquidity. */
-  readonly undrawnCountsAsLiquidity: boolean;
-}
-
-export interface AddBack {
-  readonly id: number;
-  readonly periodEnd: PlainDate;
-  readonly months: number;
-  readonly label: string;
-  readonly amount: Decimal;
-  readonly capped: boolean;
-  readonly reason: string;
 }
 
 /** A lender's decision to give up one failed test. The failure stays underneath. */
@@ -60,7 +41,7 @@ export interface Covenant {
   readonly firstTestOn: PlainDate;
   /** 3, 6 or 12. */
   readonly everyMonths: number;
-  readonly definition: CovenantDefinition;
+  readonly definition: MeasureDefinition;
   /** In date order, without gaps that are meant as holidays: a day outside every row has no level in force. */
   readonly levels: readonly CovenantLevel[];
   readonly addBacks: readonly AddBack[];

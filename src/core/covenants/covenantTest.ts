@@ -1,7 +1,10 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
+import type { BridgeLine } from '../measures/bridge.ts';
 import type { Decimal } from '../money/decimal.ts';
 import type { InputUsed, MeasureCode, MissingLine } from '../measures/measure.ts';
 import type { Operator } from './covenant.ts';
+
+export type { BridgeLine } from '../measures/bridge.ts';
 
 /** What a test came to, in the words of the screen. */
 export const OUTCOMES = [
@@ -35,13 +38,6 @@ export interface Headroom {
   /** By how much debt, interest or current liabilities may rise, in money and as a share. */
   readonly otherSideMayRise: Decimal | null;
   readonly otherSideShare: Decimal | null;
-}
-
-export interface BridgeLine {
-  readonly label: string;
-  readonly amount: Decimal;
-  readonly kind: 'figure' | 'subtotal' | 'add-back' | 'disallowed';
-  readonly inputs: readonly InputUsed[];
 }
 
 /** A test recomputed under another reading of earnings. */

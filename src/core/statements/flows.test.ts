@@ -126,6 +126,16 @@ describe('twelve months', () => {
     expect(amount(lastTwelveMonths(quarters, 'revenue', '2025-09-30', 12))).toBe('86');
   });
 
+  test('from quarters name the quarter that is missing, not a year to date that never came', () => {
+    const quarters = (['2024-12-31', '2025-03-31', '2025-09-30'] as const).map((end) =>
+      buildStatement(end, 3, { revenue: 20 }),
+    );
+    expect(lastTwelveMonths(quarters, 'revenue', '2025-09-30', 12)).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'statement', periodEnd: '2025-06-30', months: 3 }],
+    });
+  });
+
   const quarterly = (last: number) => [
     ...[20, 30, 25].map((revenue, index) =>
       buildStatement((['2025-03-31', '2025-06-30', '2025-09-30'] as const)[index]!, 3, { revenue }),

@@ -79,17 +79,18 @@ export function lastTwelveMonths(
   fiscalYearEndMonth: number,
 ): Reading {
   const yearToDate = byYearToDate(statements, line, periodEnd, fiscalYearEndMonth);
+  const quarters = byQuarters(statements, line, periodEnd, fiscalYearEndMonth);
   const routes = [
     { name: 'twelve-month statement', reading: flowOver(statements, line, periodEnd, 12) },
     { name: 'year to date', reading: yearToDate },
-    { name: 'four quarters', reading: byQuarters(statements, line, periodEnd, fiscalYearEndMonth) },
+    { name: 'four quarters', reading: quarters },
   ];
   const [first, ...others] = routes.flatMap(({ name, reading }) =>
     reading.kind === 'value' ? [{ name, reading }] : [],
   );
   if (!first) {
     const refused = routes.find(({ reading }) => reading.kind === 'not-meaningful');
-    return refused?.reading ?? yearToDate;
+    return refused?.reading ?? shorterGap(yearToDate, quarters, periodEnd);
   }
   const other = others.find(({ reading }) => contradicts(statements, first.reading, reading));
   if (!other) return first.reading;
@@ -223,6 +224,14 @@ const statementOf = (
   periodEnd: PlainDate,
   months: number,
 ): Statement | null => inForce(versionsOf(statements, periodEnd, months));
+
+/** What is missing from twelve months, by the route that the borrower's latest statement belongs to. */
+function shorterGap(yearToDate: Reading, quarters: Reading, periodEnd: PlainDate): Reading {
+  const lacksLatest = (reading: Reading): boolean =>
+    reading.kind === 'missing' &&
+    reading.missing.some((gap) => gap.line === 'statement' && isSamePeriodEnd(gap.periodEnd, periodEnd));
+  return lacksLatest(yearToDate) && !lacksLatest(quarters) ? quarters : yearToDate;
+}
 
 const nothingButStatement = (reading: Reading): boolean =>
   reading.kind === 'missing' && reading.missing.every(({ line }) => line === 'statement');

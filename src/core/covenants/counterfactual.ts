@@ -1,0 +1,71 @@
+import { ZERO, type Decimal } from '../money/decimal.ts';
+import { isMet, isNotMet, type Counterfactual } from './covenantTest.ts';
+import { amountAtLevel, type Sides } from './headroom.ts';
+import { holdAgainstLevel, type Held, type Shaped, type Terms } from './holdAgainstLevel.ts';
+
+/** The sides with some earnings taken out of the side that earnings stand on. */
+export function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Sides {
+  if (measure.earningsSide === 'numerator') return { ...sides, numerator: sides.numerator.minus(takenOut) };
+  if (measure.earningsSide === 'denominator' && sides.denominator)
+    return { ...sides, denominator: sides.denominator.minus(takenOut) };
+  return sides;
+}
+
+/** A haircut for accruals that the peers do not show: never less than nought, a negative residual is not added back. */
+export const accrualHaircut = (unexplainedAccruals: Decimal): Decimal =>
+  unexplainedAccruals.gt(0) ? unexplainedAccruals : ZERO;
+
+/** The test recomputed with earnings taken out. Interest and tax are left as they are. Source: methods.md B7. */
+export const heldWithoutEarnings = (measure: Shaped, sides: Sides, terms: Terms, takenOut: Decimal): Held =>
+  holdAgainstLevel(measure, withoutEarnings(measure, sides, takenOut), terms);
+
+/**
+ * The share of the add-backs that a test needs to be met: the earnings at which it stands at its level less the
+ * earnings before add-backs, over the add-backs. Null where it is met without them, or not met with them.
+ * Source: methods.md B7.
+ *
+ * @example breakEvenShare({ earningsNeeded: decimal(12), earningsBefore: decimal(11), addBacks: decimal(2) }) // => 0.5
+ */
+export function breakEvenShare({
+  earningsNeeded,
+  earningsBefore,
+  addBacks,
+}: {
+  readonly earningsNeeded: Decimal;
+  readonly earningsBefore: Decimal;
+  readonly addBacks: Decimal;
+}): Decimal | null {
+  if (addBacks.lte(0)) return null;
+  const share = earningsNeeded.minus(earningsBefore).div(addBacks);
+  return share.lte(0) || share.gt(1) ? null : share;
+}
+
+/**
+ * What the test would have come to without any add-backs. Empty where the covenant has none or rests on no
+ * earnings. Source: methods.md B7(a).
+ */
+export function withoutAddBacks(
+  measure: Shaped,
+  sides: Sides,
+  terms: Terms,
+  addBacks: Decimal,
+): readonly Counterfactual[] {
+  if (addBacks.isZero() || measure.earningsSide === null) return [];
+  const without = withoutEarnings(measure, sides, addBacks);
+  const held = holdAgainstLevel(measure, without, terms);
+  const earningsBefore = measure.earningsSide === 'numerator' ? without.numerator : without.denominator;
+  const earningsNeeded = amountAtLevel(measure.shape, sides, terms.level);
+  const decides = isMet(holdAgainstLevel(measure, sides, terms).outcome) && isNotMet(held.outcome);
+  return [
+    {
+      kind: 'without add-backs',
+      earningsTakenOut: addBacks,
+      ratio: held.tested,
+      outcome: held.outcome,
+      breakEvenShare:
+        decides && earningsNeeded && earningsBefore
+          ? breakEvenShare({ earningsNeeded, earningsBefore, addBacks })
+          : null,
+    },
+  ];
+}

@@ -1,0 +1,20 @@
+import { isMet, isNotMet, type CovenantTest } from './covenantTest.ts';
+
+/** Whether a test has a result: met or not met, in whichever form. */
+export const hasResult = ({ outcome }: CovenantTest): boolean => isMet(outcome) || isNotMet(outcome);
+
+/**
+ * The latest test of one covenant that stands: the newest one whose figures are there. Null where there is none or
+ * where it is not tested (a holiday), because then the covenant holds nobody to anything.
+ *
+ * @example latestLiveTest(assessment.tests, covenant.id)?.outcome
+ */
+export function latestLiveTest(tests: readonly CovenantTest[], covenantId: number): CovenantTest | null {
+  const latest = tests
+    .filter((test) => test.covenantId === covenantId && test.outcome !== 'awaiting figures')
+    .reduce<CovenantTest | null>(
+      (newest, test) => (newest && newest.testDate > test.testDate ? newest : test),
+      null,
+    );
+  return latest && latest.outcome !== 'not tested' ? latest : null;
+}

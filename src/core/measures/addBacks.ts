@@ -1,0 +1,76 @@
+/** Add-backs as the agreement allows them: some without limit, the others up to a share of EBITDA. */
+import { addDays, type PlainDate } from '../calendar/plainDate.ts';
+import { monthsBefore } from '../calendar/fiscalYear.ts';
+import { Decimal, ZERO } from '../money/decimal.ts';
+import type { AddBack } from './definition.ts';
+
+export interface AddBackTerms {
+  /** Share of EBITDA; null is no cap. */
+  readonly cap: Decimal | null;
+  readonly basis: 'before' | 'after';
+}
+
+export interface AllowedAddBacks {
+  /** The most that the capped add-backs may come to; null without a cap. */
+  readonly limit: Decimal | null;
+  /** What is taken of the capped add-backs. */
+  readonly allowed: Decimal;
+  readonly disallowed: Decimal;
+  readonly adjusted: Decimal;
+}
+
+/**
+ * Adjusted EBITDA = EBITDA + uncapped add-backs + the smaller of the capped ones and their limit.
+ *
+ * With B = EBITDA + uncapped and cap c, the limit is c x B before the add-backs and c / (1 - c) x B after them;
+ * nought where B is not positive. Same currency unit throughout. Source: methods.md A3.
+ *
+ * @example allowAddBacks({ ebitda: decimal(10), uncapped: ZERO, capped: decimal(4), terms: { cap: decimal('0.25'), basis: 'before' } }).adjusted // => 12.5
+ */
+export function allowAddBacks({
+  ebitda,
+  uncapped,
+  capped,
+  terms,
+}: {
+  readonly ebitda: Decimal;
+  readonly uncapped: Decimal;
+  readonly capped: Decimal;
+  readonly terms: AddBackTerms;
+}): AllowedAddBacks {
+  const limit = addBackLimit(ebitda.plus(uncapped), terms);
+  const allowed = limit === null ? capped : Decimal.min(capped, limit);
+  return {
+    limit,
+    allowed,
+    disallowed: capped.minus(allowed),
+    adjusted: ebitda.plus(uncapped).plus(allowed),
+  };
+}
+
+function addBackLimit(base: Decimal, { cap, basis }: AddBackTerms): Decimal | null {
+  if (cap === null || (basis === 'after' && cap.gte(1))) return null;
+  if (base.lte(0)) return ZERO;
+  return base.times(basis === 'before' ? cap : cap.div(cap.negated().plus(1)));
+}
+
+/**
+ * The add-backs whose whole period lies within the twelve months up to a day. One that reaches further back is
+ * left out: no rule says which part of it would count.
+ */
+export function addBacksWithinTwelveMonths(
+  addBacks: readonly AddBack[],
+  date: PlainDate,
+): readonly AddBack[] {
+  const opening = monthsBefore(date, 12);
+  return addBacks.filter(
+    ({ periodEnd, months }) => periodEnd <= addDays(date, 6) && monthsBefore(periodEnd, months) >= opening,
+  );
+}
+
+/**
+ * EBITDA with a full year of what was bought: LTM EBITDA + the target's own twelve months before the acquisition.
+ * Source: methods.md A3.
+ */
+export const proFormaEbitda = (ebitda: Decimal, targetBeforeAcquisition: Decimal): Decimal =>
+  ebitda.plus(targetBeforeAcquisition);

@@ -1,0 +1,53 @@
+import { Decimal, ZERO } from '../money/decimal.ts';
+import type { Reading } from '../statements/reading.ts';
+import { addBacksWithinTwelveMonths, allowAddBacks } from './addBacks.ts';
+import type { BridgeLine } from './bridge.ts';
+import type { MeasureRequest } from './definition.ts';
+import { ebitdaOfTwelveMonths, type RouteDifference } from './ebitda.ts';
+
+export interface Earnings {
+  /** Adjusted EBITDA of twelve months, as the covenant defines it. */
+  readonly reading: Reading;
+  /** Add-backs taken, capped and uncapped together; nought where EBITDA is not known. */
+  readonly addBacksTaken: Decimal;
+  readonly routes: RouteDifference | null;
+  readonly bridge: readonly BridgeLine[];
+}
+
+/**
+ * Adjusted EBITDA of the twelve months up to the day, with the bridge from net income. The cap is tested on the
+ * twelve months, not quarter by quarter. Source: methods.md A3.
+ *
+ * @example adjustedEbitda(request).reading
+ */
+export function adjustedEbitda(request: MeasureRequest): Earnings {
+  const { statements, date, fiscalYearEndMonth, definition } = request;
+  const { ebitda, routes, bridge } = ebitdaOfTwelveMonths(statements, date, fiscalYearEndMonth);
+  if (ebitda.kind !== 'value') return { reading: ebitda, addBacksTaken: ZERO, routes, bridge };
+  const addBacks = addBacksWithinTwelveMonths(request.addBacks, date);
+  if (addBacks.length === 0) return { reading: ebitda, addBacksTaken: ZERO, routes, bridge };
+  const sumOf = (capped: boolean) =>
+    Decimal.sum(0, ...addBacks.filter((one) => one.capped === capped).map(({ amount }) => amount));
+  const { allowed, disallowed, adjusted } = allowAddBacks({
+    ebitda: ebitda.value,
+    uncapped: sumOf(false),
+    capped: sumOf(true),
+    terms: { cap: definition.addBackCap, basis: definition.addBackCapBasis },
+  });
+  return {
+    reading: { kind: 'value', value: adjusted, inputs: ebitda.inputs },
+    addBacksTaken: sumOf(false).plus(allowed),
+    routes,
+    bridge: [
+      ...bridge,
+      ...addBacks.map(({ label, amount }): BridgeLine => ({ label, amount, kind: 'add-back', inputs: [] })),
+      ...overCap(disallowed),
+      { label: 'Adjusted EBITDA', amount: adjusted, kind: 'subtotal', inputs: [] },
+    ],
+  };
+}
+
+const overCap = (disallowed: Decimal): readonly BridgeLine[] =>
+  disallowed.isZero()
+    ? []
+    : [{ label: 'Add-backs over the cap', amount: disallowed.negated(), kind: 'disallowed', inputs: [] }];

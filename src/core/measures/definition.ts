@@ -1,0 +1,36 @@
+import type { PlainDate } from '../calendar/plainDate.ts';
+import type { Decimal } from '../money/decimal.ts';
+import type { Statement } from '../statements/statement.ts';
+
+/** How the agreement defines EBITDA and debt for one covenant. */
+export interface MeasureDefinition {
+  /** Share of EBITDA that capped add-backs may reach; null is no cap. */
+  readonly addBackCap: Decimal | null;
+  /** 'before': share of EBITDA before the capped add-backs; 'after': of EBITDA including them. */
+  readonly addBackCapBasis: 'before' | 'after';
+  readonly leasesInDebt: boolean;
+  /** The most cash that may be netted; null is no limit. */
+  readonly cashNettingCap: Decimal | null;
+  /** Counts undrawn commitments towards minimum liquidity. */
+  readonly undrawnCountsAsLiquidity: boolean;
+}
+
+export interface AddBack {
+  readonly id: number;
+  readonly periodEnd: PlainDate;
+  readonly months: number;
+  readonly label: string;
+  readonly amount: Decimal;
+  readonly capped: boolean;
+  readonly reason: string;
+}
+
+/** What a measure is computed from. */
+export interface MeasureRequest {
+  /** Every version known by the day, of one scope: knownStatements(). */
+  readonly statements: readonly Statement[];
+  readonly date: PlainDate;
+  readonly fiscalYearEndMonth: number;
+  readonly definition: MeasureDefinition;
+  readonly addBacks: readonly AddBack[];
+}

@@ -1,0 +1,61 @@
+import { ZERO, type Decimal } from '../money/decimal.ts';
+import { balanceAt } from '../statements/flows.ts';
+import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
+import { sumOfReadings, type Reading } from '../statements/reading.ts';
+import { bridgeFigure, bridgeSubtotal } from './bridge.ts';
+import type { MeasureRequest } from './definition.ts';
+import type { Measure } from './measured.ts';
+
+/**
+ * Liquidity = unrestricted cash + the undrawn commitments that can be drawn; none while drawing is stopped.
+ *
+ * Same currency unit throughout. Source: methods.md A3.
+ *
+ * @example liquidity({ cash: decimal(4), undrawn: decimal(3), drawStop: false }) // => 7
+ */
+export const liquidity = ({
+  cash,
+  undrawn,
+  drawStop,
+}: {
+  readonly cash: Decimal;
+  readonly undrawn: Decimal;
+  readonly drawStop: boolean;
+}): Decimal => (drawStop ? cash : cash.plus(undrawn));
+
+/** Cash on the day, with undrawn commitments where the definition counts them. */
+export const minimumLiquidity: Measure = {
+  code: 'minimum-liquidity',
+  label: 'Liquidity',
+  unit: 'money',
+  shape: 'amount',
+  earningsSide: null,
+  words: { carrier: 'liquidity', charge: 'charge' },
+  measure: (request) => {
+    const { statements, date, definition } = request;
+    const cash = balanceAt(statements, 'cash', date);
+    const parts = definition.undrawnCountsAsLiquidity ? [cash, ...undrawnParts(request)] : [cash];
+    const numerator = sumOfReadings(parts.map((reading) => ({ sign: 1 as const, reading })));
+    return {
+      numerator,
+      denominator: null,
+      addBacksTaken: ZERO,
+      bridge: [
+        ...bridgeFigure('Cash', cash),
+        ...parts.slice(1).flatMap((reading) => bridgeFigure('Undrawn commitments', reading)),
+        ...bridgeSubtotal('Liquidity', numerator),
+      ],
+    };
+  },
+};
+
+function undrawnParts({ statements, date }: MeasureRequest): readonly Reading[] {
+  const lettersOfCredit = balanceAt(statements, 'letters_of_credit', date);
+  return [
+    sumOfReadings([
+      { sign: 1, reading: balanceAt(statements, 'revolver_commitment', date) },
+      { sign: -1, reading: balanceAt(statements, 'revolver_drawn', date) },
+      { sign: -1, reading: orNoneIfNeverCarried(statements, 'letters_of_credit', lettersOfCredit) },
+    ]),
+  ];
+}

@@ -1,0 +1,27 @@
+import { ZERO } from '../money/decimal.ts';
+import type { LineItemCode } from './lineItems.ts';
+import type { Reading } from './reading.ts';
+import type { Statement } from './statement.ts';
+
+const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
+
+/**
+ * A reading of a line that many borrowers do not have: nought where none of the borrower's statements ever carried
+ * it. Where some carried it and this one leaves it out, the line stays missing: blank is not zero.
+ *
+ * Desk practice, no source.
+ *
+ * @example orNoneIfNeverCarried(statements, 'junior_debt', balanceAt(statements, 'junior_debt', date))
+ */
+export function orNoneIfNeverCarried(
+  statements: readonly Statement[],
+  line: LineItemCode,
+  reading: Reading,
+): Reading {
+  if (reading.kind !== 'missing') return reading;
+  const carried = statements.some(({ amounts }) => {
+    const amount = amounts[line];
+    return amount !== undefined && !amount.isZero();
+  });
+  return carried ? reading : NONE;
+}
