@@ -1,0 +1,83 @@
+import { monthsBefore } from '../calendar/fiscalYear.ts';
+import type { PlainDate } from '../calendar/plainDate.ts';
+import { toSample } from '../money/toSample.ts';
+import { balanceAt, lastTwelveMonths, quarterFlow } from '../statements/flows.ts';
+import type { LineItemCode } from '../statements/lineItems.ts';
+import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
+import type { Reading } from '../statements/reading.ts';
+import type { Statement } from '../statements/statement.ts';
+
+/** Years and quarters before the quarter end that is looked at. */
+export interface Back {
+  readonly months: number;
+}
+export const NOW: Back = { months: 0 };
+export const YEAR_AGO: Back = { months: 12 };
+export const QUARTER_AGO: Back = { months: 3 };
+export const YEAR_AND_QUARTER_AGO: Back = { months: 15 };
+
+/** A borrower's accounts around one quarter end, read as points of a sample; undefined where a figure is missing. */
+export interface AccountsAt {
+  readonly twelveMonths: (line: LineItemCode, back?: Back) => number | undefined;
+  readonly quarter: (line: LineItemCode, back?: Back) => number | undefined;
+  readonly balance: (line: LineItemCode, back?: Back) => number | undefined;
+  /** The same, nought for a line that the borrower never carried. */
+  readonly optionalTwelveMonths: (line: LineItemCode, back?: Back) => number | undefined;
+  readonly optionalQuarter: (line: LineItemCode, back?: Back) => number | undefined;
+  readonly optionalBalance: (line: LineItemCode, back?: Back) => number | undefined;
+  /** Nobody gave it, as against figures that contradict each other. */
+  readonly isMissing: (line: LineItemCode) => boolean;
+  readonly sample: (reading: Reading) => number | undefined;
+  /** The statements that any figure read so far rests on. */
+  readonly used: () => readonly Statement[];
+}
+
+export function accountsAt(
+  statements: readonly Statement[],
+  quarterEnd: PlainDate,
+  fiscalYearEndMonth: number,
+): AccountsAt {
+  const usedIds = new Set<number>();
+  const sample = (reading: Reading): number | undefined => {
+    if (reading.kind !== 'value') return undefined;
+    for (const { statementId } of reading.inputs) usedIds.add(statementId);
+    return toSample(reading.value);
+  };
+  const readings = {
+    twelveMonths: (line: LineItemCode, back: Back) =>
+      lastTwelveMonths(statements, line, monthsBefore(quarterEnd, back.months), fiscalYearEndMonth),
+    quarter: (line: LineItemCode, back: Back) =>
+      quarterFlow(statements, line, monthsBefore(quarterEnd, back.months), fiscalYearEndMonth),
+    balance: (line: LineItemCode, back: Back) =>
+      balanceAt(statements, line, monthsBefore(quarterEnd, back.months)),
+  };
+  const needed =
+    (read: (line: LineItemCode, back: Back) => Reading) =>
+    (line: LineItemCode, back: Back = NOW) =>
+      sample(read(line, back));
+  const optional =
+    (read: (line: LineItemCode, back: Back) => Reading) =>
+    (line: LineItemCode, back: Back = NOW) =>
+      sample(orNoneIfNeverCarried(statements, line, read(line, back)));
+  return {
+    twelveMonths: needed(readings.twelveMonths),
+    quarter: needed(readings.quarter),
+    balance: needed(readings.balance),
+    optionalTwelveMonths: optional(readings.twelveMonths),
+    optionalQuarter: optional(readings.quarter),
+    optionalBalance: optional(readings.balance),
+    isMissing: (line) => readings.twelveMonths(line, NOW).kind === 'missing',
+    sample,
+    used: () => statements.filter(({ id }) => usedIds.has(id)),
+  };
+}
+
+/** The result of a calculation whose every operand is there. */
+export function ifAll<Names extends string>(
+  operands: Readonly<Record<Names, number | undefined>>,
+  calculate: (operands: Readonly<Record<Names, number>>) => number | undefined,
+): number | undefined {
+  return Object.values(operands).every((value) => value !== undefined)
+    ? calculate(operands as Readonly<Record<Names, number>>)
+    : undefined;
+}

@@ -1,0 +1,49 @@
+/** Figures as the explanation lines print them: plain English, whole percents where halves say nothing. */
+
+/** 0.064 as '6 %'; `digits` after the point. */
+export const percent = (share: number, digits = 0): string => `${withoutMinusZero(share * 100, digits)} %`;
+
+/** 0.19 as '+19 %', -0.04 as '−4 %'. */
+export const signedPercent = (share: number, digits = 0): string => {
+  const text = withoutMinusZero(share * 100, digits);
+  return `${Number(text) > 0 ? '+' : ''}${text.replace('-', '−')} %`;
+};
+
+/** Change of a share in percentage points: 0.022 as '+2.2 points'. */
+export const signedPoints = (share: number): string => {
+  const text = withoutMinusZero(share * 100, 1);
+  return `${Number(text) > 0 ? '+' : ''}${text.replace('-', '−')} points`;
+};
+
+export const wholeDays = (days: number): string => withoutMinusZero(days, 0);
+
+export const rose = (change: number): string => (change >= 0 ? 'rose' : 'fell');
+
+export const borrowers = (count: number, isOfBook: boolean): string =>
+  isOfBook ? `${count} borrowers of the whole book` : count === 1 ? '1 peer' : `${count} peers`;
+
+const MONTHS = [
+  'January',
+  'February',
+  'March',
+  'April',
+  'May',
+  'June',
+  'July',
+  'August',
+  'September',
+  'October',
+  'November',
+  'December',
+] as const;
+
+/** '2026-09-30' as '30 September 2026'. */
+export function longDate(date: string): string {
+  const [year, month, day] = date.split('-').map(Number) as [number, number, number];
+  return `${day} ${MONTHS[month - 1]!} ${year}`;
+}
+
+function withoutMinusZero(value: number, digits: number): string {
+  const text = value.toFixed(digits);
+  return Number(text) === 0 ? (0).toFixed(digits) : text;
+}
