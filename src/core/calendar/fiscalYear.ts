@@ -20,6 +20,17 @@ export interface FiscalPosition {
  * @example reportingMonthEnd('2025-01-03') // => '2024-12-31'
  */
 export function reportingMonthEnd(date: PlainDate): PlainDate {
+  const known = MONTH_ENDS.get(date);
+  if (known !== undefined) return known;
+  const found = nearestMonthEnd(date);
+  MONTH_ENDS.set(date, found);
+  return found;
+}
+
+// Asked of every statement for every figure that is read; days are few, so what was found is kept.
+const MONTH_ENDS = new Map<PlainDate, PlainDate>();
+
+function nearestMonthEnd(date: PlainDate): PlainDate {
   const own = monthEnd(date);
   if (daysBetween(date, own) <= DAYS_NEAR_MONTH_END) return own;
   const day = Number(date.slice(8));
