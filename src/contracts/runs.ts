@@ -43,16 +43,15 @@ export interface RunRow {
 
 export interface RunDetail extends RunRow {
   readonly steps: readonly {
-    readonly phase: 'tests' | 'scores';
+    readonly phase: string;
     readonly done: number;
     readonly failed: number;
     readonly total: number;
   }[];
   readonly failures: readonly {
     readonly borrowerId: number;
-    readonly borrowerName: string;
+    readonly deskName: string;
     readonly phase: string;
     readonly reason: string;
   }[];
-  readonly mailsQueued: number;
 }

@@ -11,7 +11,7 @@ import { findCurrentBasis, insertAssessment, makeCurrent } from '../db/repositor
 import { holdBorrower, loadBorrowerInputs } from '../db/repositories/borrowerInputs.ts';
 import { latestCrossSection } from '../db/repositories/crossSections.ts';
 import { policyInForce } from '../db/repositories/policies.ts';
-import { latestStatementKnownFrom } from '../db/repositories/statementInputs.ts';
+import { figuresChangedAt } from '../db/repositories/statementInputs.ts';
 import type { Actor } from './actor.ts';
 import { raiseAlerts, type AlertCounts } from './raiseAlerts.ts';
 import { audit, write, type Outcome } from './write.ts';
@@ -110,7 +110,7 @@ async function viewOf(tx: Transaction, assessment: Assessment, knownAt: Date): P
       .map((test) => [test.covenantId, test.outcome]),
   );
   return {
-    figuresChangedAt: await latestStatementKnownFrom(tx, assessment.borrowerId, knownAt),
+    figuresChangedAt: await figuresChangedAt(tx, assessment.borrowerId, knownAt),
     isUnknown: (kind, covenantId) =>
       NEEDS_A_SCORE.includes(kind)
         ? assessment.quality.headline === null

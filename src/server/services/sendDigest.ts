@@ -68,12 +68,12 @@ async function queueDigest(
     toName: reader.name,
     toAddress: reader.email,
     ...mail,
-    headers: unsubscribeHeaders(digest.unsubscribeUrl),
+    headers: unsubscribeHeaders(address(`/api/v1/unsubscribe?token=${unsubscribeToken(reader.id)}`)),
     now: run.knownAt,
   });
 }
 
-/** RFC 8058: one click needs an https address; over http there is only the link in the text. */
+/** RFC 8058: one click is a POST and needs an https address; over http there is only the link in the text. */
 const unsubscribeHeaders = (url: string): Readonly<Record<string, string>> =>
   url.startsWith('https:')
     ? { 'List-Unsubscribe': `<${url}>`, 'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click' }

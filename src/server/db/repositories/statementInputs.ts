@@ -3,7 +3,7 @@ import { decimal, type Decimal } from '../../../core/money/decimal.ts';
 import { LINE_ITEM_CODES, type LineItemCode } from '../../../core/statements/lineItems.ts';
 import type { Statement } from '../../../core/statements/statement.ts';
 import { groupRows } from '../groupRows.ts';
-import { select } from '../sql.ts';
+import { select, selectOne } from '../sql.ts';
 
 type HeadRow = Omit<Statement, 'roundingUnit' | 'amounts'> & { borrowerId: number; roundingUnit: string };
 type LineRow = Readonly<Record<LineItemCode, string | null>>;
@@ -33,15 +33,16 @@ export async function loadStatements(
   return groupRows(rows, (row) => row.borrowerId, toStatement);
 }
 
-/** When the borrower's figures last changed, as known by then; null before the first. */
-export async function latestStatementKnownFrom(
+/** When figures of the borrower last came or were taken back, as known by then; null before the first. */
+export async function figuresChangedAt(
   tx: Transaction,
   borrowerId: number,
   knownAt: Date,
 ): Promise<Date | null> {
-  const [row] = await select<{ latest: Date | null }>(
+  const row = await selectOne<{ latest: Date | null }>(
     tx,
-    `select max(known_from) as latest from statements where borrower_id = :borrowerId and known_from <= :knownAt`,
+    `select max(if(known_to <= :knownAt, known_to, known_from)) as latest
+     from statements where borrower_id = :borrowerId and known_from <= :knownAt`,
     { borrowerId, knownAt },
   );
   return row?.latest ?? null;
