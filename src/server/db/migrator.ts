@@ -6,7 +6,7 @@
  * lock row with a lease by the database's clock; a named lock of the server would not hold over several nodes.
  */
 import { randomUUID } from 'node:crypto';
-import { QueryTypes, type Sequelize } from 'sequelize';
+import { QueryTypes, type Sequelize, type Transaction } from 'sequelize';
 import { Umzug } from 'umzug';
 import { connect } from './connection.ts';
 import type { Migration } from './migration.ts';
@@ -15,6 +15,7 @@ import { migration as audit } from './migrations/0002-audit.ts';
 import { migration as borrowers } from './migrations/0003-borrowers.ts';
 import { migration as statements } from './migrations/0004-statements.ts';
 import { migration as results } from './migrations/0005-results.ts';
+import { select } from './sql.ts';
 
 export const MIGRATIONS: readonly Migration[] = [people, audit, borrowers, statements, results];
 
@@ -28,6 +29,13 @@ export const migrateUp = (url: string, steps = MIGRATIONS): Promise<string[]> =>
 /** Undoes every step, the last first. Data is lost: for tests and development only. */
 export const migrateDown = (url: string, steps = MIGRATIONS): Promise<string[]> =>
   underLock(url, async (database) => (await runner(database, steps).down({ to: 0 })).map(({ name }) => name));
+
+/** Names of the steps that this program needs and the database does not have. */
+export async function missingMigrations(tx: Transaction): Promise<string[]> {
+  const rows = await select<{ name: string }>(tx, 'select name from schema_migrations');
+  const applied = new Set(rows.map(({ name }) => name));
+  return MIGRATIONS.map(({ name }) => name).filter((name) => !applied.has(name));
+}
 
 function runner(database: Sequelize, steps: readonly Migration[]): Umzug {
   const runAll = async (statements: readonly string[]) => {

@@ -1,5 +1,13 @@
 /** What answers without a session. Everything else asks for one; tests/api holds this list against every route. */
-const OPEN_PAGES = ['/sign-in', '/set-up', '/forgot-password', '/reset-password', '/unsubscribe'];
+const OPEN_PAGES = [
+  '/livez',
+  '/readyz',
+  '/sign-in',
+  '/set-up',
+  '/forgot-password',
+  '/reset-password',
+  '/unsubscribe',
+];
 
 export const OPEN_ROUTES = [
   '/api/v1/session',
