@@ -65,10 +65,10 @@ export function askedOf(alert: DigestAlert, businessDate: PlainDate): string {
   if (alert.conditionGone) return 'Confirm that the condition is gone, and close it with a reason.';
   const by =
     alert.dueOn < businessDate
-      ? `it was due on ${formatDay(alert.dueOn)}`
+      ? `; it was due on ${formatDay(alert.dueOn)}`
       : alert.dueOn === businessDate
-        ? 'today'
-        : `by ${formatDay(alert.dueOn)}`;
+        ? ' today'
+        : ` by ${formatDay(alert.dueOn)}`;
   return stepOf(alert, businessDate, by);
 }
 
@@ -79,22 +79,22 @@ function stepOf(alert: DigestAlert, businessDate: PlainDate, by: string): string
       const { assessBy } = alertDue(alert.kind, alert.severity, businessDate);
       const assess =
         assessBy && assessBy < alert.dueOn ? ` assess by ${formatDay(assessBy)},` : ' assess it,';
-      return `Take it,${assess} decide ${by}.`;
+      return `Take it,${assess} decide${by}.`;
     }
     case 'taken':
-      return `Assess it and decide ${by}.`;
+      return `Assess it and decide${by}.`;
     case 'waiting for borrower':
-      return `Get the borrower’s answer and decide ${by}.`;
+      return `Get the borrower’s answer and decide${by}.`;
     case 'waiting for analyst':
-      return `Get the analyst’s answer and decide ${by}.`;
+      return `Get the analyst’s answer and decide${by}.`;
     case 'assessed':
-      return `Close it with a reason or propose what follows, ${by}.`;
+      return `Close it with a reason or propose what follows${by}.`;
     case 'put off':
-      return `Put off; decide ${by}.`;
+      return `Put off; decide${by}.`;
     case 'carried into a proposal':
-      return `Its proposal waits for a decision, ${by}.`;
+      return `Its proposal waits for a decision${by}.`;
     case 'closing to be confirmed':
-      return `A second person confirms the closing, ${by}.`;
+      return `A second person confirms the closing${by}.`;
     case 'closed':
     case 'superseded':
       return 'Nothing.';
