@@ -1,5 +1,5 @@
 import { plainDate } from '../../core/calendar/plainDate.ts';
-import { printDay } from '../../core/calendar/printDay.ts';
+import { formatDay } from '../../core/calendar/printDay.ts';
 import {
   drawStrip,
   type StripDrawing,
@@ -129,12 +129,12 @@ function Dates({ drawing: { frame, marks } }: { readonly drawing: StripDrawing }
     <g aria-hidden="true">
       {oldest && marks.length > 3 && (
         <text className="strip-text" x={oldest.x - frame.width / 24} y={y}>
-          {printDay(plainDate(oldest.test.testDate))}
+          {formatDay(plainDate(oldest.test.testDate))}
         </text>
       )}
       {newest && (
         <text className="strip-text" x={frame.width} y={y} textAnchor="end">
-          {printDay(plainDate(newest.test.testDate))}
+          {formatDay(plainDate(newest.test.testDate))}
         </text>
       )}
     </g>

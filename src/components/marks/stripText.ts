@@ -1,4 +1,4 @@
-import { printDay } from '../../core/calendar/printDay.ts';
+import { formatDay } from '../../core/calendar/printDay.ts';
 import { plainDate } from '../../core/calendar/plainDate.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatShare } from '../../core/money/print.ts';
@@ -14,7 +14,7 @@ export function stripText(label: string, tests: readonly StripTest[]): string {
 
 /** "30 Sep 2026 met, just passing, may fall 1.4 %" */
 export function testText({ testDate, outcome, justPassing, mayFall }: StripTest): string {
-  const words = [`${printDay(plainDate(testDate))} ${outcome}`];
+  const words = [`${formatDay(plainDate(testDate))} ${outcome}`];
   if (justPassing) words.push('just passing');
   if (mayFall !== null && outcome !== 'cannot be tested') {
     const share = decimal(mayFall);
