@@ -186,3 +186,19 @@ export async function listStrips(
     },
   );
 }
+
+/** Open alerts on the desks of the scope, and how many of them were raised since. */
+export async function countAlerts(
+  tx: Transaction,
+  scope: DeskScope,
+  since: Date,
+): Promise<{ open: number; fresh: number }> {
+  const desks = inScope(scope);
+  const row = await selectOne<{ open: number; fresh: number }>(
+    tx,
+    `select count(*) as open, coalesce(sum(a.raised_at >= :since), 0) as fresh
+     from alerts a join borrowers b on b.id = a.borrower_id where a.open_slot is not null and ${desks.sql}`,
+    { since, ...desks.values },
+  );
+  return { open: Number(row?.open ?? 0), fresh: Number(row?.fresh ?? 0) };
+}

@@ -1,0 +1,44 @@
+import type { AlertQuery, AlertRow } from '../../contracts/alerts.ts';
+import type { Page } from '../../contracts/paging.ts';
+import { deskScope } from '../auth/policy.ts';
+import { inTransaction } from '../db/inTransaction.ts';
+import { countAlerts, listAlerts as listRecords } from '../db/repositories/alertLists.ts';
+import { listRuns } from '../db/repositories/runs.ts';
+import { listSectors } from '../db/repositories/sectors.ts';
+import type { PersonActor } from './actor.ts';
+import { alertFilter, withStrips } from './listAlerts.ts';
+
+export interface AlertsPage {
+  readonly query: AlertQuery;
+  readonly first: Page<AlertRow>;
+  readonly today: string;
+  readonly sectors: readonly { readonly code: string; readonly label: string }[];
+  readonly ownsBorrowers: boolean;
+  readonly open: number;
+  /** "37 open, 6 new since yesterday. Figures received to …, computed …" */
+  readonly facts: string;
+}
+
+/** The alerts page: a relationship manager who comes without a view sees the own borrowers first. */
+export function showAlertsPage(actor: PersonActor, asked: AlertQuery, isPlain: boolean): Promise<AlertsPage> {
+  const ownsBorrowers = actor.person.roles.includes('relationship manager');
+  const query: AlertQuery = isPlain && ownsBorrowers ? { ...asked, view: 'mine' } : asked;
+  const scope = deskScope(actor.person, 'read borrower');
+  return inTransaction(async (tx) => {
+    const { rows, total } = await listRecords(tx, scope, alertFilter(actor, query), query);
+    const counts = await countAlerts(tx, scope, new Date(actor.now.getTime() - 86_400_000));
+    const [run] = (await listRuns(tx, { page: 1, perPage: 1 })).rows;
+    const computed = run
+      ? ` Last night’s run: ${run.businessDate}, figures known to ${run.knownAt.toISOString().slice(0, 16).replace('T', ' ')} UTC.`
+      : ' No nightly run yet.';
+    return {
+      query,
+      first: { rows: await withStrips(tx, rows, actor.now), page: query.page, perPage: query.perPage, total },
+      today: actor.now.toISOString().slice(0, 10),
+      sectors: (await listSectors(tx)).map(({ code, label }) => ({ code, label })),
+      ownsBorrowers,
+      open: counts.open,
+      facts: `${counts.open} open, ${counts.fresh} new since yesterday.${computed}`,
+    };
+  });
+}
