@@ -1,7 +1,16 @@
 /** Runs the product's processes together: one that fails is started again a few times, then all end. */
 import { spawn } from 'node:child_process';
 import { setTimeout as sleep } from 'node:timers/promises';
-import { concurrently } from 'concurrently';
+import {
+  KillOnSignal,
+  KillOthers,
+  LogError,
+  LogExit,
+  LogOutput,
+  Logger,
+  RestartProcess,
+  createConcurrently,
+} from 'concurrently';
 
 const READY_SECONDS = 60;
 
@@ -22,18 +31,31 @@ function endProcess(pid, signal = 'SIGTERM') {
  * @returns {{ ended: Promise<boolean>, stop: () => void }} `ended`: did all end without a fault?
  */
 export function serve(processes, env) {
-  const { commands, result } = concurrently(
+  const logger = new Logger({ prefixFormat: 'name' });
+  const abortController = new AbortController();
+  const { commands, result } = createConcurrently(
     processes.map(({ name, command }) => ({ name, command, env: { ...env, UNDERKEEL_SUPERVISED: '1' } })),
     {
       spawn: spawnNode,
       kill: endProcess,
-      killOthersOn: ['failure', 'success'],
-      killTimeout: 15_000,
+      logger,
+      outputStream: process.stdout,
+      abortSignal: abortController.signal,
       successCondition: 'all',
-      restartTries: 3,
-      restartDelay: 1_000,
-      prefix: 'name',
-      padPrefix: true,
+      controllers: [
+        new LogError({ logger }),
+        new LogOutput({ logger }),
+        new LogExit({ logger }),
+        new KillOnSignal({ process, abortController }),
+        new RestartProcess({ logger, delay: 1_000, tries: 3 }),
+        new KillOthers({
+          logger,
+          abortController,
+          conditions: ['failure', 'success'],
+          killSignal: 'SIGTERM',
+          timeoutMs: 15_000,
+        }),
+      ],
     },
   );
   return {

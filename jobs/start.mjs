@@ -31,7 +31,9 @@ try {
 } catch (error) {
   if (!told.signal.aborted) {
     exitCode = 1;
-    console.error(error instanceof StartFault ? `\n${error.message}` : error);
+    // A step that ended with a code has said itself what was wrong.
+    const isSaid = error instanceof StartFault || error.exitCode !== undefined;
+    console.error(isSaid ? `\n${error.message}` : error);
   }
 }
 for (const end of endings.reverse())
@@ -84,10 +86,11 @@ function checkNode() {
   );
 }
 
-const alreadyThere = ({ command, address }) =>
-  address
+function alreadyThere({ command, address }) {
+  return address
     ? `Underkeel is already running at ${address}`
     : `${command} is using this data folder. Wait until it has ended, then start again.`;
+}
 
 async function prepareSettings({ dataFolder, host, port, sinkPort, appUrl }) {
   const { secrets, startLocalDatabase } = await import('./localDatabase.mjs');
