@@ -193,9 +193,8 @@ function ordinaryLevels(
   { kind, usual }: { readonly kind: LevelKind; readonly usual: Usual },
   { nextQuarterEnd, random }: CovenantContext,
 ): DemoLevel[] {
-  // A cover below zero is interest earned, not paid: nothing to set a level by.
   const valuesOf = (past: readonly PastTest[]): number[] =>
-    past.flatMap(({ value }) => (value === null || value < 0 ? [] : [value]));
+    past.flatMap(({ value }) => (value === null ? [] : [value]));
   const recent = valuesOf(tests.slice(-5));
   const room = random.between(0.2, 0.34);
   const now = within(usual, levelWithRoom(recent, room, kind));

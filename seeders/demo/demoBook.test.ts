@@ -181,9 +181,12 @@ describe('the stories', () => {
     expect(borrower.quarters[15]?.lines.senior_debt).toBeGreaterThan(0);
   });
 
-  test('net cash: more cash than debt, and earnings', () => {
+  test('net cash: more cash than debt, earnings, and no interest to cover', () => {
     const borrower = oneOf('net cash');
-    for (const quarter of borrower.quarters) expect(netDebt(quarter)).toBeLessThan(0);
+    for (const quarter of borrower.quarters) {
+      expect(netDebt(quarter)).toBeLessThan(0);
+      expect(quarter.lines.interest_paid).toBe(0);
+    }
     expect(yearEbitda(borrower.quarters, 15)).toBeGreaterThan(0);
   });
 

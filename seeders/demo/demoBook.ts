@@ -6,7 +6,7 @@ import {
   type PlainDate,
 } from '../../src/core/calendar/plainDate.ts';
 import { leiCheckDigits } from '../../src/core/lei.ts';
-import { BORROWER_ROWS, type BorrowerRow } from './borrowerTable.ts';
+import { BORROWER_ROWS, type BorrowerRow, type Scenario } from './borrowerTable.ts';
 import { covenantsFor } from './covenantPlans.ts';
 import type { DemoBorrower, DemoDelivery, DemoFacility } from './demoBorrower.ts';
 import { businessDayBefore, latestReportedQuarterEnd, quarterEndOnOrAfter } from './demoDays.ts';
@@ -18,11 +18,18 @@ import { SECTOR_PROFILES } from './sectorProfiles.ts';
 import { tradingYears } from './tradingYears.ts';
 import { ORDINARY, quartersUpTo, type CalendarQuarter } from './tradingPlan.ts';
 
-export function demoBook(seedDay: PlainDate): DemoBorrower[] {
+export function demoBook(
+  seedDay: PlainDate,
+  wanted: (row: BorrowerRow) => boolean = () => true,
+): DemoBorrower[] {
   const latest = latestReportedQuarterEnd(seedDay);
   const calendar = quartersUpTo(latest);
-  return BORROWER_ROWS.map((row, index) => demoBorrower(row, index, { seedDay, latest, calendar }));
+  return BORROWER_ROWS.flatMap((row, index) =>
+    wanted(row) ? demoBorrower(row, index, { seedDay, latest, calendar }) : [],
+  );
 }
+
+export const LATE: readonly Scenario[] = ['late', 'late within grace'];
 
 interface BookDays {
   readonly seedDay: PlainDate;
@@ -58,7 +65,7 @@ function demoBorrower(
     random.between(0.9, 2.6),
   );
   const all = tradingYears(plan);
-  const isLate = row.scenario === 'late' || row.scenario === 'late within grace';
+  const isLate = LATE.includes(row.scenario);
   const quarters = isLate ? all.slice(0, -1) : all;
   const firstTestIndex = random.count(5, 7);
   const usualDelayDays = random.count(24, 41);
@@ -74,7 +81,7 @@ function demoBorrower(
     fiscalYearEndMonth,
     framework: row.name.endsWith(' plc') ? 'IFRS' : 'local GAAP',
     desk: row.desk,
-    managerNumber: index % 2,
+    managerNumber: (index + 1) % 2,
     quarters,
     deliveries: deliveriesOf(row, quarters, fiscalYearEndMonth, usualDelayDays),
     owed: isLate ? (all.at(-1) ?? null) : null,
@@ -165,7 +172,7 @@ function facilitiesOf(
   const startsOn = addDays(before.quarterEnd, -random.count(5, 70));
   const security = random.oneOf(SECURITIES);
   const marginBps = random.count(8, 17) * 25;
-  return [
+  const facilities: DemoFacility[] = [
     {
       name: 'Term loan A',
       kind: 'term loan',
@@ -187,4 +194,5 @@ function facilitiesOf(
       security,
     },
   ];
+  return facilities.filter(({ limit }) => limit > 0);
 }

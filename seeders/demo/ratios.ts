@@ -50,7 +50,7 @@ export const totalLeverage = (quarters: readonly DemoQuarter[], index: number): 
 export const interestCover = (quarters: readonly DemoQuarter[], index: number): number | null =>
   over(
     yearEbitda(quarters, index),
-    lastFour(quarters, index, ({ lines }) => lines.interest_expense - lines.interest_income),
+    lastFour(quarters, index, ({ lines }) => -lines.interest_paid),
   );
 
 export const currentRatio = (quarters: readonly DemoQuarter[], index: number): number =>

@@ -80,7 +80,7 @@ export const SCENARIO_PLANS: Readonly<Record<Scenario, ScenarioPlan>> = {
     },
     sizedTo: null,
   },
-  'net cash': { changes: { openingCashShare: 0.24, dividendShare: 0.2, debtToRevenue: 0.3 }, sizedTo: null },
+  'net cash': { changes: { openingCashShare: 0.24, dividendShare: 0.2 }, sizedTo: null },
   'quality fell': {
     changes: {
       growthPerYear: 0.05,

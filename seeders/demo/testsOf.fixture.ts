@@ -49,14 +49,13 @@ export interface Room {
   readonly roomWithoutAddBacks: number;
 }
 
-/** Of each test that has a level, oldest first. A cover with no interest to pay leaves all the room there is. */
+/** Of each test that has a level, oldest first. With no interest to pay a cover leaves all the room there is. */
 export function roomsOf(borrower: DemoBorrower, measure: string): Room[] {
   const covenant = borrower.covenants.find((one) => one.measure === measure);
   if (!covenant) throw new Error(`${borrower.name} has no ${measure}`);
   const isMaximum = covenant.operator.startsWith('<');
   const roomOf = (value: number | null, level: number): number => {
-    if (value === null) return Number.NaN;
-    if (measure === 'interest-cover' && value < 0) return Number.POSITIVE_INFINITY;
+    if (value === null) return measure === 'interest-cover' ? Number.POSITIVE_INFINITY : Number.NaN;
     return isMaximum ? 1 - value / level : value / level - 1;
   };
   return testsOf(borrower, covenant).flatMap(({ level, value, withoutAddBacks }) =>

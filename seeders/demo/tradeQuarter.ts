@@ -173,14 +173,14 @@ function move(
   const repaid = scheduled + leasesRepaid + swept;
   const flows = {
     cfo,
-    capex: -capex,
-    capitalised_costs_paid: -capitalised,
-    cfi: -capex - capitalised,
+    capex: 0 - capex,
+    capitalised_costs_paid: 0 - capitalised,
+    cfi: 0 - capex - capitalised,
     debt_drawn: drawn,
-    debt_repaid: -repaid,
-    dividends_paid: -dividends,
+    debt_repaid: 0 - repaid,
+    dividends_paid: 0 - dividends,
     cff: drawn - repaid - dividends,
-    interest_paid: -income.interest_expense,
+    interest_paid: 0 - income.interest_expense,
     tax_paid: working.taxPayable - opening.taxPayable - income.income_tax,
     scheduled_principal: scheduled,
   };

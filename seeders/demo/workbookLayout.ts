@@ -1,0 +1,170 @@
+/** How a demo borrower's workbook is laid out: three sheets, a row a line, a column a quarter. */
+import { plainDate } from '../../src/core/calendar/plainDate.ts';
+import type { StatementPart } from '../../src/core/statements/lineItems.ts';
+import {
+  BALANCE_LINES,
+  CASH_FLOW_LINES,
+  INCOME_LINES,
+  type DemoLine,
+  type DemoQuarter,
+} from './demoLines.ts';
+
+const LABELS: Readonly<Record<DemoLine, string>> = {
+  revenue: 'Revenue',
+  cogs: 'Cost of sales',
+  gross_profit: 'Gross profit',
+  other_operating_income: 'Other operating income',
+  sga: 'Selling, general and administrative expenses',
+  research_development: 'Research and development',
+  rent_expense: 'Rent',
+  other_operating_expense: 'Other operating expenses',
+  depreciation: 'Depreciation',
+  amortisation: 'Amortisation',
+  ebit: 'Operating profit',
+  interest_expense: 'Interest expense',
+  interest_income: 'Interest income',
+  profit_before_tax: 'Profit before tax',
+  income_tax: 'Income tax',
+  net_income: 'Net income',
+  cash: 'Cash and cash equivalents',
+  receivables: 'Trade receivables',
+  inventory: 'Inventories',
+  other_current_assets: 'Other current assets',
+  current_assets: 'Total current assets',
+  ppe_gross: 'Property, plant and equipment, gross',
+  ppe_net: 'Property, plant and equipment, net',
+  intangibles: 'Intangible assets',
+  goodwill: 'Goodwill',
+  total_assets: 'Total assets',
+  payables: 'Trade payables',
+  accrued_liabilities: 'Accrued liabilities',
+  tax_payable: 'Tax payable',
+  short_term_debt: 'Short-term debt',
+  current_liabilities: 'Total current liabilities',
+  senior_debt: 'Senior debt, long-term',
+  junior_debt: 'Subordinated debt, long-term',
+  lease_liabilities: 'Lease liabilities',
+  total_liabilities: 'Total liabilities',
+  retained_earnings: 'Retained earnings',
+  equity: 'Total equity',
+  revolver_drawn: 'Revolver drawn',
+  revolver_commitment: 'Revolver commitment',
+  cfo: 'Net cash from operating activities',
+  capex: 'Capital expenditure',
+  capitalised_costs_paid: 'Capitalised development costs paid',
+  cfi: 'Net cash from investing activities',
+  debt_drawn: 'Debt drawn',
+  debt_repaid: 'Debt repaid',
+  dividends_paid: 'Dividends paid',
+  cff: 'Net cash from financing activities',
+  interest_paid: 'Interest paid',
+  tax_paid: 'Tax paid',
+  scheduled_principal: 'Scheduled principal',
+};
+
+export interface SheetLayout {
+  readonly name: string;
+  readonly part: StatementPart;
+  readonly title: string;
+  /** 0 is a balance at an instant. */
+  readonly months: 0 | 3;
+  readonly lines: readonly DemoLine[];
+  /** Lines from here on stand under a heading "Memorandum". */
+  readonly memorandumFrom: DemoLine | null;
+}
+
+export const SHEETS: readonly SheetLayout[] = [
+  {
+    name: 'Income statement',
+    part: 'income',
+    title: 'Income statement for the 3 months ended',
+    months: 3,
+    lines: INCOME_LINES,
+    memorandumFrom: null,
+  },
+  {
+    name: 'Balance sheet',
+    part: 'balance',
+    title: 'Balance sheet at',
+    months: 0,
+    lines: BALANCE_LINES,
+    memorandumFrom: 'revolver_drawn',
+  },
+  {
+    name: 'Cash flow',
+    part: 'cash-flow',
+    title: 'Cash flow statement for the 3 months ended',
+    months: 3,
+    lines: CASH_FLOW_LINES,
+    memorandumFrom: 'interest_paid',
+  },
+];
+
+/** One row of a sheet as it is written: a text, or a line with its amounts in thousands. */
+export type SheetRow =
+  | { readonly row: number; readonly text: string }
+  | {
+      readonly row: number;
+      readonly line: DemoLine;
+      readonly label: string;
+      readonly amounts: readonly number[];
+    };
+
+export interface FilledSheet {
+  readonly layout: SheetLayout;
+  readonly headingRow: number;
+  /** From column B on. */
+  readonly headings: readonly string[];
+  readonly rows: readonly SheetRow[];
+}
+
+const HEADING_ROW = 5;
+
+/** The sheet's rows; a line that the borrower has never carried is left out, as borrowers do. */
+export function filledSheet(
+  layout: SheetLayout,
+  {
+    borrowerName,
+    unit,
+    quarters,
+  }: { borrowerName: string; unit: string | null; quarters: readonly DemoQuarter[] },
+): FilledSheet {
+  const rows: SheetRow[] = [borrowerName, layout.title, ...(unit === null ? [] : [unit])].map(
+    (text, index) => ({
+      row: index + 1,
+      text,
+    }),
+  );
+  let row = HEADING_ROW + 1;
+  for (const line of layout.lines) {
+    const amounts = quarters.map(({ lines }) => lines[line]);
+    if (amounts.every((amount) => amount === 0)) continue;
+    if (line === layout.memorandumFrom) {
+      rows.push({ row: row + 1, text: 'Memorandum' });
+      row += 2;
+    }
+    rows.push({ row, line, label: LABELS[line], amounts });
+    row += 1;
+  }
+  return {
+    layout,
+    headingRow: HEADING_ROW,
+    headings: quarters.map(({ quarterEnd }) => dayInWords(quarterEnd)),
+    rows,
+  };
+}
+
+const MONTHS = ['March', 'June', 'September', 'December'] as const;
+
+/** '30 September 2026'. */
+function dayInWords(quarterEnd: string): string {
+  const [year, month, day] = plainDate(quarterEnd).split('-').map(Number);
+  return `${day} ${MONTHS[(month ?? 3) / 3 - 1]} ${year}`;
+}
+
+/** 'B' is 0. */
+export function columnLetter(index: number): string {
+  const letter = String.fromCharCode('B'.charCodeAt(0) + index);
+  if (!/^[B-Z]$/.test(letter)) throw new RangeError(`column ${index} lies beyond Z`);
+  return letter;
+}
