@@ -1,13 +1,17 @@
 /** THE WALK: statements, measures, covenant tests, reporting quality, patterns, alerts. */
 import type { AlertFinding } from './alerts/alert.ts';
+import { findingsOf } from './alerts/alertRules.ts';
 import type { BorrowerInputs } from './borrowerInputs.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
-import type { JustPassing } from './patterns/justPassing.ts';
-import type { Policy } from './policy.ts';
+import { testDates } from './covenants/levels.ts';
+import { smallestHeadroom, type SmallestHeadroom } from './covenants/smallestHeadroom.ts';
+import { testCovenant } from './covenants/testCovenant.ts';
+import { justPassingOf, type JustPassing } from './patterns/justPassing.ts';
+import { METHOD_VERSION, type Policy } from './policy.ts';
 import type { CrossSection } from './quality/crossSection.ts';
+import { reportingQuality } from './quality/reportingQuality.ts';
 import type { ReportingQuality } from './quality/score.ts';
-import type { Decimal } from './money/decimal.ts';
 
 export interface Assessment {
   readonly borrowerId: number;
@@ -16,15 +20,51 @@ export interface Assessment {
   readonly policyVersion: number;
   /** Oldest first within a covenant. */
   readonly tests: readonly CovenantTest[];
-  readonly smallestHeadroom: { readonly covenantId: number; readonly mayFall: Decimal } | null;
+  /** Against the levels of the test dates; later levels stand with each test, apart. */
+  readonly smallestHeadroom: SmallestHeadroom | null;
   readonly quality: ReportingQuality;
   readonly patterns: readonly JustPassing[];
   readonly findings: readonly AlertFinding[];
 }
 
-export declare function assess(
+/**
+ * Everything that is said of one borrower on a day, from what was known by that day. The same arguments give the
+ * same answer, for ever: the clock is `asOf`, the peers are the stored cross-section.
+ *
+ * @example assess(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').findings
+ */
+export function assess(
   inputs: BorrowerInputs,
   crossSection: CrossSection,
   policy: Policy,
   asOf: PlainDate,
-): Assessment;
+): Assessment {
+  const tests = allTests(inputs, policy, asOf);
+  const quality = reportingQuality(inputs, crossSection, policy, asOf);
+  const covenantIds = inputs.covenants.map(({ id }) => id);
+  const patterns = covenantIds.map((id) => justPassingOf(tests, id, policy.repeated.ofLast));
+  return {
+    borrowerId: inputs.borrowerId,
+    asOf,
+    methodVersion: METHOD_VERSION,
+    policyVersion: policy.version,
+    tests,
+    smallestHeadroom: smallestHeadroom(tests, covenantIds),
+    quality,
+    patterns,
+    findings: findingsOf({ inputs, tests, quality, patterns, policy, asOf }),
+  };
+}
+
+/** Every test date up to the day; those before the first figures that are kept here are left out. */
+function allTests(inputs: BorrowerInputs, policy: Policy, asOf: PlainDate): readonly CovenantTest[] {
+  const { covenants, statements, fiscalYearEndMonth } = inputs;
+  return covenants.flatMap((covenant) => {
+    const periodEnds = statements
+      .filter(({ scope }) => scope === covenant.scope)
+      .map(({ periodEnd }) => periodEnd);
+    return testDates(covenant, asOf)
+      .filter((date) => periodEnds.length === 0 || periodEnds.some((periodEnd) => periodEnd <= date))
+      .map((date) => testCovenant(covenant, statements, date, fiscalYearEndMonth, policy, asOf));
+  });
+}

@@ -10,7 +10,12 @@ export const currentRatio: Measure = {
   unit: 'times',
   shape: 'cover',
   earningsSide: null,
-  words: { carrier: 'current assets', charge: 'current liabilities' },
+  words: {
+    subject: 'Current assets',
+    otherSide: 'current liabilities',
+    carrier: 'current assets',
+    charge: 'current liabilities',
+  },
   measure: ({ statements, date }) => {
     const numerator = balanceAt(statements, 'current_assets', date);
     const denominator = balanceAt(statements, 'current_liabilities', date);

@@ -19,7 +19,7 @@ export const interestCover: Measure = {
   unit: 'times',
   shape: 'cover',
   earningsSide: 'numerator',
-  words: { carrier: 'earnings', charge: 'charge' },
+  words: { subject: 'EBITDA', otherSide: 'interest', carrier: 'earnings', charge: 'charge' },
   measure: (request) => {
     const [earnings, interest] = [adjustedEbitda(request), netCashInterest(request)];
     return {

@@ -13,8 +13,12 @@ export type MeasureShape = 'burden' | 'cover' | 'amount';
 /** Which side the borrower's earnings stand on, if any. */
 export type EarningsSide = 'numerator' | 'denominator' | null;
 
-/** Words for the cases that have no ratio, per measure. */
-export interface ShapeWords {
+/** Words of one measure, as they stand in sentences. */
+export interface MeasureWords {
+  /** The amount that headroom is told of: 'EBITDA', 'Liquidity'. */
+  readonly subject: string;
+  /** What stands on the other side: 'debt', 'interest'; null for an amount. */
+  readonly otherSide: string | null;
   /** What carries a burden: 'earnings', 'net worth'. */
   readonly carrier: string;
   /** What is covered: 'charge', 'current liabilities'. */
@@ -36,6 +40,6 @@ export interface Measure {
   readonly unit: MeasureUnit;
   readonly shape: MeasureShape;
   readonly earningsSide: EarningsSide;
-  readonly words: ShapeWords;
+  readonly words: MeasureWords;
   readonly measure: (request: MeasureRequest) => Measured;
 }

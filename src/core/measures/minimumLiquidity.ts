@@ -30,7 +30,7 @@ export const minimumLiquidity: Measure = {
   unit: 'money',
   shape: 'amount',
   earningsSide: null,
-  words: { carrier: 'liquidity', charge: 'charge' },
+  words: { subject: 'Liquidity', otherSide: null, carrier: 'liquidity', charge: 'charge' },
   measure: (request) => {
     const { statements, date, definition } = request;
     const cash = balanceAt(statements, 'cash', date);

@@ -9,7 +9,7 @@ export const netLeverage: Measure = {
   unit: 'times',
   shape: 'burden',
   earningsSide: 'denominator',
-  words: { carrier: 'earnings', charge: 'charge' },
+  words: { subject: 'EBITDA', otherSide: 'net debt', carrier: 'earnings', charge: 'charge' },
   measure: (request) => {
     const [debt, earnings] = [netDebtOn(request), adjustedEbitda(request)];
     return {

@@ -9,7 +9,7 @@ export const totalLeverage: Measure = {
   unit: 'times',
   shape: 'burden',
   earningsSide: 'denominator',
-  words: { carrier: 'earnings', charge: 'charge' },
+  words: { subject: 'EBITDA', otherSide: 'debt', carrier: 'earnings', charge: 'charge' },
   measure: (request) => {
     const [debt, earnings] = [totalDebt(request), adjustedEbitda(request)];
     return {

@@ -2,7 +2,14 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { decimal } from './decimal.ts';
 import { parseMoney } from './parseMoney.ts';
-import { formatLevel, formatMoney, formatMoneyInFull, formatRatio, formatShare } from './print.ts';
+import {
+  formatLevel,
+  formatMoney,
+  formatMoneyInFull,
+  formatMoneyLevel,
+  formatRatio,
+  formatShare,
+} from './print.ts';
 
 describe('a ratio', () => {
   test('has two decimals and an x', () => {
@@ -70,6 +77,15 @@ describe('money', () => {
 
   test('just short of a minimum is not printed as the minimum', () => {
     expect(formatMoney(decimal(4_999_600), { beside: decimal(5_000_000) })).toBe('4.9996m');
+  });
+
+  test.each([
+    ['5000000', '5.0m'],
+    ['5250000', '5.25m'],
+    ['750', '750'],
+    ['1234567.89', '1.23456789m'],
+  ])('that is a level of %s keeps every digit: %s', (level, printed) => {
+    expect(formatMoneyLevel(decimal(level))).toBe(printed);
   });
 
   test('in full is read back as the same amount', () => {

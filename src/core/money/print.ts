@@ -23,12 +23,22 @@ export const formatRatio = (ratio: Decimal, { places = 2, beside = null }: Print
   `${signed(ratio, placesThatShowTheSide(ratio, beside, places))}x`;
 
 /**
- * A level as the agreement states it: every digit it has, two at least.
+ * A ratio's level as the agreement states it: every digit it has, two at least.
  *
  * @example formatLevel(decimal('3.5')) // => '3.50x'
  */
 export const formatLevel = (level: Decimal): string =>
   formatRatio(level, { places: Math.max(2, level.dp()) });
+
+/**
+ * An amount's level in short, with every digit it has.
+ *
+ * @example formatMoneyLevel(decimal(5_250_000)) // => '5.25m'
+ */
+export function formatMoneyLevel(level: Decimal): string {
+  const scaled = level.div(unitOf(level, 1)?.size ?? 1);
+  return formatMoney(level, { places: Math.max(1, scaled.dp()) });
+}
 
 /**
  * A share of one in per cent, '1.4 %'. A share that is not nought is never printed as nought.
@@ -46,20 +56,21 @@ export function formatShare(share: Decimal, { places = 1, beside = null }: Print
 }
 
 /**
+ * A score of nought to a hundred, whole unless a line lies beside it.
+ *
+ * @example formatScore(decimal('29.6'), { beside: decimal(30) }) // => '29.6'
+ */
+export const formatScore = (score: Decimal, { places = 0, beside = null }: PrintOptions = {}): string =>
+  signed(score, placesThatShowTheSide(score, beside, places));
+
+/**
  * An amount in short, '12.4m'; below a thousand it is printed whole. Whole currency units in.
  *
  * @example formatMoney(decimal(12_440_000)) // => '12.4m'
  * @example formatMoney(decimal(4_999_600), { beside: decimal(5_000_000) }) // => '4.9996m'
  */
 export function formatMoney(amount: Decimal, { places = 1, beside = null }: PrintOptions = {}): string {
-  // Three digits more than printed, so that 999,960 is 1.0m and not 1000.0k.
-  const unit = UNITS.find(({ size }) =>
-    amount
-      .abs()
-      .div(size)
-      .toDecimalPlaces(places + 3)
-      .gte(1),
-  );
+  const unit = unitOf(amount, places);
   if (!unit) return signed(amount, placesThatShowTheSide(amount, beside, 0));
   const scaled = amount.div(unit.size);
   const apart = placesThatShowTheSide(scaled, beside && beside.div(unit.size), places);
@@ -82,6 +93,16 @@ const UNITS = [
   { size: 1_000_000, suffix: 'm' },
   { size: 1_000, suffix: 'k' },
 ] as const;
+
+// Three digits more than printed, so that 999,960 is 1.0m and not 1000.0k.
+const unitOf = (amount: Decimal, places: number) =>
+  UNITS.find(({ size }) =>
+    amount
+      .abs()
+      .div(size)
+      .toDecimalPlaces(places + 3)
+      .gte(1),
+  );
 
 function placesThatShowTheSide(value: Decimal, line: Decimal | null, fewest: number): number {
   if (!line || value.eq(line)) return fewest;

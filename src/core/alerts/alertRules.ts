@@ -1,0 +1,32 @@
+/** The register: one rule a kind. To add one: a file, a line here, a kind in alert.ts. */
+import type { AlertFinding } from './alert.ts';
+import { justPassingRepeated } from './justPassingRepeated.ts';
+import { metOnlyWithAddBacks } from './metOnlyWithAddBacks.ts';
+import { priorFiguresRestated } from './priorFiguresRestated.ts';
+import { qualityFell } from './qualityFell.ts';
+import { qualityWeak } from './qualityWeak.ts';
+import type { AlertContext, AlertRule } from './rule.ts';
+import { statementLate } from './statementLate.ts';
+import { stepDownAhead } from './stepDownAhead.ts';
+import { testNotMet } from './testNotMet.ts';
+import { thinHeadroom } from './thinHeadroom.ts';
+
+const ALERT_RULES: readonly AlertRule[] = [
+  testNotMet,
+  thinHeadroom,
+  justPassingRepeated,
+  metOnlyWithAddBacks,
+  stepDownAhead,
+  qualityFell,
+  qualityWeak,
+  priorFiguresRestated,
+  statementLate,
+];
+
+/**
+ * What every rule finds. The rules and their severities are the desk's policy; none speaks of intent or of chance.
+ *
+ * @example findingsOf({ inputs, tests, quality, patterns, policy, asOf }).map(({ kind }) => kind)
+ */
+export const findingsOf = (context: AlertContext): readonly AlertFinding[] =>
+  ALERT_RULES.flatMap((rule) => rule(context));

@@ -1,0 +1,67 @@
+import { formatDay } from '../calendar/printDay.ts';
+import { isMaximum } from '../covenants/covenant.ts';
+import { isNotMet, type CovenantTest } from '../covenants/covenantTest.ts';
+import { testedInWords, testInWords } from '../covenants/wording.ts';
+import { formatShare } from '../money/print.ts';
+import type { JustPassing } from '../patterns/justPassing.ts';
+import type { Policy } from '../policy.ts';
+import { liveTests, type AlertContext, type AlertRule } from './rule.ts';
+import { testEvidence } from './testEvidence.ts';
+
+/**
+ * So many of the last tests ended just passing: an observation, k of n, nothing about chance. A note; soon where
+ * the latest test is met only with add-backs, or the reporting quality is below the policy's line.
+ */
+export const justPassingRepeated: AlertRule = (context) =>
+  liveTests(context).flatMap(({ covenant, test }) => {
+    const pattern = context.patterns.find(({ covenantId }) => covenantId === covenant.id);
+    const lastInBand = pattern?.testDates.at(-1);
+    if (!pattern || !lastInBand || pattern.inBand < context.policy.repeated.atLeast) return [];
+    return [
+      {
+        kind: 'just passing, repeated',
+        covenantId: covenant.id,
+        severity: isLeaning(test, context) ? 'soon' : 'note',
+        factDate: lastInBand,
+        sentence: `${testInWords(test)}. ${countInWords(pattern)}`,
+        wouldChange: wouldChange(test, context.policy),
+        evidence: [
+          { label: 'Just passing', value: `${pattern.inBand} of the last ${pattern.ofLast} tests` },
+          { label: 'On', value: pattern.testDates.map(formatDay).join(', ') },
+          ...testEvidence(covenant, test),
+        ],
+      },
+    ];
+  });
+
+function isLeaning({ counterfactuals, outcome }: CovenantTest, { quality, policy }: AlertContext): boolean {
+  const needsAddBacks = !isNotMet(outcome) && counterfactuals.some((one) => isNotMet(one.outcome));
+  return needsAddBacks || (quality.headline !== null && quality.headline < policy.repeated.weakBelow);
+}
+
+const ORDINALS = [
+  '',
+  '',
+  'Second',
+  'Third',
+  'Fourth',
+  'Fifth',
+  'Sixth',
+  'Seventh',
+  'Eighth',
+  'Ninth',
+  'Tenth',
+];
+
+function countInWords({ inBand, ofLast, run }: JustPassing): string {
+  const count = `${inBand} of the last ${ofLast}`;
+  if (run < 2) return `${count} tests just passing.`;
+  return `${ORDINALS[run] ?? `${run}th`} test in a row just passing, ${count}.`;
+}
+
+function wouldChange({ measure, operator, level }: CovenantTest, { justPassingBand: band }: Policy): string {
+  const share = formatShare(band, { places: 0 });
+  if (!level) return `Results ${share} of the level or more away from it.`;
+  const edge = isMaximum(operator) ? level.minus(level.times(band)) : level.plus(level.times(band));
+  return `Next tests at ${testedInWords(measure, edge, level)} or ${isMaximum(operator) ? 'less' : 'more'}, ${share} from the level.`;
+}

@@ -1,0 +1,37 @@
+/** The amount at which a test would stand elsewhere, in words: what would change an alert. */
+import type { CovenantTest } from '../covenants/covenantTest.ts';
+import { amountAtLevel } from '../covenants/headroom.ts';
+import { MEASURES } from '../measures/index.ts';
+import { decimal, type Decimal } from '../money/decimal.ts';
+import { formatMoney } from '../money/print.ts';
+
+/** The borrower's earnings in the test, or the tested amount where it has none. */
+export const subjectAmount = ({ measure, numerator, denominator }: CovenantTest): Decimal | null =>
+  MEASURES[measure].earningsSide === 'denominator' ? denominator : numerator;
+
+/**
+ * The earnings (or tested amount) at which a share of them is left before the test is not met; nought is at the
+ * level itself. Null where the sides are not known.
+ */
+export function amountThatLeaves(test: CovenantTest, level: Decimal, share: Decimal): Decimal | null {
+  if (!test.numerator) return null;
+  const { numerator, denominator } = test;
+  const atLevel = amountAtLevel(MEASURES[test.measure].shape, { numerator, denominator }, level);
+  return atLevel && atLevel.div(decimal(1).minus(share));
+}
+
+/** 'EBITDA of 12.9m instead of 12.0m (0.9m more)'. */
+export function insteadOf(test: CovenantTest, needed: Decimal): string {
+  const { subject } = MEASURES[test.measure].words;
+  const amount = subjectAmount(test);
+  if (!amount) return `${subject} of ${formatMoney(needed)}`;
+  const by = needed.minus(amount);
+  return `${subject} of ${formatMoney(needed, { beside: amount })} instead of ${formatMoney(amount, { beside: needed })} (${formatMoney(by.abs())} ${by.lt(0) ? 'less' : 'more'})`;
+}
+
+/** ', or 3.0m less net debt', where the other side can be named and would have to shrink. */
+export function orOtherSide({ measure, headroom }: CovenantTest): string {
+  const { otherSide } = MEASURES[measure].words;
+  const { otherSideMayRise: rise } = headroom;
+  return otherSide && rise?.lt(0) ? `, or ${formatMoney(rise.abs())} less ${otherSide}` : '';
+}

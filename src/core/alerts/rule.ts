@@ -1,0 +1,33 @@
+import type { BorrowerInputs } from '../borrowerInputs.ts';
+import type { PlainDate } from '../calendar/plainDate.ts';
+import type { Covenant } from '../covenants/covenant.ts';
+import type { CovenantTest } from '../covenants/covenantTest.ts';
+import { latestLiveTest } from '../covenants/latestLiveTest.ts';
+import type { JustPassing } from '../patterns/justPassing.ts';
+import type { Policy } from '../policy.ts';
+import type { ReportingQuality } from '../quality/score.ts';
+import type { AlertFinding } from './alert.ts';
+
+/** What every rule may look at. */
+export interface AlertContext {
+  readonly inputs: BorrowerInputs;
+  /** Oldest first within a covenant. */
+  readonly tests: readonly CovenantTest[];
+  readonly quality: ReportingQuality;
+  readonly patterns: readonly JustPassing[];
+  readonly policy: Policy;
+  readonly asOf: PlainDate;
+}
+
+/** One kind of alert: what of it is found, or nothing. */
+export type AlertRule = (context: AlertContext) => readonly AlertFinding[];
+
+/** Each covenant with its latest live test, where it has one. */
+export const liveTests = ({
+  inputs,
+  tests,
+}: AlertContext): readonly { readonly covenant: Covenant; readonly test: CovenantTest }[] =>
+  inputs.covenants.flatMap((covenant) => {
+    const test = latestLiveTest(tests, covenant.id);
+    return test ? [{ covenant, test }] : [];
+  });

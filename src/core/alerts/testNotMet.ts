@@ -1,0 +1,35 @@
+import { isNotMet, type CovenantTest } from '../covenants/covenantTest.ts';
+import type { Covenant } from '../covenants/covenant.ts';
+import { formatDay } from '../calendar/printDay.ts';
+import { ZERO } from '../money/decimal.ts';
+import { testInWords } from '../covenants/wording.ts';
+import { amountThatLeaves, insteadOf, orOtherSide } from './neededAmount.ts';
+import { liveTests, type AlertRule } from './rule.ts';
+import { testEvidence } from './testEvidence.ts';
+
+/** The latest live test is not met, in any form: urgent. A waiver is said, and does not make it met. */
+export const testNotMet: AlertRule = (context) =>
+  liveTests(context)
+    .filter(({ test }) => isNotMet(test.outcome))
+    .map(({ covenant, test }) => ({
+      kind: 'test not met',
+      covenantId: covenant.id,
+      severity: 'urgent',
+      factDate: test.testDate,
+      sentence: sentenceOf(covenant, test),
+      wouldChange: wouldChange(test),
+      evidence: testEvidence(covenant, test),
+    }));
+
+function sentenceOf(covenant: Covenant, test: CovenantTest): string {
+  const waiver = covenant.waivers.find(({ testDate }) => testDate === test.testDate);
+  const waived =
+    test.outcome === 'not met, waived' && waiver ? ` Waived on ${formatDay(waiver.grantedOn)}.` : '';
+  const why = test.tested ? '' : ` (${test.reason ?? 'no ratio'})`;
+  return `${testInWords(test)}${why}: not met on our figures.${waived}`;
+}
+
+function wouldChange(test: CovenantTest): string {
+  const needed = test.level && amountThatLeaves(test, test.level, ZERO);
+  return needed ? `${insteadOf(test, needed)}${orOtherSide(test)}.` : 'A level above nought.';
+}

@@ -1,0 +1,35 @@
+import type { CovenantTest } from '../covenants/covenantTest.ts';
+import { testInWords } from '../covenants/wording.ts';
+import { MEASURES } from '../measures/index.ts';
+import { formatMoney, formatShare } from '../money/print.ts';
+import type { Policy } from '../policy.ts';
+import { amountThatLeaves, insteadOf } from './neededAmount.ts';
+import { liveTests, type AlertRule } from './rule.ts';
+import { testEvidence } from './testEvidence.ts';
+
+/** The latest live test is met and earnings (or the tested amount) may fall less than the policy's share: soon. */
+export const thinHeadroom: AlertRule = (context) =>
+  liveTests(context)
+    .filter(({ test }) => test.outcome === 'met, thin')
+    .map(({ covenant, test }) => ({
+      kind: 'thin headroom',
+      covenantId: covenant.id,
+      severity: 'soon',
+      factDate: test.testDate,
+      sentence: sentenceOf(test, context.policy),
+      wouldChange: wouldChange(test, context.policy),
+      evidence: testEvidence(covenant, test),
+    }));
+
+function sentenceOf(test: CovenantTest, { thinBelow }: Policy): string {
+  const { mayFall, moneyLeft } = test.headroom;
+  const share = mayFall ? formatShare(mayFall, { beside: thinBelow }) : 'nothing';
+  const money = moneyLeft ? ` (${formatMoney(moneyLeft)})` : '';
+  return `${testInWords(test)}. ${MEASURES[test.measure].words.subject} may fall ${share}${money}.`;
+}
+
+function wouldChange(test: CovenantTest, { thinBelow }: Policy): string {
+  const needed = test.level && amountThatLeaves(test, test.level, thinBelow);
+  const left = `leaves ${formatShare(thinBelow, { places: 0 })}`;
+  return needed ? `${insteadOf(test, needed)} ${left}.` : `A result that ${left}.`;
+}
