@@ -54,7 +54,7 @@ function Bed({ drawing: { frame, steps, shoalY } }: { readonly drawing: StripDra
           d={`M${step.x} ${limitY}V${(limitY + bedBottom) / 2}`}
         />
       ))}
-      <path className="strip-limit" strokeWidth={line} d={`M0 ${limitY}H${width}`} />
+      <path className="strip-limit" strokeWidth={line} d={`M0 ${limitY + line / 2}H${width}`} />
     </>
   );
 }
@@ -74,9 +74,7 @@ function Sounding({
       {shape !== 'cross' && (
         <path className="strip-lead" strokeWidth="1" d={`M${x} 0V${Math.max(y - radius, 0)}`} />
       )}
-      {cut === 'above' && (
-        <Cut x={x} y={Math.max(y - radius - frame.ring, 2)} reach={frame.ring} line={frame.line} />
-      )}
+      {cut === 'above' && <Cut x={x} y={y - radius - frame.ring - 1} reach={frame.ring} line={frame.line} />}
       <Shape mark={mark} line={frame.line} />
       {cut === 'below' && <Cut x={x} y={y + radius + 2} reach={frame.ring} line={frame.line} />}
     </g>

@@ -21,8 +21,6 @@ type Side = 1 | -1;
 
 const RING = 5;
 const TEXT_AIR = 8;
-/** A segment narrower than this cannot carry its own text. */
-const NARROW_SEGMENT = 110;
 
 export const RESULTS_DATASET = 0;
 
@@ -172,7 +170,8 @@ export function directLabels(figures: LimitChartFigures, colours: SheetColours):
       ctx.save();
       ctx.font = '13px "Roboto Flex Variable", sans-serif';
       ctx.fillStyle = colours.ink;
-      levelSegments(figures).forEach((segment) => labelLevel(chart, segment, failing));
+      const segments = levelSegments(figures);
+      segments.forEach((segment) => labelLevel(chart, segment, failing, segment === segments.at(-1)));
       const results = figures.results.map(({ testDate, tested }) => pointAt(testDate, tested));
       ctx.strokeStyle = colours.sheet;
       labelLine(chart, results, 'as reported', passing, 0.75);
@@ -186,11 +185,15 @@ export function directLabels(figures: LimitChartFigures, colours: SheetColours):
   };
 }
 
-/** On the failing side at the start of its segment; where that is too short, at the right edge on the other side. */
-function labelLevel(chart: Chart<'line'>, { start, end, text }: LevelSegment, side: Side) {
+/**
+ * On the failing side at the start of its segment. Where that is too short, the last level is named at the right edge on
+ * the other side, and an earlier one only in the table.
+ */
+function labelLevel(chart: Chart<'line'>, { start, end, text }: LevelSegment, side: Side, isLast: boolean) {
   const left = pixel(chart, start);
   const right = pixel(chart, end);
-  const fits = right.x - left.x >= NARROW_SEGMENT;
+  const fits = right.x - left.x >= chart.ctx.measureText(text).width + 2 * TEXT_AIR;
+  if (!fits && !isLast) return;
   const other: Side = side === 1 ? -1 : 1;
   chart.ctx.textAlign = fits ? 'left' : 'right';
   write(chart, text, fits ? left.x + 6 : chart.chartArea.right, left.y, fits ? side : other);

@@ -49,8 +49,8 @@ describe('the limit', () => {
 
 describe('the height of a result', () => {
   test('is what earnings may fall, on one scale', () => {
-    expect(only(aTest('2026-09-30', '0.10')).y).toBeCloseTo(32 - 10 * 0.8, 10);
-    expect(only(aTest('2026-09-30', '0')).y).toBe(32);
+    expect(only(aTest('2026-09-30', '0.10')).y).toBeCloseTo(34 - 10 * 0.8, 10);
+    expect(only(aTest('2026-09-30', '0')).y).toBe(34);
     expect(only(aTest('2026-09-30', '0.10'), 'panel').y).toBeCloseTo(82 - 10 * 2.2, 10);
   });
 
@@ -62,7 +62,7 @@ describe('the height of a result', () => {
   ])('%s of the scale', (_where, mayFall, cut) => {
     const mark = only(aTest('2026-09-30', mayFall));
     expect(mark.cut).toBe(cut);
-    expect(mark.y).toBeGreaterThanOrEqual(32 - 30 * 0.8);
+    expect(mark.y).toBeGreaterThanOrEqual(34 - 30 * 0.8);
   });
 
   test.each([
@@ -72,7 +72,7 @@ describe('the height of a result', () => {
   ])('%s of the scale', (_where, mayFall, cut) => {
     const mark = only(aTest('2026-09-30', mayFall, { outcome: 'not met' }));
     expect(mark.cut).toBe(cut);
-    expect(mark.y).toBeLessThanOrEqual(32 + 15 * 0.8);
+    expect(mark.y).toBeLessThanOrEqual(34 + 15 * 0.8);
   });
 
   test('is beyond the end of its side where the share has no meaning', () => {
@@ -82,9 +82,9 @@ describe('the height of a result', () => {
 
   test('is on the side of the outcome, also where rounding decides it', () => {
     const roundedUp = only(aTest('2026-09-30', '-0.0001', { outcome: 'met' }));
-    expect(roundedUp.y).toBeLessThanOrEqual(32);
+    expect(roundedUp.y).toBeLessThanOrEqual(34);
     const strict = only(aTest('2026-09-30', '0', { outcome: 'not met' }));
-    expect(strict.y - strict.radius).toBeGreaterThan(32);
+    expect(strict.y - strict.radius).toBeGreaterThan(34);
   });
 });
 
@@ -114,7 +114,7 @@ describe('the shape of a result', () => {
   });
 
   test('that cannot be tested stands on the limit, on neither side', () => {
-    expect(only(aTest('2026-09-30', '0.2', { outcome: 'cannot be tested' })).y).toBe(32);
+    expect(only(aTest('2026-09-30', '0.2', { outcome: 'cannot be tested' })).y).toBe(34);
   });
 });
 

@@ -41,9 +41,9 @@ export interface StripFrame {
 export const STRIP_FRAMES: Readonly<Record<StripSize, StripFrame>> = {
   row: {
     width: 150,
-    bedBottom: 46,
-    height: 46,
-    limitY: 32,
+    bedBottom: 48,
+    height: 48,
+    limitY: 34,
     pixelsPerPoint: 0.8,
     ring: 2.6,
     newestRing: 3.6,

@@ -1,0 +1,76 @@
+import type { CovenantView } from '../../contracts/borrowers.ts';
+import { HeadroomText, OutcomeText } from '../marks/OutcomeText.tsx';
+import { SoundingStrip } from '../marks/SoundingStrip.tsx';
+import { Cell, HeadCell, NameCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
+import { limitText, testedText } from './figures.ts';
+
+const STRIP_LENGTH = 12;
+
+interface CovenantsTableProps {
+  readonly covenants: readonly CovenantView[];
+  readonly selected: number | null;
+  readonly hrefOf: (covenantId: number) => string;
+}
+
+/** Every covenant with its latest test; one of them is shown below with its chart. */
+export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTableProps) {
+  return (
+    <Table caption="Covenants, latest test of each" entries>
+      <TableHead>
+        <tr role="row">
+          <HeadCell>Covenant</HeadCell>
+          <HeadCell>Limit</HeadCell>
+          <HeadCell numeric>Result</HeadCell>
+          <HeadCell>Last 12 tests</HeadCell>
+          <HeadCell numeric>Earnings may fall</HeadCell>
+          <HeadCell>What is left</HeadCell>
+          <HeadCell>Outcome</HeadCell>
+        </tr>
+      </TableHead>
+      <TableBody>
+        {covenants.map((covenant) => {
+          const test = covenant.tests.at(-1);
+          const tested = covenant.tests.findLast((each) => each.tested !== null) ?? test;
+          return (
+            <Row key={covenant.id} current={covenant.id === selected}>
+              <NameCell
+                name={covenant.name}
+                href={hrefOf(covenant.id)}
+                current={covenant.id === selected}
+                second={`${covenant.facilityName}, clause ${covenant.clause}`}
+              />
+              <Cell nowrap>{limitText(covenant, tested?.level ?? null)}</Cell>
+              <Cell numeric nowrap>
+                <span className="type-name">{tested ? testedText(covenant, tested) : '–'}</span>
+              </Cell>
+              <Cell entry="strip">
+                <SoundingStrip tests={covenant.tests.slice(-STRIP_LENGTH)} size="row" label={covenant.name} />
+              </Cell>
+              <Cell numeric entry="figure">
+                {tested && (
+                  <HeadroomText
+                    mayFall={tested.mayFall}
+                    outcome={tested.outcome}
+                    justPassing={tested.justPassing}
+                  />
+                )}
+                {covenant.fallOf === 'tested amount' && (
+                  <span className="type-second type-small block">of the tested amount</span>
+                )}
+              </Cell>
+              <Cell>{covenant.whatIsLeft}</Cell>
+              <Cell entry="extra">
+                {test && (
+                  <OutcomeText outcome={test.outcome} justPassing={test.justPassing} reason={test.reason} />
+                )}
+                <span className="type-second type-small block">
+                  {test?.testDate}, {covenant.checking}
+                </span>
+              </Cell>
+            </Row>
+          );
+        })}
+      </TableBody>
+    </Table>
+  );
+}

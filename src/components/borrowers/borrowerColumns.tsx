@@ -1,0 +1,98 @@
+import { createColumnHelper } from '@tanstack/react-table';
+import type { BorrowerRow } from '../../contracts/borrowers.ts';
+import { decimal } from '../../core/money/decimal.ts';
+import { formatMoney } from '../../core/money/print.ts';
+import { HeadroomText } from '../marks/OutcomeText.tsx';
+import { QualityBar } from '../marks/QualityBar.tsx';
+import { SoundingStrip } from '../marks/SoundingStrip.tsx';
+import type { GridFeatures } from '../ui/dataGrid.ts';
+import { NameCell } from '../ui/Table.tsx';
+
+const column = createColumnHelper<GridFeatures, BorrowerRow>();
+
+/** The columns of the borrowers table; ids are the sort keys of the request. */
+export const borrowerColumns = column.columns([
+  column.accessor('name', {
+    header: 'Borrower',
+    cell: ({ row: { original } }) => (
+      <NameCell
+        name={original.name}
+        href={`/borrowers/${original.id}`}
+        beside={original.watchGrade && `on watchlist, ${original.watchGrade}`}
+        second={`${original.sectorLabel}, ${original.deskName}, ${original.managerName}`}
+      />
+    ),
+    meta: { namesRow: true, fixed: true, name: 'Borrower' },
+  }),
+  column.display({
+    id: 'strip',
+    header: 'Smallest headroom, last 12 tests',
+    cell: ({ row: { original } }) =>
+      original.strip.length > 0 ? (
+        <span>
+          <SoundingStrip
+            tests={original.strip}
+            size="row"
+            label={`${original.covenantName ?? 'Tests'} of ${original.name}`}
+          />
+          <span className="type-second type-small block">{original.covenantName}</span>
+        </span>
+      ) : (
+        <span className="type-second">No test yet</span>
+      ),
+    meta: { entry: 'strip', name: 'Last 12 tests' },
+  }),
+  column.accessor('mayFall', {
+    id: 'may-fall',
+    header: 'Earnings may fall',
+    cell: ({ row: { original } }) =>
+      original.latestOutcome ? (
+        <HeadroomText
+          mayFall={original.mayFall}
+          outcome={original.latestOutcome}
+          justPassing={original.strip.at(-1)?.justPassing ?? false}
+        />
+      ) : (
+        <span className="type-second">–</span>
+      ),
+    meta: { numeric: true, entry: 'figure', name: 'Earnings may fall' },
+  }),
+  column.accessor('qualityHeadline', {
+    id: 'quality',
+    header: 'Reporting quality',
+    cell: ({ row: { original } }) => (
+      <QualityBar score={original.qualityHeadline} band={original.qualityBand} stacked />
+    ),
+    meta: { name: 'Reporting quality' },
+  }),
+  column.accessor('drawn', {
+    header: 'Drawn of limit',
+    cell: ({ row: { original } }) => (
+      <>
+        {original.currency} {formatMoney(decimal(original.drawn))}
+        <span className="type-second type-small block">of {formatMoney(decimal(original.limit))}</span>
+      </>
+    ),
+    meta: { numeric: true, nowrap: true, name: 'Drawn of limit' },
+  }),
+  column.accessor('openAlerts', {
+    id: 'alerts',
+    header: 'Alerts',
+    cell: ({ row: { original } }) => (
+      <>
+        {original.openAlerts}
+        {original.urgentAlerts > 0 && (
+          <span className="type-second type-small block">{original.urgentAlerts} urgent</span>
+        )}
+      </>
+    ),
+    meta: { numeric: true, nowrap: true, name: 'Alerts' },
+  }),
+  column.accessor('latestFigures', {
+    id: 'figures',
+    header: 'Figures to',
+    enableSorting: false,
+    cell: ({ row: { original } }) => original.latestFigures ?? <span className="type-second">none</span>,
+    meta: { nowrap: true, name: 'Figures to', entry: 'extra' },
+  }),
+]);
