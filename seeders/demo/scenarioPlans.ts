@@ -5,11 +5,10 @@ import { interestCover, netLeverage } from './ratios.ts';
 import { ORDINARY, type QuarterShape, type TradingPlan } from './tradingPlan.ts';
 import { tradingYears } from './tradingYears.ts';
 
+/** A reading that rises with debt, about in a straight line. */
 interface SizedTo {
   readonly reading: (quarters: readonly DemoQuarter[], index: number) => number | null;
   readonly target: number;
-  /** Whether the reading rises with debt. */
-  readonly risesWithDebt: boolean;
 }
 
 interface ScenarioPlan {
@@ -21,7 +20,12 @@ interface ScenarioPlan {
   readonly sizedTo: SizedTo | 'ordinary' | null;
 }
 
-const toNetLeverage = (target: number): SizedTo => ({ reading: netLeverage, target, risesWithDebt: true });
+const toNetLeverage = (target: number): SizedTo => ({ reading: netLeverage, target });
+
+const toInterestCover = (target: number): SizedTo => ({
+  reading: (quarters, index) => 1 / (interestCover(quarters, index) ?? Number.POSITIVE_INFINITY),
+  target: 1 / target,
+});
 
 /** Falls from 0 to 1 over so many quarters up to the latest. */
 const lately = (before: number, quarters: number): number => Math.max(0, 1 - before / quarters);
@@ -62,7 +66,7 @@ export const SCENARIO_PLANS: Readonly<Record<Scenario, ScenarioPlan>> = {
       interestRate: 0.105,
       shape: (before): QuarterShape => ({ extraCostShare: before === 0 ? 0.075 : 0 }),
     },
-    sizedTo: { reading: interestCover, target: 2.36, risesWithDebt: false },
+    sizedTo: toInterestCover(2.36),
   },
   restated: { changes: { growthPerYear: 0.02 }, sizedTo: toNetLeverage(2.4) },
   'ratio without meaning': {
@@ -119,21 +123,28 @@ export function plannedFor(
   return withDebtSizedTo(plan, sizedTo === 'ordinary' ? toNetLeverage(ordinaryNetLeverage) : sizedTo);
 }
 
-/** Halves the interval of debt until the latest reading is the target's; throws where no debt gives it. */
-function withDebtSizedTo(plan: TradingPlan, { reading, target, risesWithDebt }: SizedTo): TradingPlan {
-  let [low, high] = [0, plan.revenue * 8];
-  const readAt = (termDebt: number): number => {
+/** By false position (Illinois form); throws where no debt gives the reading. */
+function withDebtSizedTo(plan: TradingPlan, { reading, target }: SizedTo): TradingPlan {
+  const missBy = (termDebt: number): number => {
     const quarters = tradingYears({ ...plan, termDebt });
-    const value = reading(quarters, quarters.length - 1);
-    return value ?? Number.NaN;
+    return ((reading(quarters, quarters.length - 1) ?? Number.NaN) - target) / target;
   };
-  for (let step = 0; step < 16; step += 1) {
-    const middle = (low + high) / 2;
-    if (readAt(middle) > target === risesWithDebt) high = middle;
-    else low = middle;
+  let low = { debt: 0, miss: missBy(0) };
+  let high = { debt: plan.revenue * 8, miss: missBy(plan.revenue * 8) };
+  for (let step = 0; step < MOST_STEPS; step += 1) {
+    const debt = Math.round(low.debt + ((high.debt - low.debt) * low.miss) / (low.miss - high.miss));
+    const miss = missBy(debt);
+    if (Math.abs(miss) < NEAR_ENOUGH) return { ...plan, termDebt: debt };
+    if (miss < 0) {
+      low = { debt, miss };
+      high = { ...high, miss: high.miss / 2 };
+    } else {
+      high = { debt, miss };
+      low = { ...low, miss: low.miss / 2 };
+    }
   }
-  const reached = readAt(low);
-  if (!(Math.abs(reached - target) < 0.02))
-    throw new Error(`${plan.seed}: no debt gives ${target}, the nearest is ${reached}`);
-  return { ...plan, termDebt: low };
+  throw new Error(`${plan.seed}: no debt gives ${target}`);
 }
+
+const MOST_STEPS = 40;
+const NEAR_ENOUGH = 0.001;
