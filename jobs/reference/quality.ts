@@ -11,12 +11,12 @@ import { compositeScore } from '#core/quality/quarterScore.ts';
 import { QUALITY_TABLE } from '#core/quality/qualityTable.ts';
 import { QUALITY_BANDS, QUALITY_BLOCKS, type QualityBlockName } from '#core/quality/score.ts';
 import { fScoreRisk, mScoreRisk } from '#core/quality/screens.ts';
-import { standingOf } from '#core/quality/standing.ts';
+import { mixedPercentile } from '#core/quality/standing.ts';
 import { stretchOf } from '#core/quality/stretch.ts';
 import type { Result } from '#core/result.ts';
 import { binaryResponse } from '#core/statistics/binaryResponse.ts';
 import { leastSquares } from '#core/statistics/leastSquares.ts';
-import { midRank, rankCounts } from '#core/statistics/percentile.ts';
+import { rankCounts } from '#core/statistics/percentile.ts';
 import { rankAuc } from '#core/statistics/rankAuc.ts';
 
 type Topic = (inputs: unknown) => Record<string, unknown>;
@@ -181,13 +181,15 @@ const peer_percentile: Topic = (inputs) => {
       k_full: z.literal(QUALITY_TABLE.peers.fullSectorPeers),
     })
     .parse(inputs);
-  const [sector, book] = [ascending(given.peers), ascending(given.book)];
-  const standing = standingOf(given.own, { sector, book, ownInSector: null, ownInBook: null });
+  const mixed = mixedPercentile(
+    rankCounts(ascending(given.peers), given.own),
+    rankCounts(ascending(given.book), given.own),
+  );
   return {
-    sector: midRank(rankCounts(sector, given.own)),
-    book: midRank(rankCounts(book, given.own)),
-    weight_sector: standing?.sectorWeight ?? null,
-    percentile: standing?.percentile ?? null,
+    sector: mixed?.sectorPercentile ?? null,
+    book: mixed?.bookPercentile ?? null,
+    weight_sector: mixed?.sectorWeight ?? null,
+    percentile: mixed?.percentile ?? null,
   };
 };
 

@@ -147,6 +147,6 @@ export function comparedFigures(
   };
 }
 
-/** Eleven digits: far finer than any accounts, and short where ten thousand borrowers are stored. */
+/** Eight digits: finer than any accounts, and short where ten thousand borrowers are stored. */
 const stored = (value: number | null | undefined): number | null =>
-  value === null || value === undefined ? null : Number(value.toPrecision(11));
+  value === null || value === undefined ? null : Number(value.toPrecision(8));

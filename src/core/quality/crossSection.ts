@@ -3,6 +3,7 @@
  * percentiles are read from, itself left out. Plain JSON, so that it can be stored by the night and read by day.
  */
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { middleOf, type Middle } from '../statistics/percentile.ts';
 import { accrualModelFor, unexplainedAccruals, type AccrualModel } from './accrualModel.ts';
 import { comparedFigures, COMPARED_FIGURES, type ComparedFigure } from './comparedFigures.ts';
 import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
@@ -21,9 +22,10 @@ export interface QuarterCrossSection {
   readonly quarterEnd: PlainDate;
   /** Null where the whole book is too small for a fit. */
   readonly accrualModel: AccrualModel | null;
-  readonly sectors: readonly SectorFigures[];
-  readonly book: SortedFigures;
   readonly firms: number;
+  /** Together the whole book. */
+  readonly sectors: readonly SectorFigures[];
+  readonly bookMiddle: Readonly<Record<ComparedFigure, Middle>>;
   /** By borrower id: what it brought, so that it can be left out of its own comparison. */
   readonly members: Readonly<Record<string, PeerMember>>;
 }
@@ -31,15 +33,16 @@ export interface QuarterCrossSection {
 export interface SectorFigures {
   readonly sector: string;
   readonly firms: number;
-  readonly sorted: SortedFigures;
+  /** Ascending. */
+  readonly sorted: Readonly<Record<ComparedFigure, readonly number[]>>;
 }
 
-/** Ascending. */
-export type SortedFigures = Readonly<Record<ComparedFigure, readonly number[]>>;
-
+/** Short, because ten thousand of them are stored for every quarter end. */
 export interface PeerMember {
-  readonly sector: string;
-  readonly figures: Readonly<Record<ComparedFigure, number | null>>;
+  /** Place in `sectors`. */
+  readonly sector: number;
+  /** In the order of COMPARED_FIGURES. */
+  readonly figures: readonly (number | null)[];
 }
 
 /**
@@ -71,31 +74,34 @@ export function buildCrossSection(peers: readonly PeerInputs[], version: number)
 
 function quarterCrossSection(quarterEnd: PlainDate, peers: readonly PeerInputs[]): QuarterCrossSection {
   const accrualModel = accrualModelFor(peers);
-  const members = peers.map((peer) => ({
-    borrowerId: peer.borrowerId,
-    sector: peer.sector,
-    figures: comparedFigures(peer, unexplainedAccruals(accrualModel, peer)),
-  }));
+  const compared = peers.map((peer) => comparedFigures(peer, unexplainedAccruals(accrualModel, peer)));
+  const ordered = compared.map((figures) => COMPARED_FIGURES.map((figure) => figures[figure]));
+  const placed = peers.map((peer, k) => ({ sector: peer.sector, id: peer.borrowerId, figures: ordered[k]! }));
+  const sectors = [...bySector(placed)];
+  const places = new Map(sectors.map(([sector], place) => [sector, place]));
   return {
     quarterEnd,
     accrualModel,
-    sectors: [...bySector(members)].map(([sector, own]) => ({
+    firms: peers.length,
+    sectors: sectors.map(([sector, own]) => ({
       sector,
       firms: own.length,
-      sorted: sortedFigures(own),
+      sorted: perFigure((k) => sortedValues(own, k)),
     })),
-    book: sortedFigures(members),
-    firms: members.length,
+    bookMiddle: perFigure((k) => middleOf(sortedValues(placed, k))),
     members: Object.fromEntries(
-      members.map(({ borrowerId, sector, figures }) => [String(borrowerId), { sector, figures }]),
+      placed.map(({ id, sector, figures }) => [String(id), { sector: places.get(sector)!, figures }]),
     ),
   };
 }
 
-const sortedFigures = (members: readonly PeerMember[]): SortedFigures =>
-  Object.fromEntries(
-    COMPARED_FIGURES.map((figure) => [figure, sortedValues(members.map((member) => member.figures[figure]))]),
-  ) as unknown as SortedFigures;
+const perFigure = <T>(read: (place: number) => T): Record<ComparedFigure, T> =>
+  Object.fromEntries(COMPARED_FIGURES.map((figure, place) => [figure, read(place)])) as Record<
+    ComparedFigure,
+    T
+  >;
 
-const sortedValues = (values: readonly (number | null)[]): number[] =>
-  Array.from(Float64Array.from(values.filter((value) => value !== null)).sort());
+const sortedValues = (
+  members: readonly { readonly figures: readonly (number | null)[] }[],
+  place: number,
+): number[] => Array.from(Float64Array.from(members.flatMap(({ figures }) => figures[place] ?? [])).sort());

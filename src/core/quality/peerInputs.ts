@@ -136,11 +136,9 @@ const MATERIAL_ACQUISITION = 0.01;
 function acquisitionsOf(accounts: AccountsAt): { readonly inYear: boolean; readonly thisQuarter: boolean } {
   const assets = accounts.balance('total_assets', YEAR_AGO) ?? accounts.balance('total_assets') ?? 0;
   const isMaterial = (paid: number | undefined, back: Back): boolean => {
-    const goodwillRise = ifAll(
-      { now: accounts.optionalBalance('goodwill'), then: accounts.optionalBalance('goodwill', back) },
-      ({ now, then }) => now - then,
-    );
-    return Math.max(-(paid ?? 0), goodwillRise ?? 0) > MATERIAL_ACQUISITION * assets;
+    // A balance sheet without a row for goodwill had none: the first acquisition brings the row.
+    const goodwillRise = (accounts.balance('goodwill') ?? 0) - (accounts.balance('goodwill', back) ?? 0);
+    return Math.max(-(paid ?? 0), goodwillRise) > MATERIAL_ACQUISITION * assets;
   };
   const inYear = isMaterial(accounts.optionalTwelveMonths('acquisitions_paid'), YEAR_AGO);
   const quarter = accounts.optionalQuarter('acquisitions_paid');

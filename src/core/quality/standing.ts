@@ -1,6 +1,14 @@
-import { medianWithout, midRank, rankCounts, withoutMember } from '../statistics/percentile.ts';
-import type { ComparedFigure } from './comparedFigures.ts';
-import type { PeerMember, QuarterCrossSection } from './crossSection.ts';
+import {
+  medianOf,
+  middleOf,
+  midRank,
+  rankCounts,
+  withoutMember,
+  type Middle,
+  type RankCounts,
+} from '../statistics/percentile.ts';
+import { COMPARED_FIGURES, type ComparedFigure } from './comparedFigures.ts';
+import type { QuarterCrossSection } from './crossSection.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 
 /** Where one figure of one borrower stands among other borrowers. */
@@ -17,48 +25,88 @@ export interface Standing {
   readonly medianOf: 'sector' | 'book';
 }
 
+/** What a figure is compared with: ascending samples by sector, which together are the book. */
+export interface Samples {
+  readonly sectors: readonly (readonly number[])[];
+  readonly bookMiddle: Middle;
+  /** Place of the borrower's sector in `sectors`; null where nobody else is in it. */
+  readonly sector: number | null;
+  /** The borrower's own value among the samples, to be left out. */
+  readonly own: { readonly sector: number; readonly value: number } | null;
+}
+
+export type MixedPercentile = Pick<
+  Standing,
+  'percentile' | 'sectorPercentile' | 'bookPercentile' | 'sectorWeight'
+>;
+
 /**
- * A mid-rank percentile among others: the sector counts by min(1, peers / 10), the whole book for the rest.
+ * A mid-rank percentile among others: the sector counts by min(1, peers / 10), the whole book for the rest. Null
+ * where there are no sector peers and fewer than ten others in the book.
  *
- * `sector` and `book` ascend and may hold the borrower's own earlier value, which is then given and left out. Null
- * where there are no sector peers and fewer than ten others in the book. Source: methods.md B6.
+ * Source: methods.md B6.
  *
- * @example standingOf(0.03, { sector: [0.01, 0.05], book: [0.01, 0.02, 0.05], ownInSector: null, ownInBook: null })
+ * @example mixedPercentile({ below: 9, equal: 0, n: 12 }, { below: 9, equal: 0, n: 20 })?.percentile // => 0.75
  */
-export function standingOf(
-  value: number,
-  samples: {
-    readonly sector: readonly number[];
-    readonly book: readonly number[];
-    readonly ownInSector: number | null;
-    readonly ownInBook: number | null;
-  },
-): Standing | null {
-  const among = (sorted: readonly number[], own: number | null) =>
-    own === null ? rankCounts(sorted, value) : withoutMember(rankCounts(sorted, value), value, own);
-  const sector = among(samples.sector, samples.ownInSector);
-  const book = among(samples.book, samples.ownInBook);
-  const { fullSectorPeers, fewestBookOthers, fewestForMedian } = QUALITY_TABLE.peers;
-  if (sector.n === 0 && book.n < fewestBookOthers) return null;
+export function mixedPercentile(sector: RankCounts, book: RankCounts): MixedPercentile | null {
+  const { fullSectorPeers, fewestBookOthers } = QUALITY_TABLE.peers;
+  const bookPercentile = midRank(book);
+  if (bookPercentile === null || (sector.n === 0 && book.n < fewestBookOthers)) return null;
   const sectorWeight = Math.min(1, sector.n / fullSectorPeers);
-  const [sectorPercentile, bookPercentile] = [midRank(sector), midRank(book)];
-  const medianOf = sector.n >= fewestForMedian ? 'sector' : 'book';
-  const median =
-    medianOf === 'sector'
-      ? medianWithout(samples.sector, samples.ownInSector)
-      : medianWithout(samples.book, samples.ownInBook);
-  // A sector's peers are in the book too, so where one is there the other is.
-  if (median === null || bookPercentile === null) return null;
+  const sectorPercentile = midRank(sector);
   return {
     percentile: sectorWeight * (sectorPercentile ?? 0) + (1 - sectorWeight) * bookPercentile,
     sectorPercentile,
     bookPercentile,
     sectorWeight,
+  };
+}
+
+/** Where a value stands among the samples, the borrower's own left out. Takes log2(n) steps per sector. */
+export function standingOf(value: number, samples: Samples): Standing | null {
+  const { sectors, own } = samples;
+  const counts = sectors.map((sorted, place) => {
+    const all = rankCounts(sorted, value);
+    return own?.sector === place ? withoutMember(all, value, own.value) : all;
+  });
+  const book = counts.reduce(sumOfCounts, NOBODY);
+  const sector = samples.sector === null ? NOBODY : counts[samples.sector]!;
+  const mixed = mixedPercentile(sector, book);
+  if (!mixed) return null;
+  const isSectorMedian = sector.n >= QUALITY_TABLE.peers.fewestForMedian;
+  return {
+    ...mixed,
     sectorPeers: sector.n,
     bookOthers: book.n,
-    median,
-    medianOf,
+    median: isSectorMedian ? sectorMedian(samples) : bookMedian(samples),
+    medianOf: isSectorMedian ? 'sector' : 'book',
   };
+}
+
+const NOBODY: RankCounts = { below: 0, equal: 0, n: 0 };
+
+const sumOfCounts = (one: RankCounts, other: RankCounts): RankCounts => ({
+  below: one.below + other.below,
+  equal: one.equal + other.equal,
+  n: one.n + other.n,
+});
+
+function sectorMedian({ sectors, sector, own }: Samples): number {
+  const sorted = sectors[sector ?? -1] ?? [];
+  const leftOut = own !== null && own.sector === sector ? rankCounts(sorted, own.value).below : null;
+  return present(medianOf(middleOf(sorted), leftOut));
+}
+
+function bookMedian({ sectors, bookMiddle, own }: Samples): number {
+  if (own === null) return present(medianOf(bookMiddle, null));
+  const below = sectors.reduce((sum, sorted) => sum + rankCounts(sorted, own.value).below, 0);
+  return present(medianOf(bookMiddle, below));
+}
+
+/** Callers have counted that somebody is there. */
+function present(median: number | null): number {
+  if (median === null) throw new Error('a median of nobody');
+  return median;
 }
 
 /** The standing of a borrower's figure in a stored cross-section, whether or not the borrower is a member of it. */
@@ -68,13 +116,14 @@ export function standingIn(
   figure: ComparedFigure,
   value: number,
 ): Standing | null {
-  const member = memberOf(section, borrower.borrowerId);
-  const own = member?.figures[figure] ?? null;
+  const place = section.sectors.findIndex(({ sector }) => sector === borrower.sector);
+  const member = section.members[String(borrower.borrowerId)];
+  const own = member?.figures[COMPARED_FIGURES.indexOf(figure)] ?? null;
   return standingOf(value, {
-    sector: section.sectors.find(({ sector }) => sector === borrower.sector)?.sorted[figure] ?? [],
-    book: section.book[figure],
-    ownInSector: member?.sector === borrower.sector ? own : null,
-    ownInBook: own,
+    sectors: section.sectors.map(({ sorted }) => sorted[figure]),
+    bookMiddle: section.bookMiddle[figure],
+    sector: place === -1 ? null : place,
+    own: member && own !== null ? { sector: member.sector, value: own } : null,
   });
 }
 
@@ -83,13 +132,10 @@ export function otherFirms(
   section: QuarterCrossSection,
   borrower: { readonly borrowerId: number; readonly sector: string },
 ): { readonly sectorPeers: number; readonly bookPeers: number } {
-  const member = memberOf(section, borrower.borrowerId);
-  const firms = section.sectors.find(({ sector }) => sector === borrower.sector)?.firms ?? 0;
+  const member = section.members[String(borrower.borrowerId)];
+  const place = section.sectors.findIndex(({ sector }) => sector === borrower.sector);
   return {
-    sectorPeers: firms - (member?.sector === borrower.sector ? 1 : 0),
+    sectorPeers: (section.sectors[place]?.firms ?? 0) - (member?.sector === place ? 1 : 0),
     bookPeers: section.firms - (member ? 1 : 0),
   };
 }
-
-const memberOf = (section: QuarterCrossSection, borrowerId: number): PeerMember | null =>
-  section.members[String(borrowerId)] ?? null;

@@ -72,7 +72,7 @@ test('has no R² where the response has no spread', () => {
 });
 
 test('agrees with the decomposition of ml-matrix, and leaves residuals that no column explains', () => {
-  const value = fc.double({ min: -100, max: 100, noNaN: true });
+  const value = fc.integer({ min: -1000, max: 1000 });
   const row = fc.tuple(value, value, value);
   fc.assert(
     fc.property(fc.array(row, { minLength: 8, maxLength: 30 }), (rows) => {

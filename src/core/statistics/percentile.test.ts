@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { linearPercentile, medianWithout, midRank, rankCounts, withoutMember } from './percentile.ts';
+import { linearPercentile, medianOf, middleOf, midRank, rankCounts, withoutMember } from './percentile.ts';
 
 test('reads percentiles as R type 7: quantile(c(1, 3, 4, 10), c(.01, .25, .5, .99))', () => {
   const sample = [1, 3, 4, 10];
@@ -30,8 +30,11 @@ test('leaving a member out is the same as never having had it', () => {
       const others = [...sorted];
       others.splice(others.indexOf(member), 1);
       expect(withoutMember(rankCounts(sorted, value), value, member)).toEqual(rankCounts(others, value));
-      expect(medianWithout(sorted, member)).toBe(medianWithout(others, null));
-      expect(medianWithout(others, null)).toBe(others.length === 0 ? null : linearPercentile(others, 0.5));
+      const leftOut = rankCounts(sorted, member).below;
+      expect(medianOf(middleOf(sorted), leftOut)).toBe(
+        others.length === 0 ? null : linearPercentile(others, 0.5),
+      );
+      expect(medianOf(middleOf(sorted), null)).toBe(linearPercentile(sorted, 0.5));
     }),
   );
 });

@@ -46,13 +46,27 @@ export function withoutMember(counts: RankCounts, value: number, member: number)
 export const midRank = ({ below, equal, n }: RankCounts): number | null =>
   n === 0 ? null : (below + equal / 2) / n;
 
-/** Median of an ascending sample with one member left out, if given; null where nothing is left. */
-export function medianWithout(sorted: ArrayLike<number>, member: number | null): number | null {
-  const gap = member === null ? sorted.length : rankCounts(sorted, member).below;
-  const n = sorted.length - (member === null ? 0 : 1);
-  if (n <= 0) return null;
-  const at = (place: number): number => sorted[place < gap ? place : place + 1]!;
-  return (at(Math.floor((n - 1) / 2)) + at(Math.floor(n / 2))) / 2;
+/** The members around the middle of an ascending sample: enough for its median with or without any one member. */
+export interface Middle {
+  readonly n: number;
+  /** Place in the sample of the first of `values`. */
+  readonly from: number;
+  readonly values: readonly number[];
+}
+
+export function middleOf(sorted: readonly number[]): Middle {
+  const n = sorted.length;
+  const from = Math.max(0, Math.floor((n - 2) / 2));
+  return { n, from, values: sorted.slice(from, Math.floor((n - 1) / 2) + 2) };
+}
+
+/** Median of a sample, or of what is left of it without the member at `leftOut`; null where nothing is left. */
+export function medianOf({ n, from, values }: Middle, leftOut: number | null): number | null {
+  const left = leftOut === null ? n : n - 1;
+  if (left <= 0) return null;
+  const at = (place: number): number =>
+    values[(leftOut !== null && place >= leftOut ? place + 1 : place) - from]!;
+  return (at(Math.floor((left - 1) / 2)) + at(Math.floor(left / 2))) / 2;
 }
 
 function firstIndex(sorted: ArrayLike<number>, isReached: (member: number) => boolean): number {

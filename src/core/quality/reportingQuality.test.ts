@@ -1,0 +1,137 @@
+import { expect, test } from 'vitest';
+import type { BorrowerInputs } from '../borrowerInputs.ts';
+import { plainDate } from '../calendar/plainDate.ts';
+import { POLICY_VERSION_1 } from '../policy.ts';
+import { AS_OF, buildBook, buildBorrower } from './book.fixture.ts';
+import { buildCrossSection, type CrossSection } from './crossSection.ts';
+import { peerInputsOfQuarters } from './peerInputs.ts';
+import { reportingQuality } from './reportingQuality.ts';
+
+const book = [
+  ...buildBook(16, 'metal goods', 1),
+  ...buildBook(12, 'food', 100),
+  ...buildBook(3, 'printing', 200),
+];
+const crossSection = JSON.parse(
+  JSON.stringify(
+    buildCrossSection(
+      book.flatMap((borrower) => peerInputsOfQuarters(borrower, AS_OF)),
+      1,
+    ),
+  ),
+) as CrossSection;
+const qualityOf = (borrower: BorrowerInputs) =>
+  reportingQuality(borrower, crossSection, POLICY_VERSION_1, AS_OF);
+
+test('every borrower of an ordinary book is scored with 85 of 100 points of weight', () => {
+  for (const borrower of book) {
+    const quality = qualityOf(borrower);
+    expect(quality.latest?.blocks.map(({ name }) => name)).toEqual([
+      'unexplained accruals',
+      'sharpest stretch',
+      'cash conversion',
+    ]);
+    expect(quality.latest?.coverage).toBe(85);
+    expect(quality.headline).toBeGreaterThanOrEqual(0);
+    expect(quality.headline).toBeLessThanOrEqual(100);
+    expect(quality.history).toHaveLength(8);
+  }
+});
+
+test('the headline is the mean of the last three quarter ends', () => {
+  const quality = qualityOf(book[0]!);
+  const last = quality.history.slice(-3).map(({ score }) => score!);
+  expect(quality.headline).toBeCloseTo(last.reduce((sum, score) => sum + score, 0) / 3, 10);
+});
+
+test('receivables drawn up for a year are named first, with both values and the number of peers', () => {
+  const quality = qualityOf(buildBorrower(500, { receivablesUp: 0.25 }));
+  expect(quality.band).toBe('weakly supported');
+  expect(quality.explanations[0]).toMatch(
+    /^Receivable days rose from \d+ to \d+ \(\+2\d %\); peers [+−]?\d+ % \(16 peers\)\.$/,
+  );
+  expect(quality.explanations.length).toBeLessThanOrEqual(4);
+  expect(quality.whatWouldChangeIt).toMatch(/receivables ageing/);
+});
+
+test('costs put on the balance sheet show as accruals that cash does not explain', () => {
+  const quality = qualityOf(buildBorrower(501, { capitalised: 0.06 }));
+  expect(quality.explanations.join(' ')).toMatch(
+    /Accruals not explained by cash or growth are \d+ % of assets; the peer median is -?\d+ % \(16 peers\)\./,
+  );
+});
+
+test('fast growth is said beside the number', () => {
+  expect(qualityOf(buildBorrower(502, { growth: 0.08 })).remarks).toContainEqual(
+    expect.stringMatching(/^Revenue grew 3\d %: fast growth alone/),
+  );
+});
+
+test('unaudited accounts and few peers are said beside the number', () => {
+  expect(qualityOf(book.at(-1)!).remarks).toEqual([
+    'The accounts of 30 September 2026 are management accounts, not audited.',
+    'Only 2 peers in the sector: the comparison leans 80 % on the whole book (30 others).',
+  ]);
+  expect(qualityOf(buildBorrower(1, { given: { basis: 'audited' } })).remarks).toEqual([]);
+});
+
+test('without a cash flow statement coverage is 70 at most, and it is said', () => {
+  const quality = qualityOf(buildBorrower(503, { leaveOut: ['cfo', 'capex', 'interest_paid', 'tax_paid'] }));
+  expect(quality.latest).toMatchObject({ coverage: 70, derivedCashFlow: true });
+  expect(quality.headline).not.toBeNull();
+  expect(quality.remarks).toContainEqual(expect.stringMatching(/derived from the balance sheets/));
+});
+
+test('too little to go by gives no score, names what is missing and asks for it', () => {
+  const quality = qualityOf(buildBorrower(504, { leaveOut: ['capex'] }));
+  expect(quality).toMatchObject({ headline: null, band: null });
+  expect(quality.noScoreReason).toBe(
+    'Only 50 of 100 points of weight are available and 60 are needed. Not available: unexplained accruals (missing: capital expenditure over twelve months).',
+  );
+  expect(quality.whatWouldChangeIt).toBe('Ask for what is missing: capital expenditure over twelve months.');
+});
+
+test('a legal form that is never scored says so', () => {
+  expect(qualityOf({ ...buildBorrower(1), legalForm: 'bank' })).toMatchObject({
+    headline: null,
+    noScoreReason: 'The legal form is bank; this form is not scored.',
+    history: [],
+  });
+});
+
+test('half-yearly accounts give a headline of two, annual accounts a provisional one', () => {
+  const on = plainDate('2026-08-30');
+  const halfYearly = buildBorrower(505, { everyMonths: 6, quarters: 20 });
+  const annual = buildBorrower(506, { everyMonths: 12, quarters: 20 });
+  const half = reportingQuality(halfYearly, crossSection, POLICY_VERSION_1, on);
+  expect(half.history.at(-1)?.quarterEnd).toBe('2026-06-30');
+  const [before, latest] = half.history.slice(-2).map(({ score }) => score!);
+  expect(half.headline).toBeCloseTo((before! + latest!) / 2, 10);
+  expect(half.provisional).toBe(false);
+  expect(reportingQuality(annual, crossSection, POLICY_VERSION_1, on)).toMatchObject({ provisional: true });
+});
+
+test('the band moves by five points past a line, and a small move is said to be no news', () => {
+  const borrower = book[0]!;
+  const { headline, band } = qualityOf(borrower);
+  const previous = (quarterEnd: '2026-06-30' | '2026-09-30', offset: number, before: string) => ({
+    ...borrower,
+    previous: { quality: { quarterEnd, headline: headline! + offset, band: before }, tests: [] },
+  });
+  expect(qualityOf(previous('2026-06-30', 9.9, band!)).remarks).toContain(
+    'Moved 10 points since 30 June 2026: under 10 points is not news.',
+  );
+  expect(qualityOf(previous('2026-06-30', 10.1, band!)).remarks.join(' ')).not.toMatch(/Moved/);
+  expect(qualityOf(previous('2026-09-30', 5, band!)).remarks.join(' ')).not.toMatch(/Moved/);
+});
+
+test('no explanation accuses', () => {
+  const words = book
+    .map(qualityOf)
+    .flatMap(({ explanations, remarks, whatWouldChangeIt }) => [
+      ...explanations,
+      ...remarks,
+      whatWouldChangeIt,
+    ]);
+  expect(words.join(' ')).not.toMatch(/fraud|manipulat|misstat|breach|default|suspicio/i);
+});
