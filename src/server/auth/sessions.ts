@@ -80,6 +80,10 @@ class TransactionAdapter implements Adapter {
     if (!found) return [null, null];
     const idleEnd = found.lastSeenAt.getTime() + env().SESSION_IDLE_MINUTES * 60_000;
     const expiresAt = new Date(Math.min(idleEnd, found.expiresAt.getTime()));
+    if (expiresAt <= this.now) {
+      await deleteSession(this.tx, found.id);
+      return [null, null];
+    }
     const { person } = found;
     return [
       { id: token, userId: person.id, expiresAt, attributes: { lastSeenAt: found.lastSeenAt } },

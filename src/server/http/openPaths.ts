@@ -26,6 +26,7 @@ export const isOpen = (path: string, routePattern: string): boolean => {
   const plain = path.length > 1 ? path.replace(/\/+$/, '') : path;
   return (
     OPEN_PAGES.includes(plain) ||
+    isProbe(plain) ||
     (OPEN_ROUTES as readonly string[]).includes(plain) ||
     ERROR_PATTERNS.includes(routePattern)
   );

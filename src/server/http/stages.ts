@@ -6,7 +6,7 @@ import type { SignedIn } from '../auth/sessions.ts';
 import { clientAddress } from './address.ts';
 import { setMissingHeaders } from './headers.ts';
 import { log } from './log.ts';
-import { isApi, isOpen } from './openPaths.ts';
+import { isApi, isOpen, isProbe } from './openPaths.ts';
 import { isOwnRequest, ownOrigin } from './origin.ts';
 import { problemResponse } from './problem.ts';
 import { outagePage } from './outagePage.ts';
@@ -83,7 +83,7 @@ export const sessionStage =
   (currentPerson: (token: string, now: Date) => Promise<SignedIn | null>): MiddlewareHandler =>
   async (context, next) => {
     const token = readSessionCookie(context.cookies);
-    if (!token) return next();
+    if (!token || isProbe(context.url.pathname)) return next();
     const signedIn = await currentPerson(token, context.locals.now);
     if (signedIn) {
       context.locals.person = signedIn.person;
