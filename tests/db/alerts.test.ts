@@ -51,7 +51,7 @@ const finding = (facts: Partial<AlertFinding> = {}): AlertFinding => ({
   ...facts,
 });
 
-const view: AlertView = { figuresChangedAt: null, isUnknown: () => false };
+const view: AlertView = { inputVersion: 1, figuresChangedAt: null, isUnknown: () => false };
 
 const raise = (findings: AlertFinding[], now = morning, over: Partial<AlertView> = {}) =>
   inTransaction((tx) =>
@@ -150,6 +150,17 @@ describe('a finding', () => {
     expect(await events(before.id)).toEqual(['Raised']);
   });
 
+  test('that is only worded for another day is the same alert with today’s words', async () => {
+    await raise([finding()]);
+    const before = await only();
+    await raise([finding({ sentence: 'Accounts 12 days late.' })], nextMorning);
+    expect(await only()).toEqual({ ...before, lastSeenAt: nextMorning });
+    const [row] = await inTransaction((tx) =>
+      select<{ sentence: string }>(tx, 'select sentence from alerts where id = :id', { id: before.id }),
+    );
+    expect(row?.sentence).toBe('Accounts 12 days late.');
+  });
+
   test('with new facts updates the alert, raises its counter and gives the desk a new change number', async () => {
     await raise([finding()]);
     const before = await only();
@@ -246,6 +257,7 @@ test('the database itself refuses a second open alert of the same borrower, cove
       finding: finding(),
       dueOn: '2026-12-29',
       runId: null,
+      inputVersion: 1,
       changeNumber: 1,
       now: morning,
     }),

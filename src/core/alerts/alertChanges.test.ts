@@ -19,6 +19,7 @@ const known = (facts: Partial<KnownAlert> = {}): KnownAlert => ({
   state: 'raised',
   isOpen: true,
   conditionGone: false,
+  inputVersion: 4,
   closedAt: null,
   ...facts,
 });
@@ -26,7 +27,11 @@ const known = (facts: Partial<KnownAlert> = {}): KnownAlert => ({
 const closed = (facts: Partial<KnownAlert> = {}): KnownAlert =>
   known({ state: 'closed', isOpen: false, closedAt: new Date('2026-11-10T09:00:00Z'), ...facts });
 
-const view: AlertView = { figuresChangedAt: new Date('2026-11-01T00:00:00Z'), isUnknown: () => false };
+const view: AlertView = {
+  inputVersion: 5,
+  figuresChangedAt: new Date('2026-11-01T00:00:00Z'),
+  isUnknown: () => false,
+};
 const changesOf = (alerts: KnownAlert[], findings: AlertFinding[], over: Partial<AlertView> = {}) =>
   alertChanges(alerts, findings, { ...view, ...over }).map((change) =>
     change.change === 'update' ? change.how : change.change,
@@ -44,6 +49,15 @@ describe('while an alert is open', () => {
     ['another way out', { wouldChange: 'EBITDA 0.5m higher' }],
   ])('%s updates it', (_what, facts) => {
     expect(changesOf([known()], [finding(facts)])).toEqual(['new facts']);
+  });
+
+  test('other words out of unchanged inputs, as days pass or peers move, are no new facts', () => {
+    const other = finding({ sentence: 'Accounts 12 days late.' });
+    expect(changesOf([known()], [other], { inputVersion: 4 })).toEqual(['seen']);
+    expect(changesOf([known()], [other], { inputVersion: 5 })).toEqual(['new facts']);
+    expect(changesOf([known()], [finding({ factDate: '2026-12-31' })], { inputVersion: 4 })).toEqual([
+      'new facts',
+    ]);
   });
 
   test('a higher severity marks it worsened, a lower one improved', () => {

@@ -8,6 +8,8 @@ export interface KnownAlert extends AlertFinding {
   readonly state: AlertState;
   readonly isOpen: boolean;
   readonly conditionGone: boolean;
+  /** The version of the borrower's inputs that its facts were read from. */
+  readonly inputVersion: number;
   readonly closedAt: Date | null;
 }
 
@@ -21,12 +23,13 @@ export type AlertChange =
       readonly finding: AlertFinding;
       readonly how: AlertUpdate;
     }
-  /** The condition still holds and the facts are the same: the same alert, nothing new. */
-  | { readonly change: 'seen'; readonly alert: KnownAlert }
+  /** The condition still holds on the same facts: the same alert, at most worded for another day or other peers. */
+  | { readonly change: 'seen'; readonly alert: KnownAlert; readonly finding: AlertFinding }
   | { readonly change: 'close'; readonly alert: KnownAlert }
   | { readonly change: 'condition gone'; readonly alert: KnownAlert };
 
 export interface AlertView {
+  readonly inputVersion: number;
   /** When the borrower's figures last changed; a later statement version may re-open what was closed. */
   readonly figuresChangedAt: Date | null;
   /** True where the figures do not say whether the condition holds: then nothing is closed. */
@@ -46,13 +49,14 @@ const slotOf = (alert: Pick<AlertFinding, 'kind' | 'covenantId'>): string => ale
  * Holds findings against the alerts that are there. One finding a slot: of several, the most severe leads and the
  * others' sentences and evidence join it.
  *
- * An open alert is updated where its facts moved. A closed one stays closed, unless the finding speaks of a later
+ * An open alert is updated where its facts moved: another day, another severity, or other figures out of changed
+ * inputs. Days that pass and peers that move are no new facts of the borrower. A closed one stays closed, unless the finding speaks of a later
  * day, is more severe, or the figures changed after the closing. Without a finding, "soon" and "note" close by
  * themselves; "urgent", and whatever waits for a second person's word, only says that its condition is gone.
  *
  * Source: desk practice, no text.
  *
- * @example alertChanges([], [], { figuresChangedAt: null, isUnknown: () => false }) // => []
+ * @example alertChanges([], [], { inputVersion: 1, figuresChangedAt: null, isUnknown: () => false }) // => []
  */
 export function alertChanges(
   known: readonly KnownAlert[],
@@ -80,22 +84,26 @@ function changeFor(
 ): readonly AlertChange[] {
   const open = slot.find((alert) => alert.isOpen);
   if (open) {
-    const how = updateOf(open, finding);
-    return how ? [{ change: 'update', alert: open, finding, how }] : [{ change: 'seen', alert: open }];
+    const how = updateOf(open, finding, view);
+    return how
+      ? [{ change: 'update', alert: open, finding, how }]
+      : [{ change: 'seen', alert: open, finding }];
   }
   const closed = slot.filter((alert) => !alert.isOpen);
   return closed.every((alert) => isNews(finding, alert, view)) ? [{ change: 'raise', finding }] : [];
 }
 
-function updateOf(open: KnownAlert, finding: AlertFinding): AlertUpdate | null {
+function updateOf(open: KnownAlert, finding: AlertFinding, view: AlertView): AlertUpdate | null {
   if (isHigher(finding.severity, open.severity)) return 'worsened';
   if (open.conditionGone) return 'back';
   if (isHigher(open.severity, finding.severity)) return 'improved';
-  return factsOf(open) === factsOf(finding) ? null : 'new facts';
+  if (finding.factDate !== open.factDate) return 'new facts';
+  const isSame = view.inputVersion === open.inputVersion || wordsOf(open) === wordsOf(finding);
+  return isSame ? null : 'new facts';
 }
 
-const factsOf = ({ factDate, sentence, wouldChange, evidence }: AlertFinding): string =>
-  JSON.stringify([factDate, sentence, wouldChange, evidence.map(({ label, value }) => [label, value])]);
+const wordsOf = ({ sentence, wouldChange, evidence }: AlertFinding): string =>
+  JSON.stringify([sentence, wouldChange, evidence.map(({ label, value }) => [label, value])]);
 
 const isNews = (finding: AlertFinding, closed: KnownAlert, view: AlertView): boolean =>
   finding.factDate > closed.factDate ||

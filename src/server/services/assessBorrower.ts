@@ -79,7 +79,7 @@ export async function assessWithin(
   const alerts = await raiseAlerts(
     tx,
     actor,
-    { borrower, asOf, runId, view: await viewOf(tx, assessment, knownAt) },
+    { borrower, asOf, runId, view: await viewOf(tx, assessment, inputs.inputVersion, knownAt) },
     assessment.findings,
   );
   if (runId === null)
@@ -103,13 +103,19 @@ export async function assessWithin(
 const NEEDS_A_SCORE: readonly AlertKind[] = ['reporting quality fell', 'reporting quality weak'];
 
 /** An alert is closed only by figures that say its condition is gone, never by figures that say nothing. */
-async function viewOf(tx: Transaction, assessment: Assessment, knownAt: Date): Promise<AlertView> {
+async function viewOf(
+  tx: Transaction,
+  assessment: Assessment,
+  inputVersion: number,
+  knownAt: Date,
+): Promise<AlertView> {
   const latestOutcome = new Map(
     assessment.tests
       .filter((test) => test.outcome !== 'awaiting figures' && test.outcome !== 'not tested')
       .map((test) => [test.covenantId, test.outcome]),
   );
   return {
+    inputVersion,
     figuresChangedAt: await figuresChangedAt(tx, assessment.borrowerId, knownAt),
     isUnknown: (kind, covenantId) =>
       NEEDS_A_SCORE.includes(kind)

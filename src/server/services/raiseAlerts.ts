@@ -53,8 +53,6 @@ export async function raiseAlerts(
   const product: Actor = { ...actor, person: null, idempotencyKey: null };
   const known = await wake(tx, product, subject, await listAlertsForUpdate(tx, subject.borrower.id));
   const changes = alertChanges(known, findings, subject.view);
-  const seen = changes.flatMap((change) => (change.change === 'seen' ? [change.alert.id] : []));
-  if (seen.length > 0) await markSeen(tx, seen, actor.now);
   for (const change of changes) await apply(tx, product, subject, known, change);
   const count = (wanted: (change: AlertChange) => boolean) => changes.filter(wanted).length;
   return {
@@ -107,7 +105,12 @@ async function apply(
 ): Promise<void> {
   switch (change.change) {
     case 'seen':
-      return;
+      return markSeen(tx, {
+        id: change.alert.id,
+        finding: change.finding,
+        inputVersion: subject.view.inputVersion,
+        now: actor.now,
+      });
     case 'raise':
       return raise(tx, actor, subject, change.finding);
     case 'update': {
@@ -153,6 +156,7 @@ async function raise(
     finding,
     dueOn,
     runId,
+    inputVersion: subject.view.inputVersion,
     changeNumber: await nextChange(tx, borrower.deskId),
     now: actor.now,
   });
@@ -179,6 +183,7 @@ async function update(
     ...(await nextChangeOf(tx, actor, subject, alert.id)),
     finding,
     how,
+    inputVersion: subject.view.inputVersion,
     state: isWoken ? stateWhenAwake(alert) : alert.state,
     putOffUntil: isWoken ? null : alert.putOffUntil,
     dueOn: worsened && sooner < alert.dueOn ? sooner : alert.dueOn,

@@ -134,6 +134,7 @@ export const migration: Migration = {
       counter int unsigned not null default 1,
       condition_gone_at datetime(3) null,
       last_seen_at datetime(3) null,
+      input_version bigint unsigned not null default 0,
       put_off_until date null,
       put_off_count tinyint unsigned not null default 0,
       raised_at datetime(3) not null,

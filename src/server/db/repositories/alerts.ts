@@ -37,6 +37,7 @@ export async function listAlertsForUpdate(tx: Transaction, borrowerId: number): 
     tx,
     `select id, kind, covenant_id as covenantId, severity, state, open_slot is not null as isOpen, fact_date as factDate,
        sentence, would_change as wouldChange, evidence, condition_gone_at is not null as conditionGone,
+       input_version as inputVersion,
        closed_at as closedAt, due_on as dueOn, taken_by is not null as isTaken, put_off_until as putOffUntil
      from alerts where borrower_id = :borrowerId order by id for update`,
     { borrowerId },
@@ -57,6 +58,7 @@ export interface NewAlert {
   readonly finding: AlertFinding;
   readonly dueOn: PlainDate;
   readonly runId: number | null;
+  readonly inputVersion: number;
   readonly changeNumber: number;
   readonly now: Date;
 }
@@ -67,10 +69,11 @@ export async function insertAlert(tx: Transaction, alert: NewAlert): Promise<num
   const { insertId } = await execute(
     tx,
     `insert into alerts (borrower_id, desk_id, covenant_id, kind, severity, state, open_slot, fact_date, sentence,
-       would_change, evidence, owner_id, due_on, raised_at, raised_run_id, last_seen_at, changed_at, changed_how,
-       change_number)
+       would_change, evidence, owner_id, due_on, raised_at, raised_run_id, last_seen_at, input_version, changed_at,
+       changed_how, change_number)
      values (:borrowerId, :deskId, :covenantId, :kind, :severity, 'raised', :slot, :factDate, :sentence,
-       :wouldChange, :evidence, :ownerId, :dueOn, :now, :runId, :now, :now, 'raised', :changeNumber)`,
+       :wouldChange, :evidence, :ownerId, :dueOn, :now, :runId, :now, :inputVersion, :now,
+       'raised', :changeNumber)`,
     {
       ...place,
       ...columnsOf(finding),
@@ -97,6 +100,7 @@ export interface AlertUpdateFacts {
   readonly state: AlertState;
   readonly putOffUntil: PlainDate | null;
   readonly dueOn: PlainDate;
+  readonly inputVersion: number;
   readonly changeNumber: number;
   readonly now: Date;
 }
@@ -110,15 +114,32 @@ export async function updateAlertFacts(
     tx,
     `update alerts set severity = :severity, fact_date = :factDate, sentence = :sentence, would_change = :wouldChange,
        evidence = :evidence, state = :state, put_off_until = :putOffUntil, due_on = :dueOn, counter = counter + 1,
-       condition_gone_at = null, last_seen_at = :now, changed_at = :now, changed_how = :how,
+       condition_gone_at = null, last_seen_at = :now,
+       input_version = :inputVersion, changed_at = :now, changed_how = :how,
        change_number = :changeNumber, version = version + 1
      where id = :id`,
     { ...update, ...columnsOf(finding) },
   );
 }
 
-export async function markSeen(tx: Transaction, ids: readonly number[], now: Date): Promise<void> {
-  await execute(tx, 'update alerts set last_seen_at = :now where id in (:ids)', { ids, now });
+/** The same facts, worded for the day: no counter, no version, no change of the desk. */
+export async function markSeen(
+  tx: Transaction,
+  seen: {
+    readonly id: number;
+    readonly finding: AlertFinding;
+    readonly inputVersion: number;
+    readonly now: Date;
+  },
+): Promise<void> {
+  const { sentence, wouldChange, evidence } = columnsOf(seen.finding);
+  await execute(
+    tx,
+    `update alerts set last_seen_at = :now, sentence = :sentence, would_change = :wouldChange, evidence = :evidence,
+       input_version = :inputVersion
+     where id = :id`,
+    { id: seen.id, now: seen.now, inputVersion: seen.inputVersion, sentence, wouldChange, evidence },
+  );
 }
 
 interface OneChange {
