@@ -9,6 +9,10 @@ const OPEN_PAGES = [
   '/unsubscribe',
 ];
 
+/** Asked by whatever watches the process; what they say names nobody, and no session is looked up for them. */
+const PROBES = ['/livez', '/readyz'];
+export const isProbe = (path: string): boolean => PROBES.includes(path);
+
 export const OPEN_ROUTES = [
   '/api/v1/session',
   '/api/v1/set-up',
