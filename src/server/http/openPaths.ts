@@ -1,13 +1,5 @@
 /** What answers without a session. Everything else asks for one; tests/api holds this list against every route. */
-const OPEN_PAGES = [
-  '/livez',
-  '/readyz',
-  '/sign-in',
-  '/set-up',
-  '/forgot-password',
-  '/reset-password',
-  '/unsubscribe',
-];
+const OPEN_PAGES = ['/sign-in', '/set-up', '/forgot-password', '/reset-password', '/unsubscribe'];
 
 /** Asked by whatever watches the process; what they say names nobody, and no session is looked up for them. */
 const PROBES = ['/livez', '/readyz'];
