@@ -1,0 +1,93 @@
+import type { BorrowerView } from '../../contracts/borrowers.ts';
+import { NO_FINDING_OF_MISCONDUCT } from '../../core/cautions.ts';
+import type { QualityBlock } from '../../core/quality/score.ts';
+import { QualityBar, RuledScale } from '../marks/QualityBar.tsx';
+import { Panel } from '../ui/Panel.tsx';
+import { Caution } from '../ui/States.tsx';
+
+/** Reporting quality beside the covenants: the number, its blocks, why. */
+export function QualitySummary({
+  borrower,
+}: {
+  readonly borrower: Pick<BorrowerView, 'quality' | 'computed'>;
+}) {
+  const { quality, computed } = borrower;
+  if (!quality)
+    return (
+      <Panel title="Reporting quality">
+        <p className="type-second">Not assessed yet.</p>
+      </Panel>
+    );
+  const { latest } = quality;
+  return (
+    <Panel title="Reporting quality">
+      <p className="mb-1">
+        <QualityBar
+          score={quality.headline}
+          band={quality.band}
+          noScoreReason={quality.noScoreReason}
+          provisional={quality.provisional}
+        />
+      </p>
+      {latest && (
+        <p className="type-second">
+          Coverage {latest.coverage}, {latest.sectorPeers} peers in the sector, mean of the last quarter ends
+          to {latest.quarterEnd}
+          {computed?.peersAreLastNights && ', peers as of last night'}
+        </p>
+      )}
+      {latest && <BlockList blocks={latest.blocks} />}
+      {quality.explanations.length > 0 && (
+        <ul className="explanations">
+          {quality.explanations.map((line) => (
+            <li key={line}>{line}</li>
+          ))}
+        </ul>
+      )}
+      {quality.whatWouldChangeIt && <p className="mt-2">{quality.whatWouldChangeIt}</p>}
+      {quality.remarks.map((remark) => (
+        <p key={remark} className="type-second mt-1">
+          {remark}
+        </p>
+      ))}
+      <div className="mt-3">
+        <Caution>{NO_FINDING_OF_MISCONDUCT}</Caution>
+      </div>
+    </Panel>
+  );
+}
+
+/** 100 is well supported: a block's number is 100 less its risk in per cent. */
+export const blockScore = (block: QualityBlock): number | null =>
+  block.risk === null ? null : Math.round(100 * (1 - block.risk));
+
+export function BlockList({ blocks }: { readonly blocks: readonly QualityBlock[] }) {
+  return (
+    <dl className="facts">
+      {blocks.map((block) => {
+        const score = blockScore(block);
+        return (
+          <div key={block.name}>
+            <dt>
+              {block.name.charAt(0).toUpperCase() + block.name.slice(1)}
+              <span className="type-second type-small block">
+                weight {block.weight}
+                {block.reason !== null && `, ${block.reason}`}
+              </span>
+            </dt>
+            <dd>
+              {score === null ? (
+                <span className="type-second">not available</span>
+              ) : (
+                <span className="inline-flex items-center gap-3">
+                  <RuledScale score={score} />
+                  <span className="type-name min-w-6">{score}</span>
+                </span>
+              )}
+            </dd>
+          </div>
+        );
+      })}
+    </dl>
+  );
+}
