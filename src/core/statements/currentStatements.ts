@@ -1,5 +1,5 @@
 /** Which version of a period is in force: what was known by a day, in one scope, best basis and latest version. */
-import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { Statement, StatementBasis, StatementScope } from './statement.ts';
 
@@ -57,6 +57,23 @@ export function currentStatements(
 /** The statement in force among versions of one period; null where there is none. */
 export const inForce = (versions: readonly Statement[]): Statement | null =>
   versions.length === 0 ? null : versions.reduce(better);
+
+/** Every version of one period that is given. */
+export const versionsOf = (
+  statements: readonly Statement[],
+  periodEnd: PlainDate,
+  months: number,
+): Statement[] =>
+  statements.filter(
+    (statement) => statement.months === months && isSamePeriodEnd(statement.periodEnd, periodEnd),
+  );
+
+/** The statement in force for one period end and length; null where there is none. */
+export const statementOf = (
+  statements: readonly Statement[],
+  periodEnd: PlainDate,
+  months: number,
+): Statement | null => inForce(versionsOf(statements, periodEnd, months));
 
 function better(one: Statement, other: Statement): Statement {
   const order =

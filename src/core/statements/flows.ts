@@ -2,12 +2,13 @@
 import { fiscalPosition, isSamePeriodEnd, lastYearEndBefore, monthsBefore } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
-import { basisRank, inForce } from './currentStatements.ts';
+import { basisRank, statementOf } from './currentStatements.ts';
 import { lineInputs } from './lineAmount.ts';
 import type { LineItemCode } from './lineItems.ts';
 import { sumOfInputs, sumOfReadings, type InputUsed, type Reading } from './reading.ts';
 import type { Statement } from './statement.ts';
 import { roundingTolerance } from './tolerance.ts';
+import { restatedAlone } from './versionMix.ts';
 
 /**
  * The amount of a balance line on a day.
@@ -39,26 +40,44 @@ export function flowOver(
 }
 
 /**
- * The flow of one quarter: the three-month statement, else the year to date less the year to date a quarter
- * earlier, within one financial year only.
+ * The flow of the months up to a period end: the statement of that length, else the year to date less the year to
+ * date before those months, within one financial year only.
  *
  * Whole currency units. Source: methods.md A3. Not meaningful where the two would mix versions of the accounts.
  *
+ * @example flowOfMonths(statements, 'revenue', '2026-09-30', 6, 12)
+ */
+export function flowOfMonths(
+  statements: readonly Statement[],
+  line: LineItemCode,
+  periodEnd: PlainDate,
+  months: number,
+  fiscalYearEndMonth: number,
+): Reading {
+  const direct = flowOver(statements, line, periodEnd, months);
+  const intoYear = fiscalPosition(periodEnd, fiscalYearEndMonth).monthsIntoYear;
+  if (direct.kind === 'value' || intoYear <= months) return direct;
+  const longer = flowOver(statements, line, periodEnd, intoYear);
+  if (longer.kind === 'missing') return nothingButStatement(direct) ? gapOf(direct, longer) : direct;
+  return difference(
+    statements,
+    line,
+    [periodEnd, intoYear],
+    [monthsBefore(periodEnd, months), intoYear - months],
+  );
+}
+
+/**
+ * The flow of one quarter.
+ *
  * @example quarterFlow(statements, 'revenue', '2026-06-30', 12)
  */
-export function quarterFlow(
+export const quarterFlow = (
   statements: readonly Statement[],
   line: LineItemCode,
   quarterEnd: PlainDate,
   fiscalYearEndMonth: number,
-): Reading {
-  const direct = flowOver(statements, line, quarterEnd, 3);
-  const months = fiscalPosition(quarterEnd, fiscalYearEndMonth).monthsIntoYear;
-  if (direct.kind === 'value' || months <= 3) return direct;
-  const longer = flowOver(statements, line, quarterEnd, months);
-  if (longer.kind === 'missing') return nothingButStatement(direct) ? gapOf(direct, longer) : direct;
-  return difference(statements, line, [quarterEnd, months], [monthsBefore(quarterEnd, 3), months - 3]);
-}
+): Reading => flowOfMonths(statements, line, quarterEnd, 3, fiscalYearEndMonth);
 
 /**
  * The flow of the twelve months up to a period end.
@@ -154,32 +173,6 @@ function difference(
   return restated ? { kind: 'not-meaningful', reason: restated, inputs: sum.inputs } : sum;
 }
 
-/** Why the pair mixes versions: this period's line was restated after the other period was last received. */
-function restatedAlone(
-  statements: readonly Statement[],
-  line: LineItemCode,
-  restated: readonly [PlainDate, number],
-  other: readonly [PlainDate, number],
-): string | null {
-  const current = statementOf(statements, ...restated);
-  const unchanged = statementOf(statements, ...other);
-  if (!current || !unchanged || current.version === 1 || unchanged.receivedOn >= current.receivedOn)
-    return null;
-  if (!statements.some((later) => isReportedBefore(later, current))) return null;
-  const before = inForce(
-    versionsOf(statements, ...restated).filter(
-      ({ basis, version }) => basis === current.basis && version < current.version,
-    ),
-  );
-  const [now, then] = [lineInputs(current, line), before && lineInputs(before, line)];
-  if (now && then && sumOfInputs(now).eq(sumOfInputs(then))) return null;
-  return `${line} of the ${current.months} months to ${current.periodEnd} was restated on ${current.receivedOn}, the ${unchanged.months} months to ${unchanged.periodEnd} were not: the two versions are not mixed`;
-}
-
-// A new version before any later period is out closes the books of the period; after that it restates them.
-const isReportedBefore = (later: Statement, restated: Statement): boolean =>
-  later.months > 0 && later.periodEnd > restated.periodEnd && later.receivedOn <= restated.receivedOn;
-
 function contradicts(statements: readonly Statement[], one: Value, other: Value): boolean {
   const [first, second] = [
     statementsBehind(statements, one.inputs),
@@ -213,17 +206,6 @@ const statementsBehind = (statements: readonly Statement[], inputs: readonly Inp
 
 const bestBasis = (statements: readonly Statement[]): number =>
   Math.max(...statements.map(({ basis }) => basisRank(basis)));
-
-const versionsOf = (statements: readonly Statement[], periodEnd: PlainDate, months: number): Statement[] =>
-  statements.filter(
-    (statement) => statement.months === months && isSamePeriodEnd(statement.periodEnd, periodEnd),
-  );
-
-const statementOf = (
-  statements: readonly Statement[],
-  periodEnd: PlainDate,
-  months: number,
-): Statement | null => inForce(versionsOf(statements, periodEnd, months));
 
 /** What is missing from twelve months, by the route that the borrower's latest statement belongs to. */
 function shorterGap(yearToDate: Reading, quarters: Reading, periodEnd: PlainDate): Reading {

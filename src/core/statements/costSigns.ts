@@ -1,0 +1,37 @@
+import { ZERO } from '../money/decimal.ts';
+import type { LineItemCode } from './lineItems.ts';
+import type { Amounts } from './statement.ts';
+
+const COST_LINES = [
+  'cogs',
+  'sga',
+  'staff_costs',
+  'research_development',
+  'rent_expense',
+  'other_operating_expense',
+  'depreciation',
+  'amortisation',
+  'depreciation_and_amortisation',
+  'impairment',
+  'interest_expense',
+] as const satisfies readonly LineItemCode[];
+const NEGATIVE_SHARE = 0.8;
+
+/**
+ * Whether a sheet writes costs as negatives: at least 80 % of its cost cells are below nought. Then the whole block
+ * is turned and the identities run again; single cells are never turned. Source: methods.md A1.
+ */
+export function writesCostsNegative(columns: readonly Amounts[]): boolean {
+  const cells = columns.flatMap((column) => COST_LINES.flatMap((line) => column[line] ?? []));
+  const filled = cells.filter((cell) => !cell.isZero());
+  return filled.length > 0 && filled.filter((cell) => cell.lt(ZERO)).length / filled.length >= NEGATIVE_SHARE;
+}
+
+/** The amounts with every cost turned, as one block. */
+export function withCostsTurned(amounts: Amounts): Amounts {
+  const turned = COST_LINES.flatMap((line) => {
+    const amount = amounts[line];
+    return amount ? [[line, amount.negated()] as const] : [];
+  });
+  return { ...amounts, ...Object.fromEntries(turned) };
+}

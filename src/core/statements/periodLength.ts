@@ -1,0 +1,42 @@
+/** Flows of odd length set against a year: notes and agreed formulas, never a tested figure of their own accord. */
+import { daysBetween, type PlainDate } from '../calendar/plainDate.ts';
+import type { Decimal } from '../money/decimal.ts';
+
+const DAYS_OF_52_WEEKS = 364;
+const WEEKS_OF_LONG_YEAR = 53;
+
+/**
+ * A flow of some months set to a year, only where the agreement provides for it. Source: methods.md A3.
+ *
+ * @example annualisedByMonths(decimal('7.2'), 9) // => 9.6
+ */
+export const annualisedByMonths = (value: Decimal, months: number): Decimal => value.times(12).div(months);
+
+/** The same by days: x basis / days, the basis (365, 360) being the agreement's. */
+export const annualisedByDays = (value: Decimal, days: number, basis: number): Decimal =>
+  value.times(basis).div(days);
+
+/**
+ * The 52-week equivalent of a flow of some weeks: a note beside the reported figure, which is what is tested.
+ * Source: methods.md A3.
+ *
+ * @example equivalentOf52Weeks(decimal('10.6'), 53) // => 10.4
+ */
+export const equivalentOf52Weeks = (value: Decimal, weeks: number): Decimal =>
+  value.times(DAYS_OF_52_WEEKS).div(weeks * 7);
+
+export interface LengthInWeeks {
+  readonly weeks: number;
+  readonly days: number;
+  readonly flag: '53-week LTM' | null;
+}
+
+/** The length of twelve months made of quarters of whole weeks, flagged where there are 53. */
+export function lengthOfQuarters(quarterWeeks: readonly number[]): LengthInWeeks {
+  const weeks = quarterWeeks.reduce((sum, each) => sum + each, 0);
+  return { weeks, days: weeks * 7, flag: weeks === WEEKS_OF_LONG_YEAR ? '53-week LTM' : null };
+}
+
+/** Whether a period of twelve months runs over 53 weeks. */
+export const isLongYear = (periodStart: PlainDate, periodEnd: PlainDate): boolean =>
+  daysBetween(periodStart, periodEnd) + 1 === WEEKS_OF_LONG_YEAR * 7;
