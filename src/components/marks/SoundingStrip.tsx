@@ -1,12 +1,7 @@
+import type { StripTest } from '../../contracts/alerts.ts';
 import { plainDate } from '../../core/calendar/plainDate.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
-import {
-  drawStrip,
-  type StripDrawing,
-  type StripMark,
-  type StripSize,
-  type StripTest,
-} from './stripGeometry.ts';
+import { drawStrip, type StripDrawing, type StripMark, type StripSize } from './stripGeometry.ts';
 import { stripText, testText } from './stripText.ts';
 
 interface SoundingStripProps {

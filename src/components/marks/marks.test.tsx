@@ -6,7 +6,7 @@ import { AlertKindLabel, AlertMark } from './AlertMark.tsx';
 import { HeadroomText, OutcomeText } from './OutcomeText.tsx';
 import { QualityBar } from './QualityBar.tsx';
 import { SoundingStrip } from './SoundingStrip.tsx';
-import type { StripTest } from './stripGeometry.ts';
+import type { StripTest } from '../../contracts/alerts.ts';
 
 const TESTS: readonly StripTest[] = [
   { testDate: '2026-03-31', outcome: 'met', mayFall: '0.123', justPassing: false, level: '3.75' },

@@ -1,6 +1,7 @@
+import type { StripTest } from '../../contracts/alerts.ts';
 import { describe, expect, test } from 'vitest';
 import { OUTCOMES, type Outcome } from '../../core/covenants/covenantTest.ts';
-import { drawStrip, STRIP_FRAMES, type StripTest } from './stripGeometry.ts';
+import { drawStrip, STRIP_FRAMES } from './stripGeometry.ts';
 
 const aTest = (testDate: string, mayFall: string | null, more: Partial<StripTest> = {}): StripTest => ({
   testDate,

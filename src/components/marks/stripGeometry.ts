@@ -2,18 +2,7 @@
  * Where everything of a sounding strip stands. Heights are what earnings may fall, on one scale for all strips, and the
  * limit is always at the same height, so that strips compare down a column.
  */
-import type { Outcome } from '../../core/covenants/covenantTest.ts';
-
-export interface StripTest {
-  /** '2026-09-30' */
-  readonly testDate: string;
-  readonly outcome: Outcome;
-  /** Share by which earnings may fall, as decimal text (0.014 is 1.4 %); null where it has no meaning. */
-  readonly mayFall: string | null;
-  readonly justPassing: boolean;
-  /** Level in force, as decimal text; null where none was. */
-  readonly level: string | null;
-}
+import type { StripTest } from '../../contracts/alerts.ts';
 
 export type StripSize = 'row' | 'panel';
 

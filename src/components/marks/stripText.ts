@@ -1,8 +1,9 @@
+import type { StripTest } from '../../contracts/alerts.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
 import { plainDate } from '../../core/calendar/plainDate.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatShare } from '../../core/money/print.ts';
-import { lastTests, type StripTest } from './stripGeometry.ts';
+import { lastTests } from './stripGeometry.ts';
 
 /** What a strip says to somebody who does not see it: every test with its outcome and its number. */
 export function stripText(label: string, tests: readonly StripTest[]): string {

@@ -1,14 +1,10 @@
 import { useEffect, useId, useRef, useState } from 'react';
+import type { BorrowerRow } from '../../contracts/borrowers.ts';
 import type { Page } from '../../contracts/paging.ts';
 import { get } from '../ui/api.ts';
 import { useKeys } from '../ui/keys.ts';
 
-interface FoundBorrower {
-  readonly id: number;
-  readonly name: string;
-  readonly sector: string;
-  readonly desk: string;
-}
+type FoundBorrower = Pick<BorrowerRow, 'id' | 'name' | 'sectorLabel' | 'deskName'>;
 
 type Search =
   | { readonly kind: 'idle' }
@@ -114,7 +110,7 @@ export function BorrowerSearch() {
           >
             {row.name}
             <span className="type-second type-fine block">
-              {row.sector}, {row.desk}
+              {row.sectorLabel}, {row.deskName}
             </span>
           </a>
         ))}
@@ -132,7 +128,7 @@ const addressOf = (row: FoundBorrower): string => `/borrowers/${row.id}`;
 
 /** An aborted search is not an answer: the caller looks at its signal first. */
 async function findBorrowers(wanted: string, signal: AbortSignal): Promise<Search> {
-  const query = new URLSearchParams({ search: wanted, perPage: String(SHOWN) });
+  const query = new URLSearchParams({ search: wanted, sort: 'name', perPage: String(SHOWN) });
   try {
     const answer = await get<Page<FoundBorrower>>(`/borrowers?${query.toString()}`, signal);
     return answer.ok

@@ -19,11 +19,11 @@ const SECTIONS: readonly SectionRule[] = [
   { key: 'watchlist', name: 'Watchlist', href: '/watchlist', roles: READERS },
   { key: 'borrowers', name: 'Borrowers', href: '/borrowers', roles: READERS },
   { key: 'imports', name: 'Imports', href: '/imports', roles: READERS },
-  { key: 'settings', name: 'Desk settings', href: '/settings', roles: ['administrator'] },
+  { key: 'settings', name: 'Desk settings', href: '/desk-settings', roles: ['administrator'] },
   {
     key: 'audit',
     name: 'Audit log',
-    href: '/audit',
+    href: '/audit-log',
     roles: ['committee member', 'administrator', 'auditor'],
   },
 ];

@@ -36,11 +36,11 @@ export function DataGrid<TRow extends RowData>({
                 <HeadCell
                   key={header.id}
                   numeric={meta?.numeric}
-                  label={meta?.name}
+                  label={meta?.name ?? column.id}
                   sorted={column.getCanSort() ? directionOf(sorted) : undefined}
                   onSort={column.getCanSort() ? () => column.toggleSorting() : undefined}
                 >
-                  {column.columnDef.header ? <FlexRender header={header} /> : undefined}
+                  {meta?.markOnly ? undefined : <FlexRender header={header} />}
                 </HeadCell>
               );
             })}

@@ -8,8 +8,10 @@ export interface GridColumnMeta {
   readonly nowrap?: boolean;
   /** Content is a whole NameCell and brings its own <th>. */
   readonly namesRow?: boolean;
-  /** Name in the column choice and for an empty head. */
+  /** Name in the column choice. */
   readonly name?: string;
+  /** The head shows nothing and is read as `name`: a column of marks. */
+  readonly markOnly?: boolean;
   /** Stays whatever is chosen. */
   readonly fixed?: boolean;
 }
