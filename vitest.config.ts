@@ -9,7 +9,12 @@ export default defineConfig({
       {
         test: {
           name: 'unit',
-          include: ['src/**/*.test.{ts,tsx}', 'seeders/**/*.test.ts', 'tests/reference/**/*.test.ts'],
+          include: [
+            'src/**/*.test.{ts,tsx}',
+            'jobs/**/*.test.ts',
+            'seeders/**/*.test.ts',
+            'tests/reference/**/*.test.ts',
+          ],
         },
       },
       { test: { name: 'architecture', include: ['tests/architecture/**/*.test.ts'], testTimeout: 60_000 } },

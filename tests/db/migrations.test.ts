@@ -51,7 +51,7 @@ test('two runners at once apply each step once', async () => {
 });
 
 test.each(MIGRATIONS.map((step, index) => ({ name: step.name, index })))(
-  'a run that was cut after any statement of $name is taken up again',
+  'a run that was cut before $name was recorded is taken up again',
   async ({ index }) => {
     const url = await fresh();
     await migrateUp(url, MIGRATIONS.slice(0, index));

@@ -3,8 +3,9 @@
  * database before anything reads them.
  */
 import { inject } from 'vitest';
+import { AUDIT_KEY } from './auditKey.ts';
 
 process.env['DATABASE_URL'] = inject('databaseUrl');
 process.env['DATABASE_OWNER_URL'] = inject('databaseOwnerUrl');
-process.env['AUDIT_KEY'] = 'key-of-the-test-run-0123456789abcdefgh';
+process.env['AUDIT_KEY'] = AUDIT_KEY;
 process.env['LOG_LEVEL'] = 'silent';
