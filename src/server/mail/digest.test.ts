@@ -5,7 +5,14 @@ import {
   POPULATION_NOT_BORROWER,
   THE_AGREEMENT_GOVERNS,
 } from '../../core/cautions.ts';
-import { digestMail, DIGEST_BLOCKS, MOST_ITEMS, type Digest, type DigestItem } from './digest.ts';
+import {
+  digestMail,
+  DIGEST_BLOCKS,
+  MOST_ITEMS,
+  oneClickHeaders,
+  type Digest,
+  type DigestItem,
+} from './digest.ts';
 import { heartbeatMail, type Heartbeat } from './heartbeat.ts';
 
 const item = (alertId: number, facts: Partial<DigestItem> = {}): DigestItem => ({
@@ -175,6 +182,15 @@ describe('the body', () => {
         .html,
     ).toContain(warning);
   });
+});
+
+// RFC 8058 section 3.1: both fields, the second with this one value, and an HTTPS address in the first.
+test('one click to unsubscribe is offered over https and never over http', () => {
+  expect(oneClickHeaders('https://desk.example/u?token=abc')).toEqual({
+    'List-Unsubscribe': '<https://desk.example/u?token=abc>',
+    'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click',
+  });
+  expect(oneClickHeaders('http://desk.example/u?token=abc')).toEqual({});
 });
 
 describe('the heartbeat', () => {

@@ -51,6 +51,12 @@ export function digestMail(digest: Digest): RenderedMail & { readonly subject: s
   };
 }
 
+/** RFC 8058: one click is a POST and needs an https address; over http there is only the link in the text. */
+export const oneClickHeaders = (url: string): Readonly<Record<string, string>> =>
+  url.startsWith('https:')
+    ? { 'List-Unsubscribe': `<${url}>`, 'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click' }
+    : {};
+
 const countOf = (digest: Digest, ...names: DigestBlockName[]): number =>
   digest.blocks
     .filter((block) => names.includes(block.name))

@@ -16,7 +16,7 @@ import {
 import { queueMail } from '../db/repositories/outbox.ts';
 import { storeUnsubscribeHash } from '../db/repositories/people.ts';
 import type { TaskFailure } from '../db/repositories/runTasks.ts';
-import { digestMail, type Digest, type DigestItem } from '../mail/digest.ts';
+import { digestMail, oneClickHeaders, type Digest, type DigestItem } from '../mail/digest.ts';
 import { askedOf, digestBlocks, type BlockedAlerts, type DigestDay } from './digestBlocks.ts';
 
 export interface DigestRun extends DigestDay {
@@ -68,16 +68,10 @@ async function queueDigest(
     toName: reader.name,
     toAddress: reader.email,
     ...mail,
-    headers: unsubscribeHeaders(address(`/api/v1/unsubscribe?token=${unsubscribeToken(reader.id)}`)),
+    headers: oneClickHeaders(address(`/api/v1/unsubscribe?token=${unsubscribeToken(reader.id)}`)),
     now: run.knownAt,
   });
 }
-
-/** RFC 8058: one click is a POST and needs an https address; over http there is only the link in the text. */
-const unsubscribeHeaders = (url: string): Readonly<Record<string, string>> =>
-  url.startsWith('https:')
-    ? { 'List-Unsubscribe': `<${url}>`, 'List-Unsubscribe-Post': 'List-Unsubscribe=One-Click' }
-    : {};
 
 function toDigest(
   run: DigestRun,
