@@ -132,7 +132,7 @@ describe.each([...schemes()])('%s', (_selector, scheme) => {
 });
 
 test('no style sheet names a colour outside the tokens', () => {
-  const sheets = ['global', 'type', 'layout', 'controls', 'tables', 'marks', 'print'];
+  const sheets = ['global', 'type', 'topBar', 'layout', 'controls', 'forms', 'tables', 'marks', 'print'];
   const named = sheets.flatMap((name) => {
     const text = readFileSync(new URL(`../../src/styles/${name}.css`, import.meta.url), 'utf8');
     return [
