@@ -15,6 +15,7 @@ import { businessDayBefore } from './demo/demoDays.ts';
 import { DEMO_PASSWORD, DEMO_PEOPLE } from './demo/people.ts';
 import { layOutDemoDesk } from './layOutDemoDesk.ts';
 import { runFirstNight } from './runFirstNight.ts';
+import { workTheFirstMorning } from './workTheFirstMorning.ts';
 import { writeUploads } from './writeUploads.ts';
 
 try {
@@ -44,7 +45,7 @@ async function main(): Promise<number> {
     }
     console.log(`the demo desk is laid out as of ${seedDay}`);
   }
-  await runFirstNight({ businessDate: businessDayBefore(seedDay), now });
+  if (await runFirstNight({ businessDate: businessDayBefore(seedDay), now })) await workTheFirstMorning(now);
   await printWhatThereIs(seedDay);
   return 0;
 }

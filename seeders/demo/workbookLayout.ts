@@ -120,7 +120,16 @@ export interface FilledSheet {
 
 const HEADING_ROW = 5;
 
-/** The sheet's rows; a line that the borrower has never carried is left out, as borrowers do. */
+/** Lines that a borrower without them has no row for; any other line is printed, with zeros where it is nothing. */
+const ONLY_WHERE_CARRIED: readonly DemoLine[] = [
+  'research_development',
+  'inventory',
+  'junior_debt',
+  'lease_liabilities',
+  'capitalised_costs_paid',
+];
+
+/** The sheet's rows, headings apart. */
 export function filledSheet(
   layout: SheetLayout,
   {
@@ -138,7 +147,7 @@ export function filledSheet(
   let row = HEADING_ROW + 1;
   for (const line of layout.lines) {
     const amounts = quarters.map(({ lines }) => lines[line]);
-    if (amounts.every((amount) => amount === 0)) continue;
+    if (ONLY_WHERE_CARRIED.includes(line) && amounts.every((amount) => amount === 0)) continue;
     if (line === layout.memorandumFrom) {
       rows.push({ row: row + 1, text: 'Memorandum' });
       row += 2;

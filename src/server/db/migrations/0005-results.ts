@@ -162,7 +162,7 @@ export const migration: Migration = {
       alert_id bigint unsigned not null,
       at datetime(3) not null,
       person_id bigint unsigned null,
-      what varchar(40) not null,
+      what varchar(120) not null,
       text varchar(1000) not null,
       key alert_events_alert (alert_id, id),
       key alert_events_at (at, id),
