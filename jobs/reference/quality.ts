@@ -13,13 +13,11 @@ import { QUALITY_BANDS, QUALITY_BLOCKS, type QualityBlockName } from '#core/qual
 import { fScoreRisk, mScoreRisk } from '#core/quality/screens.ts';
 import { mixedPercentile } from '#core/quality/standing.ts';
 import { stretchOf } from '#core/quality/stretch.ts';
-import type { Result } from '#core/result.ts';
 import { binaryResponse } from '#core/statistics/binaryResponse.ts';
 import { leastSquares } from '#core/statistics/leastSquares.ts';
 import { rankCounts } from '#core/statistics/percentile.ts';
 import { rankAuc } from '#core/statistics/rankAuc.ts';
-
-type Topic = (inputs: unknown) => Record<string, unknown>;
+import { valueOf, type Topic } from './topic.ts';
 
 const numbers = z.array(z.number());
 const share = z.number().nullable();
@@ -327,11 +325,6 @@ export const topics: Record<string, Topic> = {
   sloan,
   stretch,
 };
-
-function valueOf<T, E extends { readonly kind: string }>(result: Result<T, E>): T {
-  if (!result.ok) throw new Error(`no result: ${result.error.kind}`);
-  return result.value;
-}
 
 const ascending = (values: readonly number[]): number[] => [...values].sort((a, b) => a - b);
 
