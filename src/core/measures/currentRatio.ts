@@ -1,4 +1,4 @@
-import { ZERO } from '../money/decimal.ts';
+import { ZERO, type Decimal } from '../money/decimal.ts';
 import { balanceAt } from '../statements/flows.ts';
 import { bridgeFigure } from './bridge.ts';
 import type { Measure } from './measured.ts';
@@ -30,3 +30,21 @@ export const currentRatio: Measure = {
     };
   },
 };
+
+/**
+ * Current liabilities as the agreement counts them: a loan that a failed test made due on demand turns current and
+ * can fail this test too, unless the agreement leaves the facility out. Source: methods.md A6.
+ */
+export const currentLiabilitiesCounted = ({
+  currentLiabilities,
+  loanTurnedCurrent,
+  leavesFacilityOut,
+}: {
+  /** Without the loan that turned current. */
+  readonly currentLiabilities: Decimal;
+  readonly loanTurnedCurrent: Decimal;
+  readonly leavesFacilityOut: boolean;
+}): Decimal => (leavesFacilityOut ? currentLiabilities : currentLiabilities.plus(loanTurnedCurrent));
+
+/** Cash and trade receivables, over current liabilities the quick ratio. Source: methods.md A3. */
+export const quickAssets = (cash: Decimal, receivables: Decimal): Decimal => cash.plus(receivables);

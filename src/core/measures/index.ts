@@ -1,7 +1,7 @@
 /** The register. To add a measure: one file, one line here, one code in measure.ts, one worked example as a test. */
 import { currentRatio } from './currentRatio.ts';
 import { interestCover } from './interestCover.ts';
-import type { MeasureCode } from './measure.ts';
+import type { MeasureCode, MeasureUnit } from './measure.ts';
 import type { Measure } from './measured.ts';
 import { minimumLiquidity } from './minimumLiquidity.ts';
 import { netLeverage } from './netLeverage.ts';
@@ -14,3 +14,5 @@ export const MEASURES: Readonly<Record<MeasureCode, Measure>> = {
   'current-ratio': currentRatio,
   'minimum-liquidity': minimumLiquidity,
 };
+
+export const measureUnit = (code: MeasureCode): MeasureUnit => MEASURES[code].unit;
