@@ -19,6 +19,10 @@ export const accrualHaircut = (unexplainedAccruals: Decimal): Decimal =>
 export const heldWithoutEarnings = (measure: Shaped, sides: Sides, terms: Terms, takenOut: Decimal): Held =>
   holdAgainstLevel(measure, withoutEarnings(measure, sides, takenOut), terms);
 
+/** Whether a test that is met rests on what was taken out: it would not have been met without. */
+export const restsOn = (reported: Held, without: Held): boolean =>
+  isMet(reported.outcome) && isNotMet(without.outcome);
+
 /**
  * The share of the add-backs that a test needs to be met: the earnings at which it stands at its level less the
  * earnings before add-backs, over the add-backs. Null where it is met without them, or not met with them.
@@ -55,7 +59,7 @@ export function withoutAddBacks(
   const held = holdAgainstLevel(measure, without, terms);
   const earningsBefore = measure.earningsSide === 'numerator' ? without.numerator : without.denominator;
   const earningsNeeded = amountAtLevel(measure.shape, sides, terms.level);
-  const decides = isMet(holdAgainstLevel(measure, sides, terms).outcome) && isNotMet(held.outcome);
+  const decides = restsOn(holdAgainstLevel(measure, sides, terms), held);
   return [
     {
       kind: 'without add-backs',
