@@ -238,4 +238,4 @@ function balancesOf({ debt }: QuarterFigures): Figures {
 }
 
 const amounts = (figures: Figures): Amounts =>
-  Object.fromEntries(Object.entries(figures).map(([line, value]) => [line, decimal(value)])) as Amounts;
+  Object.fromEntries(Object.entries(figures).map(([line, value]) => [line, decimal(value)]));
