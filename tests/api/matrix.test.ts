@@ -75,8 +75,8 @@ function expectedStatus(sample: Sample, person: Person | null, deskId: number): 
   if (sample.can === 'signed in') return sample.may;
   const scope = deskScope(person, sample.can);
   if (scope !== 'all' && scope.length === 0) return 403;
-  if (sample.names === 'nothing' || scope === 'all' || scope.includes(deskId)) return sample.may;
-  return 404;
+  if (sample.names === 'a thing' && scope !== 'all' && !scope.includes(deskId)) return 404;
+  return sample.onlyFor === undefined || person.roles.includes(sample.onlyFor) ? sample.may : 403;
 }
 
 const ask = (client: Client, sample: Sample, desk: DeskThings): Promise<Response> =>

@@ -5,7 +5,7 @@
  *
  * A route that is not here fails the matrix.
  */
-import type { Action } from '../../src/server/auth/policy.ts';
+import type { Action, Role } from '../../src/server/auth/policy.ts';
 import type { DeskThings } from '../support/twoDesks.ts';
 import type { Sending } from '../support/client.ts';
 
@@ -18,6 +18,8 @@ export interface Sample {
   readonly may: number;
   /** The thing is named in the address or the body, so that another desk's is "not found". */
   readonly names: 'a thing' | 'nothing';
+  /** Of those who may, only this one stands in the needed relation to the thing; the others are told so with 403. */
+  readonly onlyFor?: Role;
 }
 
 /** No thing is at this version after being made: the answer is 412 and nothing is changed. */
@@ -120,11 +122,10 @@ export const MATRIX: Readonly<Record<string, Sample>> = {
     may: 409,
     names: 'a thing',
   },
-  'POST proposals/[id]/withdrawal': postEmpty(
-    'propose',
-    (desk) => `/proposals/${desk.proposal}/withdrawal`,
-    412,
-  ),
+  'POST proposals/[id]/withdrawal': {
+    ...postEmpty('propose', (desk) => `/proposals/${desk.proposal}/withdrawal`, 412),
+    onlyFor: 'analyst',
+  },
   'POST proposals/[id]/decision': post(
     'decide',
     (desk) => `/proposals/${desk.proposal}/decision`,

@@ -7,7 +7,7 @@ import type { Transaction } from 'sequelize';
 import type { Role } from '../../src/server/auth/policy.ts';
 import { hashPassword } from '../../src/server/auth/passwords.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
-import { addDeskMember, insertDesk } from '../../src/server/db/repositories/desks.ts';
+import { addDeskMember, insertDesk, setDeskHead } from '../../src/server/db/repositories/desks.ts';
 import { insertPerson } from '../../src/server/db/repositories/people.ts';
 import { execute } from '../../src/server/db/sql.ts';
 
@@ -23,6 +23,7 @@ export interface TestPerson {
 export interface DeskThings {
   readonly desk: number;
   readonly analyst: TestPerson;
+  /** Relationship manager and head of the desk. */
   readonly manager: TestPerson;
   readonly borrower: number;
   readonly borrowerName: string;
@@ -80,6 +81,7 @@ async function makeDesk(tx: Transaction, passwordHash: string, now: Date): Promi
   const analyst = await makePerson(tx, 'analyst', passwordHash, now);
   const manager = await makePerson(tx, 'relationship manager', passwordHash, now);
   for (const member of [analyst, manager]) await addDeskMember(tx, desk, member.id);
+  await setDeskHead(tx, desk, manager.id);
   const borrowerName = `Fathom Works ${tag}`;
   const borrower = await makeBorrower(tx, { name: borrowerName, desk, analyst, manager, now });
   const alert = (kind: string, state: string, closedBy: number | null) =>
@@ -239,8 +241,8 @@ async function makeImport(
   });
 }
 
-const makeStatement = (tx: Transaction, borrower: number, now: Date): Promise<number> =>
-  insert(tx, 'statements', {
+async function makeStatement(tx: Transaction, borrower: number, now: Date): Promise<number> {
+  const id = await insert(tx, 'statements', {
     borrower_id: borrower,
     period_start: '2026-07-01',
     period_end: '2026-09-30',
@@ -257,3 +259,14 @@ const makeStatement = (tx: Transaction, borrower: number, now: Date): Promise<nu
     known_from: now,
     revenue: '1000000.0000',
   });
+  await insert(tx, 'statement_cells', {
+    statement_id: id,
+    line: 'revenue',
+    part_no: 1,
+    sheet: 'Income statement',
+    cell: 'B4',
+    raw_text: '1,000',
+    label: 'Revenue',
+  });
+  return id;
+}

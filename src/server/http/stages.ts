@@ -56,9 +56,10 @@ export const outageStage =
       const { requestId } = context.locals;
       const path = context.url.pathname;
       log().error({ err: error, requestId, method: context.request.method, path }, 'request failed');
+      const asPage = !isApi(path) || wantsPage(context.request);
       if (isOutage(error))
-        return isApi(path) ? outageProblem(context) : outagePage(requestId, RETRY_AFTER_SECONDS);
-      if (!isApi(path)) return new Response(null, { status: 500 });
+        return asPage ? outagePage(requestId, RETRY_AFTER_SECONDS) : outageProblem(context);
+      if (asPage) return new Response(null, { status: 500 });
       return problemResponse(context, {
         status: 500,
         title: 'Failed',
