@@ -25,6 +25,8 @@ export interface Held {
   readonly tested: Decimal | null;
   readonly outcome: Outcome;
   readonly reason: string | null;
+  /** The outcome would be another without the agreement's rounding. */
+  readonly roundingDecides: boolean;
   readonly headroom: Headroom;
 }
 
@@ -80,7 +82,11 @@ function holdBurden(measure: Shaped, { numerator: burden, denominator }: Sides, 
     );
   if (denominator.gt(0)) {
     const headroom = { ...burdenHeadroom(burden, denominator, terms.level), fallOf: fallOf(measure) };
-    return { tested: burden.div(denominator), outcome: 'met, net cash', reason: 'net cash', headroom };
+    return {
+      ...withoutRatio(measure, 'met, net cash', 'net cash'),
+      tested: burden.div(denominator),
+      headroom,
+    };
   }
   return burden.gt(0)
     ? withoutRatio(measure, 'not met, ratio has no meaning', `${word} not positive: ratio has no meaning`)
@@ -103,15 +109,12 @@ function compared(
   terms: Terms,
   forms: (level: Decimal) => Omit<Headroom, 'fallOf'>,
 ): Held {
-  const outcome = satisfies(tested, terms) ? 'met' : 'not met';
-  const unrounded = satisfies(tested, { ...terms, roundingPlaces: null }) ? 'met' : 'not met';
+  const isSatisfied = satisfies(tested, terms);
   return {
     tested,
-    outcome,
-    reason:
-      outcome === unrounded
-        ? null
-        : `${outcome} at the ${terms.roundingPlaces ?? 0} decimal places that the agreement rounds to`,
+    outcome: isSatisfied ? 'met' : 'not met',
+    reason: null,
+    roundingDecides: isSatisfied !== satisfies(tested, { ...terms, roundingPlaces: null }),
     headroom: { ...forms(terms.level), fallOf: fallOf(measure) },
   };
 }
@@ -120,6 +123,7 @@ const withoutRatio = (measure: Shaped, outcome: Outcome, reason: string): Held =
   tested: null,
   outcome,
   reason,
+  roundingDecides: false,
   headroom: { ...NO_HEADROOM, fallOf: fallOf(measure) },
 });
 

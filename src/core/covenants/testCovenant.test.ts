@@ -105,6 +105,16 @@ describe('outcomes that are no result', () => {
   });
 });
 
+test('what only the agreement’s rounding decides is said', () => {
+  const statements = buildYear(on, { ebitda: 12, debt: 42.048, cash: 0 });
+  expect(run(buildCovenant({ roundingPlaces: 2 }), statements)).toMatchObject({
+    outcome: 'met, thin',
+    justPassing: true,
+    reason: 'at the 2 decimal places that the agreement rounds to',
+  });
+  expect(run(buildCovenant(), statements).outcome).toBe('not met');
+});
+
 describe('thin and just passing', () => {
   // Net debt over EBITDA of 10 against 3.5x: 31.5 leaves exactly 10 %, 34.3 leaves exactly 2 % of the level.
   test.each([

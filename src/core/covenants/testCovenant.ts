@@ -74,7 +74,7 @@ export function testCovenant(
     denominator: sides?.denominator ?? null,
     outcome: waiver && isNotMet(underlyingOutcome) ? 'not met, waived' : underlyingOutcome,
     underlyingOutcome,
-    reason: [held.reason, ...(isLive ? tieRemark(known, inputs) : [])].filter(Boolean).join('; ') || null,
+    reason: remarks(covenant, held, isLive && restsOnUntied(known, inputs)),
     headroom: { ...NO_HEADROOM, ...held.headroom, fallOf: fallOf(measure) },
     againstLaterLevels: isLive && sides ? againstLater(covenant, testDate, sides) : [],
     justPassing: isJustPassing(held, policy),
@@ -159,8 +159,18 @@ function otherCurrency(
     : null;
 }
 
-const tieRemark = (known: readonly Statement[], inputs: readonly InputUsed[]): readonly string[] =>
-  behind(known, inputs).some(({ tie }) => tie === 'does-not-tie') ? ['rests on figures that do not tie'] : [];
+const restsOnUntied = (known: readonly Statement[], inputs: readonly InputUsed[]): boolean =>
+  behind(known, inputs).some(({ tie }) => tie === 'does-not-tie');
+
+/** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
+function remarks({ roundingPlaces }: Covenant, held: Held, isUntied: boolean): string | null {
+  const said = [
+    held.reason,
+    held.roundingDecides ? `at the ${roundingPlaces} decimal places that the agreement rounds to` : null,
+    isUntied ? 'rests on figures that do not tie' : null,
+  ].filter((remark) => remark !== null);
+  return said.length > 0 ? said.join('; ') : null;
+}
 
 const behind = (known: readonly Statement[], inputs: readonly InputUsed[]): readonly Statement[] =>
   known.filter(({ id }) => inputs.some(({ statementId }) => statementId === id));
@@ -169,6 +179,7 @@ const nothingHeld = (outcome: Outcome, reason: string): Held => ({
   tested: null,
   outcome,
   reason,
+  roundingDecides: false,
   headroom: { ...NO_HEADROOM, fallOf: 'earnings' },
 });
 
