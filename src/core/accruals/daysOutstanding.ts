@@ -1,4 +1,4 @@
-export const DAYS_IN_QUARTER = 365 / 4;
+const DAYS_IN_QUARTER = 365 / 4;
 
 /** Days of a flow that a balance stands for, at two dates a year apart. */
 export interface DaysChange {

@@ -96,7 +96,7 @@ function noiseBlock({ peer, standing }: BlockContext): QualityBlock | null {
 }
 
 /** Measures built on growth mark a fast grower and an acquirer whatever their accounts are like. */
-export function dampedReason(peer: PeerInputs): string | null {
+function dampedReason(peer: PeerInputs): string | null {
   if (peer.acquisitionInYear) return 'an acquisition in the year: measures built on growth are left out';
   const growth = revenueGrowth(peer.figures);
   return growth !== null && growth > fastGrowth

@@ -29,7 +29,7 @@ export function compositeScore(blocks: readonly Pick<QualityBlock, 'weight' | 'r
 export const pointsOf = (block: Pick<QualityBlock, 'weight' | 'risk'>, coverage: number): number =>
   block.risk === null ? 0 : (100 * block.weight * (1 - block.risk)) / coverage;
 
-export const availableWeight = (blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[]): number =>
+const availableWeight = (blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[]): number =>
   blocks.reduce((sum, block) => sum + (block.risk === null ? 0 : block.weight), 0);
 
 /**

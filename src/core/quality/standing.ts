@@ -63,7 +63,7 @@ export function mixedPercentile(sector: RankCounts, book: RankCounts): MixedPerc
 }
 
 /** Where a value stands among the samples, the borrower's own left out. Takes log2(n) steps per sector. */
-export function standingOf(value: number, samples: Samples): Standing | null {
+function standingOf(value: number, samples: Samples): Standing | null {
   const { sectors, own } = samples;
   const counts = sectors.map((sorted, place) => {
     const all = rankCounts(sorted, value);
