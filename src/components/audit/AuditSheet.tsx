@@ -1,6 +1,7 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { auditQuery, type AuditCheck, type AuditQuery, type AuditRow } from '../../contracts/audit.ts';
+import { isPlainDate } from '../../core/calendar/plainDate.ts';
 import type { Page } from '../../contracts/paging.ts';
 import { Refusal, get, getOrThrow, type Answer } from '../ui/api.ts';
 import { Button } from '../ui/Button.tsx';
@@ -35,6 +36,8 @@ export function auditSearch(query: AuditQuery): string {
   return text === '' ? '' : `?${text}`;
 }
 
+const dayOf = (text: string) => (isPlainDate(text) ? text : undefined);
+
 function AuditLog({ query: firstQuery, first }: AuditSheetProps) {
   const [query, setQuery] = useState(firstQuery);
   const search = auditSearch(query);
@@ -56,13 +59,13 @@ function AuditLog({ query: firstQuery, first }: AuditSheetProps) {
           label="From"
           type="date"
           value={query.from ?? ''}
-          onChange={(event) => show({ ...query, page: 1, from: event.target.value || undefined })}
+          onChange={(event) => show({ ...query, page: 1, from: dayOf(event.target.value) })}
         />
         <Field
           label="To"
           type="date"
           value={query.to ?? ''}
-          onChange={(event) => show({ ...query, page: 1, to: event.target.value || undefined })}
+          onChange={(event) => show({ ...query, page: 1, to: dayOf(event.target.value) })}
         />
         <Field
           label="What was done"
