@@ -54,12 +54,15 @@ beforeAll(async () => {
   web = spawn(process.execPath, ['--import', 'tsx', 'jobs/server.ts'], {
     env: {
       ...process.env,
+      ...inject('productSettings'),
+      UNDERKEEL_SUPERVISED: '1',
       DATABASE_URL: databaseUrl.href,
       APP_URL: address,
       HOST: '127.0.0.1',
       PORT: String(port),
     },
-    stdio: 'ignore',
+    // The standard input stays open as long as this process lives: a killed test run leaves nothing behind.
+    stdio: ['pipe', 'ignore', 'ignore'],
   });
   for (let tries = 0; ; tries += 1) {
     try {

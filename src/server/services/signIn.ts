@@ -3,6 +3,7 @@ import { passwordMatches } from '../auth/passwords.ts';
 import { endSession, startSession } from '../auth/sessions.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { findSignIn, findSignInById, type SignInRecord } from '../db/repositories/people.ts';
+import { deleteEndedCounters } from '../db/repositories/rateLimits.ts';
 import { deleteExpiredSessions } from '../db/repositories/sessions.ts';
 import { err, ok } from '../../core/result.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
@@ -42,6 +43,7 @@ export async function signIn(
     if (!now?.isActive || now.passwordHash !== usable.passwordHash) return err(WRONG);
     await forgiveSignIn(tx, usable.email, actor.address, actor.now);
     await deleteExpiredSessions(tx, actor.now);
+    await deleteEndedCounters(tx, actor.now.getTime());
     if (oldSessionId) await endSession(tx, oldSessionId);
     const token = await startSession(tx, usable.id, actor.now);
     const person = { id: usable.id, name: usable.name, email: usable.email, roles: [], deskIds: [] };

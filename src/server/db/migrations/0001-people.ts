@@ -89,7 +89,8 @@ export const migration: Migration = {
     `create table if not exists rate_limits (
       \`key\` varchar(255) not null primary key,
       points int not null default 0,
-      expire bigint unsigned null
+      expire bigint unsigned null,
+      key rate_limits_end (expire)
     ) engine=InnoDB default charset=utf8mb4 collate=utf8mb4_bin`,
     `create table if not exists idempotency_keys (
       person_id bigint unsigned not null,
