@@ -4,7 +4,7 @@ import type { PlainDate } from '../src/core/calendar/plainDate.ts';
 import { demoBook, LATE } from './demo/demoBook.ts';
 import { demoWorkbook } from './demo/demoWorkbook.ts';
 
-export interface DemoUpload {
+interface DemoUpload {
   readonly path: string;
   readonly borrowerName: string;
   /** What is special about the file. */

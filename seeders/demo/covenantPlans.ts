@@ -17,7 +17,7 @@ import {
 import type { RandomNumbers } from './randomNumbers.ts';
 import { currentRatio, interestCover, liquidity, netLeverage, totalLeverage } from './ratios.ts';
 
-export interface CovenantContext {
+interface CovenantContext {
   readonly scenario: Scenario;
   /** Delivered quarters, oldest first. */
   readonly quarters: readonly DemoQuarter[];

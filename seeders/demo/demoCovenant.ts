@@ -32,7 +32,7 @@ export interface DemoAddBack {
   readonly evidence: string;
 }
 
-export interface DemoWaiver {
+interface DemoWaiver {
   readonly testDate: PlainDate;
   readonly grantedOn: PlainDate;
   readonly until: PlainDate;

@@ -9,7 +9,7 @@ export const NIGHT_AT_UTC = '01:30';
 /** One for all: a demo desk has nothing to hide. */
 export const DEMO_PASSWORD = 'plimsoll-lantern-27-fathoms';
 
-export interface DemoPerson {
+interface DemoPerson {
   readonly name: string;
   readonly email: string;
   readonly roles: readonly Role[];

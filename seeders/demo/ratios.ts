@@ -23,7 +23,7 @@ export const yearEbitda = (quarters: readonly DemoQuarter[], index: number): num
   lastFour(quarters, index, quarterEbitda);
 
 /** Borrowings without leases. */
-export const grossDebt = ({ lines }: DemoQuarter): number =>
+const grossDebt = ({ lines }: DemoQuarter): number =>
   lines.short_term_debt + lines.senior_debt + lines.junior_debt;
 
 export const netDebt = (quarter: DemoQuarter): number => grossDebt(quarter) - quarter.lines.cash;

@@ -30,7 +30,7 @@ const toInterestCover = (target: number): SizedTo => ({
 /** Falls from 0 to 1 over so many quarters up to the latest. */
 const lately = (before: number, quarters: number): number => Math.max(0, 1 - before / quarters);
 
-export const SCENARIO_PLANS: Readonly<Record<Scenario, ScenarioPlan>> = {
+const SCENARIO_PLANS: Readonly<Record<Scenario, ScenarioPlan>> = {
   healthy: { changes: {}, sizedTo: 'ordinary' },
   'thin headroom': { changes: { growthPerYear: 0.01 }, sizedTo: toNetLeverage(3.31) },
   'just passing on add-backs': {

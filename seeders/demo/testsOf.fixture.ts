@@ -16,7 +16,7 @@ const READ: Readonly<Record<MeasureCode, Read>> = {
   'minimum-liquidity': (quarters, index) => liquidity(quarters, index),
 };
 
-export interface DemoTest {
+interface DemoTest {
   readonly level: number | null;
   readonly value: number | null;
   readonly withoutAddBacks: number | null;
@@ -42,7 +42,7 @@ export function testsOf({ quarters }: DemoBorrower, covenant: DemoCovenant | und
   });
 }
 
-export interface Room {
+interface Room {
   readonly level: number;
   /** Share of the level; negative where the test is not met. */
   readonly room: number;

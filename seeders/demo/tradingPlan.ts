@@ -20,7 +20,7 @@ export interface CalendarQuarter {
   readonly days: number;
 }
 
-export const QUARTERS_REPORTED = 16;
+const QUARTERS_REPORTED = 16;
 /** Quarters before the first reported one, in which the opening position settles. */
 export const QUARTERS_BEFORE = 4;
 

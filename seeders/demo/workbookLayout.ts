@@ -62,7 +62,7 @@ const LABELS: Readonly<Record<DemoLine, string>> = {
   scheduled_principal: 'Scheduled principal',
 };
 
-export interface SheetLayout {
+interface SheetLayout {
   readonly name: string;
   readonly part: StatementPart;
   readonly title: string;
@@ -101,7 +101,7 @@ export const SHEETS: readonly SheetLayout[] = [
 ];
 
 /** One row of a sheet as it is written: a text, or a line with its amounts in thousands. */
-export type SheetRow =
+type SheetRow =
   | { readonly row: number; readonly text: string }
   | {
       readonly row: number;

@@ -55,17 +55,6 @@ export async function insertStatementVersions(
   return ids;
 }
 
-/** One statement of the above. */
-export async function insertStatementVersion(
-  tx: Transaction,
-  origin: StatementOrigin,
-  statement: DeliveredStatement,
-): Promise<number> {
-  const [id] = await insertStatementVersions(tx, origin, [statement]);
-  if (id === undefined) throw new Error('no version was stored');
-  return id;
-}
-
 interface LatestVersion {
   readonly id: number;
   readonly periodEnd: PlainDate;
