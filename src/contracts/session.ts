@@ -5,10 +5,10 @@ import { z } from 'zod';
 const MOST_TYPED = 1_024;
 
 const mailAddress = z
-  .string({ error: 'Type your address of mail.' })
+  .string({ error: 'Type your email address.' })
   .trim()
-  .max(254, 'An address of mail has at most 254 characters.')
-  .pipe(z.email('This is not an address of mail. Type one like name@lender.example.'));
+  .max(254, 'An email address has at most 254 characters.')
+  .pipe(z.email('This is not an email address. Type one like name@lender.example.'));
 
 /** The server knows whether it is right; here it only has to be there. */
 const typedPassword = z
@@ -27,10 +27,10 @@ const linkToken = z
 
 export const signInForm = z.object({
   email: z
-    .string({ error: 'Type your address of mail.' })
+    .string({ error: 'Type your email address.' })
     .trim()
-    .min(1, 'Type your address of mail.')
-    .max(MOST_TYPED, 'An address of mail has at most 254 characters.'),
+    .min(1, 'Type your email address.')
+    .max(MOST_TYPED, 'An email address has at most 254 characters.'),
   password: typedPassword,
   /** Where to go after; a path of this product, checked before it is used. */
   next: z.string().max(2_000).optional(),

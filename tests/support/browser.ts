@@ -64,7 +64,7 @@ export async function openPage(
 export async function signInOn(page: Page, part: string): Promise<void> {
   const { email, password } = demoSignIn(part);
   await page.goto('/sign-in');
-  await page.getByLabel('Address of mail').fill(email);
+  await page.getByLabel('Email address').fill(email);
   await page.getByLabel('Password').fill(password);
   await page.getByRole('button', { name: 'Sign in' }).click();
   await page.waitForURL((url) => url.pathname !== '/sign-in');
