@@ -48,7 +48,7 @@ function AuditLog({ query: firstQuery, first }: AuditSheetProps) {
     ...(query === firstQuery && { initialData: first }),
   });
   const show = (next: AuditQuery) => {
-    history.replaceState(null, '', `/audit${auditSearch(next)}`);
+    history.replaceState(null, '', `/audit-log${auditSearch(next)}`);
     setQuery(next);
   };
   const page = log.data;
@@ -93,7 +93,7 @@ function AuditLog({ query: firstQuery, first }: AuditSheetProps) {
               perPage={page.perPage}
               total={page.total}
               what="entries"
-              hrefOf={(to) => `/audit${auditSearch({ ...query, page: to })}`}
+              hrefOf={(to) => `/audit-log${auditSearch({ ...query, page: to })}`}
               onPage={(to) => show({ ...query, page: to })}
             />
           )}

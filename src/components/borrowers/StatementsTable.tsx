@@ -24,7 +24,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
   );
   if (lines.length === 0) return null;
   return (
-    <div className="scroll-x">
+    <div className="scroll-region">
       <Table caption={`${PART_NAMES[part]}, whole currency units`} showCaption>
         <TableHead>
           <tr role="row">
@@ -84,7 +84,7 @@ function Amount({ statement, line }: { readonly statement: StatementView; readon
       </span>
     );
   return (
-    <a className="quiet-link" href={sourceHref(statement.id, line)}>
+    <a className="link-quiet" href={sourceHref(statement.id, line)}>
       {amountText(amount)}
     </a>
   );

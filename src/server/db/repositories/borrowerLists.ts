@@ -92,3 +92,16 @@ export const listDeskMembers = (tx: Transaction, deskId: number): Promise<{ id: 
      where m.desk_id = :deskId order by p.name, p.id`,
     { deskId },
   );
+
+/** Every borrower of the scope by name, for a choice. */
+export async function listBorrowerNames(
+  tx: Transaction,
+  scope: DeskScope,
+): Promise<{ id: number; name: string }[]> {
+  const desks = inScope(scope);
+  return select(
+    tx,
+    `select b.id, b.name from borrowers b where ${desks.sql} order by b.name, b.id`,
+    desks.values,
+  );
+}
