@@ -1,4 +1,4 @@
-import { useRef, useState, type DragEvent } from 'react';
+import { useState, type DragEvent } from 'react';
 import { UPLOAD_MOST_BYTES } from '../../contracts/imports.ts';
 import { Button } from '../ui/Button.tsx';
 import { ErrorState } from '../ui/ErrorState.tsx';
@@ -21,7 +21,7 @@ export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
   const [borrower, setBorrower] = useState(borrowerId === null ? '' : String(borrowerId));
   const [file, setFile] = useState<File | null>(null);
   const [fault, setFault] = useState<string | null>(null);
-  const input = useRef<HTMLInputElement>(null);
+  const [dropped, setDropped] = useState(false);
   const sending = useSending<{ id: number }>();
   const choose = (chosen: File | null | undefined) => {
     sending.clear();
@@ -34,6 +34,7 @@ export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
   };
   const drop = (event: DragEvent) => {
     event.preventDefault();
+    setDropped(true);
     choose(event.dataTransfer.files[0]);
   };
   const upload = async () => {
@@ -71,15 +72,17 @@ export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
           {(wired) => (
             <input
               {...wired}
-              ref={input}
               type="file"
               className="input"
               accept=".xlsx,.xlsm,.csv,application/vnd.openxmlformats-officedocument.spreadsheetml.sheet"
-              onChange={(event) => choose(event.target.files?.[0])}
+              onChange={(event) => {
+                setDropped(false);
+                choose(event.target.files?.[0]);
+              }}
             />
           )}
         </FieldFrame>
-        {file && !input.current?.files?.length && <p>{file.name}</p>}
+        {file && dropped && <p>{file.name}</p>}
         {sending.problem && <ErrorState problem={sending.problem} />}
         <Button type="submit" look="primary" busy={sending.busy} busyLabel="Reading the file…">
           Read the file
