@@ -14,8 +14,11 @@ import {
 import { currentPerson } from './server/services/currentPerson.ts';
 import { recordRefusal } from './server/services/recordRefusal.ts';
 
-/** The server hands in the socket's address; the development server has none to hand in. */
-const isDevelopment = import.meta.env.DEV;
+/**
+ * The server hands in the socket's address; the development server has none to hand in, and draws pages with
+ * scripts of its own. Asked at run time: what stands in import.meta.env is whatever the build's shell had set.
+ */
+const isDevelopment = process.env['NODE_ENV'] === 'development';
 
 export const onRequest = sequence(
   requestStage((context) => (isDevelopment ? context.clientAddress : 'unknown')),
