@@ -13,6 +13,9 @@ import { findLender } from '../src/server/db/repositories/lender.ts';
 import { listRuns } from '../src/server/db/repositories/runs.ts';
 import { runNight } from '../src/server/services/runNight.ts';
 
+/** The line of progress that was printed last. */
+let printed = '';
+
 process.exitCode = await main();
 await closeDatabase();
 
@@ -59,7 +62,6 @@ function argument(): string | undefined | null {
   }
 }
 
-let printed = '';
 async function printProgress(day: PlainDate): Promise<void> {
   const { rows } = await inTransaction((tx) => listRuns(tx, { page: 1, perPage: 50 }));
   const run = rows.find(({ businessDate: date, state }) => date === day && state === 'running');

@@ -51,7 +51,7 @@ async function runWhatWaits(): Promise<void> {
 }
 
 async function runOne(run: Omit<Parameters<typeof runNight>[0], 'kind'>): Promise<void> {
-  const summary = await runNight({ ...run, kind: 'nightly' });
+  const summary = await runNight({ ...run, kind: 'nightly', signal: told.signal });
   log().info({ businessDate: run.businessDate, summary }, 'nightly run');
 }
 

@@ -186,22 +186,38 @@ describe('a run that is cut', () => {
     expect(await resultsOf(ended.id, ended.knownAt)).toEqual(undisturbed);
   });
 
-  test('by a fault that is no borrower’s waits, says why, and is taken up by the next start', async () => {
+  test('by the end of its process goes on at once with the next start, no lock to wait for', async () => {
     const order = night('2026-12-05');
+    const told = new AbortController();
+    const endsAfterFirst: NightSteps['assessWithin'] = (tx, actor, id, request) => {
+      told.abort();
+      return assessWithin(tx, actor, id, request);
+    };
+    const stopped = await runNight(
+      { ...order, signal: told.signal },
+      steps({ assessWithin: endsAfterFirst }),
+    );
+    expect(stopped).toMatchObject({ outcome: 'skipped' });
+    expect(await runOf('2026-12-05')).toMatchObject({ state: 'running', done: 1 });
+    expect(await runNight(order)).toMatchObject({ outcome: 'done', attempt: 1, tested: 3 });
+  });
+
+  test('by a fault that is no borrower’s waits, says why, and is taken up by the next start', async () => {
+    const order = night('2026-12-06');
     const [original] = await rows<{ zone: string }>('select zone from lenders');
     await inTransaction((tx) => execute(tx, `update lenders set zone = 'Nowhere/Else'`));
     await expect(runNight(order)).rejects.toThrow(RangeError);
-    expect(await runOf('2026-12-05')).toMatchObject({ state: 'interrupted', done: 3 });
-    expect((await runOf('2026-12-05')).failure).toContain('Nowhere/Else');
+    expect(await runOf('2026-12-06')).toMatchObject({ state: 'interrupted', done: 3 });
+    expect((await runOf('2026-12-06')).failure).toContain('Nowhere/Else');
     await inTransaction((tx) =>
       execute(tx, 'update lenders set zone = :zone', { zone: original?.zone ?? '' }),
     );
     expect(await runNight(order)).toMatchObject({ outcome: 'done', attempt: 1, tested: 3 });
-    expect(await runOf('2026-12-05')).toMatchObject({ state: 'done', failure: null });
+    expect(await runOf('2026-12-06')).toMatchObject({ state: 'done', failure: null });
   });
 
   test('three times by the same borrower leaves that borrower out', async () => {
-    const order = night('2026-12-06');
+    const order = night('2026-12-07');
     const dies: NightSteps['assessWithin'] = async (tx, actor, id, request) => {
       if (id === book.thin.id)
         await inTransaction((other) =>
@@ -230,9 +246,9 @@ describe('a borrower that fails', () => {
 
   test('is marked with its reason, stores nothing, and the rest goes on', async () => {
     const before = await mailKeys();
-    const summary = await runNight(night('2026-12-07'), steps({ assessWithin: fails(book.thin.id) }));
+    const summary = await runNight(night('2026-12-08'), steps({ assessWithin: fails(book.thin.id) }));
     expect(summary).toMatchObject({ outcome: 'done', tested: 2, total: 3, failed: 1 });
-    const run = await runOf('2026-12-07');
+    const run = await runOf('2026-12-08');
     expect(run).toMatchObject({ state: 'done', done: 2, failed: 1 });
     expect(
       await rows(
@@ -262,7 +278,7 @@ describe('a borrower that fails', () => {
 
   test('in both phases is one failed borrower', async () => {
     const summary = await runNight(
-      night('2026-12-08'),
+      night('2026-12-09'),
       steps({
         assessWithin: fails(book.thin.id),
         peersOfBorrower: (tx, id, knownAt, asOf) =>
@@ -281,7 +297,7 @@ test('a date before one that is done is a look back: kept beside it, no alert, n
   const current = await rows(
     'select borrower_id, assessment_id from current_assessments order by borrower_id',
   );
-  const summary = await runNight(night('2026-11-30', { now: new Date('2026-12-09T09:00:00Z') }));
+  const summary = await runNight(night('2026-11-30', { now: new Date('2026-12-10T09:00:00Z') }));
   expect(summary).toMatchObject({ outcome: 'done', tested: 3, mails: 1 });
   expect((await mailKeys()).slice(before.length)).toEqual([expect.stringMatching(/^heartbeat:/)]);
   expect(await rows('select id, version from alerts order by id')).toEqual(alertsBefore);

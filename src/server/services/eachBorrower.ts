@@ -18,9 +18,17 @@ export class RunLockLost extends Error {
   }
 }
 
+/** Told to end between two borrowers: the run stays as it is and goes on with the next start. */
+export class RunStopped extends Error {
+  constructor() {
+    super('told to stop; the run goes on with the next start');
+  }
+}
+
 export interface Night {
   readonly run: RunRecord;
   readonly lock: HeldLock;
+  readonly signal: AbortSignal | null;
 }
 
 /**
@@ -28,12 +36,13 @@ export interface Night {
  * is that borrower's failure, unless the database or the lock is gone.
  */
 export async function eachBorrower(
-  { run, lock }: Night,
+  { run, lock, signal }: Night,
   phase: 'tests' | 'scores',
   work: (tx: Transaction, borrowerId: number) => Promise<string>,
 ): Promise<void> {
   const borrowerIds = await inTransaction((tx) => listOpenTasks(tx, run.id, phase));
   for (const borrowerId of borrowerIds) {
+    if (signal?.aborted) throw new RunStopped();
     const task = { runId: run.id, phase, borrowerId, owner: lock.owner, fence: lock.fence };
     const tries = await inTransaction((tx) => claimTask(tx, task));
     const failure =

@@ -17,7 +17,14 @@ import { dropOutputs, listOutputs } from '../db/repositories/runTasks.ts';
 import { systemActor } from './actor.ts';
 import { assessWithin } from './assessBorrower.ts';
 import { beginRun } from './beginRun.ts';
-import { eachBorrower, LOCK_SECONDS, NIGHT_LOCK, RunLockLost } from './eachBorrower.ts';
+import {
+  eachBorrower,
+  LOCK_SECONDS,
+  NIGHT_LOCK,
+  RunLockLost,
+  RunStopped,
+  type Night,
+} from './eachBorrower.ts';
 import { finishNight, type RunSummary } from './finishNight.ts';
 import { peersOfBorrower } from './peersOfBorrower.ts';
 
@@ -29,6 +36,8 @@ export interface NightCommand {
   readonly now: Date;
   /** By hand: a date that is done is computed once more, as another attempt. */
   readonly again?: boolean;
+  /** Ends the process's part between two borrowers; the run goes on with the next start. */
+  readonly signal?: AbortSignal;
 }
 
 /** What the night does with one borrower; a test puts a fault in its place. */
@@ -37,7 +46,7 @@ export interface NightSteps {
   readonly peersOfBorrower: typeof peersOfBorrower;
 }
 
-/** Not done: another run is going on, or the date is done and was not asked for again. */
+/** Not done: another run is going on, the date is done and was not asked for again, or the process was told to stop. */
 export interface SkippedRun {
   readonly outcome: 'skipped';
   readonly reason: string;
@@ -54,10 +63,16 @@ export async function runNight(
   let run: RunRecord | null = null;
   try {
     run = await inTransaction((tx) => beginRun(tx, command));
-    const result = run ? await compute(run, lock, steps) : alreadyDone(command);
+    const result = run
+      ? await compute({ run, lock, signal: command.signal ?? null }, steps)
+      : alreadyDone(command);
     await inTransaction((tx) => releaseLock(tx, lock));
     return result;
   } catch (error) {
+    if (error instanceof RunStopped) {
+      await inTransaction((tx) => releaseLock(tx, lock));
+      return { outcome: 'skipped', reason: error.message };
+    }
     await giveUp(run, lock, error);
     throw error;
   }
@@ -77,8 +92,8 @@ async function giveUp(run: RunRecord | null, lock: HeldLock, error: unknown): Pr
   });
 }
 
-async function compute(run: RunRecord, lock: HeldLock, steps: NightSteps): Promise<RunSummary> {
-  const night = { run, lock };
+async function compute(night: Night, steps: NightSteps): Promise<RunSummary> {
+  const { run } = night;
   await enter(run, 'tests');
   await eachBorrower(night, 'tests', async (tx, borrowerId) =>
     JSON.stringify(await steps.peersOfBorrower(tx, borrowerId, run.knownAt, run.businessDate)),
