@@ -37,7 +37,8 @@ export async function loadStrips(
 }
 
 function toStrip(tests: readonly StripRecord[]): Strip {
-  const latest = tests.at(-1);
+  // A test that is not due or not delivered yet says nothing of headroom: the one before it does.
+  const latest = tests.findLast((test) => test.outcome !== 'awaiting figures' && test.outcome !== 'not tested') ?? tests.at(-1);
   return {
     covenantName: latest?.covenantName ?? null,
     strip: tests.slice(-STRIP_LENGTH).map((test) => ({
@@ -47,7 +48,7 @@ function toStrip(tests: readonly StripRecord[]): Strip {
       justPassing: test.justPassing === 1,
       level: test.level,
     })),
-    mayFall: tests.findLast((test) => test.mayFall !== null)?.mayFall ?? null,
+    mayFall: latest?.mayFall ?? null,
     latestOutcome: (latest?.outcome as Outcome | undefined) ?? null,
   };
 }
