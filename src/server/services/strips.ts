@@ -38,7 +38,9 @@ export async function loadStrips(
 
 function toStrip(tests: readonly StripRecord[]): Strip {
   // A test that is not due or not delivered yet says nothing of headroom: the one before it does.
-  const latest = tests.findLast((test) => test.outcome !== 'awaiting figures' && test.outcome !== 'not tested') ?? tests.at(-1);
+  const latest =
+    tests.findLast((test) => test.outcome !== 'awaiting figures' && test.outcome !== 'not tested') ??
+    tests.at(-1);
   return {
     covenantName: latest?.covenantName ?? null,
     strip: tests.slice(-STRIP_LENGTH).map((test) => ({
