@@ -76,7 +76,7 @@ export const unsubscribeForm = z.object({
 export const digestChoice = z.object({ digest: z.enum(['wanted', 'not wanted']) });
 
 /** Asked of the platform itself: its list and what it accepts differ by the old names. */
-export function isTimeZone(zone: string): boolean {
+function isTimeZone(zone: string): boolean {
   if (!/^[A-Za-z][A-Za-z0-9_+/-]{0,63}$/.test(zone)) return false;
   try {
     new Intl.DateTimeFormat('en', { timeZone: zone });

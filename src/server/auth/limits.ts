@@ -19,8 +19,8 @@ export interface Limit {
 const QUARTER_HOUR = 900;
 
 export const SIGN_IN_HERE: Limit = { name: 'sign-in-here', points: 10, windowSeconds: QUARTER_HOUR };
-export const SIGN_IN_ADDRESS: Limit = { name: 'sign-in-address', points: 100, windowSeconds: QUARTER_HOUR };
-export const SIGN_IN_ACCOUNT: Limit = { name: 'sign-in-account', points: 50, windowSeconds: QUARTER_HOUR };
+const SIGN_IN_ADDRESS: Limit = { name: 'sign-in-address', points: 100, windowSeconds: QUARTER_HOUR };
+const SIGN_IN_ACCOUNT: Limit = { name: 'sign-in-account', points: 50, windowSeconds: QUARTER_HOUR };
 export const FORGOT_ADDRESS: Limit = { name: 'forgot-address', points: 20, windowSeconds: 3_600 };
 export const FORGOT_ACCOUNT: Limit = { name: 'forgot-account', points: 3, windowSeconds: 3_600 };
 export const ONE_TIME_LINK: Limit = { name: 'one-time-link', points: 30, windowSeconds: QUARTER_HOUR };

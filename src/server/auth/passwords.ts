@@ -19,7 +19,7 @@ const ARGON2ID = {
 const MOST_AT_ONCE = 8;
 
 /** NIST SP 800-63B-4: 15 characters where the password is the only factor; no rule of composition. */
-export const PASSWORD_LEAST_CHARACTERS = 15;
+const PASSWORD_LEAST_CHARACTERS = 15;
 export const PASSWORD_MOST_CHARACTERS = 128;
 
 export const hashPassword = (password: string): Promise<string> => inTurn(() => hash(password, ARGON2ID));

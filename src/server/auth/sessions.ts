@@ -58,7 +58,7 @@ export const endSessionsOf = (
 ): Promise<number> => deleteSessionsOf(tx, personId, keepId);
 
 /** A role that this version does not know gives no right. */
-export const toPerson = (record: PersonRecord): Person => ({
+const toPerson = (record: PersonRecord): Person => ({
   id: record.id,
   name: record.name,
   email: record.email,

@@ -5,7 +5,7 @@ import { env } from '../config/env.ts';
 const isHttps = (): boolean => new URL(env().APP_URL).protocol === 'https:';
 
 /** `__Host-` binds the cookie to this host and to https; a browser refuses that name over plain http. */
-export const sessionCookieName = (): string => (isHttps() ? '__Host-underkeel' : 'underkeel');
+const sessionCookieName = (): string => (isHttps() ? '__Host-underkeel' : 'underkeel');
 
 const attributes = () => ({ httpOnly: true, sameSite: 'lax', path: '/', secure: isHttps() }) as const;
 

@@ -6,6 +6,7 @@ import { findSignInById, setPasswordHash } from '../db/repositories/people.ts';
 import { voidTokens } from '../db/repositories/tokens.ts';
 import { err, ok } from '../../core/result.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
+import type { PasswordChange } from '../../contracts/session.ts';
 import type { PersonActor } from './actor.ts';
 import { acceptNewPassword } from './newPassword.ts';
 import { tooManyTries } from './tooManyTries.ts';
@@ -19,7 +20,7 @@ const WRONG: ServiceProblem = {
 /** Ends every session of the person, this one too, and answers the token of a new one. */
 export async function changePassword(
   actor: PersonActor,
-  typed: { currentPassword: string; newPassword: string },
+  typed: PasswordChange,
 ): Promise<Outcome<{ token: string }>> {
   const { person, now } = actor;
   const wait = await inTransaction((tx) =>

@@ -6,6 +6,7 @@ import { inTransaction } from '../db/inTransaction.ts';
 import { queueMail } from '../db/repositories/outbox.ts';
 import { findSignIn, mailKey, type SignInRecord } from '../db/repositories/people.ts';
 import { insertToken, voidTokens } from '../db/repositories/tokens.ts';
+import type { ForgottenPassword } from '../../contracts/session.ts';
 import { ok } from '../../core/result.ts';
 import { resetMail } from '../mail/resetMail.ts';
 import type { Actor } from './actor.ts';
@@ -18,7 +19,7 @@ const LINK_MINUTES = 30;
 const ANSWER_AFTER_MS = 300;
 
 /** Queues a mail with a link where the address is a person's; the answer never says whether it is. */
-export async function forgotPassword(actor: Actor, typed: { email: string }): Promise<Outcome<null>> {
+export async function forgotPassword(actor: Actor, typed: ForgottenPassword): Promise<Outcome<null>> {
   const wait = await inTransaction((tx) => countTry(tx, FORGOT_ADDRESS, actor.address, actor.now));
   if (wait !== null) return tooManyTries('ask for a link', wait);
   const pause = new Promise((resume) => setTimeout(resume, ANSWER_AFTER_MS));

@@ -7,6 +7,7 @@ import { findSignInById, setPasswordHash, type SignInRecord } from '../db/reposi
 import { findToken, useToken, voidTokens } from '../db/repositories/tokens.ts';
 import { err, ok } from '../../core/result.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
+import type { PasswordReset } from '../../contracts/session.ts';
 import type { Actor } from './actor.ts';
 import { acceptNewPassword } from './newPassword.ts';
 import { tooManyTries } from './tooManyTries.ts';
@@ -24,10 +25,7 @@ export const isResetLinkGood = async (token: string, now: Date): Promise<boolean
   (await personOfLink(token, now)) !== null;
 
 /** Sets the password of the person whose link it is, uses the link up and ends all their sessions. */
-export async function resetPassword(
-  actor: Actor,
-  typed: { token: string; newPassword: string },
-): Promise<Outcome<null>> {
+export async function resetPassword(actor: Actor, typed: PasswordReset): Promise<Outcome<null>> {
   const { now, address } = actor;
   const wait = await inTransaction((tx) => countTry(tx, ONE_TIME_LINK, address, now));
   if (wait !== null) return tooManyTries('use a link', wait);

@@ -7,6 +7,7 @@ import { deleteEndedCounters } from '../db/repositories/rateLimits.ts';
 import { deleteExpiredSessions } from '../db/repositories/sessions.ts';
 import { err, ok } from '../../core/result.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
+import type { SignIn } from '../../contracts/session.ts';
 import type { Actor } from './actor.ts';
 import { tooManyTries } from './tooManyTries.ts';
 import { audit, write, type Outcome } from './write.ts';
@@ -25,7 +26,7 @@ const WRONG: ServiceProblem = {
  */
 export async function signIn(
   actor: Actor,
-  typed: { email: string; password: string },
+  typed: Pick<SignIn, 'email' | 'password'>,
   oldSessionId: string | null,
 ): Promise<Outcome<{ token: string }>> {
   const wait = await inTransaction((tx) => countSignIn(tx, typed.email, actor.address, actor.now));

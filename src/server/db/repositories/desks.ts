@@ -1,21 +1,6 @@
 /** Desks, their heads and members. */
 import type { Transaction } from 'sequelize';
-import { execute, select } from '../sql.ts';
-
-export interface Desk {
-  readonly id: number;
-  readonly name: string;
-  readonly headId: number | null;
-  readonly version: number;
-}
-
-export async function listDesks(tx: Transaction): Promise<Desk[]> {
-  const rows = await select<{ id: number; name: string; head_id: number | null; version: number }>(
-    tx,
-    'select id, name, head_id, version from desks order by name, id',
-  );
-  return rows.map((row) => ({ id: row.id, name: row.name, headId: row.head_id, version: row.version }));
-}
+import { execute } from '../sql.ts';
 
 /** A desk comes with the counter that its alert lists watch. */
 export async function insertDesk(
