@@ -3,12 +3,15 @@ import { addDays } from '../src/core/calendar/plainDate.ts';
 import { statementsFromReading } from '../src/core/statements/statementsFromReading.ts';
 import { raiseInputVersion } from '../src/server/db/repositories/borrowers.ts';
 import { insertFile } from '../src/server/db/repositories/files.ts';
+import { insertAnswer, rememberAnswer } from '../src/server/db/repositories/importAnswers.ts';
 import { insertImport, markAccepted } from '../src/server/db/repositories/imports.ts';
 import {
   insertStatementVersions,
   type DeliveredStatement,
 } from '../src/server/db/repositories/statements.ts';
+import { toStaged } from '../src/server/services/readStoredFile.ts';
 import type { DemoBorrower } from './demo/demoBorrower.ts';
+import { MEMORANDUM_PLACEMENTS } from './demo/workbookLayout.ts';
 import { instantOn } from './layOutBorrower.ts';
 import { WORKBOOK_TYPE, type PreparedDelivery } from './prepareDeliveries.ts';
 
@@ -30,17 +33,20 @@ export async function layOutStatements(
     const receivedAt = instantOn(delivery.receivedOn, '09:10');
     const acceptedAt = instantOn(delivery.receivedOn, '09:40');
     await insertFile(tx, { sha256, sizeBytes, mediaType: WORKBOOK_TYPE, now: receivedAt });
-    const periods = new Set(reading.facts.map(({ periodEnd, months }) => `${periodEnd} ${months}`));
     const importId = await insertImport(tx, {
       borrowerId,
       sha256,
       fileName: delivery.fileName,
       uploadedBy: analystId,
       now: receivedAt,
-      reading: JSON.stringify(reading),
+      ...toStaged(reading),
+    });
+    await rememberPlacements(tx, {
+      borrowerId,
+      importId,
       layoutKey: reading.layoutKey,
-      openQuestions: 0,
-      periods: periods.size,
+      personId: analystId,
+      now: acceptedAt,
     });
     const taken = { basis: 'management', scope: 'group' } as const;
     const isAccepted = await markAccepted(tx, {
@@ -65,5 +71,16 @@ export async function layOutStatements(
     );
     for (const { periodEnd } of statements) seen.add(periodEnd);
     await raiseInputVersion(tx, borrowerId);
+  }
+}
+
+/** The analyst's answers, on the import and for later files of its layout. */
+async function rememberPlacements(
+  tx: Transaction,
+  place: { borrowerId: number; importId: number; layoutKey: string; personId: number; now: Date },
+): Promise<void> {
+  for (const [questionKey, answer] of Object.entries(MEMORANDUM_PLACEMENTS)) {
+    await insertAnswer(tx, { ...place, questionKey, answer });
+    await rememberAnswer(tx, { ...place, questionKey, answer });
   }
 }

@@ -1,7 +1,9 @@
+import type { Reading } from '../src/core/statements/workbookReading.ts';
 import { keepFile } from '../src/server/services/keepFile.ts';
+import { readBytes } from '../src/server/sheets/read/readBytes.ts';
 import type { DemoBorrower, DemoDelivery } from './demo/demoBorrower.ts';
-import { demoReading } from './demo/demoReading.ts';
 import { demoWorkbook } from './demo/demoWorkbook.ts';
+import { MEMORANDUM_PLACEMENTS } from './demo/workbookLayout.ts';
 
 export const WORKBOOK_TYPE = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
 
@@ -10,26 +12,45 @@ export interface PreparedDelivery {
   readonly delivery: DemoDelivery;
   readonly sha256: string;
   readonly sizeBytes: number;
-  readonly reading: ReturnType<typeof demoReading>;
+  readonly reading: Reading;
 }
 
-/** Makes and keeps the workbooks before the transaction that names them. */
+/**
+ * Makes, keeps and reads the workbooks before the transaction that names them. The reader is the product's own, in
+ * this process: these files are ours, so that the gate and the workers in front of it have nothing to keep out.
+ */
 export async function prepareDeliveries(borrower: DemoBorrower): Promise<PreparedDelivery[]> {
-  return Promise.all(
-    borrower.deliveries.map(async (delivery) => {
-      const content = {
-        borrowerName: borrower.name,
-        unit: `${borrower.currency} thousands`,
-        quarters: delivery.quarters,
-        madeOn: delivery.receivedOn,
-      };
-      const bytes = await demoWorkbook(content);
-      return {
-        delivery,
-        sha256: await keepFile(bytes, WORKBOOK_TYPE),
-        sizeBytes: bytes.length,
-        reading: demoReading({ ...content, currency: borrower.currency }),
-      };
-    }),
-  );
+  const prepared: PreparedDelivery[] = [];
+  for (const delivery of borrower.deliveries) {
+    const bytes = await demoWorkbook({
+      borrowerName: borrower.name,
+      unit: `${borrower.currency} thousands`,
+      quarters: delivery.quarters,
+      madeOn: delivery.receivedOn,
+    });
+    const sha256 = await keepFile(bytes, WORKBOOK_TYPE);
+    prepared.push({ delivery, sha256, sizeBytes: bytes.length, reading: await read(borrower, bytes) });
+  }
+  return prepared;
+}
+
+async function read(borrower: DemoBorrower, bytes: Uint8Array): Promise<Reading> {
+  const reading = await readBytes({
+    kind: 'xlsx',
+    bytes,
+    notes: [],
+    context: {
+      fiscalYearEndMonth: borrower.fiscalYearEndMonth,
+      reportingCurrency: borrower.currency,
+      answers: MEMORANDUM_PLACEMENTS,
+      lastQuarterRevenue: null,
+      borrowerName: borrower.name,
+    },
+  });
+  const open = reading.questions.filter(({ answer }) => answer === null).map(({ text }) => text);
+  if (reading.outcome !== 'ready')
+    throw new Error(
+      `the workbook of ${borrower.name} reads as ${reading.outcome}: ${reading.refusal?.message ?? open.join('; ')}`,
+    );
+  return reading;
 }

@@ -9,7 +9,24 @@ import {
   type DemoQuarter,
 } from './demoLines.ts';
 
-const LABELS: Readonly<Record<DemoLine, string>> = {
+/** Rows that sheets print besides the standard lines, so that every total is the sum of what stands above it. */
+const FURTHER_AMOUNTS = {
+  non_current: ({ ppe_net, intangibles, goodwill }) => ppe_net + intangibles + goodwill,
+  share_capital: ({ equity, retained_earnings }) => equity - retained_earnings,
+  equity_and_liabilities: ({ equity, total_liabilities }) => equity + total_liabilities,
+} as const satisfies Record<string, (lines: DemoQuarter['lines']) => number>;
+
+type SheetLine = DemoLine | keyof typeof FURTHER_AMOUNTS;
+
+const amountOf = (line: SheetLine, { lines }: DemoQuarter): number =>
+  line in FURTHER_AMOUNTS
+    ? FURTHER_AMOUNTS[line as keyof typeof FURTHER_AMOUNTS](lines)
+    : lines[line as DemoLine];
+
+const LABELS: Readonly<Record<SheetLine, string>> = {
+  non_current: 'Total non-current assets',
+  share_capital: 'Share capital',
+  equity_and_liabilities: 'Total equity and liabilities',
   revenue: 'Revenue',
   cogs: 'Cost of sales',
   gross_profit: 'Gross profit',
@@ -41,8 +58,8 @@ const LABELS: Readonly<Record<DemoLine, string>> = {
   tax_payable: 'Tax payable',
   short_term_debt: 'Short-term debt',
   current_liabilities: 'Total current liabilities',
-  senior_debt: 'Senior debt, long-term',
-  junior_debt: 'Subordinated debt, long-term',
+  senior_debt: 'Long-term borrowings',
+  junior_debt: 'Subordinated loan',
   lease_liabilities: 'Lease liabilities',
   total_liabilities: 'Total liabilities',
   retained_earnings: 'Retained earnings',
@@ -51,7 +68,7 @@ const LABELS: Readonly<Record<DemoLine, string>> = {
   revolver_commitment: 'Revolver commitment',
   cfo: 'Net cash from operating activities',
   capex: 'Capital expenditure',
-  capitalised_costs_paid: 'Capitalised development costs paid',
+  capitalised_costs_paid: 'Capitalised development costs',
   cfi: 'Net cash from investing activities',
   debt_drawn: 'Debt drawn',
   debt_repaid: 'Debt repaid',
@@ -68,10 +85,21 @@ interface SheetLayout {
   readonly title: string;
   /** 0 is a balance at an instant. */
   readonly months: 0 | 3;
-  readonly lines: readonly DemoLine[];
+  readonly lines: readonly SheetLine[];
   /** Lines from here on stand under a heading "Memorandum". */
-  readonly memorandumFrom: DemoLine | null;
+  readonly memorandumFrom: SheetLine | null;
 }
+
+const MEMORANDUM: readonly SheetLine[] = ['ppe_gross', 'revolver_drawn', 'revolver_commitment'];
+
+const BALANCE_LINES_AS_PRINTED: readonly SheetLine[] = [
+  ...BALANCE_LINES.filter((line) => !MEMORANDUM.includes(line)).flatMap((line): SheetLine[] => {
+    if (line === 'total_assets') return ['non_current', line];
+    if (line === 'retained_earnings') return ['share_capital', line];
+    return line === 'equity' ? [line, 'equity_and_liabilities'] : [line];
+  }),
+  ...MEMORANDUM,
+];
 
 export const SHEETS: readonly SheetLayout[] = [
   {
@@ -87,8 +115,8 @@ export const SHEETS: readonly SheetLayout[] = [
     part: 'balance',
     title: 'Balance sheet at',
     months: 0,
-    lines: BALANCE_LINES,
-    memorandumFrom: 'revolver_drawn',
+    lines: BALANCE_LINES_AS_PRINTED,
+    memorandumFrom: 'ppe_gross',
   },
   {
     name: 'Cash flow',
@@ -105,7 +133,7 @@ type SheetRow =
   | { readonly row: number; readonly text: string }
   | {
       readonly row: number;
-      readonly line: DemoLine;
+      readonly line: SheetLine;
       readonly label: string;
       readonly amounts: readonly number[];
     };
@@ -120,8 +148,15 @@ export interface FilledSheet {
 
 const HEADING_ROW = 5;
 
+/** What the analyst answered for the rows of the memorandum, by the reader's question keys. */
+export const MEMORANDUM_PLACEMENTS: Readonly<Record<string, DemoLine>> = {
+  [`placement:Balance sheet:${LABELS.revolver_drawn}`]: 'revolver_drawn',
+  [`placement:Balance sheet:${LABELS.revolver_commitment}`]: 'revolver_commitment',
+  [`placement:Cash flow:${LABELS.scheduled_principal}`]: 'scheduled_principal',
+};
+
 /** Lines that a borrower without them has no row for; any other line is printed, with zeros where it is nothing. */
-const ONLY_WHERE_CARRIED: readonly DemoLine[] = [
+const ONLY_WHERE_CARRIED: readonly SheetLine[] = [
   'research_development',
   'inventory',
   'junior_debt',
@@ -146,7 +181,7 @@ export function filledSheet(
   );
   let row = HEADING_ROW + 1;
   for (const line of layout.lines) {
-    const amounts = quarters.map(({ lines }) => lines[line]);
+    const amounts = quarters.map((quarter) => amountOf(line, quarter));
     if (ONLY_WHERE_CARRIED.includes(line) && amounts.every((amount) => amount === 0)) continue;
     if (line === layout.memorandumFrom) {
       rows.push({ row: row + 1, text: 'Memorandum' });
