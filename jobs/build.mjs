@@ -2,7 +2,9 @@
 import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
+import { setTimeout as sleep } from 'node:timers/promises';
 import { run } from './packages.mjs';
+import { takePlace } from './place.mjs';
 
 const SOURCES = ['src', 'public', 'package-lock.json', 'package.json', 'astro.config.mjs', 'tsconfig.json'];
 const MARK = 'dist/.built-from';
@@ -18,10 +20,21 @@ function fingerprint(appUrl) {
   return hash.digest('hex');
 }
 
+/** Two builds at once would write over each other: the second waits, and finds the work done. */
 export async function buildPages(env, say, signal) {
   const wanted = fingerprint(env.APP_URL);
-  if (existsSync(MARK) && readFileSync(MARK, 'utf8') === wanted) return;
-  say('building the pages');
-  await run('node', ['node_modules/astro/astro.js', 'build', '--silent'], { env, signal });
-  writeFileSync(MARK, wanted);
+  const isBuilt = () => existsSync(MARK) && readFileSync(MARK, 'utf8') === wanted;
+  let place = await takePlace('node_modules', { command: 'a build of the pages' });
+  while (!place.isFree) {
+    await sleep(500, undefined, { signal });
+    place = await takePlace('node_modules', { command: 'a build of the pages' });
+  }
+  try {
+    if (isBuilt()) return;
+    say('building the pages');
+    await run('node', ['node_modules/astro/astro.js', 'build', '--silent'], { env, signal });
+    writeFileSync(MARK, wanted);
+  } finally {
+    place.leave();
+  }
 }

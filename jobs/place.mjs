@@ -30,7 +30,7 @@ const listen = (server, address) =>
 /**
  * @param {string} dataFolder
  * @param {{ command: string, address?: string }} holder what the next one is told
- * @returns {Promise<{ isFree: true } | { isFree: false, holder: { command: string, address?: string } }>}
+ * @returns {Promise<{ isFree: true, leave: () => void } | { isFree: false, holder: { command: string, address?: string } }>}
  */
 export async function takePlace(dataFolder, holder) {
   mkdirSync(dataFolder, { recursive: true, mode: 0o711 });
@@ -40,7 +40,7 @@ export async function takePlace(dataFolder, holder) {
     try {
       await listen(server, address);
       server.unref();
-      return { isFree: true };
+      return { isFree: true, leave: () => server.close() };
     } catch (error) {
       if (error.code !== 'EADDRINUSE') throw error;
       const there = await askHolder(address);

@@ -1,6 +1,6 @@
 /** One throw-away MariaDB for the whole test run, whichever projects need it. */
 import { randomBytes } from 'node:crypto';
-import { mkdtempSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import mariadb from 'mariadb';
@@ -41,6 +41,8 @@ export async function releaseServer(): Promise<void> {
 
 async function start(): Promise<LocalServer> {
   const directory = mkdtempSync(join(tmpdir(), 'underkeel-'));
+  // Under root the server runs as an account of its own, which has to get in.
+  chmodSync(directory, 0o711);
   const server = await startDatabase({ directory: join(directory, 'db'), fast: true, bufferPool: '128M' });
   return {
     port: server.port,

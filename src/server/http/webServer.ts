@@ -150,5 +150,6 @@ function refuse(request: IncomingMessage, response: ServerResponse, problem: Pla
   response.writeHead(problem.status, Object.fromEntries(headers));
   response.end(JSON.stringify(problemBody(requestId, problem)));
   request.resume();
-  setTimeout(() => request.socket.destroy(), LINGER_MS).unref();
+  const { socket } = request;
+  setTimeout(() => socket.destroy(), LINGER_MS).unref();
 }
