@@ -1,0 +1,105 @@
+/** What each column of a table stands for, as far as its own words say; lengths and years are settled later. */
+import type { PlainDate } from '#core/calendar/plainDate.ts';
+import { readHeadingText, saysPeriod, type HeadingText, type Scenario } from './headingText.ts';
+import type { PeriodText } from './periodText.ts';
+import type { Table, TableColumn } from './tables.ts';
+
+export interface ColumnWords {
+  readonly key: string;
+  readonly index: number;
+  readonly heading: string;
+  readonly hidden: boolean;
+  readonly role: 'period' | 'derived' | 'note' | 'debit' | 'credit' | 'unknown';
+  readonly period: PeriodText;
+  readonly scenario: Scenario;
+  readonly priorYear: boolean;
+  readonly restated: boolean;
+  /** A name beside the period: an entity, or a borrower in a file of many. */
+  readonly name: string;
+  readonly nameText: string;
+}
+
+const NO_PERIOD: PeriodText = {
+  end: null,
+  start: null,
+  eitherDay: null,
+  months: null,
+  yearToDate: false,
+  quarter: null,
+  half: null,
+  periodNumber: null,
+  year: null,
+  fiscal: false,
+  weeks: null,
+  rest: '',
+};
+
+export function columnWords(table: Table): ColumnWords[] {
+  const read = table.columns.map((column) => column.headings.map((cell) => readHeadingText(cell.text)));
+  const sides = new Set(read.flat().map(({ side }) => side));
+  const isTrialBalance = sides.has('debit') && sides.has('credit');
+  const anyPeriod = read.flat().some(saysPeriod);
+  return table.columns.map((column, index) =>
+    wordsOf(column, index, read[index] ?? [], isTrialBalance, anyPeriod),
+  );
+}
+
+function wordsOf(
+  column: TableColumn,
+  index: number,
+  headings: readonly HeadingText[],
+  isTrialBalance: boolean,
+  anyPeriod: boolean,
+): ColumnWords {
+  const names = headings.map(({ rest }, at) => ({ rest, text: column.headings[at]?.text ?? '' }));
+  const named = names.filter(({ rest }) => rest !== '');
+  const side = isTrialBalance ? (headings.find((heading) => heading.side)?.side ?? null) : null;
+  const scenario = isTrialBalance
+    ? null
+    : headings.map((heading) => heading.scenario).findLast((found) => found !== null);
+  return {
+    key: column.key,
+    index,
+    heading: column.headings.map(({ text }) => text).join(' · '),
+    hidden: column.hidden,
+    role: side ?? roleOf(headings, anyPeriod),
+    period: headings.reduce((sum, heading) => combinePeriods(sum, heading.period), NO_PERIOD),
+    scenario: scenario ?? 'actual',
+    priorYear: headings.some((heading) => heading.priorYear),
+    restated: headings.some((heading) => heading.restated),
+    name: named.map(({ rest }) => rest).join(' '),
+    nameText: named.map(({ text }) => text).join(' · '),
+  };
+}
+
+function roleOf(headings: readonly HeadingText[], anyPeriod: boolean): ColumnWords['role'] {
+  if (headings.some((heading) => heading.note)) return 'note';
+  if (headings.some((heading) => heading.derived)) return 'derived';
+  if (headings.some(saysPeriod)) return 'period';
+  if (headings.length === 0 || anyPeriod) return 'unknown';
+  return 'period';
+}
+
+/** The lower heading says more of its column than the one above. */
+export function combinePeriods(upper: PeriodText, lower: PeriodText): PeriodText {
+  return {
+    end: lower.end ?? upper.end,
+    start: lower.start ?? upper.start,
+    eitherDay: lower.eitherDay ?? upper.eitherDay,
+    months: lower.months ?? upper.months,
+    yearToDate: lower.yearToDate || upper.yearToDate,
+    quarter: lower.quarter ?? upper.quarter,
+    half: lower.half ?? upper.half,
+    periodNumber: lower.periodNumber ?? upper.periodNumber,
+    year: lower.year ?? upper.year,
+    fiscal: lower.fiscal || upper.fiscal,
+    weeks: lower.weeks ?? upper.weeks,
+    rest: [upper.rest, lower.rest].filter((text) => text !== '').join(' '),
+  };
+}
+
+/** What the titles above a table say of its period; the nearest title counts most. */
+export const titlePeriod = (table: Table): PeriodText =>
+  table.titles.map((cell) => readHeadingText(cell.text).period).reduce(combinePeriods, NO_PERIOD);
+
+export const isDay = (date: PlainDate | null): date is PlainDate => date !== null;

@@ -1,0 +1,117 @@
+/** What a column heading says besides its period: scenario, derived figures, notes, versions. */
+import { plainText } from './plainWords.ts';
+import { readPeriodText, type PeriodText } from './periodText.ts';
+import { readScaleText, type ScaleText } from './scaleText.ts';
+
+export type Scenario = 'actual' | 'budget' | 'forecast';
+
+export interface HeadingText {
+  readonly period: PeriodText;
+  readonly scale: ScaleText;
+  readonly scenario: Scenario | null;
+  /** Variance, change, share: worked out from other columns. */
+  readonly derived: boolean;
+  /** Numbers of notes. */
+  readonly note: boolean;
+  /** 'Prior year': the same period a year before the column beside it. */
+  readonly priorYear: boolean;
+  readonly restated: boolean;
+  readonly side: 'debit' | 'credit' | null;
+  /** What is left: a name, of an entity perhaps. */
+  readonly rest: string;
+}
+
+const WORDS = {
+  derived:
+    /(?<![a-z])(?:var(?:iance|iation)?s?\.?|diff(?:erence|erenz)?\.?|delta|abw(?:eichung)?\.?|ecart|desviacion|change|growth|yoy|y\/y|veranderung|evolution|margin|common size|share of|anteil|in %|of sales|of revenu|vs\.?)(?![a-z])|[%δ△∆]/,
+  note: /^(?:notes?|anm(?:erkung)?\.?|anhang|ref\.?|annexe|nota|notas|no\.|nr\.?)$/,
+  priorYear:
+    /(?<![a-z])(?:prior year|previous year|last year|py|vorjahr|vj|annee precedente|exercice precedent|n-1|ano anterior|ejercicio anterior|same period last year)(?![a-z])/,
+  restated:
+    /(?<![a-z])(?:restated|as restated|adjusted comparatives|angepasst|retraite|reexpresado|reclassified)(?![a-z])/,
+  original:
+    /(?<![a-z])(?:as (?:originally |previously )?reported|original|as published|previously reported)(?![a-z])/,
+  budget: /(?<![a-z])(?:budget|bud|plan(?:ned)?|soll|target|presupuesto|budgete)(?![a-z])/,
+  forecast:
+    /(?<![a-z])(?:forecast|fcst|fc|estimate[ds]?|est\.?|outlook|latest estimate|le|projection|projected|prevision(?:nel|s)?|prognose|hochrechnung|expected|erwartet)(?![a-z])/,
+  actual: /(?<![a-z])(?:actuals?|act\.?|ist|reel|real|realise)(?![a-z])/,
+  debit: /(?<![a-z])(?:debits?|soll|debe|dr)(?![a-z])/,
+  credit: /(?<![a-z])(?:credits?|haben|haber|cr)(?![a-z])/,
+} as const;
+
+/** 'Dec-26E', '2026B', 'Q4 26F', '2025A': one letter behind the year. */
+const SUFFIX = /(?<=\d)\s?\(?([ebfa])\)?$/;
+const SUFFIXES: Readonly<Record<string, Scenario>> = {
+  e: 'forecast',
+  f: 'forecast',
+  b: 'budget',
+  a: 'actual',
+};
+
+export function readHeadingText(text: string): HeadingText {
+  let plain = plainText(text).replace(/\s+/g, ' ').trim();
+  const taken = (pattern: RegExp): boolean => {
+    if (!pattern.test(plain)) return false;
+    plain = plain.replace(pattern, ' ').replace(/\s+/g, ' ').trim();
+    return true;
+  };
+  const note = WORDS.note.test(plain);
+  const side = WORDS.credit.test(plain) ? 'credit' : WORDS.debit.test(plain) ? 'debit' : null;
+  const suffix = SUFFIX.exec(plain)?.[1];
+  if (suffix) plain = plain.replace(SUFFIX, '');
+  const priorYear = taken(WORDS.priorYear);
+  const restated = taken(WORDS.restated);
+  taken(WORDS.original);
+  const derived = taken(WORDS.derived);
+  const budget = taken(WORDS.budget);
+  const forecast = taken(WORDS.forecast);
+  const actual = taken(WORDS.actual);
+  const scale = readScaleText(text);
+  const period = readPeriodText(plain);
+  return {
+    period,
+    scale,
+    scenario: budget
+      ? 'budget'
+      : forecast
+        ? 'forecast'
+        : actual
+          ? 'actual'
+          : ((suffix ? SUFFIXES[suffix] : null) ?? null),
+    derived,
+    note,
+    priorYear,
+    restated,
+    side,
+    rest: nameLeft(period.rest),
+  };
+}
+
+const CONNECTING =
+  /(?<![a-z])(?:as|at|of|the|for|to|on|in|ended|ending|per|zum|vom|am|au|du|le|a|al|de|stand|and|quarter|period|month|months|year|half|unaudited|audited|thousands?|millions?|tsd|eur|usd|gbp|sek|teur|keur|meur|k|m|mio|000s?)(?![a-z])/g;
+
+/** A name of at least two letters, without what connects dates and states units. */
+function nameLeft(rest: string): string {
+  const name = rest
+    .replace(CONNECTING, ' ')
+    .replace(/[^a-z0-9 ]+/g, ' ')
+    .replace(/\s+/g, ' ')
+    .trim();
+  return /[a-z]{2}/.test(name) ? name : '';
+}
+
+/** Whether a heading says something that only headings of amounts say. */
+export function saysPeriod({ period, scenario, derived, priorYear }: HeadingText): boolean {
+  return (
+    period.end !== null ||
+    period.eitherDay !== null ||
+    period.year !== null ||
+    period.quarter !== null ||
+    period.half !== null ||
+    period.periodNumber !== null ||
+    period.yearToDate ||
+    scenario !== null ||
+    derived ||
+    priorYear
+  );
+}

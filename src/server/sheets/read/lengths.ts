@@ -1,0 +1,230 @@
+/**
+ * How many months each column of flows covers, where its words do not say: proven by the cash roll or by retained
+ * earnings, else asked. Growth from column to column proves nothing: it only words the question.
+ */
+import { addMonthsToMonthEnd, type PlainDate } from '#core/calendar/plainDate.ts';
+import { ZERO, type Decimal } from '#core/money/decimal.ts';
+import type { CellRef } from '#core/statements/workbookReading.ts';
+import type { Asking } from './asking.ts';
+import { cellName } from './cells.ts';
+import { columnPeriod, monthsIntoYear, titleLengthFits, type PeriodEvidence } from './periods.ts';
+import type { SettledColumn, StatementTable } from './statements.ts';
+import type { Line } from './wordings/lines.ts';
+
+const MONTHS_IN_YEAR = 12;
+/** A figure of three digits or fewer can agree by chance. */
+const LEAST_PROOF = 1000;
+
+/** The columns of a table that have a last day; `months` is null where the length of their flows is open. */
+export type SettledColumns = ReadonlyMap<StatementTable, readonly SettledColumn[]>;
+
+export function settleColumns(
+  tables: readonly StatementTable[],
+  evidence: PeriodEvidence,
+  asking: Asking,
+): SettledColumns {
+  const settled = new Map<StatementTable, readonly SettledColumn[]>(
+    tables.map((table) => [table, withEnds(table, evidence)]),
+  );
+  const proofs = lengthProofs(settled);
+  for (const [table, columns] of settled) {
+    if (!hasFlows(table)) continue;
+    const proven = columns.map((column) => withLength(column, proofs.get(proofKey(table, column)) ?? null));
+    settled.set(table, askLengths(table, proven, evidence, asking));
+  }
+  return settled;
+}
+
+const hasFlows = ({ runs }: StatementTable): boolean =>
+  runs.some(
+    ({ part, rows }) => (part === 'income' || part === 'cash-flow') && rows.some((row) => row.line !== null),
+  );
+
+const withLength = (column: SettledColumn, months: number | null): SettledColumn => ({
+  ...column,
+  months: column.months ?? months,
+});
+
+function withEnds(table: StatementTable, evidence: PeriodEvidence): SettledColumn[] {
+  const periods = table.columns.flatMap((words) => {
+    if (words.role !== 'period') return [];
+    const period = columnPeriod(words, table.title, evidence);
+    return period.end ? [{ ...words, ...period, end: period.end }] : [];
+  });
+  const ends = periods.filter(({ scenario }) => scenario === 'actual').map(({ end }) => end);
+  const { months } = table.title;
+  const fits = months !== null && titleLengthFits(months, ends);
+  return periods.map((period) => {
+    const own = { ...period, months: period.months ?? (fits ? months : null) };
+    return period.priorYear ? { ...own, end: addMonthsToMonthEnd(own.end, -MONTHS_IN_YEAR) } : own;
+  });
+}
+
+const proofKey = (table: StatementTable, column: SettledColumn): string =>
+  `${table.table.sheet.name}:${table.table.rows[0]?.number}:${column.key}`;
+
+interface Figure {
+  readonly table: StatementTable;
+  readonly column: SettledColumn;
+  readonly amount: Decimal;
+}
+
+function figuresOf(settled: SettledColumns, line: Line): Figure[] {
+  return [...settled].flatMap(([table, columns]) =>
+    table.runs.flatMap((run) =>
+      run.rows.flatMap((row, at) => {
+        if (row.line !== line) return [];
+        return columns.flatMap((column) => {
+          const amount = run.amounts[at]?.[column.index];
+          return amount && column.scenario === 'actual' ? [{ table, column, amount }] : [];
+        });
+      }),
+    ),
+  );
+}
+
+/** Months by table and column. A proof that points to two lengths is none. */
+function lengthProofs(settled: SettledColumns): Map<string, number> {
+  const found = new Map<string, Set<number>>();
+  const add = (figure: Figure, months: number) => {
+    const key = proofKey(figure.table, figure.column);
+    found.set(key, (found.get(key) ?? new Set()).add(months));
+  };
+  const spans = (figure: Figure, balances: readonly Figure[]): number[] =>
+    balances
+      .filter(({ amount, column }) => amount.eq(figure.amount) && column.end < figure.column.end)
+      .map(({ column }) => monthsBetween(column.end, figure.column.end))
+      .filter((months) => months >= 1 && months <= MONTHS_IN_YEAR);
+  const cash = figuresOf(settled, 'cash');
+  const opening = figuresOf(settled, 'opening_cash').filter(({ amount }) => amount.abs().gte(LEAST_PROOF));
+  for (const figure of opening) for (const months of spans(figure, cash)) add(figure, months);
+  for (const figure of figuresOf(settled, 'net_income')) {
+    for (const months of retainedMonths(settled, figure)) add(figure, months);
+  }
+  const proofs = new Map(
+    [...found].flatMap(([key, months]) => {
+      const [only] = months;
+      return months.size === 1 && only !== undefined ? [[key, only] as const] : [];
+    }),
+  );
+  return sharedProofs(settled, proofs);
+}
+
+/** The result of the period is what retained earnings grew by, where nothing was paid out. */
+function retainedMonths(settled: SettledColumns, result: Figure): number[] {
+  if (result.amount.abs().lt(LEAST_PROOF)) return [];
+  const retained = figuresOf(settled, 'retained_earnings');
+  const closing = retained.find(({ column }) => column.end === result.column.end);
+  if (!closing) return [];
+  return retained
+    .filter(
+      ({ column, amount }) =>
+        column.end < result.column.end && closing.amount.minus(amount).eq(result.amount),
+    )
+    .map(({ column }) => monthsBetween(column.end, result.column.end));
+}
+
+/** A cash flow column of proven length proves the income column of the same day with the same result. */
+function sharedProofs(settled: SettledColumns, proofs: Map<string, number>): Map<string, number> {
+  const results = figuresOf(settled, 'net_income');
+  for (const start of figuresOf(settled, 'operating_adjustment')) {
+    const months = proofs.get(proofKey(start.table, start.column));
+    const same = results.find(
+      ({ column, amount }) => column.end === start.column.end && amount.eq(start.amount),
+    );
+    if (months === undefined || !same || start.amount.eq(ZERO)) continue;
+    const key = proofKey(same.table, same.column);
+    if (!proofs.has(key)) proofs.set(key, months);
+  }
+  return proofs;
+}
+
+export const monthsBetween = (from: PlainDate, to: PlainDate): number => {
+  const [fromYear, fromMonth] = from.split('-').map(Number) as [number, number];
+  const [toYear, toMonth] = to.split('-').map(Number) as [number, number];
+  return (toYear - fromYear) * MONTHS_IN_YEAR + toMonth - fromMonth;
+};
+
+/** Each pattern gives every open column its months. */
+interface Pattern {
+  readonly value: string;
+  readonly months: readonly number[];
+  readonly label: string;
+}
+
+function askLengths(
+  table: StatementTable,
+  columns: readonly SettledColumn[],
+  { yearEnd }: PeriodEvidence,
+  asking: Asking,
+): readonly SettledColumn[] {
+  const open = columns.filter(({ months, scenario }) => months === null && scenario === 'actual');
+  if (open.length === 0) return columns;
+  const patterns = patternsOf(open, yearEnd?.month ?? null);
+  const headings = open.map(({ heading }) => `'${heading}'`).join(', ');
+  const signature = open.map(({ heading }) => heading.replace(/\d/g, '')).join('|');
+  const answer = asking.ask({
+    key: `period-length:${signature}`.slice(0, 190),
+    kind: 'period-length',
+    holdsFor: 'layout',
+    text: `${looksCumulative(table, open) ? 'The figures look cumulative, but no sheet says so' : 'No sheet says how long the periods are'}. How many months do ${headings} on '${table.table.sheet.name}' cover?`,
+    where: open.flatMap((column) => headingPlace(table, column)),
+    options: patterns.map(({ value, label }) => ({ value, label })),
+    accepts: (given) => explicitMonths(given, open) !== null,
+  });
+  if (answer === null) return columns;
+  const months = patterns.find(({ value }) => value === answer)?.months ?? explicitMonths(answer, open);
+  return columns.map((column) => {
+    const at = open.indexOf(column);
+    return at < 0 ? column : { ...column, months: months?.[at] ?? null };
+  });
+}
+
+function headingPlace(table: StatementTable, column: SettledColumn): CellRef[] {
+  const cell = table.table.columns[column.index]?.headings.at(-1);
+  return cell ? [{ sheet: cell.sheet, cell: cellName(cell) }] : [];
+}
+
+/** 'B=3;C=6;D=9' */
+function explicitMonths(answer: string, open: readonly SettledColumn[]): number[] | null {
+  const given = new Map(answer.split(';').map((pair) => pair.split('=') as [string, string | undefined]));
+  const months = open.map(({ key }) => Number(given.get(key)));
+  return months.every((count) => Number.isInteger(count) && count >= 1 && count <= 24) ? months : null;
+}
+
+function patternsOf(open: readonly SettledColumn[], yearEndMonth: number | null): Pattern[] {
+  const ends = open.map(({ end }) => end);
+  const each = [3, 1, 6, 12]
+    .filter((months) => months === 12 || titleLengthFits(months, ends))
+    .map((months) => ({
+      value: `each:${months}`,
+      months: ends.map(() => months),
+      label: `Each covers ${months} ${months === 1 ? 'month' : 'months'}`,
+    }));
+  const yearEnds = yearEndMonth === null ? [12, 3, 6, 9] : [yearEndMonth];
+  const cumulative = yearEnds.map((month) => {
+    const months = ends.map((end) => monthsIntoYear(end, month));
+    return {
+      value: `from-year-end:${month}`,
+      months,
+      label: `${months.join(', ')} months: each counts from the beginning of the year, which ends in month ${month}`,
+    };
+  });
+  const growing = cumulative.filter(
+    ({ months }) => new Set(months).size === months.length || yearEndMonth !== null,
+  );
+  return [...each.slice(0, 1), ...growing, ...each.slice(1)];
+}
+
+/** Revenue that grows by about as much from each column to the next. */
+function looksCumulative(table: StatementTable, open: readonly SettledColumn[]): boolean {
+  const revenue = table.runs.flatMap((run) =>
+    run.rows.flatMap((row, at) => (row.line === 'revenue' ? [run.amounts[at] ?? []] : [])),
+  )[0];
+  const inOrder = [...open].sort((one, other) => (one.end < other.end ? -1 : 1));
+  const amounts = inOrder.flatMap(({ index }) => revenue?.[index] ?? []);
+  return (
+    amounts.length >= 2 &&
+    amounts.every((amount, at) => at === 0 || amount.gt((amounts[at - 1] ?? ZERO).times('1.25')))
+  );
+}

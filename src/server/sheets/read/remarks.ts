@@ -1,0 +1,87 @@
+/** What is worth saying of a file that hinders nothing. */
+import type { Asking } from './asking.ts';
+import { cellName } from './cells.ts';
+import type { TableFact } from './facts.ts';
+import { rowPlace, type StatementTable } from './statements.ts';
+
+export function noteContents(
+  tables: readonly StatementTable[],
+  facts: readonly TableFact[],
+  asking: Asking,
+): void {
+  for (const table of tables) {
+    noteColumns(table, asking);
+    noteRows(table, asking);
+  }
+  noteHiddenSheets(facts, asking);
+  const hasCashFlow = tables.some(({ runs }) =>
+    runs.some(
+      ({ part, rows }) =>
+        part === 'cash-flow' && rows.some(({ line }) => line === 'cfo' || line === 'net_change_in_cash'),
+    ),
+  );
+  if (!hasCashFlow) asking.note('no-cash-flow', 'The file has no cash flow statement.');
+}
+
+function noteColumns({ table, columns }: StatementTable, asking: Asking): void {
+  const where = { sheet: table.sheet.name, cell: 'A1' };
+  const other = columns.filter(({ role, scenario }) => role === 'period' && scenario !== 'actual');
+  if (other.length > 0) {
+    asking.note(
+      'scenario-columns',
+      `Budget or forecast columns were kept apart: ${other.map(({ key }) => key).join(', ')}.`,
+      where,
+    );
+  }
+  const derived = columns.filter(({ role }) => role === 'derived');
+  if (derived.length > 0) {
+    asking.note(
+      'derived-columns-ignored',
+      `Columns worked out from others were left out: ${derived.map(({ key }) => key).join(', ')}.`,
+      where,
+    );
+  }
+  const inWeeks = columns.find(({ period }) => period.weeks !== null);
+  if (inWeeks) asking.note('week-year', `Periods are counted in weeks: '${inWeeks.heading}'.`, where);
+}
+
+function noteRows({ table, runs }: StatementTable, asking: Asking): void {
+  const cells = table.rows.flatMap((row) => row.cells.flatMap((cell) => cell ?? []));
+  const texts = cells.filter(({ fromText }) => fromText);
+  const [first] = texts;
+  if (first) {
+    asking.note('text-numbers', `${texts.length} figures are stored as text. They were converted.`, {
+      sheet: first.sheet,
+      cell: cellName(first),
+    });
+  }
+  if (runs.some(({ signed }) => signed.costsNegative || signed.liabilitiesNegative)) {
+    asking.note(
+      'costs-negative',
+      `Costs or creditors on '${table.sheet.name}' are written as negative figures. They were turned as a block; the totals agree with it.`,
+      { sheet: table.sheet.name, cell: 'A1' },
+    );
+  }
+  for (const { rows } of runs) {
+    for (const { line, row } of rows) {
+      const isFilled = row.cells.some((cell) => cell?.kind === 'amount' && cell.amount?.isZero() === false);
+      if (line !== 'balancing_item' || !isFilled) continue;
+      asking.note(
+        'plug-line',
+        `The line '${row.label}' makes the sums come out. Ask what it stands for.`,
+        rowPlace(table, row),
+      );
+    }
+  }
+}
+
+function noteHiddenSheets(facts: readonly TableFact[], asking: Asking): void {
+  for (const { table, cell } of facts) {
+    const { sheet } = table.table;
+    if (!sheet.hidden) continue;
+    asking.note('hidden-sheet-read', `Figures were read from the hidden sheet '${sheet.name}'.`, {
+      sheet: sheet.name,
+      cell,
+    });
+  }
+}

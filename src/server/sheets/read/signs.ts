@@ -1,0 +1,261 @@
+/** The sign of each row: by block, proven by the totals; single cells are never turned. */
+import { decimal, type Decimal } from '#core/money/decimal.ts';
+import { LINE_ITEMS, type LineItemCode } from '#core/statements/lineItems.ts';
+import { findSums, type SumFound, type SumRow } from './arithmetic.ts';
+import type { ReadRow } from './rows.ts';
+import type { Line } from './wordings/lines.ts';
+
+export const COST_LINES: ReadonlySet<Line> = new Set<Line>([
+  'cogs',
+  'sga',
+  'staff_costs',
+  'research_development',
+  'rent_expense',
+  'other_operating_expense',
+  'depreciation',
+  'amortisation',
+  'depreciation_and_amortisation',
+  'impairment',
+  'interest_expense',
+  'income_tax',
+  'total_operating_costs',
+]);
+const OUTFLOW_LINES: ReadonlySet<Line> = new Set<Line>([
+  'capex',
+  'capitalised_costs_paid',
+  'acquisitions_paid',
+  'debt_repaid',
+  'dividends_paid',
+  'interest_paid',
+  'tax_paid',
+  'rent_paid',
+  'lease_repaid',
+]);
+const LIABILITY_LINES: ReadonlySet<Line> = new Set<Line>([
+  'payables',
+  'accrued_liabilities',
+  'tax_payable',
+  'short_term_debt',
+  'current_liabilities',
+  'senior_debt',
+  'junior_debt',
+  'lease_liabilities',
+  'shareholder_loans',
+  'deferred_tax_liability',
+  'other_non_current_liabilities',
+  'total_non_current_liabilities',
+  'total_liabilities',
+]);
+const EQUITY_LINES: ReadonlySet<Line> = new Set<Line>([
+  'equity',
+  'retained_earnings',
+  'share_capital',
+  'other_equity',
+]);
+const FREE_SIGNS: ReadonlySet<Line> = new Set<Line>([
+  'other_non_operating',
+  'net_finance_result',
+  'inventory_change',
+  'interest_expense',
+  'interest_income',
+  'income_tax',
+]);
+const ASIDE: ReadonlySet<Line> = new Set<Line>([
+  'memo',
+  'adjusted_ebitda',
+  'total_debt',
+  'net_debt',
+  'attributable_result',
+]);
+const SUBTOTALS: ReadonlySet<Line> = new Set<Line>([
+  ...LINE_ITEMS.filter((item) => 'subtotal' in item).map((item) => item.code),
+  'total_operating_costs',
+  'total_income',
+  'gross_operating_surplus',
+  'total_non_current_assets',
+  'total_non_current_liabilities',
+  'total_equity_and_liabilities',
+  'net_current_assets',
+  'assets_less_current_liabilities',
+  'net_change_in_cash',
+  'closing_cash',
+  'operating_subtotal',
+]);
+const CLOSES_ALL: ReadonlySet<Line> = new Set<Line>([
+  'gross_profit',
+  'ebit',
+  'profit_before_tax',
+  'net_income',
+]);
+const CLOSES_SECTION: ReadonlySet<Line> = new Set<Line>([
+  'current_assets',
+  'total_non_current_assets',
+  'current_liabilities',
+  'total_non_current_liabilities',
+  'equity',
+  'cfo',
+  'cfi',
+  'cff',
+]);
+const BARRIERS: ReadonlySet<Line> = new Set<Line>([
+  'total_assets',
+  'total_equity_and_liabilities',
+  'net_income',
+]);
+/** Share of negative cells from which costs or liabilities are written as negative figures: methods.md A1. */
+const NEGATIVE_BLOCK_SHARE = 0.8;
+
+export const isSubtotal = (line: Line | null): boolean => line !== null && SUBTOTALS.has(line);
+
+export type Values = readonly (readonly (Decimal | null)[])[];
+
+export interface Signed {
+  readonly sums: SumFound;
+  /** What to multiply the printed amount of a row with to get the stored one. */
+  readonly factorOf: (index: number) => 1 | -1;
+  /** Rows whose sign neither the block nor a sum settles. */
+  readonly unsettled: ReadonlySet<number>;
+  readonly costsNegative: boolean;
+  readonly liabilitiesNegative: boolean;
+}
+
+/** `rows` are one run of one part of the statements; `values` hold their amounts in the columns that count. */
+export function signRows(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
+  const part = rows.find((row) => row.part !== null)?.part;
+  if (part === 'income') return signIncome(rows, values, step);
+  if (part === 'cash-flow') return signCashFlow(rows, values, step);
+  return signBalance(rows, values, step);
+}
+
+function sumRow(
+  row: ReadRow,
+  values: readonly (Decimal | null)[],
+  sign: 1 | -1,
+  eitherSign: boolean,
+): SumRow {
+  const { line } = row;
+  const base = {
+    values,
+    sign,
+    eitherSign,
+    closes: 'nothing',
+    barrier: line !== null && BARRIERS.has(line),
+  } as const;
+  if (!row.hasAmounts || row.ofWhich || (line !== null && ASIDE.has(line))) return { ...base, role: 'aside' };
+  if (line !== null && SUBTOTALS.has(line)) {
+    return {
+      ...base,
+      role: 'total',
+      closes: CLOSES_ALL.has(line) ? 'all' : CLOSES_SECTION.has(line) ? 'since-total' : 'nothing',
+    };
+  }
+  const saysTotal = /^\s*(?:total|sub-?total|sum(?:me)?|zwischensumme|sous-total|suma)(?![a-z])/i.test(
+    row.row.label,
+  );
+  const couldBeSum = line === null || saysTotal || row.row.bold;
+  return { ...base, role: couldBeSum ? 'maybe' : 'part' };
+}
+
+function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): Signed {
+  const of = (wanted: (line: Line) => boolean) =>
+    rows.flatMap((row, at) => (row.line && wanted(row.line) ? (printed[at] ?? []) : []));
+  /** Exports of ledgers write income as credit, negative. */
+  const turned = shareNegative(of((line) => line === 'revenue')) >= NEGATIVE_BLOCK_SHARE ? -1 : 1;
+  const values = turned === 1 ? printed : printed.map((row) => row.map((value) => value && value.neg()));
+  const negativeShare = shareNegative(of((line) => COST_LINES.has(line)));
+  const assumed =
+    turned === 1 ? negativeShare >= NEGATIVE_BLOCK_SHARE : negativeShare <= 1 - NEGATIVE_BLOCK_SHARE;
+  const isCost = (line: Line | null) => line !== null && COST_LINES.has(line);
+  const attempt = (costsNegative: boolean) =>
+    findSums(
+      rows.map((row, at) => {
+        const free = row.line === null || FREE_SIGNS.has(row.line);
+        return sumRow(row, values[at] ?? [], isCost(row.line) && !costsNegative ? -1 : 1, free);
+      }),
+      step,
+    );
+  const [first, second] = [attempt(assumed), attempt(!assumed)];
+  const useSecond = second.sums.size > first.sums.size;
+  const costsNegative = useSecond ? !assumed : assumed;
+  const sums = useSecond ? second : first;
+  return {
+    sums,
+    factorOf: (index) => {
+      const line = rows[index]?.line ?? null;
+      const contribution = sums.signs.get(index) ?? (isCost(line) && !costsNegative ? -1 : 1);
+      return (turned * (isCost(line) ? -contribution : contribution)) as 1 | -1;
+    },
+    unsettled: new Set(),
+    costsNegative: costsNegative && turned === 1,
+    liabilitiesNegative: false,
+  };
+}
+
+function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
+  const positiveOutflow = (at: number) => {
+    const line = rows[at]?.line;
+    const filled = (values[at] ?? []).filter((value) => value !== null && !value.isZero());
+    return (
+      line && OUTFLOW_LINES.has(line) && filled.length > 0 && filled.every((value) => value?.isPositive())
+    );
+  };
+  const saysUsed = (row: ReadRow) => /used|outflow|abfluss|utilis/i.test(row.row.label);
+  const sums = findSums(
+    rows.map((row, at) => {
+      const free = row.line === null || positiveOutflow(at) || (saysUsed(row) && isSubtotal(row.line));
+      return sumRow(row, values[at] ?? [], 1, free === true);
+    }),
+    step,
+  );
+  const unsettled = new Set(
+    rows.flatMap((_, at) => (positiveOutflow(at) && !sums.signs.has(at) ? [at] : [])),
+  );
+  return {
+    sums,
+    factorOf: (index) => sums.signs.get(index) ?? 1,
+    unsettled,
+    costsNegative: false,
+    liabilitiesNegative: false,
+  };
+}
+
+function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
+  const sums = findSums(
+    rows.map((row, at) => sumRow(row, values[at] ?? [], 1, false)),
+    step,
+  );
+  const of = (lines: ReadonlySet<Line>) =>
+    rows.flatMap((row, at) => (row.line && lines.has(row.line) ? (values[at] ?? []) : []));
+  const liabilitiesNegative = shareNegative(of(LIABILITY_LINES)) >= NEGATIVE_BLOCK_SHARE;
+  const equityNegative =
+    liabilitiesNegative && shareNegative(of(new Set<Line>(['total_equity_and_liabilities']))) === 1;
+  const flips = (line: Line | null): boolean =>
+    line !== null &&
+    ((liabilitiesNegative && LIABILITY_LINES.has(line)) || (equityNegative && EQUITY_LINES.has(line)));
+  return {
+    sums,
+    factorOf: (index) => (flips(rows[index]?.line ?? null) ? -1 : 1),
+    unsettled: new Set(),
+    costsNegative: false,
+    liabilitiesNegative,
+  };
+}
+
+/** Of the cells that are filled and not zero; 0 where there is none. */
+function shareNegative(values: readonly (Decimal | null)[]): number {
+  const filled = values.filter((value) => value !== null && !value.isZero());
+  return filled.length === 0 ? 0 : filled.filter((value) => value?.isNegative()).length / filled.length;
+}
+
+/** The rounding unit that figures are printed with: 1 for whole figures, 0.1 for one decimal, 0.01 for cents. */
+export function printedStep(values: readonly (Decimal | null)[]): Decimal {
+  const filled = values.flatMap((value) => (value && !value.isZero() ? [value] : []));
+  for (const places of [0, 1]) {
+    const fine = filled.filter((value) => value.decimalPlaces() > places).length;
+    if (fine * 20 <= filled.length) return decimal(10).pow(-places);
+  }
+  return decimal('0.01');
+}
+
+export const isStandardLine = (line: Line | null): line is LineItemCode =>
+  line !== null && LINE_ITEMS.some((item) => item.code === line);

@@ -1,0 +1,231 @@
+/** Turns a workbook that has passed the gate into grids, by the whole reader of exceljs. Runs in a worker. */
+import ExcelJS from 'exceljs';
+import { isPlainDate, type PlainDate } from '#core/calendar/plainDate.ts';
+import { decimal, decimalFromDouble, ZERO, type Decimal } from '#core/money/decimal.ts';
+import { decimalMarkOf, readAmountText, type DecimalMark } from './amountText.ts';
+import { columnNumber, type MergedArea, type SheetCell, type SheetGrid, type WorkbookGrid } from './cells.ts';
+import { workOut } from './formulas.ts';
+import { formatShape, printNumber } from './numberFormat.ts';
+import { refusal, Refused } from './refusals.ts';
+
+/** Cells beyond these hold no statement. */
+const LAST_ROW = 50_000;
+const LAST_COLUMN = 500;
+/** Formulas that name formulas without a value, and so on. */
+const MAX_FORMULA_DEPTH = 60;
+
+export async function workbookGrid(bytes: Buffer): Promise<WorkbookGrid> {
+  const workbook = new ExcelJS.Workbook();
+  try {
+    await workbook.xlsx.load(bytes as unknown as ExcelJS.Buffer);
+  } catch (error) {
+    const text = error instanceof Error ? error.message : String(error);
+    throw new Refused(refusal('damaged', null, `its parts do not fit together (${text.slice(0, 120)})`));
+  }
+  const mark = decimalMarkOf(textsOf(workbook));
+  const values = new WorkbookValues(workbook, mark);
+  return { kind: 'xlsx', sheets: workbook.worksheets.map((sheet) => sheetGrid(sheet, mark, values)) };
+}
+
+function* textsOf(workbook: ExcelJS.Workbook): Generator<string> {
+  for (const sheet of workbook.worksheets) {
+    for (const cell of filledCells(sheet)) if (typeof cell.value === 'string') yield cell.value;
+  }
+}
+
+/** Sparse by nature: a sheet whose last cell is XFD1048576 has few filled cells. */
+function* filledCells(sheet: ExcelJS.Worksheet): Generator<ExcelJS.Cell> {
+  const cells: ExcelJS.Cell[] = [];
+  sheet.eachRow({ includeEmpty: false }, (row, number) => {
+    if (number > LAST_ROW) return;
+    row.eachCell({ includeEmpty: false }, (cell, column) => {
+      if (column <= LAST_COLUMN && !(cell.isMerged && cell.master !== cell)) cells.push(cell);
+    });
+  });
+  yield* cells;
+}
+
+function sheetGrid(sheet: ExcelJS.Worksheet, mark: DecimalMark, values: WorkbookValues): SheetGrid {
+  const rows = new Map<number, Map<number, SheetCell>>();
+  const hiddenRows = new Set<number>();
+  for (const cell of filledCells(sheet)) {
+    const read = sheetCell(sheet.name, cell, mark, values);
+    if (!read) continue;
+    const row = rows.get(read.row) ?? new Map<number, SheetCell>();
+    rows.set(read.row, row.set(read.column, read));
+    if (sheet.getRow(read.row).hidden) hiddenRows.add(read.row);
+  }
+  const columns = new Set([...rows.values()].flatMap((row) => [...row.keys()]));
+  return {
+    name: sheet.name,
+    hidden: sheet.state !== 'visible',
+    rows,
+    hiddenRows,
+    hiddenColumns: new Set([...columns].filter((column) => sheet.getColumn(column).hidden)),
+    merges: (sheet.model.merges as unknown as string[]).map(mergedArea),
+    pictures: sheet.getImages().map(({ range }) => cornerOf(range)),
+  };
+}
+
+const cornerOf = (range: ExcelJS.ImageRange): string => {
+  const corner = range.tl;
+  return `${String.fromCharCode(65 + Math.min(25, corner.nativeCol))}${corner.nativeRow + 1}`;
+};
+
+function mergedArea(range: string): MergedArea {
+  const [from = '', to = from] = range.split(':');
+  const rowOf = (name: string) => Number(/\d+/.exec(name)?.[0] ?? 0);
+  const columnOf = (name: string) => columnNumber(/[A-Z]+/i.exec(name)?.[0] ?? '');
+  return { top: rowOf(from), left: columnOf(from), bottom: rowOf(to), right: columnOf(to) };
+}
+
+type Style = Pick<SheetCell, 'numberFormat' | 'bold' | 'red' | 'indent'>;
+type Place = Pick<SheetCell, 'sheet' | 'row' | 'column'>;
+const PLAIN = {
+  amount: null,
+  date: null,
+  fromFormula: false,
+  workedOut: false,
+  fromText: false,
+  formatScale: 1,
+  decimals: 0,
+} as const;
+
+function sheetCell(
+  sheet: string,
+  cell: ExcelJS.Cell,
+  mark: DecimalMark,
+  values: WorkbookValues,
+): SheetCell | null {
+  const place: Place = { sheet, row: Number(cell.row), column: Number(cell.col) };
+  const style = styleOf(cell);
+  const isFormula = cell.type === ExcelJS.ValueType.Formula;
+  const stored: unknown = isFormula ? cell.result : cell.value;
+  if (isFormula && (stored === undefined || stored === null)) {
+    const amount = values.ofFormula(cell, sheet);
+    return amount
+      ? { ...numberCell(place, style, amount), fromFormula: true, workedOut: true }
+      : { ...PLAIN, ...place, ...style, kind: 'uncalculated', text: `=${cell.formula}`, fromFormula: true };
+  }
+  const read = storedCell(place, style, stored, mark);
+  return read && { ...read, fromFormula: isFormula };
+}
+
+function storedCell(place: Place, style: Style, stored: unknown, mark: DecimalMark): SheetCell | null {
+  if (typeof stored === 'number') {
+    if (!Number.isFinite(stored)) {
+      return { ...PLAIN, ...place, ...style, kind: 'error', text: '#NUM!' };
+    }
+    return numberCell(place, style, decimalFromDouble(stored));
+  }
+  if (stored instanceof Date) return dateCell(place, style, stored);
+  if (isErrorValue(stored)) return { ...PLAIN, ...place, ...style, kind: 'error', text: stored.error };
+  const text = textOf(stored);
+  return text.trim() === '' ? null : textCell(place, style, text, mark);
+}
+
+function numberCell(place: Place, style: Style, stored: Decimal): SheetCell {
+  const { percent, scale } = formatShape(style.numberFormat);
+  const amount = stored.div(scale);
+  return {
+    ...PLAIN,
+    ...place,
+    ...style,
+    kind: percent ? 'percent' : 'amount',
+    amount: percent ? null : amount,
+    text: printNumber(amount, style.numberFormat, percent),
+    formatScale: scale,
+    decimals: Math.max(0, stored.decimalPlaces()),
+  };
+}
+
+function dateCell(place: Place, style: Style, stored: Date): SheetCell | null {
+  if (Number.isNaN(stored.getTime())) return null;
+  const day = stored.toISOString().slice(0, 10);
+  if (!isPlainDate(day)) return null;
+  return { ...PLAIN, ...place, ...style, kind: 'date', date: day satisfies PlainDate, text: day };
+}
+
+/** A cell of text, which may hold a number; also every field of a text file. */
+export function textCell(place: Place, style: Style, text: string, mark: DecimalMark): SheetCell {
+  const meaning = readAmountText(text, mark);
+  const cell = { ...PLAIN, ...place, ...style, text: text.replace(/\s+$/, '') };
+  if (meaning.kind === 'amount') {
+    return { ...cell, kind: 'amount', amount: meaning.amount, decimals: meaning.decimals, fromText: true };
+  }
+  if (meaning.kind === 'zero') return { ...cell, kind: 'amount', amount: ZERO };
+  return { ...cell, kind: meaning.kind === 'percent' ? 'percent' : 'text' };
+}
+
+function styleOf(cell: ExcelJS.Cell): Style {
+  const colour = cell.font?.color?.argb;
+  return {
+    numberFormat: cell.numFmt ?? 'General',
+    bold: cell.font?.bold === true,
+    red: colour !== undefined && isRed(colour),
+    indent: cell.alignment?.indent ?? 0,
+  };
+}
+
+/** Red by far more than green and blue. */
+function isRed(argb: string): boolean {
+  const [red, green, blue] = [2, 4, 6].map((at) => parseInt(argb.slice(at, at + 2), 16)) as [
+    number,
+    number,
+    number,
+  ];
+  return red >= 150 && green <= 90 && blue <= 90;
+}
+
+const isErrorValue = (stored: unknown): stored is { error: string } =>
+  typeof stored === 'object' && stored !== null && 'error' in stored && typeof stored.error === 'string';
+
+function textOf(stored: unknown): string {
+  if (typeof stored === 'string') return stored;
+  if (typeof stored === 'boolean') return stored ? 'TRUE' : 'FALSE';
+  if (typeof stored !== 'object' || stored === null) return '';
+  if ('richText' in stored && Array.isArray(stored.richText)) {
+    return (stored.richText as { text?: string }[]).map((run) => run.text ?? '').join('');
+  }
+  return 'text' in stored ? textOf(stored.text) : '';
+}
+
+/** Values of cells for formulas without a stored one. */
+class WorkbookValues {
+  private readonly sheets: ReadonlyMap<string, ExcelJS.Worksheet>;
+  private readonly mark: DecimalMark;
+  private readonly known = new Map<string, Decimal | undefined>();
+  private depth = 0;
+
+  constructor(workbook: ExcelJS.Workbook, mark: DecimalMark) {
+    this.sheets = new Map(workbook.worksheets.map((sheet) => [sheet.name.toLowerCase(), sheet]));
+    this.mark = mark;
+  }
+
+  ofFormula(cell: ExcelJS.Cell, sheet: string): Decimal | undefined {
+    const key = `${sheet}!${cell.address}`;
+    if (this.known.has(key)) return this.known.get(key);
+    if (this.depth >= MAX_FORMULA_DEPTH || !cell.formula) return undefined;
+    this.known.set(key, undefined);
+    this.depth += 1;
+    const value = workOut(cell.formula, sheet, (name, row, column) => this.ofCell(name, row, column));
+    this.depth -= 1;
+    this.known.set(key, value);
+    return value;
+  }
+
+  private ofCell(name: string, row: number, column: number): Decimal | undefined {
+    const sheet = this.sheets.get(name.toLowerCase());
+    if (!sheet || row > LAST_ROW || column > LAST_COLUMN) return undefined;
+    const cell = sheet.findCell(row, column);
+    if (!cell || cell.value === null) return ZERO;
+    const isFormula = cell.type === ExcelJS.ValueType.Formula;
+    const stored: unknown = isFormula ? cell.result : cell.value;
+    if (isFormula && (stored === undefined || stored === null)) return this.ofFormula(cell, sheet.name);
+    if (typeof stored === 'number' && Number.isFinite(stored)) return decimal(decimalFromDouble(stored));
+    if (typeof stored !== 'string') return undefined;
+    const meaning = readAmountText(stored, this.mark);
+    if (meaning.kind === 'amount') return meaning.amount;
+    return meaning.kind === 'zero' ? ZERO : undefined;
+  }
+}
