@@ -9,12 +9,12 @@ let lastId = 0;
 export function buildStatement(
   periodEnd: PlainDate,
   months: number,
-  figures: Readonly<Partial<Record<LineItemCode, number | string>>>,
+  figures: Readonly<Partial<Record<LineItemCode, number | string | undefined>>>,
   given: Partial<Statement> = {},
 ): Statement {
   lastId += 1;
   const amounts = Object.fromEntries(
-    Object.entries(figures).map(([line, value]) => [line, decimal(value)]),
+    Object.entries(figures).flatMap(([line, value]) => (value === undefined ? [] : [[line, decimal(value)]])),
   ) as Amounts;
   return {
     id: lastId,

@@ -1,0 +1,65 @@
+/** What a rule looks at, for tests: one covenant tested on statements, quality as told. */
+import type { BorrowerInputs } from '../borrowerInputs.ts';
+import type { PlainDate } from '../calendar/plainDate.ts';
+import { buildCovenant } from '../covenants/covenant.fixture.ts';
+import { testDates } from '../covenants/levels.ts';
+import { testCovenant } from '../covenants/testCovenant.ts';
+import { justPassingOf } from '../patterns/justPassing.ts';
+import { POLICY_VERSION_1 as policy } from '../policy.ts';
+import type { QuarterScore, ReportingQuality } from '../quality/score.ts';
+import type { AlertContext } from './rule.ts';
+
+export const buildInputs = (given: Partial<BorrowerInputs> = {}): BorrowerInputs => ({
+  borrowerId: 1,
+  name: 'Tarnmoor Joinery',
+  legalForm: 'company',
+  sector: 'C16',
+  currency: 'EUR',
+  fiscalYearEndMonth: 12,
+  inputVersion: 1,
+  statements: [],
+  covenants: [buildCovenant()],
+  undertakings: [],
+  previous: null,
+  ...given,
+});
+
+export const buildQuarterScore = (quarterEnd: PlainDate, score: number | null): QuarterScore => ({
+  quarterEnd,
+  score,
+  noScoreReason: score === null ? 'coverage below 60' : null,
+  coverage: 85,
+  blocks: [],
+  sectorPeers: 12,
+  bookPeers: 60,
+  sectorWeight: 1,
+  derivedCashFlow: false,
+});
+
+export const buildQuality = (given: Partial<ReportingQuality> = {}): ReportingQuality => ({
+  headline: null,
+  band: null,
+  provisional: false,
+  noScoreReason: null,
+  latest: null,
+  history: [],
+  explanations: [],
+  whatWouldChangeIt: null,
+  remarks: [],
+  ...given,
+});
+
+/** Every covenant of the inputs tested on its dates up to the day, as the walk does it. */
+export function buildContext(
+  inputs: BorrowerInputs,
+  asOf: PlainDate,
+  quality: ReportingQuality = buildQuality(),
+): AlertContext {
+  const tests = inputs.covenants.flatMap((covenant) =>
+    testDates(covenant, asOf).map((date) =>
+      testCovenant(covenant, inputs.statements, date, inputs.fiscalYearEndMonth, policy, asOf),
+    ),
+  );
+  const patterns = inputs.covenants.map(({ id }) => justPassingOf(tests, id, policy.repeated.ofLast));
+  return { inputs, tests, quality, patterns, policy, asOf };
+}

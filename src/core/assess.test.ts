@@ -1,0 +1,85 @@
+import { expect, test } from 'vitest';
+import { buildInputs } from './alerts/rule.fixture.ts';
+import { assess } from './assess.ts';
+import type { PlainDate } from './calendar/plainDate.ts';
+import { buildCovenant, buildLevel, buildYear } from './covenants/covenant.fixture.ts';
+import { smallestHeadroomAhead } from './covenants/smallestHeadroom.ts';
+import { POLICY_VERSION_1 as policy } from './policy.ts';
+import { buildCrossSection } from './quality/crossSection.ts';
+
+const asOf: PlainDate = '2026-03-15';
+const nobody = buildCrossSection([], 1);
+const yearly = { firstTestOn: '2024-12-31', everyMonths: 12 } as const;
+const inputs = buildInputs({
+  statements: [
+    ...buildYear('2024-12-31', { ebitda: 12, debt: 30, cash: 0 }),
+    ...buildYear('2025-12-31', { ebitda: 10, debt: 34.5, cash: 0 }),
+  ],
+  covenants: [
+    buildCovenant({
+      ...yearly,
+      id: 1,
+      levels: [buildLevel('2024-01-01', '2026-05-31', '3.5'), buildLevel('2026-06-01', null, '3.25')],
+    }),
+    buildCovenant({
+      ...yearly,
+      id: 2,
+      measure: 'current-ratio',
+      operator: '>=',
+      levels: [buildLevel('2024-01-01', null, '1.2')],
+    }),
+    buildCovenant({
+      ...yearly,
+      id: 3,
+      measure: 'minimum-liquidity',
+      operator: '>=',
+      firstTestOn: '2023-12-31',
+    }),
+  ],
+});
+
+test('the walk goes from statements to findings', () => {
+  const assessment = assess(inputs, nobody, policy, asOf);
+  expect(
+    assessment.tests.map(({ covenantId, testDate, outcome }) => [covenantId, testDate, outcome]),
+  ).toEqual([
+    [1, '2024-12-31', 'met'],
+    [1, '2025-12-31', 'met, thin'],
+    [2, '2024-12-31', 'met'],
+    [2, '2025-12-31', 'met'],
+    [3, '2024-12-31', 'not tested'],
+    [3, '2025-12-31', 'not met'],
+  ]);
+  expect(assessment.patterns[0]).toMatchObject({ inBand: 1, ofLast: 2, run: 1 });
+  expect(assessment.findings.map(({ kind, covenantId }) => [kind, covenantId])).toEqual([
+    ['test not met', 3],
+    ['thin headroom', 1],
+    ['step-down ahead', 1],
+  ]);
+  expect(assessment.quality.headline).toBeNull();
+});
+
+test('the smallest headroom is over the latest live tests; later levels are kept apart', () => {
+  const { tests, smallestHeadroom } = assess(
+    { ...inputs, covenants: inputs.covenants.slice(0, 2) },
+    nobody,
+    policy,
+    asOf,
+  );
+  expect(smallestHeadroom?.covenantId).toBe(1);
+  expect(smallestHeadroom?.mayFall.toFixed(4)).toBe('0.0143');
+  const ahead = smallestHeadroomAhead(tests, [1, 2]);
+  expect(ahead).toMatchObject({ covenantId: 1, from: '2026-06-01' });
+  expect(ahead?.mayFall.toFixed(4)).toBe('-0.0615');
+});
+
+test('the same arguments give the same answer', () => {
+  expect(assess(inputs, nobody, policy, asOf)).toEqual(assess(inputs, nobody, policy, asOf));
+});
+
+test('a borrower without figures awaits them and is told nothing else', () => {
+  const { tests, smallestHeadroom, findings } = assess({ ...inputs, statements: [] }, nobody, policy, asOf);
+  expect(new Set(tests.slice(0, 4).map(({ outcome }) => outcome))).toEqual(new Set(['awaiting figures']));
+  expect(smallestHeadroom).toBeNull();
+  expect(findings).toEqual([]);
+});
