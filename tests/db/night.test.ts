@@ -4,7 +4,8 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { closeDatabase } from '../../src/server/db/connection.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
 import { execute } from '../../src/server/db/sql.ts';
-import { assessWithin } from '../../src/server/services/assessBorrower.ts';
+import { systemActor } from '../../src/server/services/actor.ts';
+import { assessBorrower, assessWithin } from '../../src/server/services/assessBorrower.ts';
 import { peersOfBorrower } from '../../src/server/services/peersOfBorrower.ts';
 import { runNight, type NightCommand, type NightSteps } from '../../src/server/services/runNight.ts';
 import { buildPerson } from '../support/factories.ts';
@@ -304,6 +305,27 @@ test('a date before one that is done is a look back: kept beside it, no alert, n
   expect(
     await rows('select borrower_id, assessment_id from current_assessments order by borrower_id'),
   ).toEqual(current);
+});
+
+test('a result of the day that knows more than the night stays the current one', async () => {
+  const byDay = new Date('2026-12-11T03:00:00Z');
+  const done = await assessBorrower(systemActor('test', byDay), book.thin.id, {
+    runId: null,
+    knownAt: byDay,
+    asOf: '2026-12-11',
+  });
+  if (!done.ok) throw new Error(done.error.kind);
+  expect(await runNight(night('2026-12-11'))).toMatchObject({ outcome: 'done', tested: 3 });
+  const current = await rows<{ borrowerId: number; runId: number | null }>(
+    `select c.borrower_id as borrowerId, a.run_id as runId
+     from current_assessments c join assessments a on a.id = c.assessment_id order by c.borrower_id`,
+  );
+  const { id } = await runOf('2026-12-11');
+  expect(current).toEqual([
+    { borrowerId: book.roomy.id, runId: id },
+    { borrowerId: book.thin.id, runId: null },
+    { borrowerId: book.notMet.id, runId: id },
+  ]);
 });
 
 test('a run is audited at its begin and its end', async () => {

@@ -56,14 +56,16 @@ function Runs({ first, latest, today, zone }: RunsSheetProps) {
   };
   const fault = runs.error ?? shown.error;
   return (
-    <div className="grid gap-6">
-      <Panel title="Start by hand">
-        <StartRun today={today} isOccupied={runs.data.rows.some(isGoingOn)} onStarted={watch} />
-      </Panel>
-      {fault instanceof Refusal && (
-        <ErrorState problem={fault.problem} onRetry={() => void queries.invalidateQueries()} />
-      )}
-      {run && <RunState run={run} zone={zone} />}
+    <div className="grid items-start gap-6 lg:grid-cols-[1fr_384px]">
+      <div className="grid gap-6 lg:order-2">
+        <Panel title="Start by hand">
+          <StartRun today={today} isOccupied={runs.data.rows.some(isGoingOn)} onStarted={watch} />
+        </Panel>
+        {fault instanceof Refusal && (
+          <ErrorState problem={fault.problem} onRetry={() => void queries.invalidateQueries()} />
+        )}
+        {run && <RunState run={run} zone={zone} />}
+      </div>
       <RunsTable page={runs.data} zone={zone} shownId={shownId} onShow={setShownId} />
       <LiveRegion
         message={

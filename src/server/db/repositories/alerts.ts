@@ -1,7 +1,7 @@
 /** A borrower's alerts as the assessment writes them; what people do with them is in alertStates.ts. */
 import type { Transaction } from 'sequelize';
 import { alertSlot, type KnownAlert } from '../../../core/alerts/alertChanges.ts';
-import type { AlertFinding, AlertState, Severity } from '../../../core/alerts/alert.ts';
+import type { AlertFinding, AlertState } from '../../../core/alerts/alert.ts';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { execute, select } from '../sql.ts';
 
@@ -198,6 +198,3 @@ export async function insertAlertEvent(
     event,
   );
 }
-
-/** Severity as a number to sort by, the most severe first. */
-export const SEVERITY_ORDER: Readonly<Record<Severity, number>> = { urgent: 0, soon: 1, note: 2 };

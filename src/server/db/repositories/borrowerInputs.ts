@@ -35,7 +35,7 @@ export async function loadManyBorrowerInputs(
   const borrowers = await select<BorrowerRow>(
     tx,
     `select b.id, b.name, b.legal_form as legalForm, b.sector_code as sector, b.currency,
-       b.fiscal_year_end_month as fiscalYearEndMonth, coalesce(v.input_version, 0) as inputVersion
+       b.fiscal_year_end_month as fiscalYearEndMonth, cast(coalesce(v.input_version, 0) as unsigned) as inputVersion
      from borrowers b left join borrower_input_versions v on v.borrower_id = b.id
      where b.id in (:borrowerIds) order by b.id`,
     { borrowerIds },

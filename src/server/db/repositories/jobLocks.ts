@@ -50,10 +50,3 @@ export async function releaseLock(tx: Transaction, lock: HeldLock): Promise<void
     { ...lock },
   );
 }
-
-export async function isLockHeld(tx: Transaction, name: string): Promise<boolean> {
-  const row = await selectOne(tx, 'select name from job_locks where name = :name and held_until >= now(6)', {
-    name,
-  });
-  return row !== null;
-}
