@@ -15,7 +15,7 @@ interface RunsTableProps {
   readonly onShow: (runId: number) => void;
 }
 
-export const runsHref = (page: number): string => `/desk-settings/runs${page === 1 ? '' : `?page=${page}`}`;
+const runsHref = (page: number): string => `/desk-settings/runs${page === 1 ? '' : `?page=${page}`}`;
 
 /** The runs, the latest business date first. */
 export function RunsTable({ page, zone, shownId, onShow }: RunsTableProps) {

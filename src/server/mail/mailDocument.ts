@@ -45,7 +45,7 @@ ${rows}
   };
 }
 
-export const escapeHtml = (text: string): string =>
+const escapeHtml = (text: string): string =>
   text
     .replaceAll('&', '&amp;')
     .replaceAll('<', '&lt;')

@@ -33,7 +33,7 @@ export interface AssessedBorrower {
   readonly alerts: AlertCounts;
 }
 
-export const NO_ALERTS: AlertCounts = { raised: 0, worsened: 0, updated: 0, conditionGone: 0, closed: 0 };
+const NO_ALERTS: AlertCounts = { raised: 0, worsened: 0, updated: 0, conditionGone: 0, closed: 0 };
 
 /**
  * Assesses one borrower by day, after its inputs changed. The caller has checked that the person may change them;

@@ -4,7 +4,7 @@ import type { CrossSection } from '../../../core/quality/crossSection.ts';
 import { execute, selectOne } from '../sql.ts';
 
 /** Before the first night there are no peers: what rests on them says so. */
-export const NO_CROSS_SECTION: CrossSection = { version: 0, quarters: [] };
+const NO_CROSS_SECTION: CrossSection = { version: 0, quarters: [] };
 
 /**
  * Stores the peers' standing. Its version is the row's own number, so it is built once the number is known, in

@@ -21,7 +21,7 @@ const stored = z.object({
 /** Decimals print themselves as text. */
 export const storedPolicy = (policy: Policy): string => JSON.stringify(policy);
 
-export const readPolicy = (content: string): Policy => stored.parse(JSON.parse(content));
+const readPolicy = (content: string): Policy => stored.parse(JSON.parse(content));
 
 /**
  * The policy in force on a day, as known by an instant. Version 1 is part of the product; the table holds the
