@@ -11,36 +11,38 @@ export function QualityHistory({ quality }: { readonly quality: ReportingQuality
   );
   return (
     <Panel title="Quarter by quarter">
-      <Table caption="Score of each quarter end; 100 is earnings well supported">
-        <TableHead>
-          <tr role="row">
-            <HeadCell>Quarter end</HeadCell>
-            <HeadCell numeric>Score</HeadCell>
-            {blocks.map((name) => (
-              <HeadCell key={name} numeric>
-                {name.charAt(0).toUpperCase() + name.slice(1)}
-              </HeadCell>
-            ))}
-            <HeadCell numeric>Coverage</HeadCell>
-            <HeadCell numeric>Peers</HeadCell>
-          </tr>
-        </TableHead>
-        <TableBody>
-          {quarters.map((quarter) => (
-            <Row key={quarter.quarterEnd}>
-              <Cell nowrap>{quarter.quarterEnd}</Cell>
-              <Cell numeric>{scoreText(quarter)}</Cell>
+      <div className="scroll-region">
+        <Table caption="Score of each quarter end; 100 is earnings well supported">
+          <TableHead>
+            <tr role="row">
+              <HeadCell>Quarter end</HeadCell>
+              <HeadCell numeric>Score</HeadCell>
               {blocks.map((name) => (
-                <Cell key={name} numeric>
-                  {blockText(quarter, name)}
-                </Cell>
+                <HeadCell key={name} numeric>
+                  {name.charAt(0).toUpperCase() + name.slice(1)}
+                </HeadCell>
               ))}
-              <Cell numeric>{quarter.coverage}</Cell>
-              <Cell numeric>{quarter.sectorPeers}</Cell>
-            </Row>
-          ))}
-        </TableBody>
-      </Table>
+              <HeadCell numeric>Coverage</HeadCell>
+              <HeadCell numeric>Peers</HeadCell>
+            </tr>
+          </TableHead>
+          <TableBody>
+            {quarters.map((quarter) => (
+              <Row key={quarter.quarterEnd}>
+                <Cell nowrap>{quarter.quarterEnd}</Cell>
+                <Cell numeric>{scoreText(quarter)}</Cell>
+                {blocks.map((name) => (
+                  <Cell key={name} numeric>
+                    {blockText(quarter, name)}
+                  </Cell>
+                ))}
+                <Cell numeric>{quarter.coverage}</Cell>
+                <Cell numeric>{quarter.sectorPeers}</Cell>
+              </Row>
+            ))}
+          </TableBody>
+        </Table>
+      </div>
       <p className="type-second mt-2">
         The headline is the mean of the last three quarter ends: one quarter alone moves by about 20 points
         for clean firms. A move under 10 points is not news.

@@ -31,10 +31,16 @@ export function QualitySummary({
       </p>
       {latest && (
         <p className="type-second">
-          Coverage {latest.coverage}, {latest.sectorPeers} peers in the sector, mean of the last quarter ends
-          to {latest.quarterEnd}
+          Mean of the last three quarter ends, coverage {latest.coverage} of 100, {latest.sectorPeers} peers
+          in the sector
+          {latest.sectorWeight < 1 && `, leaning on ${latest.bookPeers} borrowers of the whole book`}
           {computed?.peersAreLastNights && ', peers as of last night'}
         </p>
+      )}
+      {latest && (
+        <h3 className="type-heading mt-3">
+          Quarter to {latest.quarterEnd}: {latest.score === null ? 'no score' : Math.round(latest.score)}
+        </h3>
       )}
       {latest && <BlockList blocks={latest.blocks} />}
       {quality.explanations.length > 0 && (

@@ -24,7 +24,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
   );
   if (lines.length === 0) return null;
   return (
-    <div className="scroll-region">
+    <div className="scroll-region accounts">
       <Table caption={`${PART_NAMES[part]}, whole currency units`} showCaption>
         <TableHead>
           <tr role="row">
