@@ -75,7 +75,7 @@ const MEASURES: Readonly<
 /** Two to four covenants, the leverage covenant first. */
 export function covenantsFor(context: CovenantContext): DemoCovenant[] {
   const { scenario, random } = context;
-  const clause = `${random.oneOf(['20.2', '21.2', '22.3', '26.2'])}`;
+  const clause = random.oneOf(['20.2', '21.2', '22.3', '26.2']);
   const leverage = leverageMeasure(scenario, random);
   const others: MeasureCode[] = [];
   if (scenario !== 'ratio without meaning') others.push('interest-cover');
