@@ -56,8 +56,8 @@ function Runs({ first, latest, today, zone }: RunsSheetProps) {
   };
   const fault = runs.error ?? shown.error;
   return (
-    <div className="grid items-start gap-6 lg:grid-cols-[1fr_384px]">
-      <div className="grid gap-6 lg:order-2">
+    <div className="with-evidence">
+      <div className="stack min-[1100px]:order-2">
         <Panel title="Start by hand">
           <StartRun today={today} isOccupied={runs.data.rows.some(isGoingOn)} onStarted={watch} />
         </Panel>
