@@ -2,8 +2,7 @@
 import { mismatches, plain, type Mismatch } from './compare.ts';
 import { covenantTopics } from './covenants/topics.ts';
 import { later } from './later.ts';
-import { topics as qualityTopics } from './quality.ts';
-import { qualityBook } from './qualityBook.ts';
+import { qualityBook, topics as qualityTopics } from './quality.ts';
 import type { Topic } from './topic.ts';
 import { readReferenceFile, type ReferenceFile, type Vector } from './vectorFile.ts';
 

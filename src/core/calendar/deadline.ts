@@ -5,7 +5,7 @@ export type DayCount = 'calendar' | 'business';
 /** 'following' moves a due date on a weekend to the next business day, only where the agreement says so. */
 export type Roll = 'none' | 'following';
 
-export const isWeekend = (date: PlainDate): boolean => {
+const isWeekend = (date: PlainDate): boolean => {
   const weekday = (epochDay(date) + 4) % 7;
   return weekday === 0 || weekday === 6;
 };
@@ -47,7 +47,7 @@ export function dueDate({
   return due;
 }
 
-export const DUE_SOON_DAYS = 7;
+const DUE_SOON_DAYS = 7;
 
 export interface Deadline {
   readonly state: 'not due' | 'due within 7 days' | 'late within grace' | 'overdue past grace';

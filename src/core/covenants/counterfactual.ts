@@ -4,7 +4,7 @@ import { amountAtLevel, type Sides } from './headroom.ts';
 import { holdAgainstLevel, type Held, type Shaped, type Terms } from './holdAgainstLevel.ts';
 
 /** The sides with some earnings taken out of the side that earnings stand on. */
-export function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Sides {
+function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Sides {
   if (measure.earningsSide === 'numerator') return { ...sides, numerator: sides.numerator.minus(takenOut) };
   if (measure.earningsSide === 'denominator' && sides.denominator)
     return { ...sides, denominator: sides.denominator.minus(takenOut) };

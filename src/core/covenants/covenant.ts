@@ -5,7 +5,6 @@ import type { MeasureCode } from '../measures/measure.ts';
 import type { StatementScope } from '../statements/statement.ts';
 
 export type { AddBack } from '../measures/definition.ts';
-export type CovenantDefinition = MeasureDefinition;
 
 export const OPERATORS = ['<=', '<', '>=', '>'] as const;
 export type Operator = (typeof OPERATORS)[number];

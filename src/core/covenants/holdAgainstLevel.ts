@@ -57,7 +57,7 @@ export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): H
 }
 
 /** Whether a result satisfies the operator, at the agreement's rounding. */
-export function satisfies(tested: Decimal, { operator, level, roundingPlaces }: Terms): boolean {
+function satisfies(tested: Decimal, { operator, level, roundingPlaces }: Terms): boolean {
   const value = roundingPlaces === null ? tested : tested.toDecimalPlaces(roundingPlaces);
   switch (operator) {
     case '<=':

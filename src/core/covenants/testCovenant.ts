@@ -1,20 +1,17 @@
 /** One covenant tested on one day, as the agreement defines it, on the figures known by another day. */
-import { isSamePeriodEnd } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
-import { formatDay } from '../calendar/printDay.ts';
 import { MEASURES } from '../measures/index.ts';
-import type { Measured } from '../measures/measured.ts';
-import type { InputUsed, MissingLine, Reading } from '../measures/measure.ts';
 import type { Policy } from '../policy.ts';
 import { knownStatements } from '../statements/currentStatements.ts';
-import { lineItem } from '../statements/lineItems.ts';
 import type { Statement } from '../statements/statement.ts';
 import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
 import { isMet, isNotMet, type CovenantTest, type Outcome } from './covenantTest.ts';
-import { fallOf, NO_HEADROOM, type Sides } from './headroom.ts';
+import { figuresOf, type Figures } from './figures.ts';
+import { fallOf, type Sides } from './headroom.ts';
 import { holdAgainstLevel, type Held, type Terms } from './holdAgainstLevel.ts';
 import { laterLevels, levelInForce } from './levels.ts';
+import { withoutResult } from './withoutResult.ts';
 
 /**
  * Tests a covenant on a test date with the statements received by `asOf`.
@@ -34,136 +31,82 @@ export function testCovenant(
   asOf: PlainDate,
 ): CovenantTest {
   const known = knownStatements(statements, { scope: covenant.scope, asOf });
-  const measure = MEASURES[covenant.measure];
-  const measured = measure.measure({
-    statements: known,
-    date: testDate,
-    fiscalYearEndMonth,
-    definition: covenant.definition,
-    addBacks: covenant.addBacks,
-  });
+  const figures = figuresOf(covenant, known, testDate, fiscalYearEndMonth);
   const inForce = levelInForce(covenant.levels, testDate);
   const level = inForce.kind === 'level' ? inForce.level : null;
-  const inputs = inputsOf(measured);
-  const sides = sidesOf(measured);
-  const terms: Terms | null = level && {
-    operator: covenant.operator,
-    level,
-    roundingPlaces: covenant.roundingPlaces,
-  };
-  const held =
-    notTested(covenant, testDate, inForce.kind, sides) ??
-    withoutFigures(measured, testDate) ??
-    otherCurrency(covenant, known, inputs) ??
-    (sides && terms ? holdAgainstLevel(measure, sides, terms) : null);
-  if (!held) throw new Error(`covenant ${covenant.id} on ${testDate}: figures and level known, nothing held`);
-
-  const underlyingOutcome = thinOrNot(held, policy);
-  const isLive = isMet(held.outcome) || isNotMet(held.outcome);
-  const waiver = waiverOf(covenant.waivers, testDate, asOf);
-  const next = laterLevels(covenant.levels, testDate)[0];
-  return {
+  const nothing = withoutResult(covenant, testDate, inForce, figures);
+  const { measure, operator, roundingPlaces } = covenant;
+  const common = {
     covenantId: covenant.id,
-    measure: covenant.measure,
+    measure,
     testDate,
-    operator: covenant.operator,
+    operator,
     level,
-    nextLevel: next ? { from: next.from, level: next.level } : null,
+    nextLevel: nextLevelOf(covenant, testDate),
+    numerator: figures.sides?.numerator ?? null,
+    denominator: figures.sides?.denominator ?? null,
+    bridge: figures.bridge,
+    inputs: figures.inputs,
+    missing: figures.missing,
+  };
+  if (nothing) return { ...common, ...nothingSaid(nothing, covenant) };
+  if (!figures.sides || !level)
+    throw new Error(`covenant ${covenant.id} on ${testDate}: no sides or no level`);
+  const terms = { operator, level, roundingPlaces };
+  return { ...common, ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf }) };
+}
+
+type Said = Pick<
+  CovenantTest,
+  | 'tested'
+  | 'outcome'
+  | 'underlyingOutcome'
+  | 'reason'
+  | 'headroom'
+  | 'againstLaterLevels'
+  | 'justPassing'
+  | 'counterfactuals'
+>;
+
+const nothingSaid = ({ tested, outcome, reason, headroom }: Held, { measure }: Covenant): Said => ({
+  tested,
+  outcome,
+  underlyingOutcome: outcome,
+  reason,
+  headroom: { ...headroom, fallOf: fallOf(MEASURES[measure]) },
+  againstLaterLevels: [],
+  justPassing: false,
+  counterfactuals: [],
+});
+
+function resultSaid(
+  covenant: Covenant,
+  figures: Figures,
+  sides: Sides,
+  terms: Terms,
+  on: { readonly testDate: PlainDate; readonly policy: Policy; readonly asOf: PlainDate },
+): Said {
+  const measure = MEASURES[covenant.measure];
+  const held = holdAgainstLevel(measure, sides, terms);
+  const underlyingOutcome = thinOrNot(held, on.policy);
+  const isWaived = isNotMet(underlyingOutcome) && waiverOf(covenant.waivers, on.testDate, on.asOf);
+  return {
     tested: held.tested,
-    numerator: sides?.numerator ?? null,
-    denominator: sides?.denominator ?? null,
-    outcome: waiver && isNotMet(underlyingOutcome) ? 'not met, waived' : underlyingOutcome,
+    outcome: isWaived ? 'not met, waived' : underlyingOutcome,
     underlyingOutcome,
-    reason: remarks(covenant, held, isLive && restsOnUntied(known, inputs)),
-    headroom: { ...NO_HEADROOM, ...held.headroom, fallOf: fallOf(measure) },
-    againstLaterLevels: isLive && sides ? againstLater(covenant, testDate, sides) : [],
-    justPassing: isJustPassing(held, policy),
-    bridge: measured.bridge,
-    counterfactuals:
-      isLive && sides && terms ? withoutAddBacks(measure, sides, terms, measured.addBacksTaken) : [],
-    inputs,
-    missing: missingOf(measured),
+    reason: remarks(covenant, held, figures),
+    headroom: held.headroom,
+    againstLaterLevels: hasResult(held) ? againstLater(covenant, on.testDate, sides) : [],
+    justPassing: isJustPassing(held, on.policy),
+    counterfactuals: hasResult(held) ? withoutAddBacks(measure, sides, terms, figures.addBacksTaken) : [],
   };
 }
 
-const readingsOf = ({ numerator, denominator }: Measured): readonly Reading[] =>
-  denominator ? [numerator, denominator] : [numerator];
-
-const inputsOf = (measured: Measured): readonly InputUsed[] =>
-  readingsOf(measured).flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
-
-function missingOf(measured: Measured): readonly MissingLine[] {
-  const gaps = readingsOf(measured).flatMap((reading) => (reading.kind === 'missing' ? reading.missing : []));
-  const byKey = new Map(gaps.map((gap) => [`${gap.line} ${gap.periodEnd} ${gap.months}`, gap]));
-  return [...byKey.values()];
-}
-
-function sidesOf({ numerator, denominator }: Measured): Sides | null {
-  if (numerator.kind !== 'value' || (denominator && denominator.kind !== 'value')) return null;
-  return { numerator: numerator.value, denominator: denominator ? denominator.value : null };
-}
-
-/** A day on which the agreement tests nothing; the ratio is shown all the same. */
-function notTested(
-  { firstTestOn }: Covenant,
-  testDate: PlainDate,
-  level: 'level' | 'holiday' | 'none',
-  sides: Sides | null,
-): Held | null {
-  const reason =
-    testDate < firstTestOn
-      ? `before the first test on ${formatDay(firstTestOn)}`
-      : level === 'holiday'
-        ? `covenant holiday on ${formatDay(testDate)}`
-        : level === 'none'
-          ? `no level in force on ${formatDay(testDate)}`
-          : null;
-  return reason === null ? null : { ...nothingHeld('not tested', reason), tested: ratioOf(sides) };
-}
-
-function ratioOf(sides: Sides | null): Held['tested'] {
-  if (!sides) return null;
-  if (!sides.denominator) return sides.numerator;
-  return sides.denominator.gt(0) ? sides.numerator.div(sides.denominator) : null;
-}
-
-/** Figures of the test date that have not come are awaited; any other gap is for a person to look at. */
-function withoutFigures(measured: Measured, testDate: PlainDate): Held | null {
-  const missing = missingOf(measured);
-  if (missing.some(({ line, periodEnd }) => line === 'statement' && isSamePeriodEnd(periodEnd, testDate)))
-    return nothingHeld('awaiting figures', `figures to ${formatDay(testDate)} are not there`);
-  if (missing.length > 0)
-    return nothingHeld('cannot be tested', `missing: ${missing.map(gapInWords).join(', ')}`);
-  const refused = readingsOf(measured).find((reading) => reading.kind === 'not-meaningful');
-  return refused?.kind === 'not-meaningful' ? nothingHeld('cannot be tested', refused.reason) : null;
-}
-
-function gapInWords({ line, periodEnd, months }: MissingLine): string {
-  const what = line === 'statement' ? 'figures' : lineItem(line).label;
-  return months === 0
-    ? `${what} on ${formatDay(periodEnd)}`
-    : `${what} of ${months} months to ${formatDay(periodEnd)}`;
-}
-
-function otherCurrency(
-  { currency }: Covenant,
-  known: readonly Statement[],
-  inputs: readonly InputUsed[],
-): Held | null {
-  const foreign = behind(known, inputs).find((statement) => statement.currency !== currency);
-  return foreign
-    ? nothingHeld(
-        'cannot be tested',
-        `figures in ${foreign.currency}, covenant in ${currency}: no rate is recorded`,
-      )
-    : null;
-}
-
-const restsOnUntied = (known: readonly Statement[], inputs: readonly InputUsed[]): boolean =>
-  behind(known, inputs).some(({ tie }) => tie === 'does-not-tie');
+const hasResult = ({ outcome }: Held): boolean => isMet(outcome) || isNotMet(outcome);
 
 /** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
-function remarks({ roundingPlaces }: Covenant, held: Held, isUntied: boolean): string | null {
+function remarks({ roundingPlaces }: Covenant, held: Held, { statements }: Figures): string | null {
+  const isUntied = hasResult(held) && statements.some(({ tie }) => tie === 'does-not-tie');
   const said = [
     held.reason,
     held.roundingDecides ? `at the ${roundingPlaces} decimal places that the agreement rounds to` : null,
@@ -172,16 +115,10 @@ function remarks({ roundingPlaces }: Covenant, held: Held, isUntied: boolean): s
   return said.length > 0 ? said.join('; ') : null;
 }
 
-const behind = (known: readonly Statement[], inputs: readonly InputUsed[]): readonly Statement[] =>
-  known.filter(({ id }) => inputs.some(({ statementId }) => statementId === id));
-
-const nothingHeld = (outcome: Outcome, reason: string): Held => ({
-  tested: null,
-  outcome,
-  reason,
-  roundingDecides: false,
-  headroom: { ...NO_HEADROOM, fallOf: 'earnings' },
-});
+function nextLevelOf({ levels }: Covenant, testDate: PlainDate): CovenantTest['nextLevel'] {
+  const next = laterLevels(levels, testDate)[0];
+  return next ? { from: next.from, level: next.level } : null;
+}
 
 function thinOrNot({ outcome, headroom: { mayFall } }: Held, policy: Policy): Outcome {
   return outcome === 'met' && mayFall?.lt(policy.thinBelow) ? 'met, thin' : outcome;

@@ -1,5 +1,4 @@
 /** Flows of odd length set against a year: notes and agreed formulas, never a tested figure of their own accord. */
-import { daysBetween, type PlainDate } from '../calendar/plainDate.ts';
 import type { Decimal } from '../money/decimal.ts';
 
 const DAYS_OF_52_WEEKS = 364;
@@ -36,7 +35,3 @@ export function lengthOfQuarters(quarterWeeks: readonly number[]): LengthInWeeks
   const weeks = quarterWeeks.reduce((sum, each) => sum + each, 0);
   return { weeks, days: weeks * 7, flag: weeks === WEEKS_OF_LONG_YEAR ? '53-week LTM' : null };
 }
-
-/** Whether a period of twelve months runs over 53 weeks. */
-export const isLongYear = (periodStart: PlainDate, periodEnd: PlainDate): boolean =>
-  daysBetween(periodStart, periodEnd) + 1 === WEEKS_OF_LONG_YEAR * 7;
