@@ -117,32 +117,29 @@ async function prepareSettings({ dataFolder, host, port, sinkPort, appUrl }) {
 /** The demo desk in a database of our own, or where it is asked for; otherwise an empty one says how it is set up. */
 async function seed(env) {
   if (env.SEED_DEMO !== '1') {
-    for (const line of await linesOf('jobs/setUpLink.ts', env)) console.log(line);
+    await eachLine('jobs/setUpLink.ts', env, (line) => console.log(line));
     return [];
   }
-  say('laying out the demo desk');
+  say('demo desk');
   const signIns = [];
-  for (const line of await linesOf('seeders/index.ts', env)) {
-    const found = line.startsWith('{"demoSignIns"') ? JSON.parse(line).demoSignIns : null;
-    if (found) signIns.push(...found);
+  await eachLine('seeders/index.ts', env, (line) => {
+    if (line.startsWith('{"demoSignIns"')) signIns.push(...JSON.parse(line).demoSignIns);
     else say(line);
-  }
+  });
   return signIns;
 }
 
-/** Runs a program of ours and gives back what it printed. */
-async function linesOf(program, env) {
+/** Runs a program of ours and hands over what it prints, line by line. */
+async function eachLine(program, env, take) {
   const child = spawn('node', ['--import', 'tsx', program], {
     env,
     signal: told.signal,
     stdio: ['ignore', 'pipe', 'inherit'],
   });
   const ended = new Promise((done, failed) => child.once('error', failed).once('close', done));
-  const lines = [];
-  for await (const line of createInterface({ input: child.stdout })) lines.push(line);
+  for await (const line of createInterface({ input: child.stdout })) take(line);
   const code = await ended;
   if (code !== 0) throw new StartFault(`${program} failed (${code}); what it said is above.`);
-  return lines;
 }
 
 async function serveUntilTold(env, { host, port, sinkPort, appUrl, hasSink, signIns }) {
@@ -179,8 +176,9 @@ async function serveUntilTold(env, { host, port, sinkPort, appUrl, hasSink, sign
 function announce({ sinkPort, appUrl, hasSink, signIns }) {
   say('up');
   if (signIns.length > 0) console.log('\nDemo sign-ins:');
+  const width = (name) => Math.max(...signIns.map((signIn) => signIn[name].length)) + 2;
   for (const { role, email, password } of signIns)
-    console.log(`  ${role.padEnd(34)} ${email.padEnd(34)} ${password}`);
+    console.log(`  ${role.padEnd(width('role'))}${email.padEnd(width('email'))}${password}`);
   if (hasSink) console.log(`\nMail sink: http://127.0.0.1:${sinkPort + 1}/ (mail stays on this machine)`);
   console.log(`\nUnderkeel: ${appUrl}`);
 }
