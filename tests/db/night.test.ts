@@ -6,6 +6,7 @@ import { inTransaction } from '../../src/server/db/inTransaction.ts';
 import { execute } from '../../src/server/db/sql.ts';
 import { systemActor } from '../../src/server/services/actor.ts';
 import { assessBorrower, assessWithin } from '../../src/server/services/assessBorrower.ts';
+import { finishNight } from '../../src/server/services/finishNight.ts';
 import { peersOfBorrower } from '../../src/server/services/peersOfBorrower.ts';
 import { runNight, type NightCommand, type NightSteps } from '../../src/server/services/runNight.ts';
 import { buildPerson } from '../support/factories.ts';
@@ -28,7 +29,12 @@ const night = (day: string, over: Partial<NightCommand> = {}): NightCommand => (
   now: new Date(`${day}T01:30:00Z`),
   ...over,
 });
-const steps = (over: Partial<NightSteps> = {}): NightSteps => ({ assessWithin, peersOfBorrower, ...over });
+const steps = (over: Partial<NightSteps> = {}): NightSteps => ({
+  assessWithin,
+  peersOfBorrower,
+  finishNight,
+  ...over,
+});
 
 const runOf = async (day: string) => {
   const [run] = await rows<{
@@ -111,6 +117,13 @@ test('what we computed stands beside what was certified and accepted, which stay
 });
 
 describe('a date', () => {
+  test('to come is not computed: at the business date of the lender’s zone it is', async () => {
+    // 22:59 UTC is 23:59 in Paris.
+    const before = night('2026-12-03', { now: new Date('2026-12-02T22:59:59.999Z') });
+    expect(await runNight(before)).toMatchObject({ outcome: 'skipped' });
+    expect(await rows('select id from runs where business_date = :day', { day: '2026-12-03' })).toEqual([]);
+  });
+
   test('that is done is not computed again by the schedule, and nothing is mailed twice', async () => {
     const before = await mailKeys();
     expect(await runNight(night('2026-12-02'))).toMatchObject({ outcome: 'skipped' });
@@ -205,14 +218,10 @@ describe('a run that is cut', () => {
 
   test('by a fault that is no borrower’s waits, says why, and is taken up by the next start', async () => {
     const order = night('2026-12-06');
-    const [original] = await rows<{ zone: string }>('select zone from lenders');
-    await inTransaction((tx) => execute(tx, `update lenders set zone = 'Nowhere/Else'`));
-    await expect(runNight(order)).rejects.toThrow(RangeError);
+    const fails = () => Promise.reject(new RangeError('no time zone Nowhere/Else'));
+    await expect(runNight(order, steps({ finishNight: fails }))).rejects.toThrow(RangeError);
     expect(await runOf('2026-12-06')).toMatchObject({ state: 'interrupted', done: 3 });
     expect((await runOf('2026-12-06')).failure).toContain('Nowhere/Else');
-    await inTransaction((tx) =>
-      execute(tx, 'update lenders set zone = :zone', { zone: original?.zone ?? '' }),
-    );
     expect(await runNight(order)).toMatchObject({ outcome: 'done', attempt: 1, tested: 3 });
     expect(await runOf('2026-12-06')).toMatchObject({ state: 'done', failure: null });
   });

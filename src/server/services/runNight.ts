@@ -6,12 +6,14 @@
  */
 import { randomUUID } from 'node:crypto';
 import type { RunKind, RunPhase } from '../../contracts/runs.ts';
+import { businessDate } from '../../core/calendar/businessDate.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import { METHOD_VERSION } from '../../core/policy.ts';
 import { buildCrossSection, type CrossSection, type PeerInputs } from '../../core/quality/crossSection.ts';
 import { inTransaction, isOutage } from '../db/inTransaction.ts';
 import { findCrossSection, storeCrossSection } from '../db/repositories/crossSections.ts';
 import { releaseLock, takeLock, type HeldLock } from '../db/repositories/jobLocks.ts';
+import { findLender } from '../db/repositories/lender.ts';
 import { interruptRun, setCrossSection, setPhase, type RunRecord } from '../db/repositories/runs.ts';
 import { dropOutputs, listOutputs } from '../db/repositories/runTasks.ts';
 import { systemActor } from './actor.ts';
@@ -40,11 +42,14 @@ export interface NightCommand {
   readonly signal?: AbortSignal;
 }
 
-/** What the night does with one borrower; a test puts a fault in its place. */
+/** What the night does; a test puts a fault in its place. */
 export interface NightSteps {
   readonly assessWithin: typeof assessWithin;
   readonly peersOfBorrower: typeof peersOfBorrower;
+  readonly finishNight: typeof finishNight;
 }
+
+const STEPS: NightSteps = { assessWithin, peersOfBorrower, finishNight };
 
 /** Not done: another run is going on, the date is done and was not asked for again, or the process was told to stop. */
 export interface SkippedRun {
@@ -54,8 +59,10 @@ export interface SkippedRun {
 
 export async function runNight(
   command: NightCommand,
-  steps: NightSteps = { assessWithin, peersOfBorrower },
+  steps: NightSteps = STEPS,
 ): Promise<RunSummary | SkippedRun> {
+  if (await isToCome(command))
+    return { outcome: 'skipped', reason: `${command.businessDate} is to come: it has no figures yet.` };
   const lock = await inTransaction((tx) =>
     takeLock(tx, { name: NIGHT_LOCK, owner: randomUUID(), seconds: LOCK_SECONDS }),
   );
@@ -78,9 +85,16 @@ export async function runNight(
   }
 }
 
-const alreadyDone = ({ businessDate }: NightCommand): SkippedRun => ({
+/** A night of a day to come would make a look back of every night until then. */
+async function isToCome({ businessDate: date, now }: NightCommand): Promise<boolean> {
+  const lender = await inTransaction((tx) => findLender(tx));
+  if (!lender) throw new Error('there is no lender yet');
+  return date > businessDate(now, lender.zone);
+}
+
+const alreadyDone = ({ businessDate: date }: NightCommand): SkippedRun => ({
   outcome: 'skipped',
-  reason: `The run for ${businessDate} is done already. Start it by hand to compute the date again.`,
+  reason: `The run for ${date} is done already. Start it by hand to compute the date again.`,
 });
 
 /** A lost lock or a lost database leaves the run as it is: whoever comes next goes on with it. */
@@ -117,7 +131,7 @@ async function compute(night: Night, steps: NightSteps): Promise<RunSummary> {
   });
 
   await enter(run, 'mail');
-  return inTransaction((tx) => finishNight(tx, night));
+  return inTransaction((tx) => steps.finishNight(tx, night));
 }
 
 const enter = (run: RunRecord, phase: RunPhase): Promise<void> =>
