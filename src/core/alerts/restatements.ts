@@ -1,6 +1,6 @@
 /** What the figures said before a restatement and what they say after it. */
 import { daysBetween, type PlainDate } from '../calendar/plainDate.ts';
-import { isSamePeriodEnd } from '../calendar/fiscalYear.ts';
+import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import { isMet, isNotMet, type Outcome } from '../covenants/covenantTest.ts';
 import { testCovenant } from '../covenants/testCovenant.ts';
 import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
@@ -38,21 +38,33 @@ export interface Restatement {
  * moved: EBITDA of twelve months, and the outcome of past tests. Earlier and later versions are both kept.
  */
 export const restatementsOf = (context: AlertContext): readonly Restatement[] =>
-  restatementDays(context).map((receivedOn) => ({
-    receivedOn,
-    earnings: earningsMoves(context, receivedOn),
-    outcomes: outcomeMoves(context, receivedOn),
+  restatementDays(context).map((day) => ({
+    receivedOn: day.receivedOn,
+    earnings: earningsMoves(context, day),
+    outcomes: outcomeMoves(context, day),
   }));
 
-function restatementDays({ inputs, asOf }: AlertContext): readonly PlainDate[] {
+interface RestatementDay {
+  readonly receivedOn: PlainDate;
+  /** Nothing before it can have moved. */
+  readonly earliestPeriodEnd: PlainDate;
+}
+
+function restatementDays({ inputs, asOf }: AlertContext): readonly RestatementDay[] {
   const known = inputs.statements.filter(
     ({ basis, receivedOn }) => basis !== 'forecast' && receivedOn <= asOf,
   );
-  const days = known
+  const restating = known
     .filter(({ receivedOn }) => daysBetween(receivedOn, asOf) <= NEWS_DAYS)
-    .filter((later) => known.some((earlier) => isEarlierVersion(earlier, later)))
-    .map(({ receivedOn }) => receivedOn);
-  return [...new Set(days)].sort();
+    .filter((later) => known.some((earlier) => isEarlierVersion(earlier, later)));
+  const days = [...new Set(restating.map(({ receivedOn }) => receivedOn))].sort();
+  return days.map((receivedOn) => ({
+    receivedOn,
+    earliestPeriodEnd: restating
+      .filter((statement) => statement.receivedOn === receivedOn)
+      .map(({ periodEnd }) => reportingMonthEnd(periodEnd))
+      .reduce<PlainDate>((least, periodEnd) => (periodEnd < least ? periodEnd : least), receivedOn),
+  }));
 }
 
 const isEarlierVersion = (earlier: Statement, later: Statement): boolean =>
@@ -66,11 +78,18 @@ const before = (statements: readonly Statement[], day: PlainDate): readonly Stat
 const upTo = (statements: readonly Statement[], day: PlainDate): readonly Statement[] =>
   statements.filter(({ receivedOn }) => receivedOn <= day);
 
-function earningsMoves({ inputs, asOf }: AlertContext, day: PlainDate): readonly EarningsMove[] {
+function earningsMoves(
+  { inputs, asOf }: AlertContext,
+  { receivedOn: day, earliestPeriodEnd }: RestatementDay,
+): readonly EarningsMove[] {
   return STATEMENT_SCOPES.flatMap((scope) => {
     const known = knownStatements(inputs.statements, { scope, asOf });
     const earlier = before(known, day);
-    const periodEnds = new Set(earlier.filter(({ months }) => months > 0).map(({ periodEnd }) => periodEnd));
+    const periodEnds = new Set(
+      earlier
+        .filter(({ months, periodEnd }) => months > 0 && reportingMonthEnd(periodEnd) >= earliestPeriodEnd)
+        .map(({ periodEnd }) => periodEnd),
+    );
     return [...periodEnds].sort().flatMap((periodEnd) => {
       const [was, is] = [earlier, upTo(known, day)].map(
         (statements) => ebitdaOfTwelveMonths(statements, periodEnd, inputs.fiscalYearEndMonth).ebitda,
@@ -82,9 +101,14 @@ function earningsMoves({ inputs, asOf }: AlertContext, day: PlainDate): readonly
   });
 }
 
-function outcomeMoves({ inputs, tests, policy, asOf }: AlertContext, day: PlainDate): readonly OutcomeMove[] {
+function outcomeMoves(
+  { inputs, tests, policy, asOf }: AlertContext,
+  { receivedOn: day, earliestPeriodEnd }: RestatementDay,
+): readonly OutcomeMove[] {
   return inputs.covenants.flatMap((covenant) => {
-    const dates = tests.filter((test) => test.covenantId === covenant.id && test.testDate < day);
+    const dates = tests.filter(
+      (test) => test.covenantId === covenant.id && test.testDate >= earliestPeriodEnd && test.testDate < day,
+    );
     return dates.flatMap(({ testDate }) => {
       const [was, is] = [before, upTo].map(
         (known) =>

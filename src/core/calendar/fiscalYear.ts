@@ -39,7 +39,10 @@ function nearestMonthEnd(date: PlainDate): PlainDate {
 
 /** Whether two period ends stand for the same month end. */
 export const isSamePeriodEnd = (one: PlainDate, other: PlainDate): boolean =>
-  reportingMonthEnd(one) === reportingMonthEnd(other);
+  one === other ||
+  (Math.abs(monthCount(one) - monthCount(other)) <= 1 && reportingMonthEnd(one) === reportingMonthEnd(other));
+
+const monthCount = (date: PlainDate): number => Number(date.slice(0, 4)) * 12 + Number(date.slice(5, 7));
 
 /**
  * Where a period end lies in the financial year: its year is the calendar year in which it ends, its quarter is
