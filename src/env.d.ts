@@ -8,6 +8,8 @@ declare global {
       person: SignedInPerson | null;
       /** Names of the person's desks, for the top bar. */
       deskNames: readonly string[];
+      /** Open alerts on the desks that the person reads; null where the person reads none. */
+      openAlerts: number | null;
       sessionId: string | null;
       requestId: string;
       /** The client's address as the socket (or the named proxy) gives it. */

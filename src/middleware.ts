@@ -2,6 +2,7 @@
 import { sequence } from 'astro:middleware';
 import { isOutage } from './server/db/inTransaction.ts';
 import {
+  alertCountStage,
   headerStage,
   methodStage,
   originStage,
@@ -12,6 +13,7 @@ import {
   sessionStage,
 } from './server/http/stages.ts';
 import { currentPerson } from './server/services/currentPerson.ts';
+import { openAlertCount } from './server/services/openAlertCount.ts';
 import { recordRefusal } from './server/services/recordRefusal.ts';
 
 /**
@@ -28,5 +30,6 @@ export const onRequest = sequence(
   sessionStage(currentPerson),
   refusalStage(recordRefusal),
   requireUserStage,
+  alertCountStage(openAlertCount),
   methodStage,
 );

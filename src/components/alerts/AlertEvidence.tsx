@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import type { AlertDetail } from '../../contracts/alerts.ts';
 import { AlertMark, alertKindText } from '../marks/AlertMark.tsx';
@@ -59,7 +60,7 @@ export function AlertEvidence({ id, first, onChanged, onClose }: AlertEvidencePr
       <p className="type-second">
         <AlertMark kind={alert.kind} /> {alertKindText(alert.kind)}
         {alert.covenantName && alert.covenantId !== null && `, ${alert.covenantName.toLowerCase()}`},{' '}
-        {alert.severity}, facts of {alert.factDate}
+        {alert.severity}, facts of {dayText(alert.factDate)}
         {stateText(alert) && `, ${stateText(alert)}`}
       </p>
       {alert.strip.length > 0 && (

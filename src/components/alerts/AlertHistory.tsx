@@ -1,3 +1,4 @@
+import { formatInstant } from '../../core/calendar/printInstant.ts';
 import type { AlertEvent } from '../../contracts/alerts.ts';
 
 /** What happened to the alert, newest first; times in UTC, as the audit log has them. */
@@ -7,7 +8,7 @@ export function AlertHistory({ events }: { readonly events: readonly AlertEvent[
       {events.map((event) => (
         <li key={`${event.at} ${event.what}`}>
           <time className="type-second" dateTime={event.at}>
-            {event.at.slice(0, 10)} {event.at.slice(11, 16)}
+            {formatInstant(new Date(event.at), 'UTC')}
           </time>
           <span>
             {event.what} by {event.who}

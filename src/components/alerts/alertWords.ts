@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { AlertRow } from '../../contracts/alerts.ts';
 import { daysBetween, plainDate } from '../../core/calendar/plainDate.ts';
 
@@ -15,7 +16,7 @@ export function stateText(
 ): string | null {
   if (row.conditionGone && row.severity === 'urgent' && row.state !== 'closed')
     return 'condition gone, confirm';
-  if (row.state === 'put off') return `put off until ${row.putOffUntil ?? 'later'}`;
+  if (row.state === 'put off') return `put off until ${row.putOffUntil ? dayText(row.putOffUntil) : 'later'}`;
   if (row.state === 'raised') return null;
   return row.state;
 }

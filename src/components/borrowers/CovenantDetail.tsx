@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { BridgeRow, CovenantView } from '../../contracts/borrowers.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../core/money/print.ts';
@@ -58,7 +59,7 @@ export function CovenantDetail({ covenant }: { readonly covenant: CovenantView }
                 })),
               ...covenant.laterLevels.map((later) => ({
                 key: later.from,
-                label: `Against ${limitText(covenant, later.level)} from ${later.from}`,
+                label: `Against ${limitText(covenant, later.level)} from ${dayText(later.from)}`,
                 value: <OutcomeText outcome={later.outcome} />,
               })),
             ]}

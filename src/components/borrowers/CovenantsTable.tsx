@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { CovenantView } from '../../contracts/borrowers.ts';
 import { HeadroomText, OutcomeText } from '../marks/OutcomeText.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
@@ -64,7 +65,7 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                   <OutcomeText outcome={test.outcome} justPassing={test.justPassing} reason={test.reason} />
                 )}
                 <span className="type-second type-small block">
-                  {test?.testDate}, {covenant.checking}
+                  {test && `${dayText(test.testDate)}, ${covenant.checking}`}
                 </span>
               </Cell>
             </Row>

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { BorrowerView } from '../../contracts/borrowers.ts';
 import { Facts } from '../ui/Facts.tsx';
 import { Panel } from '../ui/Panel.tsx';
@@ -31,7 +32,7 @@ export function Facilities({ borrower }: { readonly borrower: BorrowerView }) {
                 </Cell>
                 <Cell numeric>{facility.marginBps ?? '–'}</Cell>
                 <Cell nowrap entry="extra">
-                  {facility.maturesOn}
+                  {dayText(facility.maturesOn)}
                 </Cell>
               </Row>
             ))}

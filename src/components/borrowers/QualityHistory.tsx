@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { QUALITY_BLOCKS, type QuarterScore, type ReportingQuality } from '../../core/quality/score.ts';
 import { Panel } from '../ui/Panel.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
@@ -29,7 +30,7 @@ export function QualityHistory({ quality }: { readonly quality: ReportingQuality
           <TableBody>
             {quarters.map((quarter) => (
               <Row key={quarter.quarterEnd}>
-                <Cell nowrap>{quarter.quarterEnd}</Cell>
+                <Cell nowrap>{dayText(quarter.quarterEnd)}</Cell>
                 <Cell numeric>{scoreText(quarter)}</Cell>
                 {blocks.map((name) => (
                   <Cell key={name} numeric>

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { BorrowerView } from '../../contracts/borrowers.ts';
 import { NO_FINDING_OF_MISCONDUCT } from '../../core/cautions.ts';
 import type { QualityBlock } from '../../core/quality/score.ts';
@@ -39,7 +40,8 @@ export function QualitySummary({
       )}
       {latest && (
         <h3 className="type-heading mt-3">
-          Quarter to {latest.quarterEnd}: {latest.score === null ? 'no score' : Math.round(latest.score)}
+          Quarter to {dayText(latest.quarterEnd)}:{' '}
+          {latest.score === null ? 'no score' : Math.round(latest.score)}
         </h3>
       )}
       {latest && <BlockList blocks={latest.blocks} />}

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { StatementView } from '../../contracts/borrowers.ts';
 import { LINE_ITEMS, type LineItem, type StatementPart } from '../../core/statements/lineItems.ts';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
@@ -58,7 +59,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
 function StatementHead({ statement }: { readonly statement: StatementView }) {
   return (
     <>
-      {statement.periodEnd}
+      {dayText(statement.periodEnd)}
       <span className="type-second type-small block">
         {statement.months === 0 ? 'balance' : `${statement.months} months`}, {statement.basis},{' '}
         {statement.currency}

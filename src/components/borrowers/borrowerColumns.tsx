@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { createColumnHelper } from '@tanstack/react-table';
 import type { BorrowerRow } from '../../contracts/borrowers.ts';
 import { decimal } from '../../core/money/decimal.ts';
@@ -92,7 +93,8 @@ export const borrowerColumns = column.columns([
     id: 'figures',
     header: 'Figures to',
     enableSorting: false,
-    cell: ({ row: { original } }) => original.latestFigures ?? <span className="type-second">none</span>,
+    cell: ({ row: { original } }) =>
+      original.latestFigures ? dayText(original.latestFigures) : <span className="type-second">none</span>,
     meta: { nowrap: true, name: 'Figures to', entry: 'extra' },
   }),
 ]);

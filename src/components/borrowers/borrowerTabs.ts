@@ -1,3 +1,5 @@
+import { dayText } from '../../core/calendar/printDay.ts';
+import { formatInstant } from '../../core/calendar/printInstant.ts';
 import type { BorrowerView } from '../../contracts/borrowers.ts';
 
 export type BorrowerTab = 'covenants' | 'statements' | 'quality' | 'alerts' | 'facilities' | 'review-sheet';
@@ -22,10 +24,9 @@ export function borrowerFacts(borrower: BorrowerView): string {
     borrower.sectorLabel,
     `relationship ${borrower.managerName}`,
     `analyst ${borrower.analystName}`,
-    borrower.watchlist && `on watchlist at ${borrower.watchlist.grade} since ${borrower.watchlist.enteredOn}`,
-    computed
-      ? `figures known to ${computed.dataCutOff.slice(0, 16).replace('T', ' ')} UTC`
-      : 'not assessed yet',
+    borrower.watchlist &&
+      `on watchlist at ${borrower.watchlist.grade} since ${dayText(borrower.watchlist.enteredOn)}`,
+    computed ? `figures known to ${formatInstant(new Date(computed.dataCutOff), 'UTC')}` : 'not assessed yet',
     computed?.peersAreLastNights && 'peers as of last night',
   ];
   return parts.filter(Boolean).join(', ');

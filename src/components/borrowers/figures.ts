@@ -1,4 +1,5 @@
 /** How a covenant's figures are printed on the borrower's page. */
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { CovenantView, TestView } from '../../contracts/borrowers.ts';
 import { isMaximum } from '../../core/covenants/covenant.ts';
 import { decimal } from '../../core/money/decimal.ts';
@@ -28,9 +29,11 @@ export const isMaximumTest = (covenant: Pick<CovenantView, 'operator'>): boolean
 
 export const amountText = (amount: string): string => formatMoneyInFull(decimal(amount));
 
-/** "12 months to 2026-09-30", "at 2026-09-30" */
+/** "12 months to 30 Sep 2026", "at 30 Sep 2026" */
 export const periodText = (period: { readonly months: number; readonly periodEnd: string }): string =>
-  period.months === 0 ? `at ${period.periodEnd}` : `${period.months} months to ${period.periodEnd}`;
+  period.months === 0
+    ? `at ${dayText(period.periodEnd)}`
+    : `${period.months} months to ${dayText(period.periodEnd)}`;
 
 /** Where the cells behind one amount are shown. */
 export const sourceHref = (statementId: number, line: string): string =>

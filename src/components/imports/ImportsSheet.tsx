@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { ImportQuery, ImportRow } from '../../contracts/imports.ts';
@@ -122,11 +123,11 @@ function ImportsTable({
               {row.state === 'draft' ? row.openQuestions : '–'}
             </Cell>
             <Cell nowrap>
-              {row.uploadedAt.slice(0, 10)}
+              {dayText(row.uploadedAt.slice(0, 10))}
               <span className="type-second type-small block">{row.uploadedBy}</span>
             </Cell>
             <Cell nowrap>
-              {row.acceptedAt?.slice(0, 10) ?? '–'}
+              {row.acceptedAt ? dayText(row.acceptedAt.slice(0, 10)) : '–'}
               {row.acceptedBy && <span className="type-second type-small block">{row.acceptedBy}</span>}
             </Cell>
           </Row>

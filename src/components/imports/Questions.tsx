@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import type { ImportView } from '../../contracts/imports.ts';
 import type { CellRef, Question } from '../../contracts/reading.ts';
 import { LINE_ITEMS } from '../../core/statements/lineItems.ts';
@@ -136,7 +137,7 @@ function Given({
       <span className="type-name">{label}</span>
       {given && (
         <span className="type-second">
-          , {given.by}, {given.at.slice(0, 10)}
+          , {given.by}, {dayText(given.at.slice(0, 10))}
         </span>
       )}
       {editable && (

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { useEffect, useRef } from 'react';
 import type { Reading, ReadColumn, ReadSheet } from '../../contracts/reading.ts';
 import { LINE_ITEMS } from '../../core/statements/lineItems.ts';
@@ -92,10 +93,10 @@ function ColumnPeriod({ column }: { readonly column: ReadColumn | undefined }) {
       : column.periodEnd === null
         ? column.heading
         : column.months === null
-          ? `to ${column.periodEnd}, how long?`
+          ? `to ${dayText(column.periodEnd)}, how long?`
           : column.months === 0
-            ? `at ${column.periodEnd}`
-            : `${column.months} months to ${column.periodEnd}`;
+            ? `at ${dayText(column.periodEnd)}`
+            : `${column.months} months to ${dayText(column.periodEnd)}`;
   return (
     <span
       className={classes(

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { useState } from 'react';
 import { proposalDecision, type ProposalRow } from '../../contracts/watchlist.ts';
 import { HUMAN_DECISION_REQUIRED } from '../../core/cautions.ts';
@@ -39,7 +40,7 @@ export function DecideProposal({ proposal, onClose, onDone }: DecideProposalProp
         </p>
         <p>
           <span className="type-name">Plan: </span>
-          {proposal.plan} (owner {proposal.ownerName}, next review {proposal.nextReviewOn})
+          {proposal.plan} (owner {proposal.ownerName}, next review {dayText(proposal.nextReviewOn)})
         </p>
         <p>
           <a href={`/borrowers/${proposal.borrowerId}/review-sheet`}>

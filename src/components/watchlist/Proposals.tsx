@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { useState, type ReactNode } from 'react';
 import { WATCHLIST_GRADES, type ProposalRow } from '../../contracts/watchlist.ts';
 import { Button } from '../ui/Button.tsx';
@@ -76,7 +77,7 @@ export function Proposals({ proposals, personId, decides, onChanged }: Proposals
                 <>
                   {proposal.state}
                   {proposal.decidedBy &&
-                    ` by ${proposal.decidedBy}, ${proposal.decidedAt?.slice(0, 10) ?? ''}`}
+                    ` by ${proposal.decidedBy}, ${proposal.decidedAt ? dayText(proposal.decidedAt.slice(0, 10)) : ''}`}
                   {proposal.decisionText && (
                     <span className="type-second type-small block">{proposal.decisionText}</span>
                   )}
@@ -144,7 +145,9 @@ function ProposalTable({ proposals, last, cell }: ProposalTableProps) {
             </Cell>
             <Cell nowrap>
               {proposal.proposedBy}
-              <span className="type-second type-small block">{proposal.proposedAt.slice(0, 10)}</span>
+              <span className="type-second type-small block">
+                {dayText(proposal.proposedAt.slice(0, 10))}
+              </span>
             </Cell>
             <Cell entry="extra">{cell(proposal)}</Cell>
           </Row>

@@ -1,3 +1,4 @@
+import { dayText } from '../../core/calendar/printDay.ts';
 import { useQuery } from '@tanstack/react-query';
 import { WATCHLIST_GRADES, type WatchlistRow, type WatchlistView } from '../../contracts/watchlist.ts';
 import { Refusal, getOrThrow } from '../ui/api.ts';
@@ -93,11 +94,11 @@ function Entries({ entries }: { readonly entries: readonly WatchlistRow[] }) {
             <Cell>{entry.plan}</Cell>
             <Cell nowrap>{entry.ownerName}</Cell>
             <Cell nowrap entry="extra">
-              {entry.nextReviewOn}
+              {dayText(entry.nextReviewOn)}
               {entry.reviewOverdue && <span className="type-name block">overdue</span>}
             </Cell>
             <Cell nowrap>
-              {entry.enteredOn}
+              {dayText(entry.enteredOn)}
               <span className="type-second type-small block">
                 proposed by {entry.proposedBy}, decided by {entry.decidedBy}
               </span>

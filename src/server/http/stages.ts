@@ -23,6 +23,7 @@ export const requestStage =
     const { locals, request } = context;
     locals.person = null;
     locals.deskNames = [];
+    locals.openAlerts = null;
     locals.sessionId = null;
     locals.requestId ??= randomUUID();
     locals.now = new Date();
@@ -91,6 +92,15 @@ export const sessionStage =
       context.locals.deskNames = signedIn.deskNames;
       context.locals.sessionId = signedIn.sessionId;
     } else clearSessionCookie(context.cookies);
+    return next();
+  };
+
+/** Every page's bar shows how many alerts are open; an API answer has no bar. */
+export const alertCountStage =
+  (countOpen: (person: SignedIn['person']) => Promise<number | null>): MiddlewareHandler =>
+  async (context, next) => {
+    const { person } = context.locals;
+    if (person && !isApi(context.url.pathname)) context.locals.openAlerts = await countOpen(person);
     return next();
   };
 

@@ -1,12 +1,20 @@
+import { formatDay } from '../../core/calendar/printDay.ts';
+import { formatInstant } from '../../core/calendar/printInstant.ts';
 import type { AlertQuery, AlertRow } from '../../contracts/alerts.ts';
 import type { Page } from '../../contracts/paging.ts';
 import { deskScope } from '../auth/policy.ts';
 import { inTransaction } from '../db/inTransaction.ts';
-import { countAlerts, listAlerts as listRecords } from '../db/repositories/alertLists.ts';
+import {
+  countOpenAlerts,
+  countRaisedSince,
+  listAlerts as listRecords,
+} from '../db/repositories/alertLists.ts';
 import { listRuns } from '../db/repositories/runs.ts';
 import { listSectors } from '../db/repositories/sectors.ts';
 import type { PersonActor } from './actor.ts';
 import { alertFilter, withStrips } from './listAlerts.ts';
+
+const DAY_MS = 86_400_000;
 
 export interface AlertsPage {
   readonly query: AlertQuery;
@@ -14,7 +22,6 @@ export interface AlertsPage {
   readonly today: string;
   readonly sectors: readonly { readonly code: string; readonly label: string }[];
   readonly ownsBorrowers: boolean;
-  readonly open: number;
   /** "37 open, 6 new since yesterday. Figures received to …, computed …" */
   readonly facts: string;
 }
@@ -26,10 +33,11 @@ export function showAlertsPage(actor: PersonActor, asked: AlertQuery, isPlain: b
   const scope = deskScope(actor.person, 'read borrower');
   return inTransaction(async (tx) => {
     const { rows, total } = await listRecords(tx, scope, alertFilter(actor, query), query);
-    const counts = await countAlerts(tx, scope, new Date(actor.now.getTime() - 86_400_000));
+    const open = await countOpenAlerts(tx, scope);
+    const fresh = await countRaisedSince(tx, scope, new Date(actor.now.getTime() - DAY_MS));
     const [run] = (await listRuns(tx, { page: 1, perPage: 1 })).rows;
     const computed = run
-      ? ` Last night’s run: ${run.businessDate}, figures known to ${run.knownAt.toISOString().slice(0, 16).replace('T', ' ')} UTC.`
+      ? ` Last run of ${formatDay(run.businessDate)}, figures known to ${formatInstant(run.knownAt, 'UTC')}.`
       : ' No nightly run yet.';
     return {
       query,
@@ -37,8 +45,7 @@ export function showAlertsPage(actor: PersonActor, asked: AlertQuery, isPlain: b
       today: actor.now.toISOString().slice(0, 10),
       sectors: (await listSectors(tx)).map(({ code, label }) => ({ code, label })),
       ownsBorrowers,
-      open: counts.open,
-      facts: `${counts.open} open, ${counts.fresh} new since yesterday.${computed}`,
+      facts: `${open} open, ${fresh} new since yesterday.${computed}`,
     };
   });
 }

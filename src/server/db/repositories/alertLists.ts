@@ -187,18 +187,25 @@ export async function listStrips(
   );
 }
 
-/** Open alerts on the desks of the scope, and how many of them were raised since. */
-export async function countAlerts(
-  tx: Transaction,
-  scope: DeskScope,
-  since: Date,
-): Promise<{ open: number; fresh: number }> {
+/** Open alerts on the desks of the scope. */
+export async function countOpenAlerts(tx: Transaction, scope: DeskScope): Promise<number> {
   const desks = inScope(scope);
-  const row = await selectOne<{ open: number; fresh: number }>(
+  const row = await selectOne<{ open: number }>(
     tx,
-    `select count(*) as open, coalesce(sum(a.raised_at >= :since), 0) as fresh
-     from alerts a join borrowers b on b.id = a.borrower_id where a.open_slot is not null and ${desks.sql}`,
+    `select count(*) as open from alerts a join borrowers b on b.id = a.borrower_id where a.open_slot is not null and ${desks.sql}`,
+    desks.values,
+  );
+  return row?.open ?? 0;
+}
+
+/** How many of them were raised since then. */
+export async function countRaisedSince(tx: Transaction, scope: DeskScope, since: Date): Promise<number> {
+  const desks = inScope(scope);
+  const row = await selectOne<{ fresh: number }>(
+    tx,
+    `select count(*) as fresh from alerts a join borrowers b on b.id = a.borrower_id
+     where a.open_slot is not null and a.raised_at >= :since and ${desks.sql}`,
     { since, ...desks.values },
   );
-  return { open: Number(row?.open ?? 0), fresh: Number(row?.fresh ?? 0) };
+  return row?.fresh ?? 0;
 }
