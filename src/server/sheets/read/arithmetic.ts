@@ -130,9 +130,7 @@ function matchOfParts(parts: readonly Term[], row: SumRow, step: Decimal): Match
   const tolerance = step.times(parts.length + 1).div(2);
   const totalSigns: readonly (1 | -1)[] = row.eitherSign ? [row.sign, (row.sign * -1) as 1 | -1] : [row.sign];
   for (let choice = 0; choice < 2 ** free.length; choice += 1) {
-    const flips = parts.map(
-      (_, at) => ((choice >> free.indexOf(at)) & 1 && free.includes(at) ? -1 : 1) as 1 | -1,
-    );
+    const flips = parts.map((_, at) => ((choice >> free.indexOf(at)) & 1 && free.includes(at) ? -1 : 1));
     for (const useInstead of wrongTotals.length > 0 ? [false, true] : [false]) {
       for (const totalSign of totalSigns) {
         if (!fits(parts, flips, useInstead, signed(row.values, totalSign), tolerance)) continue;

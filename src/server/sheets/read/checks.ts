@@ -46,19 +46,24 @@ function worstOfEach(checks: readonly ReadCheck[]): ReadCheck[] {
   return [...worst.values()];
 }
 
-const isKept = (run: Run, columns: readonly SettledColumn[]): readonly SettledColumn[] =>
-  columns.filter(
-    ({ scenario, months }) => scenario === 'actual' && (run.part === 'balance' || months !== null),
-  );
+/** Columns of a length that is still open are checked as well: sums hold at any length. */
+const isActual = ({ scenario }: SettledColumn): boolean => scenario === 'actual';
+
+/** All entities while none is chosen, each for itself. */
+function checkedColumns(table: StatementTable, entities: EntityColumns): readonly SettledColumn[] {
+  const chosen = (entities.columns.get(table) ?? []).filter(isActual);
+  return chosen.length > 0 ? chosen : (entities.all.get(table) ?? []).filter(isActual);
+}
 
 /** Figures by period, helper lines included; the first row of a line that is a total, the sum of parts otherwise. */
 function periodsOf(tables: readonly CheckedTable[], entities: EntityColumns): Map<string, Period> {
   const periods = new Map<string, Period>();
   for (const { table, scale } of tables) {
     for (const run of table.runs) {
-      for (const column of isKept(run, entities.columns.get(table) ?? [])) {
+      for (const column of checkedColumns(table, entities)) {
         const months = run.part === 'balance' ? 0 : (column.months ?? 0);
-        const borrower = entities.borrowerOf(table, column) ?? '';
+        const isChosen = (entities.columns.get(table) ?? []).length > 0;
+        const borrower = entities.borrowerOf(table, column) ?? (isChosen ? '' : column.name);
         const key = [borrower, column.end, months].join('|');
         const step = run.step.times(scale.unit ?? 1);
         const period = periods.get(key) ?? {
@@ -192,7 +197,7 @@ const INCOME_CODES: Readonly<Partial<Record<Line, string>>> = {
 /** Totals against their parts, as arithmetic found them or as they should have been. */
 function sumChecks({ table, scale }: CheckedTable, entities: EntityColumns): ReadCheck[] {
   return table.runs.flatMap((run) =>
-    isKept(run, entities.columns.get(table) ?? []).flatMap((column) =>
+    checkedColumns(table, entities).flatMap((column) =>
       [...run.signed.sums.sums, ...run.signed.sums.untied].flatMap(([index, parts]) => {
         const result = sumCheck(run, index, parts, column);
         return result ? [scaled(result, scale)] : [];

@@ -56,7 +56,7 @@ function otherContent(bytes: Buffer): string | null {
   if (/^<!doctype html|^<html|<table|<body/.test(start)) return 'it is a web page';
   if (start.startsWith('<')) return 'it is an XML document';
   if (start.startsWith('{\\rtf')) return 'it is a text document';
-  if (/^(\x89png|gif8|\xff\xd8\xff|bm|ii\*|mm\x00\*)/.test(start)) return 'it is a picture';
+  if (/^(\x89png|gif8|\xff\xd8\xff|bm|ii\*)/.test(start)) return 'it is a picture';
   if (bytes.includes(ZIP_ENTRY) && holdsControlBytes(bytes))
     return 'a workbook is hidden behind other content';
   if (!looksLikeText(bytes)) return 'its content is of no kind that is known here';

@@ -10,7 +10,9 @@ const BORROWER_HEADING =
   /^(?:borrower|company|client|customer|obligor|debtor|kunde|firma|kreditnehmer|société|emprunteur|empresa|cliente|prestatario)(?: name)?$/i;
 
 export interface EntityColumns {
+  /** Of the entity that is meant; none while that is asked. */
   readonly columns: SettledColumns;
+  readonly all: SettledColumns;
   /** The borrower that a record of a file of many belongs to, by table and column. */
   readonly borrowerOf: (table: StatementTable, column: SettledColumn) => string | null;
 }
@@ -44,7 +46,7 @@ export function chooseEntities(
       ] as const;
     }),
   );
-  return { columns: chosen, borrowerOf };
+  return { columns: chosen, all: settled, borrowerOf };
 }
 
 /** Names that stand beside one another for the same period and scenario. */

@@ -62,7 +62,7 @@ function sheetGrid(sheet: ExcelJS.Worksheet, mark: DecimalMark, values: Workbook
     rows,
     hiddenRows,
     hiddenColumns: new Set([...columns].filter((column) => sheet.getColumn(column).hidden)),
-    merges: (sheet.model.merges as unknown as string[]).map(mergedArea),
+    merges: sheet.model.merges.map(mergedArea),
     pictures: sheet.getImages().map(({ range }) => cornerOf(range)),
   };
 }
