@@ -187,7 +187,7 @@ async function untilOpen(child, port, log) {
 /**
  * Starts the server on this folder, or takes over the one that runs on it.
  * @param {{ directory: string, port?: number, fast?: boolean, bufferPool?: string, say?: (text: string) => void }} options
- * @returns {Promise<{ pid: number, port: number, socket: string, adminUser: string, stop: () => Promise<void>, kill: () => Promise<void> }>}
+ * @returns {Promise<{ pid: number, port: number, socket: string, adminUser: string, isRunning: () => boolean, stop: () => Promise<void>, kill: () => Promise<void> }>}
  */
 export async function startDatabase({ directory, port, fast = false, bufferPool = '256M', say = () => {} }) {
   if (!program('mariadbd') || !program('mariadb-install-db'))
@@ -202,6 +202,7 @@ export async function startDatabase({ directory, port, fast = false, bufferPool 
     socket,
     // Over the unix socket the server believes the operating system about who asks.
     adminUser: isRoot ? 'root' : userInfo().username,
+    isRunning: () => isServerOf(pid, data),
     stop: () => endProcess(pid, data),
     kill: async () => {
       if (isServerOf(pid, data)) process.kill(pid, 'SIGKILL');

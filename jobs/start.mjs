@@ -111,6 +111,7 @@ async function prepareSettings({ dataFolder, host, port, sinkPort, appUrl }) {
   say('starting the database');
   const database = await startLocalDatabase(dataFolder, say);
   endings.push(database.stop);
+  database.keepUp();
   return { ...env, ...database.settings, SEED_DEMO: given.SEED_DEMO ?? '1' };
 }
 

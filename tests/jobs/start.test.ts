@@ -72,10 +72,12 @@ async function expectNothingLeft({ settings, ports }: Installation): Promise<voi
   for (const port of ports) expect(await answers(port), `port ${port}`).toBe(false);
 }
 
+const statusOf = async (address: string): Promise<number> => (await fetch(address)).status;
+
 const lastLine = (text: string): string => text.trimEnd().split('\n').at(-1) ?? '';
 
 describe('npm start', () => {
-  test('serves, says so to a second one, survives being killed, and ends without a trace', async () => {
+  test('serves, says so to a second one, survives being killed, starts a killed database again, and ends without a trace', async () => {
     const own = await installation();
     const first = npmStart(own.settings);
     await first.until(/^Underkeel: /m, 120);
@@ -103,6 +105,16 @@ describe('npm start', () => {
     await third.until(/^Underkeel: |is taken/m, 120);
     expect(lastLine(third.output())).toBe(`Underkeel: ${own.address}`);
     expect(processesWith(`--datadir=${own.settings['DATA_DIR']}`)).toHaveLength(1);
+
+    const note = join(own.settings['DATA_DIR']!, 'db', 'server.json');
+    const server = JSON.parse(readFileSync(note, 'utf8')) as { pid: number };
+    process.kill(server.pid, 'SIGKILL');
+    expect(await statusOf(`${own.address}/readyz`)).toBe(503);
+    expect(await statusOf(`${own.address}/livez`)).toBe(200);
+    await third.until(/the database server ended by itself/);
+    for (let waited = 0; waited < 50 && (await statusOf(`${own.address}/readyz`)) !== 200; waited += 1)
+      await new Promise((resume) => setTimeout(resume, 200));
+    expect(await statusOf(`${own.address}/readyz`)).toBe(200);
 
     third.kill('SIGTERM');
     expect(await third.ended).toBe(0);
