@@ -70,7 +70,7 @@ export function mailTransport(settings = env()): MailTransport {
   };
 }
 
-export function messageId(messageKey: string, from: string): string {
+function messageId(messageKey: string, from: string): string {
   const unique = createHash('sha256').update(messageKey).digest('hex').slice(0, 40);
   return `<${unique}@${from.slice(from.lastIndexOf('@') + 1)}>`;
 }
