@@ -13,9 +13,6 @@ export interface Container {
 
 const COMPOUND_FILE = Buffer.from('d0cf11e0a1b11ae1', 'hex');
 const ZIP_ENTRY = Buffer.from('504b0304', 'hex');
-/** Records that begin a workbook of the formats before 1997, which have no outer container. */
-const OLD_WORKBOOK_STARTS = ['09080', '09040', '09020', '0900'].map((hex) => hex.padEnd(6, '0'));
-
 export async function openContainer(bytes: Buffer): Promise<Result<Container, ReadRefusal>> {
   if (bytes.length === 0) return err(refusal('damaged', null, 'it is empty, 0 bytes long'));
   if (bytes.length > MAX_FILE_BYTES) {
@@ -24,13 +21,17 @@ export async function openContainer(bytes: Buffer): Promise<Result<Container, Re
     );
   }
   if (bytes.subarray(0, 8).equals(COMPOUND_FILE)) return err(compoundFile(bytes));
-  if (OLD_WORKBOOK_STARTS.includes(bytes.subarray(0, 3).toString('hex'))) return err(refusal('legacy-xls'));
+  if (isOldestFormat(bytes)) return err(refusal('legacy-xls'));
   if (bytes.subarray(0, 4).equals(ZIP_ENTRY)) {
     const archive = await checkArchive(bytes);
     return archive.ok ? ok({ kind: 'xlsx', notes: archive.value }) : archive;
   }
   return plainContent(bytes);
 }
+
+/** Before 1997 a workbook had no outer container: it begins with a record of kind 9, of at most 16 bytes. */
+const isOldestFormat = (bytes: Buffer): boolean =>
+  bytes[0] === 9 && [0, 2, 4, 8].includes(bytes[1] ?? -1) && (bytes[2] ?? 99) <= 16 && bytes[3] === 0;
 
 /** The container of encrypted workbooks and of .xls; its directory names the streams in UTF-16. */
 function compoundFile(bytes: Buffer): ReadRefusal {
