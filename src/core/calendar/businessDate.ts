@@ -17,6 +17,7 @@ export function businessDate(now: Date, zone: string): PlainDate {
     month: '2-digit',
     day: '2-digit',
   }).formatToParts(now);
-  const part = (type: Intl.DateTimeFormatPartTypes) => parts.find((found) => found.type === type)?.value ?? '';
+  const part = (type: Intl.DateTimeFormatPartTypes) =>
+    parts.find((found) => found.type === type)?.value ?? '';
   return plainDate(`${part('year').padStart(4, '0')}-${part('month')}-${part('day')}`);
 }
