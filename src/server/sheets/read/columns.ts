@@ -76,8 +76,7 @@ function roleOf(headings: readonly HeadingText[], anyPeriod: boolean): ColumnWor
   if (headings.some((heading) => heading.note)) return 'note';
   if (headings.some((heading) => heading.derived)) return 'derived';
   if (headings.some(saysPeriod)) return 'period';
-  if (headings.length === 0 || anyPeriod) return 'unknown';
-  return 'period';
+  return anyPeriod ? 'unknown' : 'period';
 }
 
 /** The lower heading says more of its column than the one above. */

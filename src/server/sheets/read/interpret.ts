@@ -21,6 +21,8 @@ import { placeRows, type PlacedRow } from './placing.ts';
 import { askUnbalanced, readingOf, refusedReading } from './readings.ts';
 import { refusal } from './refusals.ts';
 import { withoutRepeatedColumns, withoutRepeatedTables } from './repeats.ts';
+import { readTrialBalance } from './trialBalance.ts';
+import { isStandardLine } from './signs.ts';
 import { statementTables, type Run, type StatementTable } from './statements.ts';
 import { isAmount } from './tables.ts';
 import { settleScales, type SettledScale } from './units.ts';
@@ -31,7 +33,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
   for (const { code, text, where } of notes) asking.note(code, text, where);
   const sheets = grid.sheets.filter((sheet) => !isPersonal(sheet, asking));
   const open: WorkbookGrid = { kind: grid.kind, sheets };
-  const tables = sheets.flatMap((sheet) => statementTables(sheet, asking));
+  const tables = withStatements(sheets.flatMap((sheet) => statementTables(sheet, asking)));
   const empty = refuseWithoutAmounts(sheets, tables);
   if (empty) return refusedReading(empty, open, tables, asking);
 
@@ -43,14 +45,21 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
   const scales = settleScales(open, tables, context, asking);
   const entities = chooseEntities(settled, context.borrowerName ?? null, asking);
   const placed = placeTables(tables, entities.columns, asking);
-  const checks = checksOf(
-    tables.map((table) => ({ table, scale: scaleOf(scales, table) })),
-    entities,
-  );
   const found = placed.flatMap(({ table, run, rows }) =>
     factsOfRun(table, run, rows, scaleOf(scales, table), entities, asking),
   );
-  const single = withoutDoubledDepreciation(withoutRepeatedTables(found, asking));
+  const ledgers = tables
+    .filter(({ isTrialBalance }) => isTrialBalance)
+    .map((table) => readTrialBalance(table, scaleOf(scales, table), asking));
+  const all = [...found, ...ledgers.flatMap((ledger) => ledger.facts)];
+  const single = withoutDoubledDepreciation(withoutRepeatedTables(all, asking));
+  const checks = [
+    ...checksOf(
+      tables.map((table) => ({ table, scale: scaleOf(scales, table) })),
+      entities,
+    ),
+    ...ledgers.flatMap((ledger) => ledger.checks),
+  ];
   const facts = askUnbalanced(withoutJumps(single, context, asking), checks, asking);
   if (facts.length === 0 && asking.questions.every(({ answer }) => answer !== null)) {
     const nothing = refusal(
@@ -69,9 +78,20 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     checks,
     asking,
     scales,
-    placements: placed.flatMap(({ table, rows }) => placementsOf(table, rows)),
+    placements: [
+      ...placed.flatMap(({ table, rows }) => placementsOf(table, rows)),
+      ...ledgers.flatMap((ledger) => ledger.placements),
+    ],
     layoutKey: layoutKeyOf(tables),
   });
+}
+
+/** Tables of other things (staff, ratios, cover) are asked about nothing. */
+function withStatements(tables: readonly StatementTable[]): StatementTable[] {
+  const lines = ({ runs }: StatementTable) =>
+    runs.reduce((count, { rows }) => count + rows.filter(({ line }) => isStandardLine(line)).length, 0);
+  const most = Math.max(0, ...tables.map(lines));
+  return tables.filter((table) => table.isTrialBalance || lines(table) >= Math.min(2, Math.max(1, most)));
 }
 
 const scaleOf = (scales: ReadonlyMap<StatementTable, SettledScale>, table: StatementTable): SettledScale =>
@@ -116,7 +136,8 @@ function placeTables(
   asking: Asking,
 ): PlacedRun[] {
   return tables.flatMap((table) => {
-    if (!settled.get(table)?.some(({ scenario }) => scenario === 'actual')) return [];
+    const isRead = settled.get(table)?.some(({ scenario }) => scenario === 'actual');
+    if (table.isTrialBalance || !isRead) return [];
     return table.runs.map((run) => ({ table, run, rows: placeRows(table, run, asking) }));
   });
 }

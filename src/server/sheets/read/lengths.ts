@@ -2,12 +2,18 @@
  * How many months each column of flows covers, where its words do not say: proven by the cash roll or by retained
  * earnings, else asked. Growth from column to column proves nothing: it only words the question.
  */
-import { addMonthsToMonthEnd, type PlainDate } from '#core/calendar/plainDate.ts';
+import { addMonthsToMonthEnd, isPlainDate, type PlainDate } from '#core/calendar/plainDate.ts';
 import { ZERO, type Decimal } from '#core/money/decimal.ts';
 import type { CellRef } from '#core/statements/workbookReading.ts';
 import type { Asking } from './asking.ts';
 import { cellName } from './cells.ts';
-import { columnPeriod, monthsIntoYear, titleLengthFits, type PeriodEvidence } from './periods.ts';
+import {
+  columnPeriod,
+  monthsIntoYear,
+  titleLengthFits,
+  type ColumnPeriod,
+  type PeriodEvidence,
+} from './periods.ts';
 import type { SettledColumn, StatementTable } from './statements.ts';
 import type { Line } from './wordings/lines.ts';
 
@@ -24,7 +30,7 @@ export function settleColumns(
   asking: Asking,
 ): SettledColumns {
   const settled = new Map<StatementTable, readonly SettledColumn[]>(
-    tables.map((table) => [table, withEnds(table, evidence)]),
+    tables.map((table) => [table, withEnds(table, evidence, asking)]),
   );
   const proofs = lengthProofs(settled);
   for (const [table, columns] of settled) {
@@ -45,10 +51,12 @@ const withLength = (column: SettledColumn, months: number | null): SettledColumn
   months: column.months ?? months,
 });
 
-function withEnds(table: StatementTable, evidence: PeriodEvidence): SettledColumn[] {
-  const periods = table.columns.flatMap((words) => {
-    if (words.role !== 'period') return [];
-    const period = columnPeriod(words, table.title, evidence);
+function withEnds(table: StatementTable, evidence: PeriodEvidence, asking: Asking): SettledColumn[] {
+  const columns = table.columns.filter(({ role }) => role === 'period');
+  const said = columns.map((words) => columnPeriod(words, table.title, evidence));
+  const typed = said.every(({ needs }) => needs === 'period') ? askPeriod(table, asking) : null;
+  const periods = columns.flatMap((words, at) => {
+    const period = typed ?? said[at] ?? { end: null, months: null, needs: 'period' };
     return period.end ? [{ ...words, ...period, end: period.end }] : [];
   });
   const ends = periods.filter(({ scenario }) => scenario === 'actual').map(({ end }) => end);
@@ -59,6 +67,26 @@ function withEnds(table: StatementTable, evidence: PeriodEvidence): SettledColum
     return period.priorYear ? { ...own, end: addMonthsToMonthEnd(own.end, -MONTHS_IN_YEAR) } : own;
   });
 }
+
+/** A table that names no period at all: the analyst types it, '2026-09-30/3'. */
+function askPeriod(table: StatementTable, asking: Asking): ColumnPeriod | null {
+  if (table.isTrialBalance || table.columns.length === 0) return null;
+  const { sheet } = table.table;
+  const answer = asking.ask({
+    key: `period:${sheet.name}`.slice(0, 190),
+    kind: 'period-length',
+    holdsFor: 'file',
+    text: `Nothing on '${sheet.name}' says which period the amounts are for. Type its last day and its months, such as 2026-09-30/3; 0 months for a balance sheet.`,
+    where: [],
+    options: [],
+    accepts: (given) => TYPED_PERIOD.test(given) && isPlainDate(given.slice(0, 10)),
+  });
+  const [, end, months] = TYPED_PERIOD.exec(answer ?? '') ?? [];
+  if (!end || !isPlainDate(end)) return null;
+  return { end, months: Number(months) || null, needs: null };
+}
+
+const TYPED_PERIOD = /^(\d{4}-\d{2}-\d{2})\/(\d{1,2})$/;
 
 const proofKey = (table: StatementTable, column: SettledColumn): string =>
   `${table.table.sheet.name}:${table.table.rows[0]?.number}:${column.key}`;
