@@ -3,6 +3,7 @@ import astro from 'eslint-plugin-astro';
 import boundaries from 'eslint-plugin-boundaries';
 import hooks from 'eslint-plugin-react-hooks';
 import jsxA11y from 'eslint-plugin-jsx-a11y';
+import { defineConfig } from 'eslint/config';
 import tseslint from 'typescript-eslint';
 
 /** The whole architecture, as data: [folder, what it may import, where to put it instead]. */
@@ -85,7 +86,7 @@ const clock = [
   },
 ];
 
-export default tseslint.config(
+export default defineConfig(
   { ignores: ['dist/**', '.astro/**', '.data/**', 'node_modules/**'] },
   js.configs.recommended,
   ...tseslint.configs.recommendedTypeChecked,

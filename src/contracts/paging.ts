@@ -1,6 +1,6 @@
 import { z } from 'zod';
 
-export const PAGE_SIZE_MOST = 200;
+const PAGE_SIZE_MOST = 200;
 
 /** Query of every list: `page` counts from 1. */
 export const pageQuery = z.object({

@@ -1,7 +1,5 @@
 /** What a borrower's workbook was read as, on the wire. The reader itself is below contracts, so the shape is core's. */
 export {
-  QUESTION_KINDS,
-  REFUSAL_CODES,
   type CellRef,
   type GridCell,
   type Question,

@@ -13,8 +13,6 @@ const ownPath = z
   .regex(/^\/(?![/\\])[^\r\n\\]*$/);
 
 export const schemeForm = z.object({ scheme: z.enum(SCHEMES), back: ownPath.catch('/') });
-export type SchemeForm = z.infer<typeof schemeForm>;
-
 /** The cookie's scheme; anything else follows the system's setting. */
 export function schemeOf(cookie: string | undefined): Scheme {
   return SCHEMES.find((scheme) => scheme === cookie) ?? 'system';

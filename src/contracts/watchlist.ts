@@ -13,9 +13,9 @@ export type GradeCode = (typeof GRADE_CODES)[number];
 export const WATCHLIST_CHANGES = ['entry', 'grade', 'exit'] as const;
 export type WatchlistChange = (typeof WATCHLIST_CHANGES)[number];
 
-export const REASON_LEAST = 10;
-export const REASON_MOST = 1_000;
-export const PLAN_MOST = 2_000;
+const REASON_LEAST = 10;
+const REASON_MOST = 1_000;
+const PLAN_MOST = 2_000;
 
 export const day = z.string().refine(isPlainDate, 'a day as YYYY-MM-DD');
 

@@ -80,5 +80,5 @@ test('imports run one way', async () => {
     doNotFollow: { path: 'node_modules' },
     tsConfig: { fileName: 'tsconfig.json' },
   });
-  expect(exitCode, String(output)).toBe(0);
+  expect(exitCode, typeof output === 'string' ? output : JSON.stringify(output)).toBe(0);
 }, 30_000);

@@ -27,7 +27,7 @@ export function AuditSheet(props: AuditSheetProps) {
   );
 }
 
-export function auditSearch(query: AuditQuery): string {
+function auditSearch(query: AuditQuery): string {
   const defaults = auditQuery.parse({});
   const search = new URLSearchParams();
   for (const [key, value] of Object.entries(query) as [keyof AuditQuery, string | number | undefined][])

@@ -69,7 +69,7 @@ export function QualitySummary({
 export const blockScore = (block: QualityBlock): number | null =>
   block.risk === null ? null : Math.round(100 * (1 - block.risk));
 
-export function BlockList({ blocks }: { readonly blocks: readonly QualityBlock[] }) {
+function BlockList({ blocks }: { readonly blocks: readonly QualityBlock[] }) {
   return (
     <dl className="facts">
       {blocks.map((block) => {

@@ -22,7 +22,7 @@ type Side = 1 | -1;
 const RING = 5;
 const TEXT_AIR = 8;
 
-export const RESULTS_DATASET = 0;
+const RESULTS_DATASET = 0;
 
 export function limitChartDatasets(figures: LimitChartFigures, colours: SheetColours): LineDataset[] {
   const { results, second, maximum } = figures;

@@ -71,7 +71,7 @@ export function figureText(value: string, unit: ChartUnit): string {
   return unit === 'times' ? formatRatio(decimal(value)) : formatMoney(decimal(value));
 }
 
-export function levelText(value: string, unit: ChartUnit): string {
+function levelText(value: string, unit: ChartUnit): string {
   return unit === 'times' ? formatLevel(decimal(value)) : formatMoney(decimal(value));
 }
 

@@ -6,11 +6,11 @@ import type { StripTest } from '../../contracts/alerts.ts';
 
 export type StripSize = 'row' | 'panel';
 
-export const STRIP_TESTS = 12;
+const STRIP_TESTS = 12;
 
 /** Ends of the scale, in points of what earnings may fall. */
-export const SCALE_TOP_POINTS = 30;
-export const SCALE_BOTTOM_POINTS = -15;
+const SCALE_TOP_POINTS = 30;
+const SCALE_BOTTOM_POINTS = -15;
 
 export interface StripFrame {
   readonly width: number;

@@ -61,4 +61,3 @@ export const CLOSING_REASONS = [
   { code: 11, label: 'Duplicate or merged', secondPerson: false },
   { code: 12, label: 'Rule unsuitable for this type of borrower', secondPerson: false },
 ] as const;
-export type ClosingReasonCode = (typeof CLOSING_REASONS)[number]['code'];

@@ -50,7 +50,6 @@ const TABLE = {
 } as const satisfies Record<string, Partial<Record<Role, Reach>>>;
 
 export type Action = keyof typeof TABLE;
-export const ACTIONS = Object.keys(TABLE) as Action[];
 
 /** Who asks. Roles and desks are read from the database with every request. */
 export interface Person {

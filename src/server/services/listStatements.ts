@@ -1,6 +1,6 @@
 import type { SourceCellView, StatementView } from '../../contracts/borrowers.ts';
 import { err, ok } from '../../core/result.ts';
-import { LINE_ITEM_CODES, isLineItemCode } from '../../core/statements/lineItems.ts';
+import { LINE_ITEM_CODES, isLineItemCode, type LineItemCode } from '../../core/statements/lineItems.ts';
 import { deskScope } from '../auth/policy.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { findBorrowerDesk } from '../db/repositories/borrowerDesks.ts';
@@ -34,9 +34,7 @@ export function listStatements(
         receivedOn: record.receivedOn,
         importId: record.importId,
         fileName: record.fileName,
-        amounts: Object.fromEntries(
-          LINE_ITEM_CODES.flatMap((code) => (record[code] === null ? [] : [[code, record[code]]])),
-        ) as Record<string, string>,
+        amounts: amountsOf(record),
       })),
     });
   });
@@ -54,4 +52,14 @@ export function showSource(
     if (cells.length === 0) return err({ kind: 'not-found', what: 'cell' });
     return ok({ cells: cells.map((cell) => ({ ...cell, fromFormula: cell.fromFormula === 1 })) });
   });
+}
+
+/** The lines that are there; a missing one is left out. */
+function amountsOf(record: Readonly<Record<LineItemCode, string | null>>): Record<string, string> {
+  const amounts: Record<string, string> = {};
+  for (const code of LINE_ITEM_CODES) {
+    const amount = record[code];
+    if (amount !== null) amounts[code] = amount;
+  }
+  return amounts;
 }

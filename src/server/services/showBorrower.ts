@@ -1,7 +1,6 @@
 import type { Transaction } from 'sequelize';
 import type { BorrowerView, ComputedFacts } from '../../contracts/borrowers.ts';
 import { alertQuery } from '../../contracts/alerts.ts';
-import type { LegalForm } from '../../core/borrowerInputs.ts';
 import { err, ok } from '../../core/result.ts';
 import { deskScope, may } from '../auth/policy.ts';
 import { inTransaction } from '../db/inTransaction.ts';
@@ -32,7 +31,7 @@ export function showBorrower(actor: PersonActor, id: number): Promise<Outcome<Bo
     return ok({
       id: borrower.id,
       name: borrower.name,
-      legalForm: borrower.legalForm as LegalForm,
+      legalForm: borrower.legalForm,
       lei: borrower.lei,
       isListed: borrower.isListed,
       sectorCode: borrower.sectorCode,
