@@ -116,8 +116,8 @@ function headroomFacts(covenant: CovenantView) {
 function Bridge({ rows }: { readonly rows: readonly BridgeRow[] }) {
   return (
     <section>
-      <h3 className="type-heading">From reported to covenant EBITDA</h3>
-      <Table caption="Bridge from reported to covenant EBITDA, whole currency units">
+      <h3 className="type-heading">From reported to covenant figures</h3>
+      <Table caption="Bridge from reported to covenant figures, whole currency units">
         <TableHead>
           <tr role="row">
             <HeadCell>Line</HeadCell>
@@ -126,8 +126,8 @@ function Bridge({ rows }: { readonly rows: readonly BridgeRow[] }) {
           </tr>
         </TableHead>
         <TableBody>
-          {rows.map((row) => (
-            <Row key={`${row.kind} ${row.label}`}>
+          {rows.map((row, at) => (
+            <Row key={`${at} ${row.label}`}>
               <Cell>
                 {row.kind === 'subtotal' ? <span className="type-name">{row.label}</span> : row.label}
                 {row.kind === 'disallowed' && <span className="type-second">, over the cap</span>}
