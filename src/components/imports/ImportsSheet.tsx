@@ -54,14 +54,20 @@ function Imports({ query: firstQuery, first, borrowers, borrowerId }: ImportsShe
   return (
     <div className={borrowers.length > 0 ? 'with-evidence' : undefined}>
       <div className="stack">
-        <Segments
-          label="State"
-          value={query.state ?? ''}
-          segments={STATES}
-          onChange={(state) =>
-            setQuery({ ...query, page: 1, state: state === '' ? undefined : (state as ImportQuery['state']) })
-          }
-        />
+        <div>
+          <Segments
+            label="State"
+            value={query.state ?? ''}
+            segments={STATES}
+            onChange={(state) =>
+              setQuery({
+                ...query,
+                page: 1,
+                state: state === '' ? undefined : (state as ImportQuery['state']),
+              })
+            }
+          />
+        </div>
         {imports.error instanceof Refusal && (
           <ErrorState problem={imports.error.problem} onRetry={() => void imports.refetch()} />
         )}

@@ -45,13 +45,15 @@ function Watchlist({ first, personId, decides }: WatchlistSheetProps) {
       <Panel
         flush
         title="On the watchlist"
-        aside={<span className="type-second">{watchlist.data.entries.length} borrowers</span>}
+        aside={<span className="type-second">{counted(watchlist.data.entries.length, 'borrower')}</span>}
       >
         <Entries entries={watchlist.data.entries} />
       </Panel>
     </div>
   );
 }
+
+const counted = (count: number, what: string): string => `${count} ${what}${count === 1 ? '' : 's'}`;
 
 const meaningOf = (code: string): string =>
   WATCHLIST_GRADES.find((grade) => grade.code === code)?.meaning ?? '';
