@@ -36,7 +36,12 @@ export function settleColumns(
   for (const [table, columns] of settled) {
     if (!hasFlows(table)) continue;
     const proven = columns.map((column) => withLength(column, proofs.get(proofKey(table, column)) ?? null));
-    settled.set(table, askLengths(table, proven, evidence, asking));
+    const isOpen = ({ months, scenario }: SettledColumn) => months === null && scenario === 'actual';
+    const [toDate, others] = [true, false].map((wanted) =>
+      proven.filter((column) => isOpen(column) && column.period.yearToDate === wanted),
+    );
+    const answered = askLengths(table, proven, others ?? [], evidence, asking);
+    settled.set(table, askLengths(table, answered, toDate ?? [], evidence, asking));
   }
   return settled;
 }
@@ -183,10 +188,10 @@ interface Pattern {
 function askLengths(
   table: StatementTable,
   columns: readonly SettledColumn[],
+  open: readonly SettledColumn[],
   { yearEnd }: PeriodEvidence,
   asking: Asking,
 ): readonly SettledColumn[] {
-  const open = columns.filter(({ months, scenario }) => months === null && scenario === 'actual');
   if (open.length === 0) return columns;
   const patterns = patternsOf(open, yearEnd?.month ?? null);
   const headings = open.map(({ heading }) => `'${heading}'`).join(', ');
@@ -203,7 +208,7 @@ function askLengths(
   if (answer === null) return columns;
   const months = patterns.find(({ value }) => value === answer)?.months ?? explicitMonths(answer, open);
   return columns.map((column) => {
-    const at = open.indexOf(column);
+    const at = open.findIndex(({ key }) => key === column.key);
     return at < 0 ? column : { ...column, months: months?.[at] ?? null };
   });
 }

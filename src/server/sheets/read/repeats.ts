@@ -11,9 +11,11 @@ export function withoutRepeatedColumns(settled: SettledColumns, asking: Asking):
   return new Map([...settled].map(([table, columns]) => [table, keptColumns(table, columns, asking)]));
 }
 
+/** Of two lengths that are not known yet, only columns headed alike are the same period. */
 const samePeriod = (one: SettledColumn, other: SettledColumn): boolean =>
   one.end === other.end &&
   one.months === other.months &&
+  (one.months !== null || one.heading === other.heading) &&
   one.scenario === other.scenario &&
   one.name === other.name;
 

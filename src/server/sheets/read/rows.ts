@@ -87,7 +87,7 @@ function lineOfRow(
 ): Found {
   const asked = PARTS.filter((candidate) => part === null || candidate === part);
   for (const candidate of asked) {
-    const at = section ?? sectionBelow(table, index, candidate);
+    const at = sectionAt(table, index, candidate, section);
     const line = lineOf(row.label, candidate, at);
     if (line) return { line, part: candidate, section: at };
   }
@@ -100,7 +100,7 @@ function lineOfRow(
   });
   const [only] = others;
   if (others.length === 1 && only && fitsBelow(table, index, only.part, part)) return only;
-  return { line: null, part, section: section ?? sectionBelow(table, index, part) };
+  return { line: null, part, section: sectionAt(table, index, part, section) };
 }
 
 /** One stray wording of another part is no new statement: the next known row must be of that part too. */
@@ -114,6 +114,28 @@ function fitsBelow(table: Table, index: number, part: Part, current: Part): bool
   return index + 1 >= table.rows.length;
 }
 
+/** A heading such as 'Equity and liabilities' covers several sections: the next total says which one a row is in. */
+function sectionAt(table: Table, index: number, part: Part, section: Section | null): Section | null {
+  if (section && section !== 'assets' && section !== 'liabilities') return section;
+  return sectionBelow(table, index, part) ?? section;
+}
+
+/** What is left of a side once one of its two sections has had its total. */
+const REST_OF_SIDE: readonly (readonly [total: Line, section: Line, rest: Section])[] = [
+  ['total_assets', 'current_assets', 'non-current-assets'],
+  ['total_assets', 'total_non_current_assets', 'current-assets'],
+  ['total_liabilities', 'current_liabilities', 'non-current-liabilities'],
+  ['total_liabilities', 'total_non_current_liabilities', 'current-liabilities'],
+];
+
+function restOfSide(table: Table, index: number, part: Part, total: Line): Section | null {
+  const above = table.rows.slice(0, index).map(({ label }) => lineOf(label, part, null));
+  const last = above.findLast(
+    (line) => line !== null && REST_OF_SIDE.some(([, section]) => section === line),
+  );
+  return REST_OF_SIDE.find(([side, section]) => side === total && section === last)?.[2] ?? null;
+}
+
 /** Without a heading above, the next total below says which section a row is in. */
 function sectionBelow(table: Table, index: number, part: Part): Section | null {
   if (part === 'income') return null;
@@ -125,7 +147,8 @@ function sectionBelow(table: Table, index: number, part: Part): Section | null {
     const line = lineOf(row.label, part, null);
     const section = line && SECTION_OF_TOTAL[line];
     if (section && section !== 'liabilities') return section;
-    if (line === 'total_assets' || line === 'total_equity_and_liabilities') return null;
+    if (line === 'total_assets' || line === 'total_liabilities') return restOfSide(table, index, part, line);
+    if (line === 'total_equity_and_liabilities') return null;
   }
   return null;
 }

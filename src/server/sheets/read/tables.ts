@@ -5,6 +5,7 @@
 import type { SheetCell, SheetGrid } from './cells.ts';
 import { columnLetters } from './cells.ts';
 import { readHeadingText, saysPeriod } from './headingText.ts';
+import { lineOf, PARTS } from './labels.ts';
 
 export interface TableColumn {
   /** 'E', or the row number where periods run down the rows. */
@@ -156,7 +157,7 @@ function headingGroups(sheet: SheetGrid, segment: Segment, rowNumbers: readonly 
   for (const number of rowNumbers) {
     const cells = valuesOf(sheet, segment, number);
     if (cells.length === 0) continue;
-    if (isHeadingRow(cells, bodySeen)) {
+    if (isHeadingRow(cells, bodySeen) && !isLineWithYears(sheet, segment, number, cells)) {
       open.push(number);
       if (open.length > MAX_HEADING_ROWS) open.shift();
       continue;
@@ -181,10 +182,21 @@ function isHeadingRow(cells: readonly SheetCell[], bodySeen: boolean): boolean {
   return cells.some((cell) => cell.kind === 'date' || saysPeriod(readHeadingText(cell.text)));
 }
 
+/** 'Current portion of debt 2000 2001' is a row of amounts, whatever its amounts look like. */
+function isLineWithYears(
+  sheet: SheetGrid,
+  segment: Segment,
+  row: number,
+  cells: readonly SheetCell[],
+): boolean {
+  const labels = segment.labels.flatMap((column) => sheet.rows.get(row)?.get(column)?.text ?? []);
+  return cells.some(isAmount) && PARTS.some((part) => lineOf(labels.join(' '), part, null) !== null);
+}
+
 /** 2025 and 2024 head columns; 2,011 and 1,998 beside a label may be amounts, and then do not fall evenly. */
 function areYears(years: readonly SheetCell[], bodySeen: boolean): boolean {
   const numbers = years.map(({ amount }) => amount?.toNumber() ?? 0);
-  const even = numbers.every((year, at) => at === 0 || Math.abs(year - (numbers[at - 1] ?? 0)) <= 1);
+  const even = numbers.every((year, at) => at === 0 || Math.abs(year - (numbers[at - 1] ?? 0)) === 1);
   const plain = years.every(({ text }) => /^\d{4}$/.test(text));
   return even && plain && (!bodySeen || years.length > 1);
 }

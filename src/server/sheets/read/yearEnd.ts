@@ -1,8 +1,9 @@
 /** When the borrower's financial year ends and how dates are written: from the file, from an answer, else asked. */
+import { addMonthsToMonthEnd, type PlainDate } from '#core/calendar/plainDate.ts';
 import { endsOfHeadings, type StatementTable } from './statements.ts';
 import type { Asking } from './asking.ts';
 import { cellName, type SheetCell, type WorkbookGrid } from './cells.ts';
-import { readPeriodText } from './periodText.ts';
+import { readPeriodText, type PeriodText } from './periodText.ts';
 import type { PeriodEvidence, YearEnd } from './periods.ts';
 
 const MONTHS = [
@@ -55,8 +56,9 @@ function yearEndOf(
   if (onBalance !== null && needsFiscal) return { month: onBalance, namedForStart: false };
   if (knownMonth === 12) return { month: 12, namedForStart: false };
   if (!needsFiscal && knownMonth === null) return null;
+  const unclear = labels.filter(({ period }) => period.year !== null && period.end === null);
   return askedYearEnd(
-    labels.filter(({ period }) => period.year !== null),
+    [...unclear.filter(({ period }) => period.fiscal || isWholeYear(period)), ...unclear],
     tables,
     knownMonth,
     asking,
@@ -90,16 +92,32 @@ function* textCells(grid: WorkbookGrid): Generator<SheetCell> {
       for (const cell of row.values()) if (cell.kind === 'text') yield cell;
 }
 
-/** Balance dates that are all of one month, beside income columns that are all of whole years. */
+/**
+ * Balance dates beside columns of whole years: those that no quarter or other named day explains are year ends, if
+ * they are all of one month and their years are those of the labels.
+ */
 function monthOfBalances(tables: readonly StatementTable[]): number | null {
-  const months = new Set(endsOfHeadings(tables).map((end) => Number(end.slice(5, 7))));
   const flows = tables.filter(({ runs }) => runs.some(({ part }) => part === 'income'));
-  const annual = flows.every(({ columns }) =>
-    columns.every(({ role, period }) => role !== 'period' || (period.year !== null && isWholeYear(period))),
+  const columns = flows.flatMap((table) => table.columns.filter(({ role }) => role === 'period'));
+  const explained = new Set(columns.flatMap(({ period }) => calendarEnd(period) ?? []));
+  const ends = endsOfHeadings(tables).filter((end) => !explained.has(end));
+  const years = new Set(
+    columns.flatMap(({ period }) => (period.end === null && isWholeYear(period) ? (period.year ?? []) : [])),
   );
-  const [only] = months;
-  return months.size === 1 && annual && flows.length > 0 ? (only ?? null) : null;
+  const fits = ends.every((end) => years.has(Number(end.slice(0, 4))));
+  const [only, ...more] = new Set(ends.map((end) => Number(end.slice(5, 7))));
+  return more.length === 0 && fits ? (only ?? null) : null;
 }
+
+const calendarEnd = (period: PeriodText): PlainDate | null => {
+  if (period.end) return period.end;
+  if (period.year === null || period.fiscal) return null;
+  const months =
+    period.quarter !== null ? period.quarter * 3 : period.half !== null ? period.half * 6 : period.months;
+  return months === null || months >= 12
+    ? null
+    : addMonthsToMonthEnd(`${period.year}-01-31` as PlainDate, months - 1);
+};
 
 function askedYearEnd(
   labels: readonly { heading: string; key: string; period: { fiscal: boolean; year: number | null } }[],
