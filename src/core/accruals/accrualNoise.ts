@@ -34,7 +34,7 @@ export interface AccrualNoise {
  * The standard deviation of what cash does not explain. Errors: those of leastSquares, and `too-few-points` below
  * twelve quarters with a quarter before and after.
  *
- * @example accrualNoise(series) // => 16 usable quarters of 18
+ * @example accrualNoise({ cashFlow: [1, 2], workingCapitalChange: [1, 2] }) // => { ok: false, error: { kind: 'too-few-points', needed: 12, given: 0 } }
  */
 export function accrualNoise(series: NoiseSeries): Result<AccrualNoise, StatisticsError> {
   const { cashFlow, workingCapitalChange, controls } = series;

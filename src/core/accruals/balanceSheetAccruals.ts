@@ -22,7 +22,7 @@ export interface ScaledAccruals {
  * Sloan (1996), The Accounting Review 71, equation 1. Acquisitions and currency disturb it; the cash flow statement
  * does not (see cashFlowAccruals).
  *
- * @example balanceSheetAccruals(prior, closing, 6) // => { accruals: 4, scaled: 0.0388… }
+ * @example balanceSheetAccruals(openingSheet, closingSheet, 6) // => { accruals: 4, scaled: 0.0388… }
  */
 export function balanceSheetAccruals(
   prior: OperatingBalances,

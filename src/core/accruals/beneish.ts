@@ -42,7 +42,7 @@ export interface MScore {
  *
  * Gross margin and depreciation are prior over current, the others current over prior.
  *
- * @example beneishIndices(current, prior).sgi // => 1.54 : sales grew 54 %
+ * @example beneishIndices({ ...firmYear, sales: 177 }, firmYear).sgi // => 1.5
  */
 export function beneishIndices(current: BeneishYear, prior: BeneishYear): BeneishIndices {
   const over = (read: (year: BeneishYear) => number): number | null => index(read(current), read(prior));
@@ -74,7 +74,11 @@ export function mScore(indices: BeneishIndices): MScore {
   return { m8, m5: weighted(M5, values), probability: m8 === null ? null : mProbability(m8), filled };
 }
 
-/** The model is a probit: -1.78 stands for 3.8 %. Read it as a rank, not as a chance. */
+/**
+ * The model is a probit: -1.78 stands for 3.8 %. Read it as a rank, not as a chance.
+ *
+ * @example mProbability(-1.78) // => 0.0375…
+ */
 export const mProbability = (score: number): number => normalCdf(score);
 
 const index = (value: number, base: number): number | null =>

@@ -27,7 +27,7 @@ const THINNEST_MARGIN = 0.01;
  * Own measure (methods.md B1 item 10). Null where EBITDA is not above 1 % of revenue or revenue a year before was
  * not positive: the ratio has no meaning there.
  *
- * @example cashConversion(year)?.growthNeutral // => 0.565… : 57 % of EBITDA
+ * @example cashConversion({ ebitda: 14, cashFromOperations: 1.7, interestPaid: 2.6, taxPaid: 1.6, openingWorkingCapital: 17, revenue: 132, priorRevenue: 118 })?.growthNeutral // => 0.565…
  */
 export function cashConversion(year: CashConversionInputs): CashConversion | null {
   if (year.ebitda <= THINNEST_MARGIN * year.revenue || year.ebitda <= 0 || year.priorRevenue <= 0)

@@ -46,7 +46,7 @@ export const ALTMAN_FORMS = {
 /**
  * Z in one of its forms, with its zone. Flows over twelve months, never one quarter.
  *
- * @example altmanZ('listed', ratios).z // => 2.519
+ * @example altmanZ('listed', { workingCapitalOverAssets: 0.2, retainedEarningsOverAssets: 0.3, ebitOverAssets: 0.23, equityOverLiabilities: 0.5, salesOverAssets: 0.8 }) // => { z: 2.519, zone: 'grey' }
  */
 export function altmanZ(
   form: keyof typeof ALTMAN_FORMS,
@@ -85,7 +85,7 @@ export interface OhlsonInputs {
 /**
  * Ohlson (1980, Journal of Accounting Research 18), model 1. Assets in thousands instead of units move it by 2.8.
  *
- * @example ohlsonO(inputs).probability // => 0.0516
+ * @example ohlsonO({ realAssets: 125000, totalAssets: 100, totalLiabilities: 62, currentAssets: 42, currentLiabilities: 28, netIncome: 4, netIncomePrior: 3.2, fundsFromOperations: 8.5, hasTwoLosses: false }).probability // => 0.0515…
  */
 export function ohlsonO(inputs: OhlsonInputs): DistressScore {
   const { totalAssets: assets, totalLiabilities, netIncome, netIncomePrior } = inputs;

@@ -44,13 +44,22 @@ export const fScore = (inputs: FScoreInputs): FScore =>
       1.029 * (inputs.hasIssued ? 1 : 0),
   );
 
+/**
+ * The F-score at a predicted value.
+ *
+ * @example fScoreAt(-4).band // => 'high'
+ */
 export function fScoreAt(predicted: number): FScore {
   const probability = 1 / (1 + Math.exp(-predicted));
   const f = probability / UNCONDITIONAL;
   return { predicted, probability, f, band: bandOf(f) };
 }
 
-/** The predicted value at which the probability is the given one. */
+/**
+ * The predicted value at which the probability is the given one.
+ *
+ * @example predictedAt(0.5) // => 0
+ */
 export const predictedAt = (probability: number): number => Math.log(probability / (1 - probability));
 
 /** Lines from memory. */

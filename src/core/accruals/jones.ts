@@ -41,7 +41,7 @@ type JonesFit = Pick<LeastSquares, 'coefficients' | 'residuals' | 'rSquared' | '
  *
  * Errors: those of leastSquares; a firm whose lagged assets are not positive has to be left out by the caller.
  *
- * @example jonesModel('jones-1991', firms) // => three coefficients and a residual per firm
+ * @example jonesModel('jones-1991', []).ok // => false
  */
 export function jonesModel(
   model: JonesModel,

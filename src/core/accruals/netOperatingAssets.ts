@@ -27,7 +27,7 @@ export interface TotalAccruals {
  * Richardson, Sloan, Soliman & Tuna (2005), Journal of Accounting and Economics 39; definitions from memory, matching
  * a public notebook.
  *
- * @example totalAccruals(prior, closing).netOperatingAssetsChange // => 13.3
+ * @example totalAccruals(openingSheet, closingSheet).netOperatingAssetsChange // => 13.3
  */
 export function totalAccruals(prior: OperatingBalanceSheet, closing: OperatingBalanceSheet): TotalAccruals {
   const change = (read: (sheet: OperatingBalanceSheet) => number): number => read(closing) - read(prior);

@@ -32,7 +32,7 @@ export interface RealActivities {
 /**
  * The three models on one cross-section; residuals are shares of last year's assets. Errors: those of leastSquares.
  *
- * @example realActivities(firms) // => three fits with a residual per firm
+ * @example realActivities([]).ok // => false
  */
 export function realActivities(
   firms: readonly RealActivitiesFirm[],

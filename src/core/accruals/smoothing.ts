@@ -18,7 +18,7 @@ export interface Smoothing {
  * Four descriptions of how smooth income is beside cash. In the paper they are medians of countries; for one firm they
  * describe and are never scored. Errors: `too-few-points` below four periods, `no-spread` where cash never moves.
  *
- * @example smoothing(operatingIncome, cashFromOperations) // => a spread ratio of 0.41
+ * @example smoothing([5, 5, 5, 5], [2, 6, 4, 8]) // => { ok: true, value: { spreadRatio: 0, changeCorrelation: -1, … } }
  */
 export function smoothing(
   operatingIncome: readonly number[],

@@ -30,7 +30,7 @@ export interface AccrualTerms {
  * The model's terms but for property, plant and equipment, which is gross or net for a whole group of firms.
  * Null where assets a year before are not positive.
  *
- * @example accrualTerms(inputs)?.accruals // => 0.022 : 2.2 % of last year's assets
+ * @example accrualTerms({ assetsPrior: 100, netIncome: 4, impairmentAfterTax: 0, cfo: 7, capex: 5, capitalisedCosts: 0, revenue: 132, revenuePrior: 120 })?.accruals // => 0.02
  */
 export function accrualTerms(inputs: AccrualInputs): AccrualTerms | null {
   const { assetsPrior: scale } = inputs;

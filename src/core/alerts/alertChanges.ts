@@ -39,7 +39,11 @@ export interface AlertView {
 const rank = (severity: Severity): number => SEVERITIES.indexOf(severity);
 const isHigher = (one: Severity, other: Severity): boolean => rank(one) < rank(other);
 
-/** One open alert per borrower, covenant (if any) and kind. */
+/**
+ * One open alert per borrower, covenant (if any) and kind.
+ *
+ * @example alertSlot(7, { kind: 'thin headroom', covenantId: 3 }) // => '7:3:thin headroom'
+ */
 export const alertSlot = (borrowerId: number, alert: Pick<AlertFinding, 'kind' | 'covenantId'>): string =>
   `${borrowerId}:${alert.covenantId ?? '-'}:${alert.kind}`;
 

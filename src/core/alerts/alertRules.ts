@@ -26,7 +26,7 @@ const ALERT_RULES: readonly AlertRule[] = [
 /**
  * What every rule finds. The rules and their severities are the desk's policy; none speaks of intent or of chance.
  *
- * @example findingsOf({ inputs, tests, quality, patterns, policy, asOf }).map(({ kind }) => kind)
+ * @example findingsOf(nightOf({ ebitda: 12, debt: 45, cash: 6 })).map(({ kind }) => kind) // => ['thin headroom']
  */
 export const findingsOf = (context: AlertContext): readonly AlertFinding[] =>
   ALERT_RULES.flatMap((rule) => rule(context));

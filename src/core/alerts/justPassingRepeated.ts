@@ -11,6 +11,8 @@ import { testEvidence } from './testEvidence.ts';
 /**
  * So many of the last tests ended just passing: an observation, k of n, nothing about chance. A note; soon where
  * the latest test is met only with add-backs, or the reporting quality is below the policy's line.
+ *
+ * @example justPassingRepeated({ ...nightOf({ ebitda: 12, debt: 47.5, cash: 6 }), patterns: [{ covenantId: 1, inBand: 3, ofLast: 6, run: 1, testDates: ['2026-09-30'] }] }).map(({ severity }) => severity) // => ['note']
  */
 export const justPassingRepeated: AlertRule = (context) =>
   liveTests(context).flatMap(({ covenant, test }) => {

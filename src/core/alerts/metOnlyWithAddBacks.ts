@@ -7,7 +7,11 @@ import { amountThatLeaves, subjectAmount } from './neededAmount.ts';
 import { liveTests, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
-/** The latest live test is met, and would not have been met without the add-backs: soon. */
+/**
+ * The latest live test is met, and would not have been met without the add-backs: soon.
+ *
+ * @example metOnlyWithAddBacks(nightOf({ ebitda: 11, debt: 45, cash: 6 }, { addBacks: [buildAddBack('2026-09-30', 2)] })).map(({ severity }) => severity) // => ['soon']
+ */
 export const metOnlyWithAddBacks: AlertRule = (context) =>
   liveTests(context).flatMap(({ covenant, test }) => {
     const without = test.counterfactuals.find(

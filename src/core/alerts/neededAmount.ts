@@ -5,13 +5,19 @@ import { MEASURES } from '../measures/index.ts';
 import { decimal, type Decimal } from '../money/decimal.ts';
 import { formatMoney } from '../money/print.ts';
 
-/** The borrower's earnings in the test, or the tested amount where it has none. */
+/**
+ * The borrower's earnings in the test, or the tested amount where it has none.
+ *
+ * @example subjectAmount(test) // => 13000000
+ */
 export const subjectAmount = ({ measure, numerator, denominator }: CovenantTest): Decimal | null =>
   MEASURES[measure].earningsSide === 'denominator' ? denominator : numerator;
 
 /**
  * The earnings (or tested amount) at which a share of them is left before the test is not met; nought is at the
  * level itself. Null where the sides are not known.
+ *
+ * @example amountThatLeaves(test, decimal('3.9'), decimal('0.5')) // => 20000000
  */
 export function amountThatLeaves(test: CovenantTest, level: Decimal, share: Decimal): Decimal | null {
   if (!test.numerator) return null;
@@ -20,7 +26,11 @@ export function amountThatLeaves(test: CovenantTest, level: Decimal, share: Deci
   return atLevel && atLevel.div(decimal(1).minus(share));
 }
 
-/** 'EBITDA of 12.9m instead of 12.0m (0.9m more)'. */
+/**
+ * 'EBITDA of 12.9m instead of 12.0m (0.9m more)'.
+ *
+ * @example insteadOf(test, decimal(14e6)) // => 'EBITDA of 14.0m instead of 13.0m (1.0m more)'
+ */
 export function insteadOf(test: CovenantTest, needed: Decimal): string {
   const { subject } = MEASURES[test.measure].words;
   const amount = subjectAmount(test);
@@ -29,7 +39,11 @@ export function insteadOf(test: CovenantTest, needed: Decimal): string {
   return `${subject} of ${formatMoney(needed, { beside: amount })} instead of ${formatMoney(amount, { beside: needed })} (${formatMoney(by.abs())} ${by.lt(0) ? 'less' : 'more'})`;
 }
 
-/** ', or 3.0m less net debt', where the other side can be named and would have to shrink. */
+/**
+ * ', or 3.0m less net debt', where the other side can be named and would have to shrink.
+ *
+ * @example orOtherSide(nightOf({ ebitda: 12, debt: 51, cash: 6 }).tests[0]) // => ', or 3 less net debt'
+ */
 export function orOtherSide({ measure, headroom }: CovenantTest): string {
   const { otherSide } = MEASURES[measure].words;
   const { otherSideMayRise: rise } = headroom;

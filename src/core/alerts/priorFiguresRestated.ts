@@ -5,7 +5,11 @@ import type { Policy } from '../policy.ts';
 import { restatementsOf, type EarningsMove, type OutcomeMove, type Restatement } from './restatements.ts';
 import type { AlertContext, AlertRule } from './rule.ts';
 
-/** A later version moved EBITDA of twelve months by more than the policy's share, or any past outcome: soon. */
+/**
+ * A later version moved EBITDA of twelve months by more than the policy's share, or any past outcome: soon.
+ *
+ * @example priorFiguresRestated(nightOf({ ebitda: 12, debt: 45, cash: 6 })) // => []
+ */
 export const priorFiguresRestated: AlertRule = (context) =>
   restatementsOf(context).flatMap((restatement) => {
     const { restatedBy } = context.policy;

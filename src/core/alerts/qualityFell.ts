@@ -17,6 +17,8 @@ interface Before {
  *
  * The quarter end before is the one that the last assessment spoke of, where it is an earlier one; else it is read
  * from the history, so that a night repeated finds the same.
+ *
+ * @example qualityFell(nightOf({ ebitda: 12, debt: 45, cash: 6 })) // => []
  */
 export const qualityFell: AlertRule = (context) => {
   const { quality, policy } = context;

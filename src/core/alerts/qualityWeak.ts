@@ -4,7 +4,11 @@ import { formatScore } from '../money/print.ts';
 import type { AlertFinding } from './alert.ts';
 import type { AlertRule } from './rule.ts';
 
-/** The headline is under the policy's line: soon. One quarter end under it: a note. Ask on one, act on the headline. */
+/**
+ * The headline is under the policy's line: soon. One quarter end under it: a note. Ask on one, act on the headline.
+ *
+ * @example qualityWeak({ ...nightOf({ ebitda: 12, debt: 45, cash: 6 }), quality: buildQuality({ headline: 28, latest: buildQuarterScore('2026-09-30', 31) }) })[0].sentence // => 'Reporting quality 28, below 30.'
+ */
 export const qualityWeak: AlertRule = ({ quality, policy }) => {
   const { headline, latest } = quality;
   const line = policy.qualityWeakBelow;

@@ -36,6 +36,8 @@ export interface Restatement {
 /**
  * Every day of the last two quarters on which a version came for a period that had figures already, with what it
  * moved: EBITDA of twelve months, and the outcome of past tests. Earlier and later versions are both kept.
+ *
+ * @example restatementsOf(nightOf({ ebitda: 12, debt: 45, cash: 6 })) // => []
  */
 export const restatementsOf = (context: AlertContext): readonly Restatement[] =>
   restatementDays(context).map((day) => ({

@@ -22,7 +22,11 @@ export interface AlertContext {
 /** One kind of alert: what of it is found, or nothing. */
 export type AlertRule = (context: AlertContext) => readonly AlertFinding[];
 
-/** Each covenant with its latest live test, where it has one. */
+/**
+ * Each covenant with its latest live test, where it has one.
+ *
+ * @example liveTests(nightOf({ ebitda: 12, debt: 45, cash: 6 })).map(({ test }) => test.outcome) // => ['met, thin']
+ */
 export const liveTests = ({
   inputs,
   tests,

@@ -9,6 +9,8 @@ import type { AlertContext, AlertRule } from './rule.ts';
 /**
  * Accounts that an undertaking promises and that have not come: a note from the first day after the due date, soon
  * past grace. Certificates are not kept yet, so nothing is said of them. Source: methods.md A7.
+ *
+ * @example statementLate({ ...nightOf({ ebitda: 12, debt: 45, cash: 6 }), inputs: buildInputs({ undertakings: [{ id: 1, kind: 'quarterly accounts', everyMonths: 3, dueDays: 45, dayCount: 'calendar', graceDays: 10, firstPeriodEnd: '2026-09-30' }] }) }).map(({ severity }) => severity) // => ['soon']
  */
 export const statementLate: AlertRule = (context) =>
   context.inputs.undertakings.flatMap((undertaking) => {

@@ -10,6 +10,8 @@ import { testEvidence } from './testEvidence.ts';
 /**
  * Today's result is met and would not be met at a level that is agreed for the coming days: soon within the
  * policy's shorter distance, a note within the longer one. The nearest such level speaks.
+ *
+ * @example stepDownAhead(nightOf({ ebitda: 12, debt: 45, cash: 6 }, { levels: covenant.levels })).map(({ severity }) => severity) // => ['soon']
  */
 export const stepDownAhead: AlertRule = (context) =>
   liveTests(context).flatMap(({ covenant, test }) => {

@@ -5,7 +5,11 @@ import { levelInWords, OPERATOR_WORDS, testedInWords } from '../covenants/wordin
 import { formatMoney, formatShare } from '../money/print.ts';
 import type { AlertFinding } from './alert.ts';
 
-/** The facts behind every alert on a test: what was tested, against what, with what room. */
+/**
+ * The facts behind every alert on a test: what was tested, against what, with what room.
+ *
+ * @example testEvidence(covenant, test).map(({ label }) => label).slice(0, 3) // => ['Covenant', 'Test date', 'Result']
+ */
 export function testEvidence(covenant: Covenant, test: CovenantTest): AlertFinding['evidence'] {
   const { measure, tested, level, headroom } = test;
   const { mayFall, moneyLeft, shareOfLevel } = headroom;

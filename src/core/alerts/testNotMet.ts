@@ -7,7 +7,11 @@ import { amountThatLeaves, insteadOf, orOtherSide } from './neededAmount.ts';
 import { liveTests, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
-/** The latest live test is not met, in any form: urgent. A waiver is said, and does not make it met. */
+/**
+ * The latest live test is not met, in any form: urgent. A waiver is said, and does not make it met.
+ *
+ * @example testNotMet(nightOf({ ebitda: 12, debt: 51, cash: 6 })).map(({ severity }) => severity) // => ['urgent']
+ */
 export const testNotMet: AlertRule = (context) =>
   liveTests(context)
     .filter(({ test }) => isNotMet(test.outcome))

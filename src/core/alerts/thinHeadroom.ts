@@ -7,7 +7,11 @@ import { amountThatLeaves, insteadOf } from './neededAmount.ts';
 import { liveTests, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
-/** The latest live test is met and earnings (or the tested amount) may fall less than the policy's share: soon. */
+/**
+ * The latest live test is met and earnings (or the tested amount) may fall less than the policy's share: soon.
+ *
+ * @example thinHeadroom(nightOf({ ebitda: 12, debt: 45, cash: 6 })).map(({ severity }) => severity) // => ['soon']
+ */
 export const thinHeadroom: AlertRule = (context) =>
   liveTests(context)
     .filter(({ test }) => test.outcome === 'met, thin')

@@ -37,7 +37,11 @@ function nearestMonthEnd(date: PlainDate): PlainDate {
   return day <= DAYS_NEAR_MONTH_END ? addDays(date, -day) : date;
 }
 
-/** Whether two period ends stand for the same month end. */
+/**
+ * Whether two period ends stand for the same month end.
+ *
+ * @example isSamePeriodEnd('2025-01-03', '2024-12-31') // => true
+ */
 export const isSamePeriodEnd = (one: PlainDate, other: PlainDate): boolean =>
   one === other ||
   (Math.abs(monthCount(one) - monthCount(other)) <= 1 && reportingMonthEnd(one) === reportingMonthEnd(other));
@@ -63,12 +67,20 @@ export function fiscalPosition(periodEnd: PlainDate, fiscalYearEndMonth: number)
   };
 }
 
-/** The last day of the financial year before the one that `periodEnd` lies in. */
+/**
+ * The last day of the financial year before the one that `periodEnd` lies in.
+ *
+ * @example lastYearEndBefore('2026-09-30', 3) // => '2026-03-31'
+ */
 export function lastYearEndBefore(periodEnd: PlainDate, fiscalYearEndMonth: number): PlainDate {
   const { monthsIntoYear } = fiscalPosition(periodEnd, fiscalYearEndMonth);
   return addMonthsToMonthEnd(reportingMonthEnd(periodEnd), -monthsIntoYear);
 }
 
-/** The period end so many months earlier, as a month end. */
+/**
+ * The period end so many months earlier, as a month end.
+ *
+ * @example monthsBefore('2026-05-31', 3) // => '2026-02-28'
+ */
 export const monthsBefore = (periodEnd: PlainDate, months: number): PlainDate =>
   addMonthsToMonthEnd(reportingMonthEnd(periodEnd), -months);

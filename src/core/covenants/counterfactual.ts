@@ -11,15 +11,27 @@ function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Side
   return sides;
 }
 
-/** A haircut for accruals that the peers do not show: never less than nought, a negative residual is not added back. */
+/**
+ * A haircut for accruals that the peers do not show: never less than nought, a negative residual is not added back.
+ *
+ * @example accrualHaircut(decimal(-2)) // => 0
+ */
 export const accrualHaircut = (unexplainedAccruals: Decimal): Decimal =>
   unexplainedAccruals.gt(0) ? unexplainedAccruals : ZERO;
 
-/** The test recomputed with earnings taken out. Interest and tax are left as they are. Source: methods.md B7. */
+/**
+ * The test recomputed with earnings taken out. Interest and tax are left as they are. Source: methods.md B7.
+ *
+ * @example heldWithoutEarnings(netLeverage, { numerator: decimal(42), denominator: decimal(13) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }, decimal(2)).outcome // => 'not met'
+ */
 export const heldWithoutEarnings = (measure: Shaped, sides: Sides, terms: Terms, takenOut: Decimal): Held =>
   holdAgainstLevel(measure, withoutEarnings(measure, sides, takenOut), terms);
 
-/** Whether a test that is met rests on what was taken out: it would not have been met without. */
+/**
+ * Whether a test that is met rests on what was taken out: it would not have been met without.
+ *
+ * @example restsOn({ outcome: 'met' }, { outcome: 'not met' }) // => true
+ */
 export const restsOn = (reported: Held, without: Held): boolean =>
   isMet(reported.outcome) && isNotMet(without.outcome);
 
@@ -47,6 +59,8 @@ export function breakEvenShare({
 /**
  * What the test would have come to without any add-backs. Empty where the covenant has none or rests on no
  * earnings. Source: methods.md B7(a).
+ *
+ * @example withoutAddBacks(netLeverage, { numerator: decimal(42), denominator: decimal(13) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }, decimal(2))[0].breakEvenShare // => 0.5
  */
 export function withoutAddBacks(
   measure: Shaped,

@@ -9,6 +9,11 @@ export type { AddBack } from '../measures/definition.ts';
 export const OPERATORS = ['<=', '<', '>=', '>'] as const;
 export type Operator = (typeof OPERATORS)[number];
 
+/**
+ * Whether an operator makes the level the most that is allowed.
+ *
+ * @example isMaximum('<=') // => true
+ */
 export const isMaximum = (operator: Operator): boolean => operator === '<=' || operator === '<';
 
 /** One row of the level schedule. `until` is inclusive; null is without end. A null level is a covenant holiday. */

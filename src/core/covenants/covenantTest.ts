@@ -21,7 +21,18 @@ export const OUTCOMES = [
 ] as const;
 export type Outcome = (typeof OUTCOMES)[number];
 
+/**
+ * Met, in whichever form. Only met is met.
+ *
+ * @example isMet('met, thin') // => true
+ */
 export const isMet = (outcome: Outcome): boolean => outcome.startsWith('met');
+/**
+ * Not met, in whichever form; a waiver does not make it met.
+ *
+ * @example isNotMet('not met, waived') // => true
+ * @example isNotMet('cannot be tested') // => false
+ */
 export const isNotMet = (outcome: Outcome): boolean => outcome.startsWith('not met');
 
 /** Every form of headroom; null where it has no meaning. Shares are fractions (0.05 is 5 %). */

@@ -44,7 +44,11 @@ export interface CuresUsed {
   readonly available: boolean;
 }
 
-/** How many cures were used in the four quarters up to the test date and over the life, and whether one is left. */
+/**
+ * How many cures were used in the four quarters up to the test date and over the life, and whether one is left.
+ *
+ * @example curesUsed({ curedQuarters: ['2026-03-31'], testDate: '2026-09-30', mostInFour: 2, mostInLife: 5 }) // => { usedInFour: 1, usedInLife: 1, available: true }
+ */
 export function curesUsed({
   curedQuarters,
   testDate,
@@ -61,7 +65,11 @@ export function curesUsed({
   return { usedInFour, usedInLife, available: usedInFour < mostInFour && usedInLife < mostInLife };
 }
 
-/** Reported EBITDA with cure money that counts for its quarter and the next three, for covenant purposes only. */
+/**
+ * Reported EBITDA with cure money that counts for its quarter and the next three, for covenant purposes only.
+ *
+ * @example ebitdaWithCure(decimal(12), '2026-09-30', { quarter: '2026-03-31', amount: decimal(1) }) // => 13
+ */
 export const ebitdaWithCure = (
   reported: Decimal,
   testDate: PlainDate,

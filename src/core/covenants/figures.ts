@@ -18,7 +18,11 @@ export interface Figures extends Pick<Measured, 'addBacksTaken' | 'bridge'> {
   readonly sides: Sides | null;
 }
 
-/** Measures a covenant on a day, out of the versions known of its scope. */
+/**
+ * Measures a covenant on a day, out of the versions known of its scope.
+ *
+ * @example figuresOf(covenant, statements, '2026-09-30', 12).sides // => { numerator: 39000000, denominator: 13000000 }
+ */
 export function figuresOf(
   { measure, definition, addBacks }: Covenant,
   known: readonly Statement[],

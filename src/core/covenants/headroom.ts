@@ -25,6 +25,11 @@ export const NO_HEADROOM: Forms = {
   otherSideShare: null,
 };
 
+/**
+ * What may fall: earnings where the measure has any, else the tested amount itself.
+ *
+ * @example fallOf({ earningsSide: null }) // => 'tested amount'
+ */
 export const fallOf = ({ earningsSide }: Pick<Measure, 'earningsSide'>): Headroom['fallOf'] =>
   earningsSide === null ? 'tested amount' : 'earnings';
 
@@ -34,6 +39,8 @@ export const fallOf = ({ earningsSide }: Pick<Measure, 'earningsSide'>): Headroo
  *
  * With no burden left (net cash) what carries may fall to nought. What carries must be positive.
  * Source: methods.md A5.
+ *
+ * @example burdenHeadroom(decimal(42), decimal(15), decimal('3.5')).mayFall // => 0.2
  */
 export function burdenHeadroom(burden: Decimal, carrier: Decimal, level: Decimal): Forms {
   const absolute = level.minus(burden.div(carrier));
@@ -57,6 +64,8 @@ export function burdenHeadroom(burden: Decimal, carrier: Decimal, level: Decimal
  *
  * The charge must be positive. Where what covers is not positive it has no share that it may fall by.
  * Source: methods.md A5.
+ *
+ * @example coverHeadroom(decimal(10), decimal(4), decimal(2)) // => { absolute: 0.5, shareOfLevel: 0.25, mayFall: 0.2, moneyLeft: 2, otherSideMayRise: 1, otherSideShare: 0.25 }
  */
 export function coverHeadroom(covers: Decimal, charge: Decimal, level: Decimal): Forms {
   const absolute = covers.div(charge).minus(level);
@@ -75,6 +84,8 @@ export function coverHeadroom(covers: Decimal, charge: Decimal, level: Decimal):
 /**
  * An amount against its minimum or limit: as a share of the level for the just-passing band; a minimum's amount
  * may fall by (A - min) / A, a limit's may rise by (limit - A) / limit. Source: methods.md A5.
+ *
+ * @example amountHeadroom(decimal(10), decimal(8), 'least').mayFall // => 0.2
  */
 export function amountHeadroom(amount: Decimal, level: Decimal, bound: Bound): Forms {
   const absolute = bound === 'least' ? amount.minus(level) : level.minus(amount);

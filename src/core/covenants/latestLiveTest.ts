@@ -1,13 +1,17 @@
 import { isMet, isNotMet, type CovenantTest } from './covenantTest.ts';
 
-/** Whether a test has a result: met or not met, in whichever form. */
+/**
+ * Whether a test has a result: met or not met, in whichever form.
+ *
+ * @example hasResult({ outcome: 'awaiting figures' }) // => false
+ */
 export const hasResult = ({ outcome }: CovenantTest): boolean => isMet(outcome) || isNotMet(outcome);
 
 /**
  * The latest test of one covenant that stands: the newest one whose figures are there. Null where there is none or
  * where it is not tested (a holiday), because then the covenant holds nobody to anything.
  *
- * @example latestLiveTest(assessment.tests, covenant.id)?.outcome
+ * @example latestLiveTest([test], 1)?.outcome // => 'met'
  */
 export function latestLiveTest(tests: readonly CovenantTest[], covenantId: number): CovenantTest | null {
   const latest = tests

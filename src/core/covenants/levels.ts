@@ -14,7 +14,7 @@ export type LevelInForce =
  *
  * Source: methods.md A6.
  *
- * @example levelInForce(covenant.levels, '2025-12-31')
+ * @example levelInForce(covenant.levels, '2025-12-31') // => { kind: 'level', level: 3.5 }
  */
 export function levelInForce(levels: readonly CovenantLevel[], date: PlainDate): LevelInForce {
   const row = levels
@@ -24,7 +24,11 @@ export function levelInForce(levels: readonly CovenantLevel[], date: PlainDate):
   return row.level === null ? { kind: 'holiday' } : { kind: 'level', level: row.level };
 }
 
-/** The rows that begin after a day, in order. */
+/**
+ * The rows that begin after a day, in order.
+ *
+ * @example laterLevels(covenant.levels, '2025-12-31').map(({ from }) => from) // => ['2027-01-01']
+ */
 export const laterLevels = (levels: readonly CovenantLevel[], date: PlainDate): readonly CovenantLevel[] =>
   levels.filter(({ from }) => from > date).sort((a, b) => (a.from < b.from ? -1 : a.from > b.from ? 1 : 0));
 

@@ -19,7 +19,7 @@ export interface SmallestHeadroomAhead extends SmallestHeadroom {
  *
  * Source: methods.md A5.
  *
- * @example smallestHeadroom(assessment.tests, covenantIds)?.mayFall
+ * @example smallestHeadroom([test], [1])?.mayFall // => 0.1428571428571…
  */
 export const smallestHeadroom = (
   tests: readonly CovenantTest[],
@@ -32,7 +32,11 @@ export const smallestHeadroom = (
     }),
   );
 
-/** The least against every level agreed for later, kept apart from today's. */
+/**
+ * The least against every level agreed for later, kept apart from today's.
+ *
+ * @example smallestHeadroomAhead([test], [1])?.from // => '2027-01-01'
+ */
 export const smallestHeadroomAhead = (
   tests: readonly CovenantTest[],
   covenantIds: readonly number[],

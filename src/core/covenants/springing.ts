@@ -1,6 +1,10 @@
 import type { Decimal } from '../money/decimal.ts';
 
-/** Drawings over commitments; `drawn` holds what the agreement counts, letters of credit it leaves out not among it. */
+/**
+ * Drawings over commitments; `drawn` holds what the agreement counts, letters of credit it leaves out not among it.
+ *
+ * @example utilisation(decimal(7), decimal(20)) // => 0.35
+ */
 export const utilisation = (drawn: Decimal, commitment: Decimal): Decimal => drawn.div(commitment);
 
 /**

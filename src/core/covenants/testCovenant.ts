@@ -20,7 +20,7 @@ import { withoutResult } from './withoutResult.ts';
  * it cannot be tested, a holiday or a day without a level is not tested though the ratio is shown, and a waived
  * test stays not met underneath. Amounts in whole units of the covenant's currency. Source: methods.md A4 to A6.
  *
- * @example testCovenant(covenant, statements, '2026-09-30', 12, policy, '2026-11-30').outcome // => 'met'
+ * @example testCovenant(covenant, statements, '2026-09-30', 12, POLICY_VERSION_1, '2026-11-30').outcome // => 'met'
  */
 export function testCovenant(
   covenant: Covenant,

@@ -1,6 +1,10 @@
 import { addMonths, type PlainDate } from '../calendar/plainDate.ts';
 
-/** Whole months between a valuation and a test date. */
+/**
+ * Whole months between a valuation and a test date.
+ *
+ * @example valuationAgeMonths('2025-06-30', '2026-09-29') // => 14
+ */
 export function valuationAgeMonths(valuationDate: PlainDate, testDate: PlainDate): number {
   let months = 0;
   while (addMonths(valuationDate, months + 1) <= testDate) months += 1;

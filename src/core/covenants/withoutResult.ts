@@ -14,6 +14,8 @@ import type { LevelInForce } from './levels.ts';
 /**
  * What stands in place of a result, with its reason; null where the figures and the level are there. Each of these
  * is its own outcome and none is met. Source: methods.md A4.
+ *
+ * @example withoutResult(covenant, '2026-09-30', { kind: 'holiday' }, figures)?.reason // => 'covenant holiday on 30 Sep 2026'
  */
 export const withoutResult = (
   covenant: Covenant,

@@ -13,20 +13,28 @@ export const OPERATOR_WORDS: Readonly<Record<Operator, string>> = {
   '>': 'more than',
 };
 
-/** A tested ratio or amount in its unit, with the digits that show the side of the level that it is on. */
+/**
+ * A tested ratio or amount in its unit, with the digits that show the side of the level that it is on.
+ *
+ * @example testedInWords('net-leverage', decimal('3.4512'), decimal('3.5')) // => '3.45x'
+ */
 export const testedInWords = (measure: MeasureCode, tested: Decimal, level: Decimal | null): string =>
   MEASURES[measure].unit === 'times'
     ? formatRatio(tested, { beside: level })
     : formatMoney(tested, { beside: level });
 
-/** A level in its measure's unit, with every digit that a ratio's level has. */
+/**
+ * A level in its measure's unit, with every digit that a ratio's level has.
+ *
+ * @example levelInWords('minimum-liquidity', decimal(5_250_000)) // => '5.25m'
+ */
 export const levelInWords = (measure: MeasureCode, level: Decimal): string =>
   MEASURES[measure].unit === 'times' ? formatLevel(level) : formatMoneyLevel(level);
 
 /**
  * A test with its level: 'Net leverage 3.45x, at most 3.50x'.
  *
- * @example testInWords(test) // => 'Interest cover 1.92x, at least 2.00x'
+ * @example testInWords(test) // => 'Net leverage 3.00x, at most 3.50x'
  */
 export function testInWords({
   measure,

@@ -11,7 +11,7 @@ export interface LeverageSides {
  *
  * `debt` is without leases; `leaseAddBack` is the rent that today's EBITDA no longer bears.
  *
- * @example leverageByAccountingBasis({ ebitda, leaseAddBack, debt, leaseLiability }).frozen
+ * @example leverageByAccountingBasis({ ebitda: decimal(12), leaseAddBack: decimal(2), debt: decimal(30), leaseLiability: decimal(9) }).frozen // => { numerator: 30, denominator: 10 }
  */
 export const leverageByAccountingBasis = ({
   ebitda,

@@ -57,6 +57,8 @@ function addBackLimit(base: Decimal, { cap, basis }: AddBackTerms): Decimal | nu
 /**
  * The add-backs whose whole period lies within the twelve months up to a day. One that reaches further back is
  * left out: no rule says which part of it would count.
+ *
+ * @example addBacksWithinTwelveMonths([buildAddBack('2025-09-30', 2)], '2026-09-30') // => []
  */
 export function addBacksWithinTwelveMonths(
   addBacks: readonly AddBack[],
@@ -71,6 +73,8 @@ export function addBacksWithinTwelveMonths(
 /**
  * EBITDA with a full year of what was bought: LTM EBITDA + the target's own twelve months before the acquisition.
  * Source: methods.md A3.
+ *
+ * @example proFormaEbitda(decimal(12), decimal(3)) // => 15
  */
 export const proFormaEbitda = (ebitda: Decimal, targetBeforeAcquisition: Decimal): Decimal =>
   ebitda.plus(targetBeforeAcquisition);

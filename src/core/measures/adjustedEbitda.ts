@@ -18,7 +18,7 @@ export interface Earnings {
  * Adjusted EBITDA of the twelve months up to the day, with the bridge from net income. The cap is tested on the
  * twelve months, not quarter by quarter. Source: methods.md A3.
  *
- * @example adjustedEbitda(request).reading
+ * @example adjustedEbitda({ ...request, addBacks: [buildAddBack('2026-09-30', 2e6)] }).reading.value // => 15000000
  */
 export function adjustedEbitda(request: MeasureRequest): Earnings {
   const { statements, date, fiscalYearEndMonth, definition } = request;

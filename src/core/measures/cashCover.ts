@@ -5,7 +5,7 @@ import type { Decimal } from '../money/decimal.ts';
  * Cash flow available for debt service: EBITDA less cash tax, capital expenditure that is not financed, and the
  * increase in working capital.
  *
- * @example cashForDebtService({ ebitda, cashTax, unfundedCapex, workingCapitalIncrease })
+ * @example cashForDebtService({ ebitda: decimal(12), cashTax: decimal(2), unfundedCapex: decimal(3), workingCapitalIncrease: decimal(1) }) // => 6
  */
 export const cashForDebtService = ({
   ebitda,
@@ -19,7 +19,11 @@ export const cashForDebtService = ({
   readonly workingCapitalIncrease: Decimal;
 }): Decimal => ebitda.minus(cashTax).minus(unfundedCapex).minus(workingCapitalIncrease);
 
-/** Cash interest and scheduled principal; a bullet only where the agreement counts it. */
+/**
+ * Cash interest and scheduled principal; a bullet only where the agreement counts it.
+ *
+ * @example debtService({ cashInterest: decimal(2), scheduledPrincipal: decimal(3), bullet: ZERO }) // => 5
+ */
 export const debtService = ({
   cashInterest,
   scheduledPrincipal,
@@ -31,7 +35,11 @@ export const debtService = ({
   readonly bullet: Decimal;
 }): Decimal => cashInterest.plus(scheduledPrincipal).plus(bullet);
 
-/** EBITDA before rent less capital expenditure that is not financed and cash tax, over interest, principal and rent. */
+/**
+ * EBITDA before rent less capital expenditure that is not financed and cash tax, over interest, principal and rent.
+ *
+ * @example fixedChargeSides({ ebitda: decimal(12), rent: decimal(2), unfundedCapex: decimal(3), cashTax: decimal(1), cashInterest: decimal(2), scheduledPrincipal: decimal(4) }) // => { numerator: 10, denominator: 8 }
+ */
 export const fixedChargeSides = ({
   ebitda,
   rent,

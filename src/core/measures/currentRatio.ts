@@ -34,6 +34,8 @@ export const currentRatio: Measure = {
 /**
  * Current liabilities as the agreement counts them: a loan that a failed test made due on demand turns current and
  * can fail this test too, unless the agreement leaves the facility out. Source: methods.md A6.
+ *
+ * @example currentLiabilitiesCounted({ currentLiabilities: decimal(20), loanTurnedCurrent: decimal(45), leavesFacilityOut: false }) // => 65
  */
 export const currentLiabilitiesCounted = ({
   currentLiabilities,
@@ -46,5 +48,9 @@ export const currentLiabilitiesCounted = ({
   readonly leavesFacilityOut: boolean;
 }): Decimal => (leavesFacilityOut ? currentLiabilities : currentLiabilities.plus(loanTurnedCurrent));
 
-/** Cash and trade receivables, over current liabilities the quick ratio. Source: methods.md A3. */
+/**
+ * Cash and trade receivables, over current liabilities the quick ratio. Source: methods.md A3.
+ *
+ * @example quickAssets(decimal(6), decimal(14)) // => 20
+ */
 export const quickAssets = (cash: Decimal, receivables: Decimal): Decimal => cash.plus(receivables);

@@ -47,6 +47,8 @@ export interface MeasuredDebt {
  * counts them. Shareholder loans count as debt because nothing recorded says that they are subordinated.
  *
  * Whole currency units. Missing where no debt line at all is there, or one that was carried before is left out.
+ *
+ * @example totalDebt(request).reading.value // => 45000000
  */
 export function totalDebt({ statements, date, definition }: MeasureRequest): MeasuredDebt {
   const lines = definition.leasesInDebt ? [...BORROWINGS, LEASES] : BORROWINGS;
@@ -73,7 +75,11 @@ export function totalDebt({ statements, date, definition }: MeasureRequest): Mea
   };
 }
 
-/** Total debt less unrestricted cash, as far as the definition nets it; the balance line `cash` is unrestricted. */
+/**
+ * Total debt less unrestricted cash, as far as the definition nets it; the balance line `cash` is unrestricted.
+ *
+ * @example netDebtOn(request).reading.value // => 39000000
+ */
 export function netDebtOn(request: MeasureRequest): MeasuredDebt {
   const debt = totalDebt(request);
   const cash = balanceAt(request.statements, 'cash', request.date);

@@ -22,7 +22,7 @@ export interface EarningsFromBottom {
  * All in one currency unit. Impairment is not added: agreements that add non-cash charges list them as add-backs.
  * Source: methods.md A3.
  *
- * @example ebitdaFromNetIncome({ netIncome, incomeTax, netFinanceCosts, depreciationAndAmortisation })
+ * @example ebitdaFromNetIncome({ netIncome: decimal('4.2'), incomeTax: decimal('1.6'), netFinanceCosts: decimal('2.5'), depreciationAndAmortisation: decimal('3.7') }) // => 12
  */
 export const ebitdaFromNetIncome = (earnings: EarningsFromBottom): Decimal =>
   earnings.netIncome
@@ -30,7 +30,11 @@ export const ebitdaFromNetIncome = (earnings: EarningsFromBottom): Decimal =>
     .plus(earnings.netFinanceCosts)
     .plus(earnings.depreciationAndAmortisation);
 
-/** EBITDA down from revenue, before anything that stands below gross profit besides operating costs. */
+/**
+ * EBITDA down from revenue, before anything that stands below gross profit besides operating costs.
+ *
+ * @example ebitdaFromRevenue({ revenue: decimal(80), costOfSales: decimal(50), operatingCosts: decimal(18) }) // => 12
+ */
 export const ebitdaFromRevenue = ({
   revenue,
   costOfSales,
@@ -80,7 +84,7 @@ export interface MeasuredEbitda {
  *
  * Whole currency units. Missing names every line and period that is not there.
  *
- * @example ebitdaOfTwelveMonths(statements, '2026-09-30', 12).ebitda
+ * @example ebitdaOfTwelveMonths(statements, '2026-09-30', 12).ebitda.value // => 13000000
  */
 export function ebitdaOfTwelveMonths(
   statements: readonly Statement[],

@@ -15,4 +15,9 @@ export const MEASURES: Readonly<Record<MeasureCode, Measure>> = {
   'minimum-liquidity': minimumLiquidity,
 };
 
+/**
+ * Whether a measure comes in times or in money.
+ *
+ * @example measureUnit('minimum-liquidity') // => 'money'
+ */
 export const measureUnit = (code: MeasureCode): MeasureUnit => MEASURES[code].unit;

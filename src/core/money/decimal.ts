@@ -15,7 +15,11 @@ export const Decimal = DecimalBase.clone({
 });
 export type Decimal = DecimalBase;
 
-/** A decimal from exact text or a whole count. */
+/**
+ * A decimal from exact text or a whole count.
+ *
+ * @example decimal('0.1').plus('0.2') // => 0.3
+ */
 export const decimal = (value: string | number | Decimal): Decimal => new Decimal(value);
 
 export const ZERO: Decimal = new Decimal(0);

@@ -18,7 +18,7 @@ export interface JustPassing {
  * `tests` are oldest first. Only tests with a result count: one that awaits figures or was not tested is no test.
  * `ofLast` is smaller than asked for where there are fewer.
  *
- * @example justPassingOf(tests, covenantId, 6) // => { inBand: 5, ofLast: 6, run: 5, ... }
+ * @example justPassingOf([{ ...test, justPassing: true }], 1, 6) // => { covenantId: 1, inBand: 1, ofLast: 1, run: 1, testDates: ['2026-09-30'] }
  */
 export function justPassingOf(
   tests: readonly CovenantTest[],

@@ -32,6 +32,12 @@ export interface AccountsAt {
   readonly used: () => readonly Statement[];
 }
 
+/**
+ * A borrower's accounts around one quarter end: flows of twelve months and of the quarter, balances, each now or so many
+ * months back. Units as in the statements; undefined where a figure is missing or has no meaning.
+ *
+ * @example accountsAt(statements, '2026-09-30', 12).twelveMonths('revenue') // => 90000000
+ */
 export function accountsAt(
   statements: readonly Statement[],
   quarterEnd: PlainDate,
@@ -72,7 +78,11 @@ export function accountsAt(
   };
 }
 
-/** The result of a calculation whose every operand is there. */
+/**
+ * The result of a calculation whose every operand is there.
+ *
+ * @example ifAll({ one: 1, other: undefined }, ({ one, other }) => one + other) // => undefined
+ */
 export function ifAll<Names extends string>(
   operands: Readonly<Record<Names, number | undefined>>,
   calculate: (operands: Readonly<Record<Names, number>>) => number | undefined,

@@ -46,6 +46,8 @@ interface Row extends AccrualTerms {
  * fitting. Null where no firm has the figures.
  *
  * Source: methods.md B6.
+ *
+ * @example accrualModelFor([]) // => null
  */
 export function accrualModelFor(peers: readonly PeerInputs[]): AccrualModel | null {
   const rows = peers.flatMap((peer) => rowOf(peer) ?? []);
@@ -66,6 +68,8 @@ export function accrualModelFor(peers: readonly PeerInputs[]): AccrualModel | nu
 /**
  * A borrower's accruals that the model does not explain, as a share of last year's assets; its own figures as they
  * are against the drawn-in regressors. Null where a term is missing or nothing could be fitted.
+ *
+ * @example unexplainedAccruals(null, peer) // => null
  */
 export function unexplainedAccruals(model: AccrualModel | null, peer: PeerInputs): number | null {
   const row = rowOf(peer);

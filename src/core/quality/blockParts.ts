@@ -19,9 +19,20 @@ const { weights, gates } = QUALITY_TABLE;
 
 export const NOBODY = 'no peers in the sector and fewer than ten other borrowers to compare with';
 
+/**
+ * A risk that counts no more than the middle where what it rests on is immaterial: a percentile alone must not accuse.
+ *
+ * @example gated(0.9, true) // => 0.5
+ * @example gated(0.9, false) // => 0.9
+ */
 export const gated = (risk: number, isImmaterial: boolean): number =>
   isImmaterial ? Math.min(risk, gates.cap) : risk;
 
+/**
+ * A block with its risk, 0 to 1, and the number of those it was ranked among.
+ *
+ * @example block('cash conversion', 0.4, null) // => { name: 'cash conversion', weight: 10, risk: 0.4, reason: null, figures: {}, peers: 0 }
+ */
 export const block = (name: QualityBlockName, risk: number, place: Standing | null): QualityBlock => ({
   name,
   weight: weights[name],
@@ -31,13 +42,22 @@ export const block = (name: QualityBlockName, risk: number, place: Standing | nu
   peers: place ? (place.medianOf === 'sector' ? place.sectorPeers : place.bookOthers) : 0,
 });
 
+/**
+ * A block that cannot be given, with its reason.
+ *
+ * @example without('cash conversion', 'EBITDA is not above 1 % of revenue').risk // => null
+ */
 export const without = (
   name: QualityBlockName,
   reason: string,
   figures: Readonly<Record<string, number>> = {},
 ): QualityBlock => ({ name, weight: weights[name], risk: null, reason, figures, peers: 0 });
 
-/** Under the figure's name: the middle of the peers and how many they are, the percentile, and whose middle it is. */
+/**
+ * Under the figure's name: the middle of the peers and how many they are, the percentile, and whose middle it is.
+ *
+ * @example placeFigures('conversion', null) // => {}
+ */
 export const placeFigures = (name: string, place: Standing | null): Record<string, number> =>
   place
     ? {

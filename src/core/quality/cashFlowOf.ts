@@ -13,6 +13,8 @@ export interface CashFlowFigures {
  *
  * Without a cash flow statement they are derived from the balance sheets, but not in a year with an acquisition, which
  * the balance sheets cannot tell from accruals. Source: methods.md B2.
+ *
+ * @example cashFlowOf(accounts, false).isDerived // => false
  */
 export function cashFlowOf(accounts: AccountsAt, isAcquirer: boolean): CashFlowFigures {
   const cfo = accounts.twelveMonths('cfo');

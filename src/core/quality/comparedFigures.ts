@@ -28,7 +28,11 @@ export interface CapitalisedShare {
 
 type Figures = PeerInputs['figures'];
 
-/** The named figures if every one is there. */
+/**
+ * The named figures if every one is there.
+ *
+ * @example figuresOf({ revenue: 90 }, ['revenue', 'cfo']) // => null
+ */
 export function figuresOf<Name extends PeerFigure>(
   figures: Figures,
   names: readonly Name[],
@@ -36,14 +40,22 @@ export function figuresOf<Name extends PeerFigure>(
   return names.every((name) => figures[name] !== undefined) ? (figures as Record<Name, number>) : null;
 }
 
-/** Growth of twelve months' revenue over the year before; null without a positive base. */
+/**
+ * Growth of twelve months' revenue over the year before; null without a positive base.
+ *
+ * @example revenueGrowth({ revenue: 90, revenuePrior: 80 }) // => 0.125
+ */
 export function revenueGrowth(figures: Figures): number | null {
   const { revenue, revenuePrior } = figures;
   if (revenue === undefined || revenuePrior === undefined || revenuePrior <= 0) return null;
   return revenue / revenuePrior - 1;
 }
 
-/** Receivable days on the latest quarter's sales. */
+/**
+ * Receivable days on the latest quarter's sales.
+ *
+ * @example receivableDays({ receivables: 15, receivablesPrior: 10, revenueQuarter: 30, revenueQuarterPrior: 25 })?.change // => 0.25
+ */
 export function receivableDays(figures: Figures): DaysChange | null {
   const given = figuresOf(figures, [
     'receivables',
@@ -63,7 +75,11 @@ export function receivableDays(figures: Figures): DaysChange | null {
   );
 }
 
-/** Inventory days on the cost of sales of the last two quarters. */
+/**
+ * Inventory days on the cost of sales of the last two quarters.
+ *
+ * @example inventoryDays({ inventory: 15, inventoryPrior: 10, cogsTwoQuarters: 30, cogsTwoQuartersPrior: 25 })?.change // => 0.25
+ */
 export function inventoryDays(figures: Figures): DaysChange | null {
   const given = figuresOf(figures, [
     'inventory',
@@ -83,7 +99,11 @@ export function inventoryDays(figures: Figures): DaysChange | null {
   );
 }
 
-/** Null for a borrower that capitalised nothing in either year: none is not zero. */
+/**
+ * Null for a borrower that capitalised nothing in either year: none is not zero.
+ *
+ * @example capitalisedShare({ capitalisedCosts: 3, capitalisedCostsPrior: 0, revenue: 100, revenuePrior: 90 }) // => { share: 0.03, shareYearAgo: 0, change: 0.03 }
+ */
 export function capitalisedShare(figures: Figures): CapitalisedShare | null {
   const given = figuresOf(figures, ['capitalisedCosts', 'capitalisedCostsPrior', 'revenue', 'revenuePrior']);
   if (!given || given.revenue <= 0 || given.revenuePrior <= 0) return null;
@@ -93,6 +113,11 @@ export function capitalisedShare(figures: Figures): CapitalisedShare | null {
   return { share, shareYearAgo, change: share - shareYearAgo };
 }
 
+/**
+ * Cash conversion of twelve months; null where a figure is missing or the ratio has no meaning.
+ *
+ * @example conversionOf({ ebitda: 10, cfo: 6, interestPaid: 1, taxPaid: 1, nwcPrior: 20, revenue: 90, revenuePrior: 90 })?.conversion // => 0.8
+ */
 export function conversionOf(figures: Figures): CashConversion | null {
   const given = figuresOf(figures, [
     'ebitda',
@@ -120,7 +145,7 @@ export function conversionOf(figures: Figures): CashConversion | null {
 /**
  * Everything one borrower is ranked by at one quarter end; null where a figure cannot be given.
  *
- * @example comparedFigures(peer, 0.02).unexplainedAccruals // => 0.02 : 2 % of last year's assets
+ * @example comparedFigures(peer, 0.02).unexplainedAccruals // => 0.02
  */
 export function comparedFigures(
   peer: PeerInputs,

@@ -51,7 +51,7 @@ export interface PeerMember {
  *
  * Work grows as n log n in the number of peers. Source: methods.md B6.
  *
- * @example buildCrossSection(peers, 12).quarters.length // => as many as the peers have calendar quarters
+ * @example buildCrossSection(peers, 12).quarters.at(-1)?.firms // => 12
  */
 export function buildCrossSection(peers: readonly PeerInputs[], version: number): CrossSection {
   const byQuarter = new Map<PlainDate, Map<number, PeerInputs>>();

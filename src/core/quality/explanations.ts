@@ -23,7 +23,7 @@ export interface Explanations {
  * At most four lines, the largest contribution first; only what draws the score down is explained. Source:
  * methods.md B6.
  *
- * @example explain(quarterScore, peer).lines // => ['Receivable days rose from 61 to 76 (+25 %); peers +1 % (14 peers).']
+ * @example explain(quarterScore, peer).lines.length <= 4 // => true
  */
 export function explain(latest: QuarterScore, peer: PeerInputs): Explanations {
   if (latest.score === null) return { lines: [], whatWouldChangeIt: whatWouldAllowAScore(peer) };

@@ -30,7 +30,11 @@ const NAMES: Readonly<Record<PeerFigure, string>> = {
   accrualNoise: 'accrual noise',
 };
 
-/** "missing: cash from operations over twelve months, …"; null where all of them are there. */
+/**
+ * "missing: cash from operations over twelve months, …"; null where all of them are there.
+ *
+ * @example missingFigures({ ...peer, figures: {} }, ['cfo']) // => 'missing: cash from operations over twelve months'
+ */
 export function missingFigures(peer: PeerInputs, needed: readonly PeerFigure[]): string | null {
   const missing = needed.filter((figure) => peer.figures[figure] === undefined);
   return missing.length === 0 ? null : `missing: ${missing.map((figure) => NAMES[figure]).join(', ')}`;

@@ -22,7 +22,8 @@ const HIGHEST_TAX_RATE = 0.5;
  * A figure that cannot be read is left out; nothing is filled in but a cash flow derived from the balance sheet,
  * which is marked. Source: methods.md B2 and B6.
  *
- * @example peerInputs(inputs, '2026-09-30', '2026-11-30')?.figures.revenue // => 48200000
+ * @example peerInputs(inputs, '2026-09-30', '2026-11-30')?.basis // => 'management'
+ * @example peerInputs({ ...inputs, legalForm: 'bank' }, '2026-09-30', '2026-11-30') // => null
  */
 export function peerInputs(
   inputs: BorrowerInputs,
@@ -33,7 +34,11 @@ export function peerInputs(
   return fromStatements(inputs, statementsKnown(inputs, asOf), quarterEnd);
 }
 
-/** The last quarter ends that have a balance sheet, oldest first: eight at most. */
+/**
+ * The last quarter ends that have a balance sheet, oldest first: eight at most.
+ *
+ * @example peerInputsOfQuarters(inputs, '2026-11-30').length // => 8
+ */
 export function peerInputsOfQuarters(inputs: BorrowerInputs, asOf: PlainDate): readonly PeerInputs[] {
   if (NEVER_SCORED.includes(inputs.legalForm)) return [];
   const known = statementsKnown(inputs, asOf);

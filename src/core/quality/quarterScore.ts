@@ -25,7 +25,11 @@ export function compositeScore(blocks: readonly Pick<QualityBlock, 'weight' | 'r
   return { coverage, score: blocks.reduce((sum, block) => sum + pointsOf(block, coverage), 0) };
 }
 
-/** What a block adds to the score: the points of all blocks sum to it. */
+/**
+ * What a block adds to the score: the points of all blocks sum to it.
+ *
+ * @example pointsOf({ weight: 35, risk: 0.2 }, 70) // => 40
+ */
 export const pointsOf = (block: Pick<QualityBlock, 'weight' | 'risk'>, coverage: number): number =>
   block.risk === null ? 0 : (100 * block.weight * (1 - block.risk)) / coverage;
 
@@ -37,7 +41,8 @@ const availableWeight = (blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[
  *
  * Source: methods.md B6 and A2 (accounts that do not tie are not scored).
  *
- * @example scoreQuarter(peer, crossSection).score // => 63.2
+ * @example scoreQuarter(peer, crossSection).sectorPeers // => 11
+ * @example scoreQuarter({ ...peer, ties: false }, crossSection).noScoreReason // => 'The accounts do not tie, so they are not scored.'
  */
 export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): QuarterScore {
   const quarterEnd = comparisonQuarterEnd(peer.quarterEnd);

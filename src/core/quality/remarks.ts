@@ -9,7 +9,7 @@ import { longDate, percent } from './wording.ts';
 /**
  * The remarks of the latest quarter end. Source: methods.md B5 (dampers) and B6.
  *
- * @example remarksOf(peer, score) // => ['The accounts of 30 September 2026 are management accounts, not audited.']
+ * @example remarksOf(peer, quarterScore) // => ['The accounts of 30 September 2026 are management accounts, not audited.']
  */
 export function remarksOf(peer: PeerInputs, score: QuarterScore): readonly string[] {
   const date = longDate(peer.quarterEnd);
@@ -45,7 +45,11 @@ function peersRemark({ sectorPeers, bookPeers, sectorWeight }: QuarterScore): st
   return `Only ${peers} in the sector: the comparison leans ${percent(1 - sectorWeight)} on the whole book (${bookPeers} others).`;
 }
 
-/** Whether a changed headline is news; null where there is nothing to compare or the quarter end is the same. */
+/**
+ * Whether a changed headline is news; null where there is nothing to compare or the quarter end is the same.
+ *
+ * @example moveRemark(61, '2026-09-30', { quarterEnd: '2026-06-30', headline: 58, band: null }, 10) // => 'Moved 3 points since 30 June 2026: under 10 points is not news.'
+ */
 export function moveRemark(
   headline: number | null,
   quarterEnd: string,

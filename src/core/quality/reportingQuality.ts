@@ -20,7 +20,7 @@ import { QUALITY_BANDS, type QualityBand, type QuarterScore, type ReportingQuali
  * It is no finding of misconduct, no default probability and no covenant result. No score has its reason. Source:
  * methods.md B6.
  *
- * @example reportingQuality(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').headline // => 63.2
+ * @example reportingQuality(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').provisional // => false
  */
 export function reportingQuality(
   inputs: BorrowerInputs,

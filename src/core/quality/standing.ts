@@ -109,7 +109,11 @@ function present(median: number | null): number {
   return median;
 }
 
-/** The standing of a borrower's figure in a stored cross-section, whether or not the borrower is a member of it. */
+/**
+ * The standing of a borrower's figure in a stored cross-section, whether or not the borrower is a member of it.
+ *
+ * @example standingIn(crossSection.quarters.at(-1), peer, 'receivableDays', 0)?.percentile // => 0
+ */
 export function standingIn(
   section: QuarterCrossSection,
   borrower: { readonly borrowerId: number; readonly sector: string },
@@ -127,7 +131,11 @@ export function standingIn(
   });
 }
 
-/** How many others there are at all, whatever figures they lack. */
+/**
+ * How many others there are at all, whatever figures they lack.
+ *
+ * @example otherFirms(crossSection.quarters.at(-1), peer) // => { sectorPeers: 11, bookPeers: 11 }
+ */
 export function otherFirms(
   section: QuarterCrossSection,
   borrower: { readonly borrowerId: number; readonly sector: string },

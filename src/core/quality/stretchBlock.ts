@@ -7,7 +7,11 @@ import { stretchOf } from './stretch.ts';
 
 const { gates } = QUALITY_TABLE;
 
-/** Receivable days, inventory days and capitalised costs: the one that stretched most among its peers. */
+/**
+ * Receivable days, inventory days and capitalised costs: the one that stretched most among its peers.
+ *
+ * @example stretchBlock({ peer: { ...peer, figures: {} }, compared: {}, standing: () => null }).risk // => null
+ */
 export function stretchBlock({ peer, standing }: BlockContext): QualityBlock {
   const receivables = receivableDays(peer.figures);
   const inventory = inventoryDays(peer.figures);

@@ -1,24 +1,51 @@
 /** Figures as the explanation lines print them: plain English, whole percents where halves say nothing. */
 
-/** 0.064 as '6 %'; `digits` after the point. */
+/**
+ * 0.064 as '6 %'; `digits` after the point.
+ *
+ * @example percent(0.064) // => '6 %'
+ */
 export const percent = (share: number, digits = 0): string => `${withoutMinusZero(share * 100, digits)} %`;
 
-/** 0.19 as '+19 %', -0.04 as '−4 %'. */
+/**
+ * 0.19 as '+19 %', -0.04 as '−4 %'.
+ *
+ * @example signedPercent(-0.04) // => '−4 %'
+ */
 export const signedPercent = (share: number, digits = 0): string => {
   const text = withoutMinusZero(share * 100, digits);
   return `${Number(text) > 0 ? '+' : ''}${text.replace('-', '−')} %`;
 };
 
-/** Change of a share in percentage points: 0.022 as '+2.2 points'. */
+/**
+ * Change of a share in percentage points: 0.022 as '+2.2 points'.
+ *
+ * @example signedPoints(0.022) // => '+2.2 points'
+ */
 export const signedPoints = (share: number): string => {
   const text = withoutMinusZero(share * 100, 1);
   return `${Number(text) > 0 ? '+' : ''}${text.replace('-', '−')} points`;
 };
 
+/**
+ * Days without a fraction.
+ *
+ * @example wholeDays(61.4) // => '61'
+ */
 export const wholeDays = (days: number): string => withoutMinusZero(days, 0);
 
+/**
+ * The verb of a change; none counts as rising.
+ *
+ * @example rose(-0.1) // => 'fell'
+ */
 export const rose = (change: number): string => (change >= 0 ? 'rose' : 'fell');
 
+/**
+ * Those compared with, as a sector's peers or as the whole book.
+ *
+ * @example borrowers(14, false) // => '14 peers'
+ */
 export const borrowers = (count: number, isOfBook: boolean): string =>
   isOfBook ? `${count} borrowers of the whole book` : count === 1 ? '1 peer' : `${count} peers`;
 
@@ -37,7 +64,11 @@ const MONTHS = [
   'December',
 ] as const;
 
-/** '2026-09-30' as '30 September 2026'. */
+/**
+ * '2026-09-30' as '30 September 2026'.
+ *
+ * @example longDate('2026-09-30') // => '30 September 2026'
+ */
 export function longDate(date: string): string {
   const [year, month, day] = date.split('-').map(Number) as [number, number, number];
   return `${day} ${MONTHS[month - 1]!} ${year}`;

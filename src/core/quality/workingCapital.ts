@@ -5,6 +5,8 @@ import { ifAll, type AccountsAt, type Back } from './accountsAt.ts';
  * where the totals are not given, its parts.
  *
  * Source: methods.md A3 and B1 item 10.
+ *
+ * @example workingCapital(accounts, { months: 0 }) // => 4000000
  */
 export function workingCapital(accounts: AccountsAt, back: Back): number | undefined {
   const byTotals = ifAll(

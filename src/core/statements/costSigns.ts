@@ -20,6 +20,8 @@ const NEGATIVE_SHARE = 0.8;
 /**
  * Whether a sheet writes costs as negatives: at least 80 % of its cost cells are below nought. Then the whole block
  * is turned and the identities run again; single cells are never turned. Source: methods.md A1.
+ *
+ * @example writesCostsNegative([{ cogs: decimal(-50), sga: decimal(-10) }]) // => true
  */
 export function writesCostsNegative(columns: readonly Amounts[]): boolean {
   const cells = columns.flatMap((column) => COST_LINES.flatMap((line) => column[line] ?? []));
@@ -27,7 +29,11 @@ export function writesCostsNegative(columns: readonly Amounts[]): boolean {
   return filled.length > 0 && filled.filter((cell) => cell.lt(ZERO)).length / filled.length >= NEGATIVE_SHARE;
 }
 
-/** The amounts with every cost turned, as one block. */
+/**
+ * The amounts with every cost turned, as one block.
+ *
+ * @example withCostsTurned({ revenue: decimal(80), cogs: decimal(-50) }) // => { revenue: 80, cogs: 50 }
+ */
 export function withCostsTurned(amounts: Amounts): Amounts {
   const turned = COST_LINES.flatMap((line) => {
     const amount = amounts[line];

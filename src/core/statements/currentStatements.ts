@@ -17,11 +17,18 @@ const BASIS_RANK: Readonly<Record<StatementBasis, number>> = {
   forecast: 0,
 };
 
+/**
+ * How well founded a basis is: the higher, the better.
+ *
+ * @example basisRank('audited') > basisRank('management') // => true
+ */
 export const basisRank = (basis: StatementBasis): number => BASIS_RANK[basis];
 
 /**
  * Every version known by the day in the scope, forecasts left out. Flows over several versions need the earlier
  * ones too, to see whether a restatement touched a line.
+ *
+ * @example knownStatements(statements, { scope: 'group', asOf: '2026-03-01' }).length // => 2
  */
 export const knownStatements = (
   statements: readonly Statement[],
@@ -38,7 +45,7 @@ export const knownStatements = (
  *
  * Source: desk practice; unaudited interim figures are superseded by audited ones (methods.md A7).
  *
- * @example currentStatements(statements, { scope: 'group', asOf: '2026-11-30' })
+ * @example currentStatements(statements, { scope: 'group', asOf: '2026-11-30' }).at(-1)?.months // => 9
  */
 export function currentStatements(
   statements: readonly Statement[],
@@ -54,11 +61,19 @@ export function currentStatements(
     .sort((a, b) => compareText(a.periodEnd, b.periodEnd) || a.months - b.months);
 }
 
-/** The statement in force among versions of one period; null where there is none. */
+/**
+ * The statement in force among versions of one period; null where there is none.
+ *
+ * @example inForce([]) // => null
+ */
 export const inForce = (versions: readonly Statement[]): Statement | null =>
   versions.length === 0 ? null : versions.reduce(better);
 
-/** Every version of one period that is given. */
+/**
+ * Every version of one period that is given.
+ *
+ * @example versionsOf(statements, '2026-09-30', 9).length // => 1
+ */
 export const versionsOf = (
   statements: readonly Statement[],
   periodEnd: PlainDate,
@@ -68,7 +83,11 @@ export const versionsOf = (
     (statement) => statement.months === months && isSamePeriodEnd(statement.periodEnd, periodEnd),
   );
 
-/** The statement in force for one period end and length; null where there is none. */
+/**
+ * The statement in force for one period end and length; null where there is none.
+ *
+ * @example statementOf(statements, '2026-09-30', 3) // => null
+ */
 export const statementOf = (
   statements: readonly Statement[],
   periodEnd: PlainDate,

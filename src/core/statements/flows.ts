@@ -16,7 +16,7 @@ import { restatedAlone } from './versionMix.ts';
  * Pass every known version (knownStatements) or the current ones: of several versions the one in force is read.
  * Whole currency units. Missing names the statement or the line that is not there.
  *
- * @example balanceAt(statements, 'cash', '2026-09-30')
+ * @example balanceAt(statements, 'cash', '2026-09-30').value // => 6000000
  */
 export const balanceAt = (statements: readonly Statement[], line: LineItemCode, date: PlainDate): Reading =>
   flowOver(statements, line, date, 0);
@@ -24,7 +24,7 @@ export const balanceAt = (statements: readonly Statement[], line: LineItemCode, 
 /**
  * The amount of a line in the statement of exactly that period end and length; 0 months is a balance.
  *
- * @example flowOver(statements, 'revenue', '2026-09-30', 9)
+ * @example flowOver(statements, 'revenue', '2026-09-30', 9).value // => 66000000
  */
 export function flowOver(
   statements: readonly Statement[],
@@ -45,7 +45,7 @@ export function flowOver(
  *
  * Whole currency units. Source: methods.md A3. Not meaningful where the two would mix versions of the accounts.
  *
- * @example flowOfMonths(statements, 'revenue', '2026-09-30', 6, 12)
+ * @example flowOfMonths(statements, 'revenue', '2026-09-30', 6, 12).value // => 44000000
  */
 export function flowOfMonths(
   statements: readonly Statement[],
@@ -70,7 +70,7 @@ export function flowOfMonths(
 /**
  * The flow of one quarter.
  *
- * @example quarterFlow(statements, 'revenue', '2026-06-30', 12)
+ * @example quarterFlow(statements, 'revenue', '2026-06-30', 12).value // => 23000000
  */
 export const quarterFlow = (
   statements: readonly Statement[],
@@ -89,7 +89,7 @@ export const quarterFlow = (
  *
  * Whole currency units. Source: methods.md A3 and A2. Any part missing: missing, with the gap named.
  *
- * @example lastTwelveMonths(statements, 'revenue', '2026-09-30', 12)
+ * @example lastTwelveMonths(statements, 'revenue', '2026-09-30', 12).value // => 90000000
  */
 export function lastTwelveMonths(
   statements: readonly Statement[],

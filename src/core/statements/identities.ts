@@ -48,7 +48,11 @@ export function identity({
   };
 }
 
-/** Total assets = total liabilities + equity. */
+/**
+ * Total assets = total liabilities + equity.
+ *
+ * @example balanceIdentity({ totalAssets: decimal(96), totalLiabilities: decimal(58), equity: decimal(38), roundingUnit: ZERO }).outcome // => 'ties'
+ */
 export const balanceIdentity = ({
   totalAssets,
   totalLiabilities,
@@ -62,7 +66,11 @@ export const balanceIdentity = ({
 }): IdentityResult =>
   identity({ given: totalAssets, parts: [totalLiabilities, equity], reference: totalAssets, roundingUnit });
 
-/** Opening cash + operating + investing + financing cash flow + currency effect = closing cash, flows signed. */
+/**
+ * Opening cash + operating + investing + financing cash flow + currency effect = closing cash, flows signed.
+ *
+ * @example cashIdentity({ opening: decimal(8), flows: [decimal('1.7'), decimal('-9.5'), decimal('6.8')], closing: decimal(7), totalAssets: decimal(110), roundingUnit: ZERO }).outcome // => 'ties'
+ */
 export function cashIdentity({
   opening,
   flows,
@@ -94,6 +102,8 @@ export function cashIdentity({
  *
  * An unexplained entry is a signal of quality, not a matter of rounding: beyond the tolerance it is a warning,
  * however large.
+ *
+ * @example retainedEarningsIdentity({ opening: decimal(20), netIncome: decimal(5), dividends: decimal(1), namedEntries: ZERO, closing: decimal(20), totalAssets: decimal(110), roundingUnit: ZERO }).outcome // => 'warning'
  */
 export function retainedEarningsIdentity({
   opening,

@@ -9,7 +9,7 @@ import type { Statement } from './statement.ts';
  * amortisation where both are there, else the sum as the sheet gives it, else depreciation alone (a sheet without
  * a row for amortisation). It is put together here and nowhere else.
  *
- * @example lineInputs(statement, 'revenue')?.length // => 1
+ * @example lineInputs(statements[0], 'revenue')?.length // => 1
  */
 export function lineInputs(statement: Statement, line: LineItemCode): readonly InputUsed[] | null {
   if (line !== 'depreciation_and_amortisation') return cells(statement, [line]);

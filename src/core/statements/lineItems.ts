@@ -96,8 +96,18 @@ export const LINE_ITEM_CODES: readonly LineItemCode[] = LINE_ITEMS.map((item) =>
 
 const BY_CODE: ReadonlyMap<string, LineItem> = new Map(LINE_ITEMS.map((item) => [item.code, item]));
 
+/**
+ * Whether text is the code of a standard line.
+ *
+ * @example isLineItemCode('revenue') // => true
+ */
 export const isLineItemCode = (text: string): text is LineItemCode => BY_CODE.has(text);
 
+/**
+ * A standard line by its code.
+ *
+ * @example lineItem('cogs').label // => 'Cost of sales'
+ */
 export function lineItem(code: LineItemCode): LineItem {
   const item = BY_CODE.get(code);
   if (!item) throw new Error(`no line item ${code}`);

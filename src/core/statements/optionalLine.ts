@@ -11,7 +11,7 @@ const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
  *
  * Desk practice, no source.
  *
- * @example orNoneIfNeverCarried(statements, 'junior_debt', balanceAt(statements, 'junior_debt', date))
+ * @example orNoneIfNeverCarried(statements, 'junior_debt', { kind: 'missing', missing: [] }).value // => 0
  */
 export function orNoneIfNeverCarried(
   statements: readonly Statement[],

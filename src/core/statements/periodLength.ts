@@ -11,7 +11,11 @@ const WEEKS_OF_LONG_YEAR = 53;
  */
 export const annualisedByMonths = (value: Decimal, months: number): Decimal => value.times(12).div(months);
 
-/** The same by days: x basis / days, the basis (365, 360) being the agreement's. */
+/**
+ * The same by days: x basis / days, the basis (365, 360) being the agreement's.
+ *
+ * @example annualisedByDays(decimal(73), 73, 365) // => 365
+ */
 export const annualisedByDays = (value: Decimal, days: number, basis: number): Decimal =>
   value.times(basis).div(days);
 
@@ -30,7 +34,11 @@ export interface LengthInWeeks {
   readonly flag: '53-week LTM' | null;
 }
 
-/** The length of twelve months made of quarters of whole weeks, flagged where there are 53. */
+/**
+ * The length of twelve months made of quarters of whole weeks, flagged where there are 53.
+ *
+ * @example lengthOfQuarters([13, 13, 13, 14]) // => { weeks: 53, days: 371, flag: '53-week LTM' }
+ */
 export function lengthOfQuarters(quarterWeeks: readonly number[]): LengthInWeeks {
   const weeks = quarterWeeks.reduce((sum, each) => sum + each, 0);
   return { weeks, days: weeks * 7, flag: weeks === WEEKS_OF_LONG_YEAR ? '53-week LTM' : null };

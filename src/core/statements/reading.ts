@@ -29,6 +29,8 @@ export type Reading =
 /**
  * The sum of readings, each times its sign. Missing where any part is missing, with every gap named; not
  * meaningful where a part has no meaning.
+ *
+ * @example sumOfReadings([{ sign: 1, reading: { kind: 'value', value: ZERO, inputs: [] } }, { sign: -1, reading: { kind: 'missing', missing: [] } }]).kind // => 'value'
  */
 export function sumOfReadings(
   parts: readonly { readonly sign: 1 | -1; readonly reading: Reading }[],
@@ -43,7 +45,11 @@ export function sumOfReadings(
   return { kind: 'value', value: sumOfInputs(inputs), inputs };
 }
 
-/** What the inputs of an additive result add up to. */
+/**
+ * What the inputs of an additive result add up to.
+ *
+ * @example sumOfInputs([{ sign: 1, amount: decimal(84) }, { sign: -1, amount: decimal(60) }]) // => 24
+ */
 export const sumOfInputs = (inputs: readonly InputUsed[]): Decimal =>
   inputs.reduce((sum, input) => sum.plus(input.amount.times(input.sign)), ZERO);
 

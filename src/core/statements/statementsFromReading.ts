@@ -33,9 +33,7 @@ export interface StagedStatement {
  * The reading must be ready: with an open question, or without currency or unit, it throws, because nothing may be
  * taken from it. The tie of a statement is the worst of the checks of its period.
  *
- * @example
- * statementsFromReading(reading).map((statement) => `${statement.months} months to ${statement.periodEnd}`)
- * // => ['0 months to 2026-09-30', '3 months to 2026-09-30']
+ * @example statementsFromReading({ outcome: 'ready', currency: 'EUR', unit: '1000', facts: [], checks: [] }) // => []
  */
 export function statementsFromReading(reading: Reading): StagedStatement[] {
   const { currency, unit } = reading;

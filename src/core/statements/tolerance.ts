@@ -26,7 +26,11 @@ export function roundingTolerance({
   return Decimal.max(roundingUnit.times(figures).div(2), reference.abs().times(ROUNDING_SHARE));
 }
 
-/** Ties within rounding; a warning up to 0.5 % of the reference; above that the figures do not tie. */
+/**
+ * Ties within rounding; a warning up to 0.5 % of the reference; above that the figures do not tie.
+ *
+ * @example tieOf(decimal(3), decimal(1), decimal(1000)) // => 'warning'
+ */
 export function tieOf(
   difference: Decimal,
   tolerance: Decimal,

@@ -9,6 +9,8 @@ import type { Statement } from './statement.ts';
  * Why a pair of periods would mix versions of the accounts: this period's line was restated after the other period
  * was last received. Null where it was not. Without the earlier version at hand a restated line counts as changed.
  * Source: methods.md A3, all parts of twelve months from one version.
+ *
+ * @example restatedAlone(statements, 'revenue', ['2025-12-31', 12], ['2025-09-30', 9]) // => null
  */
 export function restatedAlone(
   statements: readonly Statement[],

@@ -23,7 +23,7 @@ const MOST_STEPS = 50;
  * `no-convergence` where the outcomes are perfectly separated, which has no finite answer. Checked against Greene's
  * published probit of the Spector & Mazzeo data.
  *
- * @example binaryResponse('logit', [false, true, false, true], [[0, 0, 1, 1]]) // => a slope of 0
+ * @example binaryResponse('logit', [false, true, false, true], [[0, 0, 1, 1]]).value.n // => 4
  */
 export function binaryResponse(
   link: Link,

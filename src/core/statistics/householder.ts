@@ -19,6 +19,11 @@ export interface QrFactors {
 /** A diagonal of R below this share of the largest one is taken for zero: far above rounding, far below Longley. */
 const RANK_TOLERANCE = 1e-11;
 
+/**
+ * QR factors of the columns, with the response rotated alongside; `rank` is less than the columns where one says nothing new.
+ *
+ * @example factorise([[1, 1, 1], [2, 2, 2]], [1, 2, 3]).rank // => 1
+ */
 export function factorise(columns: readonly (readonly number[])[], response: readonly number[]): QrFactors {
   const scales = columns.map((column) => powerOfTwoNear(lengthOf(column)));
   const work = columns.map((column, k) => Float64Array.from(column, (value) => value / scales[k]!));
@@ -37,7 +42,11 @@ export function factorise(columns: readonly (readonly number[])[], response: rea
   return { upper: work, rotated, order, scales, rank };
 }
 
-/** Coefficients in the original order and units. The factors must have full rank. */
+/**
+ * Coefficients in the original order and units. The factors must have full rank.
+ *
+ * @example solveUpper(factorise([[1, 0], [0, 2]], [3, 8])) // => [3, 4]
+ */
 export function solveUpper({ upper, rotated, order, scales }: QrFactors): number[] {
   const columns = upper.length;
   const solution = new Array<number>(columns).fill(0);
@@ -49,7 +58,11 @@ export function solveUpper({ upper, rotated, order, scales }: QrFactors): number
   return inOriginalOrder(order, (place) => solution[place]! / scales[order[place]!]!);
 }
 
-/** Diagonal of the inverse of X'X, in the original order and units. The factors must have full rank. */
+/**
+ * Diagonal of the inverse of X'X, in the original order and units. The factors must have full rank.
+ *
+ * @example inverseDiagonal(factorise([[1, 0], [0, 2]], [3, 8])) // => [1, 0.25]
+ */
 export function inverseDiagonal({ upper, order, scales }: QrFactors): number[] {
   const columns = upper.length;
   const squares = new Array<number>(columns).fill(0);

@@ -24,7 +24,7 @@ export interface LeastSquares {
  * Longley data lose half their digits that way. Errors: `too-few-points` unless at least one degree of freedom is
  * left, `rank-deficient` where a column is a combination of the others. Checked against NIST StRD certified values.
  *
- * @example leastSquares([1, 3, 5, 7], [[0, 1, 2, 3]], { constant: true }) // => a constant of 1 and a slope of 2
+ * @example leastSquares([1, 3, 5, 7], [[0, 1, 2, 3]], { constant: true }).value.n // => 4
  */
 export function leastSquares(
   response: readonly number[],

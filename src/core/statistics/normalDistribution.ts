@@ -1,5 +1,10 @@
 const ROOT_TWO_PI = Math.sqrt(2 * Math.PI);
 
+/**
+ * Density of the standard normal distribution.
+ *
+ * @example normalDensity(0) // => 0.3989…
+ */
 export const normalDensity = (z: number): number => Math.exp((-z * z) / 2) / ROOT_TWO_PI;
 
 /**

@@ -22,13 +22,22 @@ export interface RankCounts {
   readonly n: number;
 }
 
+/**
+ * The counts of a value in an ascending sample.
+ *
+ * @example rankCounts([1, 2, 2, 3], 2) // => { below: 1, equal: 2, n: 4 }
+ */
 export function rankCounts(sorted: ArrayLike<number>, value: number): RankCounts {
   const below = firstIndex(sorted, (member) => member >= value);
   const upTo = firstIndex(sorted, (member) => member > value);
   return { below, equal: upTo - below, n: sorted.length };
 }
 
-/** The same counts with one member left out: a borrower is not compared with itself. */
+/**
+ * The same counts with one member left out: a borrower is not compared with itself.
+ *
+ * @example withoutMember({ below: 1, equal: 2, n: 4 }, 2, 2) // => { below: 1, equal: 1, n: 3 }
+ */
 export function withoutMember(counts: RankCounts, value: number, member: number): RankCounts {
   return {
     below: counts.below - (member < value ? 1 : 0),
@@ -54,13 +63,22 @@ export interface Middle {
   readonly values: readonly number[];
 }
 
+/**
+ * The middle of an ascending sample, with the members on either side.
+ *
+ * @example middleOf([1, 2, 3, 4, 5]) // => { n: 5, from: 1, values: [2, 3, 4] }
+ */
 export function middleOf(sorted: readonly number[]): Middle {
   const n = sorted.length;
   const from = Math.max(0, Math.floor((n - 2) / 2));
   return { n, from, values: sorted.slice(from, Math.floor((n - 1) / 2) + 2) };
 }
 
-/** Median of a sample, or of what is left of it without the member at `leftOut`; null where nothing is left. */
+/**
+ * Median of a sample, or of what is left of it without the member at `leftOut`; null where nothing is left.
+ *
+ * @example medianOf(middleOf([1, 2, 3, 4, 5]), 0) // => 3.5
+ */
 export function medianOf({ n, from, values }: Middle, leftOut: number | null): number | null {
   const left = leftOut === null ? n : n - 1;
   if (left <= 0) return null;

@@ -14,7 +14,7 @@ export interface RankAuc {
  *
  * Needs at least one positive and one negative, else `too-few-points`.
  *
- * @example rankAuc([1, 2, 3], [false, true, true]) // => an estimate of 1
+ * @example rankAuc([1, 2, 3], [false, true, true]).value.estimate // => 1
  */
 export function rankAuc(
   scores: readonly number[],
@@ -36,7 +36,11 @@ export function rankAuc(
   });
 }
 
-/** Ranks from 1, ties sharing their mean rank. */
+/**
+ * Ranks from 1, ties sharing their mean rank.
+ *
+ * @example midRanks([5, 7, 7]) // => [1, 2.5, 2.5]
+ */
 export function midRanks(values: readonly number[]): number[] {
   const order = values.map((_, k) => k).sort((a, b) => values[a]! - values[b]!);
   const ranks = new Array<number>(values.length).fill(0);

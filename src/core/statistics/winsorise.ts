@@ -16,5 +16,10 @@ export function winsorLimits(sample: readonly number[], tail: number): WinsorLim
   return { low: linearPercentile(sorted, tail), high: linearPercentile(sorted, 1 - tail) };
 }
 
+/**
+ * A value drawn in to the limits.
+ *
+ * @example clamp(9, { low: 1, high: 3 }) // => 3
+ */
 export const clamp = (value: number, { low, high }: WinsorLimits): number =>
   Math.min(high, Math.max(low, value));
