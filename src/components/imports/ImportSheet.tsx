@@ -84,8 +84,8 @@ function Import({ first, target: firstTarget }: ImportSheetProps) {
           </p>
         </Panel>
         <div className="stack">
-          {data.mayEdit && data.state === 'draft' && <AcceptImport view={data} onChanged={refresh} />}
           <Questions view={data} onShow={show} onChanged={refresh} />
+          {data.mayEdit && data.state === 'draft' && <AcceptImport view={data} onChanged={refresh} />}
           <Checks view={data} onShow={show} />
           {data.mayEdit && <WithdrawImport view={data} onChanged={refresh} />}
         </div>

@@ -99,10 +99,7 @@ function ColumnPeriod({ column }: { readonly column: ReadColumn | undefined }) {
             : `${column.months} months to ${dayText(column.periodEnd)}`;
   return (
     <span
-      className={classes(
-        'grid-tag',
-        column.months === null && column.scenario === 'actual' && 'grid-tag-asked',
-      )}
+      className={classes('tag', column.months === null && column.scenario === 'actual' && 'tag-question')}
     >
       {text}
     </span>

@@ -1,5 +1,6 @@
 /** What the reader may know of a borrower before it opens a file. */
 import type { Transaction } from 'sequelize';
+import { decimal } from '../../../core/money/decimal.ts';
 import { selectOne } from '../sql.ts';
 
 export const readingFacts = (
@@ -21,5 +22,5 @@ export async function lastQuarterRevenue(tx: Transaction, borrowerId: number): P
      order by period_end desc, statement_version desc limit 1`,
     { borrowerId },
   );
-  return row?.revenue ?? null;
+  return row ? decimal(row.revenue).toFixed() : null;
 }
