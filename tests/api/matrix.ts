@@ -10,7 +10,7 @@ import type { DeskThings } from '../support/twoDesks.ts';
 import type { Sending } from '../support/client.ts';
 
 export interface Sample {
-  /** The right that product.md's table gives the route: held against what the route itself declares. */
+  /** The right that the route is meant to need, written out by hand: held against what the route itself declares. */
   readonly can: Action | 'signed in' | 'anyone';
   readonly path: (desk: DeskThings) => string;
   readonly sending?: (desk: DeskThings) => Sending;

@@ -1,4 +1,4 @@
-/** The corpus of security.md 2.1, made anew for each run: every file is refused, or read without harm, in time. */
+/** A corpus of hostile files, made anew for each run: every one is refused, or read without harm, in time. */
 import { monitorEventLoopDelay } from 'node:perf_hooks';
 import { afterAll, expect, test } from 'vitest';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';

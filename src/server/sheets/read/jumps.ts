@@ -4,7 +4,7 @@ import type { Asking } from './asking.ts';
 import type { TableFact } from './facts.ts';
 import type { ReadingContext } from '#core/statements/workbookReading.ts';
 
-/** A change of more than a hundredfold is no growth: practice.md 5, no. 33. */
+/** A change of more than a hundredfold is no growth. Common practice, no source. */
 const JUMP = 100;
 const MONTHS_OF_QUARTER = 3;
 
@@ -30,7 +30,6 @@ export function withoutJumps(
     );
     const compared = median(others) ?? lastRevenue(size, own, context);
     if (!compared || compared.isZero() || !isJump(size.perMonth.div(compared))) return own;
-    if (others.length === 1 && !isLess(size.perMonth, compared)) return own;
     return answered(`scale-jump:${key}`, own, size, compared, asking);
   });
 }
@@ -52,7 +51,6 @@ function sizeOf(facts: readonly TableFact[]): Size | null {
 }
 
 const isJump = (ratio: Decimal): boolean => ratio.gte(JUMP) || ratio.lte(decimal(1).div(JUMP));
-const isLess = (one: Decimal, other: Decimal): boolean => one.lt(other);
 
 function median(values: readonly Decimal[]): Decimal | null {
   const sorted = [...values].sort((one, other) => one.comparedTo(other));

@@ -1,4 +1,4 @@
-/** Sheets that hold personal data are neither read nor shown: practice.md 5, no. 64. */
+/** Sheets that hold personal data are neither read nor shown: a lender has no need of them. */
 import type { SheetGrid } from './cells.ts';
 
 const NAMES =
