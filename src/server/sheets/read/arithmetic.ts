@@ -108,7 +108,8 @@ interface Match {
 /** The shortest run of terms just before the row that adds up to it in every column. */
 function matchOf(terms: readonly Term[], row: SumRow, step: Decimal): Match | null {
   if (row.values.every((value) => value === null || value.isZero())) return null;
-  const least = row.role === 'total' ? 1 : 2;
+  // A section may have one row; a result that equals the row above it does so by chance.
+  const least = row.role === 'total' && row.closes === 'since-total' ? 1 : 2;
   for (let count = least; count <= Math.min(terms.length, MAX_PARTS); count += 1) {
     const parts = terms.slice(terms.length - count);
     if (count > 1 && parts.filter(isNotZero).length < 2) continue;

@@ -91,7 +91,7 @@ function addAmounts(period: Period, run: Run, column: SettledColumn, scale: Sett
       ([total, parts]) => total === index && parts.some((part) => run.rows[part]?.line === read.line),
     );
     if (before && !isWider) return;
-    period.amounts.set(read.line, amount.times(run.signed.factorOf(index)).times(scale.unit ?? 1));
+    period.amounts.set(read.line, amount.times(run.signed.factorOf(index, read.line)).times(scale.unit ?? 1));
   });
 }
 
@@ -246,7 +246,7 @@ function sumCheck(
 /** How a printed row goes into its total: costs lower it. */
 function contributionOf(run: Run, index: number): 1 | -1 {
   const line = run.rows[index]?.line ?? null;
-  const factor = run.part === 'balance' ? 1 : run.signed.factorOf(index);
+  const factor = run.part === 'balance' ? 1 : run.signed.factorOf(index, line);
   return (line && COST_LINES.has(line) ? -factor : factor) as 1 | -1;
 }
 

@@ -1,5 +1,5 @@
 /** What each column of a table stands for, as far as its own words say; lengths and years are settled later. */
-import type { PlainDate } from '#core/calendar/plainDate.ts';
+import type { SheetCell } from './cells.ts';
 import { readHeadingText, saysPeriod, type HeadingText, type Scenario } from './headingText.ts';
 import type { PeriodText } from './periodText.ts';
 import type { Table, TableColumn } from './tables.ts';
@@ -19,7 +19,7 @@ export interface ColumnWords {
   readonly nameText: string;
 }
 
-const NO_PERIOD: PeriodText = {
+export const NO_PERIOD: PeriodText = {
   end: null,
   start: null,
   eitherDay: null,
@@ -39,8 +39,10 @@ export function columnWords(table: Table): ColumnWords[] {
   const sides = new Set(read.flat().map(({ side }) => side));
   const isTrialBalance = sides.has('debit') && sides.has('credit');
   const anyPeriod = read.flat().some(saysPeriod);
+  const saysScenario = read.flat().some(({ scenario }) => scenario !== null);
+  const whole = saysScenario || isTrialBalance ? 'actual' : scenarioOfTable(table);
   return table.columns.map((column, index) =>
-    wordsOf(column, index, read[index] ?? [], isTrialBalance, anyPeriod),
+    wordsOf(column, index, read[index] ?? [], isTrialBalance, anyPeriod, whole),
   );
 }
 
@@ -50,6 +52,7 @@ function wordsOf(
   headings: readonly HeadingText[],
   isTrialBalance: boolean,
   anyPeriod: boolean,
+  whole: Scenario,
 ): ColumnWords {
   const names = headings.map(({ rest }, at) => ({ rest, text: column.headings[at]?.text ?? '' }));
   const named = names.filter(({ rest }) => rest !== '');
@@ -64,7 +67,7 @@ function wordsOf(
     hidden: column.hidden,
     role: side ?? roleOf(headings, anyPeriod),
     period: headings.reduce((sum, heading) => combinePeriods(sum, heading.period), NO_PERIOD),
-    scenario: scenario ?? 'actual',
+    scenario: scenario ?? whole,
     priorYear: headings.some((heading) => heading.priorYear),
     restated: headings.some((heading) => heading.restated),
     name: named.map(({ rest }) => rest).join(' '),
@@ -97,8 +100,28 @@ export function combinePeriods(upper: PeriodText, lower: PeriodText): PeriodText
   };
 }
 
-/** What the titles above a table say of its period; the nearest title counts most. */
+/** What the titles above a table, and below its headings, say of its period; the nearest title counts most. */
 export const titlePeriod = (table: Table): PeriodText =>
-  table.titles.map((cell) => readHeadingText(cell.text).period).reduce(combinePeriods, NO_PERIOD);
+  [...table.titles, ...leadingTexts(table)]
+    .map((cell) => readHeadingText(cell.text).period)
+    .reduce(combinePeriods, NO_PERIOD);
 
-export const isDay = (date: PlainDate | null): date is PlainDate => date !== null;
+function leadingTexts(table: Table): SheetCell[] {
+  const first = table.rows.find(({ cells }) => cells.some((cell) => cell !== null))?.number ?? 0;
+  return table.footnotes.filter(({ row }) => row < first);
+}
+
+/** A whole table is of one scenario where its sheet or title says so and its columns say nothing else. */
+function scenarioOfTable(table: Table): Scenario {
+  for (const text of [table.sheet.name, ...table.titles.map((cell) => cell.text)]) {
+    const { scenario, derived } = readHeadingText(text);
+    if (
+      scenario &&
+      scenario !== 'actual' &&
+      !derived &&
+      !/(?<![a-z])(?:actual|vs|ist|and|und)(?![a-z])/i.test(text)
+    )
+      return scenario;
+  }
+  return 'actual';
+}

@@ -57,7 +57,7 @@ function factOf(
   if (cell.kind !== 'amount' || cell.amount === null || row.code === null) return null;
   const months = run.part === 'balance' ? 0 : column.months;
   if (months === null) return null;
-  const sign = run.signed.factorOf(row.index) * signOfColour(cell, table, row, asking);
+  const sign = run.signed.factorOf(row.index, row.code) * signOfColour(cell, table, row, asking);
   const amount = cell.amount.times(sign).times(scale.unit ?? 1);
   return {
     code: row.code,

@@ -138,14 +138,19 @@ function wordLikeness(word: string, other: string): number {
   return 1 - editDistance(word, other) / longest;
 }
 
+/** Letters changed, left out, added, or exchanged with their neighbour. */
 function editDistance(word: string, other: string): number {
+  let before: number[] = [];
   let previous = Array.from({ length: other.length + 1 }, (_, index) => index);
   for (let row = 1; row <= word.length; row += 1) {
     const current = [row];
     for (let column = 1; column <= other.length; column += 1) {
       const change = (previous[column - 1] ?? 0) + (word[row - 1] === other[column - 1] ? 0 : 1);
-      current.push(Math.min(change, (previous[column] ?? 0) + 1, (current[column - 1] ?? 0) + 1));
+      const exchanged = word[row - 1] === other[column - 2] && word[row - 2] === other[column - 1];
+      const exchange = exchanged ? (before[column - 2] ?? Infinity) + 1 : Infinity;
+      current.push(Math.min(change, exchange, (previous[column] ?? 0) + 1, (current[column - 1] ?? 0) + 1));
     }
+    before = previous;
     previous = current;
   }
   return previous[other.length] ?? 0;

@@ -18,6 +18,8 @@ export interface YearEnd {
   readonly month: number;
   /** A financial year is named for the calendar year in which it begins. */
   readonly namedForStart: boolean;
+  /** 'Q3 2026' without a word of a financial year is of the calendar year all the same. */
+  readonly calendarQuarters: boolean;
 }
 
 export interface ColumnPeriod {
@@ -30,6 +32,8 @@ export interface ColumnPeriod {
 
 export interface PeriodEvidence {
   readonly yearEnd: YearEnd | null;
+  /** The year end is asked for: nothing that could hang on it is settled. */
+  readonly yearEndOpen: boolean;
   readonly dayFirst: boolean | null;
 }
 
@@ -66,24 +70,25 @@ function fromEitherDay(own: PeriodText, evidence: PeriodEvidence): ColumnPeriod 
 }
 
 /** A quarter, half or numbered month. Without a word of a financial year it is of the calendar year. */
-function partOfYear(own: PeriodText, year: number, { yearEnd }: PeriodEvidence): ColumnPeriod {
+function partOfYear(own: PeriodText, year: number, { yearEnd, yearEndOpen }: PeriodEvidence): ColumnPeriod {
   const months = own.quarter !== null ? 3 : own.half !== null ? 6 : null;
   const count = own.quarter !== null ? own.quarter * 3 : own.half !== null ? own.half * 6 : own.periodNumber;
   if (count === null || count > 13) return OPEN;
   const isFiscal = own.fiscal || own.periodNumber !== null;
-  if (isFiscal && !yearEnd) return { end: null, months: own.months ?? months, needs: 'year-end' };
+  if (yearEndOpen || (isFiscal && !yearEnd))
+    return { end: null, months: own.months ?? months, needs: 'year-end' };
   const length = own.yearToDate ? count : (own.months ?? months);
-  if (!yearEnd || yearEnd.month === 12)
+  if (!yearEnd || yearEnd.month === 12 || (!isFiscal && yearEnd.calendarQuarters)) {
     return { end: endOf(year, Math.min(count, 12)), months: length, needs: null };
-  if (!isFiscal) return { end: null, months: length, needs: 'year-end' };
+  }
   const end = addMonthsToMonthEnd(yearEndOf(year, yearEnd), Math.min(count, 12) - 12);
   return { end, months: length, needs: null };
 }
 
 /** '2025', 'FY25', and '9M 2026', which counts from the beginning of the year. */
-function wholeYear(own: PeriodText, year: number, { yearEnd }: PeriodEvidence): ColumnPeriod {
+function wholeYear(own: PeriodText, year: number, { yearEnd, yearEndOpen }: PeriodEvidence): ColumnPeriod {
   if (!yearEnd) {
-    if (own.months !== null && own.months < 12 && !own.fiscal) {
+    if (!yearEndOpen && own.months !== null && own.months < 12 && !own.fiscal) {
       return { end: endOf(year, own.months), months: own.months, needs: null };
     }
     return { end: null, months: own.months ?? 12, needs: 'year-end' };

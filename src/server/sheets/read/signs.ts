@@ -111,8 +111,8 @@ export type Values = readonly (readonly (Decimal | null)[])[];
 
 export interface Signed {
   readonly sums: SumFound;
-  /** What to multiply the printed amount of a row with to get the stored one. */
-  readonly factorOf: (index: number) => 1 | -1;
+  /** What to multiply the printed amount of a row with to get the stored one, if the row is placed on `line`. */
+  readonly factorOf: (index: number, line: Line | null) => 1 | -1;
   /** Rows whose sign neither the block nor a sum settles. */
   readonly unsettled: ReadonlySet<number>;
   readonly costsNegative: boolean;
@@ -180,8 +180,7 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
   const sums = useSecond ? second : first;
   return {
     sums,
-    factorOf: (index) => {
-      const line = rows[index]?.line ?? null;
+    factorOf: (index, line) => {
       const contribution = sums.signs.get(index) ?? (isCost(line) && !costsNegative ? -1 : 1);
       return (turned * (isCost(line) ? -contribution : contribution)) as 1 | -1;
     },
@@ -234,7 +233,7 @@ function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): S
     ((liabilitiesNegative && LIABILITY_LINES.has(line)) || (equityNegative && EQUITY_LINES.has(line)));
   return {
     sums,
-    factorOf: (index) => (flips(rows[index]?.line ?? null) ? -1 : 1),
+    factorOf: (_index, line) => (flips(line) ? -1 : 1),
     unsettled: new Set(),
     costsNegative: false,
     liabilitiesNegative,

@@ -1,10 +1,11 @@
 /** When the borrower's financial year ends and how dates are written: from the file, from an answer, else asked. */
 import { addMonthsToMonthEnd, type PlainDate } from '#core/calendar/plainDate.ts';
+import { columnPeriod, type PeriodEvidence, type YearEnd } from './periods.ts';
 import { endsOfHeadings, type StatementTable } from './statements.ts';
+import { NO_PERIOD, type ColumnWords } from './columns.ts';
 import type { Asking } from './asking.ts';
 import { cellName, type SheetCell, type WorkbookGrid } from './cells.ts';
 import { readPeriodText, type PeriodText } from './periodText.ts';
-import type { PeriodEvidence, YearEnd } from './periods.ts';
 
 const MONTHS = [
   'January',
@@ -29,8 +30,10 @@ export function periodEvidence(
   knownYearEndMonth: number | null,
   asking: Asking,
 ): PeriodEvidence {
+  const yearEnd = yearEndOf(grid, tables, knownYearEndMonth, asking);
   return {
-    yearEnd: yearEndOf(grid, tables, knownYearEndMonth, asking),
+    yearEnd: yearEnd === 'asked' ? null : yearEnd,
+    yearEndOpen: yearEnd === 'asked',
     dayFirst: dayFirstOf(grid, tables, asking),
   };
 }
@@ -40,30 +43,66 @@ function yearEndOf(
   tables: readonly StatementTable[],
   knownMonth: number | null,
   asking: Asking,
-): YearEnd | null {
-  const labels = tables.flatMap(({ columns }) => columns.filter(({ role }) => role === 'period'));
-  const years = labels.flatMap(({ period }) =>
-    period.year !== null && period.end === null ? [period.year] : [],
+): YearEnd | 'asked' | null {
+  const labels = tables.flatMap(({ columns }) =>
+    columns.filter(({ role, period }) => role === 'period' && period.year !== null && period.end === null),
   );
-  if (years.length === 0) return knownMonth === null ? null : { month: knownMonth, namedForStart: false };
+  const ofYears = labels.filter(({ period }) => isFinancial(period));
+  const ofQuarters = labels.filter(({ period }) => !isFinancial(period));
   const stated = statedYearEnd(grid);
-  if (stated) return { month: stated.month, namedForStart: stated.year === Math.max(...years) + 1 };
-  const onBalance = monthOfBalances(tables);
-  const needsFiscal = labels.some(
-    ({ period }) =>
-      period.end === null && (period.fiscal || period.periodNumber !== null || isWholeYear(period)),
+  const onBalance = ofYears.length > 0 ? monthOfBalances(tables) : null;
+  const month = stated?.month ?? onBalance ?? knownMonth;
+  if (month === 12) return { month, namedForStart: false, calendarQuarters: true };
+  if (month === null && ofYears.length === 0) return null;
+  const latest = Math.max(0, ...ofYears.map(({ period }) => period.year ?? 0));
+  const named = stated ? namedForStartOf(stated.year, latest) : onBalance !== null ? false : null;
+  const namedForStart = ofYears.length === 0 ? false : named;
+  const calendarQuarters =
+    month === null || ofQuarters.length === 0 ? null : quartersOfBalances(ofQuarters, month, tables);
+  const isQuarterOpen = ofQuarters.length > 0 && calendarQuarters === null;
+  if (month !== null && namedForStart !== null && !isQuarterOpen) {
+    return { month, namedForStart, calendarQuarters: calendarQuarters ?? true };
+  }
+  const candidates = (month === null ? USUAL_YEAR_ENDS : [month]).flatMap((each) =>
+    each === 12
+      ? [{ month: each, namedForStart: false, calendarQuarters: true }]
+      : variants(each, namedForStart, isQuarterOpen ? null : (calendarQuarters ?? false)),
   );
-  if (onBalance !== null && needsFiscal) return { month: onBalance, namedForStart: false };
-  if (knownMonth === 12) return { month: 12, namedForStart: false };
-  if (!needsFiscal && knownMonth === null) return null;
-  const unclear = labels.filter(({ period }) => period.year !== null && period.end === null);
-  return askedYearEnd(
-    [...unclear.filter(({ period }) => period.fiscal || isWholeYear(period)), ...unclear],
-    tables,
-    knownMonth,
-    asking,
+  return askYearEnd([...ofYears, ...ofQuarters], tables, candidates, asking) ?? 'asked';
+}
+
+/** 'FY26', '2025', 'P6': means nothing without the year end. 'Q3 2026' and '9M 2026' may be of the calendar year. */
+const isFinancial = (period: PeriodText): boolean =>
+  period.fiscal || period.periodNumber !== null || isWholeYear(period);
+
+const namedForStartOf = (statedYear: number, latestLabel: number): boolean | null =>
+  statedYear === latestLabel ? false : statedYear === latestLabel + 1 ? true : null;
+
+function variants(month: number, namedForStart: boolean | null, calendarQuarters: boolean | null): YearEnd[] {
+  const both = (known: boolean | null) => (known === null ? [false, true] : [known]);
+  return both(namedForStart).flatMap((starts) =>
+    both(calendarQuarters).map((calendar) => ({ month, namedForStart: starts, calendarQuarters: calendar })),
   );
 }
+
+/** Whether the balance dates of the file are those of calendar quarters or those of the financial year's. */
+function quartersOfBalances(
+  labels: readonly ColumnWords[],
+  month: number,
+  tables: readonly StatementTable[],
+): boolean | null {
+  const ends = new Set(endsOfHeadings(tables));
+  const allThere = (calendarQuarters: boolean) =>
+    labels.every((label) => {
+      const end = endWith(label, { month, namedForStart: false, calendarQuarters });
+      return end !== null && ends.has(end);
+    });
+  const [calendar, financial] = [allThere(true), allThere(false)];
+  return calendar === financial ? null : calendar;
+}
+
+const endWith = (label: ColumnWords, yearEnd: YearEnd): PlainDate | null =>
+  columnPeriod(label, NO_PERIOD, { yearEnd, yearEndOpen: false, dayFirst: null }).end;
 
 const isWholeYear = (period: {
   quarter: number | null;
@@ -119,43 +158,41 @@ const calendarEnd = (period: PeriodText): PlainDate | null => {
     : addMonthsToMonthEnd(`${period.year}-01-31` as PlainDate, months - 1);
 };
 
-function askedYearEnd(
-  labels: readonly { heading: string; key: string; period: { fiscal: boolean; year: number | null } }[],
+function askYearEnd(
+  labels: readonly ColumnWords[],
   tables: readonly StatementTable[],
-  knownMonth: number | null,
+  candidates: readonly YearEnd[],
   asking: Asking,
 ): YearEnd | null {
   const [label] = labels;
-  const first = tables.flatMap(({ table }) => table.columns.flatMap(({ headings }) => headings))[0];
-  const year = label?.period.year ?? 2000;
-  const months = knownMonth === null ? USUAL_YEAR_ENDS : [knownMonth];
-  const options = months.flatMap((month) => {
-    const day = `${String(month).padStart(2, '0')}-${LAST_DAYS[month - 1]}`;
-    const named = {
-      value: day,
-      label: `The year ends on ${LAST_DAYS[month - 1]} ${MONTHS[month - 1]} ${year}`,
-    };
-    if (month === 12) return [named];
-    return [
-      named,
-      {
-        value: `${day}:starts`,
-        label: `The year ends on ${LAST_DAYS[month - 1]} ${MONTHS[month - 1]} ${year + 1}`,
-      },
-    ];
-  });
+  const table = tables.find(({ columns }) => columns.some((column) => column === label));
+  const cell = label && table?.table.columns[label.index]?.headings.at(-1);
   const answer = asking.ask({
     key: 'year-end',
     kind: 'year-end',
     holdsFor: 'layout',
-    text: `No sheet says when the financial year ends. Which year is '${label?.heading ?? ''}'?`,
-    where: first ? [{ sheet: first.sheet, cell: cellName(first) }] : [],
-    options,
-    accepts: (given) => /^(0[1-9]|1[0-2])-\d{2}(:starts)?$/.test(given),
+    text: `No sheet proves when the financial year ends. On which day does '${label?.heading ?? ''}' end?`,
+    where: cell ? [{ sheet: cell.sheet, cell: cellName(cell) }] : [],
+    options: candidates.map((candidate) => ({
+      value: codeOf(candidate),
+      label: `On ${(label && endWith(label, candidate)) ?? 'another day'}; the year ends on ${LAST_DAYS[candidate.month - 1]} ${MONTHS[candidate.month - 1]}`,
+    })),
+    accepts: (given) => CODE.test(given),
   });
-  if (answer === null) return null;
-  return { month: Number(answer.slice(0, 2)), namedForStart: answer.endsWith(':starts') };
+  return answer === null ? null : yearEndFrom(answer);
 }
+
+/** '03-31', '03-31:starts' for years named for their start, '03-31:calendar' for quarters of the calendar year. */
+const CODE = /^(0[1-9]|1[0-2])-\d{2}(:starts)?(:calendar)?$/;
+
+const codeOf = ({ month, namedForStart, calendarQuarters }: YearEnd): string =>
+  `${String(month).padStart(2, '0')}-${LAST_DAYS[month - 1]}${namedForStart ? ':starts' : ''}${calendarQuarters && month !== 12 ? ':calendar' : ''}`;
+
+const yearEndFrom = (answer: string): YearEnd => ({
+  month: Number(answer.slice(0, 2)),
+  namedForStart: answer.includes(':starts'),
+  calendarQuarters: answer.startsWith('12') || answer.includes(':calendar'),
+});
 
 function dayFirstOf(grid: WorkbookGrid, tables: readonly StatementTable[], asking: Asking): boolean | null {
   const [ambiguous] = tables.flatMap(({ columns, table }) =>
