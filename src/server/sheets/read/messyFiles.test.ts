@@ -1,4 +1,4 @@
-/** Ways in which borrowers' files are messy, and what is done with each: practice.md 5, by its numbers. */
+/** Ways in which borrowers' files are messy, and what is done with each. Common practice, no source. */
 import { afterAll, describe, expect, test } from 'vitest';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';
 import { gridWorkbook, type Typed, type TypedSheets } from '../../../../tests/support/gridWorkbook.ts';
