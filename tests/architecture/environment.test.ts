@@ -2,14 +2,14 @@
 import { readFileSync } from 'node:fs';
 import { expect, test } from 'vitest';
 import { SETTING_NAMES } from '../../src/server/config/env.ts';
-import { trackedFiles } from './trackedFiles.ts';
+import { repositoryFiles } from './repositoryFiles.ts';
 
 /** What Node, npm, vitest and CI set of their own. */
 const NOT_OURS = ['NODE_ENV', 'CI', 'INIT_CWD'];
 /** How our own programs tell each other something; nobody sets these by hand. */
 const BETWEEN_PROGRAMS = ['CALLER_FOLDER', 'UNDERKEEL_SUPERVISED', 'TEST_TOTALS'];
 
-const sources = trackedFiles().filter((file) =>
+const sources = repositoryFiles().filter((file) =>
   /^(src|jobs|seeders|tests)\/.*\.(ts|tsx|mjs|astro)$/.test(file),
 );
 const readIn = (file: string): string[] =>

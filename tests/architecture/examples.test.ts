@@ -12,7 +12,7 @@ import ts from 'typescript';
 import { describe, expect, test } from 'vitest';
 import * as fixture from '../../src/core/example.fixture.ts';
 import { Decimal } from '../../src/core/money/decimal.ts';
-import { trackedFiles } from './trackedFiles.ts';
+import { repositoryFiles } from './repositoryFiles.ts';
 
 interface CoreFunction {
   readonly file: string;
@@ -21,7 +21,7 @@ interface CoreFunction {
   readonly examples: readonly string[];
 }
 
-const modules = trackedFiles().filter(
+const modules = repositoryFiles().filter(
   (file) => file.startsWith('src/core/') && /(?<!\.test|\.fixture)\.ts$/.test(file),
 );
 const functions = modules.flatMap(exportedFunctions);

@@ -2,9 +2,9 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { describe, expect, test } from 'vitest';
-import { trackedFiles } from './trackedFiles.ts';
+import { repositoryFiles } from './repositoryFiles.ts';
 
-const files = trackedFiles();
+const files = repositoryFiles();
 const pages = files.filter((file) => file.endsWith('.md'));
 const doors = pages.filter((file) => file !== 'README.md' && file.endsWith('README.md'));
 const textOf = (file: string): string => readFileSync(file, 'utf8');

@@ -67,7 +67,7 @@ const balance = (
 afterAll(() => readingPool().close());
 
 describe('layout', () => {
-  test('no. 19: three statements below one another are told apart by their headings', async () => {
+  test('three statements below one another are told apart by their headings', async () => {
     const reading = await read({
       Accounts: [
         ['in thousands of US dollars'],
@@ -104,7 +104,7 @@ describe('layout', () => {
     });
   });
 
-  test('no. 20: assets and liabilities side by side are two tables of one balance sheet', async () => {
+  test('assets and liabilities side by side are two tables of one balance sheet', async () => {
     const reading = await read({
       Bilanz: [
         ['Bilanz zum 31.12.2025 in TEUR'],
@@ -124,7 +124,7 @@ describe('layout', () => {
     expect(reading.checks).toContainEqual(expect.objectContaining({ code: 'balance', outcome: 'ties' }));
   });
 
-  test('no. 21: entities beside one another are asked about and never added', async () => {
+  test('entities beside one another are asked about and never added', async () => {
     const sheets = {
       'P&L': [
         ['EUR thousand'],
@@ -144,7 +144,7 @@ describe('layout', () => {
     });
   });
 
-  test('no. 24: a total of split revenue is taken and its parts are not added to it', async () => {
+  test('a total of split revenue is taken and its parts are not added to it', async () => {
     const rows: Typed[][] = [
       ['EUR thousand'],
       [null, 'Q3 2026', 'Q3 2025'],
@@ -165,7 +165,7 @@ describe('layout', () => {
     expect(reading.outcome).toBe('ready');
   });
 
-  test('no. 25: a total that stands above its parts is taken once', async () => {
+  test('a total that stands above its parts is taken once', async () => {
     const reading = await read({
       BS: [
         ['EUR thousand'],
@@ -184,7 +184,7 @@ describe('layout', () => {
     });
   });
 
-  test('no. 32: note numbers and shares of sales between the periods are left out', async () => {
+  test('note numbers and shares of sales between the periods are left out', async () => {
     const reading = await read({
       'P&L': [
         ['Quarterly income statement, EUR thousand'],
@@ -204,7 +204,7 @@ describe('layout', () => {
     });
   });
 
-  test('no. 12: hidden rows that carry amounts are asked about', async () => {
+  test('hidden rows that carry amounts are asked about', async () => {
     const hide: Change = (workbook) => {
       const row = workbook.getWorksheet('BS')?.getRow(3);
       if (row) row.hidden = true;
@@ -219,7 +219,7 @@ describe('layout', () => {
     expect(Object.keys(figures(left))).not.toContain('cash 2026-09-30 0');
   });
 
-  test('no. 11: two sheets with different figures for one period are asked about', async () => {
+  test('two sheets with different figures for one period are asked about', async () => {
     const sheets = { 'P&L': income(['Q3 2026'], [2000]), 'P&L old': income(['Q3 2026'], [1800]) };
     const asked = await read(sheets);
     expect([kinds(asked), asked.facts]).toEqual([['which-sheets'], []]);
@@ -242,7 +242,7 @@ describe('layout', () => {
 });
 
 describe('numbers', () => {
-  test('no. 33: a column out of scale with its neighbours is asked about before it is taken', async () => {
+  test('a column out of scale with its neighbours is asked about before it is taken', async () => {
     const sheets = { 'P&L': income(['Q1 2026', 'Q2 2026', 'Q3 2026'], [2000, 2100, 2_150_000]) };
     const asked = await read(sheets);
     expect(kinds(asked)).toEqual(['scale-jump']);
@@ -252,13 +252,13 @@ describe('numbers', () => {
     expect(figures(answered)['revenue 2026-09-30 3']).toBe('2150000');
   });
 
-  test('no. 33: a file a hundred times off the figures on file is asked about', async () => {
+  test('a file a hundred times off the figures on file is asked about', async () => {
     const sheets = { 'P&L': income(['Q3 2026'], [2000]) };
     expect(kinds(await read(sheets, { lastQuarterRevenue: '1990000' }))).toEqual([]);
     expect(kinds(await read(sheets, { lastQuarterRevenue: '1990000000' }))).toEqual(['scale-jump']);
   });
 
-  test('no. 34: sheets in different units are each read in their own', async () => {
+  test('sheets in different units are each read in their own', async () => {
     const reading = await read({
       'P&L': income(['Q3 2026'], [2000]),
       BS: balance(['30 Sep 2026'], [900_000], 'in EUR'),
@@ -270,7 +270,7 @@ describe('numbers', () => {
     expect(codes(reading)).toContain('mixed-scale');
   });
 
-  test('no. 33: a format that shows thousands of what the cell stores is not applied twice', async () => {
+  test('a format that shows thousands of what the cell stores is not applied twice', async () => {
     const reading = await read({ 'P&L': income(['Q3 2026'], [2_000_000]) }, {}, (workbook) => {
       workbook.worksheets[0]?.eachRow((row) =>
         row.eachCell((cell) => Object.assign(cell, { numFmt: '#,##0,' })),
@@ -279,7 +279,7 @@ describe('numbers', () => {
     expect(figures(reading)['revenue 2026-09-30 3']).toBe('2000000');
   });
 
-  test('no. 37: liabilities as negative figures are turned as a block', async () => {
+  test('liabilities as negative figures are turned as a block', async () => {
     const reading = await read({
       BS: [
         ['EUR thousand'],
@@ -303,7 +303,7 @@ describe('numbers', () => {
     expect(reading.checks).toContainEqual(expect.objectContaining({ code: 'balance', outcome: 'ties' }));
   });
 
-  test('no. 38: a text file in German notation is read by its own evidence', async () => {
+  test('a text file in German notation is read by its own evidence', async () => {
     const text =
       'Gewinn- und Verlustrechnung;;\nTEUR;9M 2026;9M 2025\nUmsatzerlöse;1.234,5;1.100,0\nMaterialaufwand;-700,5;-650,0\nRohergebnis;534,0;450,0\n';
     const reading = await readWorkbook(Buffer.from(text, 'latin1'), 'export.csv', { ...NOTHING_KNOWN });
@@ -313,7 +313,7 @@ describe('numbers', () => {
     });
   });
 
-  test('no. 40: a blank is missing, a dash is zero', async () => {
+  test('a blank is missing, a dash is zero', async () => {
     const reading = await read({
       'P&L': [
         ['EUR thousand'],
@@ -329,13 +329,13 @@ describe('numbers', () => {
     expect(Object.keys(found)).not.toContain('sga 2025-09-30 3');
   });
 
-  test('no. 41: an error in a ratio that is not needed is a note', async () => {
+  test('an error in a ratio that is not needed is a note', async () => {
     const rows: Typed[][] = [...income(['Q3 2026'], [2000]), ['EBITDA margin', { error: '#DIV/0!' }]];
     const reading = await read({ 'P&L': rows });
     expect([reading.outcome, codes(reading)]).toEqual(['ready', expect.arrayContaining(['errors-ignored'])]);
   });
 
-  test('no. 27: a misspelt label is taken only with the sign that its total proves', async () => {
+  test('a misspelt label is taken only with the sign that its total proves', async () => {
     const rows = income(['Q3 2026', 'Q3 2025'], [2000, 1900]).map(([label = null, ...amounts]): Typed[] => [
       label === 'Administrative expenses' ? 'Administrtive expenses' : label,
       ...amounts,
@@ -345,7 +345,7 @@ describe('numbers', () => {
 });
 
 describe('periods and meaning', () => {
-  test('no. 54: a financial year is asked for, unless the balance sheet dates prove it', async () => {
+  test('a financial year is asked for, unless the balance sheet dates prove it', async () => {
     const asked = await read({ 'P&L': income(['FY26', 'FY25'], [2000, 1900]) });
     expect([kinds(asked), asked.facts]).toEqual([['year-end'], []]);
     const named = await read({ 'P&L': income(['FY26'], [2000]) }, { answers: { 'year-end': '03-31' } });
@@ -362,7 +362,7 @@ describe('periods and meaning', () => {
     expect(figures(proven)).toHaveProperty(['revenue 2026-03-31 12']);
   });
 
-  test("no. 54: 'Q3 2026' of a borrower whose year ends in March is asked about", async () => {
+  test("'Q3 2026' of a borrower whose year ends in March is asked about", async () => {
     const asked = await read({ 'P&L': income(['Q3 2026'], [2000]) }, { fiscalYearEndMonth: 3 });
     expect([kinds(asked), asked.facts]).toEqual([['year-end'], []]);
     const answers = { 'year-end': '03-31:calendar' };
@@ -375,20 +375,20 @@ describe('periods and meaning', () => {
     expect(figures(proven)).toHaveProperty(['revenue 2026-09-30 3']);
   });
 
-  test('no. 51: months and a year to date are asked about apart, and never taken for one another', async () => {
+  test('months and a year to date are asked about apart, and never taken for one another', async () => {
     const reading = await read({
       'P&L': income(['Jul-26', 'Aug-26', 'Sep-26', 'YTD Sep-26'], [100, 110, 120, 990]),
     });
     expect([kinds(reading), reading.facts]).toEqual([['period-length', 'period-length'], []]);
   });
 
-  test('no. 52: thirteen weeks are a quarter that ends on its own last day', async () => {
+  test('thirteen weeks are a quarter that ends on its own last day', async () => {
     const reading = await read({ 'P&L': income(['13 weeks ended 27 Sep 2026'], [2000]) });
     expect(reading.facts[0]).toMatchObject({ periodStart: '2026-06-29', periodEnd: '2026-09-27', months: 3 });
     expect(codes(reading)).toContain('week-year');
   });
 
-  test('no. 55: two versions of one year are asked about', async () => {
+  test('two versions of one year are asked about', async () => {
     const sheets = {
       'P&L': income(['Year ended 31 December 2025', 'FY24 restated', 'FY24'], [2000, 1900, 1950]),
     };
@@ -401,7 +401,7 @@ describe('periods and meaning', () => {
     );
   });
 
-  test('no. 56: a sheet called budget is no actual', async () => {
+  test('a sheet called budget is no actual', async () => {
     const reading = await read({
       'P&L': income(['Q3 2026'], [2000]),
       'P&L Budget': income(['Q3 2026'], [2500]),
@@ -410,7 +410,7 @@ describe('periods and meaning', () => {
     expect(codes(reading)).toContain('scenario-columns');
   });
 
-  test('no. 50: a date that can be read as two days is asked about', async () => {
+  test('a date that can be read as two days is asked about', async () => {
     const asked = await read({ BS: balance(['03/04/2026'], [100]) });
     expect([kinds(asked), asked.facts]).toEqual([['date-order'], []]);
     const american = await read({ BS: balance(['03/04/2026'], [100]) }, { answers: { 'date-order': 'mdy' } });
@@ -420,7 +420,7 @@ describe('periods and meaning', () => {
     ]);
   });
 
-  test('no. 64: a sheet with personal data is neither read nor shown', async () => {
+  test('a sheet with personal data is neither read nor shown', async () => {
     const reading = await read({
       'P&L': income(['Q3 2026'], [2000]),
       'Payroll Sept': [
