@@ -72,12 +72,18 @@ function* citationsIn(text: string): Generator<string> {
     /\b([\w-]+\.md)\b((?:(?:,| and| to|:| Part C)? ?[A-C]?\d[\d.]*)*)/g,
   )) {
     yield page ?? '';
-    for (const [section] of (rest ?? '').matchAll(/[A-C]\d+/g)) yield `${page} ${section}`;
+    for (const [section] of (rest ?? '').matchAll(/[A-C]\d+|(?<=Part C.*)\d\.\d/g))
+      yield `${page} ${section}`;
   }
 }
 
 function isThere(cited: string): boolean {
   const [name = '', section] = cited.split(' ');
   const page = pages.find((file) => file === name || file.endsWith(`/${name}`));
-  return page !== undefined && (section === undefined || textOf(page).includes(`\n## ${section}.`));
+  return page !== undefined && (section === undefined || hasHeading(textOf(page), section));
 }
+
+const hasHeading = (text: string, section: string): boolean =>
+  text.includes(`\n## ${section}.`) ||
+  text.includes(`\n### ${section} `) ||
+  text.includes(`\n- **${section} `);
