@@ -26,11 +26,15 @@ function endProcess(pid, signal = 'SIGTERM') {
 }
 
 /**
+ * A process told to end that answers with a code of its own (astro dev: 143) would count as failed and be started
+ * again; `restarts` 0 keeps development from that.
+ *
  * @param {{ name: string, command: string }[]} processes `command` is what node is given, separated by spaces
  * @param {NodeJS.ProcessEnv} env
+ * @param {number} restarts how often one that failed is started again
  * @returns {{ ended: Promise<boolean>, stop: () => void }} `ended`: did all end without a fault?
  */
-export function serve(processes, env) {
+export function serve(processes, env, restarts) {
   const logger = new Logger({ prefixFormat: 'name' });
   const abortController = new AbortController();
   const { commands, result } = createConcurrently(
@@ -47,7 +51,7 @@ export function serve(processes, env) {
         new LogOutput({ logger }),
         new LogExit({ logger }),
         new KillOnSignal({ process, abortController }),
-        new RestartProcess({ logger, delay: 1_000, tries: 3 }),
+        new RestartProcess({ logger, delay: 1_000, tries: restarts }),
         new KillOthers({
           logger,
           abortController,

@@ -155,6 +155,7 @@ async function serveUntilTold(env, { host, port, sinkPort, appUrl, hasSink, sign
       { name: 'web', command: web },
     ],
     env,
+    isDevelopment ? 0 : 3,
   );
   endings.push(async () => {
     stop();
