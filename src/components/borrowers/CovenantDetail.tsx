@@ -1,5 +1,6 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import type { BridgeRow, CovenantView } from '../../contracts/borrowers.ts';
+import { spokenTest } from '../../core/covenants/spokenTest.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../core/money/print.ts';
 import { OutcomeText } from '../marks/OutcomeText.tsx';
@@ -9,7 +10,7 @@ import { amountText, limitText, periodText, sourceHref, testedText } from './fig
 
 /** Headroom in every form, what the test would be otherwise, and the way from reported to covenant figures. */
 export function CovenantDetail({ covenant }: { readonly covenant: CovenantView }) {
-  const tested = covenant.tests.findLast((test) => test.tested !== null);
+  const tested = spokenTest(covenant.tests);
   return (
     <div className="stack">
       {covenant.pattern && covenant.pattern.inBand > 0 && (

@@ -1,5 +1,6 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import type { CovenantView } from '../../contracts/borrowers.ts';
+import { spokenTest } from '../../core/covenants/spokenTest.ts';
 import { HeadroomText, OutcomeText } from '../marks/OutcomeText.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
 import { Cell, HeadCell, NameCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
@@ -31,7 +32,7 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
       <TableBody>
         {covenants.map((covenant) => {
           const test = covenant.tests.at(-1);
-          const tested = covenant.tests.findLast((each) => each.tested !== null) ?? test;
+          const tested = spokenTest(covenant.tests);
           return (
             <Row key={covenant.id} current={covenant.id === selected}>
               <NameCell

@@ -2,6 +2,7 @@ import type { BridgeRow, CovenantView, SourceLink, TestView } from '../../contra
 import type { Assessment } from '../../core/assess.ts';
 import type { Covenant } from '../../core/covenants/covenant.ts';
 import type { CovenantTest } from '../../core/covenants/covenantTest.ts';
+import { spokenTest } from '../../core/covenants/spokenTest.ts';
 import { whatIsLeft } from '../../core/covenants/whatIsLeft.ts';
 import { measureUnit } from '../../core/measures/index.ts';
 import type { InputUsed } from '../../core/measures/measure.ts';
@@ -21,7 +22,7 @@ export function toCovenantViews(
 ): CovenantView[] {
   return covenants.map((covenant) => {
     const tests = assessment.tests.filter((test) => test.covenantId === covenant.id);
-    const shown = tests.findLast((test) => test.tested !== null) ?? tests.at(-1);
+    const shown = spokenTest(tests);
     const check = beside.checks.find(
       (one) => one.covenantId === covenant.id && one.testDate === shown?.testDate,
     );
