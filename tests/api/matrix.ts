@@ -70,6 +70,10 @@ export const MATRIX: Readonly<Record<string, Sample>> = {
 
   'GET borrowers/index': list('read borrower', '/borrowers'),
   'GET borrowers/[id]/index': get('read borrower', (desk) => `/borrowers/${desk.borrower}`),
+  'GET borrowers/[id]/review-sheet': get(
+    'read borrower',
+    (desk) => `/borrowers/${desk.borrower}/review-sheet`,
+  ),
   'GET borrowers/[id]/statements': get('read borrower', (desk) => `/borrowers/${desk.borrower}/statements`),
   'GET statements/[id]/cells/[line]': get(
     'read borrower',

@@ -104,7 +104,14 @@ const unitOf = (amount: Decimal, places: number) =>
       .gte(1),
   );
 
-function placesThatShowTheSide(value: Decimal, line: Decimal | null, fewest: number): number {
+/**
+ * The fewest decimals, from `fewest` up, at which a figure prints on the side of the line that it is on.
+ *
+ * Both in the same unit. Source: practice, a result is compared unrounded and must not look otherwise.
+ *
+ * @example placesThatShowTheSide(decimal('3.504'), decimal('3.5'), 2) // => 3
+ */
+export function placesThatShowTheSide(value: Decimal, line: Decimal | null, fewest: number): number {
   if (!line || value.eq(line)) return fewest;
   const side = value.comparedTo(line);
   for (let places = fewest; places < MOST_PLACES; places += 1)

@@ -24,6 +24,8 @@ const SIGN_IN_ACCOUNT: Limit = { name: 'sign-in-account', points: 50, windowSeco
 export const FORGOT_ADDRESS: Limit = { name: 'forgot-address', points: 20, windowSeconds: 3_600 };
 export const FORGOT_ACCOUNT: Limit = { name: 'forgot-account', points: 3, windowSeconds: 3_600 };
 export const ONE_TIME_LINK: Limit = { name: 'one-time-link', points: 30, windowSeconds: QUARTER_HOUR };
+/** A workbook costs work, and a person reads one at a time. */
+export const REVIEW_EXPORTS: Limit = { name: 'review-exports', points: 30, windowSeconds: 60 };
 
 const KNOWN_ADDRESS: Limit = { name: 'known-address', points: 1, windowSeconds: 30 * 86_400 };
 

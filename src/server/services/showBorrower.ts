@@ -18,47 +18,55 @@ import { borrowerWatch } from './listWatchlist.ts';
 import type { Outcome } from './write.ts';
 
 /** One borrower as its page shows it, from the stored result: nothing is computed for the screen. */
-export function showBorrower(actor: PersonActor, id: number): Promise<Outcome<BorrowerView>> {
+export async function showBorrower(actor: PersonActor, id: number): Promise<Outcome<BorrowerView>> {
+  const view = await inTransaction((tx) => borrowerView(tx, actor, id));
+  return view ? ok(view) : err({ kind: 'not-found', what: 'borrower' });
+}
+
+/** The same inside a transaction; null where there is no such borrower in the person's reach. */
+export async function borrowerView(
+  tx: Transaction,
+  actor: PersonActor,
+  id: number,
+): Promise<BorrowerView | null> {
   const scope = deskScope(actor.person, 'read borrower');
-  return inTransaction(async (tx) => {
-    const borrower = await findBorrower(tx, id, scope);
-    if (!borrower) return err({ kind: 'not-found', what: 'borrower' });
-    const stored = await findCurrentAssessment(tx, id);
-    const facilities = await listFacilities(tx, id);
-    const query = alertQuery.parse({ borrowerId: id, perPage: 100, sort: 'severity' });
-    const alerts = await listAlerts(tx, scope, alertFilter(actor, query), query);
-    const watch = await borrowerWatch(tx, scope, id, actor.now);
-    return ok({
-      id: borrower.id,
-      name: borrower.name,
-      legalForm: borrower.legalForm,
-      lei: borrower.lei,
-      isListed: borrower.isListed,
-      sectorCode: borrower.sectorCode,
-      sectorLabel: borrower.sectorLabel,
-      country: borrower.country,
-      currency: borrower.currency,
-      fiscalYearEndMonth: borrower.fiscalYearEndMonth,
-      deskId: borrower.deskId,
-      deskName: borrower.deskName,
-      managerId: borrower.relationshipManagerId,
-      managerName: borrower.relationshipManager,
-      analystName: borrower.analyst,
-      facilities: facilities.map(({ startsOn: _startsOn, limit, drawn, ...facility }) => ({
-        ...facility,
-        limit: limit.toFixed(),
-        drawn: drawn.toFixed(),
-      })),
-      computed: stored && computedFacts(stored),
-      covenants: stored ? await covenantViews(tx, id, stored, facilities) : [],
-      quality: stored?.assessment.quality ?? null,
-      alerts: await withStrips(tx, alerts.rows, actor.now),
-      ...watch,
-      mayImport: may(actor.person, 'import figures', borrower.deskId),
-      mayPropose: may(actor.person, 'propose', borrower.deskId),
-      deskMembers: await listDeskMembers(tx, borrower.deskId),
-    });
-  });
+  const borrower = await findBorrower(tx, id, scope);
+  if (!borrower) return null;
+  const stored = await findCurrentAssessment(tx, id);
+  const facilities = await listFacilities(tx, id);
+  const query = alertQuery.parse({ borrowerId: id, perPage: 100, sort: 'severity' });
+  const alerts = await listAlerts(tx, scope, alertFilter(actor, query), query);
+  const watch = await borrowerWatch(tx, scope, id, actor.now);
+  return {
+    id: borrower.id,
+    name: borrower.name,
+    legalForm: borrower.legalForm,
+    lei: borrower.lei,
+    isListed: borrower.isListed,
+    sectorCode: borrower.sectorCode,
+    sectorLabel: borrower.sectorLabel,
+    country: borrower.country,
+    currency: borrower.currency,
+    fiscalYearEndMonth: borrower.fiscalYearEndMonth,
+    deskId: borrower.deskId,
+    deskName: borrower.deskName,
+    managerId: borrower.relationshipManagerId,
+    managerName: borrower.relationshipManager,
+    analystName: borrower.analyst,
+    facilities: facilities.map(({ startsOn: _startsOn, limit, drawn, ...facility }) => ({
+      ...facility,
+      limit: limit.toFixed(),
+      drawn: drawn.toFixed(),
+    })),
+    computed: stored && computedFacts(stored),
+    covenants: stored ? await covenantViews(tx, id, stored, facilities) : [],
+    quality: stored?.assessment.quality ?? null,
+    alerts: await withStrips(tx, alerts.rows, actor.now),
+    ...watch,
+    mayImport: may(actor.person, 'import figures', borrower.deskId),
+    mayPropose: may(actor.person, 'propose', borrower.deskId),
+    deskMembers: await listDeskMembers(tx, borrower.deskId),
+  };
 }
 
 const computedFacts = (stored: StoredAssessment): ComputedFacts => ({

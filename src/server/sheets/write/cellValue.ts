@@ -12,7 +12,7 @@ interface Written {
 
 /** The format of text: what is typed over it later stays text as well. */
 const TEXT = '@';
-const DAY = 'd mmm yyyy';
+const DAY = 'yyyy-mm-dd';
 
 export function writtenCell(cell: SheetCell): Written {
   switch (cell.kind) {

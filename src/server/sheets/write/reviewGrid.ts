@@ -13,10 +13,11 @@ import { BODY_POINTS, BORDERS, FONTS } from './cellStyle.ts';
 import { put, writtenCell, writtenText } from './cellValue.ts';
 
 /** Width of one grid column, in characters of the workbook's own font of 11 points. */
-export const GRID_WIDTH = 8.4;
+export const GRID_WIDTH = 8.9;
 
 const CHARACTERS = GRID_WIDTH * (11 / BODY_POINTS);
-const LINE_POINTS = BODY_POINTS * 1.38;
+const GAP_POINTS = 6;
+export const LINE_POINTS = BODY_POINTS * 1.38;
 
 /** Where the next row goes. */
 export interface Cursor {
@@ -35,8 +36,10 @@ interface Placed {
 
 /** "Not recorded" stands beside its heading, so that an empty section takes one line. */
 export function writeSection(cursor: Cursor, { number, title, isRecorded, blocks }: SheetSection): void {
-  cursor.row += isRecorded ? 1 : 0;
-  const { worksheet, row } = cursor;
+  const { worksheet } = cursor;
+  worksheet.getRow(cursor.row).height = GAP_POINTS;
+  cursor.row += 1;
+  const { row } = cursor;
   for (let column = 1; column <= GRID_COLUMNS; column += 1)
     worksheet.getCell(row, column).border = BORDERS.section;
   const beside = { border: BORDERS.section, alignment: { vertical: 'middle' } } as const;
@@ -130,8 +133,12 @@ function writeTable(cursor: Cursor, { caption, columns, rows }: SheetTable): voi
       }),
     );
     for (const { label, place } of below)
-      writeText(cursor, `${label}: ${row[place]?.text ?? ''}`, { font: FONTS.second, border: BORDERS.row });
+      writeText(cursor, `${label}: ${row[place]?.text ?? ''}`, {
+        font: FONTS.second,
+        border: place === below.at(-1)?.place ? BORDERS.row : {},
+      });
   }
+  cursor.worksheet.getRow(cursor.row).height = GAP_POINTS;
   cursor.row += 1;
 }
 
@@ -155,10 +162,14 @@ function writeRow(cursor: Cursor, placed: readonly Placed[]): void {
     });
     column += span;
   }
-  const lines = Math.max(1, ...placed.map(({ cell, span }) => linesOf(cell.text, span * CHARACTERS)));
+  const lines = Math.max(1, ...placed.map(({ cell, span }) => linesIn(cell, span * CHARACTERS)));
   worksheet.getRow(row).height = lines * LINE_POINTS + 3;
   cursor.row += 1;
 }
 
-const linesOf = (text: string, width: number): number =>
+/** Numbers and days never break. */
+const linesIn = (cell: SheetCell, width: number): number =>
+  cell.kind === 'figure' || cell.kind === 'day' ? 1 : linesOf(cell.text, width);
+
+export const linesOf = (text: string, width: number): number =>
   text.split('\n').reduce((lines, part) => lines + Math.max(1, Math.ceil(part.length / width)), 0);

@@ -4,6 +4,7 @@ import type { ReviewSheet, SheetSource } from '../../../core/reviewSheet.ts';
 import { BORDERS, FONTS } from './cellStyle.ts';
 import { put, writtenAmount, writtenDay, writtenText } from './cellValue.ts';
 import { pageSetup } from './printSetup.ts';
+import { LINE_POINTS, linesOf } from './reviewGrid.ts';
 
 interface Column {
   readonly label: string;
@@ -13,19 +14,19 @@ interface Column {
 }
 
 const COLUMNS: readonly Column[] = [
-  { label: 'Used in', width: 26, value: ({ usedIn }) => writtenText(usedIn) },
-  { label: 'Line', width: 30, value: ({ line }) => writtenText(line) },
-  { label: 'Period', width: 24, value: ({ period }) => writtenText(period) },
-  { label: 'Period end', width: 12, value: ({ periodEnd }) => writtenDay(periodEnd) },
-  { label: 'Amount', width: 14, isNumeric: true, value: ({ amount }) => writtenAmount(amount) },
+  { label: 'Used in', width: 20, value: ({ usedIn }) => writtenText(usedIn) },
+  { label: 'Line', width: 26, value: ({ line }) => writtenText(line) },
+  { label: 'Period', width: 22, value: ({ period }) => writtenText(period) },
+  { label: 'Period end', width: 10, value: ({ periodEnd }) => writtenDay(periodEnd) },
+  { label: 'Amount', width: 13, isNumeric: true, value: ({ amount }) => writtenAmount(amount) },
   { label: 'Currency', width: 9, value: ({ currency }) => writtenText(currency) },
-  { label: 'Standing', width: 26, value: ({ standing }) => writtenText(standing) },
-  { label: 'Received on', width: 12, value: ({ receivedOn }) => writtenDay(receivedOn) },
-  { label: 'File', width: 30, value: ({ fileName }) => writtenText(fileName ?? 'no file') },
-  { label: 'Sheet', width: 18, value: ({ sheet }) => writtenText(sheet) },
-  { label: 'Cell', width: 10, value: ({ cells }) => writtenText(cells) },
-  { label: 'As it stands in the cell', width: 20, value: ({ rawText }) => writtenText(rawText) },
-  { label: 'SHA-256 of the file', width: 36, value: ({ sha256 }) => writtenText(sha256 ?? '') },
+  { label: 'Standing', width: 24, value: ({ standing }) => writtenText(standing) },
+  { label: 'Received on', width: 11, value: ({ receivedOn }) => writtenDay(receivedOn) },
+  { label: 'File', width: 24, value: ({ fileName }) => writtenText(fileName ?? 'no file') },
+  { label: 'Sheet', width: 16, value: ({ sheet }) => writtenText(sheet) },
+  { label: 'Cell', width: 8, value: ({ cells }) => writtenText(cells) },
+  { label: 'As in the cell', width: 12, value: ({ rawText }) => writtenText(rawText) },
+  { label: 'SHA-256 of the file', width: 35, value: ({ sha256 }) => writtenText(sha256 ?? '') },
 ];
 
 const HEAD_ROW = 3;
@@ -46,24 +47,37 @@ export function writeSources(workbook: ExcelJS.Workbook, sheet: ReviewSheet): vo
       font: FONTS.second,
     },
   );
-  const alignment = ({ isNumeric }: Column) =>
-    ({ horizontal: isNumeric ? 'right' : 'left', vertical: 'top', wrapText: true }) as const;
   for (const [place, column] of COLUMNS.entries())
     put(worksheet.getCell(HEAD_ROW, place + 1), writtenText(column.label), {
       font: FONTS.second,
       border: BORDERS.head,
-      alignment: { ...alignment(column), vertical: 'bottom' },
+      alignment: { ...alignmentOf(place), vertical: 'bottom' },
     });
-  for (const [row, source] of sheet.sources.entries())
-    for (const [place, column] of COLUMNS.entries())
-      put(worksheet.getCell(HEAD_ROW + 1 + row, place + 1), column.value(source), {
-        font: column.isNumeric ? FONTS.name : FONTS.body,
-        border: BORDERS.row,
-        alignment: alignment(column),
-      });
+  for (const [at, source] of sheet.sources.entries()) writeSource(worksheet, HEAD_ROW + 1 + at, source);
   if (sheet.sources.length > 0)
     worksheet.autoFilter = {
       from: { row: HEAD_ROW, column: 1 },
       to: { row: HEAD_ROW + sheet.sources.length, column: COLUMNS.length },
     };
 }
+
+function writeSource(worksheet: ExcelJS.Worksheet, row: number, source: SheetSource): void {
+  let lines = 1;
+  for (const [place, { isNumeric, width, value }] of COLUMNS.entries()) {
+    const written = value(source);
+    put(worksheet.getCell(row, place + 1), written, {
+      font: isNumeric ? FONTS.name : FONTS.body,
+      border: BORDERS.row,
+      alignment: alignmentOf(place),
+    });
+    if (typeof written.value === 'string') lines = Math.max(lines, linesOf(written.value, width));
+  }
+  worksheet.getRow(row).height = lines * LINE_POINTS + 3;
+}
+
+const alignmentOf = (place: number): Partial<ExcelJS.Alignment> => ({
+  horizontal: COLUMNS[place]?.isNumeric ? 'right' : 'left',
+  indent: COLUMNS[place - 1]?.isNumeric ? 1 : 0,
+  vertical: 'top',
+  wrapText: true,
+});
