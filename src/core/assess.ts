@@ -2,6 +2,7 @@
 import type { AlertFinding } from './alerts/alert.ts';
 import { findingsOf } from './alerts/alertRules.ts';
 import type { BorrowerInputs } from './borrowerInputs.ts';
+import { reportingMonthEnd } from './calendar/fiscalYear.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
 import { testDates } from './covenants/levels.ts';
@@ -12,6 +13,7 @@ import { METHOD_VERSION, type Policy } from './policy.ts';
 import type { CrossSection } from './quality/crossSection.ts';
 import { reportingQuality } from './quality/reportingQuality.ts';
 import type { ReportingQuality } from './quality/score.ts';
+import { openBooks, type Books } from './statements/statementBook.ts';
 
 export interface Assessment {
   readonly borrowerId: number;
@@ -39,8 +41,9 @@ export function assess(
   policy: Policy,
   asOf: PlainDate,
 ): Assessment {
-  const tests = allTests(inputs, policy, asOf);
-  const quality = reportingQuality(inputs, crossSection, policy, asOf);
+  const books = openBooks(inputs, asOf);
+  const tests = allTests(inputs, books, policy, asOf);
+  const quality = reportingQuality(inputs, books, crossSection, policy, asOf);
   const covenantIds = inputs.covenants.map(({ id }) => id);
   const patterns = covenantIds.map((id) => justPassingOf(tests, id, policy.repeated.ofLast));
   return {
@@ -57,14 +60,16 @@ export function assess(
 }
 
 /** Every test date up to the day; those before the first figures that are kept here are left out. */
-function allTests(inputs: BorrowerInputs, policy: Policy, asOf: PlainDate): readonly CovenantTest[] {
-  const { covenants, statements, fiscalYearEndMonth } = inputs;
-  return covenants.flatMap((covenant) => {
-    const periodEnds = statements
-      .filter(({ scope }) => scope === covenant.scope)
-      .map(({ periodEnd }) => periodEnd);
+const allTests = (
+  { covenants }: BorrowerInputs,
+  books: Books,
+  policy: Policy,
+  asOf: PlainDate,
+): readonly CovenantTest[] =>
+  covenants.flatMap((covenant) => {
+    const book = books[covenant.scope];
+    const [first] = book.current;
     return testDates(covenant, asOf)
-      .filter((date) => periodEnds.length === 0 || periodEnds.some((periodEnd) => periodEnd <= date))
-      .map((date) => testCovenant(covenant, statements, date, fiscalYearEndMonth, policy, asOf));
+      .filter((date) => !first || reportingMonthEnd(first.periodEnd) <= date)
+      .map((date) => testCovenant(covenant, book, date, policy, asOf));
   });
-}

@@ -19,6 +19,7 @@ import { buildCrossSection } from './quality/crossSection.ts';
 import { peerInputs, peerInputsOfQuarters } from './quality/peerInputs.ts';
 import { scoreQuarter } from './quality/quarterScore.ts';
 import { buildStatement } from './statements/statement.fixture.ts';
+import { bookOf, openBooks } from './statements/statementBook.ts';
 
 export {
   buildAddBack,
@@ -30,6 +31,7 @@ export {
   buildStatement,
   decimal,
   netLeverage,
+  openBooks,
   POLICY_VERSION_1,
   ZERO,
 };
@@ -62,13 +64,13 @@ export const statements = [
 export const covenant = buildCovenant({
   levels: [buildLevel('2025-01-01', '2026-12-31', '3.5'), buildLevel('2027-01-01', null, '2.75')],
 });
-export const test = testCovenant(covenant, statements, '2026-09-30', 12, POLICY_VERSION_1, asOf);
-export const figures = figuresOf(covenant, statements, '2026-09-30', 12);
-export const accounts = accountsAt(statements, '2026-09-30', 12);
+export const book = bookOf(statements, 12);
+export const test = testCovenant(covenant, book, '2026-09-30', POLICY_VERSION_1, asOf);
+export const figures = figuresOf(covenant, book, '2026-09-30');
+export const accounts = accountsAt(book, '2026-09-30');
 export const request = {
-  statements,
+  book,
   date: '2026-09-30',
-  fiscalYearEndMonth: 12,
   definition: covenant.definition,
   addBacks: [],
 } as const;
@@ -86,9 +88,9 @@ export const nightOf = (
     asOf,
   );
 
-const book = buildBook(12, 'metal goods', 1);
+const borrowers = buildBook(12, 'metal goods', 1);
 /** Twelve borrowers of one sector at their last quarter ends. */
-export const peers = book.flatMap((borrower) => peerInputsOfQuarters(borrower, asOf));
+export const peers = borrowers.flatMap((borrower) => peerInputsOfQuarters(borrower, asOf));
 export const crossSection = buildCrossSection(peers, 1);
 /** The first of them, and what its figures of 30 September 2026 bring to the comparison. */
 export const inputs = { ...buildBorrower(1), covenants: [covenant] };

@@ -8,6 +8,7 @@ import { translatedQuarters, translatedSides } from '#core/measures/translation.
 import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { POLICY_VERSION_1 } from '#core/policy.ts';
 import { flowOfMonths, lastTwelveMonths, quarterFlow } from '#core/statements/flows.ts';
+import { bookOf } from '#core/statements/statementBook.ts';
 import {
   annualisedByDays,
   annualisedByMonths,
@@ -45,7 +46,7 @@ const ltm: Topic = (inputs) => {
   const statements = parts.flatMap((part, id) =>
     part.revenue === null ? [] : [statementOf(id, part.periodEnd, part.months, { revenue: part.revenue })],
   );
-  const reading = lastTwelveMonths(statements, 'revenue', periodEnd, YEAR_END_MONTH);
+  const reading = lastTwelveMonths(bookOf(statements, YEAR_END_MONTH), 'revenue', periodEnd);
   const nameOf = (gap: MissingLine) =>
     parts.find((part) => part.periodEnd === gap.periodEnd && part.months === gap.months)?.name ??
     gap.periodEnd;
@@ -70,7 +71,12 @@ const quarters: Topic = (inputs) => {
   );
   const ending = (month: number, months: number) =>
     valueOf(
-      flowOfMonths(statements, 'revenue', addMonthsToMonthEnd(YEAR_END, month), months, YEAR_END_MONTH),
+      flowOfMonths(
+        bookOf(statements, YEAR_END_MONTH),
+        'revenue',
+        addMonthsToMonthEnd(YEAR_END, month),
+        months,
+      ),
     );
   const all = [3, 6, 9, 12].map((month) => ending(month, 3));
   const [q1, q2, q3, q4] = all;
@@ -85,7 +91,7 @@ function quarterOfLater(
     const yearBefore = plainDate(`${Number(fiscal_year.replace(/\D/g, '')) - 1}-12-31`);
     return statementOf(id, addMonthsToMonthEnd(yearBefore, months), months, { revenue: value });
   });
-  const reading = quarterFlow(statements, 'revenue', statements[1]!.periodEnd, YEAR_END_MONTH);
+  const reading = quarterFlow(bookOf(statements, YEAR_END_MONTH), 'revenue', statements[1]!.periodEnd);
   return { quarter: valueOf(reading), differenced: reading.kind === 'value' && reading.inputs.length > 1 };
 }
 
@@ -159,7 +165,13 @@ const deadline: Topic = (inputs) => {
       [{ from: given.test_date, until: null, level: ONE }],
       given.test_date,
     );
-    const test = testCovenant(covenant, [], given.test_date, YEAR_END_MONTH, POLICY_VERSION_1, given.as_of);
+    const test = testCovenant(
+      covenant,
+      bookOf([], YEAR_END_MONTH),
+      given.test_date,
+      POLICY_VERSION_1,
+      given.as_of,
+    );
     const { daysToDue } = deadlineOn({
       due: given.due,
       graceDays: 0,
@@ -206,7 +218,7 @@ export const mixedVersions: Topic = (inputs) => {
     statementOf(3 + k, priorEnd, 9, { revenue }, { version: 1 + k, receivedOn: k === 0 ? priorEnd : ytdEnd }),
   );
   const over = (statements: readonly (typeof now)[]) =>
-    lastTwelveMonths(statements, 'revenue', ytdEnd, YEAR_END_MONTH);
+    lastTwelveMonths(bookOf(statements, YEAR_END_MONTH), 'revenue', ytdEnd);
   const mixed = over([now, year[0]!, ...prior]);
   if (mixed.kind !== 'not-meaningful') throw new Error('a mixed pair was not refused');
   return {

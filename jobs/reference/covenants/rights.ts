@@ -9,6 +9,7 @@ import { netLeverage } from '#core/measures/netLeverage.ts';
 import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { POLICY_VERSION_1 } from '#core/policy.ts';
 import type { Statement } from '#core/statements/statement.ts';
+import { openBook } from '#core/statements/statementBook.ts';
 import type { Topic } from '../topic.ts';
 import { amount, atMost, day, status } from './amounts.ts';
 import { mixedVersions } from './periods.ts';
@@ -27,7 +28,8 @@ function tested(
   waivers: Parameters<typeof netLeverageCovenant>[2] = [],
 ) {
   const covenant = netLeverageCovenant(levels, BEGINNING, waivers);
-  return testCovenant(covenant, statements, testDate, 12, POLICY_VERSION_1, asOf);
+  const book = openBook(statements, { scope: covenant.scope, asOf }, 12);
+  return testCovenant(covenant, book, testDate, POLICY_VERSION_1, asOf);
 }
 
 const always = (level: Decimal): readonly CovenantLevel[] => [{ from: BEGINNING, until: null, level }];

@@ -1,12 +1,12 @@
 /** What the figures said before a restatement and what they say after it. */
-import { daysBetween, type PlainDate } from '../calendar/plainDate.ts';
+import { addDays, daysBetween, type PlainDate } from '../calendar/plainDate.ts';
 import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import { isMet, isNotMet, type Outcome } from '../covenants/covenantTest.ts';
 import { testCovenant } from '../covenants/testCovenant.ts';
 import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
 import type { Decimal } from '../money/decimal.ts';
-import { knownStatements } from '../statements/currentStatements.ts';
 import { STATEMENT_SCOPES, type Statement } from '../statements/statement.ts';
+import { openBooks, type Books } from '../statements/statementBook.ts';
 import type { AlertContext } from './rule.ts';
 
 /** How long a restatement is news: two quarters. Desk practice, no source. */
@@ -40,11 +40,15 @@ export interface Restatement {
  * @example restatementsOf(nightOf({ ebitda: 12, debt: 45, cash: 6 })) // => []
  */
 export const restatementsOf = (context: AlertContext): readonly Restatement[] =>
-  restatementDays(context).map((day) => ({
-    receivedOn: day.receivedOn,
-    earnings: earningsMoves(context, day),
-    outcomes: outcomeMoves(context, day),
-  }));
+  restatementDays(context).map((day) => {
+    const before = openBooks(context.inputs, addDays(day.receivedOn, -1));
+    const after = openBooks(context.inputs, day.receivedOn);
+    return {
+      receivedOn: day.receivedOn,
+      earnings: earningsMoves(before, after, day),
+      outcomes: outcomeMoves(context, before, after, day),
+    };
+  });
 
 interface RestatementDay {
   readonly receivedOn: PlainDate;
@@ -75,28 +79,21 @@ const isEarlierVersion = (earlier: Statement, later: Statement): boolean =>
   isSamePeriodEnd(earlier.periodEnd, later.periodEnd) &&
   earlier.receivedOn < later.receivedOn;
 
-const before = (statements: readonly Statement[], day: PlainDate): readonly Statement[] =>
-  statements.filter(({ receivedOn }) => receivedOn < day);
-const upTo = (statements: readonly Statement[], day: PlainDate): readonly Statement[] =>
-  statements.filter(({ receivedOn }) => receivedOn <= day);
-
 function earningsMoves(
-  { inputs, asOf }: AlertContext,
-  { receivedOn: day, earliestPeriodEnd }: RestatementDay,
+  before: Books,
+  after: Books,
+  { earliestPeriodEnd }: RestatementDay,
 ): readonly EarningsMove[] {
   return STATEMENT_SCOPES.flatMap((scope) => {
-    const known = knownStatements(inputs.statements, { scope, asOf });
-    const earlier = before(known, day);
     const periodEnds = new Set(
-      earlier
+      before[scope].statements
         .filter(({ months, periodEnd }) => months > 0 && reportingMonthEnd(periodEnd) >= earliestPeriodEnd)
         .map(({ periodEnd }) => periodEnd),
     );
     return [...periodEnds].sort().flatMap((periodEnd) => {
-      const [was, is] = [earlier, upTo(known, day)].map(
-        (statements) => ebitdaOfTwelveMonths(statements, periodEnd, inputs.fiscalYearEndMonth).ebitda,
-      );
-      if (was?.kind !== 'value' || is?.kind !== 'value' || was.value.eq(is.value)) return [];
+      const was = ebitdaOfTwelveMonths(before[scope], periodEnd).ebitda;
+      const is = ebitdaOfTwelveMonths(after[scope], periodEnd).ebitda;
+      if (was.kind !== 'value' || is.kind !== 'value' || was.value.eq(is.value)) return [];
       const change = was.value.isZero() ? null : is.value.minus(was.value).div(was.value.abs());
       return [{ periodEnd, before: was.value, after: is.value, change }];
     });
@@ -105,25 +102,20 @@ function earningsMoves(
 
 function outcomeMoves(
   { inputs, tests, policy, asOf }: AlertContext,
-  { receivedOn: day, earliestPeriodEnd }: RestatementDay,
+  before: Books,
+  after: Books,
+  { receivedOn, earliestPeriodEnd }: RestatementDay,
 ): readonly OutcomeMove[] {
   return inputs.covenants.flatMap((covenant) => {
     const dates = tests.filter(
-      (test) => test.covenantId === covenant.id && test.testDate >= earliestPeriodEnd && test.testDate < day,
+      (test) =>
+        test.covenantId === covenant.id && test.testDate >= earliestPeriodEnd && test.testDate < receivedOn,
     );
+    const outcomeFrom = (books: Books, testDate: PlainDate): Outcome =>
+      testCovenant(covenant, books[covenant.scope], testDate, policy, asOf).underlyingOutcome;
     return dates.flatMap(({ testDate }) => {
-      const [was, is] = [before, upTo].map(
-        (known) =>
-          testCovenant(
-            covenant,
-            known(inputs.statements, day),
-            testDate,
-            inputs.fiscalYearEndMonth,
-            policy,
-            asOf,
-          ).underlyingOutcome,
-      );
-      if (!was || !is || standing(was) === null || standing(was) === standing(is)) return [];
+      const [was, is] = [outcomeFrom(before, testDate), outcomeFrom(after, testDate)];
+      if (standing(was) === null || standing(was) === standing(is)) return [];
       return [{ covenantId: covenant.id, testDate, before: was, after: is }];
     });
   });

@@ -7,6 +7,7 @@ import { testCovenant } from '../covenants/testCovenant.ts';
 import { justPassingOf } from '../patterns/justPassing.ts';
 import { POLICY_VERSION_1 as policy } from '../policy.ts';
 import type { QuarterScore, ReportingQuality } from '../quality/score.ts';
+import { openBooks } from '../statements/statementBook.ts';
 import type { AlertContext } from './rule.ts';
 
 export const buildInputs = (given: Partial<BorrowerInputs> = {}): BorrowerInputs => ({
@@ -55,9 +56,10 @@ export function buildContext(
   asOf: PlainDate,
   quality: ReportingQuality = buildQuality(),
 ): AlertContext {
+  const books = openBooks(inputs, asOf);
   const tests = inputs.covenants.flatMap((covenant) =>
     testDates(covenant, asOf).map((date) =>
-      testCovenant(covenant, inputs.statements, date, inputs.fiscalYearEndMonth, policy, asOf),
+      testCovenant(covenant, books[covenant.scope], date, policy, asOf),
     ),
   );
   const patterns = inputs.covenants.map(({ id }) => justPassingOf(tests, id, policy.repeated.ofLast));

@@ -3,6 +3,7 @@ import { MEASURES } from '../measures/index.ts';
 import type { InputUsed, MissingLine, Reading } from '../measures/measure.ts';
 import type { Measured } from '../measures/measured.ts';
 import type { Statement } from '../statements/statement.ts';
+import type { StatementBook } from '../statements/statementBook.ts';
 import type { Covenant } from './covenant.ts';
 import type { Sides } from './headroom.ts';
 
@@ -19,23 +20,16 @@ export interface Figures extends Pick<Measured, 'addBacksTaken' | 'bridge'> {
 }
 
 /**
- * Measures a covenant on a day, out of the versions known of its scope.
+ * Measures a covenant on a day, out of the book of its scope.
  *
- * @example figuresOf(covenant, statements, '2026-09-30', 12).sides // => { numerator: 39000000, denominator: 13000000 }
+ * @example figuresOf(covenant, book, '2026-09-30').sides // => { numerator: 39000000, denominator: 13000000 }
  */
 export function figuresOf(
   { measure, definition, addBacks }: Covenant,
-  known: readonly Statement[],
+  book: StatementBook,
   date: PlainDate,
-  fiscalYearEndMonth: number,
 ): Figures {
-  const measured = MEASURES[measure].measure({
-    statements: known,
-    date,
-    fiscalYearEndMonth,
-    definition,
-    addBacks,
-  });
+  const measured = MEASURES[measure].measure({ book, date, definition, addBacks });
   const { numerator, denominator, addBacksTaken, bridge } = measured;
   const readings = denominator ? [numerator, denominator] : [numerator];
   const inputs = readings.flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
@@ -45,7 +39,7 @@ export function figuresOf(
     readings,
     inputs,
     missing: missingOf(readings),
-    statements: known.filter(({ id }) => inputs.some(({ statementId }) => statementId === id)),
+    statements: statementsBehind(book, inputs),
     sides: sidesOf(measured),
   };
 }
@@ -59,4 +53,9 @@ function missingOf(readings: readonly Reading[]): readonly MissingLine[] {
 function sidesOf({ numerator, denominator }: Measured): Sides | null {
   if (numerator.kind !== 'value' || (denominator && denominator.kind !== 'value')) return null;
   return { numerator: numerator.value, denominator: denominator ? denominator.value : null };
+}
+
+function statementsBehind(book: StatementBook, inputs: readonly InputUsed[]): readonly Statement[] {
+  const ids = new Set(inputs.map(({ statementId }) => statementId));
+  return book.statements.filter(({ id }) => ids.has(id));
 }

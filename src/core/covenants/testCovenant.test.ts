@@ -3,6 +3,7 @@ import { decimal } from '../money/decimal.ts';
 import { POLICY_VERSION_1 as policy } from '../policy.ts';
 import { buildStatement } from '../statements/statement.fixture.ts';
 import type { Statement } from '../statements/statement.ts';
+import { bookOf, openBook } from '../statements/statementBook.ts';
 import { buildAddBack, buildCovenant, buildLevel, buildYear } from './covenant.fixture.ts';
 import type { Covenant } from './covenant.ts';
 import { latestLiveTest } from './latestLiveTest.ts';
@@ -11,7 +12,7 @@ import { testCovenant } from './testCovenant.ts';
 
 const on = '2025-12-31';
 const run = (covenant: Covenant, statements: readonly Statement[], asOf = '2026-03-31' as const) =>
-  testCovenant(covenant, statements, on, 12, policy, asOf);
+  testCovenant(covenant, openBook(statements, { scope: covenant.scope, asOf }, 12), on, policy, asOf);
 
 describe('net leverage from statements', () => {
   test('is debt less cash over EBITDA of twelve months, with its bridge and its cells', () => {
@@ -231,7 +232,7 @@ test('the latest live test is the newest with figures, and none in a holiday', (
     levels: [buildLevel('2025-01-01', '2026-03-31', '3.5'), buildLevel('2026-04-01', null, null)],
   });
   const tests = (dates: readonly ('2025-12-31' | '2026-03-31' | '2026-06-30')[]) =>
-    dates.map((date) => testCovenant(covenant, statements, date, 12, policy, '2026-08-01'));
+    dates.map((date) => testCovenant(covenant, bookOf(statements, 12), date, policy, '2026-08-01'));
   expect(latestLiveTest(tests(['2025-12-31', '2026-03-31']), 1)?.testDate).toBe('2025-12-31');
   expect(latestLiveTest(tests(['2025-12-31', '2026-03-31', '2026-06-30']), 1)).toBeNull();
 });

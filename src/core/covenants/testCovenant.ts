@@ -2,8 +2,7 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { MEASURES } from '../measures/index.ts';
 import type { Policy } from '../policy.ts';
-import { knownStatements } from '../statements/currentStatements.ts';
-import type { Statement } from '../statements/statement.ts';
+import type { StatementBook } from '../statements/statementBook.ts';
 import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
 import { isMet, isNotMet, type CovenantTest, type Outcome } from './covenantTest.ts';
@@ -14,24 +13,22 @@ import { laterLevels, levelInForce } from './levels.ts';
 import { withoutResult } from './withoutResult.ts';
 
 /**
- * Tests a covenant on a test date with the statements received by `asOf`.
+ * Tests a covenant on a test date out of the book of its scope; `asOf` says which waivers stand.
  *
  * Only met is met: figures that have not come are awaited, a line or an older period that is not there means that
  * it cannot be tested, a holiday or a day without a level is not tested though the ratio is shown, and a waived
  * test stays not met underneath. Amounts in whole units of the covenant's currency. Source: methods.md A4 to A6.
  *
- * @example testCovenant(covenant, statements, '2026-09-30', 12, POLICY_VERSION_1, '2026-11-30').outcome // => 'met'
+ * @example testCovenant(covenant, book, '2026-09-30', POLICY_VERSION_1, '2026-11-30').outcome // => 'met'
  */
 export function testCovenant(
   covenant: Covenant,
-  statements: readonly Statement[],
+  book: StatementBook,
   testDate: PlainDate,
-  fiscalYearEndMonth: number,
   policy: Policy,
   asOf: PlainDate,
 ): CovenantTest {
-  const known = knownStatements(statements, { scope: covenant.scope, asOf });
-  const figures = figuresOf(covenant, known, testDate, fiscalYearEndMonth);
+  const figures = figuresOf(covenant, book, testDate);
   const inForce = levelInForce(covenant.levels, testDate);
   const level = inForce.kind === 'level' ? inForce.level : null;
   const nothing = withoutResult(covenant, testDate, inForce, figures);

@@ -3,14 +3,13 @@ import type { Reading } from '../statements/reading.ts';
 import { addBacksWithinTwelveMonths, allowAddBacks } from './addBacks.ts';
 import type { BridgeLine } from './bridge.ts';
 import type { MeasureRequest } from './definition.ts';
-import { ebitdaOfTwelveMonths, type RouteDifference } from './ebitda.ts';
+import { ebitdaOfTwelveMonths } from './ebitda.ts';
 
 export interface Earnings {
   /** Adjusted EBITDA of twelve months, as the covenant defines it. */
   readonly reading: Reading;
   /** Add-backs taken, capped and uncapped together; nought where EBITDA is not known. */
   readonly addBacksTaken: Decimal;
-  readonly routes: RouteDifference | null;
   readonly bridge: readonly BridgeLine[];
 }
 
@@ -21,11 +20,11 @@ export interface Earnings {
  * @example adjustedEbitda({ ...request, addBacks: [buildAddBack('2026-09-30', 2e6)] }).reading.value // => 15000000
  */
 export function adjustedEbitda(request: MeasureRequest): Earnings {
-  const { statements, date, fiscalYearEndMonth, definition } = request;
-  const { ebitda, routes, bridge } = ebitdaOfTwelveMonths(statements, date, fiscalYearEndMonth);
-  if (ebitda.kind !== 'value') return { reading: ebitda, addBacksTaken: ZERO, routes, bridge };
+  const { book, date, definition } = request;
+  const { ebitda, bridge } = ebitdaOfTwelveMonths(book, date);
+  if (ebitda.kind !== 'value') return { reading: ebitda, addBacksTaken: ZERO, bridge };
   const addBacks = addBacksWithinTwelveMonths(request.addBacks, date);
-  if (addBacks.length === 0) return { reading: ebitda, addBacksTaken: ZERO, routes, bridge };
+  if (addBacks.length === 0) return { reading: ebitda, addBacksTaken: ZERO, bridge };
   const sumOf = (capped: boolean) =>
     Decimal.sum(0, ...addBacks.filter((one) => one.capped === capped).map(({ amount }) => amount));
   const { allowed, disallowed, adjusted } = allowAddBacks({
@@ -37,7 +36,6 @@ export function adjustedEbitda(request: MeasureRequest): Earnings {
   return {
     reading: { kind: 'value', value: adjusted, inputs: ebitda.inputs },
     addBacksTaken: sumOf(false).plus(allowed),
-    routes,
     bridge: [
       ...bridge,
       ...addBacks.map(({ label, amount }): BridgeLine => ({ label, amount, kind: 'add-back', inputs: [] })),

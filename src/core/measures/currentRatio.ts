@@ -16,9 +16,9 @@ export const currentRatio: Measure = {
     carrier: 'current assets',
     charge: 'current liabilities',
   },
-  measure: ({ statements, date }) => {
-    const numerator = balanceAt(statements, 'current_assets', date);
-    const denominator = balanceAt(statements, 'current_liabilities', date);
+  measure: ({ book, date }) => {
+    const numerator = balanceAt(book, 'current_assets', date);
+    const denominator = balanceAt(book, 'current_liabilities', date);
     return {
       numerator,
       denominator,

@@ -50,20 +50,20 @@ export interface MeasuredDebt {
  *
  * @example totalDebt(request).reading.value // => 45000000
  */
-export function totalDebt({ statements, date, definition }: MeasureRequest): MeasuredDebt {
+export function totalDebt({ book, date, definition }: MeasureRequest): MeasuredDebt {
   const lines = definition.leasesInDebt ? [...BORROWINGS, LEASES] : BORROWINGS;
   const readings = lines.map(({ line, label }) => ({
     line,
     label,
-    reading: balanceAt(statements, line, date),
+    reading: balanceAt(book, line, date),
   }));
   const parts = readings.map(({ line, label, reading }) => ({
     label,
     sign: 1 as const,
-    reading: orNoneIfNeverCarried(statements, line, reading),
+    reading: orNoneIfNeverCarried(book, line, reading),
   }));
   const given = readings.some(({ reading }) => reading.kind === 'value');
-  const reading = given ? sumOfReadings(parts) : balanceAt(statements, 'senior_debt', date);
+  const reading = given ? sumOfReadings(parts) : balanceAt(book, 'senior_debt', date);
   return {
     reading,
     bridge: [
@@ -82,7 +82,7 @@ export function totalDebt({ statements, date, definition }: MeasureRequest): Mea
  */
 export function netDebtOn(request: MeasureRequest): MeasuredDebt {
   const debt = totalDebt(request);
-  const cash = balanceAt(request.statements, 'cash', request.date);
+  const cash = balanceAt(request.book, 'cash', request.date);
   const both = sumOfReadings([
     { sign: 1, reading: debt.reading },
     { sign: -1, reading: cash },

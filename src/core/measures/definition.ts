@@ -1,6 +1,6 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { Decimal } from '../money/decimal.ts';
-import type { Statement } from '../statements/statement.ts';
+import type { StatementBook } from '../statements/statementBook.ts';
 
 /** How the agreement defines EBITDA and debt for one covenant. */
 export interface MeasureDefinition {
@@ -27,10 +27,8 @@ export interface AddBack {
 
 /** What a measure is computed from. */
 export interface MeasureRequest {
-  /** Every version known by the day, of one scope: knownStatements(). */
-  readonly statements: readonly Statement[];
+  readonly book: StatementBook;
   readonly date: PlainDate;
-  readonly fiscalYearEndMonth: number;
   readonly definition: MeasureDefinition;
   readonly addBacks: readonly AddBack[];
 }

@@ -5,7 +5,7 @@ import { lastTwelveMonths } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
 import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
-import type { Statement } from '../statements/statement.ts';
+import type { StatementBook } from '../statements/statementBook.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
 
 /** Amounts of one period, costs positive. */
@@ -73,41 +73,39 @@ export function routeDifference({
 
 export interface MeasuredEbitda {
   readonly ebitda: Reading;
-  /** From revenue less from net income, twelve months; null where the way down from revenue is not there. */
-  readonly routes: RouteDifference | null;
   readonly bridge: readonly BridgeLine[];
 }
 
 /**
- * EBITDA of the twelve months up to a period end, from net income, with its bridge; the way down from revenue is
- * computed beside it and the difference named.
+ * EBITDA of the twelve months up to a period end, from net income, with its bridge.
  *
  * Whole currency units. Missing names every line and period that is not there.
  *
- * @example ebitdaOfTwelveMonths(statements, '2026-09-30', 12).ebitda.value // => 13000000
+ * @example ebitdaOfTwelveMonths(book, '2026-09-30').ebitda.value // => 13000000
  */
-export function ebitdaOfTwelveMonths(
-  statements: readonly Statement[],
-  date: PlainDate,
-  fiscalYearEndMonth: number,
-): MeasuredEbitda {
-  const twelveMonths = (line: LineItemCode) => lastTwelveMonths(statements, line, date, fiscalYearEndMonth);
-  const optional = (line: LineItemCode) => orNoneIfNeverCarried(statements, line, twelveMonths(line));
+export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): MeasuredEbitda {
   const parts = [
-    { label: 'Net income', sign: 1 as const, reading: twelveMonths('net_income') },
-    { label: 'Income tax', sign: 1 as const, reading: twelveMonths('income_tax') },
-    { label: 'Interest expense', sign: 1 as const, reading: twelveMonths('interest_expense') },
-    { label: 'Interest income', sign: -1 as const, reading: optional('interest_income') },
+    { label: 'Net income', sign: 1 as const, reading: lastTwelveMonths(book, 'net_income', date) },
+    { label: 'Income tax', sign: 1 as const, reading: lastTwelveMonths(book, 'income_tax', date) },
+    {
+      label: 'Interest expense',
+      sign: 1 as const,
+      reading: lastTwelveMonths(book, 'interest_expense', date),
+    },
+    {
+      label: 'Interest income',
+      sign: -1 as const,
+      reading: optionalTwelveMonths(book, 'interest_income', date),
+    },
     {
       label: 'Depreciation and amortisation',
       sign: 1 as const,
-      reading: twelveMonths('depreciation_and_amortisation'),
+      reading: lastTwelveMonths(book, 'depreciation_and_amortisation', date),
     },
   ];
   const ebitda = sumOfReadings(parts);
   return {
     ebitda,
-    routes: routesOf(ebitda, twelveMonths, optional),
     bridge: [
       ...parts.flatMap(({ label, sign, reading }) => bridgeFigure(label, reading, sign)),
       ...bridgeSubtotal('EBITDA', ebitda),
@@ -123,14 +121,20 @@ const OPERATING_COSTS = [
   'other_operating_expense',
 ] as const satisfies readonly LineItemCode[];
 
-function routesOf(
-  ebitda: Reading,
-  twelveMonths: (line: LineItemCode) => Reading,
-  optional: (line: LineItemCode) => Reading,
-): RouteDifference | null {
-  const [revenue, costOfSales] = [twelveMonths('revenue'), twelveMonths('cogs')];
+/**
+ * EBITDA of twelve months from revenue less EBITDA from net income, by name; null where the way down from revenue is
+ * not there. Source: methods.md A3.
+ *
+ * @example routesOfTwelveMonths(book, '2026-09-30') // => null
+ */
+export function routesOfTwelveMonths(book: StatementBook, date: PlainDate): RouteDifference | null {
+  const { ebitda } = ebitdaOfTwelveMonths(book, date);
+  const [revenue, costOfSales] = [
+    lastTwelveMonths(book, 'revenue', date),
+    lastTwelveMonths(book, 'cogs', date),
+  ];
   const operating = sumOfReadings(
-    OPERATING_COSTS.map((line) => ({ sign: 1 as const, reading: optional(line) })),
+    OPERATING_COSTS.map((line) => ({ sign: 1 as const, reading: optionalTwelveMonths(book, line, date) })),
   );
   if (ebitda.kind !== 'value' || revenue.kind !== 'value' || costOfSales.kind !== 'value') return null;
   if (operating.kind !== 'value' || operating.value.eq(ZERO)) return null;
@@ -143,3 +147,6 @@ function routesOf(
     fromNetIncome: ebitda.value,
   });
 }
+
+const optionalTwelveMonths = (book: StatementBook, line: LineItemCode, date: PlainDate): Reading =>
+  orNoneIfNeverCarried(book, line, lastTwelveMonths(book, line, date));

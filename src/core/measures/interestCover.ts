@@ -31,15 +31,15 @@ export const interestCover: Measure = {
   },
 };
 
-function netCashInterest({ statements, date, fiscalYearEndMonth }: MeasureRequest): {
+function netCashInterest({ book, date }: MeasureRequest): {
   readonly reading: Reading;
   readonly bridge: readonly BridgeLine[];
 } {
-  const twelveMonths = (line: LineItemCode) => lastTwelveMonths(statements, line, date, fiscalYearEndMonth);
+  const twelveMonths = (line: LineItemCode) => lastTwelveMonths(book, line, date);
   const paid = sumOfReadings([{ sign: -1, reading: twelveMonths('interest_paid') }]);
   if (paid.kind === 'value') return { reading: paid, bridge: bridgeFigure('Cash interest paid', paid) };
   const expense = twelveMonths('interest_expense');
-  const income = orNoneIfNeverCarried(statements, 'interest_income', twelveMonths('interest_income'));
+  const income = orNoneIfNeverCarried(book, 'interest_income', twelveMonths('interest_income'));
   const reading = sumOfReadings([
     { sign: 1, reading: expense },
     { sign: -1, reading: income },

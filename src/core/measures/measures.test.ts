@@ -4,10 +4,11 @@ import type { PlainDate } from '../calendar/plainDate.ts';
 import { decimal, ZERO } from '../money/decimal.ts';
 import { buildStatement } from '../statements/statement.fixture.ts';
 import type { Statement } from '../statements/statement.ts';
+import { bookOf } from '../statements/statementBook.ts';
 import { addBacksWithinTwelveMonths, allowAddBacks } from './addBacks.ts';
 import { currentRatio } from './currentRatio.ts';
 import type { AddBack, MeasureRequest } from './definition.ts';
-import { ebitdaOfTwelveMonths } from './ebitda.ts';
+import { ebitdaOfTwelveMonths, routesOfTwelveMonths } from './ebitda.ts';
 import { interestCover } from './interestCover.ts';
 import { minimumLiquidity } from './minimumLiquidity.ts';
 import { totalLeverage } from './totalLeverage.ts';
@@ -21,9 +22,8 @@ const definition = {
   undrawnCountsAsLiquidity: false,
 } as const;
 const request = (statements: readonly Statement[], given: Partial<MeasureRequest> = {}): MeasureRequest => ({
-  statements,
+  book: bookOf(statements, 12),
   date,
-  fiscalYearEndMonth: 12,
   definition,
   addBacks: [],
   ...given,
@@ -40,7 +40,7 @@ const year = (figures: Parameters<typeof buildStatement>[2] = {}) =>
 
 describe('EBITDA', () => {
   test('is net income, tax, net finance costs, depreciation and amortisation, in a bridge that adds up', () => {
-    const { ebitda, bridge } = ebitdaOfTwelveMonths([year({ interest_income: '0.5' })], date, 12);
+    const { ebitda, bridge } = ebitdaOfTwelveMonths(bookOf([year({ interest_income: '0.5' })], 12), date);
     expect(ebitda.kind === 'value' && ebitda.value.toFixed()).toBe('11.5');
     const figures = bridge.filter(({ kind }) => kind === 'figure').map(({ amount }) => amount);
     expect(figures.reduce((sum, amount) => sum.plus(amount), ZERO).toFixed()).toBe('11.5');
@@ -48,14 +48,14 @@ describe('EBITDA', () => {
 
   test('down from revenue differs by what stands below gross profit, by name', () => {
     const statement = year({ revenue: 80, cogs: 48, sga: '20.3' });
-    expect(ebitdaOfTwelveMonths([statement], date, 12).routes?.name).toBe(
+    expect(routesOfTwelveMonths(bookOf([statement], 12), date)?.name).toBe(
       'other income 0.3 below gross profit',
     );
   });
 
   test('is missing where a line is missing, never taken as nought', () => {
     const statement = buildStatement(date, 12, { ...earnings, income_tax: undefined });
-    const { ebitda } = ebitdaOfTwelveMonths([statement], date, 12);
+    const { ebitda } = ebitdaOfTwelveMonths(bookOf([statement], 12), date);
     expect(ebitda.kind === 'missing' && ebitda.missing).toEqual([
       { line: 'income_tax', periodEnd: date, months: 12 },
     ]);

@@ -32,8 +32,8 @@ export const minimumLiquidity: Measure = {
   earningsSide: null,
   words: { subject: 'Liquidity', otherSide: null, carrier: 'liquidity', charge: 'charge' },
   measure: (request) => {
-    const { statements, date, definition } = request;
-    const cash = balanceAt(statements, 'cash', date);
+    const { book, date, definition } = request;
+    const cash = balanceAt(book, 'cash', date);
     const parts = definition.undrawnCountsAsLiquidity ? [cash, ...undrawnParts(request)] : [cash];
     const numerator = sumOfReadings(parts.map((reading) => ({ sign: 1 as const, reading })));
     return {
@@ -49,13 +49,13 @@ export const minimumLiquidity: Measure = {
   },
 };
 
-function undrawnParts({ statements, date }: MeasureRequest): readonly Reading[] {
-  const lettersOfCredit = balanceAt(statements, 'letters_of_credit', date);
+function undrawnParts({ book, date }: MeasureRequest): readonly Reading[] {
+  const lettersOfCredit = balanceAt(book, 'letters_of_credit', date);
   return [
     sumOfReadings([
-      { sign: 1, reading: balanceAt(statements, 'revolver_commitment', date) },
-      { sign: -1, reading: balanceAt(statements, 'revolver_drawn', date) },
-      { sign: -1, reading: orNoneIfNeverCarried(statements, 'letters_of_credit', lettersOfCredit) },
+      { sign: 1, reading: balanceAt(book, 'revolver_commitment', date) },
+      { sign: -1, reading: balanceAt(book, 'revolver_drawn', date) },
+      { sign: -1, reading: orNoneIfNeverCarried(book, 'letters_of_credit', lettersOfCredit) },
     ]),
   ];
 }

@@ -6,6 +6,7 @@ import type { LineItemCode } from '../statements/lineItems.ts';
 import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import type { Reading } from '../statements/reading.ts';
 import type { Statement } from '../statements/statement.ts';
+import type { StatementBook } from '../statements/statementBook.ts';
 
 /** Years and quarters before the quarter end that is looked at. */
 export interface Back {
@@ -36,13 +37,9 @@ export interface AccountsAt {
  * A borrower's accounts around one quarter end: flows of twelve months and of the quarter, balances, each now or so many
  * months back. Units as in the statements; undefined where a figure is missing or has no meaning.
  *
- * @example accountsAt(statements, '2026-09-30', 12).twelveMonths('revenue') // => 90000000
+ * @example accountsAt(book, '2026-09-30').twelveMonths('revenue') // => 90000000
  */
-export function accountsAt(
-  statements: readonly Statement[],
-  quarterEnd: PlainDate,
-  fiscalYearEndMonth: number,
-): AccountsAt {
+export function accountsAt(book: StatementBook, quarterEnd: PlainDate): AccountsAt {
   const usedIds = new Set<number>();
   const sample = (reading: Reading): number | undefined => {
     if (reading.kind !== 'value') return undefined;
@@ -51,11 +48,10 @@ export function accountsAt(
   };
   const readings = {
     twelveMonths: (line: LineItemCode, back: Back) =>
-      lastTwelveMonths(statements, line, monthsBefore(quarterEnd, back.months), fiscalYearEndMonth),
+      lastTwelveMonths(book, line, monthsBefore(quarterEnd, back.months)),
     quarter: (line: LineItemCode, back: Back) =>
-      quarterFlow(statements, line, monthsBefore(quarterEnd, back.months), fiscalYearEndMonth),
-    balance: (line: LineItemCode, back: Back) =>
-      balanceAt(statements, line, monthsBefore(quarterEnd, back.months)),
+      quarterFlow(book, line, monthsBefore(quarterEnd, back.months)),
+    balance: (line: LineItemCode, back: Back) => balanceAt(book, line, monthsBefore(quarterEnd, back.months)),
   };
   const needed =
     (read: (line: LineItemCode, back: Back) => Reading) =>
@@ -64,7 +60,7 @@ export function accountsAt(
   const optional =
     (read: (line: LineItemCode, back: Back) => Reading) =>
     (line: LineItemCode, back: Back = NOW) =>
-      sample(orNoneIfNeverCarried(statements, line, read(line, back)));
+      sample(orNoneIfNeverCarried(book, line, read(line, back)));
   return {
     twelveMonths: needed(readings.twelveMonths),
     quarter: needed(readings.quarter),
@@ -74,7 +70,7 @@ export function accountsAt(
     optionalBalance: optional(readings.balance),
     isMissing: (line) => readings.twelveMonths(line, NOW).kind === 'missing',
     sample,
-    used: () => statements.filter(({ id }) => usedIds.has(id)),
+    used: () => book.statements.filter(({ id }) => usedIds.has(id)),
   };
 }
 

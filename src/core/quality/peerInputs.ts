@@ -1,10 +1,10 @@
 /** From a borrower's statements to what it brings to the comparison at one quarter end. */
 import { NEVER_SCORED, type BorrowerInputs } from '../borrowerInputs.ts';
-import { fiscalPosition, isSamePeriodEnd } from '../calendar/fiscalYear.ts';
+import { fiscalPosition } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
-import { currentStatements, inForce, knownStatements } from '../statements/currentStatements.ts';
-import { type Statement, type StatementScope, type Tie } from '../statements/statement.ts';
+import type { Statement, Tie } from '../statements/statement.ts';
+import { openBooks, type Books, type StatementBook } from '../statements/statementBook.ts';
 import { accountsAt, ifAll, NOW, QUARTER_AGO, YEAR_AGO, YEAR_AND_QUARTER_AGO } from './accountsAt.ts';
 import type { AccountsAt, Back } from './accountsAt.ts';
 import { cashFlowOf } from './cashFlowOf.ts';
@@ -31,7 +31,7 @@ export function peerInputs(
   asOf: PlainDate,
 ): PeerInputs | null {
   if (NEVER_SCORED.includes(inputs.legalForm)) return null;
-  return fromStatements(inputs, statementsKnown(inputs, asOf), quarterEnd);
+  return atQuarterEnd(inputs, scoredBook(openBooks(inputs, asOf)), quarterEnd);
 }
 
 /**
@@ -39,45 +39,40 @@ export function peerInputs(
  *
  * @example peerInputsOfQuarters(inputs, '2026-11-30').length // => 8
  */
-export function peerInputsOfQuarters(inputs: BorrowerInputs, asOf: PlainDate): readonly PeerInputs[] {
+export const peerInputsOfQuarters = (inputs: BorrowerInputs, asOf: PlainDate): readonly PeerInputs[] =>
+  peerInputsFrom(inputs, openBooks(inputs, asOf));
+
+/**
+ * The same out of books that are open already.
+ *
+ * @example peerInputsFrom(inputs, openBooks(inputs, '2026-11-30')).length // => 8
+ */
+export function peerInputsFrom(inputs: BorrowerInputs, books: Books): readonly PeerInputs[] {
   if (NEVER_SCORED.includes(inputs.legalForm)) return [];
-  const known = statementsKnown(inputs, asOf);
-  return quarterEndsOf(inputs, asOf)
+  const book = scoredBook(books);
+  return quarterEndsOf(book)
     .slice(-QUALITY_TABLE.historyQuarters)
-    .flatMap((quarterEnd) => fromStatements(inputs, known, quarterEnd) ?? []);
+    .flatMap((quarterEnd) => atQuarterEnd(inputs, book, quarterEnd) ?? []);
 }
 
 /** Fiscal quarter ends with a balance sheet, oldest first. Months between quarter ends are left out. */
-function quarterEndsOf(inputs: BorrowerInputs, asOf: PlainDate): readonly PlainDate[] {
-  const selection = { scope: scopeOf(inputs), asOf };
-  return currentStatements(inputs.statements, selection)
+const quarterEndsOf = (book: StatementBook): readonly PlainDate[] =>
+  book.current
     .filter(
       ({ months, periodEnd }) =>
-        months === 0 && fiscalPosition(periodEnd, inputs.fiscalYearEndMonth).monthsIntoYear % 3 === 0,
+        months === 0 && fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear % 3 === 0,
     )
     .map(({ periodEnd }) => periodEnd);
-}
 
 /** Group accounts where the borrower gives any. */
-const scopeOf = (inputs: BorrowerInputs): StatementScope =>
-  inputs.statements.some(({ scope }) => scope === 'group') ? 'group' : 'stand-alone';
+const scoredBook = (books: Books): StatementBook =>
+  books.group.statements.length > 0 ? books.group : books['stand-alone'];
 
-const statementsKnown = (inputs: BorrowerInputs, asOf: PlainDate): readonly Statement[] =>
-  knownStatements(inputs.statements, { scope: scopeOf(inputs), asOf });
-
-function fromStatements(
-  inputs: BorrowerInputs,
-  statements: readonly Statement[],
-  quarterEnd: PlainDate,
-): PeerInputs | null {
-  const balanceSheet = inForce(
-    statements.filter(({ months, periodEnd }) => months === 0 && isSamePeriodEnd(periodEnd, quarterEnd)),
-  );
+function atQuarterEnd(inputs: BorrowerInputs, book: StatementBook, quarterEnd: PlainDate): PeerInputs | null {
+  const balanceSheet = book.statementOf(quarterEnd, 0);
   if (!balanceSheet) return null;
-  const accounts = accountsAt(statements, quarterEnd, inputs.fiscalYearEndMonth);
-  const ebitda = accounts.sample(
-    ebitdaOfTwelveMonths(statements, quarterEnd, inputs.fiscalYearEndMonth).ebitda,
-  );
+  const accounts = accountsAt(book, quarterEnd);
+  const ebitda = accounts.sample(ebitdaOfTwelveMonths(book, quarterEnd).ebitda);
   const acquisition = acquisitionsOf(accounts);
   const cashFlow = cashFlowOf(accounts, acquisition.inYear);
   const days = dayFlows(accounts);

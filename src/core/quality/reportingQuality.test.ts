@@ -4,6 +4,7 @@ import { plainDate } from '../calendar/plainDate.ts';
 import { POLICY_VERSION_1 } from '../policy.ts';
 import { AS_OF, buildBook, buildBorrower } from './book.fixture.ts';
 import { buildCrossSection, type CrossSection } from './crossSection.ts';
+import { openBooks } from '../statements/statementBook.ts';
 import { peerInputsOfQuarters } from './peerInputs.ts';
 import { reportingQuality } from './reportingQuality.ts';
 
@@ -21,7 +22,7 @@ const crossSection = JSON.parse(
   ),
 ) as CrossSection;
 const qualityOf = (borrower: BorrowerInputs) =>
-  reportingQuality(borrower, crossSection, POLICY_VERSION_1, AS_OF);
+  reportingQuality(borrower, openBooks(borrower, AS_OF), crossSection, POLICY_VERSION_1, AS_OF);
 
 test('every borrower of an ordinary book is scored with 85 of 100 points of weight', () => {
   for (const borrower of book) {
@@ -103,12 +104,14 @@ test('half-yearly accounts give a headline of two, annual accounts a provisional
   const on = plainDate('2026-08-30');
   const halfYearly = buildBorrower(505, { everyMonths: 6, quarters: 20 });
   const annual = buildBorrower(506, { everyMonths: 12, quarters: 20 });
-  const half = reportingQuality(halfYearly, crossSection, POLICY_VERSION_1, on);
+  const half = reportingQuality(halfYearly, openBooks(halfYearly, on), crossSection, POLICY_VERSION_1, on);
   expect(half.history.at(-1)?.quarterEnd).toBe('2026-06-30');
   const [before, latest] = half.history.slice(-2).map(({ score }) => score!);
   expect(half.headline).toBeCloseTo((before! + latest!) / 2, 10);
   expect(half.provisional).toBe(false);
-  expect(reportingQuality(annual, crossSection, POLICY_VERSION_1, on)).toMatchObject({ provisional: true });
+  expect(reportingQuality(annual, openBooks(annual, on), crossSection, POLICY_VERSION_1, on)).toMatchObject({
+    provisional: true,
+  });
 });
 
 test('the band moves by five points past a line, and a small move is said to be no news', () => {

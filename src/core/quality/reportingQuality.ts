@@ -1,11 +1,12 @@
 import { NEVER_SCORED, type BorrowerInputs } from '../borrowerInputs.ts';
 import { addMonthsToMonthEnd, type PlainDate } from '../calendar/plainDate.ts';
 import type { Policy } from '../policy.ts';
+import type { Books } from '../statements/statementBook.ts';
 import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
 import type { CrossSection } from './crossSection.ts';
 import { explain } from './explanations.ts';
 import { bandAfter, headlineOf } from './headline.ts';
-import { peerInputsOfQuarters } from './peerInputs.ts';
+import { peerInputsFrom } from './peerInputs.ts';
 import { scoreQuarter } from './quarterScore.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import { moveRemark, remarksOf } from './remarks.ts';
@@ -20,17 +21,18 @@ import { QUALITY_BANDS, type QualityBand, type QuarterScore, type ReportingQuali
  * It is no finding of misconduct, no default probability and no covenant result. No score has its reason. Source:
  * methods.md B6.
  *
- * @example reportingQuality(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').provisional // => false
+ * @example reportingQuality(inputs, openBooks(inputs, '2026-11-30'), crossSection, POLICY_VERSION_1, '2026-11-30').provisional // => false
  */
 export function reportingQuality(
   inputs: BorrowerInputs,
+  books: Books,
   crossSection: CrossSection,
   policy: Policy,
   asOf: PlainDate,
 ): ReportingQuality {
   if (NEVER_SCORED.includes(inputs.legalForm))
     return unscored(`The legal form is ${inputs.legalForm}; this form is not scored.`);
-  const peers = peerInputsOfQuarters(inputs, asOf);
+  const peers = peerInputsFrom(inputs, books);
   const latestPeer = peers.at(-1);
   if (!latestPeer) return unscored(`No balance sheet of a quarter end is known on ${asOf}.`);
 

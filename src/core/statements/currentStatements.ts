@@ -1,5 +1,5 @@
 /** Which version of a period is in force: what was known by a day, in one scope, best basis and latest version. */
-import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { Statement, StatementBasis, StatementScope } from './statement.ts';
 
@@ -40,6 +40,32 @@ export const knownStatements = (
   );
 
 /**
+ * Every version of each period, under periodKey; a period end within six days of a month end belongs to that month.
+ *
+ * @example versionsByPeriod(statements).get(periodKey('2026-09-30', 9))?.length // => 1
+ */
+export function versionsByPeriod(
+  statements: readonly Statement[],
+): ReadonlyMap<string, readonly [Statement, ...Statement[]]> {
+  const byPeriod = new Map<string, [Statement, ...Statement[]]>();
+  for (const statement of statements) {
+    const key = periodKey(statement.periodEnd, statement.months);
+    const versions = byPeriod.get(key);
+    if (versions) versions.push(statement);
+    else byPeriod.set(key, [statement]);
+  }
+  return byPeriod;
+}
+
+/**
+ * One text for each period: its end and its length.
+ *
+ * @example periodKey('2025-01-03', 12) // => '2024-12-31 12'
+ */
+export const periodKey = (periodEnd: PlainDate, months: number): string =>
+  `${reportingMonthEnd(periodEnd)} ${months}`;
+
+/**
  * One statement per period end and length, in order of period end: audited over reviewed over management where
  * the same period exists on several bases, then the latest version.
  *
@@ -47,52 +73,27 @@ export const knownStatements = (
  *
  * @example currentStatements(statements, { scope: 'group', asOf: '2026-11-30' }).at(-1)?.months // => 9
  */
-export function currentStatements(
+export const currentStatements = (
   statements: readonly Statement[],
   selection: StatementSelection,
-): readonly Statement[] {
-  const byPeriod = new Map<string, Statement[]>();
-  for (const statement of knownStatements(statements, selection)) {
-    const key = `${reportingMonthEnd(statement.periodEnd)} ${statement.months}`;
-    byPeriod.set(key, [...(byPeriod.get(key) ?? []), statement]);
-  }
-  return [...byPeriod.values()]
-    .map((versions) => versions.reduce(better))
-    .sort((a, b) => compareText(a.periodEnd, b.periodEnd) || a.months - b.months);
-}
+): readonly Statement[] =>
+  [...versionsByPeriod(knownStatements(statements, selection)).values()].map(inForce).sort(byPeriodEnd);
 
 /**
- * The statement in force among versions of one period; null where there is none.
+ * The statement in force among versions of one period.
  *
- * @example inForce([]) // => null
+ * @example inForce([statements[0]]).months // => 9
  */
-export const inForce = (versions: readonly Statement[]): Statement | null =>
-  versions.length === 0 ? null : versions.reduce(better);
+export const inForce = ([first, ...others]: readonly [Statement, ...Statement[]]): Statement =>
+  others.reduce(better, first);
 
 /**
- * Every version of one period that is given.
+ * The order of period ends, the shorter period first.
  *
- * @example versionsOf(statements, '2026-09-30', 9).length // => 1
+ * @example byPeriodEnd(statements[0], statements[1]) // => -1
  */
-export const versionsOf = (
-  statements: readonly Statement[],
-  periodEnd: PlainDate,
-  months: number,
-): Statement[] =>
-  statements.filter(
-    (statement) => statement.months === months && isSamePeriodEnd(statement.periodEnd, periodEnd),
-  );
-
-/**
- * The statement in force for one period end and length; null where there is none.
- *
- * @example statementOf(statements, '2026-09-30', 3) // => null
- */
-export const statementOf = (
-  statements: readonly Statement[],
-  periodEnd: PlainDate,
-  months: number,
-): Statement | null => inForce(versionsOf(statements, periodEnd, months));
+export const byPeriodEnd = (one: Statement, other: Statement): number =>
+  compareText(one.periodEnd, other.periodEnd) || one.months - other.months;
 
 function better(one: Statement, other: Statement): Statement {
   const order =

@@ -1,9 +1,10 @@
 import { describe, expect, test } from 'vitest';
 import { decimal } from '../money/decimal.ts';
-import { currentStatements, knownStatements } from './currentStatements.ts';
+import { currentStatements } from './currentStatements.ts';
 import { balanceAt, flowOver, lastTwelveMonths, quarterFlow } from './flows.ts';
 import type { Reading } from './reading.ts';
 import { buildStatement } from './statement.fixture.ts';
+import { bookOf, openBook } from './statementBook.ts';
 
 const amount = (reading: Reading): string =>
   reading.kind === 'value' ? reading.value.toFixed() : reading.kind;
@@ -38,17 +39,17 @@ describe('the statement in force', () => {
 describe('balances and exact periods', () => {
   test('a period end within six days of a month end belongs to that month', () => {
     const statements = [buildStatement('2025-12-28', 0, { cash: 7 })];
-    expect(amount(balanceAt(statements, 'cash', '2025-12-31'))).toBe('7');
+    expect(amount(balanceAt(bookOf(statements, 12), 'cash', '2025-12-31'))).toBe('7');
   });
 
   test('a zero is a zero and a blank is missing, named by line and period', () => {
     const statements = [buildStatement('2025-12-31', 0, { cash: 0 })];
-    expect(amount(balanceAt(statements, 'cash', '2025-12-31'))).toBe('0');
-    expect(balanceAt(statements, 'inventory', '2025-12-31')).toEqual({
+    expect(amount(balanceAt(bookOf(statements, 12), 'cash', '2025-12-31'))).toBe('0');
+    expect(balanceAt(bookOf(statements, 12), 'inventory', '2025-12-31')).toEqual({
       kind: 'missing',
       missing: [{ line: 'inventory', periodEnd: '2025-12-31', months: 0 }],
     });
-    expect(flowOver(statements, 'revenue', '2025-12-31', 12)).toEqual({
+    expect(flowOver(bookOf(statements, 12), 'revenue', '2025-12-31', 12)).toEqual({
       kind: 'missing',
       missing: [{ line: 'statement', periodEnd: '2025-12-31', months: 12 }],
     });
@@ -58,7 +59,9 @@ describe('balances and exact periods', () => {
     const apart = [buildStatement('2025-12-31', 12, { depreciation: 3, amortisation: 0.7 })];
     const sum = [buildStatement('2025-12-31', 12, { depreciation_and_amortisation: 3.7 })];
     for (const statements of [apart, sum])
-      expect(amount(flowOver(statements, 'depreciation_and_amortisation', '2025-12-31', 12))).toBe('3.7');
+      expect(
+        amount(flowOver(bookOf(statements, 12), 'depreciation_and_amortisation', '2025-12-31', 12)),
+      ).toBe('3.7');
   });
 });
 
@@ -70,12 +73,12 @@ describe('a quarter', () => {
   ];
 
   test('is the three-month statement, else a difference of years to date', () => {
-    expect(amount(quarterFlow(yearToDate, 'revenue', '2025-03-31', 12))).toBe('20');
-    expect(amount(quarterFlow(yearToDate, 'revenue', '2025-12-31', 12))).toBe('29');
+    expect(amount(quarterFlow(bookOf(yearToDate, 12), 'revenue', '2025-03-31'))).toBe('20');
+    expect(amount(quarterFlow(bookOf(yearToDate, 12), 'revenue', '2025-12-31'))).toBe('29');
   });
 
   test('is missing where a year to date is missing, and says which', () => {
-    expect(quarterFlow(yearToDate, 'revenue', '2025-09-30', 12)).toEqual({
+    expect(quarterFlow(bookOf(yearToDate, 12), 'revenue', '2025-09-30')).toEqual({
       kind: 'missing',
       missing: [{ line: 'statement', periodEnd: '2025-06-30', months: 6 }],
     });
@@ -85,10 +88,9 @@ describe('a quarter', () => {
     expect(
       amount(
         quarterFlow(
-          [...yearToDate, buildStatement('2026-03-31', 3, { revenue: 22 })],
+          bookOf([...yearToDate, buildStatement('2026-03-31', 3, { revenue: 22 })], 12),
           'revenue',
           '2026-03-31',
-          12,
         ),
       ),
     ).toBe('22');
@@ -103,7 +105,7 @@ describe('twelve months', () => {
   ];
 
   test('are year to date + last full year - the same year to date a year earlier, each with its sign', () => {
-    const reading = lastTwelveMonths(pieces, 'revenue', '2025-09-30', 12);
+    const reading = lastTwelveMonths(bookOf(pieces, 12), 'revenue', '2025-09-30');
     expect(amount(reading)).toBe('108');
     expect(reading.kind === 'value' && reading.inputs.map(({ sign, months }) => [sign, months])).toEqual([
       [1, 9],
@@ -113,7 +115,7 @@ describe('twelve months', () => {
   });
 
   test('are missing where any part is missing, with the gap named', () => {
-    expect(lastTwelveMonths(pieces.slice(1), 'revenue', '2025-09-30', 12)).toEqual({
+    expect(lastTwelveMonths(bookOf(pieces.slice(1), 12), 'revenue', '2025-09-30')).toEqual({
       kind: 'missing',
       missing: [{ line: 'statement', periodEnd: '2024-09-30', months: 9 }],
     });
@@ -123,14 +125,14 @@ describe('twelve months', () => {
     const quarters = ['2024-12-31', '2025-03-31', '2025-06-30', '2025-09-30'].map((end, index) =>
       buildStatement(end as '2024-12-31', 3, { revenue: 20 + index }),
     );
-    expect(amount(lastTwelveMonths(quarters, 'revenue', '2025-09-30', 12))).toBe('86');
+    expect(amount(lastTwelveMonths(bookOf(quarters, 12), 'revenue', '2025-09-30'))).toBe('86');
   });
 
   test('from quarters name the quarter that is missing, not a year to date that never came', () => {
     const quarters = (['2024-12-31', '2025-03-31', '2025-09-30'] as const).map((end) =>
       buildStatement(end, 3, { revenue: 20 }),
     );
-    expect(lastTwelveMonths(quarters, 'revenue', '2025-09-30', 12)).toEqual({
+    expect(lastTwelveMonths(bookOf(quarters, 12), 'revenue', '2025-09-30')).toEqual({
       kind: 'missing',
       missing: [{ line: 'statement', periodEnd: '2025-06-30', months: 3 }],
     });
@@ -146,14 +148,18 @@ describe('twelve months', () => {
   test('by two routes may differ by what rounding explains and no more', () => {
     // five figures rounded to whole units: tolerance 5 x 1 / 2 = 2.5
     const year = buildStatement('2025-12-31', 12, { revenue: 100 });
-    expect(amount(lastTwelveMonths([year, ...quarterly(27.5)], 'revenue', '2025-12-31', 12))).toBe('100');
-    const apart = lastTwelveMonths([year, ...quarterly(27.6)], 'revenue', '2025-12-31', 12);
+    expect(amount(lastTwelveMonths(bookOf([year, ...quarterly(27.5)], 12), 'revenue', '2025-12-31'))).toBe(
+      '100',
+    );
+    const apart = lastTwelveMonths(bookOf([year, ...quarterly(27.6)], 12), 'revenue', '2025-12-31');
     expect(apart.kind === 'not-meaningful' && apart.reason).toMatch(/100 by .* and 102\.6 by four quarters/);
   });
 
   test('that rest on an audited year supersede quarters on management figures', () => {
     const audited = buildStatement('2025-12-31', 12, { revenue: 100 }, { basis: 'audited' });
-    expect(amount(lastTwelveMonths([audited, ...quarterly(40)], 'revenue', '2025-12-31', 12))).toBe('100');
+    expect(amount(lastTwelveMonths(bookOf([audited, ...quarterly(40)], 12), 'revenue', '2025-12-31'))).toBe(
+      '100',
+    );
   });
 });
 
@@ -168,25 +174,26 @@ describe('a restatement', () => {
     buildStatement(end, months, { revenue, cogs }, { version: 2, receivedOn: '2025-11-10' });
 
   test('of both parts gives the same twelve months (97 - 71 = 100 - 74)', () => {
-    const all = knownStatements(
+    const all = openBook(
       [...originals, restated('2024-12-31', 12, 97, 60), restated('2024-09-30', 9, 71, 40)],
       selection,
+      12,
     );
-    expect(amount(lastTwelveMonths(all, 'revenue', '2025-09-30', 12))).toBe('108');
+    expect(amount(lastTwelveMonths(all, 'revenue', '2025-09-30'))).toBe('108');
   });
 
   test('of one part alone is not mixed into twelve months', () => {
     const onlyYear = [...originals, restated('2024-12-31', 12, 97, 60)];
     const onlyNineMonths = [...originals, restated('2024-09-30', 9, 71, 40)];
     for (const all of [onlyYear, onlyNineMonths]) {
-      const reading = lastTwelveMonths(all, 'revenue', '2025-09-30', 12);
+      const reading = lastTwelveMonths(bookOf(all, 12), 'revenue', '2025-09-30');
       expect(reading.kind === 'not-meaningful' && reading.reason).toContain('not mixed');
     }
   });
 
   test('leaves lines alone that it did not change', () => {
     const all = [...originals, restated('2024-12-31', 12, 97, 60)];
-    expect(amount(lastTwelveMonths(all, 'cogs', '2025-09-30', 12))).toBe('65');
+    expect(amount(lastTwelveMonths(bookOf(all, 12), 'cogs', '2025-09-30'))).toBe('65');
   });
 
   test('is not what a new version is that comes before any later period', () => {
@@ -196,7 +203,7 @@ describe('a restatement', () => {
       { revenue: 97 },
       { version: 2, receivedOn: '2025-03-31' },
     );
-    expect(amount(lastTwelveMonths([...originals, closed], 'revenue', '2025-09-30', 12))).toBe('105');
+    expect(amount(lastTwelveMonths(bookOf([...originals, closed], 12), 'revenue', '2025-09-30'))).toBe('105');
   });
 });
 
@@ -206,6 +213,6 @@ test('amounts enter as decimals, not doubles', () => {
       revenue,
     }),
   );
-  const reading = lastTwelveMonths(statements, 'revenue', '2025-12-31', 12);
+  const reading = lastTwelveMonths(bookOf(statements, 12), 'revenue', '2025-12-31');
   expect(reading.kind === 'value' && reading.value.eq(decimal(1))).toBe(true);
 });

@@ -2,37 +2,37 @@
 import { fiscalPosition, isSamePeriodEnd, lastYearEndBefore, monthsBefore } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
-import { basisRank, statementOf } from './currentStatements.ts';
+import { basisRank } from './currentStatements.ts';
 import { lineInputs } from './lineAmount.ts';
 import type { LineItemCode } from './lineItems.ts';
 import { sumOfInputs, sumOfReadings, type InputUsed, type Reading } from './reading.ts';
 import type { Statement } from './statement.ts';
+import type { StatementBook } from './statementBook.ts';
 import { roundingTolerance } from './tolerance.ts';
 import { restatedAlone } from './versionMix.ts';
 
 /**
- * The amount of a balance line on a day.
+ * The amount of a balance line on a day, of the version in force.
  *
- * Pass every known version (knownStatements) or the current ones: of several versions the one in force is read.
  * Whole currency units. Missing names the statement or the line that is not there.
  *
- * @example balanceAt(statements, 'cash', '2026-09-30').value // => 6000000
+ * @example balanceAt(book, 'cash', '2026-09-30').value // => 6000000
  */
-export const balanceAt = (statements: readonly Statement[], line: LineItemCode, date: PlainDate): Reading =>
-  flowOver(statements, line, date, 0);
+export const balanceAt = (book: StatementBook, line: LineItemCode, date: PlainDate): Reading =>
+  flowOver(book, line, date, 0);
 
 /**
  * The amount of a line in the statement of exactly that period end and length; 0 months is a balance.
  *
- * @example flowOver(statements, 'revenue', '2026-09-30', 9).value // => 66000000
+ * @example flowOver(book, 'revenue', '2026-09-30', 9).value // => 66000000
  */
 export function flowOver(
-  statements: readonly Statement[],
+  book: StatementBook,
   line: LineItemCode,
   periodEnd: PlainDate,
   months: number,
 ): Reading {
-  const statement = statementOf(statements, periodEnd, months);
+  const statement = book.statementOf(periodEnd, months);
   if (!statement) return { kind: 'missing', missing: [{ line: 'statement', periodEnd, months }] };
   const inputs = lineInputs(statement, line);
   if (!inputs) return { kind: 'missing', missing: [{ line, periodEnd: statement.periodEnd, months }] };
@@ -45,39 +45,31 @@ export function flowOver(
  *
  * Whole currency units. Source: methods.md A3. Not meaningful where the two would mix versions of the accounts.
  *
- * @example flowOfMonths(statements, 'revenue', '2026-09-30', 6, 12).value // => 44000000
+ * @example flowOfMonths(book, 'revenue', '2026-09-30', 6).value // => 44000000
  */
-export function flowOfMonths(
-  statements: readonly Statement[],
+export const flowOfMonths = (
+  book: StatementBook,
   line: LineItemCode,
   periodEnd: PlainDate,
   months: number,
-  fiscalYearEndMonth: number,
-): Reading {
-  const direct = flowOver(statements, line, periodEnd, months);
-  const intoYear = fiscalPosition(periodEnd, fiscalYearEndMonth).monthsIntoYear;
-  if (direct.kind === 'value' || intoYear <= months) return direct;
-  const longer = flowOver(statements, line, periodEnd, intoYear);
-  if (longer.kind === 'missing') return nothingButStatement(direct) ? gapOf(direct, longer) : direct;
-  return difference(
-    statements,
-    line,
-    [periodEnd, intoYear],
-    [monthsBefore(periodEnd, months), intoYear - months],
-  );
-}
+): Reading =>
+  book.kept(`${line} ${periodEnd} ${months}`, () => {
+    const direct = flowOver(book, line, periodEnd, months);
+    const intoYear = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
+    if (direct.kind === 'value' || intoYear <= months) return direct;
+    const longer = flowOver(book, line, periodEnd, intoYear);
+    if (longer.kind === 'missing') return nothingButStatement(direct) ? gapOf(direct, longer) : direct;
+    const before = monthsBefore(periodEnd, months);
+    return difference(book, line, [periodEnd, intoYear], [before, intoYear - months]);
+  });
 
 /**
  * The flow of one quarter.
  *
- * @example quarterFlow(statements, 'revenue', '2026-06-30', 12).value // => 23000000
+ * @example quarterFlow(book, 'revenue', '2026-06-30').value // => 23000000
  */
-export const quarterFlow = (
-  statements: readonly Statement[],
-  line: LineItemCode,
-  quarterEnd: PlainDate,
-  fiscalYearEndMonth: number,
-): Reading => flowOfMonths(statements, line, quarterEnd, 3, fiscalYearEndMonth);
+export const quarterFlow = (book: StatementBook, line: LineItemCode, quarterEnd: PlainDate): Reading =>
+  flowOfMonths(book, line, quarterEnd, 3);
 
 /**
  * The flow of the twelve months up to a period end.
@@ -89,120 +81,99 @@ export const quarterFlow = (
  *
  * Whole currency units. Source: methods.md A3 and A2. Any part missing: missing, with the gap named.
  *
- * @example lastTwelveMonths(statements, 'revenue', '2026-09-30', 12).value // => 90000000
+ * @example lastTwelveMonths(book, 'revenue', '2026-09-30').value // => 90000000
  */
-export function lastTwelveMonths(
-  statements: readonly Statement[],
-  line: LineItemCode,
-  periodEnd: PlainDate,
-  fiscalYearEndMonth: number,
-): Reading {
-  const yearToDate = byYearToDate(statements, line, periodEnd, fiscalYearEndMonth);
-  const quarters = byQuarters(statements, line, periodEnd, fiscalYearEndMonth);
-  const routes = [
-    { name: 'twelve-month statement', reading: flowOver(statements, line, periodEnd, 12) },
-    { name: 'year to date', reading: yearToDate },
-    { name: 'four quarters', reading: quarters },
-  ];
-  const [first, ...others] = routes.flatMap(({ name, reading }) =>
-    reading.kind === 'value' ? [{ name, reading }] : [],
-  );
-  if (!first) {
-    const refused = routes.find(({ reading }) => reading.kind === 'not-meaningful');
-    return refused?.reading ?? shorterGap(yearToDate, quarters, periodEnd);
-  }
-  const other = others.find(({ reading }) => contradicts(statements, first.reading, reading));
-  if (!other) return first.reading;
-  return {
-    kind: 'not-meaningful',
-    reason: `${line} over twelve months to ${periodEnd} is ${first.reading.value.toFixed()} by ${first.name} and ${other.reading.value.toFixed()} by ${other.name}`,
-    inputs: [...first.reading.inputs, ...other.reading.inputs],
-  };
-}
+export const lastTwelveMonths = (book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading =>
+  book.kept(`${line} ${periodEnd} twelve months`, () => {
+    const yearToDate = byYearToDate(book, line, periodEnd);
+    const quarters = byQuarters(book, line, periodEnd);
+    const routes = [
+      { name: 'twelve-month statement', reading: flowOver(book, line, periodEnd, 12) },
+      { name: 'year to date', reading: yearToDate },
+      { name: 'four quarters', reading: quarters },
+    ];
+    const [first, ...others] = routes.flatMap(({ name, reading }) =>
+      reading.kind === 'value' ? [{ name, reading }] : [],
+    );
+    if (!first) {
+      const refused = routes.find(({ reading }) => reading.kind === 'not-meaningful');
+      return refused?.reading ?? shorterGap(yearToDate, quarters, periodEnd);
+    }
+    const other = others.find(({ reading }) => contradicts(book, first.reading, reading));
+    if (!other) return first.reading;
+    return {
+      kind: 'not-meaningful',
+      reason: `${line} over twelve months to ${periodEnd} is ${first.reading.value.toFixed()} by ${first.name} and ${other.reading.value.toFixed()} by ${other.name}`,
+      inputs: [...first.reading.inputs, ...other.reading.inputs],
+    };
+  });
 
 type Value = Extract<Reading, { kind: 'value' }>;
 
-function byYearToDate(
-  statements: readonly Statement[],
-  line: LineItemCode,
-  periodEnd: PlainDate,
-  fiscalYearEndMonth: number,
-): Reading {
-  const months = fiscalPosition(periodEnd, fiscalYearEndMonth).monthsIntoYear;
-  const yearToDate = flowOver(statements, line, periodEnd, months);
+function byYearToDate(book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading {
+  const months = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
+  const yearToDate = flowOver(book, line, periodEnd, months);
   if (months === 12) return yearToDate;
-  const lastYearEnd = lastYearEndBefore(periodEnd, fiscalYearEndMonth);
+  const lastYearEnd = lastYearEndBefore(periodEnd, book.fiscalYearEndMonth);
+  const rest = difference(book, line, [lastYearEnd, 12], [monthsBefore(periodEnd, 12), months]);
   return sumOfReadings([
     { sign: 1, reading: yearToDate },
-    {
-      sign: 1,
-      reading: difference(statements, line, [lastYearEnd, 12], [monthsBefore(periodEnd, 12), months]),
-    },
+    { sign: 1, reading: rest },
   ]);
 }
 
-const byQuarters = (
-  statements: readonly Statement[],
-  line: LineItemCode,
-  periodEnd: PlainDate,
-  fiscalYearEndMonth: number,
-): Reading =>
+const byQuarters = (book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading =>
   sumOfReadings(
     [9, 6, 3, 0].map((months) => ({
       sign: 1 as const,
-      reading: quarterFlow(statements, line, monthsBefore(periodEnd, months), fiscalYearEndMonth),
+      reading: quarterFlow(book, line, monthsBefore(periodEnd, months)),
     })),
   );
 
 /** A longer period less a shorter one that begins on the same day, refused where only the longer was restated. */
 function difference(
-  statements: readonly Statement[],
+  book: StatementBook,
   line: LineItemCode,
   longer: readonly [PlainDate, number],
   shorter: readonly [PlainDate, number],
 ): Reading {
-  const whole = flowOver(statements, line, ...longer);
-  const part = flowOver(statements, line, ...shorter);
   const sum = sumOfReadings([
-    { sign: 1, reading: whole },
-    { sign: -1, reading: part },
+    { sign: 1, reading: flowOver(book, line, ...longer) },
+    { sign: -1, reading: flowOver(book, line, ...shorter) },
   ]);
   if (sum.kind !== 'value') return sum;
-  const restated =
-    restatedAlone(statements, line, longer, shorter) ?? restatedAlone(statements, line, shorter, longer);
+  const restated = restatedAlone(book, line, longer, shorter) ?? restatedAlone(book, line, shorter, longer);
   return restated ? { kind: 'not-meaningful', reason: restated, inputs: sum.inputs } : sum;
 }
 
-function contradicts(statements: readonly Statement[], one: Value, other: Value): boolean {
-  const [first, second] = [
-    statementsBehind(statements, one.inputs),
-    statementsBehind(statements, other.inputs),
-  ];
+function contradicts(book: StatementBook, one: Value, other: Value): boolean {
+  if (one.value.eq(other.value)) return false;
+  const [first, second] = [statementsBehind(book, one.inputs), statementsBehind(book, other.inputs)];
   if (bestBasis(first) !== bestBasis(second)) return false;
   const tolerance = roundingTolerance({
     roundingUnit: Decimal.max(...[...first, ...second].map(({ roundingUnit }) => roundingUnit)),
     figures: one.inputs.length + other.inputs.length,
-    reference: revenueBehind(statements, one.inputs) ?? one.value,
+    reference: revenueBehind(book, one.inputs) ?? one.value,
   });
   return one.value.minus(other.value).abs().gt(tolerance);
 }
 
 /** Revenue over the same periods, added up as the inputs are. */
-function revenueBehind(statements: readonly Statement[], inputs: readonly InputUsed[]): Decimal | null {
+function revenueBehind(book: StatementBook, inputs: readonly InputUsed[]): Decimal | null {
   const seen = new Set<number>();
   let sum = ZERO;
   for (const { statementId, sign } of inputs) {
     if (seen.has(statementId)) continue;
     seen.add(statementId);
-    const revenue = statements.find(({ id }) => id === statementId)?.amounts.revenue;
+    const revenue = book.statementById(statementId)?.amounts.revenue;
     if (!revenue) return null;
     sum = sum.plus(revenue.times(sign));
   }
   return sum;
 }
 
-const statementsBehind = (statements: readonly Statement[], inputs: readonly InputUsed[]): Statement[] =>
-  statements.filter(({ id }) => inputs.some(({ statementId }) => statementId === id));
+const statementsBehind = (book: StatementBook, inputs: readonly InputUsed[]): Statement[] =>
+  inputs.flatMap(({ statementId }) => book.statementById(statementId) ?? []);
 
 const bestBasis = (statements: readonly Statement[]): number =>
   Math.max(...statements.map(({ basis }) => basisRank(basis)));

@@ -1,7 +1,7 @@
 import { ZERO } from '../money/decimal.ts';
 import type { LineItemCode } from './lineItems.ts';
 import type { Reading } from './reading.ts';
-import type { Statement } from './statement.ts';
+import type { StatementBook } from './statementBook.ts';
 
 const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
 
@@ -11,17 +11,7 @@ const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
  *
  * Desk practice, no source.
  *
- * @example orNoneIfNeverCarried(statements, 'junior_debt', { kind: 'missing', missing: [] }).value // => 0
+ * @example orNoneIfNeverCarried(book, 'junior_debt', { kind: 'missing', missing: [] }).value // => 0
  */
-export function orNoneIfNeverCarried(
-  statements: readonly Statement[],
-  line: LineItemCode,
-  reading: Reading,
-): Reading {
-  if (reading.kind !== 'missing') return reading;
-  const carried = statements.some(({ amounts }) => {
-    const amount = amounts[line];
-    return amount !== undefined && !amount.isZero();
-  });
-  return carried ? reading : NONE;
-}
+export const orNoneIfNeverCarried = (book: StatementBook, line: LineItemCode, reading: Reading): Reading =>
+  reading.kind === 'missing' && !book.carries(line) ? NONE : reading;
