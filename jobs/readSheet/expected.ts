@@ -64,7 +64,7 @@ export function printed(file: string, reading: Reading): PrintedReading {
   };
 }
 
-export const printedFact = ({
+const printedFact = ({
   code,
   periodEnd,
   months,

@@ -1,10 +1,11 @@
 /** What must add up, period by period, with the tolerances of methods.md A2. Nothing is plugged. */
 import { decimal, ZERO, type Decimal } from '#core/money/decimal.ts';
-import { balanceIdentity, cashIdentity, identity, type IdentityResult } from '#core/statements/identities.ts';
+import { balanceIdentity, cashIdentity, identity } from '#core/statements/identities.ts';
 import type { ReadCheck } from '#core/statements/workbookReading.ts';
+import { checkedColumns, checkOf, type CheckedTable } from './checkedTables.ts';
 import type { EntityColumns } from './entities.ts';
-import { COST_LINES } from './signs.ts';
-import type { Run, SettledColumn, StatementTable } from './statements.ts';
+import { sumChecks } from './sumChecks.ts';
+import type { Run, SettledColumn } from './statements.ts';
 import type { SettledScale } from './units.ts';
 import type { Line } from './wordings/lines.ts';
 
@@ -14,11 +15,6 @@ interface Period {
   readonly months: number;
   readonly step: Decimal;
   readonly amounts: Map<Line, Decimal>;
-}
-
-export interface CheckedTable {
-  readonly table: StatementTable;
-  readonly scale: SettledScale;
 }
 
 export function checksOf(tables: readonly CheckedTable[], entities: EntityColumns): ReadCheck[] {
@@ -44,15 +40,6 @@ function worstOfEach(checks: readonly ReadCheck[]): ReadCheck[] {
     if (!before || gravity.indexOf(check.outcome) > gravity.indexOf(before.outcome)) worst.set(key, check);
   }
   return [...worst.values()];
-}
-
-/** Columns of a length that is still open are checked as well: sums hold at any length. */
-const isActual = ({ scenario }: SettledColumn): boolean => scenario === 'actual';
-
-/** All entities while none is chosen, each for itself. */
-function checkedColumns(table: StatementTable, entities: EntityColumns): readonly SettledColumn[] {
-  const chosen = (entities.columns.get(table) ?? []).filter(isActual);
-  return chosen.length > 0 ? chosen : (entities.all.get(table) ?? []).filter(isActual);
 }
 
 /** Figures by period, helper lines included; the first row of a line that is a total, the sum of parts otherwise. */
@@ -95,23 +82,6 @@ function addAmounts(period: Period, run: Run, column: SettledColumn, scale: Sett
   });
 }
 
-function check(
-  code: string,
-  text: string,
-  result: IdentityResult,
-  period: Pick<Period, 'end' | 'months'>,
-): ReadCheck {
-  return {
-    code,
-    text,
-    outcome: result.outcome,
-    difference: result.difference.toFixed(),
-    tolerance: result.tolerance.toFixed(),
-    periodEnd: period.end,
-    months: period.months,
-  };
-}
-
 function balanceChecks(period: Period): ReadCheck[] {
   const { amounts, step } = period;
   const equity = amounts.get('equity');
@@ -127,7 +97,7 @@ function balanceChecks(period: Period): ReadCheck[] {
       equity,
       roundingUnit: step,
     });
-    return [check('balance', 'Total assets against total liabilities and equity', result, period)];
+    return [checkOf('balance', 'Total assets against total liabilities and equity', result, period)];
   }
   if (totalAssets && both) {
     const result = identity({
@@ -136,7 +106,7 @@ function balanceChecks(period: Period): ReadCheck[] {
       reference: totalAssets,
       roundingUnit: step,
     });
-    return [check('balance', 'Total assets against total equity and liabilities', result, period)];
+    return [checkOf('balance', 'Total assets against total equity and liabilities', result, period)];
   }
   return netAssetChecks(period);
 }
@@ -153,7 +123,7 @@ function netAssetChecks({ amounts, step, end, months }: Period): ReadCheck[] {
     reference: lessCurrent,
     roundingUnit: step,
   });
-  return [check('balance', 'Net assets against assets less all creditors', result, { end, months })];
+  return [checkOf('balance', 'Net assets against assets less all creditors', result, { end, months })];
 }
 
 function sumOf(amounts: ReadonlyMap<Line, Decimal>, ...lines: readonly Line[]): Decimal | null {
@@ -175,7 +145,7 @@ function cashChecks(period: Period, periods: ReadonlyMap<string, Period>): ReadC
   if (opening && (flows.length >= 3 || change)) {
     const parts = flows.length >= 3 ? flows : change ? [change] : [];
     const result = cashIdentity({ opening, flows: parts, closing, totalAssets, roundingUnit: step });
-    checks.push(check('cash-roll', 'Opening cash and cash flows against closing cash', result, period));
+    checks.push(checkOf('cash-roll', 'Opening cash and cash flows against closing cash', result, period));
   }
   const onBalance = balance?.get('cash');
   if (onBalance) {
@@ -183,89 +153,9 @@ function cashChecks(period: Period, periods: ReadonlyMap<string, Period>): ReadC
     const of = (cash: Decimal) =>
       identity({ given: closing, parts: [cash], reference: totalAssets, roundingUnit: step });
     const result = of(onBalance).outcome === 'ties' ? of(onBalance) : of(onBalance.plus(restricted));
-    checks.push(check('cash-roll', 'Closing cash against cash in the balance sheet', result, period));
+    checks.push(checkOf('cash-roll', 'Closing cash against cash in the balance sheet', result, period));
   }
   return checks;
-}
-
-const INCOME_CODES: Readonly<Partial<Record<Line, string>>> = {
-  gross_profit: 'gross-profit',
-  profit_before_tax: 'pbt',
-  net_income: 'net-income',
-};
-
-/** Totals against their parts, as arithmetic found them or as they should have been. */
-function sumChecks({ table, scale }: CheckedTable, entities: EntityColumns): ReadCheck[] {
-  return table.runs.flatMap((run) =>
-    checkedColumns(table, entities).flatMap((column) =>
-      [...run.signed.sums.sums, ...run.signed.sums.untied].flatMap(([index, parts]) => {
-        const result = sumCheck(run, index, parts, column);
-        return result ? [scaled(result, scale)] : [];
-      }),
-    ),
-  );
-}
-
-const scaled = (found: ReadCheck, { unit }: SettledScale): ReadCheck => ({
-  ...found,
-  difference: decimal(found.difference)
-    .times(unit ?? 1)
-    .toFixed(),
-  tolerance: decimal(found.tolerance)
-    .times(unit ?? 1)
-    .toFixed(),
-});
-
-function sumCheck(
-  run: Run,
-  index: number,
-  parts: readonly number[],
-  column: SettledColumn,
-): ReadCheck | null {
-  const total = run.rows[index];
-  const given = run.amounts[index]?.[column.index];
-  const code = total?.line ? INCOME_CODES[total.line] : undefined;
-  const untied = run.signed.sums.untied.has(index);
-  if (!total || !given || (!code && !untied) || (untied && !isWhole(run, total.line, parts))) return null;
-  const contributions = parts.flatMap((part) => {
-    const amount = run.amounts[part]?.[column.index];
-    return amount ? [amount.times(contributionOf(run, part))] : [];
-  });
-  if (contributions.length < 2) return null;
-  const reference = referenceOf(run, column) ?? given.abs();
-  const result = identity({
-    given: given.times(contributionOf(run, index)),
-    parts: contributions,
-    reference,
-    roundingUnit: run.step,
-  });
-  const period = { end: column.end, months: run.part === 'balance' ? 0 : (column.months ?? 0) };
-  return check(code ?? 'subtotal', `${total.row.label} against the rows it is made of`, result, period);
-}
-
-/** How a printed row goes into its total: costs lower it. */
-function contributionOf(run: Run, index: number): 1 | -1 {
-  const line = run.rows[index]?.line ?? null;
-  const factor = run.part === 'balance' ? 1 : run.signed.factorOf(index, line);
-  return (line && COST_LINES.has(line) ? -factor : factor) as 1 | -1;
-}
-
-/** A short table that leaves lines out proves nothing of its totals. */
-function isWhole(run: Run, line: Line | null, parts: readonly number[]): boolean {
-  const lines = parts.map((part) => run.rows[part]?.line);
-  if (line === 'profit_before_tax')
-    return lines.includes('interest_expense') || lines.includes('net_finance_result');
-  if (line === 'net_income') return lines.includes('income_tax') && lines.includes('profit_before_tax');
-  if (line === 'gross_profit') return lines.includes('revenue') && lines.includes('cogs');
-  if (line === 'ebit') return parts.length >= 3;
-  return parts.length >= 2;
-}
-
-function referenceOf(run: Run, column: SettledColumn): Decimal | null {
-  const wanted: readonly Line[] =
-    run.part === 'income' ? ['revenue'] : ['total_assets', 'total_equity_and_liabilities'];
-  const index = run.rows.findIndex(({ line }) => line !== null && wanted.includes(line));
-  return run.amounts[index]?.[column.index]?.abs() ?? null;
 }
 
 /** Quarters against the year to date of the same day. */
@@ -283,7 +173,7 @@ function quarterChecks(periods: ReadonlyMap<string, Period>): ReadCheck[] {
       reference: revenue,
       roundingUnit: period.step,
     });
-    return [check('quarters-ytd', 'Revenue of the quarters against the year to date', result, period)];
+    return [checkOf('quarters-ytd', 'Revenue of the quarters against the year to date', result, period)];
   });
 }
 

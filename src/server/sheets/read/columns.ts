@@ -83,7 +83,7 @@ function roleOf(headings: readonly HeadingText[], anyPeriod: boolean): ColumnWor
 }
 
 /** The lower heading says more of its column than the one above. */
-export function combinePeriods(upper: PeriodText, lower: PeriodText): PeriodText {
+function combinePeriods(upper: PeriodText, lower: PeriodText): PeriodText {
   return {
     end: lower.end ?? upper.end,
     start: lower.start ?? upper.start,

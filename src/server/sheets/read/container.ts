@@ -4,7 +4,7 @@ import type { ReadNote, ReadRefusal } from '#core/statements/workbookReading.ts'
 import { refusal } from './refusals.ts';
 import { checkArchive } from './zipGate.ts';
 
-export const MAX_FILE_BYTES = 10 * 1024 * 1024;
+const MAX_FILE_BYTES = 10 * 1024 * 1024;
 
 export interface Container {
   readonly kind: 'xlsx' | 'csv';

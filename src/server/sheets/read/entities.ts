@@ -1,9 +1,8 @@
 /** Several names for one period are several entities: one is chosen, none is ever added to another. */
 import { cellName } from './cells.ts';
 import type { Asking } from './asking.ts';
-import type { SettledColumns } from './lengths.ts';
 import { plainText } from './plainWords.ts';
-import type { SettledColumn, StatementTable } from './statements.ts';
+import type { SettledColumns, SettledColumn, StatementTable } from './statements.ts';
 
 const NO_ENTITY = /elimin|adjust|konsolidierung|consolidation adj|intercompany|intra.?group|reconcil/;
 const BORROWER_HEADING =

@@ -13,7 +13,7 @@ import { chooseEntities } from './entities.ts';
 import { factsOfRun, type TableFact } from './facts.ts';
 import { withoutJumps } from './jumps.ts';
 import { layoutKeyOf } from './layoutKey.ts';
-import { settleColumns, type SettledColumns } from './lengths.ts';
+import { settleColumns } from './lengths.ts';
 import { refuseForGaps } from './needed.ts';
 import { noteContents } from './remarks.ts';
 import { holdsPersonalData } from './personalSheets.ts';
@@ -22,9 +22,10 @@ import { askUnbalanced, readingOf, refusedReading } from './readings.ts';
 import { refusal } from './refusals.ts';
 import { withoutRepeatedColumns, withoutRepeatedTables } from './repeats.ts';
 import { readTrialBalance } from './trialBalance.ts';
-import { isStandardLine } from './signs.ts';
-import { statementTables, type Run, type StatementTable } from './statements.ts';
-import { isAmount } from './tables.ts';
+import { isStandardLine } from './lineNature.ts';
+import { type SettledColumns, statementTables, type Run, type StatementTable } from './statements.ts';
+import { isAmount } from './segments.ts';
+
 import { settleScales, type SettledScale } from './units.ts';
 import { periodEvidence } from './yearEnd.ts';
 

@@ -108,7 +108,7 @@ const FILLERS = new Set(
 const tokensOf = (text: string): string[] => text.split(' ').filter((word) => !FILLERS.has(word));
 
 /** Words in common, a misspelt word counting almost as itself. */
-export function likenessOf(text: string, wording: string): number {
+function likenessOf(text: string, wording: string): number {
   const [own, other] = [tokensOf(text), tokensOf(wording)];
   if (own.length === 0 || other.length === 0) return 0;
   const free = [...other];

@@ -1,10 +1,10 @@
 /** Errors and uncalculated formulas: in a figure that is needed they end the reading, elsewhere they are remarked on. */
+import type { SettledColumns } from './statements.ts';
 import type { ReadRefusal } from '#core/statements/workbookReading.ts';
 import type { Asking } from './asking.ts';
 import { cellName, type SheetCell, type WorkbookGrid } from './cells.ts';
-import type { SettledColumns } from './lengths.ts';
 import { refusal } from './refusals.ts';
-import { isStandardLine } from './signs.ts';
+import { isStandardLine } from './lineNature.ts';
 
 export function refuseForGaps(
   grid: WorkbookGrid,

@@ -2,7 +2,8 @@
 import { cellAt, type SheetCell } from './cells.ts';
 import { readHeadingText, saysPeriod } from './headingText.ts';
 import { lineOf, PARTS } from './labels.ts';
-import { isAmount, type Table, type TableColumn, type TableRow } from './tables.ts';
+import { isAmount } from './segments.ts';
+import { type Table, type TableColumn, type TableRow } from './tables.ts';
 
 const FIELDS = {
   months: /^(?:months?|no\.? of months|period months|length|monate|mois|meses)$/i,

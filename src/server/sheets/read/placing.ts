@@ -5,7 +5,7 @@ import type { Question } from '#core/statements/workbookReading.ts';
 import type { Asking } from './asking.ts';
 import { nearLines, type Part } from './labels.ts';
 import type { ReadRow } from './rows.ts';
-import { COST_LINES, isStandardLine, isSubtotal } from './signs.ts';
+import { COST_LINES, isStandardLine, isSubtotal } from './lineNature.ts';
 import { LEAVE_OUT, placementKey, rowPlace, type Run, type StatementTable } from './statements.ts';
 import type { Line } from './wordings/lines.ts';
 

@@ -10,9 +10,8 @@ import type { Asking } from './asking.ts';
 import type { WorkbookGrid } from './cells.ts';
 import type { TableFact } from './facts.ts';
 import { layoutKeyOf } from './layoutKey.ts';
-import type { SettledColumns } from './lengths.ts';
 import { sheetsOut } from './sheetsOut.ts';
-import type { StatementTable } from './statements.ts';
+import type { SettledColumns, StatementTable } from './statements.ts';
 import type { SettledScale } from './units.ts';
 
 export interface ReadingParts {

@@ -3,8 +3,7 @@ import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { cellName } from './cells.ts';
 import type { Asking } from './asking.ts';
 import type { TableFact } from './facts.ts';
-import type { SettledColumns } from './lengths.ts';
-import type { SettledColumn, StatementTable } from './statements.ts';
+import type { SettledColumns, SettledColumn, StatementTable } from './statements.ts';
 
 /** Of columns for one period and one entity, those that are kept; equal ones once, differing ones asked about. */
 export function withoutRepeatedColumns(settled: SettledColumns, asking: Asking): SettledColumns {

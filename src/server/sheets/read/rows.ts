@@ -1,5 +1,6 @@
 /** Gives each row of a table its part of the statements, its section and, where its wording is known, its line. */
-import { isAmount, type Table, type TableRow } from './tables.ts';
+import { isAmount } from './segments.ts';
+import { type Table, type TableRow } from './tables.ts';
 import { lineOf, partOfTitle, PARTS, sectionOfHeading, type Part } from './labels.ts';
 import type { Line, Section } from './wordings/lines.ts';
 

@@ -1,12 +1,11 @@
 /** The grid of every sheet as the borrower sent it, for the page, and what each of its columns was read as. */
 import type { GridCell, ReadColumn, ReadSheet } from '#core/statements/workbookReading.ts';
 import { cellAt, type SheetGrid } from './cells.ts';
-import type { SettledColumns } from './lengths.ts';
 import { periodStart } from './periods.ts';
-import type { StatementTable } from './statements.ts';
+import type { SettledColumns, StatementTable } from './statements.ts';
 
-export const SHOWN_ROWS = 2_000;
-export const SHOWN_COLUMNS = 60;
+const SHOWN_ROWS = 2_000;
+const SHOWN_COLUMNS = 60;
 const BLANK: GridCell = { text: '', numeric: false, bold: false, error: false };
 
 export function sheetsOut(

@@ -35,6 +35,9 @@ export interface StatementTable {
 
 export type SettledColumn = ColumnWords & ColumnPeriod & { readonly end: PlainDate };
 
+/** The columns of a table that have a last day; `months` is null where the length of their flows is open. */
+export type SettledColumns = ReadonlyMap<StatementTable, readonly SettledColumn[]>;
+
 export const LEAVE_OUT = 'leave-out';
 export const placementKey = (sheet: string, label: string): string =>
   `placement:${sheet}:${label}`.slice(0, 190);

@@ -11,7 +11,7 @@ import { cellName, type SheetCell } from './cells.ts';
 import type { TableFact } from './facts.ts';
 import { lineOf, nearLines, PARTS, type Part } from './labels.ts';
 import { periodStart } from './periods.ts';
-import { COST_LINES, isStandardLine, isSubtotal } from './signs.ts';
+import { COST_LINES, isStandardLine, isSubtotal } from './lineNature.ts';
 import { LEAVE_OUT, placementKey, type Run, type SettledColumn, type StatementTable } from './statements.ts';
 import type { TableRow } from './tables.ts';
 import type { SettledScale } from './units.ts';

@@ -2,8 +2,8 @@
 import { refusal, Refused } from './refusals.ts';
 import { columnNumber } from './cells.ts';
 
-export const MAX_ROWS = 50_000;
-export const MAX_MERGED_CELLS = 10_000;
+const MAX_ROWS = 50_000;
+const MAX_MERGED_CELLS = 10_000;
 const MAX_CELLS = 600_000;
 const MAX_SHARED_STRINGS = 300_000;
 

@@ -8,8 +8,8 @@ import type { ReadNote, ReadRefusal } from '#core/statements/workbookReading.ts'
 import { refusal, Refused } from './refusals.ts';
 import { checkXmlPart } from './xmlGate.ts';
 
-export const MAX_PARTS = 200;
-export const MAX_UNPACKED_BYTES = 64 * 1024 * 1024;
+const MAX_PARTS = 200;
+const MAX_UNPACKED_BYTES = 64 * 1024 * 1024;
 const MAX_RATIO = 200;
 /** Small parts of blanks and repeats compress further than the ratio and harm nobody. */
 const RATIO_APPLIES_FROM_BYTES = 1024 * 1024;
