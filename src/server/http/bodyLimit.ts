@@ -6,10 +6,15 @@ export const BODY_BYTES_MOST = MEGABYTE;
 /** A file of 10 MB and the form around it. */
 export const UPLOAD_BYTES_MOST = 11 * MEGABYTE;
 
-export function bodyBytesMost(request: Pick<IncomingMessage, 'headers'>): number {
-  const isForm = /^multipart\/form-data\b/i.test(request.headers['content-type'] ?? '');
-  return isForm ? UPLOAD_BYTES_MOST : BODY_BYTES_MOST;
+/** The one address that takes a file: anywhere else 11 MB would be a way to fill the memory without signing in. */
+const UPLOAD_ADDRESS = /^\/api\/v1\/imports\/?(\?|$)/;
+
+export function isUpload({ headers, url = '' }: Pick<IncomingMessage, 'headers' | 'url'>): boolean {
+  return UPLOAD_ADDRESS.test(url) && /^multipart\/form-data\b/i.test(headers['content-type'] ?? '');
 }
+
+export const bodyBytesMost = (request: Pick<IncomingMessage, 'headers' | 'url'>): number =>
+  isUpload(request) ? UPLOAD_BYTES_MOST : BODY_BYTES_MOST;
 
 /** Does the request itself say that it carries too much? */
 export const declaresTooMuch = (request: Pick<IncomingMessage, 'headers'>, most: number): boolean =>

@@ -4,6 +4,7 @@ import type { ReadableStream } from 'node:stream/web';
 import { err, ok, type Result } from '../../core/result.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
 import { UPLOAD_MOST_BYTES } from '../../contracts/imports.ts';
+import { mediaType } from './request.ts';
 
 export interface UploadForm {
   readonly fields: ReadonlyMap<string, string>;
@@ -12,8 +13,8 @@ export interface UploadForm {
 
 /** Reads a form with one file while it arrives; what is too large is refused before it is all here. */
 export async function readUpload(request: Request): Promise<Result<UploadForm, ServiceProblem>> {
-  const type = request.headers.get('content-type');
-  if (!type?.startsWith('multipart/form-data') || !request.body)
+  const type = request.headers.get('content-type') ?? '';
+  if (mediaType(request) !== 'multipart/form-data' || !/boundary=./i.test(type) || !request.body)
     return invalid('file', 'Send the file as a form (multipart/form-data).');
   const fields = new Map<string, string>();
   const files: { name: string; chunks: Buffer[]; cut: boolean }[] = [];
@@ -22,7 +23,12 @@ export async function readUpload(request: Request): Promise<Result<UploadForm, S
     defParamCharset: 'utf8',
     limits: { files: 1, fileSize: UPLOAD_MOST_BYTES, fields: 10, fieldSize: 2_000, parts: 12 },
   });
-  form.on('field', (name, value) => fields.set(name, value));
+  const twice: string[] = [];
+  form.on('filesLimit', () => twice.push('file'));
+  form.on('field', (name, value) => {
+    if (fields.has(name)) twice.push(name.slice(0, 60));
+    fields.set(name, value);
+  });
   form.on('file', (_name, stream, info) => {
     const file = { name: info.filename ?? '', chunks: [] as Buffer[], cut: false };
     files.push(file);
@@ -42,6 +48,12 @@ export async function readUpload(request: Request): Promise<Result<UploadForm, S
     if (!(error instanceof Error)) throw error;
     return invalid('file', `The upload broke off (${error.message}). Send the file again.`);
   }
+  const [repeated] = twice;
+  if (repeated !== undefined)
+    return invalid(
+      repeated,
+      `${repeated} came more than once, and which one counts would be a guess. Send it once.`,
+    );
   const [file] = files;
   if (!file || file.name === '')
     return invalid('file', 'No file came with the form. Choose one and send it again.');

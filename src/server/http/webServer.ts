@@ -6,9 +6,10 @@ import { randomUUID } from 'node:crypto';
 import { createServer, type IncomingMessage, type Server, type ServerResponse } from 'node:http';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { env } from '../config/env.ts';
-import { bodyBytesMost, counted, declaresTooMuch } from './bodyLimit.ts';
+import { bodyBytesMost, counted, declaresTooMuch, isUpload } from './bodyLimit.ts';
 import { rewriteForwarded } from './forwarded.ts';
 import { setMissingHeaders } from './headers.ts';
+import { log } from './log.ts';
 import { problemBody, type PlainProblem } from './problem.ts';
 import { serveStatic } from './staticFiles.ts';
 
@@ -17,6 +18,8 @@ const REQUEST_TIMEOUT_MS = 60_000;
 const CHECKING_INTERVAL_MS = 5_000;
 const CONNECTIONS_MOST = 1_000;
 const IN_FLIGHT_MOST = 200;
+/** A file is held in memory while it is read, and only two are read at once. */
+const UPLOADS_MOST = 16;
 const DRAIN_MS_MOST = 10_000;
 /** How long a client that was refused may go on sending before its connection is cut. */
 const LINGER_MS = 2_000;
@@ -38,25 +41,33 @@ export interface WebServer {
 export function webServer(render: Render, clientFolder: string): WebServer {
   let isDraining = false;
   let inFlight = 0;
+  let uploads = 0;
 
   const handle = (request: IncomingMessage, response: ServerResponse): void => {
-    const refusal = refuseAtOnce(request, isDraining, inFlight);
+    const isBusy = inFlight >= IN_FLIGHT_MOST || (isUpload(request) && uploads >= UPLOADS_MOST);
+    const refusal = refuseAtOnce(request, isDraining, isBusy);
     if (refusal) {
       refuse(request, response, refusal);
       return;
     }
+    const more = isUpload(request) ? 1 : 0;
     inFlight += 1;
-    response.once('close', () => (inFlight -= 1));
+    uploads += more;
+    response.once('close', () => {
+      inFlight -= 1;
+      uploads -= more;
+    });
     limitBody(request, response);
+    setStrictHeaders(response);
     const { BEHIND_PROXY, APP_URL } = env();
     rewriteForwarded(request.headers, { behindProxy: BEHIND_PROXY, appUrl: APP_URL });
     const address = request.socket.remoteAddress ?? 'unknown';
-    serveStatic(
-      clientFolder,
-      request,
-      response,
-      () => void render(request, response, undefined, { address }),
-    );
+    serveStatic(clientFolder, request, response, () => {
+      render(request, response, undefined, { address }).catch((error: unknown) => {
+        log().error({ err: error }, 'the pages failed to answer');
+        response.destroy();
+      });
+    });
   };
 
   const server = createServer(
@@ -80,7 +91,7 @@ export function webServer(render: Render, clientFolder: string): WebServer {
 }
 
 /** What is refused before anything of it is read. */
-function refuseAtOnce(request: IncomingMessage, isDraining: boolean, inFlight: number): PlainProblem | null {
+function refuseAtOnce(request: IncomingMessage, isDraining: boolean, isBusy: boolean): PlainProblem | null {
   const { method, url = '' } = request;
   if (method === 'TRACE' || method === 'CONNECT')
     return {
@@ -97,7 +108,7 @@ function refuseAtOnce(request: IncomingMessage, isDraining: boolean, inFlight: n
       detail: 'The product is shutting down. Nothing was changed. Try again in a few seconds.',
       retryAfterSeconds: 5,
     };
-  if (inFlight >= IN_FLIGHT_MOST)
+  if (isBusy)
     return {
       status: 503,
       title: 'Too busy',
@@ -122,6 +133,13 @@ const tooLarge = (request: IncomingMessage): PlainProblem => ({
   title: 'Too large',
   detail: `What was sent is larger than ${Math.floor(bodyBytesMost(request) / 1024 / 1024)} MB. Nothing was changed. Send less at once.`,
 });
+
+/** What answers before the middleware runs (a redirect of the framework's own) has these; a page brings its own. */
+function setStrictHeaders(response: ServerResponse): void {
+  const headers = new Headers();
+  setMissingHeaders(headers, false);
+  response.setHeaders(headers);
+}
 
 /** The adapter reads `body` instead of the request where it is there. */
 function limitBody(request: IncomingMessage, response: ServerResponse): void {
