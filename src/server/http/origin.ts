@@ -6,7 +6,7 @@
  */
 import { env } from '../config/env.ts';
 
-const SAFE_METHODS = new Set(['GET', 'HEAD', 'OPTIONS']);
+export const SAFE_METHODS = new Set(['GET', 'HEAD', 'OPTIONS']);
 
 /** RFC 8058: the reader's mail server posts here without a cookie; the token in the address is the permission. */
 const POSTED_FROM_ELSEWHERE = '/api/v1/unsubscribe';

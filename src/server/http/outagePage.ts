@@ -1,5 +1,9 @@
-/** The page for a database that does not answer: plain, because drawing a full page would ask the database. */
-export function outagePage(requestId: string, retryAfterSeconds: number): Response {
+/**
+ * The page for a database that does not answer: plain, because drawing a full page would ask the database.
+ *
+ * @param outcome what became of what was sent, as a sentence of ours
+ */
+export function outagePage(requestId: string, retryAfterSeconds: number, outcome: string): Response {
   const html = `<!doctype html>
 <html lang="en">
   <head>
@@ -9,7 +13,7 @@ export function outagePage(requestId: string, retryAfterSeconds: number): Respon
   </head>
   <body>
     <h1>The database does not answer</h1>
-    <p>Nothing was changed. Go back, wait a few seconds and try again; what you typed is still on that page.</p>
+    <p>${outcome} Go back, wait a few seconds and try again; what you typed is still on that page.</p>
     <p>If it goes on, give your administrator the request number ${requestId}.</p>
   </body>
 </html>

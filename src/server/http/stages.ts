@@ -7,7 +7,7 @@ import { clientAddress } from './address.ts';
 import { setMissingHeaders } from './headers.ts';
 import { log } from './log.ts';
 import { isApi, isOpen, isProbe } from './openPaths.ts';
-import { isOwnRequest, ownOrigin } from './origin.ts';
+import { isOwnRequest, ownOrigin, SAFE_METHODS } from './origin.ts';
 import { problemResponse } from './problem.ts';
 import { outagePage } from './outagePage.ts';
 import { ownPath } from './ownPath.ts';
@@ -58,8 +58,10 @@ export const outageStage =
       const path = context.url.pathname;
       log().error({ err: error, requestId, method: context.request.method, path }, 'request failed');
       const asPage = !isApi(path) || wantsPage(context.request);
-      if (isOutage(error))
-        return asPage ? outagePage(requestId, RETRY_AFTER_SECONDS) : outageProblem(context);
+      if (isOutage(error)) {
+        const outcome = outcomeText(context);
+        return asPage ? outagePage(requestId, RETRY_AFTER_SECONDS, outcome) : outageProblem(context, outcome);
+      }
       if (asPage) return new Response(null, { status: 500 });
       return problemResponse(context, {
         status: 500,
@@ -120,7 +122,10 @@ export const refusalStage =
   async (context, next) => {
     const response = await next();
     const { person, requestId, address, now } = context.locals;
-    const isNamedThing = Object.keys(context.params).some((name) => name !== 'path');
+    // A thing is named in the address, or in the body of what is sent.
+    const isNamedThing =
+      Object.keys(context.params).some((name) => name !== 'path') ||
+      (context.request.method === 'POST' && context.params['path'] === undefined);
     if (person && (response.status === 403 || (response.status === 404 && isNamedThing)))
       await record({
         person,
@@ -137,6 +142,8 @@ export const refusalStage =
 /** Deny by default: only what is listed as open answers somebody who is not signed in. */
 export const requireUserStage: MiddlewareHandler = (context, next) => {
   const { pathname, search } = context.url;
+  // What the framework brings along (images, islands drawn apart) is used by no page.
+  if (context.routePattern.startsWith('/_')) return new Response(null, { status: 404 });
   if (context.locals.person || isOpen(pathname, context.routePattern)) return next();
   if (!isApi(pathname)) return context.redirect(signInFor(ownPath(pathname + search, '')), 303);
   if (!wantsPage(context.request)) return problemResponse(context, SIGN_IN_FIRST);
@@ -167,10 +174,19 @@ function signInFor(path: string, more: Record<string, string> = {}): string {
   return query.size === 0 ? '/sign-in' : `/sign-in?${query.toString()}`;
 }
 
-const outageProblem = (context: APIContext): Response =>
+const outageProblem = (context: APIContext, outcome: string): Response =>
   problemResponse(context, {
     status: 503,
     title: 'Database does not answer',
-    detail: 'The database does not answer. Nothing was changed. Try again in a few seconds.',
+    detail: `The database does not answer. ${outcome} Try again in a few seconds.`,
     retryAfterSeconds: RETRY_AFTER_SECONDS,
   });
+
+/**
+ * A COMMIT whose answer is lost may have happened. That can be so once somebody who is known has sent a change: who
+ * it is, is asked of the database first.
+ */
+const outcomeText = ({ request, locals }: APIContext): string =>
+  locals.person === null || SAFE_METHODS.has(request.method)
+    ? 'Nothing was changed.'
+    : 'It is not certain whether your change was made: look before you send it again.';
