@@ -31,7 +31,9 @@ export function isOutage(error: unknown): boolean {
       : null;
   return (
     typeof code === 'string' &&
-    /^(ECONN|EPIPE|ER_SOCKET|ER_CMD_CONNECTION_CLOSED|ER_CONNECTION|ER_POOL)/.test(code)
+    /^(ECONN|EPIPE|ER_SOCKET|ER_CMD_CONNECTION_CLOSED|ER_CONNECTION|ER_POOL|ER_SERVER_SHUTDOWN|ER_RECORD_FILE_FULL|ER_DISK_FULL)/.test(
+      code,
+    )
   );
 }
 
