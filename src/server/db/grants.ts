@@ -8,6 +8,7 @@ import { connect } from './connection.ts';
 /** Tables with less than the usual rights. */
 const RIGHTS: Readonly<Record<string, string>> = {
   audit_entries: 'select, insert',
+  audit_heads: 'select, update',
   schema_migrations: 'select',
   schema_locks: 'select',
 };

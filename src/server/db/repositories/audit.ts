@@ -21,11 +21,14 @@ export interface AuditFacts {
   readonly address: string;
 }
 
+const SUMMARY_MOST = 500;
+
 /**
  * Appends one entry to the chain, in the caller's transaction: what is not audited does not happen. The hash
  * covers every field in a fixed order and the hash before it, keyed outside the database.
  */
-export async function appendAudit(tx: Transaction, facts: AuditFacts): Promise<number> {
+export async function appendAudit(tx: Transaction, given: AuditFacts): Promise<number> {
+  const facts = { ...given, summary: storable(given.summary, SUMMARY_MOST) };
   const head = await selectOne<{ seq: number; hash: string }>(
     tx,
     'select seq, hash from audit_heads where id = 1 for update',
@@ -63,6 +66,9 @@ export async function appendAudit(tx: Transaction, facts: AuditFacts): Promise<n
   await execute(tx, 'update audit_heads set seq = :seq, hash = :hash where id = 1', { seq, hash });
   return seq;
 }
+
+/** As the column gives it back: a half of a surrogate pair would come back as another sign, and the hash would not hold. */
+const storable = (text: string, most: number): string => text.slice(0, most).toWellFormed();
 
 interface HashedFacts extends Omit<AuditFacts, 'before' | 'after'> {
   readonly seq: number;
