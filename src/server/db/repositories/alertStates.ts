@@ -58,7 +58,8 @@ export async function moveAlert(tx: Transaction, move: AlertMove): Promise<boole
        closing_reason = coalesce(:reason, closing_reason), closing_text = coalesce(:closingText, closing_text),
        closed_by = if(:reason is null, closed_by, :personId), closed_at = if(:ends, :now, closed_at),
        open_slot = if(:ends, null, open_slot)
-     where id = :id and version = :version`,
+     where id = :id and version = :version
+       and not (state = 'closing to be confirmed' and closed_by = :personId)`,
     {
       id: move.alert.id,
       version: move.alert.version,
