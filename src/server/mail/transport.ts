@@ -37,6 +37,8 @@ export function mailTransport(settings = env()): MailTransport {
     port: Number(smtp.port || (isSecure ? 465 : 587)),
     secure: isSecure,
     ignoreTLS: SMTP_URL === undefined,
+    // Links to set a password travel in mail: off this machine only encrypted, or not at all.
+    requireTLS: SMTP_URL !== undefined && !/^(localhost|127(\.\d+){3}|\[::1\])$/.test(smtp.hostname),
     ...(smtp.username && {
       auth: { user: decodeURIComponent(smtp.username), pass: decodeURIComponent(smtp.password) },
     }),
