@@ -66,9 +66,10 @@ async function readAgain(id: number): Promise<number> {
       fileName: draft.fileName,
       importId: id,
     });
-    const updated = await inTransaction((tx) =>
-      updateReading(tx, { ...toStaged(reading), id, version: draft.version }),
-    );
+    const staged = toStaged(reading);
+    // A repeat of an answered request finds the reading that the first one made.
+    if (staged.reading === draft.reading) return draft.version;
+    const updated = await inTransaction((tx) => updateReading(tx, { ...staged, id, version: draft.version }));
     if (updated) return draft.version + 1;
   }
 }
