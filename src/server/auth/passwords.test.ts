@@ -71,6 +71,8 @@ describe('checking a password', () => {
 
   test('never matches where there is no stored password', async () => {
     expect(await passwordMatches('', null)).toBe(false);
+    for (const stored of ['', 'plain text', '$argon2id$v=19$m=19456,t=2,p=1$short$short'])
+      expect(await passwordMatches('plain text', stored)).toBe(false);
   });
 
   test('runs twenty at once in turn and finishes them all', async () => {

@@ -16,6 +16,9 @@ const ARGON2ID = {
   outputLen: 32,
 } as const;
 
+/** A stored text that is none (an import gone wrong) would be an error, and a faster answer than a wrong password. */
+const PHC_ARGON2ID = /^\$argon2id\$v=19\$m=\d+,t=\d+,p=\d+\$[A-Za-z0-9+/]{22,}\$[A-Za-z0-9+/]{43}$/;
+
 const MOST_AT_ONCE = 8;
 
 /** NIST SP 800-63B-4: 15 characters where the password is the only factor; no rule of composition. */
@@ -27,8 +30,9 @@ export const hashPassword = (password: string): Promise<string> => inTurn(() => 
 /** The password is checked as received: no trimming, no change of case, no normal form. */
 export async function passwordMatches(password: string, stored: string | null): Promise<boolean> {
   const dummy = await (dummyHash ??= hashPassword(randomBytes(24).toString('hex')));
-  const matches = await inTurn(() => verify(stored ?? dummy, password));
-  return matches && stored !== null;
+  const isUsable = stored !== null && PHC_ARGON2ID.test(stored);
+  const matches = await inTurn(() => verify(isUsable ? stored : dummy, password));
+  return matches && isUsable;
 }
 
 /**
