@@ -16,7 +16,9 @@ import { runUntilTold } from './supervised.ts';
 const BYTES_MOST = 25 * 1024 * 1024;
 const KEPT_MOST = 1_000;
 
-const { MAIL_SINK_PORT, DATA_DIR } = env();
+const { MAIL_SINK_PORT, DATA_DIR, SMTP_URL } = env();
+if (SMTP_URL)
+  throw new Error('an SMTP server is configured (SMTP_URL): the mail sink does not start beside it');
 const folder = join(DATA_DIR, 'mail');
 await mkdir(folder, { recursive: true, mode: 0o700 });
 const mails: SunkMail[] = [];

@@ -154,7 +154,8 @@ async function serveUntilTold(env, { host, port, sinkPort, appUrl, hasSink, sign
       { name: 'worker', command: '--import tsx jobs/worker.ts' },
       { name: 'web', command: web },
     ],
-    env,
+    // The owner of the schema is for the step before: what serves cannot change it.
+    { ...env, DATABASE_OWNER_URL: undefined },
     isDevelopment ? 0 : 3,
   );
   endings.push(async () => {
