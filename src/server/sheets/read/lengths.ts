@@ -105,10 +105,12 @@ function askLengths(
   const patterns = patternsOf(open, yearEnd?.month ?? null);
   const headings = open.map(({ heading }) => `'${heading}'`).join(', ');
   const signature = open.map(({ heading }) => heading.replace(/\d/g, '')).join('|');
+  const key = `period-length:${signature}`.slice(0, 190);
   const answer = asking.ask({
-    key: `period-length:${signature}`.slice(0, 190),
+    key,
     kind: 'period-length',
-    holdsFor: 'layout',
+    // Months column by column are those of this file's periods; a pattern is the layout's.
+    holdsFor: asking.answerTo(key)?.includes('=') ? 'file' : 'layout',
     text: `${looksCumulative(table, open) ? 'The figures look cumulative, but no sheet says so' : 'No sheet says how long the periods are'}. How many months do ${headings} on '${table.table.sheet.name}' cover?`,
     where: open.flatMap((column) => headingPlace(table, column)),
     options: patterns.map(({ value, label }) => ({ value, label })),
