@@ -1,6 +1,7 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import { QUALITY_BLOCKS, type QuarterScore, type ReportingQuality } from '../../core/quality/score.ts';
 import { Panel } from '../ui/Panel.tsx';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { blockScore } from './QualitySummary.tsx';
 
@@ -12,7 +13,7 @@ export function QualityHistory({ quality }: { readonly quality: ReportingQuality
   );
   return (
     <Panel title="Quarter by quarter">
-      <div className="scroll-region">
+      <ScrollRegion label="Scores quarter by quarter">
         <Table caption="Score of each quarter end; 100 is earnings well supported">
           <TableHead>
             <tr role="row">
@@ -43,7 +44,7 @@ export function QualityHistory({ quality }: { readonly quality: ReportingQuality
             ))}
           </TableBody>
         </Table>
-      </div>
+      </ScrollRegion>
       <p className="type-second mt-2">
         The headline is the mean of the last three quarter ends: one quarter alone moves by about 20 points
         for clean firms. A move under 10 points is not news.

@@ -1,6 +1,7 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import type { StatementView } from '../../contracts/borrowers.ts';
 import { LINE_ITEMS, type LineItem, type StatementPart } from '../../core/statements/lineItems.ts';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { amountText, sourceHref } from './figures.ts';
 
@@ -25,7 +26,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
   );
   if (lines.length === 0) return null;
   return (
-    <div className="scroll-region accounts">
+    <ScrollRegion label={`${PART_NAMES[part]}, periods side by side`} className="accounts">
       <Table caption={`${PART_NAMES[part]}, whole currency units`} showCaption>
         <TableHead>
           <tr role="row">
@@ -52,7 +53,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
           ))}
         </TableBody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }
 

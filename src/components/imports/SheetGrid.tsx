@@ -3,6 +3,7 @@ import { useEffect, useRef } from 'react';
 import type { Reading, ReadColumn, ReadSheet } from '../../contracts/reading.ts';
 import { LINE_ITEMS } from '../../core/statements/lineItems.ts';
 import { classes } from '../ui/classes.ts';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { cellName, columnName } from './gridPlaces.ts';
 
 interface SheetGridProps {
@@ -31,9 +32,7 @@ export function SheetGrid({ sheet, reading, target }: SheetGridProps) {
       .flatMap((question) => question.where.filter((at) => at.sheet === sheet.name).map((at) => at.cell)),
   );
   return (
-    // A region that scrolls has to be reachable by keyboard.
-    // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex
-    <div className="sheet-grid" role="region" aria-label={`Sheet ${sheet.name}`} tabIndex={0}>
+    <ScrollRegion label={`Cells of ${sheet.name}`} className="sheet-grid">
       <table className="sheet-table">
         <caption className="sr-only">{sheet.name} as the borrower sent it</caption>
         <thead>
@@ -81,7 +80,7 @@ export function SheetGrid({ sheet, reading, target }: SheetGridProps) {
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollRegion>
   );
 }
 

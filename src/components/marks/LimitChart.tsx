@@ -3,6 +3,7 @@ import { useMemo } from 'react';
 import { Line } from 'react-chartjs-2';
 import { plainDate } from '../../core/calendar/plainDate.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { directLabels, limitChartDatasets, limitChartOptions } from './limitChartDrawing.ts';
 import { chartText, figureText, type ChartResult, type LimitChartFigures } from './limitChartFigures.ts';
@@ -53,7 +54,7 @@ function FiguresTable({ figures }: { readonly figures: LimitChartFigures }) {
   const { label, unit, results, second } = figures;
   const secondOn = new Map(second?.values.map((value) => [value.testDate, value.tested]));
   return (
-    <div className="scroll-region mt-2">
+    <ScrollRegion label="Figures of the chart" className="mt-2">
       <Table caption={`${label}, every test of the chart`}>
         <TableHead>
           <tr>
@@ -83,7 +84,7 @@ function FiguresTable({ figures }: { readonly figures: LimitChartFigures }) {
           })}
         </TableBody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }
 

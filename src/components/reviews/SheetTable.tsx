@@ -1,4 +1,5 @@
 import type { SheetCell, SheetColumn, SheetTable as SheetTableBlock } from '../../contracts/reviewSheet.ts';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { SheetCellText } from './SheetCellText.tsx';
 
@@ -13,7 +14,7 @@ export function SheetTable({ caption, columns, rows }: SheetTableBlock) {
   const main = placed.filter(({ column }) => column.under === undefined);
   const under = ({ column }: Placed) => placed.filter((other) => other.column.under === column.key);
   return (
-    <div className="scroll-region">
+    <ScrollRegion label={caption}>
       <Table caption={caption} showCaption className="review-table">
         <TableHead>
           <tr role="row">
@@ -43,7 +44,7 @@ export function SheetTable({ caption, columns, rows }: SheetTableBlock) {
           ))}
         </TableBody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }
 
