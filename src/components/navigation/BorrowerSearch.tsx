@@ -28,6 +28,11 @@ export function BorrowerSearch() {
     return true;
   });
 
+  // What was typed before this island woke up counts too.
+  useEffect(() => {
+    setText(input.current?.value ?? '');
+  }, []);
+
   useEffect(() => {
     const wanted = text.trim();
     if (wanted === '') return;

@@ -141,9 +141,17 @@ export function NameCell({ name, href, beside, second, keepSecond, current, onFo
           {name}
         </a>
       )}
-      {beside && <span className="row-beside type-second type-small">{beside}</span>}
+      {beside && (
+        <>
+          {' '}
+          <span className="row-beside type-second type-small">{beside}</span>
+        </>
+      )}
       {second && (
-        <span className={classes('row-second type-second', keepSecond && 'row-second-kept')}>{second}</span>
+        <>
+          {' '}
+          <span className={classes('row-second type-second', keepSecond && 'row-second-kept')}>{second}</span>
+        </>
       )}
     </th>
   );
