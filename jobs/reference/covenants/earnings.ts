@@ -2,11 +2,11 @@ import { z } from 'zod';
 import {
   accrualHaircut,
   breakEvenShare,
-  heldWithoutEarnings,
+  verdictWithoutEarnings,
   restsOn,
 } from '#core/covenants/counterfactual.ts';
 import { amountAtLevel, type Sides } from '#core/covenants/headroom.ts';
-import { holdAgainstLevel, type Held } from '#core/covenants/holdAgainstLevel.ts';
+import { holdAgainstLevel, type Held, type Verdict } from '#core/covenants/holdAgainstLevel.ts';
 import { leverageByAccountingBasis } from '#core/measures/accountingBasis.ts';
 import { allowAddBacks, proFormaEbitda } from '#core/measures/addBacks.ts';
 import { ebitdaFromNetIncome, ebitdaFromRevenue, routeDifference } from '#core/measures/ebitda.ts';
@@ -123,7 +123,7 @@ const counterfactual: Topic = (inputs) => {
   const sides: Sides = { numerator: given.net_debt, denominator: reportedEarnings };
   const haircut = accrualHaircut(given.unexplained_accruals ?? decimal(0));
   const reported = holdAgainstLevel(netLeverage, sides, terms);
-  const without = (takenOut: Decimal) => heldWithoutEarnings(netLeverage, sides, terms, takenOut);
+  const without = (takenOut: Decimal) => verdictWithoutEarnings(netLeverage, sides, terms, takenOut);
   const legs = { addbacks: without(given.addbacks), unexplained_accruals: without(haircut) };
   const needed = amountAtLevel(netLeverage.shape, sides, given.max);
   const share =
@@ -143,6 +143,6 @@ const counterfactual: Topic = (inputs) => {
   };
 };
 
-const asTest = ({ tested, outcome }: Held) => ({ ratio: tested, status: status(outcome) });
+const asTest = ({ tested, outcome }: Verdict) => ({ ratio: tested, status: status(outcome) });
 
 export const earningsTopics: Readonly<Record<string, Topic>> = { ebitda, addbacks, gaap, counterfactual };

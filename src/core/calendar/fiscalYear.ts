@@ -1,5 +1,5 @@
 /** Financial years and their quarters. A period end within six days of a month end belongs to that month. */
-import { addDays, addMonthsToMonthEnd, daysBetween, monthEnd, type PlainDate } from './plainDate.ts';
+import { addDays, addMonthsToMonthEnd, monthCount, monthEnd, type PlainDate } from './plainDate.ts';
 
 /** Years of 52 or 53 weeks end on a weekday near the month end: methods.md A3. */
 const DAYS_NEAR_MONTH_END = 6;
@@ -31,9 +31,9 @@ export function reportingMonthEnd(date: PlainDate): PlainDate {
 const MONTH_ENDS = new Map<PlainDate, PlainDate>();
 
 function nearestMonthEnd(date: PlainDate): PlainDate {
-  const own = monthEnd(date);
-  if (daysBetween(date, own) <= DAYS_NEAR_MONTH_END) return own;
   const day = Number(date.slice(8));
+  const own = monthEnd(date);
+  if (Number(own.slice(8)) - day <= DAYS_NEAR_MONTH_END) return own;
   return day <= DAYS_NEAR_MONTH_END ? addDays(date, -day) : date;
 }
 
@@ -46,8 +46,6 @@ export const isSamePeriodEnd = (one: PlainDate, other: PlainDate): boolean =>
   one === other ||
   (Math.abs(monthCount(one) - monthCount(other)) <= 1 && reportingMonthEnd(one) === reportingMonthEnd(other));
 
-const monthCount = (date: PlainDate): number => Number(date.slice(0, 4)) * 12 + Number(date.slice(5, 7));
-
 /**
  * Where a period end lies in the financial year: its year is the calendar year in which it ends, its quarter is
  * the months since the last year end divided by three, rounded up.
@@ -58,7 +56,7 @@ const monthCount = (date: PlainDate): number => Number(date.slice(0, 4)) * 12 + 
  */
 export function fiscalPosition(periodEnd: PlainDate, fiscalYearEndMonth: number): FiscalPosition {
   const date = reportingMonthEnd(periodEnd);
-  const [year, month] = date.split('-').map(Number) as [number, number];
+  const [year, month] = [Number(date.slice(0, 4)), Number(date.slice(5, 7))];
   const monthsIntoYear = ((month - fiscalYearEndMonth + 11 + 12) % 12) + 1;
   return {
     fiscalYear: month > fiscalYearEndMonth ? year + 1 : year,

@@ -31,8 +31,11 @@ export function plainDate(text: string): PlainDate {
  * @example daysInMonth(2024, 2) // => 29
  */
 export function daysInMonth(year: number, month: number): number {
-  return new Date(Date.UTC(year, month, 0)).getUTCDate();
+  if (month === 2) return isLeapYear(year) ? 29 : 28;
+  return month === 4 || month === 6 || month === 9 || month === 11 ? 30 : 31;
 }
+
+const isLeapYear = (year: number): boolean => year % 4 === 0 && (year % 100 !== 0 || year % 400 === 0);
 
 /**
  * The days from 1970-01-01, so that differences are differences of days.
@@ -73,11 +76,8 @@ export const daysBetween = (from: PlainDate, to: PlainDate): number => epochDay(
  * @example addMonths('2026-01-31', 1) // => '2026-02-28'
  */
 export function addMonths(date: PlainDate, months: number): PlainDate {
-  const [year, month, day] = date.split('-').map(Number) as [number, number, number];
-  const count = year * 12 + (month - 1) + months;
-  const [newYear, newMonth] = [Math.floor(count / 12), (count % 12) + 1];
-  const newDay = Math.min(day, daysInMonth(newYear, newMonth));
-  return plainDate(`${newYear}-${String(newMonth).padStart(2, '0')}-${String(newDay).padStart(2, '0')}`);
+  const moved = monthCount(date) + months;
+  return dayOfMonth(moved, Math.min(Number(date.slice(8)), daysInMonthCounted(moved)));
 }
 
 /**
@@ -86,8 +86,8 @@ export function addMonths(date: PlainDate, months: number): PlainDate {
  * @example addMonthsToMonthEnd('2026-06-30', 3) // => '2026-09-30'
  */
 export function addMonthsToMonthEnd(date: PlainDate, months: number): PlainDate {
-  const moved = addMonths(`${date.slice(0, 7)}-01` as PlainDate, months);
-  return monthEnd(moved);
+  const moved = monthCount(date) + months;
+  return dayOfMonth(moved, daysInMonthCounted(moved));
 }
 
 /**
@@ -95,7 +95,22 @@ export function addMonthsToMonthEnd(date: PlainDate, months: number): PlainDate 
  *
  * @example monthEnd('2024-02-10') // => '2024-02-29'
  */
-export function monthEnd(date: PlainDate): PlainDate {
-  const [year, month] = date.split('-').map(Number) as [number, number];
-  return plainDate(`${date.slice(0, 7)}-${String(daysInMonth(year, month)).padStart(2, '0')}`);
-}
+export const monthEnd = (date: PlainDate): PlainDate => addMonthsToMonthEnd(date, 0);
+
+/**
+ * The months from the beginning of the calendar to the month that a day lies in, so that differences are differences
+ * of months.
+ *
+ * @example monthCount('2026-03-31') - monthCount('2025-12-31') // => 3
+ */
+export const monthCount = (date: PlainDate): number =>
+  Number(date.slice(0, 4)) * 12 + Number(date.slice(5, 7)) - 1;
+
+const daysInMonthCounted = (count: number): number => daysInMonth(Math.floor(count / 12), (count % 12) + 1);
+
+/** Right by construction: asked for every figure that is read, so nothing is checked twice. */
+const dayOfMonth = (count: number, day: number): PlainDate =>
+  `${yearText(Math.floor(count / 12))}-${twoDigits((count % 12) + 1)}-${twoDigits(day)}` as PlainDate;
+
+const yearText = (year: number): string => String(year).padStart(4, '0');
+const twoDigits = (count: number): string => (count < 10 ? `0${count}` : String(count));

@@ -1,7 +1,7 @@
 import { ZERO, type Decimal } from '../money/decimal.ts';
 import { isMet, isNotMet, type Counterfactual } from './covenantTest.ts';
 import { amountAtLevel, type Sides } from './headroom.ts';
-import { holdAgainstLevel, type Held, type Shaped, type Terms } from './holdAgainstLevel.ts';
+import { verdictOn, type Shaped, type Terms, type Verdict } from './holdAgainstLevel.ts';
 
 /** The sides with some earnings taken out of the side that earnings stand on. */
 function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Sides {
@@ -22,17 +22,21 @@ export const accrualHaircut = (unexplainedAccruals: Decimal): Decimal =>
 /**
  * The test recomputed with earnings taken out. Interest and tax are left as they are. Source: methods.md B7.
  *
- * @example heldWithoutEarnings(netLeverage, { numerator: decimal(42), denominator: decimal(13) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }, decimal(2)).outcome // => 'not met'
+ * @example verdictWithoutEarnings(netLeverage, { numerator: decimal(42), denominator: decimal(13) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }, decimal(2)).outcome // => 'not met'
  */
-export const heldWithoutEarnings = (measure: Shaped, sides: Sides, terms: Terms, takenOut: Decimal): Held =>
-  holdAgainstLevel(measure, withoutEarnings(measure, sides, takenOut), terms);
+export const verdictWithoutEarnings = (
+  measure: Shaped,
+  sides: Sides,
+  terms: Terms,
+  takenOut: Decimal,
+): Verdict => verdictOn(measure, withoutEarnings(measure, sides, takenOut), terms);
 
 /**
  * Whether a test that is met rests on what was taken out: it would not have been met without.
  *
  * @example restsOn({ outcome: 'met' }, { outcome: 'not met' }) // => true
  */
-export const restsOn = (reported: Held, without: Held): boolean =>
+export const restsOn = (reported: Pick<Verdict, 'outcome'>, without: Pick<Verdict, 'outcome'>): boolean =>
   isMet(reported.outcome) && isNotMet(without.outcome);
 
 /**
@@ -70,16 +74,16 @@ export function withoutAddBacks(
 ): readonly Counterfactual[] {
   if (addBacks.isZero() || measure.earningsSide === null) return [];
   const without = withoutEarnings(measure, sides, addBacks);
-  const held = holdAgainstLevel(measure, without, terms);
+  const verdict = verdictOn(measure, without, terms);
   const earningsBefore = measure.earningsSide === 'numerator' ? without.numerator : without.denominator;
   const earningsNeeded = amountAtLevel(measure.shape, sides, terms.level);
-  const decides = restsOn(holdAgainstLevel(measure, sides, terms), held);
+  const decides = restsOn(verdictOn(measure, sides, terms), verdict);
   return [
     {
       kind: 'without add-backs',
       earningsTakenOut: addBacks,
-      ratio: held.tested,
-      outcome: held.outcome,
+      ratio: verdict.tested,
+      outcome: verdict.outcome,
       breakEvenShare:
         decides && earningsNeeded && earningsBefore
           ? breakEvenShare({ earningsNeeded, earningsBefore, addBacks })

@@ -20,40 +20,104 @@ export interface Terms {
   readonly roundingPlaces: number | null;
 }
 
-export interface Held {
+export interface Verdict {
   /** Unrounded; null where it has no meaning. */
   readonly tested: Decimal | null;
   readonly outcome: Outcome;
   readonly reason: string | null;
   /** The outcome would be another without the agreement's rounding. */
   readonly roundingDecides: boolean;
+}
+
+export interface Held extends Verdict {
   readonly headroom: Headroom;
 }
 
 export type Shaped = Pick<Measure, 'shape' | 'earningsSide' | 'words'>;
 
 /**
- * Holds a result against a level.
+ * Holds a result against a level: the verdict, and every form of headroom.
+ *
+ * @example holdAgainstLevel(netLeverage, { numerator: decimal(42), denominator: decimal(15) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }).headroom.mayFall // => 0.2
+ */
+export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): Held {
+  const verdict = verdictOn(measure, sides, terms);
+  const forms = verdict.tested === null ? NO_HEADROOM : formsOf(measure.shape, sides, terms);
+  return { ...verdict, headroom: { ...forms, fallOf: fallOf(measure) } };
+}
+
+function formsOf(
+  shape: Measure['shape'],
+  { numerator, denominator }: Sides,
+  { level, operator }: Terms,
+): Omit<Headroom, 'fallOf'> {
+  if (shape === 'amount' || !denominator)
+    return amountHeadroom(numerator, level, isMaximum(operator) ? 'most' : 'least');
+  return shape === 'burden'
+    ? burdenHeadroom(numerator, denominator, level)
+    : coverHeadroom(numerator, denominator, level);
+}
+
+/**
+ * Whether a result meets a level.
  *
  * A burden with earnings that are not positive is not met, never a negative ratio under a maximum; net cash is met;
  * with neither debt nor earnings, and with no charge and nothing that covers, a person reads the agreement. Compared
  * unrounded unless the agreement rounds. Source: methods.md A4 and A5.
  *
- * @example holdAgainstLevel(netLeverage, { numerator: decimal(45), denominator: decimal(12) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }).outcome // => 'not met'
+ * @example verdictOn(netLeverage, { numerator: decimal(45), denominator: decimal(12) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }).outcome // => 'not met'
  */
-export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): Held {
+export function verdictOn(measure: Shaped, sides: Sides, terms: Terms): Verdict {
   switch (measure.shape) {
     case 'burden':
-      return holdBurden(measure, sides, terms);
+      return onBurden(measure, sides, terms);
     case 'cover':
-      return holdCover(measure, sides, terms);
+      return onCover(measure, sides, terms);
     case 'amount':
-      return compared(measure, sides.numerator, terms, (level) =>
-        amountHeadroom(sides.numerator, level, isMaximum(terms.operator) ? 'most' : 'least'),
-      );
+      return compared(sides.numerator, terms);
     default:
       return unreachable(measure.shape);
   }
+}
+
+function onBurden(
+  { words }: Shaped,
+  { numerator: burden, denominator: carrier }: Sides,
+  terms: Terms,
+): Verdict {
+  if (!carrier || !isMaximum(terms.operator)) return doesNotFit(terms.operator);
+  if (carrier.gt(0)) {
+    const ratio = burden.div(carrier);
+    if (burden.gt(0)) return compared(ratio, terms);
+    return { ...withoutRatio('met, net cash', 'net cash'), tested: ratio };
+  }
+  return burden.gt(0)
+    ? withoutRatio('not met, ratio has no meaning', `${words.carrier} not positive: ratio has no meaning`)
+    : withoutRatio('cannot be tested', `no debt and ${words.carrier} not positive: the agreement decides`);
+}
+
+function onCover(
+  { words }: Shaped,
+  { numerator: covers, denominator: charge }: Sides,
+  terms: Terms,
+): Verdict {
+  if (!charge || isMaximum(terms.operator)) return doesNotFit(terms.operator);
+  if (charge.gt(0)) return compared(covers.div(charge), terms);
+  const nothing = `no ${words.charge} to cover`;
+  return covers.gt(0)
+    ? withoutRatio('met, no charge to cover', nothing)
+    : withoutRatio('cannot be tested', `${nothing} and numerator not positive`);
+}
+
+function compared(tested: Decimal, terms: Terms): Verdict {
+  const isSatisfied = satisfies(tested, terms);
+  return {
+    tested,
+    outcome: isSatisfied ? 'met' : 'not met',
+    reason: null,
+    roundingDecides:
+      terms.roundingPlaces !== null && isSatisfied !== satisfies(tested, { ...terms, roundingPlaces: null }),
+  };
 }
 
 /** Whether a result satisfies the operator, at the agreement's rounding. */
@@ -73,63 +137,12 @@ function satisfies(tested: Decimal, { operator, level, roundingPlaces }: Terms):
   }
 }
 
-function holdBurden(measure: Shaped, { numerator: burden, denominator }: Sides, terms: Terms): Held {
-  const { carrier: word } = measure.words;
-  if (!denominator || !isMaximum(terms.operator)) return doesNotFit(measure, terms.operator);
-  if (denominator.gt(0) && burden.gt(0))
-    return compared(measure, burden.div(denominator), terms, (level) =>
-      burdenHeadroom(burden, denominator, level),
-    );
-  if (denominator.gt(0)) {
-    const headroom = { ...burdenHeadroom(burden, denominator, terms.level), fallOf: fallOf(measure) };
-    return {
-      ...withoutRatio(measure, 'met, net cash', 'net cash'),
-      tested: burden.div(denominator),
-      headroom,
-    };
-  }
-  return burden.gt(0)
-    ? withoutRatio(measure, 'not met, ratio has no meaning', `${word} not positive: ratio has no meaning`)
-    : withoutRatio(measure, 'cannot be tested', `no debt and ${word} not positive: the agreement decides`);
-}
-
-function holdCover(measure: Shaped, { numerator: covers, denominator: charge }: Sides, terms: Terms): Held {
-  if (!charge || isMaximum(terms.operator)) return doesNotFit(measure, terms.operator);
-  if (charge.gt(0))
-    return compared(measure, covers.div(charge), terms, (level) => coverHeadroom(covers, charge, level));
-  const nothing = `no ${measure.words.charge} to cover`;
-  return covers.gt(0)
-    ? withoutRatio(measure, 'met, no charge to cover', nothing)
-    : withoutRatio(measure, 'cannot be tested', `${nothing} and numerator not positive`);
-}
-
-function compared(
-  measure: Shaped,
-  tested: Decimal,
-  terms: Terms,
-  forms: (level: Decimal) => Omit<Headroom, 'fallOf'>,
-): Held {
-  const isSatisfied = satisfies(tested, terms);
-  return {
-    tested,
-    outcome: isSatisfied ? 'met' : 'not met',
-    reason: null,
-    roundingDecides: isSatisfied !== satisfies(tested, { ...terms, roundingPlaces: null }),
-    headroom: { ...forms(terms.level), fallOf: fallOf(measure) },
-  };
-}
-
-const withoutRatio = (measure: Shaped, outcome: Outcome, reason: string): Held => ({
+const withoutRatio = (outcome: Outcome, reason: string): Verdict => ({
   tested: null,
   outcome,
   reason,
   roundingDecides: false,
-  headroom: { ...NO_HEADROOM, fallOf: fallOf(measure) },
 });
 
-const doesNotFit = (measure: Shaped, operator: Operator): Held =>
-  withoutRatio(
-    measure,
-    'cannot be tested',
-    `the operator ${operator} does not fit this measure: check the covenant`,
-  );
+const doesNotFit = (operator: Operator): Verdict =>
+  withoutRatio('cannot be tested', `the operator ${operator} does not fit this measure: check the covenant`);

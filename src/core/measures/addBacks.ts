@@ -1,6 +1,6 @@
 /** Add-backs as the agreement allows them: some without limit, the others up to a share of EBITDA. */
-import { addDays, type PlainDate } from '../calendar/plainDate.ts';
-import { monthsBefore } from '../calendar/fiscalYear.ts';
+import { monthsBefore, reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import type { PlainDate } from '../calendar/plainDate.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
 import type { AddBack } from './definition.ts';
 
@@ -64,9 +64,10 @@ export function addBacksWithinTwelveMonths(
   addBacks: readonly AddBack[],
   date: PlainDate,
 ): readonly AddBack[] {
-  const opening = monthsBefore(date, 12);
+  const [opening, closing] = [monthsBefore(date, 12), reportingMonthEnd(date)];
   return addBacks.filter(
-    ({ periodEnd, months }) => periodEnd <= addDays(date, 6) && monthsBefore(periodEnd, months) >= opening,
+    ({ periodEnd, months }) =>
+      reportingMonthEnd(periodEnd) <= closing && monthsBefore(periodEnd, months) >= opening,
   );
 }
 

@@ -26,23 +26,30 @@ export type Reading =
   | { readonly kind: 'not-meaningful'; readonly reason: string; readonly inputs: readonly InputUsed[] }
   | { readonly kind: 'missing'; readonly missing: readonly MissingLine[] };
 
+export interface SignedReading {
+  readonly sign: 1 | -1;
+  readonly reading: Reading;
+}
+
 /**
  * The sum of readings, each times its sign. Missing where any part is missing, with every gap named; not
  * meaningful where a part has no meaning.
  *
- * @example sumOfReadings([{ sign: 1, reading: { kind: 'value', value: ZERO, inputs: [] } }, { sign: -1, reading: { kind: 'missing', missing: [] } }]).kind // => 'value'
+ * @example sumOfReadings([{ sign: 1, reading: { kind: 'value', value: decimal(84), inputs: [] } }, { sign: -1, reading: { kind: 'value', value: decimal(60), inputs: [] } }]).value // => 24
  */
-export function sumOfReadings(
-  parts: readonly { readonly sign: 1 | -1; readonly reading: Reading }[],
-): Reading {
-  const missing = parts.flatMap(({ reading }) => (reading.kind === 'missing' ? reading.missing : []));
-  if (missing.length > 0) return { kind: 'missing', missing };
-  const inputs = parts.flatMap(({ sign, reading }) =>
-    reading.kind === 'missing' ? [] : reading.inputs.map((input) => withSign(input, sign)),
-  );
-  const without = parts.find(({ reading }) => reading.kind === 'not-meaningful')?.reading;
-  if (without?.kind === 'not-meaningful') return { kind: 'not-meaningful', reason: without.reason, inputs };
-  return { kind: 'value', value: sumOfInputs(inputs), inputs };
+export function sumOfReadings(parts: readonly SignedReading[]): Reading {
+  const missing = parts.flatMap(({ reading }) => (reading.kind === 'missing' ? [reading.missing] : []));
+  if (missing.length > 0) return { kind: 'missing', missing: missing.flat() };
+  const inputs: InputUsed[] = [];
+  let value = ZERO;
+  let reason: string | null = null;
+  for (const { sign, reading } of parts) {
+    if (reading.kind === 'missing') continue;
+    for (const input of reading.inputs) inputs.push(withSign(input, sign));
+    if (reading.kind === 'value') value = added(value, sign, reading.value);
+    else reason ??= reading.reason;
+  }
+  return reason === null ? { kind: 'value', value, inputs } : { kind: 'not-meaningful', reason, inputs };
 }
 
 /**
@@ -51,7 +58,10 @@ export function sumOfReadings(
  * @example sumOfInputs([{ sign: 1, amount: decimal(84) }, { sign: -1, amount: decimal(60) }]) // => 24
  */
 export const sumOfInputs = (inputs: readonly InputUsed[]): Decimal =>
-  inputs.reduce((sum, input) => sum.plus(input.amount.times(input.sign)), ZERO);
+  inputs.reduce((sum, { sign, amount }) => added(sum, sign, amount), ZERO);
+
+const added = (sum: Decimal, sign: 1 | -1, amount: Decimal): Decimal =>
+  sign === 1 ? sum.plus(amount) : sum.minus(amount);
 
 const withSign = (input: InputUsed, sign: 1 | -1): InputUsed =>
   sign === 1 ? input : { ...input, sign: input.sign === 1 ? -1 : 1 };
