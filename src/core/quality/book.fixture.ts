@@ -156,7 +156,7 @@ function quartersOf(seed: number, bent: Bent): Quarter[] {
 const whole = Math.round;
 
 /** The 32-bit generator mulberry32 (public domain). */
-function generator(seed: number): () => number {
+export function generator(seed: number): () => number {
   let state = seed >>> 0;
   return () => {
     state = (state + 0x6d2b79f5) >>> 0;
