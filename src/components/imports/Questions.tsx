@@ -1,9 +1,12 @@
 import { dayText } from '../../core/calendar/printDay.ts';
+import { useState } from 'react';
 import type { ImportView } from '../../contracts/imports.ts';
 import type { CellRef, Question } from '../../contracts/reading.ts';
+import { isPlainDate } from '../../core/calendar/plainDate.ts';
 import { LINE_ITEMS } from '../../core/statements/lineItems.ts';
 import { Button } from '../ui/Button.tsx';
 import { ErrorState } from '../ui/ErrorState.tsx';
+import { Field, Select } from '../ui/Field.tsx';
 import { Panel } from '../ui/Panel.tsx';
 import { useSending } from '../ui/useSending.ts';
 
@@ -100,6 +103,7 @@ function Answers({ question, busy, onAnswer }: AnswersProps) {
           {option.label}
         </Button>
       ))}
+      {question.options.length === 0 && <PeriodAnswer busy={busy} onAnswer={onAnswer} />}
       {question.kind === 'placement' && (
         <select
           className="input"
@@ -116,6 +120,44 @@ function Answers({ question, busy, onAnswer }: AnswersProps) {
         </select>
       )}
     </div>
+  );
+}
+
+/** A table that names no period: its last day and its length, said by whoever knows the file. */
+function PeriodAnswer({ busy, onAnswer }: Omit<AnswersProps, 'question'>) {
+  const [end, setEnd] = useState('');
+  const [months, setMonths] = useState('');
+  const isWhole = isPlainDate(end) && months !== '';
+  return (
+    <>
+      <Field
+        label="Period ends on"
+        type="date"
+        value={end}
+        onChange={(event) => setEnd(event.target.value)}
+      />
+      <Select
+        label="and covers"
+        placeholder="Choose a length"
+        value={months}
+        options={[
+          { value: '0', label: 'that day (a balance sheet)' },
+          { value: '3', label: '3 months' },
+          { value: '6', label: '6 months' },
+          { value: '9', label: '9 months' },
+          { value: '12', label: '12 months' },
+        ]}
+        onChange={(event) => setMonths(event.target.value)}
+      />
+      <Button
+        small
+        busy={busy}
+        aria-disabled={!isWhole || undefined}
+        onClick={() => isWhole && onAnswer(`${end}/${months}`)}
+      >
+        Answer
+      </Button>
+    </>
   );
 }
 
