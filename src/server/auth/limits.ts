@@ -37,11 +37,8 @@ export async function countTry(
   now: Date,
 ): Promise<number | null> {
   const nowMs = now.getTime();
-  const key = keyOf(limit, who);
-  const before = await findCounter(tx, key, nowMs);
-  if (before && before.points >= limit.points) return secondsUntil(before.endsAtMs, nowMs);
   const endsAtMs = nowMs + limit.windowSeconds * 1_000;
-  const after = await addPoints(tx, { key, points: 1, nowMs, endsAtMs });
+  const after = await addPoints(tx, { key: keyOf(limit, who), points: 1, nowMs, endsAtMs });
   return after.points > limit.points ? secondsUntil(after.endsAtMs, nowMs) : null;
 }
 
@@ -53,12 +50,12 @@ export async function countSignIn(
   now: Date,
 ): Promise<number | null> {
   const here = accountAt(account, address);
+  const byAddress = await countTry(tx, SIGN_IN_ADDRESS, address, now);
+  const byBoth = await countTry(tx, SIGN_IN_HERE, here, now);
+  const byAccount = await countTry(tx, SIGN_IN_ACCOUNT, mailKey(account), now);
+  // Looked up last: a transaction that has looked may lock nothing that others have counted since.
   const isKnown = (await findCounter(tx, keyOf(KNOWN_ADDRESS, here), now.getTime())) !== null;
-  const waits = [
-    await countTry(tx, SIGN_IN_ADDRESS, address, now),
-    await countTry(tx, SIGN_IN_HERE, here, now),
-    isKnown ? null : await countTry(tx, SIGN_IN_ACCOUNT, mailKey(account), now),
-  ].filter((wait) => wait !== null);
+  const waits = [byAddress, byBoth, isKnown ? null : byAccount].filter((wait) => wait !== null);
   return waits.length === 0 ? null : Math.max(...waits);
 }
 
@@ -71,8 +68,9 @@ export async function forgiveSignIn(
 ): Promise<void> {
   const here = accountAt(account, address);
   const nowMs = now.getTime();
-  await deleteCounter(tx, keyOf(SIGN_IN_HERE, here));
+  // In the order in which they were counted, so that two sign-ins wait for and never against each other.
   await addPoints(tx, { key: keyOf(SIGN_IN_ADDRESS, address), points: -1, nowMs, endsAtMs: nowMs });
+  await deleteCounter(tx, keyOf(SIGN_IN_HERE, here));
   await deleteCounter(tx, keyOf(KNOWN_ADDRESS, here));
   await addPoints(tx, {
     key: keyOf(KNOWN_ADDRESS, here),

@@ -44,7 +44,9 @@ export function webServer(render: Render, clientFolder: string): WebServer {
   let uploads = 0;
 
   const handle = (request: IncomingMessage, response: ServerResponse): void => {
-    const isBusy = inFlight >= IN_FLIGHT_MOST || (isUpload(request) && uploads >= UPLOADS_MOST);
+    const isBusy =
+      (inFlight >= IN_FLIGHT_MOST && request.url !== '/livez') ||
+      (isUpload(request) && uploads >= UPLOADS_MOST);
     const refusal = refuseAtOnce(request, isDraining, isBusy);
     if (refusal) {
       refuse(request, response, refusal);

@@ -7,6 +7,7 @@ import { assess, type Assessment } from '../../core/assess.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import type { CrossSection } from '../../core/quality/crossSection.ts';
 import { err, ok, type Result } from '../../core/result.ts';
+import { holdAuditHead } from '../db/repositories/audit.ts';
 import { findCurrentBasis, insertAssessment, makeCurrent } from '../db/repositories/assessments.ts';
 import { holdBorrower, loadBorrowerInputs } from '../db/repositories/borrowerInputs.ts';
 import { latestCrossSection } from '../db/repositories/crossSections.ts';
@@ -57,6 +58,7 @@ export async function assessWithin(
   request: AssessmentRequest,
 ): Promise<Result<AssessedBorrower, ServiceProblem>> {
   const { runId, knownAt, asOf } = request;
+  await holdAuditHead(tx);
   const borrower = await holdBorrower(tx, borrowerId);
   const inputs = borrower && (await loadBorrowerInputs(tx, borrowerId, knownAt));
   if (!borrower || !inputs) return err({ kind: 'not-found', what: 'borrower' });

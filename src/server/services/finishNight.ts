@@ -1,6 +1,7 @@
 /** The end of a run: digests, the administrators' heartbeat, and the run's own state, in one transaction. */
 import type { Transaction } from 'sequelize';
 import { formatDay } from '../../core/calendar/printDay.ts';
+import { holdAuditHead } from '../db/repositories/audit.ts';
 import { countWaitingMail, listDigestReaders } from '../db/repositories/digestAlerts.ts';
 import { renewLock } from '../db/repositories/jobLocks.ts';
 import { findLender, type Lender } from '../db/repositories/lender.ts';
@@ -38,6 +39,7 @@ export interface RunSummary {
 export async function finishNight(tx: Transaction, { run: begun, lock }: Night): Promise<RunSummary> {
   // First of all, and with its row held to the end: a second process can finish nothing beside this one.
   if (!(await renewLock(tx, lock, LOCK_SECONDS))) throw new RunLockLost();
+  await holdAuditHead(tx);
   const run = await findRun(tx, begun.id);
   const lender = await findLender(tx);
   if (!run || !lender) throw new Error(`run ${begun.id} or the lender is gone`);

@@ -3,6 +3,7 @@ import { countTry, FORGOT_ACCOUNT, FORGOT_ADDRESS } from '../auth/limits.ts';
 import { newToken, tokenHash } from '../auth/tokens.ts';
 import { env } from '../config/env.ts';
 import { inTransaction } from '../db/inTransaction.ts';
+import { holdAuditHead } from '../db/repositories/audit.ts';
 import { queueMail } from '../db/repositories/outbox.ts';
 import { findSignIn, mailKey, type SignInRecord } from '../db/repositories/people.ts';
 import { insertToken, voidTokens } from '../db/repositories/tokens.ts';
@@ -28,6 +29,7 @@ export async function forgotPassword(actor: Actor, typed: ForgottenPassword): Pr
 }
 
 async function queueLink(tx: Transaction, actor: Actor, email: string): Promise<void> {
+  await holdAuditHead(tx);
   const tooOften = await countTry(tx, FORGOT_ACCOUNT, mailKey(email), actor.now);
   const found = await findSignIn(tx, email);
   const person = tooOften === null && found?.isActive ? found : null;

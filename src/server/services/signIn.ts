@@ -40,9 +40,9 @@ export async function signIn(
   }
   // Without the key: the answer is a token, which no table may keep.
   return write({ ...actor, idempotencyKey: null }, 'sign-in', null, async (tx) => {
+    await forgiveSignIn(tx, usable.email, actor.address, actor.now);
     const now = await findSignInById(tx, usable.id);
     if (!now?.isActive || now.passwordHash !== usable.passwordHash) return err(WRONG);
-    await forgiveSignIn(tx, usable.email, actor.address, actor.now);
     await deleteExpiredSessions(tx, actor.now);
     await deleteEndedCounters(tx, actor.now.getTime());
     if (oldSessionId) await endSession(tx, oldSessionId);

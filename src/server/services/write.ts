@@ -9,7 +9,7 @@ import type { Transaction } from 'sequelize';
 import type { ServiceProblem } from '../../contracts/problem.ts';
 import { err, ok, type Result } from '../../core/result.ts';
 import { inTransaction } from '../db/inTransaction.ts';
-import { appendAudit, type AuditFacts } from '../db/repositories/audit.ts';
+import { appendAudit, holdAuditHead, type AuditFacts } from '../db/repositories/audit.ts';
 import { claimKey, storeAnswer } from '../db/repositories/idempotency.ts';
 import type { Actor } from './actor.ts';
 
@@ -52,6 +52,7 @@ export async function write<T>(
           kind: 'conflict',
           detail: 'This Idempotency-Key was used for another request. Nothing was changed. Send a new key.',
         });
+      await holdAuditHead(tx);
       const result = await work(tx);
       if (!result.ok) throw new Undo(result.error);
       if (claim && actor.person && actor.idempotencyKey)

@@ -24,6 +24,14 @@ export interface AuditFacts {
 const SUMMARY_MOST = 500;
 
 /**
+ * Waits until this transaction is the next to append. Called before anything else is read: the server refuses (1020)
+ * to lock a row that others have changed since this transaction's first look, and every change ends with the head.
+ */
+export async function holdAuditHead(tx: Transaction): Promise<void> {
+  await selectOne(tx, 'select seq from audit_heads where id = 1 for update');
+}
+
+/**
  * Appends one entry to the chain, in the caller's transaction: what is not audited does not happen. The hash
  * covers every field in a fixed order and the hash before it, keyed outside the database.
  */

@@ -20,14 +20,19 @@ export async function addPoints(
        expire = if(expire <= :nowMs, :endsAtMs, expire)`,
     counter,
   );
-  const row = await findCounter(tx, counter.key, counter.nowMs);
+  const row = await findCounter(tx, counter.key, counter.nowMs, 'for update');
   return row ?? { points: 0, endsAtMs: counter.endsAtMs };
 }
 
-export async function findCounter(tx: Transaction, key: string, nowMs: number): Promise<Counter | null> {
+export async function findCounter(
+  tx: Transaction,
+  key: string,
+  nowMs: number,
+  lock: '' | 'for update' = '',
+): Promise<Counter | null> {
   const row = await selectOne<{ points: number; expire: number }>(
     tx,
-    'select points, expire from rate_limits where `key` = :key and expire > :nowMs',
+    `select points, expire from rate_limits where \`key\` = :key and expire > :nowMs ${lock}`,
     { key, nowMs },
   );
   return row && { points: row.points, endsAtMs: row.expire };
