@@ -80,7 +80,7 @@ async function rememberPlacements(
   place: { borrowerId: number; importId: number; layoutKey: string; personId: number; now: Date },
 ): Promise<void> {
   for (const [questionKey, answer] of Object.entries(MEMORANDUM_PLACEMENTS)) {
-    await insertAnswer(tx, { ...place, questionKey, answer });
+    await insertAnswer(tx, { ...place, questionKey, answer, holdsFor: 'layout' });
     await rememberAnswer(tx, { ...place, questionKey, answer });
   }
 }

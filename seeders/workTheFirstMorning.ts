@@ -62,7 +62,7 @@ async function openAlert(scenario: Scenario, kind: AlertKind): Promise<AlertList
       tx,
       'all',
       {
-        ownerId: null,
+        ownerIds: null,
         notTaken: true,
         kind,
         severity: null,

@@ -25,7 +25,7 @@ export const alertQuery = pageQuery.extend({
   /** Smallest headroom of the borrower below this share, in percent. */
   mayFallBelow: z.coerce.number().int().min(-100).max(100).optional(),
   dueWithinDays: z.coerce.number().int().min(0).max(365).optional(),
-  state: z.enum(['open', 'closed', ...ALERT_STATES]).default('open'),
+  state: z.enum(['open', ...ALERT_STATES]).default('open'),
   borrowerId: z.coerce.number().int().positive().optional(),
   sort: z.enum(ALERT_SORTS).default('due'),
   direction: z.enum(['up', 'down']).default('up'),
@@ -82,6 +82,7 @@ export interface AlertSteps {
   readonly take: boolean;
   readonly work: boolean;
   readonly putOff: boolean;
+  readonly close: boolean;
   readonly handOver: boolean;
   readonly confirmClosing: boolean;
   readonly propose: boolean;

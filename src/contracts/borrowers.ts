@@ -164,6 +164,8 @@ export interface BorrowerView {
   readonly computed: ComputedFacts | null;
   readonly covenants: readonly CovenantView[];
   readonly quality: ReportingQuality | null;
+  /** The lender's day, against which due dates stand. */
+  readonly today: string;
   readonly alerts: readonly AlertRow[];
   readonly watchlist: WatchlistRow | null;
   readonly proposals: readonly ProposalRow[];

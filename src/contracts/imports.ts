@@ -71,6 +71,7 @@ export interface ImportView extends ImportRow {
 
 export interface AcceptedImport {
   readonly id: number;
+  readonly borrowerId: number;
   readonly statements: number;
   /** Periods whose figures on file are the same: kept as they are. */
   readonly unchanged: number;

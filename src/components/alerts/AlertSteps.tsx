@@ -44,7 +44,7 @@ export function AlertSteps({ alert, onChanged }: AlertStepsProps) {
         {steps.handOver && offer('hand over', 'Hand over to the owner')}
         {steps.confirmClosing && offer('confirm closing', 'Confirm the closing')}
         {steps.propose && <Button onClick={() => setProposing(true)}>Propose for watchlist</Button>}
-        {steps.work && offer('close', 'Close with reason')}
+        {steps.close && offer('close', 'Close with reason')}
       </div>
       {alert.onWatchlist && <p className="type-second mt-2">On the watchlist.</p>}
       {alert.proposalWaiting && (

@@ -1,8 +1,7 @@
 import type { Transaction } from 'sequelize';
 import type { AcceptedImport, ChangedFigure, ImportAcceptance } from '../../contracts/imports.ts';
+import type { ServiceProblem } from '../../contracts/problem.ts';
 import type { Reading } from '../../contracts/reading.ts';
-import { plainDate } from '../../core/calendar/plainDate.ts';
-import { currentStatements } from '../../core/statements/currentStatements.ts';
 import { LINE_ITEM_CODES } from '../../core/statements/lineItems.ts';
 import type { Statement } from '../../core/statements/statement.ts';
 import { statementsFromReading, type StagedStatement } from '../../core/statements/statementsFromReading.ts';
@@ -15,6 +14,7 @@ import { loadStatements } from '../db/repositories/statementInputs.ts';
 import { insertStatementVersions, type DeliveredStatement } from '../db/repositories/statements.ts';
 import type { PersonActor } from './actor.ts';
 import { assessNow } from './assessNow.ts';
+import { lenderDay } from './lenderDay.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 /**
@@ -27,16 +27,12 @@ export async function acceptImport(
   command: ImportAcceptance,
 ): Promise<Outcome<AcceptedImport>> {
   const scope = deskScope(actor.person, 'import figures');
-  let borrowerId = 0;
   const accepted = await write(actor, 'accept-import', { ...request, command }, async (tx) => {
     const draft = await findImportForUpdate(tx, request.id, scope);
     if (!draft) return err({ kind: 'not-found', what: 'import' });
     const reading = JSON.parse(draft.reading) as Reading;
     const refused = refusal(draft, request.version, reading);
     if (refused) return err(refused);
-    borrowerId = draft.borrowerId;
-    await raiseInputVersion(tx, draft.borrowerId);
-
     const { added, unchanged, changes } = await addVersions(tx, actor, draft, reading, command);
     if (added === 0)
       return err({
@@ -44,45 +40,53 @@ export async function acceptImport(
         detail:
           'All periods of this file are on file with equal figures. Nothing was changed. Withdraw this import if it is not needed.',
       });
-    await markAccepted(tx, { ...request, ...command, acceptedBy: actor.person.id, now: actor.now });
-    await rememberAnswers(tx, actor, draft, reading);
+    if (!(await markAccepted(tx, { ...request, ...command, acceptedBy: actor.person.id, now: actor.now })))
+      return err(stale(draft));
+    await raiseInputVersion(tx, draft.borrowerId);
+    await rememberAnswers(tx, actor, draft, reading.layoutKey);
     await audit(tx, actor, {
       action: 'accept-import',
       subjectKind: 'import',
       subjectId: String(draft.id),
       borrowerId: draft.borrowerId,
       deskId: draft.deskId,
-      summary: `Accepted ${added} statements of ${draft.borrowerName} from ${draft.fileName}`,
+      summary: `Accepted ${added === 1 ? 'one statement' : `${added} statements`} of ${draft.borrowerName} from ${draft.fileName}`,
       before: { state: draft.state },
       after: { ...command, statements: added, unchanged, changes },
     });
-    return ok({ id: draft.id, statements: added, unchanged, changes });
+    return ok({ id: draft.id, borrowerId: draft.borrowerId, statements: added, unchanged, changes });
   });
-  if (accepted.ok && borrowerId !== 0) await assessNow(actor, borrowerId);
+  if (accepted.ok) await assessNow(actor, accepted.value.borrowerId);
   return accepted;
 }
 
-function refusal(draft: ImportRecord, version: number, reading: Reading) {
+const stale = (draft: ImportRecord): ServiceProblem => ({
+  kind: 'stale',
+  detail: 'This import changed since you opened it. Nothing was changed. Look at it again and accept.',
+  currentVersion: draft.version,
+});
+
+function refusal(draft: ImportRecord, version: number, reading: Reading): ServiceProblem | null {
   if (draft.state === 'accepted')
     return {
-      kind: 'conflict' as const,
+      kind: 'conflict',
       detail: `${draft.acceptedBy ?? 'Somebody'} accepted this import already. Its figures were taken once; nothing was changed.`,
     };
   if (draft.state !== 'draft')
-    return { kind: 'conflict' as const, detail: `This import is ${draft.state}. Nothing was changed.` };
-  if (draft.version !== version)
-    return {
-      kind: 'stale' as const,
-      detail: 'This import changed since you opened it. Nothing was changed. Look at it again and accept.',
-      currentVersion: draft.version,
-    };
+    return { kind: 'conflict', detail: `This import is ${draft.state}. Nothing was changed.` };
+  if (draft.version !== version) return stale(draft);
   if (reading.outcome !== 'ready')
     return {
-      kind: 'conflict' as const,
-      detail: `${draft.openQuestions} questions are open. Nothing was changed. Answer them, then accept.`,
+      kind: 'conflict',
+      detail: `${openQuestions(draft.openQuestions)} Nothing was changed.`,
     };
   return null;
 }
+
+const openQuestions = (open: number): string =>
+  open === 0
+    ? 'The answer was to wait for a corrected file. Change it to take these figures, or withdraw this import.'
+    : `${open === 1 ? 'One question is' : `${open} questions are`} open. Answer them, then accept.`;
 
 async function addVersions(
   tx: Transaction,
@@ -91,18 +95,15 @@ async function addVersions(
   reading: Reading,
   command: ImportAcceptance,
 ) {
-  const asOf = plainDate(actor.now.toISOString().slice(0, 10));
   const known = (await loadStatements(tx, [draft.borrowerId], actor.now)).get(draft.borrowerId) ?? [];
-  const onFile = currentStatements(
-    known.filter((statement) => statement.basis === command.basis),
-    { scope: command.scope, asOf },
-  );
-  const receivedOn = plainDate(draft.uploadedAt.toISOString().slice(0, 10));
+  const onFile = known.filter(({ basis, scope }) => basis === command.basis && scope === command.scope);
+  const receivedOn = await lenderDay(tx, draft.uploadedAt);
   const added: DeliveredStatement[] = [];
   let unchanged = 0;
   const changes: ChangedFigure[] = [];
   for (const staged of statementsFromReading(reading)) {
-    const earlier = onFile.find(
+    // Versions of a period come in their order: the last is the latest.
+    const earlier = onFile.findLast(
       (statement) => statement.periodEnd === staged.periodEnd && statement.months === staged.months,
     );
     const differing = earlier ? differences(earlier, staged) : [];
@@ -146,19 +147,16 @@ function differences(earlier: Statement, staged: StagedStatement): ChangedFigure
 async function rememberAnswers(
   tx: Transaction,
   actor: PersonActor,
-  draft: ImportRecord,
-  reading: Reading,
+  { id, borrowerId }: ImportRecord,
+  layoutKey: string,
 ): Promise<void> {
-  const lasting = new Set(
-    reading.questions.filter((question) => question.holdsFor === 'layout').map((question) => question.key),
-  );
-  for (const given of await listAnswers(tx, draft.id)) {
-    if (!lasting.has(given.questionKey)) continue;
+  for (const { questionKey, answer, holdsFor } of await listAnswers(tx, id)) {
+    if (holdsFor !== 'layout') continue;
     await rememberAnswer(tx, {
-      borrowerId: draft.borrowerId,
-      layoutKey: reading.layoutKey,
-      questionKey: given.questionKey,
-      answer: given.answer,
+      borrowerId,
+      layoutKey,
+      questionKey,
+      answer,
       personId: actor.person.id,
       now: actor.now,
     });

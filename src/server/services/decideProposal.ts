@@ -8,13 +8,15 @@ import { err, ok } from '../../core/result.ts';
 import { deskScope } from '../auth/policy.ts';
 import {
   decideProposal as decideRecord,
-  findProposal,
+  findProposalForUpdate,
   withdrawProposal as withdrawRecord,
   type ProposalRecord,
 } from '../db/repositories/proposals.ts';
+import { findAlertForUpdate, moveAlert } from '../db/repositories/alertStates.ts';
 import { changeEntry, insertEntry, standingEntry } from '../db/repositories/watchlist.ts';
 import type { Transaction } from 'sequelize';
 import type { PersonActor } from './actor.ts';
+import { lenderDay } from './lenderDay.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 const stored = z.string().transform((text) => newWatchlistProposal.parse(JSON.parse(text)));
@@ -27,7 +29,7 @@ export function decideProposal(
 ): Promise<Outcome<{ id: number; state: 'approved' | 'declined' }>> {
   const state = decision.decision === 'approve' ? 'approved' : 'declined';
   return write(actor, 'decide-proposal', { ...request, decision }, async (tx) => {
-    const proposal = await findProposal(tx, request.id, deskScope(actor.person, 'decide'));
+    const proposal = await findProposalForUpdate(tx, request.id, deskScope(actor.person, 'decide'));
     if (!proposal) return err({ kind: 'not-found', what: 'proposal' });
     const decided = await decideRecord(tx, {
       ...request,
@@ -42,7 +44,7 @@ export function decideProposal(
     if (state === 'approved') {
       const applied = await apply(tx, actor, proposal, content);
       if (!applied.ok) return applied;
-    }
+    } else await release(tx, actor, content, { what: 'Proposal declined', text: decision.text });
     await audit(tx, actor, {
       action: 'decide-proposal',
       subjectKind: 'proposal',
@@ -62,7 +64,7 @@ export function withdrawProposal(
   request: { id: number; version: number },
 ): Promise<Outcome<{ id: number }>> {
   return write(actor, 'withdraw-proposal', request, async (tx) => {
-    const proposal = await findProposal(tx, request.id, deskScope(actor.person, 'propose'));
+    const proposal = await findProposalForUpdate(tx, request.id, deskScope(actor.person, 'propose'));
     if (!proposal) return err({ kind: 'not-found', what: 'proposal' });
     if (proposal.proposedById !== actor.person.id)
       return err({
@@ -71,6 +73,7 @@ export function withdrawProposal(
       });
     if (!(await withdrawRecord(tx, { ...request, personId: actor.person.id })))
       return refusal(proposal, request.version, null);
+    await release(tx, actor, stored.parse(proposal.content), { what: 'Proposal withdrawn', text: '' });
     await audit(tx, actor, {
       action: 'withdraw-proposal',
       subjectKind: 'proposal',
@@ -99,17 +102,15 @@ async function apply(
     plan: content.plan,
     nextReviewOn: content.nextReviewOn,
   };
-  if (content.change === 'entry') {
-    await insertEntry(tx, {
-      ...terms,
-      borrowerId: proposal.borrowerId,
-      enteredOn: actor.now.toISOString().slice(0, 10),
-    });
+  const standing = await standingEntry(tx, proposal.borrowerId);
+  if (content.change === 'entry' && !standing) {
+    const enteredOn = await lenderDay(tx, actor.now);
+    await insertEntry(tx, { ...terms, borrowerId: proposal.borrowerId, enteredOn });
     return ok(null);
   }
-  const standing = await standingEntry(tx, proposal.borrowerId);
   const changed =
     standing &&
+    content.change !== 'entry' &&
     (await changeEntry(tx, {
       ...terms,
       id: standing.id,
@@ -119,9 +120,23 @@ async function apply(
   if (!changed)
     return err({
       kind: 'conflict',
-      detail: `${proposal.borrowerName} is no longer on the watchlist as proposed. Nothing was changed. Decline this proposal and have it made again.`,
+      detail: `${proposal.borrowerName} ${standing ? 'is on the watchlist already' : 'is no longer on the watchlist'}. Nothing was changed. Decline this proposal and have it made again.`,
     });
   return ok(null);
+}
+
+/** The alert that the proposal carried is its owner's again, as it was: taken, or waiting to be. */
+async function release(
+  tx: Transaction,
+  actor: PersonActor,
+  { alertId }: NewWatchlistProposal,
+  event: { what: string; text: string },
+): Promise<void> {
+  const alert = alertId === null ? null : await findAlertForUpdate(tx, alertId, 'all');
+  if (alert?.state !== 'carried into a proposal') return;
+  const state = alert.takenBy === null ? 'raised' : 'taken';
+  const moved = await moveAlert(tx, { ...event, alert, state, personId: actor.person.id, now: actor.now });
+  if (!moved) throw new Error(`alert ${alert.id} was held and moved all the same`);
 }
 
 function refusal(proposal: ProposalRecord, version: number, deciderId: number | null): Outcome<never> {

@@ -1,7 +1,7 @@
 import type { AlertQuery, AlertRow } from '../../contracts/alerts.ts';
 import type { Page } from '../../contracts/paging.ts';
 import type { AlertKind, AlertState, Severity } from '../../core/alerts/alert.ts';
-import { addDays, plainDate } from '../../core/calendar/plainDate.ts';
+import { addDays } from '../../core/calendar/plainDate.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import type { QualityBand } from '../../core/quality/score.ts';
 import { ok } from '../../core/result.ts';
@@ -13,7 +13,9 @@ import {
   type AlertFilter,
   type AlertListRecord,
 } from '../db/repositories/alertLists.ts';
+import { actsFor } from '../db/repositories/borrowerDesks.ts';
 import type { PersonActor } from './actor.ts';
+import { lenderDay } from './lenderDay.ts';
 import { loadStrips, type Strip } from './strips.ts';
 import type { Outcome } from './write.ts';
 
@@ -22,7 +24,7 @@ export function listAlerts(actor: PersonActor, query: AlertQuery): Promise<Outco
     const { rows, total } = await listRecords(
       tx,
       deskScope(actor.person, 'read borrower'),
-      alertFilter(actor, query),
+      await alertFilter(tx, actor, query),
       query,
     );
     return ok({
@@ -34,10 +36,15 @@ export function listAlerts(actor: PersonActor, query: AlertQuery): Promise<Outco
   });
 }
 
-export function alertFilter(actor: PersonActor, query: AlertQuery): AlertFilter {
-  const today = plainDate(actor.now.toISOString().slice(0, 10));
+/** "Mine" are those of an absent person too, where I am the deputy. */
+export async function alertFilter(
+  tx: Transaction,
+  actor: PersonActor,
+  query: AlertQuery,
+): Promise<AlertFilter> {
+  const today = await lenderDay(tx, actor.now);
   return {
-    ownerId: query.view === 'mine' ? actor.person.id : null,
+    ownerIds: query.view === 'mine' ? await actsFor(tx, actor.person.id, today) : null,
     notTaken: query.view === 'not-taken',
     kind: query.kind ?? null,
     severity: query.severity ?? null,

@@ -7,6 +7,7 @@ import {
   type WatchlistView,
 } from '../../contracts/watchlist.ts';
 import type { Transaction } from 'sequelize';
+import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import { ok } from '../../core/result.ts';
 import { deskScope } from '../auth/policy.ts';
 import type { DeskScope } from '../db/deskScope.ts';
@@ -18,6 +19,7 @@ import {
   type WatchlistRecord,
 } from '../db/repositories/watchlist.ts';
 import type { PersonActor } from './actor.ts';
+import { lenderDay } from './lenderDay.ts';
 import type { Outcome } from './write.ts';
 
 const PROPOSALS_SHOWN = 100;
@@ -26,10 +28,11 @@ const PROPOSALS_SHOWN = 100;
 export function listWatchlist(actor: PersonActor): Promise<Outcome<WatchlistView>> {
   const scope = deskScope(actor.person, 'read borrower');
   return inTransaction(async (tx) => {
+    const today = await lenderDay(tx, actor.now);
     const entries = await listRecords(tx, scope);
     const proposals = await listProposals(tx, scope, { borrowerId: null, limit: PROPOSALS_SHOWN });
     return ok({
-      entries: entries.map((record) => toWatchlistRow(record, actor.now)),
+      entries: entries.map((record) => toWatchlistRow(record, today)),
       proposals: proposals.map(toProposalRow),
     });
   });
@@ -40,14 +43,14 @@ export async function borrowerWatch(
   tx: Transaction,
   scope: DeskScope,
   borrowerId: number,
-  now: Date,
+  today: PlainDate,
 ): Promise<{ watchlist: WatchlistRow | null; proposals: ProposalRow[] }> {
   const standing = await standingEntry(tx, borrowerId);
   const proposals = await listProposals(tx, scope, { borrowerId, limit: PROPOSALS_SHOWN });
-  return { watchlist: standing && toWatchlistRow(standing, now), proposals: proposals.map(toProposalRow) };
+  return { watchlist: standing && toWatchlistRow(standing, today), proposals: proposals.map(toProposalRow) };
 }
 
-const toWatchlistRow = (record: WatchlistRecord, now: Date): WatchlistRow => ({
+const toWatchlistRow = (record: WatchlistRecord, today: PlainDate): WatchlistRow => ({
   id: record.id,
   borrowerId: record.borrowerId,
   borrowerName: record.borrowerName,
@@ -57,7 +60,7 @@ const toWatchlistRow = (record: WatchlistRecord, now: Date): WatchlistRow => ({
   ownerName: record.ownerName,
   plan: record.plan,
   nextReviewOn: record.nextReviewOn,
-  reviewOverdue: record.nextReviewOn < now.toISOString().slice(0, 10),
+  reviewOverdue: record.nextReviewOn < today,
   enteredOn: record.enteredOn,
   state: record.state,
   proposedBy: record.proposedBy,

@@ -1,12 +1,15 @@
 import type { NewWatchlistProposal } from '../../contracts/watchlist.ts';
 import { err, ok } from '../../core/result.ts';
-import { may } from '../auth/policy.ts';
+import type { Transaction } from 'sequelize';
+import { deskScope } from '../auth/policy.ts';
 import { isDuplicate } from '../db/inTransaction.ts';
-import { findAlertForUpdate, moveAlert } from '../db/repositories/alertStates.ts';
+import { findAlertForUpdate, moveAlert, type AlertRecord } from '../db/repositories/alertStates.ts';
 import { findBorrowerDesk, isDeskMember } from '../db/repositories/borrowerDesks.ts';
-import { insertProposal } from '../db/repositories/proposals.ts';
+import { insertWatchlistProposal } from '../db/repositories/proposals.ts';
 import { standingEntry } from '../db/repositories/watchlist.ts';
 import type { PersonActor } from './actor.ts';
+import { NOT_CARRIED } from './alertHindrance.ts';
+import { lenderDay } from './lenderDay.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 /** Proposes that a borrower enters the watchlist, changes grade, or begins to leave it; another person decides. */
@@ -14,11 +17,19 @@ export function proposeWatchlist(
   actor: PersonActor,
   command: NewWatchlistProposal,
 ): Promise<Outcome<{ id: number }>> {
+  const scope = deskScope(actor.person, 'propose');
   return write(actor, 'propose-watchlist', command, async (tx) => {
-    const borrower = await findBorrowerDesk(tx, command.borrowerId);
-    if (!borrower || !may(actor.person, 'propose', borrower.deskId))
-      return err({ kind: 'not-found', what: 'borrower' });
-    if (command.nextReviewOn <= actor.now.toISOString().slice(0, 10))
+    const alert = command.alertId === null ? null : await findAlertForUpdate(tx, command.alertId, scope);
+    const borrower = await findBorrowerDesk(tx, command.borrowerId, scope);
+    if (!borrower) return err({ kind: 'not-found', what: 'borrower' });
+    if (command.alertId !== null && alert?.borrowerId !== command.borrowerId)
+      return err({ kind: 'not-found', what: 'alert' });
+    if (alert && NOT_CARRIED.includes(alert.state))
+      return err({
+        kind: 'conflict',
+        detail: `This alert is ${alert.state}, so that no proposal can carry it. Nothing was changed. Propose without it, from the borrower’s page.`,
+      });
+    if (command.nextReviewOn <= (await lenderDay(tx, actor.now)))
       return invalid('nextReviewOn', 'The next review must lie ahead.');
     if (!(await isDeskMember(tx, borrower.deskId, command.ownerId)))
       return invalid('ownerId', `The owner of the plan must belong to ${borrower.deskName}.`);
@@ -35,20 +46,13 @@ export function proposeWatchlist(
         detail: `${borrower.name} is not on the watchlist. Nothing was changed. Propose an entry instead.`,
       });
 
-    const alert = command.alertId === null ? null : await findAlertForUpdate(tx, command.alertId);
-    if (command.alertId !== null && alert?.borrowerId !== command.borrowerId)
-      return err({ kind: 'not-found', what: 'alert' });
-
     let id: number;
     try {
-      id = await insertProposal(tx, {
-        kind: 'watchlist',
+      id = await insertWatchlistProposal(tx, {
         borrowerId: command.borrowerId,
         deskId: borrower.deskId,
-        subjectKind: 'borrower',
-        subjectId: command.borrowerId,
+        alertId: command.alertId,
         content: command,
-        openSlot: `watchlist:${command.borrowerId}`,
         proposedBy: actor.person.id,
         now: actor.now,
       });
@@ -59,17 +63,7 @@ export function proposeWatchlist(
         detail: `A watchlist proposal for ${borrower.name} is waiting for a decision. Nothing was changed. Wait for the decision, or ask the proposer to withdraw it.`,
       });
     }
-    if (alert) {
-      const moved = await moveAlert(tx, {
-        alert,
-        state: 'carried into a proposal',
-        personId: actor.person.id,
-        what: 'Proposed for watchlist',
-        text: `${command.grade}: ${command.reason}`,
-        now: actor.now,
-      });
-      if (!moved) return err({ kind: 'stale', detail: STALE, currentVersion: alert.version });
-    }
+    if (alert) await carry(tx, actor, alert, command);
     await audit(tx, actor, {
       action: 'propose-watchlist',
       subjectKind: 'proposal',
@@ -84,8 +78,25 @@ export function proposeWatchlist(
   });
 }
 
-const STALE =
-  'Somebody changed this alert while you wrote. Nothing was changed. Look at it again and send once more.';
+/** The owner who proposes works the alert, and so has taken it. */
+async function carry(
+  tx: Transaction,
+  actor: PersonActor,
+  alert: AlertRecord,
+  { grade, reason }: NewWatchlistProposal,
+): Promise<void> {
+  const takes = alert.takenBy === null && alert.ownerId === actor.person.id;
+  const moved = await moveAlert(tx, {
+    alert,
+    state: 'carried into a proposal',
+    personId: actor.person.id,
+    what: `Proposed for watchlist at ${grade}`,
+    text: reason,
+    now: actor.now,
+    ...(takes && { takenBy: actor.person.id }),
+  });
+  if (!moved) throw new Error(`alert ${alert.id} was held and moved all the same`);
+}
 
 const invalid = (field: string, message: string) =>
   err({

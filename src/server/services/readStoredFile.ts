@@ -1,48 +1,45 @@
 import type { Transaction } from 'sequelize';
+import type { ImportAnswer } from '../../contracts/imports.ts';
 import type { Reading } from '../../contracts/reading.ts';
 import { storedFiles } from '../files/storedFiles.ts';
 import { lastQuarterRevenue, readingFacts } from '../db/repositories/readingContext.ts';
-import { listAnswers, listRemembered, type AnswerRecord } from '../db/repositories/importAnswers.ts';
+import { listAnswers, listRemembered } from '../db/repositories/importAnswers.ts';
 import type { StagedReading } from '../db/repositories/imports.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { readWorkbook } from '../sheets/read/readWorkbook.ts';
 
-/** What a file was read as, with the answers that the reading rests on. */
-export interface AnsweredReading {
-  readonly reading: Reading;
-  readonly answers: readonly (AnswerRecord & { readonly remembered: boolean })[];
-}
-
-interface File {
+interface FileToRead {
   readonly borrowerId: number;
   readonly bytes: Buffer;
   readonly fileName: string;
   /** The draft whose given answers count; null for a file that is not staged yet. */
   readonly importId: number | null;
+  /** An answer that is about to be given, or taken back. */
+  readonly answering?: ImportAnswer;
 }
 
 /**
  * Reads a file anew with every answer that holds: those given on this import, and those remembered for the
  * borrower's layout. The layout is known only once the file is read, so that remembered answers cost a second look.
  */
-export async function readFile(file: File): Promise<AnsweredReading> {
+export async function readFile(file: FileToRead): Promise<Reading> {
+  const { borrowerId, bytes, fileName, importId, answering } = file;
   const { context, given } = await inTransaction(async (tx) => ({
-    context: await contextOf(tx, file.borrowerId),
-    given: file.importId === null ? [] : await listAnswers(tx, file.importId),
+    context: await contextOf(tx, borrowerId),
+    given: importId === null ? [] : await listAnswers(tx, importId),
   }));
-  const own = given.map((answer) => ({ ...answer, remembered: false }));
-  const first = await readWorkbook(file.bytes, file.fileName, { ...context, answers: byKey(own) });
-  if (first.outcome === 'refused') return { reading: first, answers: own };
+  const own = new Map(given.map((answer) => [answer.questionKey, answer.answer]));
+  if (answering?.answer) own.set(answering.questionKey, answering.answer);
+  else if (answering) own.delete(answering.questionKey);
+  const first = await readWorkbook(bytes, fileName, { ...context, answers: Object.fromEntries(own) });
+  if (first.outcome === 'refused') return first;
 
-  const remembered = (await inTransaction((tx) => listRemembered(tx, file.borrowerId, first.layoutKey)))
-    .filter((answer) => !own.some((one) => one.questionKey === answer.questionKey))
-    .map((answer) => ({ ...answer, remembered: true }));
-  if (remembered.length === 0) return { reading: first, answers: own };
-  const answers = [...remembered, ...own];
-  return {
-    reading: await readWorkbook(file.bytes, file.fileName, { ...context, answers: byKey(answers) }),
-    answers,
-  };
+  const remembered = (await inTransaction((tx) => listRemembered(tx, borrowerId, first.layoutKey))).filter(
+    (answer) => !own.has(answer.questionKey),
+  );
+  if (remembered.length === 0) return first;
+  const answers = [...remembered.map(({ questionKey, answer }) => [questionKey, answer] as const), ...own];
+  return readWorkbook(bytes, fileName, { ...context, answers: Object.fromEntries(answers) });
 }
 
 /** The bytes as they were sent; a stored file that is gone is a fault of ours, never an empty reading. */
@@ -69,6 +66,3 @@ async function contextOf(tx: Transaction, borrowerId: number) {
     borrowerName: borrower.name,
   };
 }
-
-const byKey = (answers: readonly { questionKey: string; answer: string }[]): Record<string, string> =>
-  Object.fromEntries(answers.map((answer) => [answer.questionKey, answer.answer]));

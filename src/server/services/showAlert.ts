@@ -1,16 +1,19 @@
 import { z } from 'zod';
-import type { AlertDetail, AlertSteps } from '../../contracts/alerts.ts';
-import { CLOSING_REASONS } from '../../core/alerts/alert.ts';
+import type { AlertDetail, AlertStep, AlertSteps } from '../../contracts/alerts.ts';
+import { CLOSING_REASONS, type AlertState, type Severity } from '../../core/alerts/alert.ts';
 import { err, ok } from '../../core/result.ts';
 import type { Transaction } from 'sequelize';
 import { deskScope, may } from '../auth/policy.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { findAlert, listAlertEvents, type AlertListRecord } from '../db/repositories/alertLists.ts';
 import { actsFor } from '../db/repositories/borrowerDesks.ts';
-import { hasOpenProposal } from '../db/repositories/proposals.ts';
+import { findWaitingProposal } from '../db/repositories/proposals.ts';
 import { standingEntry } from '../db/repositories/watchlist.ts';
 import type { PersonActor } from './actor.ts';
+import { hindrance, NOT_CARRIED } from './alertHindrance.ts';
+import { lenderDay } from './lenderDay.ts';
 import { withStrips } from './listAlerts.ts';
+import { isSecondPerson } from './workAlert.ts';
 import type { Outcome } from './write.ts';
 
 const storedEvidence = z.array(z.object({ label: z.string(), value: z.string() }));
@@ -23,7 +26,7 @@ export function showAlert(actor: PersonActor, id: number): Promise<Outcome<Alert
     const [row] = await withStrips(tx, [record], actor.now);
     if (!row) throw new Error('one record gives one row');
     const standing = await standingEntry(tx, record.borrowerId);
-    const proposalWaiting = await hasOpenProposal(tx, `watchlist:${record.borrowerId}`);
+    const waiting = await findWaitingProposal(tx, record.borrowerId);
     const reason = CLOSING_REASONS.find((listed) => listed.code === record.closingReason);
     return ok({
       ...row,
@@ -40,9 +43,9 @@ export function showAlert(actor: PersonActor, id: number): Promise<Outcome<Alert
       closing: reason
         ? { reason: reason.label, text: record.closingText ?? '', by: record.closedBy ?? '' }
         : null,
-      steps: await stepsFor(tx, actor, record, { onWatchlist: standing !== null, proposalWaiting }),
+      steps: await stepsFor(tx, actor, record, { onWatchlist: standing !== null, waiting }),
       onWatchlist: standing !== null,
-      proposalWaiting,
+      proposalWaiting: waiting !== null,
     });
   });
 }
@@ -51,29 +54,35 @@ async function stepsFor(
   tx: Transaction,
   actor: PersonActor,
   record: AlertListRecord,
-  watch: { onWatchlist: boolean; proposalWaiting: boolean },
+  watch: { onWatchlist: boolean; waiting: { alertId: number | null } | null },
 ): Promise<AlertSteps> {
-  const open = record.state !== 'closed' && record.state !== 'superseded';
-  const toConfirm = record.state === 'closing to be confirmed';
-  const on = actor.now.toISOString().slice(0, 10);
+  const { person } = actor;
+  const alert = {
+    state: record.state as AlertState,
+    severity: record.severity as Severity,
+    putOffCount: record.putOffCount,
+    proposalWaits: watch.waiting?.alertId === record.id,
+  };
+  const today = await lenderDay(tx, actor.now);
   const owns =
-    open &&
-    !toConfirm &&
-    may(actor.person, 'work an alert', record.deskId) &&
-    (await actsFor(tx, { personId: actor.person.id, ownerId: record.ownerId, on }));
-  const isSecond = record.deskHeadId === actor.person.id || actor.person.roles.includes('committee member');
+    may(person, 'work an alert', record.deskId) &&
+    (await actsFor(tx, person.id, today)).includes(record.ownerId);
+  const mayStep = (step: AlertStep['step']) => owns && hindrance(step, alert) === null;
   return {
-    take: owns && (record.state === 'raised' || record.state === 'put off'),
-    work: owns,
-    putOff: owns && record.severity !== 'urgent',
-    handOver:
-      record.state === 'waiting for analyst' && may(actor.person, 'hand over an alert', record.deskId),
+    take: mayStep('take'),
+    work: mayStep('assess'),
+    putOff: mayStep('put off'),
+    close: mayStep('close'),
+    handOver: alert.state === 'waiting for analyst' && may(person, 'hand over an alert', record.deskId),
     confirmClosing:
-      toConfirm &&
-      isSecond &&
-      may(actor.person, 'confirm a closing', record.deskId) &&
-      record.closedById !== actor.person.id,
+      alert.state === 'closing to be confirmed' &&
+      may(person, 'confirm a closing', record.deskId) &&
+      isSecondPerson(person, record) &&
+      record.closedById !== person.id,
     propose:
-      open && !watch.onWatchlist && !watch.proposalWaiting && may(actor.person, 'propose', record.deskId),
+      !watch.onWatchlist &&
+      !watch.waiting &&
+      may(person, 'propose', record.deskId) &&
+      !NOT_CARRIED.includes(alert.state),
   };
 }

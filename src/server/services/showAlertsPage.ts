@@ -12,6 +12,7 @@ import {
 import { listRuns } from '../db/repositories/runs.ts';
 import { listSectors } from '../db/repositories/sectors.ts';
 import type { PersonActor } from './actor.ts';
+import { lenderDay } from './lenderDay.ts';
 import { alertFilter, withStrips } from './listAlerts.ts';
 
 const DAY_MS = 86_400_000;
@@ -32,7 +33,7 @@ export function showAlertsPage(actor: PersonActor, asked: AlertQuery, isPlain: b
   const query: AlertQuery = isPlain && ownsBorrowers ? { ...asked, view: 'mine' } : asked;
   const scope = deskScope(actor.person, 'read borrower');
   return inTransaction(async (tx) => {
-    const { rows, total } = await listRecords(tx, scope, alertFilter(actor, query), query);
+    const { rows, total } = await listRecords(tx, scope, await alertFilter(tx, actor, query), query);
     const open = await countOpenAlerts(tx, scope);
     const fresh = await countRaisedSince(tx, scope, new Date(actor.now.getTime() - DAY_MS));
     const [run] = (await listRuns(tx, { page: 1, perPage: 1 })).rows;
@@ -42,7 +43,7 @@ export function showAlertsPage(actor: PersonActor, asked: AlertQuery, isPlain: b
     return {
       query,
       first: { rows: await withStrips(tx, rows, actor.now), page: query.page, perPage: query.perPage, total },
-      today: actor.now.toISOString().slice(0, 10),
+      today: await lenderDay(tx, actor.now),
       sectors: (await listSectors(tx)).map(({ code, label }) => ({ code, label })),
       ownsBorrowers,
       facts: `${open} open, ${fresh} new since yesterday.${computed}`,

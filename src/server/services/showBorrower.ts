@@ -13,6 +13,7 @@ import { loadCovenants } from '../db/repositories/covenantInputs.ts';
 import { listFacilities } from '../db/repositories/facilities.ts';
 import type { PersonActor } from './actor.ts';
 import { toCovenantViews } from './covenantViews.ts';
+import { lenderDay } from './lenderDay.ts';
 import { alertFilter, withStrips } from './listAlerts.ts';
 import { borrowerWatch } from './listWatchlist.ts';
 import type { Outcome } from './write.ts';
@@ -35,8 +36,9 @@ export async function borrowerView(
   const stored = await findCurrentAssessment(tx, id);
   const facilities = await listFacilities(tx, id);
   const query = alertQuery.parse({ borrowerId: id, perPage: 100, sort: 'severity' });
-  const alerts = await listAlerts(tx, scope, alertFilter(actor, query), query);
-  const watch = await borrowerWatch(tx, scope, id, actor.now);
+  const alerts = await listAlerts(tx, scope, await alertFilter(tx, actor, query), query);
+  const today = await lenderDay(tx, actor.now);
+  const watch = await borrowerWatch(tx, scope, id, today);
   return {
     id: borrower.id,
     name: borrower.name,
@@ -61,6 +63,7 @@ export async function borrowerView(
     computed: stored && computedFacts(stored),
     covenants: stored ? await covenantViews(tx, id, stored, facilities) : [],
     quality: stored?.assessment.quality ?? null,
+    today,
     alerts: await withStrips(tx, alerts.rows, actor.now),
     ...watch,
     mayImport: may(actor.person, 'import figures', borrower.deskId),

@@ -1,5 +1,7 @@
 import { createHash } from 'node:crypto';
+import { formatDay } from '../../core/calendar/printDay.ts';
 import { err, ok } from '../../core/result.ts';
+import type { Transaction } from 'sequelize';
 import { deskScope } from '../auth/policy.ts';
 import { inTransaction, isDuplicate } from '../db/inTransaction.ts';
 import { findBorrowerDesk } from '../db/repositories/borrowerDesks.ts';
@@ -7,10 +9,9 @@ import { insertFile } from '../db/repositories/files.ts';
 import { findSameFile, insertImport } from '../db/repositories/imports.ts';
 import type { PersonActor } from './actor.ts';
 import { keepFile } from './keepFile.ts';
+import { lenderDay } from './lenderDay.ts';
 import { readFile, toStaged } from './readStoredFile.ts';
 import { audit, write, type Outcome } from './write.ts';
-
-const WORKBOOK = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet';
 
 export interface UploadedFile {
   readonly borrowerId: number;
@@ -23,41 +24,39 @@ export interface UploadedFile {
  * be read leaves nothing but an audit entry; the same bytes for the same borrower lead to the import there is.
  */
 export async function stageImport(actor: PersonActor, file: UploadedFile): Promise<Outcome<{ id: number }>> {
+  const { borrowerId, fileName, bytes } = file;
   const scope = deskScope(actor.person, 'import figures');
-  const sha256 = createHash('sha256').update(file.bytes).digest('hex');
-  const looked = await inTransaction(async (tx) => ({
-    borrower: await findBorrowerDesk(tx, file.borrowerId, scope),
-    same: await findSameFile(tx, file.borrowerId, sha256),
+  const sha256 = createHash('sha256').update(bytes).digest('hex');
+  const { borrower, same } = await inTransaction(async (tx) => ({
+    borrower: await findBorrowerDesk(tx, borrowerId, scope),
+    same: await findSameFile(tx, borrowerId, sha256),
   }));
-  const { borrower } = looked;
   if (!borrower) return err({ kind: 'not-found', what: 'borrower' });
-  if (looked.same && actor.idempotencyKey === null) return alreadyThere(looked.same);
+  const command = { borrowerId, fileName, sha256 };
+  // Whoever repeats a request whose answer was lost gets that answer; anybody else is told where the file is.
+  if (same) return write(actor, 'stage-import', command, (tx) => alreadyThere(tx, borrowerId, sha256));
 
-  const { reading } = await readFile({ ...file, importId: null });
-  const subject = {
-    subjectKind: 'file',
-    subjectId: sha256,
-    borrowerId: borrower.id,
-    deskId: borrower.deskId,
-    before: null,
-  };
+  const reading = await readFile({ ...file, importId: null });
+  const subject = { borrowerId, deskId: borrower.deskId, before: null };
   if (reading.refusal) {
     const { code, message, where } = reading.refusal;
     await inTransaction((tx) =>
       audit(tx, actor, {
         ...subject,
         action: 'refuse-file',
+        subjectKind: 'file',
+        subjectId: sha256,
         summary: `Refused a file for ${borrower.name}: ${code}`,
-        after: { code, where, fileName: file.fileName },
+        after: { code, where, fileName },
       }),
     );
     return err({ kind: 'refused-file', code, detail: message, errors: [{ code, message, ...where }] });
   }
 
-  await keepFile(file.bytes, WORKBOOK);
-  const command = { borrowerId: borrower.id, fileName: file.fileName, sha256 };
+  const mediaType = mediaTypeOf(bytes);
+  await keepFile(bytes, mediaType);
   return write(actor, 'stage-import', command, async (tx) => {
-    await insertFile(tx, { sha256, sizeBytes: file.bytes.length, mediaType: WORKBOOK, now: actor.now });
+    await insertFile(tx, { sha256, sizeBytes: bytes.length, mediaType, now: actor.now });
     let id: number;
     try {
       id = await insertImport(tx, {
@@ -68,27 +67,37 @@ export async function stageImport(actor: PersonActor, file: UploadedFile): Promi
       });
     } catch (error) {
       if (!isDuplicate(error)) throw error;
-      const same = await findSameFile(tx, borrower.id, sha256);
-      return alreadyThere(same);
+      return alreadyThere(tx, borrowerId, sha256);
     }
     await audit(tx, actor, {
       ...subject,
+      action: 'stage-import',
       subjectKind: 'import',
       subjectId: String(id),
-      action: 'stage-import',
-      summary: `Received ${file.fileName} for ${borrower.name}`,
+      summary: `Received ${fileName} for ${borrower.name}`,
       after: command,
     });
     return ok({ id });
   });
 }
 
-function alreadyThere(same: Awaited<ReturnType<typeof findSameFile>>) {
+/** The content decides, as it does for the reader: what is no archive was read as text. */
+const mediaTypeOf = (bytes: Buffer): string =>
+  bytes.subarray(0, 2).toString('latin1') === 'PK'
+    ? 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'
+    : 'text/csv';
+
+async function alreadyThere(
+  tx: Transaction,
+  borrowerId: number,
+  sha256: string,
+): Promise<Outcome<{ id: number }>> {
+  const same = await findSameFile(tx, borrowerId, sha256);
   const which = same
-    ? `as ${same.fileName} on ${same.uploadedAt.toISOString().slice(0, 10)} by ${same.uploadedBy} (${same.state}, import ${same.id})`
-    : 'by somebody else this moment';
+    ? `received as ${same.fileName} on ${formatDay(await lenderDay(tx, same.uploadedAt))} by ${same.uploadedBy} (${same.state}, import ${same.id})`
+    : 'withdrawn by somebody this moment';
   return err({
-    kind: 'conflict' as const,
-    detail: `This very file is here already: it was received ${which}. Nothing was imported twice. Open that import, or withdraw it to read the file again.`,
+    kind: 'conflict',
+    detail: `This very file is here already: it was ${which}. Nothing was imported twice. Open that import, or withdraw it to read the file again.`,
   });
 }

@@ -7,13 +7,19 @@ import type { PersonActor } from './actor.ts';
 import { assessNow } from './assessNow.ts';
 import { audit, write, type Outcome } from './write.ts';
 
+export interface WithdrawnImport {
+  readonly id: number;
+  readonly borrowerId: number;
+  /** Its figures had been accepted, so that the borrower is assessed without them. */
+  readonly hadCounted: boolean;
+}
+
 /** Takes an import back: its figures no longer count, what was on file before it does again, and all of it stays on record. */
 export async function withdrawImport(
   actor: PersonActor,
   request: { id: number; version: number },
-): Promise<Outcome<{ id: number }>> {
+): Promise<Outcome<WithdrawnImport>> {
   const scope = deskScope(actor.person, 'import figures');
-  let assessed: number | null = null;
   const done = await write(actor, 'withdraw-import', request, async (tx) => {
     const record = await findImportForUpdate(tx, request.id, scope);
     if (!record) return err({ kind: 'not-found', what: 'import' });
@@ -28,7 +34,6 @@ export async function withdrawImport(
     if (record.state === 'accepted') {
       await endStatementsOfImport(tx, { importId: record.id, now: actor.now });
       await raiseInputVersion(tx, record.borrowerId);
-      assessed = record.borrowerId;
     }
     await audit(tx, actor, {
       action: 'withdraw-import',
@@ -40,8 +45,8 @@ export async function withdrawImport(
       before: { state: record.state },
       after: { state: 'withdrawn' },
     });
-    return ok({ id: record.id });
+    return ok({ id: record.id, borrowerId: record.borrowerId, hadCounted: record.state === 'accepted' });
   });
-  if (done.ok && assessed !== null) await assessNow(actor, assessed);
+  if (done.ok && done.value.hadCounted) await assessNow(actor, done.value.borrowerId);
   return done;
 }

@@ -1,15 +1,14 @@
 import {
   PUT_OFF_MOST_DAYS,
-  PUT_OFF_MOST_TIMES,
   type AlertStep,
   type ClosingConfirmation,
   type HandingOver,
 } from '../../contracts/alerts.ts';
 import type { ServiceProblem } from '../../contracts/problem.ts';
 import { CLOSING_REASONS, type AlertState } from '../../core/alerts/alert.ts';
-import { addDays, plainDate } from '../../core/calendar/plainDate.ts';
+import { addDays, type PlainDate } from '../../core/calendar/plainDate.ts';
 import { err, ok, unreachable, type Result } from '../../core/result.ts';
-import { may } from '../auth/policy.ts';
+import { deskScope, type Action, type Person } from '../auth/policy.ts';
 import {
   findAlertForUpdate,
   moveAlert,
@@ -17,8 +16,11 @@ import {
   type AlertRecord,
 } from '../db/repositories/alertStates.ts';
 import { actsFor } from '../db/repositories/borrowerDesks.ts';
+import { findWaitingProposal } from '../db/repositories/proposals.ts';
 import type { Transaction } from 'sequelize';
 import type { PersonActor } from './actor.ts';
+import { hindrance } from './alertHindrance.ts';
+import { lenderDay } from './lenderDay.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 type Step = Pick<AlertMove, 'state' | 'what' | 'text' | 'takenBy' | 'putOffUntil' | 'closing'>;
@@ -36,18 +38,18 @@ export const workAlert = (
   id: number,
   version: number,
   step: AlertStep,
-): Promise<Outcome<AlertMoved>> =>
-  move(
-    actor,
-    { id, version, verb: `alert-${step.step.replace(' ', '-')}`, command: step },
-    async (tx, alert) => {
-      if (!may(actor.person, 'work an alert', alert.deskId)) return err({ kind: 'not-found', what: 'alert' });
-      const on = actor.now.toISOString().slice(0, 10);
-      if (!(await actsFor(tx, { personId: actor.person.id, ownerId: alert.ownerId, on })))
-        return notAllowed('This alert belongs to the borrower’s relationship manager or deputy.');
-      return plan(actor, alert, step);
-    },
-  );
+): Promise<Outcome<AlertMoved>> => {
+  const verb = `alert-${step.step.replace(' ', '-')}`;
+  const request = { id, version, verb, right: 'work an alert', command: step } as const;
+  return move(actor, request, async (tx, alert) => {
+    const today = await lenderDay(tx, actor.now);
+    if (!(await actsFor(tx, actor.person.id, today)).includes(alert.ownerId))
+      return notAllowed('This alert belongs to the borrower’s relationship manager or deputy.');
+    const waiting = await findWaitingProposal(tx, alert.borrowerId);
+    const why = hindrance(step.step, { ...alert, proposalWaits: waiting?.alertId === id });
+    return why === null ? plan(alert, step, actor.person, today) : conflict(why);
+  });
+};
 
 /** The analyst, asked by the owner, hands the alert back with what was found. */
 export const handOverAlert = (
@@ -55,64 +57,70 @@ export const handOverAlert = (
   id: number,
   version: number,
   command: HandingOver,
-): Promise<Outcome<AlertMoved>> =>
-  move(actor, { id, version, verb: 'alert-hand-over', command }, async (_tx, alert) => {
-    if (!may(actor.person, 'hand over an alert', alert.deskId))
-      return err({ kind: 'not-found', what: 'alert' });
-    if (alert.state !== 'waiting for analyst') return conflict('This alert is not waiting for the analyst.');
-    return Promise.resolve(ok({ state: 'taken', what: 'Handed over to the owner', text: command.text }));
-  });
+): Promise<Outcome<AlertMoved>> => {
+  const request = { id, version, verb: 'alert-hand-over', right: 'hand over an alert', command } as const;
+  return move(actor, request, (_tx, alert) =>
+    alert.state === 'waiting for analyst'
+      ? ok({ state: 'taken', what: 'Handed over to the owner', text: command.text })
+      : conflict('This alert is not waiting for the analyst.'),
+  );
+};
 
-/** The second person's word on closing an urgent alert, or for a reason that asks for one. */
+/**
+ * The second person's word on closing an urgent alert, or for a reason that asks for one. That it is not the word of
+ * whoever asked for the closing is tested by the UPDATE itself.
+ */
 export const confirmClosing = (
   actor: PersonActor,
   id: number,
   version: number,
   command: ClosingConfirmation,
-): Promise<Outcome<AlertMoved>> =>
-  move(actor, { id, version, verb: 'alert-confirm-closing', command }, async (_tx, alert) => {
-    const isHead = alert.deskHeadId === actor.person.id;
-    const decides = actor.person.roles.includes('committee member');
-    if (!may(actor.person, 'confirm a closing', alert.deskId))
-      return err({ kind: 'not-found', what: 'alert' });
-    if (!isHead && !decides)
-      return notAllowed('The head of the desk or a committee member confirms this closing.');
-    if (alert.closedBy === actor.person.id)
-      return notAllowed('You asked for this closing; another person confirms it.');
+): Promise<Outcome<AlertMoved>> => {
+  const verb = 'alert-confirm-closing';
+  const request = { id, version, verb, right: 'confirm a closing', command } as const;
+  return move(actor, request, (_tx, alert) => {
+    if (!isSecondPerson(actor.person, alert))
+      return notAllowed(
+        'The head of the desk, unless the alert is the head’s own, or a committee member confirms this closing.',
+      );
     if (alert.state !== 'closing to be confirmed')
       return conflict('No closing waits for a second person here.');
-    return Promise.resolve(
-      ok(
-        command.confirm
-          ? { state: 'closed', what: 'Closing confirmed', text: command.text }
-          : { state: 'taken', what: 'Closing not confirmed', text: command.text },
-      ),
+    return ok(
+      command.confirm
+        ? { state: 'closed', what: 'Closing confirmed', text: command.text }
+        : { state: 'taken', what: 'Closing not confirmed', text: command.text },
     );
   });
+};
 
-function plan(actor: PersonActor, alert: AlertRecord, step: AlertStep): Planned {
-  if (alert.state === 'closing to be confirmed')
-    return conflict('The closing of this alert waits for a second person.');
+/** Whether the person's word on a closing counts, whoever asked for it. */
+export const isSecondPerson = (
+  person: Person,
+  alert: { readonly deskHeadId: number | null; readonly ownerId: number },
+): boolean =>
+  person.roles.includes('committee member') ||
+  (alert.deskHeadId === person.id && alert.ownerId !== person.id);
+
+/** What the step makes of the alert. Whoever works it has taken it, putting it off aside. */
+function plan(alert: AlertRecord, step: AlertStep, person: Person, today: PlainDate): Planned {
+  const taking = alert.takenBy === null ? { takenBy: person.id } : {};
   switch (step.step) {
     case 'take':
-      if (alert.state !== 'raised' && alert.state !== 'put off')
-        return conflict(`This alert is ${alert.state} already.`);
-      return ok({ state: 'taken', what: 'Taken', text: '', takenBy: actor.person.id });
-    case 'wait':
-      return ok({
-        state: `waiting for ${step.waitFor}`,
-        what: `Waiting for ${step.waitFor}`,
-        text: step.text,
-      });
+      return ok({ state: 'taken', what: 'Taken', text: '', takenBy: person.id });
+    case 'wait': {
+      const state = `waiting for ${step.waitFor}` as const;
+      return ok({ ...taking, state, what: `Waiting for ${step.waitFor}`, text: step.text });
+    }
     case 'assess':
-      return ok({ state: 'assessed', what: 'Assessed', text: step.text });
+      return ok({ ...taking, state: 'assessed', what: 'Assessed', text: step.text });
     case 'put off':
-      return planPuttingOff(actor, alert, step);
+      return planPuttingOff(step, today);
     case 'close': {
       const reason = CLOSING_REASONS.find((listed) => listed.code === step.reason);
       if (!reason) return conflict('That reason is not in the list.');
       const second = alert.severity === 'urgent' || reason.secondPerson;
       return ok({
+        ...taking,
         state: second ? 'closing to be confirmed' : 'closed',
         what: second ? `Asked to close: ${reason.label}` : `Closed: ${reason.label}`,
         text: step.text,
@@ -124,16 +132,8 @@ function plan(actor: PersonActor, alert: AlertRecord, step: AlertStep): Planned 
   }
 }
 
-function planPuttingOff(
-  actor: PersonActor,
-  alert: AlertRecord,
-  step: { until: string; text: string },
-): Planned {
-  const today = plainDate(actor.now.toISOString().slice(0, 10));
-  if (alert.severity === 'urgent') return conflict('An urgent alert cannot be put off.');
-  if (alert.putOffCount >= PUT_OFF_MOST_TIMES)
-    return conflict(`This alert was put off ${PUT_OFF_MOST_TIMES} times already.`);
-  if (step.until <= today || step.until > addDays(today, PUT_OFF_MOST_DAYS)) {
+function planPuttingOff({ until, text }: { until: string; text: string }, today: PlainDate): Planned {
+  if (until <= today || until > addDays(today, PUT_OFF_MOST_DAYS)) {
     const message = `Choose a day from tomorrow to ${PUT_OFF_MOST_DAYS} days ahead.`;
     return err({
       kind: 'invalid',
@@ -141,34 +141,36 @@ function planPuttingOff(
       errors: [{ field: 'until', code: 'invalid', message }],
     });
   }
-  return ok({
-    state: 'put off',
-    what: `Put off until ${step.until}`,
-    text: step.text,
-    putOffUntil: step.until,
-  });
+  return ok({ state: 'put off', what: `Put off until ${until}`, text, putOffUntil: until });
 }
 
+interface MoveRequest {
+  readonly id: number;
+  readonly version: number;
+  readonly verb: string;
+  readonly right: Action;
+  readonly command: unknown;
+}
+
+/** Found, as it was seen, allowed and fitting, in this order; then one event, one change of the desk, one audit entry. */
 async function move(
   actor: PersonActor,
-  request: { id: number; version: number; verb: string; command: unknown },
-  decide: (tx: Transaction, alert: AlertRecord) => Promise<Planned>,
+  { id, version, verb, right, command }: MoveRequest,
+  decide: (tx: Transaction, alert: AlertRecord) => Planned | Promise<Planned>,
 ): Promise<Outcome<AlertMoved>> {
-  const { id, version, verb, command } = request;
   return write(actor, verb, { id, version, command }, async (tx) => {
-    const alert = await findAlertForUpdate(tx, id);
+    const alert = await findAlertForUpdate(tx, id, deskScope(actor.person, right));
     if (!alert) return err({ kind: 'not-found', what: 'alert' });
+    if (alert.version !== version)
+      return err({
+        kind: 'stale',
+        detail: `Somebody changed this alert since you opened it: it is ${alert.state}. Nothing was changed. Look again and repeat if still right.`,
+        currentVersion: alert.version,
+      });
     const step = await decide(tx, alert);
     if (!step.ok) return step;
-    const stale = err({
-      kind: 'stale' as const,
-      detail: `Somebody changed this alert since you opened it: it is ${alert.state}. Nothing was changed. Look again and repeat if still right.`,
-      currentVersion: alert.version,
-    });
-    if (alert.version !== version) return stale;
-    if (alert.state === 'closed' || alert.state === 'superseded') return conflict('This alert is closed.');
     if (!(await moveAlert(tx, { alert, personId: actor.person.id, now: actor.now, ...step.value })))
-      return stale;
+      return notAllowed('You asked for this closing; another person confirms it.');
     await audit(tx, actor, {
       action: verb,
       subjectKind: 'alert',

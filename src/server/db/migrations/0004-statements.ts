@@ -46,7 +46,7 @@ export const migration: Migration = {
       import_id bigint unsigned not null,
       question_key varchar(190) not null,
       answer text not null,
-      note varchar(500) null,
+      holds_for varchar(8) not null,
       answered_by bigint unsigned not null,
       answered_at datetime(3) not null,
       undone_at datetime(3) null,

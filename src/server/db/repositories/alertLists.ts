@@ -2,6 +2,7 @@
 import type { Transaction } from 'sequelize';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { inScope, type DeskScope } from '../deskScope.ts';
+import { orderBy, pageOf, type ListOrder, type ListPage } from '../listOrder.ts';
 import { select, selectOne, type SqlValues } from '../sql.ts';
 
 export interface AlertListRecord {
@@ -35,6 +36,7 @@ export interface AlertListRecord {
   readonly changedAt: Date;
   readonly conditionGoneAt: Date | null;
   readonly putOffUntil: PlainDate | null;
+  readonly putOffCount: number;
   readonly closedById: number | null;
   readonly closedBy: string | null;
   readonly closingReason: number | null;
@@ -42,7 +44,7 @@ export interface AlertListRecord {
 }
 
 export interface AlertFilter {
-  readonly ownerId: number | null;
+  readonly ownerIds: readonly number[] | null;
   readonly notTaken: boolean;
   readonly kind: string | null;
   readonly severity: string | null;
@@ -61,7 +63,7 @@ const COLUMNS = `a.id, a.version, a.borrower_id as borrowerId, b.name as borrowe
   coalesce(a.covenant_id, x.smallest_covenant_id) as stripCovenantId, x.id as assessmentId,
   x.quality_headline as qualityHeadline, x.quality_band as qualityBand, a.owner_id as ownerId, owner.name as ownerName,
   taker.name as takenBy, a.due_on as dueOn, a.counter, a.raised_at as raisedAt, a.changed_at as changedAt,
-  a.condition_gone_at as conditionGoneAt, a.put_off_until as putOffUntil, a.closed_by as closedById, closer.name as closedBy,
+  a.condition_gone_at as conditionGoneAt, a.put_off_until as putOffUntil, a.put_off_count as putOffCount, a.closed_by as closedById, closer.name as closedBy,
   a.closing_reason as closingReason, a.closing_text as closingText`;
 
 const TABLES = `alerts a
@@ -79,18 +81,18 @@ const SORTS = {
   due: ['a.due_on', `field(a.severity, 'urgent', 'soon', 'note')`],
   severity: [`field(a.severity, 'urgent', 'soon', 'note')`, 'a.due_on'],
   borrower: ['b.name'],
-  'may-fall': ['x.smallest_may_fall is null', 'x.smallest_may_fall'],
-  quality: ['x.quality_headline is null', 'x.quality_headline'],
+  'may-fall': ['x.smallest_may_fall'],
+  quality: ['x.quality_headline'],
   raised: ['a.raised_at'],
 } as const satisfies Record<string, readonly string[]>;
-export type AlertSort = keyof typeof SORTS;
+type AlertSort = keyof typeof SORTS;
 
 function conditions(scope: DeskScope, filter: AlertFilter): { sql: string; values: SqlValues } {
   const desks = inScope(scope);
   const parts = [desks.sql];
   if (filter.state === 'open') parts.push(`a.state not in ('closed', 'superseded')`);
   else parts.push('a.state = :state');
-  if (filter.ownerId !== null) parts.push('a.owner_id = :ownerId');
+  if (filter.ownerIds !== null) parts.push('a.owner_id in (:ownerIds)');
   if (filter.notTaken) parts.push(`a.state = 'raised'`);
   if (filter.kind !== null) parts.push('a.kind = :kind');
   if (filter.severity !== null) parts.push('a.severity = :severity');
@@ -105,16 +107,12 @@ export async function listAlerts(
   tx: Transaction,
   scope: DeskScope,
   filter: AlertFilter,
-  order: { sort: AlertSort; direction: 'up' | 'down'; page: number; perPage: number },
+  order: ListOrder<AlertSort> & ListPage,
 ): Promise<{ rows: AlertListRecord[]; total: number }> {
   const where = conditions(scope, filter);
-  const sort = SORTS[order.sort]
-    .map((key) => `${key} ${order.direction === 'up' ? 'asc' : 'desc'}`)
-    .join(', ');
-  const limit = `limit ${Math.trunc(order.perPage)} offset ${Math.trunc((order.page - 1) * order.perPage)}`;
   const rows = await select<AlertListRecord>(
     tx,
-    `select ${COLUMNS} from ${TABLES} where ${where.sql} order by ${sort}, a.id ${limit}`,
+    `select ${COLUMNS} from ${TABLES} where ${where.sql} ${orderBy(SORTS, order, 'a.id')} ${pageOf(order)}`,
     where.values,
   );
   const count = await selectOne<{ total: number }>(

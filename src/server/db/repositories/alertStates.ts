@@ -1,6 +1,7 @@
 /** One alert's life: read under lock, moved with its version, every move an event and a change of the desk. */
 import type { Transaction } from 'sequelize';
 import type { AlertState, Severity } from '../../../core/alerts/alert.ts';
+import { inScope, type DeskScope } from '../deskScope.ts';
 import { execute, selectOne } from '../sql.ts';
 
 export interface AlertRecord {
@@ -16,22 +17,31 @@ export interface AlertRecord {
   readonly ownerId: number;
   readonly takenBy: number | null;
   readonly putOffCount: number;
-  readonly closingReason: number | null;
-  readonly closingText: string | null;
-  /** Who asked for the closing that waits for a second person. */
-  readonly closedBy: number | null;
 }
 
-export async function findAlertForUpdate(tx: Transaction, id: number): Promise<AlertRecord | null> {
-  return selectOne<AlertRecord>(
+type AlertPlace = Pick<AlertRecord, 'borrowerId' | 'borrowerName' | 'deskId' | 'deskHeadId'>;
+
+/** As it is now, held until the transaction ends; its borrower and desk are not held, so that others go on. */
+export async function findAlertForUpdate(
+  tx: Transaction,
+  id: number,
+  scope: DeskScope,
+): Promise<AlertRecord | null> {
+  const alert = await selectOne<Omit<AlertRecord, keyof AlertPlace>>(
     tx,
-    `select a.id, a.version, a.borrower_id as borrowerId, b.name as borrowerName, b.desk_id as deskId, d.head_id as deskHeadId,
-       a.kind, a.severity, a.state, a.owner_id as ownerId, a.taken_by as takenBy, a.put_off_count as putOffCount,
-       a.closing_reason as closingReason, a.closing_text as closingText, a.closed_by as closedBy
-     from alerts a join borrowers b on b.id = a.borrower_id join desks d on d.id = b.desk_id
-     where a.id = :id for update`,
+    `select id, version, kind, severity, state, owner_id as ownerId, taken_by as takenBy, put_off_count as putOffCount
+     from alerts where id = :id for update`,
     { id },
   );
+  const desks = inScope(scope);
+  const place = await selectOne<AlertPlace>(
+    tx,
+    `select b.id as borrowerId, b.name as borrowerName, b.desk_id as deskId, d.head_id as deskHeadId
+     from alerts a join borrowers b on b.id = a.borrower_id join desks d on d.id = b.desk_id
+     where a.id = :id and ${desks.sql}`,
+    { id, ...desks.values },
+  );
+  return alert && place && { ...alert, ...place };
 }
 
 export interface AlertMove {
@@ -41,23 +51,29 @@ export interface AlertMove {
   readonly what: string;
   readonly text: string;
   readonly now: Date;
+  /** Left out: whoever took it has it still. */
   readonly takenBy?: number;
   readonly putOffUntil?: string;
+  /** Asked for by the person; left out where a closing asked for before is confirmed, or is not. */
   readonly closing?: { readonly reason: number; readonly text: string };
 }
 
-/** False where the version has moved on. Ending an alert frees its slot, so that later facts may raise another. */
+/**
+ * False where the version has moved on, or where whoever asked for the closing would confirm it. Closing an alert
+ * frees its slot, so that later facts may raise another.
+ */
 export async function moveAlert(tx: Transaction, move: AlertMove): Promise<boolean> {
   const changeNumber = await nextChange(tx, move.alert.deskId);
-  const ends = move.state === 'closed' || move.state === 'superseded';
+  const ends = move.state === 'closed';
   const { affectedRows } = await execute(
     tx,
     `update alerts set state = :state, change_number = :changeNumber, version = version + 1,
        taken_by = coalesce(:takenBy, taken_by), taken_at = if(:takenBy is null, taken_at, :now),
        put_off_until = :putOffUntil, put_off_count = put_off_count + if(:putOffUntil is null, 0, 1),
-       closing_reason = coalesce(:reason, closing_reason), closing_text = coalesce(:closingText, closing_text),
-       closed_by = if(:reason is null, closed_by, :personId), closed_at = if(:ends, :now, closed_at),
-       open_slot = if(:ends, null, open_slot)
+       closing_reason = if(:ends, coalesce(:reason, closing_reason), :reason),
+       closing_text = if(:ends, coalesce(:closingText, closing_text), :closingText),
+       closed_by = if(:reason is not null, :personId, if(:ends, closed_by, null)),
+       closed_at = if(:ends, :now, null), open_slot = if(:ends, null, open_slot)
      where id = :id and version = :version
        and not (state = 'closing to be confirmed' and closed_by = :personId)`,
     {

@@ -80,6 +80,19 @@ export async function findCurrentBasis(
   );
 }
 
+/** Whether the result that screens show rests on the inputs as they are now. */
+export async function isAssessedAsItStands(tx: Transaction, borrowerId: number): Promise<boolean> {
+  const row = await selectOne<{ id: number }>(
+    tx,
+    `select a.id from current_assessments c
+     join assessments a on a.id = c.assessment_id
+     join borrower_input_versions v on v.borrower_id = c.borrower_id and v.input_version = a.input_version
+     where c.borrower_id = :borrowerId`,
+    { borrowerId },
+  );
+  return row !== null;
+}
+
 /**
  * Makes the result the one that screens show, and writes what we computed beside what was certified and accepted.
  * Those two and the checking stay as people left them; the version moves only where our figure moved, so that a

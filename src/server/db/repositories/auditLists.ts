@@ -1,4 +1,5 @@
 import type { Transaction } from 'sequelize';
+import { pageOf, type ListPage } from '../listOrder.ts';
 import { select, selectOne, type SqlValues } from '../sql.ts';
 import { auditHash } from './audit.ts';
 
@@ -43,13 +44,12 @@ const CONDITIONS = `(:action is null or e.action = :action) and (:personId is nu
 export async function listAudit(
   tx: Transaction,
   filter: AuditFilter,
-  page: { page: number; perPage: number },
+  page: ListPage,
 ): Promise<{ rows: AuditRecord[]; total: number }> {
   const values: SqlValues = { ...filter };
-  const limit = `limit ${Math.trunc(page.perPage)} offset ${Math.trunc((page.page - 1) * page.perPage)}`;
   const rows = await select<AuditRecord>(
     tx,
-    `select ${COLUMNS} from audit_entries e left join borrowers b on b.id = e.borrower_id where ${CONDITIONS} order by e.seq desc ${limit}`,
+    `select ${COLUMNS} from audit_entries e left join borrowers b on b.id = e.borrower_id where ${CONDITIONS} order by e.seq desc ${pageOf(page)}`,
     values,
   );
   const count = await selectOne<{ total: number }>(

@@ -1,7 +1,8 @@
 /** Whose borrower it is: the little that every permission asks for. */
 import type { Transaction } from 'sequelize';
+import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { inScope, type DeskScope } from '../deskScope.ts';
-import { selectOne } from '../sql.ts';
+import { select, selectOne } from '../sql.ts';
 
 export interface BorrowerDesk {
   readonly id: number;
@@ -14,7 +15,7 @@ export interface BorrowerDesk {
 export async function findBorrowerDesk(
   tx: Transaction,
   id: number,
-  scope: DeskScope = 'all',
+  scope: DeskScope,
 ): Promise<BorrowerDesk | null> {
   const desks = inScope(scope);
   return selectOne<BorrowerDesk>(
@@ -36,17 +37,13 @@ export async function isDeskMember(tx: Transaction, deskId: number, personId: nu
   return row !== null;
 }
 
-/** True for the owner and for whoever deputises the owner on that day. */
-export async function actsFor(
-  tx: Transaction,
-  person: { personId: number; ownerId: number; on: string },
-): Promise<boolean> {
-  if (person.personId === person.ownerId) return true;
-  const row = await selectOne<{ id: number }>(
+/** Whose alerts the person works on that day: the own ones, and those of everybody the person deputises. */
+export async function actsFor(tx: Transaction, personId: number, on: PlainDate): Promise<readonly number[]> {
+  const rows = await select<{ ownerId: number }>(
     tx,
-    `select id from deputies
-     where person_id = :ownerId and deputy_id = :personId and from_date <= :on and until_date >= :on limit 1`,
-    person,
+    `select person_id as ownerId from deputies
+     where deputy_id = :personId and from_date <= :on and until_date >= :on order by person_id`,
+    { personId, on },
   );
-  return row !== null;
+  return [personId, ...rows.map(({ ownerId }) => ownerId)];
 }

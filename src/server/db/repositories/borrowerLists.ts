@@ -2,6 +2,7 @@
 import type { Transaction } from 'sequelize';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { inScope, type DeskScope } from '../deskScope.ts';
+import { orderBy, pageOf, type ListOrder, type ListPage } from '../listOrder.ts';
 import { select, selectOne } from '../sql.ts';
 
 export interface BorrowerListRecord {
@@ -44,12 +45,12 @@ const TABLES = `borrowers b
 /** Sort keys that a request may name, and nothing else. */
 const SORTS = {
   name: ['b.name'],
-  'may-fall': ['x.smallest_may_fall is null', 'x.smallest_may_fall'],
-  quality: ['x.quality_headline is null', 'x.quality_headline'],
+  'may-fall': ['x.smallest_may_fall'],
+  quality: ['x.quality_headline'],
   drawn: ['drawnTotal'],
   alerts: ['urgentAlerts', 'openAlerts'],
 } as const satisfies Record<string, readonly string[]>;
-export type BorrowerSort = keyof typeof SORTS;
+type BorrowerSort = keyof typeof SORTS;
 
 export interface BorrowerFilter {
   readonly search: string | null;
@@ -61,20 +62,16 @@ export async function listBorrowers(
   tx: Transaction,
   scope: DeskScope,
   filter: BorrowerFilter,
-  order: { sort: BorrowerSort; direction: 'up' | 'down'; page: number; perPage: number },
+  order: ListOrder<BorrowerSort> & ListPage,
 ): Promise<{ rows: BorrowerListRecord[]; total: number }> {
   const desks = inScope(scope);
   const where = `${desks.sql} and (:pattern is null or b.name like :pattern escape '!')
     and (:sector is null or b.sector_code = :sector) and (:deskId is null or b.desk_id = :deskId)`;
   const pattern = filter.search === null ? null : `%${filter.search.replaceAll(/[!%_]/g, '!$&')}%`;
   const values = { ...desks.values, sector: filter.sector, deskId: filter.deskId, pattern };
-  const sort = SORTS[order.sort]
-    .map((key) => `${key} ${order.direction === 'up' ? 'asc' : 'desc'}`)
-    .join(', ');
-  const limit = `limit ${Math.trunc(order.perPage)} offset ${Math.trunc((order.page - 1) * order.perPage)}`;
   const rows = await select<BorrowerListRecord>(
     tx,
-    `select ${COLUMNS} from ${TABLES} where ${where} order by ${sort}, b.id ${limit}`,
+    `select ${COLUMNS} from ${TABLES} where ${where} ${orderBy(SORTS, order, 'b.id')} ${pageOf(order)}`,
     values,
   );
   const count = await selectOne<{ total: number }>(

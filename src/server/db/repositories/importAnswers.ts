@@ -1,5 +1,6 @@
 /** Answers to a reading's questions: those given on an import, and those remembered for a borrower's layout. */
 import type { Transaction } from 'sequelize';
+import type { Question } from '../../../core/statements/workbookReading.ts';
 import { execute, select } from '../sql.ts';
 
 export interface AnswerRecord {
@@ -9,10 +10,15 @@ export interface AnswerRecord {
   readonly at: Date;
 }
 
-export async function listAnswers(tx: Transaction, importId: number): Promise<AnswerRecord[]> {
-  return select<AnswerRecord>(
+export interface GivenAnswerRecord extends AnswerRecord {
+  /** As the question said when it was asked: one that is answered may be asked no more. */
+  readonly holdsFor: Question['holdsFor'];
+}
+
+export async function listAnswers(tx: Transaction, importId: number): Promise<GivenAnswerRecord[]> {
+  return select<GivenAnswerRecord>(
     tx,
-    `select a.question_key as questionKey, a.answer, p.name as \`by\`, a.answered_at as at
+    `select a.question_key as questionKey, a.answer, a.holds_for as holdsFor, p.name as \`by\`, a.answered_at as at
      from import_answers a join people p on p.id = a.answered_by
      where a.import_id = :importId and a.undone_at is null order by a.id`,
     { importId },
@@ -21,12 +27,19 @@ export async function listAnswers(tx: Transaction, importId: number): Promise<An
 
 export async function insertAnswer(
   tx: Transaction,
-  given: { importId: number; questionKey: string; answer: string; personId: number; now: Date },
+  given: {
+    importId: number;
+    questionKey: string;
+    answer: string;
+    holdsFor: Question['holdsFor'];
+    personId: number;
+    now: Date;
+  },
 ): Promise<void> {
   await execute(
     tx,
-    `insert into import_answers (import_id, question_key, answer, answered_by, answered_at)
-     values (:importId, :questionKey, :answer, :personId, :now)`,
+    `insert into import_answers (import_id, question_key, answer, holds_for, answered_by, answered_at)
+     values (:importId, :questionKey, :answer, :holdsFor, :personId, :now)`,
     given,
   );
 }
@@ -44,19 +57,12 @@ export async function undoAnswer(
   );
 }
 
-export interface RememberedAnswer {
-  readonly questionKey: string;
-  readonly answer: string;
-  readonly by: string;
-  readonly at: Date;
-}
-
 export async function listRemembered(
   tx: Transaction,
   borrowerId: number,
   layoutKey: string,
-): Promise<RememberedAnswer[]> {
-  return select<RememberedAnswer>(
+): Promise<AnswerRecord[]> {
+  return select<AnswerRecord>(
     tx,
     `select m.question_key as questionKey, m.answer, p.name as \`by\`, m.known_from as at
      from placements m join people p on p.id = m.decided_by

@@ -1,6 +1,8 @@
 import type { Transaction } from 'sequelize';
 import { inScope, type DeskScope } from '../deskScope.ts';
+import { pageOf, type ListPage } from '../listOrder.ts';
 import { execute, select, selectOne } from '../sql.ts';
+import { holdBorrower } from './borrowerInputs.ts';
 
 export interface ImportRecord {
   readonly id: number;
@@ -47,16 +49,23 @@ export async function findImport(
   );
 }
 
-/** The same, with the row held until the transaction ends. */
+/**
+ * The same, with the row and the borrower's figures held until the transaction ends. First in its transaction: what
+ * is read after it is what the last holder left.
+ */
 export async function findImportForUpdate(
   tx: Transaction,
   id: number,
   scope: DeskScope,
 ): Promise<ImportRecord | null> {
-  const held = await selectOne<{ id: number }>(tx, 'select id from imports where id = :id for update', {
-    id,
-  });
-  return held && findImport(tx, id, scope);
+  const held = await selectOne<{ borrowerId: number }>(
+    tx,
+    'select borrower_id as borrowerId from imports where id = :id for update',
+    { id },
+  );
+  if (!held) return null;
+  await holdBorrower(tx, held.borrowerId);
+  return findImport(tx, id, scope);
 }
 
 /** The draft or accepted import of these very bytes for this borrower, if there is one. */
@@ -77,15 +86,14 @@ export async function listImports(
   tx: Transaction,
   scope: DeskScope,
   filter: { state: string | null; borrowerId: number | null },
-  page: { page: number; perPage: number },
+  page: ListPage,
 ): Promise<{ rows: Omit<ImportRecord, 'reading'>[]; total: number }> {
   const desks = inScope(scope);
   const where = `${desks.sql} and (:state is null or i.state = :state) and (:borrowerId is null or i.borrower_id = :borrowerId)`;
   const values = { ...desks.values, ...filter };
-  const limit = `limit ${Math.trunc(page.perPage)} offset ${Math.trunc((page.page - 1) * page.perPage)}`;
   const rows = await select<Omit<ImportRecord, 'reading'>>(
     tx,
-    `select ${COLUMNS} from ${TABLES} where ${where} order by i.id desc ${limit}`,
+    `select ${COLUMNS} from ${TABLES} where ${where} order by i.id desc ${pageOf(page)}`,
     values,
   );
   const count = await selectOne<{ total: number }>(

@@ -10,7 +10,6 @@ export interface ProposalRecord {
   readonly borrowerName: string;
   readonly deskId: number;
   readonly deskName: string;
-  readonly subjectId: number | null;
   readonly content: string;
   readonly state: string;
   readonly proposedById: number;
@@ -23,7 +22,7 @@ export interface ProposalRecord {
 }
 
 const COLUMNS = `p.id, p.version, p.kind, p.borrower_id as borrowerId, b.name as borrowerName, b.desk_id as deskId,
-  d.name as deskName, p.subject_id as subjectId, p.content, p.state, p.proposed_by as proposedById,
+  d.name as deskName, p.content, p.state, p.proposed_by as proposedById,
   proposer.name as proposedBy, coalesce(planner.name, '') as planOwner, p.proposed_at as proposedAt, decider.name as decidedBy, p.decided_at as decidedAt,
   p.decision_text as decisionText`;
 
@@ -46,6 +45,18 @@ export async function findProposal(
   });
 }
 
+/** The same, with the row held until the transaction ends. First in its transaction, so that it is read as it is now. */
+export async function findProposalForUpdate(
+  tx: Transaction,
+  id: number,
+  scope: DeskScope,
+): Promise<ProposalRecord | null> {
+  const held = await selectOne<{ id: number }>(tx, 'select id from proposals where id = :id for update', {
+    id,
+  });
+  return held && findProposal(tx, id, scope);
+}
+
 /** Open proposals first, then the latest decided; at most `limit`. */
 export async function listProposals(
   tx: Transaction,
@@ -62,33 +73,46 @@ export async function listProposals(
   );
 }
 
-export async function hasOpenProposal(tx: Transaction, openSlot: string): Promise<boolean> {
-  return (
-    (await selectOne<{ id: number }>(tx, 'select id from proposals where open_slot = :openSlot', {
-      openSlot,
-    })) !== null
+/** The watchlist proposal of a borrower that waits for a decision, and the alert that it carries. */
+export const findWaitingProposal = (
+  tx: Transaction,
+  borrowerId: number,
+): Promise<{ readonly id: number; readonly alertId: number | null } | null> =>
+  selectOne(
+    tx,
+    `select id, if(subject_kind = 'alert', subject_id, null) as alertId from proposals where open_slot = :openSlot`,
+    { openSlot: watchlistSlot(borrowerId) },
   );
-}
+
+const watchlistSlot = (borrowerId: number): string => `watchlist:${borrowerId}`;
 
 export interface NewProposal {
-  readonly kind: string;
   readonly borrowerId: number;
   readonly deskId: number;
-  readonly subjectKind: string;
-  readonly subjectId: number | null;
+  /** The alert that it carries; null where it is about the borrower only. */
+  readonly alertId: number | null;
   readonly content: unknown;
-  /** One open proposal for each of these; a second one is refused by the unique key. */
-  readonly openSlot: string;
   readonly proposedBy: number;
   readonly now: Date;
 }
 
-export async function insertProposal(tx: Transaction, proposal: NewProposal): Promise<number> {
+/** A borrower has one open watchlist proposal; the unique key refuses a second. */
+export async function insertWatchlistProposal(tx: Transaction, proposal: NewProposal): Promise<number> {
+  const { borrowerId, alertId, content } = proposal;
   const { insertId } = await execute(
     tx,
     `insert into proposals (kind, borrower_id, desk_id, subject_kind, subject_id, content, state, open_slot, proposed_by, proposed_at)
-     values (:kind, :borrowerId, :deskId, :subjectKind, :subjectId, :content, 'proposed', :openSlot, :proposedBy, :now)`,
-    { ...proposal, content: JSON.stringify(proposal.content) },
+     values ('watchlist', :borrowerId, :deskId, :subjectKind, :subjectId, :content, 'proposed', :openSlot, :proposedBy, :now)`,
+    {
+      borrowerId,
+      deskId: proposal.deskId,
+      subjectKind: alertId === null ? 'borrower' : 'alert',
+      subjectId: alertId ?? borrowerId,
+      content: JSON.stringify(content),
+      openSlot: watchlistSlot(borrowerId),
+      proposedBy: proposal.proposedBy,
+      now: proposal.now,
+    },
   );
   return insertId;
 }

@@ -160,6 +160,7 @@ const VIEW: BorrowerView = {
   },
   covenants: [],
   quality: null,
+  today: AS_OF,
   alerts: [],
   watchlist: null,
   proposals: [],
