@@ -42,8 +42,13 @@ export const fallOf = ({ earningsSide }: Pick<Measure, 'earningsSide'>): Headroo
  *
  * @example burdenHeadroom(decimal(42), decimal(15), decimal('3.5')).mayFall // => 0.2
  */
-export function burdenHeadroom(burden: Decimal, carrier: Decimal, level: Decimal): Forms {
-  const absolute = level.minus(burden.div(carrier));
+export function burdenHeadroom(
+  burden: Decimal,
+  carrier: Decimal,
+  level: Decimal,
+  ratio = burden.div(carrier),
+): Forms {
+  const absolute = level.minus(ratio);
   const capacity = level.times(carrier).minus(burden);
   if (burden.lte(0))
     return { ...NO_HEADROOM, absolute, mayFall: ONE, moneyLeft: carrier, otherSideMayRise: capacity };
@@ -67,8 +72,13 @@ export function burdenHeadroom(burden: Decimal, carrier: Decimal, level: Decimal
  *
  * @example coverHeadroom(decimal(10), decimal(4), decimal(2)) // => { absolute: 0.5, shareOfLevel: 0.25, mayFall: 0.2, moneyLeft: 2, otherSideMayRise: 1, otherSideShare: 0.25 }
  */
-export function coverHeadroom(covers: Decimal, charge: Decimal, level: Decimal): Forms {
-  const absolute = covers.div(charge).minus(level);
+export function coverHeadroom(
+  covers: Decimal,
+  charge: Decimal,
+  level: Decimal,
+  ratio = covers.div(charge),
+): Forms {
+  const absolute = ratio.minus(level);
   const needed = level.times(charge);
   const shareOfLevel = shareOf(absolute, level);
   return {

@@ -42,20 +42,22 @@ export type Shaped = Pick<Measure, 'shape' | 'earningsSide' | 'words'>;
  */
 export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): Held {
   const verdict = verdictOn(measure, sides, terms);
-  const forms = verdict.tested === null ? NO_HEADROOM : formsOf(measure.shape, sides, terms);
+  const { tested } = verdict;
+  const forms = tested === null ? NO_HEADROOM : formsOf(measure.shape, sides, tested, terms);
   return { ...verdict, headroom: { ...forms, fallOf: fallOf(measure) } };
 }
 
 function formsOf(
   shape: Measure['shape'],
   { numerator, denominator }: Sides,
+  tested: Decimal,
   { level, operator }: Terms,
 ): Omit<Headroom, 'fallOf'> {
   if (shape === 'amount' || !denominator)
     return amountHeadroom(numerator, level, isMaximum(operator) ? 'most' : 'least');
   return shape === 'burden'
-    ? burdenHeadroom(numerator, denominator, level)
-    : coverHeadroom(numerator, denominator, level);
+    ? burdenHeadroom(numerator, denominator, level, tested)
+    : coverHeadroom(numerator, denominator, level, tested);
 }
 
 /**

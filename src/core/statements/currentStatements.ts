@@ -39,31 +39,29 @@ export const knownStatements = (
       statement.scope === scope && statement.basis !== 'forecast' && statement.receivedOn <= asOf,
   );
 
+/** Versions of one period, one at least. */
+export type Versions = readonly [Statement, ...Statement[]];
+
 /**
- * Every version of each period, under periodKey; a period end within six days of a month end belongs to that month.
+ * Every version of each period, by length in months and month end; a period end within six days of a month end
+ * belongs to that month.
  *
- * @example versionsByPeriod(statements).get(periodKey('2026-09-30', 9))?.length // => 1
+ * @example versionsByPeriod(statements).get(9)?.get('2026-09-30')?.length // => 1
  */
 export function versionsByPeriod(
   statements: readonly Statement[],
-): ReadonlyMap<string, readonly [Statement, ...Statement[]]> {
-  const byPeriod = new Map<string, [Statement, ...Statement[]]>();
+): ReadonlyMap<number, ReadonlyMap<PlainDate, Versions>> {
+  const byMonths = new Map<number, Map<PlainDate, [Statement, ...Statement[]]>>();
   for (const statement of statements) {
-    const key = periodKey(statement.periodEnd, statement.months);
-    const versions = byPeriod.get(key);
+    const byEnd = byMonths.get(statement.months) ?? new Map<PlainDate, [Statement, ...Statement[]]>();
+    byMonths.set(statement.months, byEnd);
+    const end = reportingMonthEnd(statement.periodEnd);
+    const versions = byEnd.get(end);
     if (versions) versions.push(statement);
-    else byPeriod.set(key, [statement]);
+    else byEnd.set(end, [statement]);
   }
-  return byPeriod;
+  return byMonths;
 }
-
-/**
- * One text for each period: its end and its length.
- *
- * @example periodKey('2025-01-03', 12) // => '2024-12-31 12'
- */
-export const periodKey = (periodEnd: PlainDate, months: number): string =>
-  `${reportingMonthEnd(periodEnd)} ${months}`;
 
 /**
  * One statement per period end and length, in order of period end: audited over reviewed over management where
@@ -76,24 +74,24 @@ export const periodKey = (periodEnd: PlainDate, months: number): string =>
 export const currentStatements = (
   statements: readonly Statement[],
   selection: StatementSelection,
-): readonly Statement[] =>
-  [...versionsByPeriod(knownStatements(statements, selection)).values()].map(inForce).sort(byPeriodEnd);
+): readonly Statement[] => inForceByPeriodEnd(versionsByPeriod(knownStatements(statements, selection)));
+
+/**
+ * The same out of versions that are laid out already.
+ *
+ * @example inForceByPeriodEnd(versionsByPeriod(statements)).at(-1)?.months // => 9
+ */
+export const inForceByPeriodEnd = (versions: ReturnType<typeof versionsByPeriod>): readonly Statement[] =>
+  [...versions.values()]
+    .flatMap((byEnd) => [...byEnd.values()].map(inForce))
+    .sort((a, b) => compareText(a.periodEnd, b.periodEnd) || a.months - b.months);
 
 /**
  * The statement in force among versions of one period.
  *
  * @example inForce([statements[0]]).months // => 9
  */
-export const inForce = ([first, ...others]: readonly [Statement, ...Statement[]]): Statement =>
-  others.reduce(better, first);
-
-/**
- * The order of period ends, the shorter period first.
- *
- * @example byPeriodEnd(statements[0], statements[1]) // => -1
- */
-export const byPeriodEnd = (one: Statement, other: Statement): number =>
-  compareText(one.periodEnd, other.periodEnd) || one.months - other.months;
+export const inForce = ([first, ...others]: Versions): Statement => others.reduce(better, first);
 
 function better(one: Statement, other: Statement): Statement {
   const order =

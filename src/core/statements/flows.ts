@@ -53,7 +53,7 @@ export const flowOfMonths = (
   periodEnd: PlainDate,
   months: number,
 ): Reading =>
-  book.kept(`${line} ${periodEnd} ${months}`, () => {
+  book.kept(months, line, periodEnd, () => {
     const direct = flowOver(book, line, periodEnd, months);
     const intoYear = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
     if (direct.kind === 'value' || intoYear <= months) return direct;
@@ -84,7 +84,7 @@ export const quarterFlow = (book: StatementBook, line: LineItemCode, quarterEnd:
  * @example lastTwelveMonths(book, 'revenue', '2026-09-30').value // => 90000000
  */
 export const lastTwelveMonths = (book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading =>
-  book.kept(`${line} ${periodEnd} twelve months`, () => {
+  book.kept('twelve months', line, periodEnd, () => {
     const yearToDate = byYearToDate(book, line, periodEnd);
     const quarters = byQuarters(book, line, periodEnd);
     const routes = [

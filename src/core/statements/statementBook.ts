@@ -1,11 +1,11 @@
 /** A borrower's statements laid out by period, so that a figure is found without searching for it. */
 import type { BorrowerInputs } from '../borrowerInputs.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import {
-  byPeriodEnd,
+  inForceByPeriodEnd,
   inForce,
   knownStatements,
-  periodKey,
   versionsByPeriod,
   type StatementSelection,
 } from './currentStatements.ts';
@@ -35,8 +35,13 @@ export interface StatementBook {
   readonly carries: (line: LineItemCode) => boolean;
   /** Whether a later period was out already when this version came: then it restates, before that it closes the books. */
   readonly isRestating: (version: Statement) => boolean;
-  /** What `read` gives, kept under its question. */
-  readonly kept: (question: string, read: () => Reading) => Reading;
+  /** What `read` gives for a line on a day by one route, kept. */
+  readonly kept: (
+    route: string | number,
+    line: LineItemCode,
+    date: PlainDate,
+    read: () => Reading,
+  ) => Reading;
 }
 
 /**
@@ -75,15 +80,19 @@ export function openBooks(
 export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: number): StatementBook {
   const byId = new Map(statements.map((statement) => [statement.id, statement]));
   const versions = versionsByPeriod(statements);
-  const current = new Map([...versions].map(([key, ofPeriod]) => [key, inForce(ofPeriod)]));
-  const readings = new Map<string, Reading>();
+  const versionsOf = (periodEnd: PlainDate, months: number) =>
+    versions.get(months)?.get(reportingMonthEnd(periodEnd));
+  const current = inForceByPeriodEnd(versions);
   return {
     fiscalYearEndMonth,
     statements,
-    current: [...current.values()].sort(byPeriodEnd),
+    current,
     statementById: (id) => byId.get(id),
-    versionsOf: (periodEnd, months) => versions.get(periodKey(periodEnd, months)) ?? [],
-    statementOf: (periodEnd, months) => current.get(periodKey(periodEnd, months)) ?? null,
+    versionsOf: (periodEnd, months) => versionsOf(periodEnd, months) ?? [],
+    statementOf: (periodEnd, months) => {
+      const ofPeriod = versionsOf(periodEnd, months);
+      return ofPeriod ? inForce(ofPeriod) : null;
+    },
     carries: remembering((line: LineItemCode) =>
       statements.some(({ amounts }) => {
         const amount = amounts[line];
@@ -93,14 +102,26 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
     isRestating: remembering((version: Statement) =>
       statements.some((other) => isLaterPeriodKnownWith(version, other)),
     ),
-    kept: (question, read) => {
-      const known = readings.get(question);
-      if (known) return known;
-      const found = read();
-      readings.set(question, found);
-      return found;
-    },
+    kept: keptReadings(),
   };
+}
+
+function keptReadings(): StatementBook['kept'] {
+  const routes = new Map<string | number, Map<LineItemCode, Map<PlainDate, Reading>>>();
+  return (route, line, date, read) => {
+    const lines = within(routes, route, () => new Map<LineItemCode, Map<PlainDate, Reading>>());
+    const readings = within(lines, line, () => new Map<PlainDate, Reading>());
+    return within(readings, date, read);
+  };
+}
+
+/** What stands under the key, made on first sight. */
+function within<Key, Value extends object>(map: Map<Key, Value>, key: Key, make: () => Value): Value {
+  const known = map.get(key);
+  if (known) return known;
+  const made = make();
+  map.set(key, made);
+  return made;
 }
 
 const isLaterPeriodKnownWith = (version: Statement, other: Statement): boolean =>
