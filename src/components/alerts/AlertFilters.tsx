@@ -51,9 +51,9 @@ export function AlertFilters({ query, sectors, ownsBorrowers, onChange }: AlertF
         options={[
           ANY,
           { value: '0', label: 'not met' },
-          { value: '5', label: 'less than 5 %' },
-          { value: '10', label: 'less than 10 %' },
-          { value: '20', label: 'less than 20 %' },
+          { value: '5', label: 'less than 5\u00a0%' },
+          { value: '10', label: 'less than 10\u00a0%' },
+          { value: '20', label: 'less than 20\u00a0%' },
         ]}
         onChange={(below) => change({ mayFallBelow: below === '' ? undefined : Number(below) })}
       />

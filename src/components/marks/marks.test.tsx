@@ -21,7 +21,7 @@ describe('the sounding strip', () => {
   test('reads every test with its outcome and its number', () => {
     expect(row).toContain('role="img"');
     expect(row).toContain(
-      'aria-label="Net leverage, the last 4 tests, oldest first: 31 Mar 2026 met, may fall 12.3 %; 30 Jun 2026 cannot be tested; 30 Sep 2026 met, thin, just passing, may fall 1.4 %; 31 Dec 2026 not met, short by 4.0 %."',
+      'aria-label="Net leverage, the last 4 tests, oldest first: 31 Mar 2026 met, may fall 12.3\u00a0%; 30 Jun 2026 cannot be tested; 30 Sep 2026 met, thin, just passing, may fall 1.4\u00a0%; 31 Dec 2026 not met, short by 4.0\u00a0%."',
     );
   });
 

@@ -7,7 +7,7 @@ const finding = (facts: Partial<AlertFinding> = {}): AlertFinding => ({
   covenantId: 7,
   severity: 'soon',
   factDate: '2026-09-30',
-  sentence: 'Net leverage 3.38x, at most 3.50x. Earnings may fall 3.4 %.',
+  sentence: 'Net leverage 3.38x, at most 3.50x. Earnings may fall 3.4\u00a0%.',
   wouldChange: 'EBITDA 0.4m higher',
   evidence: [{ label: 'Net leverage', value: '3.38x' }],
   ...facts,

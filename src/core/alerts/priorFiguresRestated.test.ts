@@ -32,7 +32,7 @@ test('says both figures and the day it came', () => {
       severity: 'soon',
       covenantId: null,
       factDate: '2026-05-20',
-      sentence: 'EBITDA of twelve months to 31 Dec 2025 restated from 10 to 9 (−10.0 %).',
+      sentence: 'EBITDA of twelve months to 31 Dec 2025 restated from 10 to 9 (−10.0\u00a0%).',
     },
   ]);
 });
@@ -42,7 +42,7 @@ test('a past outcome that changes is news whatever the share', () => {
     { sentence: 'Prior figures restated; one past outcome changes.' },
   ]);
   expect(restated(9, '3.02')).toMatchObject([
-    { sentence: expect.stringContaining('(−10.0 %); one past outcome changes.') as string },
+    { sentence: expect.stringContaining('(−10.0\u00a0%); one past outcome changes.') as string },
   ]);
 });
 

@@ -63,12 +63,12 @@ describe('thin headroom', () => {
     expect(find(thinHeadroom, net, { ebitda: 10_000_000, debt: 31_535_000 })).toMatchObject([
       {
         severity: 'soon',
-        sentence: 'Net leverage 3.15x, at most 3.50x. EBITDA may fall 9.9 % (990.0k).',
-        wouldChange: 'EBITDA of 10.01m instead of 10.00m (11.1k more) leaves 10 %.',
+        sentence: 'Net leverage 3.15x, at most 3.50x. EBITDA may fall 9.9\u00a0% (990.0k).',
+        wouldChange: 'EBITDA of 10.01m instead of 10.00m (11.1k more) leaves 10\u00a0%.',
       },
     ]);
     expect(find(thinHeadroom, net, { ebitda: 10_000_000, debt: 31_501_000 })).toMatchObject([
-      { sentence: expect.stringContaining('may fall 9.997 %') as string },
+      { sentence: expect.stringContaining('may fall 9.997\u00a0%') as string },
     ]);
   });
 
@@ -84,7 +84,7 @@ describe('met only with add-backs', () => {
       {
         severity: 'soon',
         sentence:
-          'Net leverage 3.23x as reported, at most 3.50x; 3.82x without 2 of add-backs: would not have been met. Needs at least 50.0 % of the add-backs.',
+          'Net leverage 3.23x as reported, at most 3.50x; 3.82x without 2 of add-backs: would not have been met. Needs at least 50.0\u00a0% of the add-backs.',
         wouldChange: 'EBITDA before add-backs of 12 instead of 11.',
       },
     ]);
@@ -153,7 +153,7 @@ describe('just passing, repeated', () => {
         severity: 'note',
         factDate: on,
         sentence: 'Net leverage 3.47x, at most 3.50x. Third test in a row just passing, 3 of the last 3.',
-        wouldChange: 'Next tests at 3.43x or less, 2 % from the level.',
+        wouldChange: 'Next tests at 3.43x or less, 2\u00a0% from the level.',
       },
     ]);
   });

@@ -23,16 +23,16 @@ const left = (
 describe('what is left', () => {
   test('a met test says what may be lost, in money and as a share', () => {
     expect(left('net-leverage', 'met, thin', headroom('0.0142', '221400'))).toBe(
-      'EBITDA may fall 221.4k (1.4 %)',
+      'EBITDA may fall 221.4k (1.4\u00a0%)',
     );
     expect(left('minimum-liquidity', 'met', headroom('0.2857', '2000000'))).toBe(
-      'Liquidity may fall 2.0m (28.6 %)',
+      'Liquidity may fall 2.0m (28.6\u00a0%)',
     );
   });
 
   test('a test that is not met says what it is short of, without a minus sign', () => {
     expect(left('interest-cover', 'not met', headroom('-0.06', '-312000'))).toBe(
-      'EBITDA 312.0k short (6.0 %)',
+      'EBITDA 312.0k short (6.0\u00a0%)',
     );
   });
 

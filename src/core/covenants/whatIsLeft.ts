@@ -6,7 +6,7 @@ import type { CovenantTest } from './covenantTest.ts';
  * What is left before a test is not met, in the words of the covenant table: money first, then the share. Where a
  * test is not met, what is short of it.
  *
- * @example whatIsLeft(test) // => 'EBITDA may fall 1.9m (14.3 %)'
+ * @example whatIsLeft(test) // => 'EBITDA may fall 1.9m (14.3\u00a0%)'
  */
 export function whatIsLeft(test: Pick<CovenantTest, 'measure' | 'outcome' | 'reason' | 'headroom'>): string {
   const { moneyLeft, mayFall } = test.headroom;

@@ -46,17 +46,17 @@ describe('a ratio', () => {
 
 describe('a share', () => {
   test('is per cent with one decimal', () => {
-    expect(formatShare(decimal('0.0142'))).toBe('1.4 %');
-    expect(formatShare(decimal('-0.0714'))).toBe('−7.1 %');
-    expect(formatShare(decimal('0'))).toBe('0.0 %');
+    expect(formatShare(decimal('0.0142'))).toBe('1.4\u00a0%');
+    expect(formatShare(decimal('-0.0714'))).toBe('−7.1\u00a0%');
+    expect(formatShare(decimal('0'))).toBe('0.0\u00a0%');
   });
 
   test('below nought is never printed as nought', () => {
-    expect(formatShare(decimal('-0.0004'))).toBe('−0.04 %');
+    expect(formatShare(decimal('-0.0004'))).toBe('−0.04\u00a0%');
   });
 
   test('just below a line is not printed as the line', () => {
-    expect(formatShare(decimal('0.09996'), { beside: decimal('0.1') })).toBe('9.996 %');
+    expect(formatShare(decimal('0.09996'), { beside: decimal('0.1') })).toBe('9.996\u00a0%');
   });
 });
 

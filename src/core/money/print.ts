@@ -6,6 +6,8 @@ import type { Decimal } from './decimal.ts';
 
 const MOST_PLACES = 12;
 const MINUS = '−';
+/** Keeps a number and its sign on one line. */
+export const NO_BREAK_SPACE = '\u00a0';
 
 /** How many digits a figure needs. `beside` is the line it is held against; `places` the fewest decimals. */
 export interface PrintOptions {
@@ -41,10 +43,10 @@ export function formatMoneyLevel(level: Decimal): string {
 }
 
 /**
- * A share of one in per cent, '1.4 %'. A share that is not nought is never printed as nought.
+ * A share of one in per cent, '1.4 %', number and sign on one line. A share that is not nought is never printed as nought.
  *
- * @example formatShare(decimal('0.0142')) // => '1.4 %'
- * @example formatShare(decimal('-0.0004')) // => '−0.04 %'
+ * @example formatShare(decimal('0.0142')) // => '1.4\u00a0%'
+ * @example formatShare(decimal('-0.0004')) // => '−0.04\u00a0%'
  */
 export function formatShare(share: Decimal, { places = 1, beside = null }: PrintOptions = {}): string {
   const percent = share.times(100);
@@ -52,7 +54,7 @@ export function formatShare(share: Decimal, { places = 1, beside = null }: Print
     placesThatShowTheSide(percent, beside && beside.times(100), places),
     placesThatShowTheSide(percent, percent.times(0), places),
   );
-  return `${signed(percent, apart)} %`;
+  return `${signed(percent, apart)}${NO_BREAK_SPACE}%`;
 }
 
 /**

@@ -45,7 +45,7 @@ export const block = (name: QualityBlockName, risk: number, place: Standing | nu
 /**
  * A block that cannot be given, with its reason.
  *
- * @example without('cash conversion', 'EBITDA is not above 1 % of revenue').risk // => null
+ * @example without('cash conversion', 'EBITDA is not above 1\u00a0% of revenue').risk // => null
  */
 export const without = (
   name: QualityBlockName,

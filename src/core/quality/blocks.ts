@@ -58,7 +58,7 @@ function conversionBlock({ peer, standing }: BlockContext): QualityBlock {
       'revenue',
       'revenuePrior',
     ]);
-    return without('cash conversion', missing ?? 'EBITDA is not above 1 % of revenue');
+    return without('cash conversion', missing ?? 'EBITDA is not above 1\u00a0% of revenue');
   }
   const place = standing('cashConversion');
   const figures = {
@@ -100,7 +100,7 @@ function dampedReason(peer: PeerInputs): string | null {
   if (peer.acquisitionInYear) return 'an acquisition in the year: measures built on growth are left out';
   const growth = revenueGrowth(peer.figures);
   return growth !== null && growth > fastGrowth
-    ? 'revenue grew more than 25 %: measures built on growth are left out'
+    ? 'revenue grew more than 25\u00a0%: measures built on growth are left out'
     : null;
 }
 

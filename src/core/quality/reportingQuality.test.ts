@@ -49,7 +49,7 @@ test('receivables drawn up for a year are named first, with both values and the 
   const quality = qualityOf(buildBorrower(500, { receivablesUp: 0.25 }));
   expect(quality.band).toBe('weakly supported');
   expect(quality.explanations[0]).toMatch(
-    /^Receivable days rose from \d+ to \d+ \(\+2\d %\); peers [+−]?\d+ % \(16 peers\)\.$/,
+    /^Receivable days rose from \d+ to \d+ \(\+2\d\u00a0%\); peers [+−]?\d+\u00a0% \(16 peers\)\.$/,
   );
   expect(quality.explanations.length).toBeLessThanOrEqual(4);
   expect(quality.whatWouldChangeIt).toMatch(/receivables ageing/);
@@ -58,20 +58,20 @@ test('receivables drawn up for a year are named first, with both values and the 
 test('costs put on the balance sheet show as accruals that cash does not explain', () => {
   const quality = qualityOf(buildBorrower(501, { capitalised: 0.06 }));
   expect(quality.explanations.join(' ')).toMatch(
-    /Accruals not explained by cash or growth are \d+ % of assets; the peer median is -?\d+ % \(16 peers\)\./,
+    /Accruals not explained by cash or growth are \d+\u00a0% of assets; the peer median is −?\d+\u00a0% \(16 peers\)\./,
   );
 });
 
 test('fast growth is said beside the number', () => {
   expect(qualityOf(buildBorrower(502, { growth: 0.08 })).remarks).toContainEqual(
-    expect.stringMatching(/^Revenue grew 3\d %: fast growth alone/),
+    expect.stringMatching(/^Revenue grew 3\d\u00a0%: fast growth alone/),
   );
 });
 
 test('unaudited accounts and few peers are said beside the number', () => {
   expect(qualityOf(book.at(-1)!).remarks).toEqual([
     'The accounts of 30 September 2026 are management accounts, not audited.',
-    'Only 2 peers in the sector: the comparison leans 80 % on the whole book (30 others).',
+    'Only 2 peers in the sector: the comparison leans 80\u00a0% on the whole book (30 others).',
   ]);
   expect(qualityOf(buildBorrower(1, { given: { basis: 'audited' } })).remarks).toEqual([]);
 });

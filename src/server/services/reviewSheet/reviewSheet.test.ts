@@ -70,8 +70,8 @@ describe('what changed', () => {
   test('begins with the outcome that changed, with number and date of both tests', () => {
     expect(textsOf(sheet, 3)).toEqual([
       'Since the previous test date (31 Dec 2024); no earlier sheet is recorded.',
-      'Net leverage, 31 Dec 2025: 3.5004x, at most 3.50x: not met, earnings 0.01 % short. 31 Dec 2024: 3.00x, at most 3.50x: met, earnings may fall 14.3 %.',
-      'Current ratio, 31 Dec 2025: 1.50x, at least 1.20x: met, the tested amount may fall 20.0 %. 31 Dec 2024: 1.50x, at least 1.20x: met, the tested amount may fall 20.0 %.',
+      'Net leverage, 31 Dec 2025: 3.5004x, at most 3.50x: not met, earnings 0.01\u00a0% short. 31 Dec 2024: 3.00x, at most 3.50x: met, earnings may fall 14.3\u00a0%.',
+      'Current ratio, 31 Dec 2025: 1.50x, at least 1.20x: met, the tested amount may fall 20.0\u00a0%. 31 Dec 2024: 1.50x, at least 1.20x: met, the tested amount may fall 20.0\u00a0%.',
     ]);
   });
 
@@ -139,7 +139,7 @@ describe('the covenant table', () => {
       text: 'at most 3.50x',
     });
     expect(leverage?.['status']).toMatchObject({ kind: 'outcome', outcome: 'not met' });
-    expect(leverage?.['mayFall']).toMatchObject({ text: '−0.01 %', places: 2 });
+    expect(leverage?.['mayFall']).toMatchObject({ text: '−0.01\u00a0%', places: 2 });
   });
 
   test('gives the next step, the next test, and says what is not recorded', () => {
@@ -231,9 +231,9 @@ describe('the covenant table', () => {
 test('break-even says what may fall, what may rise and the first later level that is not met', () => {
   const [leverage, ratio] = rowsOf(sheet, 7);
   expect(leverage?.['falls']?.text).toBe('EBITDA');
-  expect(leverage?.['fallShare']?.text).toBe('−0.01 %');
+  expect(leverage?.['fallShare']?.text).toBe('−0.01\u00a0%');
   expect(leverage?.['rises']?.text).toBe('Net debt');
-  expect(leverage?.['later']?.text).toBe('at most 3.25x, 7.7 % short');
+  expect(leverage?.['later']?.text).toBe('at most 3.25x, 7.7\u00a0% short');
   expect(leverage?.['laterFrom']?.text).toBe('1 Jun 2026');
   expect(leverage?.['projection']?.text).toBe('not recorded');
   expect(ratio?.['later']?.text).toBe('no later level agreed');
@@ -254,7 +254,7 @@ test('the bridge leads from net income to covenant EBITDA with cap, evidence and
   expect(rows[6]?.['evidence']?.text).toBe('plant closure; 3 months to 31 Dec 2025');
   expect(rows[4]?.['cells']?.text).toBe("Figures 2025.xlsx: 'P&L ''25'!D6, D7");
   expect(textsOf(sheet, 9)).toEqual([
-    'Cap on add-backs 25 % of EBITDA before the capped add-backs: EUR 3. Capped add-backs 1, taken 1: 20.0 % of the cap used.',
+    'Cap on add-backs 25\u00a0% of EBITDA before the capped add-backs: EUR 3. Capped add-backs 1, taken 1: 20.0\u00a0% of the cap used.',
     'Without add-backs of EUR 1: 3.68x, not met.',
   ]);
 });
@@ -272,7 +272,7 @@ test('just passing is k of n tests with its days', () => {
     '1',
     '31 Dec 2025',
   ]);
-  expect(textsOf(near, 12)[0]).toMatch(/^Just passing: within 2 % of the level/);
+  expect(textsOf(near, 12)[0]).toMatch(/^Just passing: within 2\u00a0% of the level/);
 });
 
 test('signals that are open, and closed ones with reason, words and name', () => {
