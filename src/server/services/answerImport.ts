@@ -26,23 +26,23 @@ interface Answered {
  */
 export async function answerImport(
   actor: PersonActor,
-  request: Answered,
+  { id, version }: Answered,
   command: ImportAnswer,
 ): Promise<Outcome<Answered>> {
   const scope = deskScope(actor.person, 'import figures');
   const { seen, given } = await inTransaction(async (tx) => ({
-    seen: await findImport(tx, request.id, scope),
-    given: await listAnswers(tx, request.id),
+    seen: await findImport(tx, id, scope),
+    given: await listAnswers(tx, id),
   }));
   if (!seen) return err({ kind: 'not-found', what: 'import' });
   const reading = seen.state === 'draft' ? await readWith(seen, command) : null;
 
-  return write(actor, 'answer-import', { ...request, command }, async (tx) => {
-    const draft = await findImportForUpdate(tx, request.id, scope);
+  return write(actor, 'answer-import', { id, version, command }, async (tx) => {
+    const draft = await findImportForUpdate(tx, id, scope);
     if (!draft) return err({ kind: 'not-found', what: 'import' });
     if (draft.state !== 'draft' || !reading)
       return err({ kind: 'conflict', detail: `This import is ${draft.state}. Nothing was changed.` });
-    if (draft.version !== request.version || draft.version !== seen.version) return err(stale(draft.version));
+    if (draft.version !== version || draft.version !== seen.version) return err(stale(draft.version));
     const earlier = given.find((answer) => answer.questionKey === command.questionKey);
     const holdsFor = questionOf(JSON.parse(draft.reading) as Reading, command)?.holdsFor ?? earlier?.holdsFor;
     const refused = refusal(reading, command, holdsFor);
@@ -52,7 +52,7 @@ export async function answerImport(
     await undoAnswer(tx, about);
     if (command.answer !== null && holdsFor)
       await insertAnswer(tx, { ...about, holdsFor, answer: command.answer, personId: actor.person.id });
-    if (!(await updateReading(tx, { ...toStaged(reading), ...request }))) return err(stale(draft.version));
+    if (!(await updateReading(tx, { ...toStaged(reading), id, version }))) return err(stale(draft.version));
     await audit(tx, actor, {
       action: 'answer-import',
       subjectKind: 'import',
@@ -63,7 +63,7 @@ export async function answerImport(
       before: earlier ? { answer: earlier.answer } : null,
       after: command,
     });
-    return ok({ id: draft.id, version: request.version + 1 });
+    return ok({ id, version: version + 1 });
   });
 }
 
