@@ -1,6 +1,4 @@
 /** One change, once: under conflicts, repeats, lost answers of COMMIT, and a database that goes silent. */
-import { once } from 'node:events';
-import { connect as openSocket, createServer, type AddressInfo, type Server, type Socket } from 'node:net';
 import { QueryTypes, type Transaction } from 'sequelize';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { ok } from '../../src/core/result.ts';
@@ -11,11 +9,10 @@ import { execute, select, selectOne } from '../../src/server/db/sql.ts';
 import type { PersonActor } from '../../src/server/services/actor.ts';
 import { audit, write } from '../../src/server/services/write.ts';
 import { AUDIT_KEY } from '../support/auditKey.ts';
+import { openLossyWay, type LossyWay } from '../support/lossyWay.ts';
 import { useOwnDatabase } from '../support/ownDatabase.ts';
 
-/** A way to the database that can lose the answer to the next COMMIT. */
-let way: Server;
-let losesAnswer = false;
+let way: LossyWay;
 let url: string;
 let person: PersonActor['person'];
 let other: PersonActor['person'];
@@ -23,31 +20,8 @@ let other: PersonActor['person'];
 beforeAll(async () => {
   process.env['AUDIT_KEY'] = AUDIT_KEY;
   ({ url } = await useOwnDatabase());
-  const target = new URL(url);
-  const port = Number(target.port);
-  way = createServer((near) => {
-    const far = openSocket(port, target.hostname);
-    let isLost = false;
-    near.on('data', (bytes) => {
-      if (losesAnswer && bytes.includes('COMMIT')) {
-        losesAnswer = false;
-        isLost = true;
-      }
-      far.write(bytes);
-    });
-    far.on('data', (bytes) => {
-      if (isLost) [near, far].forEach((socket: Socket) => socket.destroy());
-      else near.write(bytes);
-    });
-    for (const [one, another] of [
-      [near, far],
-      [far, near],
-    ] as const)
-      one.on('error', () => another.destroy()).on('close', () => another.destroy());
-  }).listen(0, '127.0.0.1');
-  await once(way, 'listening');
-  target.port = String((way.address() as AddressInfo).port);
-  process.env['DATABASE_URL'] = target.href;
+  way = await openLossyWay(url);
+  process.env['DATABASE_URL'] = way.url;
   const add = (name: string, email: string) =>
     inTransaction(async (tx) => ({
       id: await insertPerson(tx, { name, email, passwordHash: null, roles: [], now: new Date() }),
@@ -62,7 +36,7 @@ beforeAll(async () => {
 
 afterAll(async () => {
   await closeDatabase();
-  way.close();
+  await way.close();
 });
 
 const actor = (idempotencyKey: string | null, who = person): PersonActor => ({
@@ -155,9 +129,9 @@ test('a key that was used for something else is refused, and somebody else’s s
 
 test('a COMMIT whose answer is lost is an outage, and the repeat with its key finds it done', async () => {
   const [version, told] = [await versionNow(), await entries()];
-  losesAnswer = true;
+  way.loseNextCommit();
   const lost = await raise(actor('lost')).catch((error: unknown) => error);
-  expect(losesAnswer, 'the answer was lost').toBe(false);
+  expect(way.isArmed(), 'still to be lost').toBe(false);
   expect(isOutage(lost)).toBe(true);
   expect([await versionNow(), await entries()], 'it was done all the same').toEqual([version + 1, told + 1]);
   expect(await raise(actor('lost'))).toMatchObject({ ok: true });

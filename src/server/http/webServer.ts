@@ -150,7 +150,8 @@ function limitBody(request: IncomingMessage, response: ServerResponse): void {
     // The page that was reading the body answers too, later; its answer has nowhere to go.
     Object.assign(response, { writeHead: () => response, write: () => true, end: () => response });
   };
-  Object.assign(request, { body: counted(request, bodyBytesMost(request), refuseSize) });
+  const pieces = request.iterator({ destroyOnReturn: false });
+  Object.assign(request, { body: counted(pieces, bodyBytesMost(request), refuseSize) });
 }
 
 function refuse(request: IncomingMessage, response: ServerResponse, problem: PlainProblem): void {
@@ -167,9 +168,13 @@ function refuse(request: IncomingMessage, response: ServerResponse, problem: Pla
   if (problem.status === 405) headers.set('allow', 'GET, HEAD, POST, PUT, PATCH, DELETE, OPTIONS');
   if (problem.retryAfterSeconds !== undefined) headers.set('retry-after', String(problem.retryAfterSeconds));
   setMissingHeaders(headers, false);
+  const body = JSON.stringify(problemBody(requestId, problem));
+  headers.set('content-length', String(Buffer.byteLength(body)));
   response.writeHead(problem.status, Object.fromEntries(headers));
-  response.end(JSON.stringify(problemBody(requestId, problem)));
-  request.resume();
+  // Ended only once the client has stopped sending: a connection closed under it would take the answer with it.
+  response.write(body);
+  const end = response.end.bind(response);
+  request.once('end', () => end()).resume();
   const { socket } = request;
   setTimeout(() => socket.destroy(), LINGER_MS).unref();
 }
