@@ -16,20 +16,27 @@ interface UploadPanelProps {
   readonly borrowerId: number | null;
 }
 
+interface Faults {
+  readonly borrower?: string | undefined;
+  readonly file?: string | undefined;
+}
+
+/** Said before it is sent: the server would refuse it all the same. */
+const tooLarge = ({ name, size }: File): string | undefined =>
+  size > UPLOAD_MOST_BYTES
+    ? `${name} is larger than ${UPLOAD_MOST_BYTES / 1024 / 1024} MB. Nothing was sent. Save a copy without pictures.`
+    : undefined;
+
 /** One workbook for one borrower. Whose it is, is said by the analyst: never guessed from the file. */
 export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
   const [borrower, setBorrower] = useState(borrowerId === null ? '' : String(borrowerId));
   const [file, setFile] = useState<File | null>(null);
-  const [fault, setFault] = useState<string | null>(null);
+  const [faults, setFaults] = useState<Faults>({});
   const [dropped, setDropped] = useState(false);
   const sending = useSending<{ id: number }>();
   const choose = (chosen: File | null | undefined) => {
     sending.clear();
-    setFault(
-      chosen && chosen.size > UPLOAD_MOST_BYTES
-        ? `${chosen.name} is larger than ${UPLOAD_MOST_BYTES / 1024 / 1024} MB. Save a copy without pictures.`
-        : null,
-    );
+    setFaults(chosen ? { file: tooLarge(chosen) } : {});
     setFile(chosen ?? null);
   };
   const drop = (event: DragEvent) => {
@@ -38,8 +45,12 @@ export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
     choose(event.dataTransfer.files[0]);
   };
   const upload = async () => {
-    if (borrower === '') return setFault('Choose whose figures these are.');
-    if (!file) return setFault('Choose a file.');
+    const found: Faults = {
+      borrower: borrower === '' ? 'Choose whose figures these are.' : undefined,
+      file: file ? tooLarge(file) : 'Choose a file.',
+    };
+    setFaults(found);
+    if (!file || found.borrower !== undefined || found.file !== undefined) return;
     const form = new FormData();
     form.set('borrowerId', borrower);
     form.set('file', file);
@@ -61,13 +72,14 @@ export function UploadPanel({ borrowers, borrowerId }: UploadPanelProps) {
           label="Borrower"
           placeholder="Choose a borrower"
           value={borrower}
+          error={faults.borrower}
           options={borrowers.map((each) => ({ value: String(each.id), label: each.name }))}
           onChange={(event) => setBorrower(event.target.value)}
         />
         <FieldFrame
           label="Workbook"
           hint="An .xlsx with income statement, balance sheet and cash flow; or drop it here"
-          error={fault}
+          error={faults.file}
         >
           {(wired) => (
             <input
