@@ -2,7 +2,8 @@
  * A test with a page of Chromium. Whatever the page logs as an error, throws or refuses by its content security
  * policy fails the test that it happened in.
  */
-import { chromium, type Browser, type Page } from 'playwright-core';
+import { join } from 'node:path';
+import { chromium, type Browser, type Page, type Response } from 'playwright-core';
 import { afterAll, expect, inject, test as base } from 'vitest';
 import { demoSignIn } from './demo.ts';
 
@@ -34,17 +35,25 @@ export interface BrowserContextOptions {
   readonly height?: number;
   readonly colorScheme?: 'light' | 'dark';
   readonly javaScriptEnabled?: boolean;
+  /** Where the product answers; the run's own by default. */
+  readonly baseURL?: string;
 }
 
 /** A page of a fresh browser profile, and what went wrong on it so far. */
 export async function openPage(
   options: BrowserContextOptions = {},
 ): Promise<{ page: Page; faults: string[]; close: () => Promise<void> }> {
-  const { width = 1440, height = 900, colorScheme = 'light', javaScriptEnabled = true } = options;
+  const {
+    width = 1440,
+    height = 900,
+    colorScheme = 'light',
+    javaScriptEnabled = true,
+    baseURL = inject('baseUrl'),
+  } = options;
   const context = await (
     await open()
   ).newContext({
-    baseURL: inject('baseUrl'),
+    baseURL,
     viewport: { width, height },
     colorScheme,
     javaScriptEnabled,
@@ -62,18 +71,56 @@ export async function openPage(
 
 /** Signs in through the sign-in page as somebody of the demo desk. */
 export async function signInOn(page: Page, part: string): Promise<void> {
-  const { email, password } = demoSignIn(part);
   await page.goto('/sign-in');
-  await page.getByLabel('Email address').fill(email);
-  await page.getByLabel('Password').fill(password);
-  await page.getByRole('button', { name: 'Sign in' }).click();
-  await page.waitForURL((url) => url.pathname !== '/sign-in');
+  await signInAtForm(page, demoSignIn(part));
 }
 
+/** Signs in on the sign-in page that is open, and waits for what comes after it. */
+export async function signInAtForm(
+  page: Page,
+  { email, password }: { readonly email: string; readonly password: string },
+): Promise<void> {
+  await page.getByLabel('Email address').fill(email);
+  await page.getByLabel('Password').fill(password);
+  await follow(page, () => page.getByRole('button', { name: 'Sign in' }).click());
+  expect(new URL(page.url()).pathname).not.toBe('/sign-in');
+}
+
+/** A press before an island of the page is awake is lost: people are slower than this, tests are not. */
+export async function islandsAwake(page: Page): Promise<void> {
+  await page.waitForFunction(() => document.querySelector('astro-island[ssr]') === null);
+}
+
+/** Does what leads to another page, and waits until that one is there and awake. */
+export async function follow(page: Page, leads: () => Promise<void>): Promise<void> {
+  const loaded = page.waitForEvent('load');
+  await leads();
+  await loaded;
+  await islandsAwake(page);
+}
+
+export async function visit(page: Page, address: string): Promise<Response | null> {
+  const answer = await page.goto(address);
+  await islandsAwake(page);
+  return answer;
+}
+
+/** Chromium logs every refused request as an error of its own; where a refusal is what is wanted it is none. */
+export const refusalsApart = (fault: string): boolean =>
+  !/Failed to load resource: the server responded with a status of (4\d\d|503)/.test(fault);
+
+/** Where the last picture of a page is kept whose test failed; nowhere by default. */
+const PICTURES = process.env['PICTURES_OF_FAILURES'];
+
 export const test = base.extend<{ page: Page }>({
-  page: async ({ task: _task }, use) => {
+  page: async ({ task }, use) => {
     const { page, faults, close } = await openPage();
     await use(page);
+    if (PICTURES && task.result?.state === 'fail')
+      await page.screenshot({
+        path: join(PICTURES, `${task.name.replaceAll(/\W+/g, ' ').slice(0, 80)}.png`),
+        fullPage: true,
+      });
     await close();
     expect(faults).toEqual([]);
   },

@@ -127,7 +127,7 @@ async function seed(env: NodeJS.ProcessEnv): Promise<DemoSignIn[]> {
 }
 
 /** The sink takes two ports in a row. */
-async function freePairOfPorts(): Promise<number> {
+export async function freePairOfPorts(): Promise<number> {
   for (;;) {
     const port = await freePort();
     if (!(await answers(port + 1))) return port;
