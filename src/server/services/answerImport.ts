@@ -35,14 +35,15 @@ export async function answerImport(
     given: await listAnswers(tx, id),
   }));
   if (!seen) return err({ kind: 'not-found', what: 'import' });
-  const reading = seen.state === 'draft' ? await readWith(seen, command) : null;
+  const isAsSeen = seen.state === 'draft' && seen.version === version;
+  const reading = isAsSeen ? await readWith(seen, command) : null;
 
   return write(actor, 'answer-import', { id, version, command }, async (tx) => {
     const draft = await findImportForUpdate(tx, id, scope);
     if (!draft) return err({ kind: 'not-found', what: 'import' });
-    if (draft.state !== 'draft' || !reading)
+    if (draft.state !== 'draft')
       return err({ kind: 'conflict', detail: `This import is ${draft.state}. Nothing was changed.` });
-    if (draft.version !== version || draft.version !== seen.version) return err(stale(draft.version));
+    if (!reading || draft.version !== version) return err(stale(draft.version));
     const earlier = given.find((answer) => answer.questionKey === command.questionKey);
     const holdsFor = questionOf(JSON.parse(draft.reading) as Reading, command)?.holdsFor ?? earlier?.holdsFor;
     const refused = refusal(reading, command, holdsFor);
