@@ -1,4 +1,4 @@
-import type { Decimal } from '../money/decimal.ts';
+import { ZERO, type Decimal } from '../money/decimal.ts';
 import type { InputUsed, Reading } from '../statements/reading.ts';
 
 /** One line of the way from the statements' lines to a tested amount; the lines above a subtotal add up to it. */
@@ -10,14 +10,17 @@ export interface BridgeLine {
 }
 
 /**
- * A figure taken with its sign, where it is known.
+ * A figure taken with its sign, where the accounts have it: a line that the borrower does not have is no nought.
  *
  * @example bridgeFigure('Income tax', { kind: 'missing', missing: [] }) // => []
  */
 export const bridgeFigure = (label: string, reading: Reading, sign: 1 | -1 = 1): readonly BridgeLine[] =>
-  reading.kind === 'value'
-    ? [{ label, amount: reading.value.times(sign), kind: 'figure', inputs: reading.inputs }]
+  reading.kind === 'value' && reading.inputs.length > 0
+    ? [{ label, amount: signed(reading.value, sign), kind: 'figure', inputs: reading.inputs }]
     : [];
+
+/** Taken from nought, not turned: a nought that is turned prints as -0. */
+const signed = (value: Decimal, sign: 1 | -1): Decimal => (sign === 1 ? value : ZERO.minus(value));
 
 /**
  * A sum of the lines above it, where it is known.

@@ -1,7 +1,6 @@
-import { Decimal } from '../money/decimal.ts';
+import { Decimal, ZERO } from '../money/decimal.ts';
 import { balanceAt } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
-import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
 import type { MeasureRequest } from './definition.ts';
@@ -52,24 +51,17 @@ export interface MeasuredDebt {
  */
 export function totalDebt({ book, date, definition }: MeasureRequest): MeasuredDebt {
   const lines = definition.leasesInDebt ? [...BORROWINGS, LEASES] : BORROWINGS;
-  const readings = lines.map(({ line, label }) => ({
-    line,
-    label,
-    reading: balanceAt(book, line, date),
-  }));
-  const parts = readings.map(({ line, label, reading }) => ({
+  const parts = lines.map(({ line, label }) => ({
     label,
     sign: 1 as const,
-    reading: orNoneIfNeverCarried(book, line, reading),
+    reading: balanceAt(book, line, date, 'optional'),
   }));
-  const given = readings.some(({ reading }) => reading.kind === 'value');
-  const reading = given ? sumOfReadings(parts) : balanceAt(book, 'senior_debt', date);
+  const isGiven = parts.some(({ reading }) => reading.kind === 'value' && reading.inputs.length > 0);
+  const reading = isGiven ? sumOfReadings(parts) : balanceAt(book, 'senior_debt', date);
   return {
     reading,
     bridge: [
-      ...parts.flatMap(({ label, reading }) =>
-        reading.kind === 'value' && reading.inputs.length > 0 ? bridgeFigure(label, reading) : [],
-      ),
+      ...parts.flatMap(({ label, reading }) => bridgeFigure(label, reading)),
       ...bridgeSubtotal('Total debt', reading),
     ],
   };
@@ -92,7 +84,7 @@ export function netDebtOn(request: MeasureRequest): MeasuredDebt {
   const value = netDebt({
     debt: debt.reading.value,
     cash: cash.value,
-    restrictedCash: cash.value.times(0),
+    restrictedCash: ZERO,
     cashCap: request.definition.cashNettingCap,
   });
   const reading: Reading = { kind: 'value', value, inputs: both.inputs };

@@ -3,7 +3,6 @@ import type { PlainDate } from '../calendar/plainDate.ts';
 import { ZERO, type Decimal } from '../money/decimal.ts';
 import { lastTwelveMonths } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
-import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
@@ -95,7 +94,7 @@ export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): Meas
     {
       label: 'Interest income',
       sign: -1 as const,
-      reading: optionalTwelveMonths(book, 'interest_income', date),
+      reading: lastTwelveMonths(book, 'interest_income', date, 'optional'),
     },
     {
       label: 'Depreciation and amortisation',
@@ -134,7 +133,10 @@ export function routesOfTwelveMonths(book: StatementBook, date: PlainDate): Rout
     lastTwelveMonths(book, 'cogs', date),
   ];
   const operating = sumOfReadings(
-    OPERATING_COSTS.map((line) => ({ sign: 1 as const, reading: optionalTwelveMonths(book, line, date) })),
+    OPERATING_COSTS.map((line) => ({
+      sign: 1 as const,
+      reading: lastTwelveMonths(book, line, date, 'optional'),
+    })),
   );
   if (ebitda.kind !== 'value' || revenue.kind !== 'value' || costOfSales.kind !== 'value') return null;
   if (operating.kind !== 'value' || operating.value.eq(ZERO)) return null;
@@ -147,6 +149,3 @@ export function routesOfTwelveMonths(book: StatementBook, date: PlainDate): Rout
     fromNetIncome: ebitda.value,
   });
 }
-
-const optionalTwelveMonths = (book: StatementBook, line: LineItemCode, date: PlainDate): Reading =>
-  orNoneIfNeverCarried(book, line, lastTwelveMonths(book, line, date));

@@ -1,6 +1,4 @@
 import { lastTwelveMonths } from '../statements/flows.ts';
-import type { LineItemCode } from '../statements/lineItems.ts';
-import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
 import { adjustedEbitda } from './adjustedEbitda.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
@@ -11,7 +9,8 @@ import type { Measure } from './measured.ts';
  * Adjusted EBITDA over net cash interest, both of twelve months. Source: methods.md A3.
  *
  * Cash interest paid is taken where the cash flow statement gives it for all twelve months, without netting:
- * interest received has no line of its own there. Else interest expense less interest income stands in.
+ * interest received has no line of its own there. Where it is missing, or comes in and so contradicts its name,
+ * interest expense less interest income stands in.
  */
 export const interestCover: Measure = {
   code: 'interest-cover',
@@ -35,11 +34,11 @@ function netCashInterest({ book, date }: MeasureRequest): {
   readonly reading: Reading;
   readonly bridge: readonly BridgeLine[];
 } {
-  const twelveMonths = (line: LineItemCode) => lastTwelveMonths(book, line, date);
-  const paid = sumOfReadings([{ sign: -1, reading: twelveMonths('interest_paid') }]);
-  if (paid.kind === 'value') return { reading: paid, bridge: bridgeFigure('Cash interest paid', paid) };
-  const expense = twelveMonths('interest_expense');
-  const income = orNoneIfNeverCarried(book, 'interest_income', twelveMonths('interest_income'));
+  const paid = sumOfReadings([{ sign: -1, reading: lastTwelveMonths(book, 'interest_paid', date) }]);
+  if (paid.kind === 'value' && paid.value.gte(0))
+    return { reading: paid, bridge: bridgeFigure('Cash interest paid', paid) };
+  const expense = lastTwelveMonths(book, 'interest_expense', date);
+  const income = lastTwelveMonths(book, 'interest_income', date, 'optional');
   const reading = sumOfReadings([
     { sign: 1, reading: expense },
     { sign: -1, reading: income },

@@ -46,6 +46,18 @@ describe('EBITDA', () => {
     expect(figures.reduce((sum, amount) => sum.plus(amount), ZERO).toFixed()).toBe('11.5');
   });
 
+  test('has no line for what the accounts do not have, and a nought without a sign for what is nought', () => {
+    const bridgeOf = (figures: Parameters<typeof year>[0]) =>
+      JSON.parse(JSON.stringify(ebitdaOfTwelveMonths(bookOf([year(figures)], 12), date).bridge)) as {
+        label: string;
+        amount: string;
+      }[];
+    expect(bridgeOf({}).map(({ label }) => label)).not.toContain('Interest income');
+    expect(bridgeOf({ interest_income: 0 })).toContainEqual(
+      expect.objectContaining({ label: 'Interest income', amount: '0' }),
+    );
+  });
+
   test('down from revenue differs by what stands below gross profit, by name', () => {
     const statement = year({ revenue: 80, cogs: 48, sga: '20.3' });
     expect(routesOfTwelveMonths(bookOf([statement], 12), date)?.name).toBe(
@@ -122,6 +134,11 @@ describe('interest', () => {
     expect(charge({ interest_paid: -4, interest_income: '0.5' })).toBe('4');
   });
 
+  test('is not what comes in where expense goes out: the sign contradicts it', () => {
+    expect(charge({ interest_paid: 4 })).toBe('2.5');
+    expect(charge({ interest_paid: 0 })).toBe('0');
+  });
+
   test('is else interest expense less interest income', () => {
     expect(charge({ interest_income: '0.5' })).toBe('2');
     expect(charge({})).toBe('2.5');
@@ -163,5 +180,14 @@ describe('balances', () => {
       return numerator.kind === 'value' ? numerator.value.toFixed() : numerator.kind;
     };
     expect([liquidity(false), liquidity(true)]).toEqual(['4', '7']);
+  });
+
+  test('a commitment that is overdrawn takes nothing from cash', () => {
+    const { numerator } = minimumLiquidity.measure(
+      request([balance({ cash: 4, revolver_commitment: 10, revolver_drawn: 12 })], {
+        definition: { ...definition, undrawnCountsAsLiquidity: true },
+      }),
+    );
+    expect(numerator.kind === 'value' && numerator.value.toFixed()).toBe('4');
   });
 });

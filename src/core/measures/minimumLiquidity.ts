@@ -1,6 +1,5 @@
-import { ZERO, type Decimal } from '../money/decimal.ts';
+import { Decimal, ZERO } from '../money/decimal.ts';
 import { balanceAt } from '../statements/flows.ts';
-import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
 import { bridgeFigure, bridgeSubtotal } from './bridge.ts';
 import type { MeasureRequest } from './definition.ts';
@@ -34,28 +33,29 @@ export const minimumLiquidity: Measure = {
   measure: (request) => {
     const { book, date, definition } = request;
     const cash = balanceAt(book, 'cash', date);
-    const parts = definition.undrawnCountsAsLiquidity ? [cash, ...undrawnParts(request)] : [cash];
-    const numerator = sumOfReadings(parts.map((reading) => ({ sign: 1 as const, reading })));
+    const undrawn = definition.undrawnCountsAsLiquidity ? undrawnOn(request) : null;
+    const numerator = sumOfReadings(
+      [cash, ...(undrawn ? [undrawn] : [])].map((reading) => ({ sign: 1 as const, reading })),
+    );
     return {
       numerator,
       denominator: null,
       addBacksTaken: ZERO,
       bridge: [
         ...bridgeFigure('Cash', cash),
-        ...parts.slice(1).flatMap((reading) => bridgeFigure('Undrawn commitments', reading)),
+        ...(undrawn ? bridgeFigure('Undrawn commitments', undrawn) : []),
         ...bridgeSubtotal('Liquidity', numerator),
       ],
     };
   },
 };
 
-function undrawnParts({ book, date }: MeasureRequest): readonly Reading[] {
-  const lettersOfCredit = balanceAt(book, 'letters_of_credit', date);
-  return [
-    sumOfReadings([
-      { sign: 1, reading: balanceAt(book, 'revolver_commitment', date) },
-      { sign: -1, reading: balanceAt(book, 'revolver_drawn', date) },
-      { sign: -1, reading: orNoneIfNeverCarried(book, 'letters_of_credit', lettersOfCredit) },
-    ]),
-  ];
+/** A commitment that is overdrawn has nothing left to draw; what is over it is debt, not less cash. */
+function undrawnOn({ book, date }: MeasureRequest): Reading {
+  const undrawn = sumOfReadings([
+    { sign: 1, reading: balanceAt(book, 'revolver_commitment', date) },
+    { sign: -1, reading: balanceAt(book, 'revolver_drawn', date) },
+    { sign: -1, reading: balanceAt(book, 'letters_of_credit', date, 'optional') },
+  ]);
+  return undrawn.kind === 'value' ? { ...undrawn, value: Decimal.max(ZERO, undrawn.value) } : undrawn;
 }

@@ -1,9 +1,8 @@
 import { monthsBefore } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { toSample } from '../money/toSample.ts';
-import { balanceAt, lastTwelveMonths, quarterFlow } from '../statements/flows.ts';
+import { balanceAt, lastTwelveMonths, quarterFlow, type Presence } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
-import { orNoneIfNeverCarried } from '../statements/optionalLine.ts';
 import type { Reading } from '../statements/reading.ts';
 import type { Statement } from '../statements/statement.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
@@ -22,7 +21,7 @@ export interface AccountsAt {
   readonly twelveMonths: (line: LineItemCode, back?: Back) => number | undefined;
   readonly quarter: (line: LineItemCode, back?: Back) => number | undefined;
   readonly balance: (line: LineItemCode, back?: Back) => number | undefined;
-  /** The same, nought for a line that the borrower never carried. */
+  /** The same, nought for a line that the borrower had never carried by then. */
   readonly optionalTwelveMonths: (line: LineItemCode, back?: Back) => number | undefined;
   readonly optionalQuarter: (line: LineItemCode, back?: Back) => number | undefined;
   readonly optionalBalance: (line: LineItemCode, back?: Back) => number | undefined;
@@ -46,29 +45,21 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
     for (const { statementId } of reading.inputs) usedIds.add(statementId);
     return toSample(reading.value);
   };
-  const readings = {
-    twelveMonths: (line: LineItemCode, back: Back) =>
-      lastTwelveMonths(book, line, monthsBefore(quarterEnd, back.months)),
-    quarter: (line: LineItemCode, back: Back) =>
-      quarterFlow(book, line, monthsBefore(quarterEnd, back.months)),
-    balance: (line: LineItemCode, back: Back) => balanceAt(book, line, monthsBefore(quarterEnd, back.months)),
-  };
-  const needed =
-    (read: (line: LineItemCode, back: Back) => Reading) =>
-    (line: LineItemCode, back: Back = NOW) =>
-      sample(read(line, back));
-  const optional =
-    (read: (line: LineItemCode, back: Back) => Reading) =>
-    (line: LineItemCode, back: Back = NOW) =>
-      sample(orNoneIfNeverCarried(book, line, read(line, back)));
+  const figure =
+    (
+      read: (book: StatementBook, line: LineItemCode, date: PlainDate, presence: Presence) => Reading,
+      presence: Presence,
+    ) =>
+    (line: LineItemCode, back: Back = NOW): number | undefined =>
+      sample(read(book, line, monthsBefore(quarterEnd, back.months), presence));
   return {
-    twelveMonths: needed(readings.twelveMonths),
-    quarter: needed(readings.quarter),
-    balance: needed(readings.balance),
-    optionalTwelveMonths: optional(readings.twelveMonths),
-    optionalQuarter: optional(readings.quarter),
-    optionalBalance: optional(readings.balance),
-    isMissing: (line) => readings.twelveMonths(line, NOW).kind === 'missing',
+    twelveMonths: figure(lastTwelveMonths, 'required'),
+    quarter: figure(quarterFlow, 'required'),
+    balance: figure(balanceAt, 'required'),
+    optionalTwelveMonths: figure(lastTwelveMonths, 'optional'),
+    optionalQuarter: figure(quarterFlow, 'optional'),
+    optionalBalance: figure(balanceAt, 'optional'),
+    isMissing: (line) => lastTwelveMonths(book, line, quarterEnd).kind === 'missing',
     sample,
     used: () => book.statements.filter(({ id }) => usedIds.has(id)),
   };

@@ -115,3 +115,26 @@ test('an annual reporter has days on the flows of the year', () => {
   expect(peer.daysOnYear).toBe(true);
   expect(peer.figures.revenueQuarter).toBe(peer.figures.revenue! / 4);
 });
+
+test('a borrower with goodwill and no balance sheet a year ago has made no acquisition for that', () => {
+  const young = buildBorrower(1, { quarters: 3 });
+  const statements = young.statements.map((statement) =>
+    statement.months === 0
+      ? { ...statement, amounts: { ...statement.amounts, goodwill: statement.amounts.total_assets! } }
+      : statement,
+  );
+  const peer = peerInputs({ ...young, statements }, LAST_QUARTER_END, AS_OF)!;
+  expect(peer).toMatchObject({ acquisitionInYear: false, acquisitionThisQuarter: false });
+});
+
+test('a forecast of another scope does not hide the accounts there are', () => {
+  const alone = buildBorrower(1, { given: { scope: 'stand-alone' } });
+  const forecast = {
+    ...alone.statements.at(-1)!,
+    id: -1,
+    scope: 'group' as const,
+    basis: 'forecast' as const,
+  };
+  const statements = [...alone.statements, forecast];
+  expect(peerInputsOfQuarters({ ...alone, statements }, AS_OF)).toHaveLength(8);
+});

@@ -136,9 +136,11 @@ const MATERIAL_ACQUISITION = 0.01;
 function acquisitionsOf(accounts: AccountsAt): { readonly inYear: boolean; readonly thisQuarter: boolean } {
   const assets = accounts.balance('total_assets', YEAR_AGO) ?? accounts.balance('total_assets') ?? 0;
   const isMaterial = (paid: number | undefined, back: Back): boolean => {
-    // A balance sheet without a row for goodwill had none: the first acquisition brings the row.
-    const goodwillRise = (accounts.balance('goodwill') ?? 0) - (accounts.balance('goodwill', back) ?? 0);
-    return Math.max(-(paid ?? 0), goodwillRise) > MATERIAL_ACQUISITION * assets;
+    const goodwillRise = ifAll(
+      { closing: accounts.optionalBalance('goodwill'), opening: accounts.optionalBalance('goodwill', back) },
+      ({ closing, opening }) => closing - opening,
+    );
+    return Math.max(-(paid ?? 0), goodwillRise ?? 0) > MATERIAL_ACQUISITION * assets;
   };
   const inYear = isMaterial(accounts.optionalTwelveMonths('acquisitions_paid'), YEAR_AGO);
   const quarter = accounts.optionalQuarter('acquisitions_paid');

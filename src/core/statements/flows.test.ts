@@ -65,6 +65,54 @@ describe('balances and exact periods', () => {
   });
 });
 
+describe('depreciation alone', () => {
+  const earlier = buildStatement('2024-12-31', 12, { depreciation: 3, amortisation: 0.7 });
+  const alone = buildStatement('2025-12-31', 12, { depreciation: 3 });
+
+  test('is all there is where amortisation was never carried', () => {
+    const book = bookOf([alone], 12);
+    expect(amount(flowOver(book, 'depreciation_and_amortisation', '2025-12-31', 12))).toBe('3');
+  });
+
+  test('is not all there is where amortisation was carried before: the blank is missing', () => {
+    const book = bookOf([earlier, alone], 12);
+    expect(flowOver(book, 'depreciation_and_amortisation', '2025-12-31', 12)).toEqual({
+      kind: 'missing',
+      missing: [{ line: 'depreciation_and_amortisation', periodEnd: '2025-12-31', months: 12 }],
+    });
+  });
+});
+
+describe('a line that many borrowers do not have', () => {
+  const yearsToDate = (lines: readonly (number | undefined)[]) =>
+    bookOf(
+      (['2024-09-30', '2024-12-31', '2025-09-30'] as const).map((end, k) =>
+        buildStatement(end, [9, 12, 9][k]!, { revenue: 100, interest_income: lines[k] }),
+      ),
+      12,
+    );
+  const over = (lines: readonly (number | undefined)[]) =>
+    amount(lastTwelveMonths(yearsToDate(lines), 'interest_income', '2025-09-30', 'optional'));
+
+  test('is nought where no statement ever carried it', () => {
+    expect(over([undefined, undefined, undefined])).toBe('0');
+  });
+
+  test('is none before the first statement that carries it', () => {
+    expect(over([undefined, undefined, 5])).toBe('5');
+  });
+
+  test('is missing where it was carried before and is left out', () => {
+    expect(over([4, 6, undefined])).toBe('missing');
+    expect(over([4, undefined, 5])).toBe('missing');
+  });
+
+  test('is no reason to make up a statement that is not there', () => {
+    const book = yearsToDate([undefined, undefined, 5]);
+    expect(lastTwelveMonths(book, 'interest_income', '2025-12-31', 'optional').kind).toBe('missing');
+  });
+});
+
 describe('a quarter', () => {
   const yearToDate = [
     buildStatement('2025-03-31', 3, { revenue: 20 }),
@@ -160,6 +208,16 @@ describe('twelve months', () => {
     expect(amount(lastTwelveMonths(bookOf([audited, ...quarterly(40)], 12), 'revenue', '2025-12-31'))).toBe(
       '100',
     );
+  });
+});
+
+describe('of several routes', () => {
+  test('the one that rests on better founded figures is taken', () => {
+    const year = buildStatement('2025-12-31', 12, { revenue: 100 });
+    const quarters = (['2025-03-31', '2025-06-30', '2025-09-30', '2025-12-31'] as const).map((end) =>
+      buildStatement(end, 3, { revenue: 20 }, { basis: 'audited' }),
+    );
+    expect(amount(lastTwelveMonths(bookOf([year, ...quarters], 12), 'revenue', '2025-12-31'))).toBe('80');
   });
 });
 

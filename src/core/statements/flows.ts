@@ -12,14 +12,27 @@ import { roundingTolerance } from './tolerance.ts';
 import { restatedAlone } from './versionMix.ts';
 
 /**
+ * Whether a blank may mean that there is none. Of an optional line, one that many borrowers do not have, there is
+ * none in a statement that leaves it out as long as the borrower never carried it; once it was carried a blank is
+ * missing, as it always is for a required line. Desk practice, no source.
+ */
+export type Presence = 'required' | 'optional';
+
+const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
+
+/**
  * The amount of a balance line on a day, of the version in force.
  *
  * Whole currency units. Missing names the statement or the line that is not there.
  *
  * @example balanceAt(book, 'cash', '2026-09-30').value // => 6000000
  */
-export const balanceAt = (book: StatementBook, line: LineItemCode, date: PlainDate): Reading =>
-  flowOver(book, line, date, 0);
+export const balanceAt = (
+  book: StatementBook,
+  line: LineItemCode,
+  date: PlainDate,
+  presence: Presence = 'required',
+): Reading => flowOver(book, line, date, 0, presence);
 
 /**
  * The amount of a line in the statement of exactly that period end and length; 0 months is a balance.
@@ -31,10 +44,12 @@ export function flowOver(
   line: LineItemCode,
   periodEnd: PlainDate,
   months: number,
+  presence: Presence = 'required',
 ): Reading {
   const statement = book.statementOf(periodEnd, months);
   if (!statement) return { kind: 'missing', missing: [{ line: 'statement', periodEnd, months }] };
-  const inputs = lineInputs(statement, line);
+  const inputs = lineInputs(book, statement, line);
+  if (!inputs && presence === 'optional' && !book.isCarriedBy(line, periodEnd)) return NONE;
   if (!inputs) return { kind: 'missing', missing: [{ line, periodEnd: statement.periodEnd, months }] };
   return { kind: 'value', value: sumOfInputs(inputs), inputs };
 }
@@ -52,15 +67,16 @@ export const flowOfMonths = (
   line: LineItemCode,
   periodEnd: PlainDate,
   months: number,
+  presence: Presence = 'required',
 ): Reading =>
-  book.kept(months, line, periodEnd, () => {
-    const direct = flowOver(book, line, periodEnd, months);
+  book.kept(`${months} months, ${presence}`, line, periodEnd, () => {
+    const direct = flowOver(book, line, periodEnd, months, presence);
     const intoYear = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
     if (direct.kind === 'value' || intoYear <= months) return direct;
-    const longer = flowOver(book, line, periodEnd, intoYear);
+    const longer = flowOver(book, line, periodEnd, intoYear, presence);
     if (longer.kind === 'missing') return nothingButStatement(direct) ? gapOf(direct, longer) : direct;
     const before = monthsBefore(periodEnd, months);
-    return difference(book, line, [periodEnd, intoYear], [before, intoYear - months]);
+    return difference(book, line, presence, [periodEnd, intoYear], [before, intoYear - months]);
   });
 
 /**
@@ -68,8 +84,12 @@ export const flowOfMonths = (
  *
  * @example quarterFlow(book, 'revenue', '2026-06-30').value // => 23000000
  */
-export const quarterFlow = (book: StatementBook, line: LineItemCode, quarterEnd: PlainDate): Reading =>
-  flowOfMonths(book, line, quarterEnd, 3);
+export const quarterFlow = (
+  book: StatementBook,
+  line: LineItemCode,
+  quarterEnd: PlainDate,
+  presence: Presence = 'required',
+): Reading => flowOfMonths(book, line, quarterEnd, 3, presence);
 
 /**
  * The flow of the twelve months up to a period end.
@@ -83,18 +103,21 @@ export const quarterFlow = (book: StatementBook, line: LineItemCode, quarterEnd:
  *
  * @example lastTwelveMonths(book, 'revenue', '2026-09-30').value // => 90000000
  */
-export const lastTwelveMonths = (book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading =>
-  book.kept('twelve months', line, periodEnd, () => {
-    const yearToDate = byYearToDate(book, line, periodEnd);
-    const quarters = byQuarters(book, line, periodEnd);
+export const lastTwelveMonths = (
+  book: StatementBook,
+  line: LineItemCode,
+  periodEnd: PlainDate,
+  presence: Presence = 'required',
+): Reading =>
+  book.kept(`twelve months, ${presence}`, line, periodEnd, () => {
+    const yearToDate = byYearToDate(book, line, periodEnd, presence);
+    const quarters = byQuarters(book, line, periodEnd, presence);
     const routes = [
-      { name: 'twelve-month statement', reading: flowOver(book, line, periodEnd, 12) },
+      { name: 'twelve-month statement', reading: flowOver(book, line, periodEnd, 12, presence) },
       { name: 'year to date', reading: yearToDate },
       { name: 'four quarters', reading: quarters },
     ];
-    const [first, ...others] = routes.flatMap(({ name, reading }) =>
-      reading.kind === 'value' ? [{ name, reading }] : [],
-    );
+    const [first, ...others] = bestFounded(book, routes);
     if (!first) {
       const refused = routes.find(({ reading }) => reading.kind === 'not-meaningful');
       return refused?.reading ?? shorterGap(yearToDate, quarters, periodEnd);
@@ -110,23 +133,48 @@ export const lastTwelveMonths = (book: StatementBook, line: LineItemCode, period
 
 type Value = Extract<Reading, { kind: 'value' }>;
 
-function byYearToDate(book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading {
+interface Route<R extends Reading> {
+  readonly name: string;
+  readonly reading: R;
+}
+
+/** The routes that lead to a value on the best basis there is, in their order; the others are superseded. */
+function bestFounded(book: StatementBook, routes: readonly Route<Reading>[]): readonly Route<Value>[] {
+  const given = routes.flatMap(({ name, reading }) =>
+    reading.kind === 'value' ? [{ name, reading, basis: bestBasis(book, reading.inputs) }] : [],
+  );
+  const best = Math.max(...given.map(({ basis }) => basis));
+  return given.filter(({ basis }) => basis === best);
+}
+
+function byYearToDate(
+  book: StatementBook,
+  line: LineItemCode,
+  periodEnd: PlainDate,
+  presence: Presence,
+): Reading {
   const months = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
-  const yearToDate = flowOver(book, line, periodEnd, months);
+  const yearToDate = flowOver(book, line, periodEnd, months, presence);
   if (months === 12) return yearToDate;
   const lastYearEnd = lastYearEndBefore(periodEnd, book.fiscalYearEndMonth);
-  const rest = difference(book, line, [lastYearEnd, 12], [monthsBefore(periodEnd, 12), months]);
+  const yearBefore = monthsBefore(periodEnd, 12);
+  const rest = difference(book, line, presence, [lastYearEnd, 12], [yearBefore, months]);
   return sumOfReadings([
     { sign: 1, reading: yearToDate },
     { sign: 1, reading: rest },
   ]);
 }
 
-const byQuarters = (book: StatementBook, line: LineItemCode, periodEnd: PlainDate): Reading =>
+const byQuarters = (
+  book: StatementBook,
+  line: LineItemCode,
+  periodEnd: PlainDate,
+  presence: Presence,
+): Reading =>
   sumOfReadings(
     [9, 6, 3, 0].map((months) => ({
       sign: 1 as const,
-      reading: quarterFlow(book, line, monthsBefore(periodEnd, months)),
+      reading: quarterFlow(book, line, monthsBefore(periodEnd, months), presence),
     })),
   );
 
@@ -134,12 +182,13 @@ const byQuarters = (book: StatementBook, line: LineItemCode, periodEnd: PlainDat
 function difference(
   book: StatementBook,
   line: LineItemCode,
+  presence: Presence,
   longer: readonly [PlainDate, number],
   shorter: readonly [PlainDate, number],
 ): Reading {
   const sum = sumOfReadings([
-    { sign: 1, reading: flowOver(book, line, ...longer) },
-    { sign: -1, reading: flowOver(book, line, ...shorter) },
+    { sign: 1, reading: flowOver(book, line, ...longer, presence) },
+    { sign: -1, reading: flowOver(book, line, ...shorter, presence) },
   ]);
   if (sum.kind !== 'value') return sum;
   const restated = restatedAlone(book, line, longer, shorter) ?? restatedAlone(book, line, shorter, longer);
@@ -148,11 +197,11 @@ function difference(
 
 function contradicts(book: StatementBook, one: Value, other: Value): boolean {
   if (one.value.eq(other.value)) return false;
-  const [first, second] = [statementsBehind(book, one.inputs), statementsBehind(book, other.inputs)];
-  if (bestBasis(first) !== bestBasis(second)) return false;
+  const inputs = [...one.inputs, ...other.inputs];
+  const units = statementsBehind(book, inputs).map(({ roundingUnit }) => roundingUnit);
   const tolerance = roundingTolerance({
-    roundingUnit: Decimal.max(...[...first, ...second].map(({ roundingUnit }) => roundingUnit)),
-    figures: one.inputs.length + other.inputs.length,
+    roundingUnit: Decimal.max(0, ...units),
+    figures: inputs.length,
     reference: revenueBehind(book, one.inputs) ?? one.value,
   });
   return one.value.minus(other.value).abs().gt(tolerance);
@@ -175,8 +224,8 @@ function revenueBehind(book: StatementBook, inputs: readonly InputUsed[]): Decim
 const statementsBehind = (book: StatementBook, inputs: readonly InputUsed[]): Statement[] =>
   inputs.flatMap(({ statementId }) => book.statementById(statementId) ?? []);
 
-const bestBasis = (statements: readonly Statement[]): number =>
-  Math.max(...statements.map(({ basis }) => basisRank(basis)));
+const bestBasis = (book: StatementBook, inputs: readonly InputUsed[]): number =>
+  Math.max(...statementsBehind(book, inputs).map(({ basis }) => basisRank(basis)));
 
 /** What is missing from twelve months, by the route that the borrower's latest statement belongs to. */
 function shorterGap(yearToDate: Reading, quarters: Reading, periodEnd: PlainDate): Reading {

@@ -1,22 +1,27 @@
 import type { LineItemCode } from './lineItems.ts';
 import type { InputUsed } from './reading.ts';
 import type { Statement } from './statement.ts';
+import type { StatementBook } from './statementBook.ts';
 
 /**
  * The cells of one statement that make up a line, or null where the line is not there. Blank is not zero.
  *
  * `depreciation_and_amortisation` is the one line that sheets give either whole or in parts: depreciation and
- * amortisation where both are there, else the sum as the sheet gives it, else depreciation alone (a sheet without
- * a row for amortisation). It is put together here and nowhere else.
+ * amortisation where both are there, else the sum as the sheet gives it, else depreciation alone, as
+ * long as the borrower has shown no amortisation. It is put together here and nowhere else.
  *
- * @example lineInputs(statements[0], 'revenue')?.length // => 1
+ * @example lineInputs(book, statements[0], 'revenue')?.length // => 1
  */
-export function lineInputs(statement: Statement, line: LineItemCode): readonly InputUsed[] | null {
+export function lineInputs(
+  book: StatementBook,
+  statement: Statement,
+  line: LineItemCode,
+): readonly InputUsed[] | null {
   if (line !== 'depreciation_and_amortisation') return cells(statement, [line]);
   return (
     cells(statement, ['depreciation', 'amortisation']) ??
     cells(statement, ['depreciation_and_amortisation']) ??
-    cells(statement, ['depreciation'])
+    (book.isCarriedBy('amortisation', statement.periodEnd) ? null : cells(statement, ['depreciation']))
   );
 }
 

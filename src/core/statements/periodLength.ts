@@ -1,8 +1,13 @@
 /** Flows of odd length set against a year: notes and agreed formulas, never a tested figure of their own accord. */
+import { daysBetween } from '../calendar/plainDate.ts';
 import type { Decimal } from '../money/decimal.ts';
+import type { InputUsed } from './reading.ts';
+import type { Statement } from './statement.ts';
 
 const DAYS_OF_52_WEEKS = 364;
 const WEEKS_OF_LONG_YEAR = 53;
+/** A calendar year's, in a leap year; years of 53 weeks have 371. */
+export const DAYS_OF_LONGEST_YEAR = 366;
 
 /**
  * A flow of some months set to a year, only where the agreement provides for it. Source: methods.md A3.
@@ -43,3 +48,28 @@ export function lengthOfQuarters(quarterWeeks: readonly number[]): LengthInWeeks
   const weeks = quarterWeeks.reduce((sum, each) => sum + each, 0);
   return { weeks, days: weeks * 7, flag: weeks === WEEKS_OF_LONG_YEAR ? '53-week LTM' : null };
 }
+
+/**
+ * The days that the flows of a result span, each counted as it enters (twelve months take the year to date a year
+ * earlier away); null where nothing flows. Source: methods.md A3.
+ *
+ * @example daysOfFlow(statements, test.inputs) // => 365
+ */
+export function daysOfFlow(statements: readonly Statement[], inputs: readonly InputUsed[]): number | null {
+  const line = inputs.find(({ months }) => months > 0)?.line;
+  if (line === undefined) return null;
+  const lengths = new Map(
+    statements.map(({ id, periodStart, periodEnd }) => [id, daysBetween(periodStart, periodEnd) + 1]),
+  );
+  return inputs
+    .filter((input) => input.line === line)
+    .reduce((days, { statementId, sign }) => days + sign * (lengths.get(statementId) ?? 0), 0);
+}
+
+/**
+ * Days in words, as weeks where they are whole ones.
+ *
+ * @example lengthInWords(371) // => '53 weeks (371 days)'
+ */
+export const lengthInWords = (days: number): string =>
+  days % 7 === 0 ? `${days / 7} weeks (${days} days)` : `${days} days`;

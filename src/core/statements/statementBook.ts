@@ -1,5 +1,4 @@
 /** A borrower's statements laid out by period, so that a figure is found without searching for it. */
-import type { BorrowerInputs } from '../borrowerInputs.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import {
@@ -31,8 +30,8 @@ export interface StatementBook {
   readonly versionsOf: (periodEnd: PlainDate, months: number) => readonly Statement[];
   /** The version of one period that is in force; null where there is none. */
   readonly statementOf: (periodEnd: PlainDate, months: number) => Statement | null;
-  /** Whether any statement carries the line with an amount other than nought. */
-  readonly carries: (line: LineItemCode) => boolean;
+  /** Whether a statement of that period end or an earlier one carries the line with an amount other than nought. */
+  readonly isCarriedBy: (line: LineItemCode, periodEnd: PlainDate) => boolean;
   /** Whether a later period was out already when this version came: then it restates, before that it closes the books. */
   readonly isRestating: (version: Statement) => boolean;
   /** What `read` gives for a line on a day by one route, kept. */
@@ -64,7 +63,10 @@ export type Books = Readonly<Record<StatementScope, StatementBook>>;
  * @example openBooks({ statements, fiscalYearEndMonth: 12 }, '2026-11-30')['stand-alone'].statements // => []
  */
 export function openBooks(
-  { statements, fiscalYearEndMonth }: Pick<BorrowerInputs, 'statements' | 'fiscalYearEndMonth'>,
+  {
+    statements,
+    fiscalYearEndMonth,
+  }: { readonly statements: readonly Statement[]; readonly fiscalYearEndMonth: number },
   asOf: PlainDate,
 ): Books {
   const bookFor = (scope: StatementScope): StatementBook =>
@@ -83,6 +85,7 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
   const versionsOf = (periodEnd: PlainDate, months: number) =>
     versions.get(months)?.get(reportingMonthEnd(periodEnd));
   const current = inForceByPeriodEnd(versions);
+  const firstCarried = remembering((line: LineItemCode) => earliestWith(statements, line));
   return {
     fiscalYearEndMonth,
     statements,
@@ -93,12 +96,10 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
       const ofPeriod = versionsOf(periodEnd, months);
       return ofPeriod ? inForce(ofPeriod) : null;
     },
-    carries: remembering((line: LineItemCode) =>
-      statements.some(({ amounts }) => {
-        const amount = amounts[line];
-        return amount !== undefined && !amount.isZero();
-      }),
-    ),
+    isCarriedBy: (line, periodEnd) => {
+      const first = firstCarried(line);
+      return first !== null && first <= reportingMonthEnd(periodEnd);
+    },
     isRestating: remembering((version: Statement) =>
       statements.some((other) => isLaterPeriodKnownWith(version, other)),
     ),
@@ -122,6 +123,16 @@ function within<Key, Value extends object>(map: Map<Key, Value>, key: Key, make:
   const made = make();
   map.set(key, made);
   return made;
+}
+
+function earliestWith(statements: readonly Statement[], line: LineItemCode): PlainDate | null {
+  let earliest: PlainDate | null = null;
+  for (const { amounts, periodEnd } of statements) {
+    if (amounts[line]?.isZero() ?? true) continue;
+    const end = reportingMonthEnd(periodEnd);
+    if (earliest === null || end < earliest) earliest = end;
+  }
+  return earliest;
 }
 
 const isLaterPeriodKnownWith = (version: Statement, other: Statement): boolean =>

@@ -24,7 +24,7 @@ export function restatedAlone(
     return null;
   if (!book.isRestating(current)) return null;
   const before = versionBefore(book, current);
-  const [now, then] = [lineInputs(current, line), before && lineInputs(before, line)];
+  const [now, then] = [lineInputs(book, current, line), before && lineInputs(book, before, line)];
   if (now && then && sumOfInputs(now).eq(sumOfInputs(then))) return null;
   return `${line} of the ${current.months} months to ${current.periodEnd} was restated on ${current.receivedOn}, the ${unchanged.months} months to ${unchanged.periodEnd} were not: the two versions are not mixed`;
 }
