@@ -73,6 +73,12 @@ test('the smallest headroom is over the latest live tests; later levels are kept
   expect(ahead?.mayFall.toFixed(4)).toBe('-0.0615');
 });
 
+test('a first period that ends a few days after its month end is tested on the month end', () => {
+  const late = buildYear('2025-01-03', { ebitda: 12, debt: 30, cash: 0 });
+  const { tests } = assess({ ...inputs, statements: late }, nobody, policy, asOf);
+  expect(tests[0]).toMatchObject({ testDate: '2024-12-31', outcome: 'met' });
+});
+
 test('the same arguments give the same answer', () => {
   expect(assess(inputs, nobody, policy, asOf)).toEqual(assess(inputs, nobody, policy, asOf));
 });

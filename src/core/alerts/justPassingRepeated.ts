@@ -58,7 +58,8 @@ const ORDINALS = [
 function countInWords({ inBand, ofLast, run }: JustPassing): string {
   const count = `${inBand} of the last ${ofLast}`;
   if (run < 2) return `${count} tests just passing.`;
-  return `${ORDINALS[run] ?? `${run}th`} test in a row just passing, ${count}.`;
+  const ordinal = ORDINALS[run];
+  return `${ordinal ? `${ordinal} test` : `${run} tests`} in a row just passing, ${count}.`;
 }
 
 function wouldChange({ measure, operator, level }: CovenantTest, { justPassingBand: band }: Policy): string {

@@ -51,6 +51,16 @@ describe('test not met', () => {
     ]);
   });
 
+  test('at a level that has to be passed, or by rounding alone, says the level and no amount to find', () => {
+    const strict = { ...net, operator: '<' as const };
+    expect(find(testNotMet, strict, { ebitda: 12, debt: 42 })).toMatchObject([
+      { wouldChange: 'Net leverage less than 3.50x, as the agreement compares.' },
+    ]);
+    expect(find(testNotMet, { ...strict, roundingPlaces: 2 }, { ebitda: 12, debt: 41.99 })).toMatchObject([
+      { wouldChange: 'Net leverage less than 3.50x, as the agreement compares.' },
+    ]);
+  });
+
   test('never prints what the product does not say', () => {
     const [finding] = find(testNotMet, net, { ebitda: 12, debt: 45 });
     expect(JSON.stringify(finding)).not.toMatch(/breach|default|fraud/i);
@@ -69,6 +79,12 @@ describe('thin headroom', () => {
     ]);
     expect(find(thinHeadroom, net, { ebitda: 10_000_000, debt: 31_501_000 })).toMatchObject([
       { sentence: expect.stringContaining('may fall 9.997\u00a0%') as string },
+    ]);
+  });
+
+  test('says so where only the rounding of the agreement makes it met', () => {
+    expect(find(thinHeadroom, { ...net, roundingPlaces: 2 }, { ebitda: 12, debt: 42.048 })).toMatchObject([
+      { sentence: 'Net leverage 3.504x, at most 3.50x: met only as the agreement rounds.' },
     ]);
   });
 
@@ -156,6 +172,20 @@ describe('just passing, repeated', () => {
         wouldChange: 'Next tests at 3.43x or less, 2\u00a0% from the level.',
       },
     ]);
+  });
+
+  test('counts on after the tenth in a row', () => {
+    const pattern = { covenantId: 1, inBand: 6, ofLast: 6, run: 22, testDates: dates };
+    const context = {
+      ...buildContext(
+        buildInputs({ covenants: [yearly], statements: buildYear(on, { ebitda: 10, debt: 34.5, cash: 0 }) }),
+        asOf,
+      ),
+      patterns: [pattern],
+    };
+    expect(justPassingRepeated(context)[0]?.sentence).toMatch(
+      /22 tests in a row just passing, 6 of the last 6\.$/,
+    );
   });
 
   test('needs three: two of three are no alert', () => {

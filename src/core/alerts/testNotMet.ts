@@ -2,7 +2,8 @@ import { isNotMet, type CovenantTest } from '../covenants/covenantTest.ts';
 import type { Covenant } from '../covenants/covenant.ts';
 import { formatDay } from '../calendar/printDay.ts';
 import { ZERO } from '../money/decimal.ts';
-import { testInWords } from '../covenants/wording.ts';
+import { levelInWords, OPERATOR_WORDS, testInWords } from '../covenants/wording.ts';
+import { MEASURES } from '../measures/index.ts';
 import { amountThatLeaves, insteadOf, orOtherSide } from './neededAmount.ts';
 import { liveTests, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
@@ -34,6 +35,9 @@ function sentenceOf(covenant: Covenant, test: CovenantTest): string {
 }
 
 function wouldChange(test: CovenantTest): string {
-  const needed = test.level && amountThatLeaves(test, test.level, ZERO);
+  const { level, operator, measure, headroom } = test;
+  if (level && headroom.moneyLeft?.gte(0))
+    return `${MEASURES[measure].label} ${OPERATOR_WORDS[operator]} ${levelInWords(measure, level)}, as the agreement compares.`;
+  const needed = level && amountThatLeaves(test, level, ZERO);
   return needed ? `${insteadOf(test, needed)}${orOtherSide(test)}.` : 'A level above nought.';
 }

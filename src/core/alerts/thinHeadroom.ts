@@ -27,6 +27,7 @@ export const thinHeadroom: AlertRule = (context) =>
 
 function sentenceOf(test: CovenantTest, { thinBelow }: Policy): string {
   const { mayFall, moneyLeft } = test.headroom;
+  if (mayFall?.lt(0)) return `${testInWords(test)}: met only as the agreement rounds.`;
   const share = mayFall ? formatShare(mayFall, { beside: thinBelow }) : 'nothing';
   const money = moneyLeft ? ` (${formatMoney(moneyLeft)})` : '';
   return `${testInWords(test)}. ${MEASURES[test.measure].words.subject} may fall ${share}${money}.`;

@@ -55,6 +55,28 @@ describe('net leverage from statements', () => {
   });
 });
 
+test('a debt line that the borrower takes up later changes no test before it', () => {
+  const statements = [
+    ...buildYear(on, { ebitda: 12, debt: 40, cash: 6 }),
+    buildStatement(
+      '2026-03-31',
+      0,
+      { senior_debt: 40, junior_debt: 8, cash: 6 },
+      { receivedOn: '2026-03-31' },
+    ),
+  ];
+  expect(run(buildCovenant(), statements).outcome).toBe('met');
+});
+
+test('figures of two accounting frameworks, or of 53 weeks, are tested and marked', () => {
+  const [year, sheet] = buildYear(on, { ebitda: 12, debt: 40, cash: 6 }) as [Statement, Statement];
+  const underOther = [year, { ...sheet, framework: 'US GAAP' }];
+  expect(run(buildCovenant(), underOther).reason).toBe('rests on two accounting frameworks: IFRS, US GAAP');
+  const long = { ...year, periodStart: '2024-12-26' as const };
+  expect(run(buildCovenant(), [long, sheet]).reason).toBe('rests on 53 weeks (371 days)');
+  expect(run(buildCovenant(), [{ ...year, periodStart: '2024-12-31' as const }, sheet]).reason).toBeNull();
+});
+
 describe('outcomes that are no result', () => {
   test('figures that have not come are awaited, never met', () => {
     expect(run(buildCovenant(), []).outcome).toBe('awaiting figures');

@@ -2,6 +2,7 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { MEASURES } from '../measures/index.ts';
 import type { Policy } from '../policy.ts';
+import { daysOfFlow, DAYS_OF_LONGEST_YEAR, lengthInWords } from '../statements/periodLength.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
@@ -102,14 +103,25 @@ function resultSaid(
 const hasResult = ({ outcome }: Held): boolean => isMet(outcome) || isNotMet(outcome);
 
 /** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
-function remarks({ roundingPlaces }: Covenant, held: Held, { statements }: Figures): string | null {
-  const isUntied = hasResult(held) && statements.some(({ tie }) => tie === 'does-not-tie');
+function remarks({ roundingPlaces }: Covenant, held: Held, figures: Figures): string | null {
   const said = [
     held.reason,
     held.roundingDecides ? `at the ${roundingPlaces} decimal places that the agreement rounds to` : null,
-    isUntied ? 'rests on figures that do not tie' : null,
+    ...(hasResult(held) ? restsOnWhat(figures) : []),
   ].filter((remark) => remark !== null);
   return said.length > 0 ? said.join('; ') : null;
+}
+
+function restsOnWhat({ statements, inputs }: Figures): readonly (string | null)[] {
+  const frameworks = [...new Set(statements.map(({ framework }) => framework))].sort();
+  const days = daysOfFlow(statements, inputs);
+  return [
+    statements.some(({ tie }) => tie === 'does-not-tie') ? 'rests on figures that do not tie' : null,
+    frameworks.length > 1
+      ? `rests on ${frameworks.length === 2 ? 'two' : frameworks.length} accounting frameworks: ${frameworks.join(', ')}`
+      : null,
+    days !== null && days > DAYS_OF_LONGEST_YEAR ? `rests on ${lengthInWords(days)}` : null,
+  ];
 }
 
 function nextLevelOf({ levels }: Covenant, testDate: PlainDate): CovenantTest['nextLevel'] {

@@ -36,6 +36,18 @@ describe('what is left', () => {
     );
   });
 
+  test('the outcome decides, where rounding or a strict operator puts it against the unrounded figure', () => {
+    expect(left('net-leverage', 'met, thin', headroom('-0.001', '-12000'))).toBe(
+      'Nothing: met only as the agreement rounds',
+    );
+    expect(left('net-leverage', 'not met', headroom('0.0005', '6000'))).toBe(
+      'Nothing: not met as the agreement rounds',
+    );
+    expect(left('net-leverage', 'not met', headroom('0', '0'))).toBe(
+      'Nothing: at its level, which is not enough',
+    );
+  });
+
   test('where a figure has no meaning the reason stands, never a number', () => {
     expect(
       left(

@@ -1,6 +1,6 @@
 import { MEASURES } from '../measures/index.ts';
 import { formatMoney, formatShare } from '../money/print.ts';
-import type { CovenantTest } from './covenantTest.ts';
+import { isMet, isNotMet, type CovenantTest } from './covenantTest.ts';
 
 /**
  * What is left before a test is not met, in the words of the covenant table: money first, then the share. Where a
@@ -23,8 +23,13 @@ export function whatIsLeft(test: Pick<CovenantTest, 'measure' | 'outcome' | 'rea
     default:
   }
   if (moneyLeft === null) return test.reason ?? 'Ratio has no meaning';
+  if (isMet(test.outcome) && moneyLeft.lt(0)) return 'Nothing: met only as the agreement rounds';
+  if (isNotMet(test.outcome) && moneyLeft.gte(0))
+    return moneyLeft.isZero()
+      ? 'Nothing: at its level, which is not enough'
+      : 'Nothing: not met as the agreement rounds';
   const share = mayFall === null ? '' : ` (${formatShare(mayFall.abs())})`;
-  return moneyLeft.isNegative()
+  return moneyLeft.lt(0)
     ? `${subject} ${formatMoney(moneyLeft.abs())} short${share}`
     : `${subject} may fall ${formatMoney(moneyLeft)}${share}`;
 }
