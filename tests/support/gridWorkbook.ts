@@ -1,7 +1,13 @@
 /** Workbooks written cell by cell: each sheet is rows of values, as a borrower would have typed them. */
 import ExcelJS from 'exceljs';
 
-export type Typed = string | number | null | Date | { readonly formula: string; readonly result?: number } | { readonly error: string };
+export type Typed =
+  | string
+  | number
+  | null
+  | Date
+  | { readonly formula: string; readonly result?: number }
+  | { readonly error: string };
 export type TypedSheets = Readonly<Record<string, readonly (readonly Typed[])[]>>;
 
 export async function gridWorkbook(
