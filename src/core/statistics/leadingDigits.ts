@@ -23,7 +23,7 @@ export interface DigitTest {
   readonly method: 'Benford';
 }
 
-export const FEWEST_FOR_MEAN_DEVIATION = 1_000;
+const FEWEST_FOR_MEAN_DEVIATION = 1_000;
 
 /**
  * Cut-offs of Nigrini (2012), Benford's Law. For the second digit published programs differ in the last: .012 is the

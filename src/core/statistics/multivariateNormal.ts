@@ -34,8 +34,22 @@ export function multivariateNormalCdf(
 }
 
 function bivariate(a: number, b: number, correlation: number): number {
-  const grown = integral((angle) => bivariateSlope(a, b, angle), 0, Math.asin(correlation));
+  const grown = overCorrelations((angle) => bivariateSlope(a, b, angle), correlation);
   return within01(normalCdf(a) * normalCdf(b) + grown);
+}
+
+const HALVINGS = 24;
+
+/**
+ * Integral over the arc sine of a correlation from nought. Where limits are all but equal and the matrix all but
+ * singular the slope turns within a hair of its end: stretches become ever shorter towards it.
+ */
+function overCorrelations(slope: (angle: number) => number, correlation: number): number {
+  const end = Math.asin(correlation);
+  const edge = (k: number): number => end * (1 - 2 ** -k);
+  let sum = integral(slope, edge(HALVINGS), end);
+  for (let k = 0; k < HALVINGS; k += 1) sum += integral(slope, edge(k), edge(k + 1));
+  return sum;
 }
 
 /** How the probability grows with the arc sine of the correlation: the density times the cosine. */
@@ -58,8 +72,10 @@ function trivariate(
   return within01(apart + grown(a, b, c, ab, ac, bc) + grown(a, c, b, ac, ab, bc));
 }
 
-/** A determinant below this is nought but for rounding: the third variable follows from the two others. */
-const ROUNDING = 1e-14;
+/** A variance below this is nought but for rounding: the third variable follows from the two others. */
+const ROUNDING = 1e-13;
+
+const step = (distance: number): number => (distance > 0 ? 1 : distance < 0 ? 0 : 0.5);
 
 /** What the correlation of the first two adds, while that of the first and the third grows alongside from nought. */
 function grown(
@@ -74,15 +90,15 @@ function grown(
   const slope = (angle: number): number => {
     const r = Math.sin(angle);
     const s = (firstThird * r) / correlation;
+    // The third given the second, then what the first adds: differences of near-equal products would lose their digits.
+    const added = s - secondThird * r;
     const cosineSquared = Math.cos(angle) ** 2;
-    const given = first * (s - secondThird * r) + second * (secondThird - s * r);
-    const determinant = 1 - r * r - s * s - secondThird ** 2 + 2 * r * s * secondThird;
-    const deviation = determinant < ROUNDING ? 0 : Math.sqrt(determinant * cosineSquared);
-    const distance = third * cosineSquared - given;
-    const below = deviation > 0 ? normalCdf(distance / deviation) : distance > 0 ? 1 : distance < 0 ? 0 : 0.5;
+    const mean = secondThird * second + (added * (first - r * second)) / cosineSquared;
+    const variance = 1 - secondThird ** 2 - added ** 2 / cosineSquared;
+    const below = variance > ROUNDING ? normalCdf((third - mean) / Math.sqrt(variance)) : step(third - mean);
     return bivariateSlope(first, second, angle) * below;
   };
-  return integral(slope, 0, Math.asin(correlation));
+  return overCorrelations(slope, correlation);
 }
 
 const within01 = (probability: number): number => Math.min(1, Math.max(0, probability));

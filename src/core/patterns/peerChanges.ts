@@ -1,0 +1,107 @@
+import { linearPercentile } from '../statistics/percentile.ts';
+import { groupedBy } from './groupedBy.ts';
+import type { RatioChange } from './peerDraws.ts';
+
+/** A ratio at one quarter end; `hasEarnings` is false where EBITDA is zero or below and the ratio has no meaning. */
+export interface RatioPoint {
+  readonly ratio: number;
+  readonly hasEarnings: boolean;
+}
+
+/** One borrower's ratio quarter by quarter, oldest first, all borrowers ending with the same quarter. */
+export interface RatioHistory {
+  readonly borrowerId: number;
+  readonly sector: string;
+  /** By which it is put into a third of its sector; null where it has none that means anything. */
+  readonly leverage: number | null;
+  readonly points: readonly (RatioPoint | null)[];
+}
+
+/** The changes of one peer group, those of each member kept apart so that nobody is compared with itself. */
+export interface PeerCell {
+  /** Ascending, without the outer hundredths. */
+  readonly changes: Float64Array;
+  readonly earningsGone: number;
+  readonly own: ReadonlyMap<number, readonly RatioChange[]>;
+}
+
+export interface PeerChanges {
+  readonly horizonQuarters: number;
+  readonly cells: ReadonlyMap<string, PeerCell>;
+  readonly book: PeerCell;
+  readonly cellOf: ReadonlyMap<number, string>;
+}
+
+/** Changes that end in these last quarters count. */
+const QUARTERS = 8;
+const TRUNCATED_SHARE = 0.01;
+
+/**
+ * How the ratios of the book changed over a horizon, by sector and by third of leverage within it.
+ *
+ * A change over h quarters is taken over h quarters, never compounded from single ones: twelve-month figures overlap.
+ * Within a group the outer hundredths are left out, as in the published procedure; changes to no earnings stay.
+ * Source: methods.md Part C 2.2 c.
+ *
+ * @example peerChanges([], 1).book.earningsGone // => 0
+ */
+export function peerChanges(histories: readonly RatioHistory[], horizonQuarters: number): PeerChanges {
+  const cellOf = thirdsOfLeverage(histories);
+  const changes = new Map(
+    histories.map((history) => [history.borrowerId, changesOf(history.points, horizonQuarters)]),
+  );
+  const cellWith = (members: readonly RatioHistory[]): PeerCell =>
+    peerCell(members.map(({ borrowerId }) => [borrowerId, changes.get(borrowerId)!]));
+  const placed = histories.filter(({ borrowerId }) => cellOf.has(borrowerId));
+  const byCell = groupedBy(placed, ({ borrowerId }) => cellOf.get(borrowerId)!);
+  return {
+    horizonQuarters,
+    cells: new Map([...byCell].map(([cell, members]) => [cell, cellWith(members)])),
+    book: cellWith(histories),
+    cellOf,
+  };
+}
+
+function thirdsOfLeverage(histories: readonly RatioHistory[]): ReadonlyMap<number, string> {
+  const cellOf = new Map<number, string>();
+  for (const [sector, members] of groupedBy(histories, (history) => history.sector)) {
+    const withLeverage = members.filter(({ leverage }) => leverage !== null);
+    if (withLeverage.length === 0) continue;
+    const sorted = Float64Array.from(withLeverage, ({ leverage }) => leverage!).sort();
+    const [lower, upper] = [linearPercentile(sorted, 1 / 3), linearPercentile(sorted, 2 / 3)];
+    for (const { borrowerId, leverage } of withLeverage) {
+      const third = leverage! <= lower ? 1 : leverage! <= upper ? 2 : 3;
+      cellOf.set(borrowerId, `${sector}, third ${third}`);
+    }
+  }
+  return cellOf;
+}
+
+function changesOf(points: readonly (RatioPoint | null)[], horizon: number): readonly RatioChange[] {
+  const changes: RatioChange[] = [];
+  for (let end = Math.max(horizon, points.length - QUARTERS); end < points.length; end += 1) {
+    const before = points[end - horizon];
+    const after = points[end];
+    if (!before || !after || !before.hasEarnings || !(before.ratio > 0)) continue;
+    changes.push(after.hasEarnings ? after.ratio / before.ratio : 'earnings gone');
+  }
+  return changes;
+}
+
+function peerCell(members: readonly (readonly [number, readonly RatioChange[]])[]): PeerCell {
+  const all = members.flatMap(([, changes]) => changes);
+  const sorted = Float64Array.from(all.filter((change) => change !== 'earnings gone')).sort();
+  const isKept = withinOuterHundredths(sorted);
+  const own = members.map(
+    ([borrowerId, changes]) =>
+      [borrowerId, changes.filter((change) => change === 'earnings gone' || isKept(change))] as const,
+  );
+  return { changes: sorted.filter(isKept), earningsGone: all.length - sorted.length, own: new Map(own) };
+}
+
+function withinOuterHundredths(sorted: Float64Array): (change: number) => boolean {
+  if (sorted.length === 0) return () => false;
+  const low = linearPercentile(sorted, TRUNCATED_SHARE);
+  const high = linearPercentile(sorted, 1 - TRUNCATED_SHARE);
+  return (change) => change >= low && change <= high;
+}
