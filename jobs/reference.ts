@@ -29,17 +29,11 @@ function report(results: readonly Checked[], isPrinting: boolean): void {
     if (result.outcome === 'wrong')
       for (const { id, key, expected, got } of result.mismatches)
         console.log(`${id} ${key} ${JSON.stringify(expected)} ${JSON.stringify(got) ?? 'nothing'}`);
-  const waiting = new Map<string, number>();
-  for (const result of results)
-    if (result.outcome === 'later') waiting.set(result.topic, (waiting.get(result.topic) ?? 0) + 1);
-  for (const [topic, count] of waiting) console.log(`later: ${topic} (${count})`);
   const count = (outcome: Checked['outcome']) => results.filter((each) => each.outcome === outcome).length;
   console.log(`${count('right')} right, ${count('wrong')} wrong`);
   if (count('wrong') > 0) process.exitCode = 1;
 }
 
 function computedValues(results: readonly Checked[]): Record<string, unknown> {
-  return Object.fromEntries(
-    results.flatMap((each) => (each.outcome === 'later' ? [] : [[each.id, each.got]])),
-  );
+  return Object.fromEntries(results.map(({ id, got }) => [id, got]));
 }

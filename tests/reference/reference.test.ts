@@ -1,8 +1,7 @@
 /** Every reference vector that the core reaches, one test each, with its source in the title. */
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
-import { checkFile, checkVector, isBuilt } from '../../jobs/reference/checkFile.ts';
-import { later } from '../../jobs/reference/later.ts';
+import { checkFile, checkVector } from '../../jobs/reference/checkFile.ts';
 import { readReferenceFile } from '../../jobs/reference/vectorFile.ts';
 
 const folder = new URL('.', import.meta.url);
@@ -16,31 +15,24 @@ describe.each(names)('%s', (name) => {
   const content = contentOf(name);
   const reference = readReferenceFile(content);
 
-  if (reference.kind === 'vectors') {
-    const built = reference.file.vectors.filter(({ topic }) => isBuilt(topic));
-    if (built.length > 0)
-      test.each(built)('$id, $topic ($source)', (vector) => {
-        expect(wrongOf(checkVector(vector))).toEqual([]);
-      });
-    test('has no topic that is neither built nor on the dated list', () => {
-      const unknown = reference.file.vectors.filter(({ topic }) => !isBuilt(topic) && !later.has(topic));
-      expect(unknown.map(({ id }) => id)).toEqual([]);
+  if (reference.kind === 'vectors')
+    test.each(reference.file.vectors)('$id, $topic ($source)', (vector) => {
+      expect(wrongOf(checkVector(vector))).toEqual([]);
     });
+  else {
+    const checked = new Map(checkFile(content).map((each) => [each.id, each]));
+    const members =
+      reference.kind === 'quality book'
+        ? reference.file.firms.map(({ firm, expected }) => ({ member: String(firm), expected }))
+        : reference.file.borrowers.map(({ borrower, expected }) => ({ member: String(borrower), expected }));
+    test.each(members.filter(({ expected }) => expected))(
+      `$member (${reference.file.basis})`,
+      ({ member }) => {
+        const result = checked.get(member);
+        expect(result?.outcome === 'wrong' ? result.mismatches : result?.outcome).toBe('right');
+      },
+    );
   }
-
-  if (reference.kind === 'quality book') {
-    const checked = checkFile(content);
-    const expected = reference.file.firms.filter((firm) => firm.expected);
-    test.each(expected)(`firm $firm (${reference.file.basis})`, ({ firm }) => {
-      const result = checked.find(({ id }) => id === String(firm));
-      expect(result?.outcome === 'wrong' ? result.mismatches : result?.outcome).toBe('right');
-    });
-  }
-
-  if (reference.kind === 'pattern book')
-    test('waits on the dated list', () => {
-      expect(later.has('pattern book')).toBe(true);
-    });
 });
 
 describe('the comparison', () => {
@@ -68,11 +60,6 @@ describe('the comparison', () => {
       { ...vector, inputs: { ...vector.inputs, unheard_of: 1 } },
     ];
     expect(wrongs.map((each) => checkVector(each).outcome)).toEqual(wrongs.map(() => 'wrong'));
-  });
-
-  test('counts a topic on the dated list apart, and none of those is built', () => {
-    expect(checkVector({ ...vector, topic: 'mccrary' }).outcome).toBe('later');
-    expect([...later].filter(isBuilt)).toEqual([]);
   });
 
   test('refuses a file that is none of the known kinds', () => {
