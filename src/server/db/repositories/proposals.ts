@@ -33,11 +33,7 @@ const TABLES = `proposals p
   left join people planner on planner.id = json_value(p.content, '$.ownerId')
   left join people decider on decider.id = p.decided_by`;
 
-export async function findProposal(
-  tx: Transaction,
-  id: number,
-  scope: DeskScope,
-): Promise<ProposalRecord | null> {
+async function findProposal(tx: Transaction, id: number, scope: DeskScope): Promise<ProposalRecord | null> {
   const desks = inScope(scope);
   return selectOne<ProposalRecord>(tx, `select ${COLUMNS} from ${TABLES} where p.id = :id and ${desks.sql}`, {
     id,
