@@ -43,8 +43,7 @@ const isLeapYear = (year: number): boolean => year % 4 === 0 && (year % 100 !== 
  * @example epochDay('1970-01-02') // => 1
  */
 export function epochDay(date: PlainDate): number {
-  const [year, month, day] = date.split('-').map(Number) as [number, number, number];
-  return Date.UTC(year, month - 1, day) / 86_400_000;
+  return Date.UTC(Number(date.slice(0, 4)), Number(date.slice(5, 7)) - 1, Number(date.slice(8))) / 86_400_000;
 }
 
 /**

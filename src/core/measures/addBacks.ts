@@ -1,6 +1,6 @@
 /** Add-backs as the agreement allows them: some without limit, the others up to a share of EBITDA. */
-import { monthsBefore, reportingMonthEnd } from '../calendar/fiscalYear.ts';
-import type { PlainDate } from '../calendar/plainDate.ts';
+import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import { monthCount, type PlainDate } from '../calendar/plainDate.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
 import type { AddBack } from './definition.ts';
 
@@ -64,11 +64,11 @@ export function addBacksWithinTwelveMonths(
   addBacks: readonly AddBack[],
   date: PlainDate,
 ): readonly AddBack[] {
-  const [opening, closing] = [monthsBefore(date, 12), reportingMonthEnd(date)];
-  return addBacks.filter(
-    ({ periodEnd, months }) =>
-      reportingMonthEnd(periodEnd) <= closing && monthsBefore(periodEnd, months) >= opening,
-  );
+  const closing = monthCount(reportingMonthEnd(date));
+  return addBacks.filter(({ periodEnd, months }) => {
+    const end = monthCount(reportingMonthEnd(periodEnd));
+    return end <= closing && end - months >= closing - 12;
+  });
 }
 
 /**

@@ -27,15 +27,16 @@ export function adjustedEbitda(request: MeasureRequest): Earnings {
   if (addBacks.length === 0) return { reading: ebitda, addBacksTaken: ZERO, bridge };
   const sumOf = (capped: boolean) =>
     Decimal.sum(0, ...addBacks.filter((one) => one.capped === capped).map(({ amount }) => amount));
+  const uncapped = sumOf(false);
   const { allowed, disallowed, adjusted } = allowAddBacks({
     ebitda: ebitda.value,
-    uncapped: sumOf(false),
+    uncapped,
     capped: sumOf(true),
     terms: { cap: definition.addBackCap, basis: definition.addBackCapBasis },
   });
   return {
     reading: { kind: 'value', value: adjusted, inputs: ebitda.inputs },
-    addBacksTaken: sumOf(false).plus(allowed),
+    addBacksTaken: uncapped.plus(allowed),
     bridge: [
       ...bridge,
       ...addBacks.map(({ label, amount }): BridgeLine => ({ label, amount, kind: 'add-back', inputs: [] })),

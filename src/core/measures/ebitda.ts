@@ -102,7 +102,8 @@ export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): Meas
       reading: lastTwelveMonths(book, 'depreciation_and_amortisation', date),
     },
   ];
-  const ebitda = sumOfReadings(parts);
+  // Kept under the line it starts from: several covenants of a borrower rest on the same EBITDA.
+  const ebitda = book.kept('EBITDA', 'net_income', date, () => sumOfReadings(parts));
   return {
     ebitda,
     bridge: [

@@ -224,8 +224,14 @@ function revenueBehind(book: StatementBook, inputs: readonly InputUsed[]): Decim
 const statementsBehind = (book: StatementBook, inputs: readonly InputUsed[]): Statement[] =>
   inputs.flatMap(({ statementId }) => book.statementById(statementId) ?? []);
 
-const bestBasis = (book: StatementBook, inputs: readonly InputUsed[]): number =>
-  Math.max(...statementsBehind(book, inputs).map(({ basis }) => basisRank(basis)));
+function bestBasis(book: StatementBook, inputs: readonly InputUsed[]): number {
+  let best = 0;
+  for (const { statementId } of inputs) {
+    const statement = book.statementById(statementId);
+    if (statement) best = Math.max(best, basisRank(statement.basis));
+  }
+  return best;
+}
 
 /** What is missing from twelve months, by the route that the borrower's latest statement belongs to. */
 function shorterGap(yearToDate: Reading, quarters: Reading, periodEnd: PlainDate): Reading {

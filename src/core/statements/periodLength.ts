@@ -58,12 +58,12 @@ export function lengthOfQuarters(quarterWeeks: readonly number[]): LengthInWeeks
 export function daysOfFlow(statements: readonly Statement[], inputs: readonly InputUsed[]): number | null {
   const line = inputs.find(({ months }) => months > 0)?.line;
   if (line === undefined) return null;
-  const lengths = new Map(
-    statements.map(({ id, periodStart, periodEnd }) => [id, daysBetween(periodStart, periodEnd) + 1]),
-  );
-  return inputs
-    .filter((input) => input.line === line)
-    .reduce((days, { statementId, sign }) => days + sign * (lengths.get(statementId) ?? 0), 0);
+  let days = 0;
+  for (const input of inputs) {
+    const statement = input.line === line && statements.find(({ id }) => id === input.statementId);
+    if (statement) days += input.sign * (daysBetween(statement.periodStart, statement.periodEnd) + 1);
+  }
+  return days;
 }
 
 /**

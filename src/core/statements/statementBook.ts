@@ -35,12 +35,7 @@ export interface StatementBook {
   /** Whether a later period was out already when this version came: then it restates, before that it closes the books. */
   readonly isRestating: (version: Statement) => boolean;
   /** What `read` gives for a line on a day by one route, kept. */
-  readonly kept: (
-    route: string | number,
-    line: LineItemCode,
-    date: PlainDate,
-    read: () => Reading,
-  ) => Reading;
+  readonly kept: (route: string, line: LineItemCode, date: PlainDate, read: () => Reading) => Reading;
 }
 
 /**
@@ -108,7 +103,7 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
 }
 
 function keptReadings(): StatementBook['kept'] {
-  const routes = new Map<string | number, Map<LineItemCode, Map<PlainDate, Reading>>>();
+  const routes = new Map<string, Map<LineItemCode, Map<PlainDate, Reading>>>();
   return (route, line, date, read) => {
     const lines = within(routes, route, () => new Map<LineItemCode, Map<PlainDate, Reading>>());
     const readings = within(lines, line, () => new Map<PlainDate, Reading>());
