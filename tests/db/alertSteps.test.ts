@@ -3,6 +3,7 @@ import '../support/useDatabase.ts';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
 import { alertStep, closingConfirmation, type AlertStep } from '../../src/contracts/alerts.ts';
 import type { AlertFinding, AlertKind, Severity } from '../../src/core/alerts/alert.ts';
+import type { PlainDate } from '../../src/core/calendar/plainDate.ts';
 import type { Person } from '../../src/server/auth/policy.ts';
 import { closeDatabase } from '../../src/server/db/connection.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
@@ -254,14 +255,14 @@ describe('an alert is worked', () => {
 });
 
 describe('putting off', () => {
-  const until = (day: string): AlertStep => ({ step: 'put off', until: day, text: TEXT });
+  const until = (day: PlainDate): AlertStep => ({ step: 'put off', until: day, text: TEXT });
 
   test.each([
     ['2026-12-01', false],
     ['2026-12-02', true],
     ['2026-12-31', true],
     ['2027-01-01', false],
-  ])('on 1 December until %s: %s', async (day, allowed) => {
+  ] as const)('on 1 December until %s: %s', async (day, allowed) => {
     await raised();
     const outcome = await step(until(day));
     if (allowed) expect(done(outcome).state).toBe('put off');

@@ -2,13 +2,24 @@
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import type { StatementView } from '../../src/contracts/borrowers.ts';
 import type { ImportAcceptance, ImportView } from '../../src/contracts/imports.ts';
 import type { Person } from '../../src/server/auth/policy.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
+import { acceptImport } from '../../src/server/services/acceptImport.ts';
 import { showImport } from '../../src/server/services/listImports.ts';
+import { listStatements } from '../../src/server/services/listStatements.ts';
 import { stageImport } from '../../src/server/services/stageImport.ts';
 import { acting, done } from './acting.ts';
-import { buildBorrower, buildDesk, buildPerson, type BuiltBorrower, type BuiltDesk } from './factories.ts';
+import {
+  buildBorrower,
+  buildCovenant,
+  buildDesk,
+  buildPerson,
+  type BuiltBorrower,
+  type BuiltDesk,
+} from './factories.ts';
+import { rows } from './nightBook.ts';
 import { tyingPeriod } from './tyingFigures.ts';
 import { buildWorkbook, type BorrowerWorkbook, type WorkbookPeriod } from './workbooks.ts';
 
@@ -70,3 +81,45 @@ export async function staged(
 
 export const shown = async (person: Person, id: number): Promise<ImportView> =>
   done(await showImport(acting(person, RECEIVED), id));
+
+export const accepted = (
+  person: Person,
+  view: { readonly id: number; readonly version: number },
+  now = RECEIVED,
+): ReturnType<typeof acceptImport> =>
+  acceptImport(acting(person, now), { id: view.id, version: view.version }, MANAGEMENT_GROUP);
+
+export const statementsOf = async (
+  person: Person,
+  borrower: BuiltBorrower,
+): Promise<readonly StatementView[]> =>
+  done(await listStatements(acting(person, RECEIVED), borrower.id)).statements;
+
+export const inputVersionOf = async (borrower: BuiltBorrower): Promise<number> =>
+  (
+    await rows<{ version: number }>(
+      'select input_version as version from borrower_input_versions where borrower_id = :id',
+      { id: borrower.id },
+    )
+  )[0]?.version ?? 0;
+
+export const assessmentCountOf = async (borrower: BuiltBorrower): Promise<number> =>
+  (await rows('select id from assessments where borrower_id = :id', { id: borrower.id })).length;
+
+/** Total leverage of at most 3.50x; EBITDA of the four quarters is 18 % of 49.61 million, debt 70 % of 12.91 million. */
+export async function borrowerWithCovenant(desk: BuiltDesk): Promise<BuiltBorrower> {
+  const borrower = await newBorrower(desk);
+  await inTransaction((tx) => buildCovenant(tx, borrower, { knownFrom: RECEIVED }));
+  return borrower;
+}
+
+/** By hand: 0.7 × 12,910,000 = 9,037,000 of debt over 0.18 × 49,610,000 = 8,929,800 of EBITDA. */
+export const LEVERAGE = 9_037_000 / 8_929_800;
+
+/** June restated from 12.4 million of revenue: its EBITDA moves that of the twelve months by more than 2 %. */
+export const restatedPack = (): Promise<Buffer> =>
+  pack({
+    periods: QUARTERS.map((period) =>
+      period.end === '2026-06-30' ? tyingPeriod('2026-06-30', 10_400_000, 2_150_000) : period,
+    ),
+  });
