@@ -1,7 +1,7 @@
 import { PUT_OFF_MOST_TIMES, type AlertStep } from '../../contracts/alerts.ts';
 import type { AlertState, Severity } from '../../core/alerts/alert.ts';
 
-export interface WorkedAlert {
+interface WorkedAlert {
   readonly state: AlertState;
   readonly severity: Severity;
   readonly putOffCount: number;
