@@ -1,8 +1,8 @@
 /** Load what a borrower's assessment rests on, assess it, store the result, raise its alerts: one transaction. */
 import type { Transaction } from 'sequelize';
 import type { ServiceProblem } from '../../contracts/problem.ts';
-import type { AlertKind } from '../../core/alerts/alert.ts';
 import type { AlertView } from '../../core/alerts/alertChanges.ts';
+import { leavesOpen } from '../../core/alerts/unknownConditions.ts';
 import { assess, type Assessment } from '../../core/assess.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import type { CrossSection } from '../../core/quality/crossSection.ts';
@@ -102,26 +102,15 @@ export async function assessWithin(
   return ok({ assessmentId, isCurrent, alerts });
 }
 
-const NEEDS_A_SCORE: readonly AlertKind[] = ['reporting quality fell', 'reporting quality weak'];
-
-/** An alert is closed only by figures that say its condition is gone, never by figures that say nothing. */
 async function viewOf(
   tx: Transaction,
   assessment: Assessment,
   inputVersion: number,
   knownAt: Date,
 ): Promise<AlertView> {
-  const latestOutcome = new Map(
-    assessment.tests
-      .filter((test) => test.outcome !== 'awaiting figures' && test.outcome !== 'not tested')
-      .map((test) => [test.covenantId, test.outcome]),
-  );
   return {
     inputVersion,
     figuresChangedAt: await figuresChangedAt(tx, assessment.borrowerId, knownAt),
-    isUnknown: (kind, covenantId) =>
-      NEEDS_A_SCORE.includes(kind)
-        ? assessment.quality.headline === null
-        : covenantId !== null && latestOutcome.get(covenantId) === 'cannot be tested',
+    isUnknown: leavesOpen(assessment),
   };
 }
