@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import {
   ALERT_KINDS,
   ALERT_STATES,

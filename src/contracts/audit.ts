@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { pageQuery } from './paging.ts';
 import { day } from './watchlist.ts';
 

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import type { LegalForm } from '../core/borrowerInputs.ts';
 import type { Operator } from '../core/covenants/covenant.ts';
 import type { Outcome } from '../core/covenants/covenantTest.ts';

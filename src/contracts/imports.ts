@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { STATEMENT_BASES, STATEMENT_SCOPES } from '../core/statements/statement.ts';
 import { pageQuery } from './paging.ts';
 import type { Reading } from './reading.ts';

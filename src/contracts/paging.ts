@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 
 const PAGE_SIZE_MOST = 200;
 

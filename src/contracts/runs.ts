@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { isPlainDate, type PlainDate } from '../core/calendar/plainDate.ts';
 import { pageQuery } from './paging.ts';
 

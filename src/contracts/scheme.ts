@@ -1,5 +1,5 @@
 /** Day or night, kept in a cookie so that the server draws the right scheme without a script. */
-import { z } from 'zod';
+import { z } from './zod.ts';
 
 export const SCHEMES = ['day', 'night', 'system'] as const;
 export type Scheme = (typeof SCHEMES)[number];

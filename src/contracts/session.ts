@@ -1,5 +1,5 @@
 /** Signing in, the forgotten and the changed password, and the first set-up, as they cross the wire. */
-import { z } from 'zod';
+import { z } from './zod.ts';
 
 /** Longer than any address of mail, and than any password that can be set. */
 const MOST_TYPED = 1_024;

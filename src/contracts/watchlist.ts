@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { isPlainDate } from '../core/calendar/plainDate.ts';
 
 /** Grades with their meaning, which is printed beside the code. */
