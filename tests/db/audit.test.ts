@@ -133,44 +133,6 @@ describe('with the rights of the database’s owner', () => {
   });
 });
 
-test('forty changes at once are one unbroken chain', async () => {
-  await Promise.all(
-    Array.from({ length: 40 }, (_, number) =>
-      inTransaction((tx) =>
-        audit(tx, acting(desk.analyst, SECOND), {
-          action: 'stage-import',
-          subjectKind: 'import',
-          subjectId: String(number),
-          borrowerId: null,
-          deskId: null,
-          summary: `At once ${number}`,
-          before: null,
-          after: null,
-        }),
-      ),
-    ),
-  );
-  expect(await check()).toMatchObject({ entries: 46, intact: true });
-});
-
-test('what is undone leaves no entry and no gap', async () => {
-  const cut = inTransaction(async (tx) => {
-    await audit(tx, acting(desk.analyst, SECOND), {
-      action: 'stage-import',
-      subjectKind: 'import',
-      subjectId: '7',
-      borrowerId: null,
-      deskId: null,
-      summary: 'Never happened',
-      before: null,
-      after: null,
-    });
-    throw new Error('cut');
-  });
-  await expect(cut).rejects.toThrow('cut');
-  expect(await check()).toMatchObject({ entries: 6, intact: true });
-});
-
 describe('reading', () => {
   const read = async (asked: Record<string, unknown> = {}) =>
     done(await readAuditLog(auditQuery.parse(asked)));
