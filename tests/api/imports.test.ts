@@ -4,7 +4,7 @@ import { randomUUID } from 'node:crypto';
 import { beforeAll, expect, test } from 'vitest';
 import type { ImportView } from '../../src/contracts/imports.ts';
 import type { ProblemBody } from '../../src/contracts/problem.ts';
-import type { Client} from '../support/client.ts';
+import type { Client } from '../support/client.ts';
 import { signedIn, type Sending } from '../support/client.ts';
 import { pack } from '../support/importedFile.ts';
 import { makeTwoDesks, PASSWORD, type TwoDesks } from '../support/twoDesks.ts';
