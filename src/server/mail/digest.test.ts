@@ -207,6 +207,7 @@ describe('the heartbeat', () => {
     digests: 2,
     mailsWaiting: 0,
     failures: [],
+    auditHead: { seq: 1204, hash: 'c0ffee'.padEnd(64, '0') },
     runsUrl: 'https://desk.example/desk-settings/runs',
     ...facts,
   });
@@ -224,6 +225,10 @@ describe('the heartbeat', () => {
     );
     expect(mail.subject).toContain('tested 59 of 60, 1 failed');
     expect(mail.text).toContain('Borrower 17 (Northern desk), scores: no');
+  });
+
+  test('says where the audit log ends, so that a log that was cut can be told', () => {
+    expect(heartbeatMail(heartbeat()).text).toContain(`entry 1204, hash ${'c0ffee'.padEnd(64, '0')}`);
   });
 
   test('says that a look back raises nothing', () => {

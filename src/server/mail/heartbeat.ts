@@ -17,6 +17,8 @@ export interface Heartbeat {
   readonly mailsWaiting: number;
   /** By number and desk: an administrator does not read borrowers. */
   readonly failures: readonly string[];
+  /** Told outside the database: whoever cuts the end off the log there cannot cut it off this mail. */
+  readonly auditHead: { readonly seq: number; readonly hash: string };
   readonly runsUrl: string;
 }
 
@@ -48,6 +50,10 @@ export function heartbeatMail(heartbeat: Heartbeat): RenderedMail & { readonly s
     ...(failures.length === 0
       ? [{ part: 'paragraph' as const, text: 'Nothing.' }]
       : failures.map((text) => ({ part: 'paragraph' as const, text }))),
+    {
+      part: 'paragraph',
+      text: `Audit log at its end: entry ${heartbeat.auditHead.seq}, hash ${heartbeat.auditHead.hash}. Keep this mail: an audit log whose entry of that number has another hash, or is gone, was changed.`,
+    },
     { part: 'link', label: 'Open the runs', url: heartbeat.runsUrl },
   ];
   return { subject, ...renderMail(subject, parts) };

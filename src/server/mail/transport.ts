@@ -1,7 +1,7 @@
 /** One message to one address over SMTP, and what became of it. */
 import { createHash } from 'node:crypto';
 import { createTransport } from 'nodemailer';
-import { env } from '../config/env.ts';
+import { env, type Env } from '../config/env.ts';
 import { isSingleAddress, oneLine } from './address.ts';
 
 const TIMEOUT_MS = 10_000;
@@ -28,7 +28,9 @@ export interface MailTransport {
 }
 
 /** The lender's SMTP server, or the local sink where none is configured. */
-export function mailTransport(settings = env()): MailTransport {
+export function mailTransport(
+  settings: Pick<Env, 'SMTP_URL' | 'MAIL_SINK_PORT' | 'MAIL_FROM'> = env(),
+): MailTransport {
   const { SMTP_URL, MAIL_SINK_PORT, MAIL_FROM } = settings;
   const smtp = new URL(SMTP_URL ?? `smtp://127.0.0.1:${MAIL_SINK_PORT}`);
   const isSecure = smtp.protocol === 'smtps:';
@@ -82,8 +84,8 @@ function outcomeOf(error: unknown): SendOutcome {
   if (!(error instanceof Error)) throw error;
   const code = 'responseCode' in error && typeof error.responseCode === 'number' ? error.responseCode : null;
   const reason = oneLine(error.message).slice(0, 900);
-  // 535 and its kin are the product's own sign-in to the server: mend the setting, and the mail goes out.
-  const isSignIn = 'code' in error && error.code === 'EAUTH';
-  if (code !== null && code >= 500 && !isSignIn) return { kind: 'refused', reason };
-  return { kind: 'later', reason, isServerGone: code === null || isSignIn };
+  // The product's own sign-in to the server, or its encryption: mend the setting, and the mail goes out.
+  const isSetting = 'code' in error && (error.code === 'EAUTH' || error.code === 'ETLS');
+  if (code !== null && code >= 500 && !isSetting) return { kind: 'refused', reason };
+  return { kind: 'later', reason, isServerGone: code === null || isSetting };
 }

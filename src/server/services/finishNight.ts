@@ -39,7 +39,7 @@ export interface RunSummary {
 export async function finishNight(tx: Transaction, { run: begun, lock }: Night): Promise<RunSummary> {
   // First of all, and with its row held to the end: a second process can finish nothing beside this one.
   if (!(await renewLock(tx, lock, LOCK_SECONDS))) throw new RunLockLost();
-  await holdAuditHead(tx);
+  const auditHead = await holdAuditHead(tx);
   const run = await findRun(tx, begun.id);
   const lender = await findLender(tx);
   if (!run || !lender) throw new Error(`run ${begun.id} or the lender is gone`);
@@ -66,6 +66,7 @@ export async function finishNight(tx: Transaction, { run: begun, lock }: Night):
       (failure) =>
         `Borrower ${failure.borrowerId} (${failure.deskName}), ${failure.phase}: ${failure.reason}`,
     ),
+    auditHead,
     runsUrl: address('/desk-settings/runs'),
   });
   await finishRun(tx, { id: run.id, mailedThrough: isLookBack ? null : run.knownAt });

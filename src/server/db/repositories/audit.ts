@@ -27,8 +27,16 @@ const SUMMARY_MOST = 500;
  * Waits until this transaction is the next to append. Called before anything else is read: the server refuses (1020)
  * to lock a row that others have changed since this transaction's first look, and every change ends with the head.
  */
-export async function holdAuditHead(tx: Transaction): Promise<void> {
-  await selectOne(tx, 'select seq from audit_heads where id = 1 for update');
+export async function holdAuditHead(tx: Transaction): Promise<AuditHead> {
+  const head = await selectOne<AuditHead>(tx, 'select seq, hash from audit_heads where id = 1 for update');
+  if (!head) throw new Error('audit_heads has no row');
+  return head;
+}
+
+/** The last entry's number and hash; before the first, 0 and sixty-four zeros. */
+export interface AuditHead {
+  readonly seq: number;
+  readonly hash: string;
 }
 
 /**
@@ -37,11 +45,7 @@ export async function holdAuditHead(tx: Transaction): Promise<void> {
  */
 export async function appendAudit(tx: Transaction, given: AuditFacts): Promise<number> {
   const facts = { ...given, summary: storable(given.summary, SUMMARY_MOST) };
-  const head = await selectOne<{ seq: number; hash: string }>(
-    tx,
-    'select seq, hash from audit_heads where id = 1 for update',
-  );
-  if (!head) throw new Error('audit_heads has no row');
+  const head = await holdAuditHead(tx);
   const seq = head.seq + 1;
   const before = facts.before === undefined || facts.before === null ? null : JSON.stringify(facts.before);
   const after = facts.after === undefined || facts.after === null ? null : JSON.stringify(facts.after);
