@@ -105,28 +105,29 @@ function AuditLog({ query: firstQuery, first }: AuditSheetProps) {
 
 function Entries({ rows }: { readonly rows: readonly AuditRow[] }) {
   return (
-    <Table caption="Audit entries, newest first; times in UTC">
+    <Table caption="Audit entries, newest first; times in UTC" entries>
       <TableHead>
         <tr role="row">
           <HeadCell numeric>No.</HeadCell>
           <HeadCell>When (UTC)</HeadCell>
           <HeadCell>Who</HeadCell>
           <HeadCell>What</HeadCell>
-          <HeadCell>Before and after</HeadCell>
         </tr>
       </TableHead>
       <TableBody>
         {rows.map((row) => (
           <Row key={row.seq}>
-            <Cell numeric>{row.seq}</Cell>
-            <Cell nowrap>
+            <Cell numeric entry="mark">
+              {row.seq}
+            </Cell>
+            <Cell nowrap entry="extra">
               {row.at.slice(0, 10)} {row.at.slice(11, 19)}
             </Cell>
-            <Cell>
+            <Cell entry="strip">
               {row.who}
               <span className="type-second type-small block">{row.address}</span>
             </Cell>
-            <Cell>
+            <Cell entry="main">
               {row.summary}
               <span className="type-second type-small block">
                 {row.action}, {row.subject}
@@ -139,11 +140,9 @@ function Entries({ rows }: { readonly rows: readonly AuditRow[] }) {
                   </>
                 )}
               </span>
-            </Cell>
-            <Cell>
               {(row.before ?? row.after) !== null && (
                 <details>
-                  <summary className="cursor-pointer">Show</summary>
+                  <summary className="type-small cursor-pointer">Before and after</summary>
                   <pre className="audit-json">{`before ${row.before ?? '–'}\nafter ${row.after ?? '–'}\nrequest ${row.requestId}\nhash ${row.hash}`}</pre>
                 </details>
               )}
