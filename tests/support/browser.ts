@@ -88,7 +88,16 @@ export async function signInAtForm(
 
 /** A press before an island of the page is awake is lost: people are slower than this, tests are not. */
 export async function islandsAwake(page: Page): Promise<void> {
-  await page.waitForFunction(() => document.querySelector('astro-island[ssr]') === null);
+  await page.waitForFunction(() => {
+    const isReacts = (element: Element) => Object.keys(element).some((key) => key.startsWith('__reactFiber'));
+    return [...document.querySelectorAll('astro-island')].every(
+      (island) =>
+        !island.hasAttribute('ssr') &&
+        (island.childElementCount === 0 || [...island.querySelectorAll('*')].some(isReacts)),
+    );
+  });
+  // What listens for keys is put up after the first drawing.
+  await page.evaluate(() => new Promise((resume) => requestIdleCallback(resume)));
 }
 
 /** Does what leads to another page, and waits until that one is there and awake. */
