@@ -245,7 +245,6 @@ test('the bridge leads from net income to covenant EBITDA with cap, evidence and
     ['Net income', '2.2', 'reported'],
     ['Income tax', '1.6', 'reported'],
     ['Interest expense', '2.5', 'reported'],
-    ['Interest income', '0', 'reported'],
     ['Depreciation and amortisation', '3.7', 'reported'],
     ['EBITDA', '10', 'subtotal'],
     ['Restructuring', '0.5', 'add-back, capped'],
