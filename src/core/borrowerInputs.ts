@@ -47,7 +47,7 @@ export interface BorrowerInputs {
   readonly statements: readonly Statement[];
   readonly covenants: readonly Covenant[];
   readonly undertakings: readonly Undertaking[];
-  /** What the last assessment said, for "fell since" and "restated"; null before the first. */
+  /** What was said before the inputs last changed, for "fell since"; null before the first. */
   readonly previous: PreviousAssessment | null;
 }
 
@@ -57,9 +57,4 @@ export interface PreviousAssessment {
     readonly headline: number | null;
     readonly band: string | null;
   } | null;
-  readonly tests: readonly {
-    readonly covenantId: number;
-    readonly testDate: PlainDate;
-    readonly outcome: string;
-  }[];
 }

@@ -43,7 +43,6 @@ describe('reporting quality fell', () => {
   test('takes the earlier quarter end as the last assessment stated it', () => {
     const stated = (headline: number, quarterEnd: PlainDate) => ({
       quality: { quarterEnd, headline, band: 'well supported' },
-      tests: [],
     });
     expect(qualityFell(context([66, 66, 66, 60], stated(75, '2026-06-30')))).toHaveLength(1);
     expect(qualityFell(context([66, 66, 66, 60], stated(75, '2026-09-30')))).toEqual([]);

@@ -5,7 +5,8 @@ import { isMet, isNotMet, type CovenantTest } from './covenantTest.ts';
  *
  * @example hasResult({ outcome: 'awaiting figures' }) // => false
  */
-export const hasResult = ({ outcome }: CovenantTest): boolean => isMet(outcome) || isNotMet(outcome);
+export const hasResult = ({ outcome }: Pick<CovenantTest, 'outcome'>): boolean =>
+  isMet(outcome) || isNotMet(outcome);
 
 /**
  * The latest test of one covenant that stands: the newest one whose figures are there. Null where there is none or

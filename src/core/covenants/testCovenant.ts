@@ -6,10 +6,11 @@ import { daysOfFlow, DAYS_OF_LONGEST_YEAR, lengthInWords } from '../statements/p
 import type { StatementBook } from '../statements/statementBook.ts';
 import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
-import { isMet, isNotMet, type CovenantTest, type Outcome } from './covenantTest.ts';
+import { isNotMet, type CovenantTest, type Outcome } from './covenantTest.ts';
 import { figuresOf, type Figures } from './figures.ts';
 import { fallOf, type Sides } from './headroom.ts';
 import { holdAgainstLevel, type Held, type Terms } from './holdAgainstLevel.ts';
+import { hasResult } from './latestLiveTest.ts';
 import { laterLevels, levelInForce } from './levels.ts';
 import { withoutResult } from './withoutResult.ts';
 
@@ -99,8 +100,6 @@ function resultSaid(
     counterfactuals: hasResult(held) ? withoutAddBacks(measure, sides, terms, figures.addBacksTaken) : [],
   };
 }
-
-const hasResult = ({ outcome }: Held): boolean => isMet(outcome) || isNotMet(outcome);
 
 /** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
 function remarks({ roundingPlaces }: Covenant, held: Held, figures: Figures): string | null {

@@ -1,18 +1,21 @@
 /** What stands beside the number and is not hidden in it. */
 import type { PreviousAssessment } from '../borrowerInputs.ts';
+import { formatDay } from '../calendar/printDay.ts';
+import { decimal } from '../money/decimal.ts';
+import { formatScore } from '../money/print.ts';
 import { revenueGrowth } from './comparedFigures.ts';
 import type { PeerInputs } from './peerFigures.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import type { QuarterScore } from './score.ts';
-import { longDate, percent } from './wording.ts';
+import { percent } from './wording.ts';
 
 /**
  * The remarks of the latest quarter end. Source: methods.md B5 (dampers) and B6.
  *
- * @example remarksOf(peer, quarterScore) // => ['The accounts of 30 September 2026 are management accounts, not audited.']
+ * @example remarksOf(peer, quarterScore) // => ['The accounts of 30 Sep 2026 are management accounts, not audited.']
  */
 export function remarksOf(peer: PeerInputs, score: QuarterScore): readonly string[] {
-  const date = longDate(peer.quarterEnd);
+  const date = formatDay(peer.quarterEnd);
   return [
     peer.tie === 'does-not-tie' && `The accounts of ${date} do not tie; they are not scored.`,
     peer.tie === 'warning' && `The accounts of ${date} tie only roughly.`,
@@ -48,7 +51,7 @@ function peersRemark({ sectorPeers, bookPeers, sectorWeight }: QuarterScore): st
 /**
  * Whether a changed headline is news; null where there is nothing to compare or the quarter end is the same.
  *
- * @example moveRemark(61, '2026-09-30', { quarterEnd: '2026-06-30', headline: 58, band: null }, 10) // => 'Moved 3 points since 30 June 2026: under 10 points is not news.'
+ * @example moveRemark(61, '2026-09-30', { quarterEnd: '2026-06-30', headline: 58, band: null }, 10) // => 'Moved 3 points since 30 Jun 2026: under 10 points is not news.'
  */
 export function moveRemark(
   headline: number | null,
@@ -60,6 +63,6 @@ export function moveRemark(
     return null;
   const points = Math.abs(headline - previous.headline);
   return points < newsFromPoints
-    ? `Moved ${points.toFixed(0)} points since ${longDate(previous.quarterEnd)}: under ${newsFromPoints} points is not news.`
+    ? `Moved ${formatScore(decimal(points), { beside: decimal(newsFromPoints) })} points since ${formatDay(previous.quarterEnd)}: under ${newsFromPoints} points is not news.`
     : null;
 }

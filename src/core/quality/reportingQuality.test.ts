@@ -70,7 +70,7 @@ test('fast growth is said beside the number', () => {
 
 test('unaudited accounts and few peers are said beside the number', () => {
   expect(qualityOf(book.at(-1)!).remarks).toEqual([
-    'The accounts of 30 September 2026 are management accounts, not audited.',
+    'The accounts of 30 Sep 2026 are management accounts, not audited.',
     'Only 2 peers in the sector: the comparison leans 80\u00a0% on the whole book (30 others).',
   ]);
   expect(qualityOf(buildBorrower(1, { given: { basis: 'audited' } })).remarks).toEqual([]);
@@ -119,10 +119,10 @@ test('the band moves by five points past a line, and a small move is said to be 
   const { headline, band } = qualityOf(borrower);
   const previous = (quarterEnd: '2026-06-30' | '2026-09-30', offset: number, before: string) => ({
     ...borrower,
-    previous: { quality: { quarterEnd, headline: headline! + offset, band: before }, tests: [] },
+    previous: { quality: { quarterEnd, headline: headline! + offset, band: before } },
   });
   expect(qualityOf(previous('2026-06-30', 9.9, band!)).remarks).toContain(
-    'Moved 10 points since 30 June 2026: under 10 points is not news.',
+    'Moved 9.9 points since 30 Jun 2026: under 10 points is not news.',
   );
   expect(qualityOf(previous('2026-06-30', 10.1, band!)).remarks.join(' ')).not.toMatch(/Moved/);
   expect(qualityOf(previous('2026-09-30', 5, band!)).remarks.join(' ')).not.toMatch(/Moved/);

@@ -47,31 +47,6 @@ export const rose = (change: number): string => (change >= 0 ? 'rose' : 'fell');
 export const borrowers = (count: number, isOfBook: boolean): string =>
   isOfBook ? `${count} borrowers of the whole book` : count === 1 ? '1 peer' : `${count} peers`;
 
-const MONTHS = [
-  'January',
-  'February',
-  'March',
-  'April',
-  'May',
-  'June',
-  'July',
-  'August',
-  'September',
-  'October',
-  'November',
-  'December',
-] as const;
-
-/**
- * '2026-09-30' as '30 September 2026'.
- *
- * @example longDate('2026-09-30') // => '30 September 2026'
- */
-export function longDate(date: string): string {
-  const [year, month, day] = date.split('-').map(Number) as [number, number, number];
-  return `${day} ${MONTHS[month - 1]!} ${year}`;
-}
-
 /** With the minus sign that everything else is printed with; nought has no sign. */
 function plainNumber(value: number, digits: number): string {
   const text = Math.abs(value).toFixed(digits);

@@ -2,7 +2,6 @@ import type { Transaction } from 'sequelize';
 import type { Assessment } from '../../../core/assess.ts';
 import type { PreviousAssessment } from '../../../core/borrowerInputs.ts';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
-import { groupRows } from '../groupRows.ts';
 import { insertRows } from '../insertRows.ts';
 import { execute, select, selectOne } from '../sql.ts';
 import { readAssessment, storedAssessment } from '../storedAssessment.ts';
@@ -184,16 +183,6 @@ export async function loadPrevious(
      ) latest on latest.id = a.id and latest.place = 1`,
     { borrowerIds: borrowers.map((borrower) => borrower.id), knownAt },
   );
-  const tests = groupRows(
-    await select<PreviousAssessment['tests'][number] & { assessmentId: number }>(
-      tx,
-      `select assessment_id as assessmentId, covenant_id as covenantId, test_date as testDate, outcome
-       from test_results where assessment_id in (:ids) order by covenant_id, test_date`,
-      { ids: rows.map((row) => row.id) },
-    ),
-    (row) => row.assessmentId,
-    ({ covenantId, testDate, outcome }) => ({ covenantId, testDate, outcome }),
-  );
   return new Map(
     rows.map((row) => [
       row.borrowerId,
@@ -203,7 +192,6 @@ export async function loadPrevious(
           headline: row.headline === null ? null : Number(row.headline),
           band: row.band,
         },
-        tests: tests.get(row.id) ?? [],
       },
     ]),
   );
