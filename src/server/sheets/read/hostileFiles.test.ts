@@ -1,5 +1,4 @@
 /** A corpus of hostile files, made anew for each run: every one is refused, or read without harm, in time. */
-import { monitorEventLoopDelay } from 'node:perf_hooks';
 import { afterAll, expect, test } from 'vitest';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';
 import {
@@ -191,9 +190,10 @@ test('a file that takes too long ends with its worker, and the next one is read 
 
 test('the program answers others while hostile files are read', async () => {
   const files = CORPUS.filter(([name]) => /million|80 MB|200,000/.test(name)).map(([, make]) => make());
-  const delay = monitorEventLoopDelay({ resolution: 5 });
-  delay.enable();
+  let answered = 0;
+  const others = setInterval(() => (answered += 1), 1);
   await Promise.all(files.map(read));
-  delay.disable();
-  expect(delay.percentile(99) / 1e6).toBeLessThan(200);
+  clearInterval(others);
+  // Read on this thread, the files would let nobody in between: what is left is a handful of turns.
+  expect(answered).toBeGreaterThan(20);
 }, 30_000);
