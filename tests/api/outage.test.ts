@@ -2,53 +2,22 @@
 import '../support/useDatabase.ts';
 import { spawn, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
-import { connect, createServer, type AddressInfo, type Server, type Socket } from 'node:net';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { afterAll, beforeAll, expect, inject, test } from 'vitest';
+import { freePort } from '../../jobs/database.mjs';
+import { openWay, type DatabaseWay } from '../support/databaseWay.ts';
 import { makePersonAlone, PASSWORD } from '../support/twoDesks.ts';
 
-const open = new Set<Socket>();
-let way: Server;
-let wayPort = 0;
+let way: DatabaseWay;
 let web: ChildProcess;
 let address = '';
 let cookie = '';
-
-async function joinWay(): Promise<void> {
-  const target = new URL(inject('databaseUrl'));
-  way = createServer((near) => {
-    const far = connect(Number(target.port), target.hostname);
-    for (const socket of [near, far]) open.add(socket.on('error', () => socket.destroy()));
-    near.pipe(far).pipe(near);
-  });
-  way.listen(wayPort, '127.0.0.1');
-  await once(way, 'listening');
-  wayPort = (way.address() as AddressInfo).port;
-}
-
-async function cutWay(): Promise<void> {
-  for (const socket of open) socket.destroy();
-  open.clear();
-  way.close();
-  await once(way, 'close');
-}
-
-async function freePort(): Promise<number> {
-  const server = createServer().listen(0, '127.0.0.1');
-  await once(server, 'listening');
-  const { port } = server.address() as AddressInfo;
-  server.close();
-  await once(server, 'close');
-  return port;
-}
 
 const get = (path: string, headers: Record<string, string> = {}) =>
   fetch(address + path, { headers: { cookie, ...headers }, redirect: 'manual' });
 
 beforeAll(async () => {
-  await joinWay();
-  const databaseUrl = new URL(inject('databaseUrl'));
-  databaseUrl.port = String(wayPort);
+  way = await openWay(inject('databaseUrl'));
   const port = await freePort();
   address = `http://127.0.0.1:${port}`;
   web = spawn(process.execPath, ['--import', 'tsx', 'jobs/server.ts'], {
@@ -56,7 +25,7 @@ beforeAll(async () => {
       ...process.env,
       ...inject('productSettings'),
       UNDERKEEL_SUPERVISED: '1',
-      DATABASE_URL: databaseUrl.href,
+      DATABASE_URL: way.url,
       APP_URL: address,
       HOST: '127.0.0.1',
       PORT: String(port),
@@ -83,7 +52,7 @@ beforeAll(async () => {
 });
 
 afterAll(async () => {
-  await cutWay();
+  await way.cut();
   if (web.exitCode === null) {
     web.kill('SIGTERM');
     await once(web, 'exit');
@@ -91,7 +60,7 @@ afterAll(async () => {
 });
 
 test('while the database is gone every request is told so at once, and after it the session goes on', async () => {
-  await cutWay();
+  await way.cut();
   const from = performance.now();
   const route = await get('/api/v1/audit-log');
   expect(route.status).toBe(503);
@@ -123,7 +92,7 @@ test('while the database is gone every request is told so at once, and after it 
   expect((await get('/livez')).status).toBe(200);
   expect(performance.now() - from, 'milliseconds for four answers').toBeLessThan(20_000);
 
-  await joinWay();
+  await way.join();
   let status = 0;
   for (let tries = 0; tries < 50 && status !== 200; tries += 1) {
     status = (await get('/api/v1/audit-log')).status;
