@@ -126,6 +126,35 @@ test('a request that is under way at SIGTERM is answered, a new one is told to c
   expect(await web.ended).toBe(0);
 });
 
+test('a change whose COMMIT is not answered is said to be uncertain, and its repeat with the key is not made twice', async () => {
+  const way = await openLossyWay(inject('databaseUrl'));
+  const web = await startWebProcess({ DATABASE_URL: way.url });
+  const person = await makePersonAlone('auditor');
+  const cookie = await cookieOf(web, person.email);
+  const choose = () =>
+    post(
+      web,
+      '/api/v1/account/digest',
+      { digest: 'not wanted' },
+      { cookie, 'idempotency-key': 'unanswered' },
+    );
+  way.loseNextCommit();
+  const unanswered = await choose();
+  expect(unanswered.status).toBe(503);
+  expect(Number(unanswered.headers.get('retry-after'))).toBeGreaterThan(0);
+  expect(await unanswered.text()).toContain('It is not certain whether your change was made');
+  expect((await choose()).status).toBe(204);
+  const rows = await inTransaction((tx) =>
+    select(tx, `select seq from audit_entries where person_id = :id and action = 'digest-unsubscribed'`, {
+      id: person.id,
+    }),
+  );
+  expect(rows).toHaveLength(1);
+  web.kill('SIGTERM');
+  await web.ended;
+  await way.close();
+});
+
 test('a process that is killed after COMMIT and before its answer: the repeat with the key is answered and nothing is done twice', async () => {
   const way = await openLossyWay(inject('databaseUrl'));
   const first = await startWebProcess({ DATABASE_URL: way.url });

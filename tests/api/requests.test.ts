@@ -4,6 +4,7 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
 import { select } from '../../src/server/db/sql.ts';
 import { baseUrl, Client, signedIn, type Sending } from '../support/client.ts';
+import { MATRIX } from './matrix.ts';
 import { makeTwoDesks, PASSWORD, type TwoDesks } from '../support/twoDesks.ts';
 
 let desks: TwoDesks;
@@ -261,5 +262,62 @@ describe('a refusal', () => {
     ])
       expect([404, 405], path).toContain((await administrator.send(path)).status);
     expect((await administrator.send('/api/v1/runs')).status).toBe(200);
+  });
+});
+
+describe('a thing of another desk', () => {
+  const TABLES = [
+    'borrowers',
+    'alerts',
+    'alert_events',
+    'proposals',
+    'imports',
+    'import_answers',
+    'statements',
+  ];
+  const MORE = ['watchlist_entries', 'idempotency_keys', 'assessments', 'files'];
+  const checksums = () =>
+    inTransaction((tx) => select(tx, `checksum table ${[...TABLES, ...MORE].join(', ')}`));
+
+  test('is not changed by any route, whoever of this desk asks, with the version that it has', async () => {
+    const before = await checksums();
+    for (const [route, sample] of Object.entries(MATRIX)) {
+      if (sample.names === 'nothing') continue;
+      for (const client of [analyst, manager]) {
+        const sending = sample.sending?.(desks.south) ?? {};
+        const headers = {
+          ...sending.headers,
+          'if-match': '"1"',
+          'idempotency-key': `foreign ${route}`.replaceAll(' ', '-'),
+        };
+        const answer = await client.send(`/api/v1${sample.path(desks.south)}`, { ...sending, headers });
+        expect([403, 404], route).toContain(answer.status);
+      }
+    }
+    expect(await checksums()).toEqual(before);
+  });
+
+  test('is the same page as one that never was', async () => {
+    const south = desks.south;
+    for (const path of [
+      `/borrowers/${south.borrower}`,
+      `/borrowers/${south.borrower}/quality`,
+      `/borrowers/${south.borrower}/statements`,
+      `/borrowers/${south.borrower}/facilities`,
+      `/borrowers/${south.borrower}/alerts`,
+      `/borrowers/${south.borrower}/review-sheet`,
+      `/alerts/${south.alert}`,
+      `/imports/${south.import}`,
+      `/statements/${south.statement}/cells/revenue`,
+    ]) {
+      const pages = await Promise.all(
+        [path, path.replace(/\d+/, '999999999999')].map(async (address) => {
+          const answer = await analyst.send(address);
+          return { status: answer.status, text: (await answer.text()).replaceAll(/[0-9a-f-]{36}/g, '') };
+        }),
+      );
+      expect(pages[0]?.status, path).toBe(404);
+      expect(pages[0], path).toEqual(pages[1]);
+    }
   });
 });
