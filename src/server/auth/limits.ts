@@ -7,6 +7,7 @@
  */
 import { createHash } from 'node:crypto';
 import type { Transaction } from 'sequelize';
+import { networkOf } from './networkOf.ts';
 import { mailKey } from '../db/repositories/people.ts';
 import { addPoints, deleteCounter, findCounter } from '../db/repositories/rateLimits.ts';
 
@@ -80,11 +81,11 @@ export async function forgiveSignIn(
   });
 }
 
-const accountAt = (account: string, address: string): string => `${mailKey(account)} ${address}`;
+const accountAt = (account: string, address: string): string => `${mailKey(account)} ${networkOf(address)}`;
 
 /** Hashed: what people type into the name field is at times their password. */
 const keyOf = (limit: Limit, who: string): string =>
-  `${limit.name}:${createHash('sha256').update(who).digest('hex')}`;
+  `${limit.name}:${createHash('sha256').update(networkOf(who)).digest('hex')}`;
 
 const secondsUntil = (endsAtMs: number, nowMs: number): number =>
   Math.max(1, Math.ceil((endsAtMs - nowMs) / 1_000));
