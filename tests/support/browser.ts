@@ -87,7 +87,7 @@ export async function signInAtForm(
 }
 
 /** A press before an island of the page is awake is lost: people are slower than this, tests are not. */
-export async function islandsAwake(page: Page): Promise<void> {
+async function islandsAwake(page: Page): Promise<void> {
   await page.waitForFunction(() => {
     const isReacts = (element: Element) => Object.keys(element).some((key) => key.startsWith('__reactFiber'));
     return [...document.querySelectorAll('astro-island')].every(
