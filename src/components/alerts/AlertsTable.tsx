@@ -2,11 +2,10 @@ import { useTable } from '@tanstack/react-table';
 import { useMemo, useState } from 'react';
 import { ALERT_SORTS, type AlertQuery, type AlertRow } from '../../contracts/alerts.ts';
 import type { Page } from '../../contracts/paging.ts';
-import { ColumnChoice } from '../ui/ColumnChoice.tsx';
 import { DataGrid } from '../ui/DataGrid.tsx';
 import { gridFeatures } from '../ui/dataGrid.ts';
 import { useRowKeys } from '../ui/keys.ts';
-import { Pager } from '../ui/Pager.tsx';
+import { GridFoot } from '../ui/GridFoot.tsx';
 import { EmptyState } from '../ui/States.tsx';
 import { alertColumns } from './alertColumns.tsx';
 import { alertSearch, withChange } from './alertView.ts';
@@ -73,19 +72,15 @@ export function AlertsTable({ page, query, today, selected, onSelect, onView }: 
           </EmptyState>
         }
       />
-      {page.total > 0 && (
-        <div className="table-tools">
-          <Pager
-            page={page.page}
-            perPage={page.perPage}
-            total={page.total}
-            what="alerts"
-            hrefOf={(to) => `/alerts${alertSearch({ ...query, page: to })}`}
-            onPage={(to) => onView({ ...query, page: to })}
-          />
-          <ColumnChoice table={table} />
-        </div>
-      )}
+      <GridFoot
+        table={table}
+        page={page.page}
+        perPage={page.perPage}
+        total={page.total}
+        what="alerts"
+        hrefOf={(to) => `/alerts${alertSearch({ ...query, page: to })}`}
+        onPage={(to) => onView({ ...query, page: to })}
+      />
     </>
   );
 }

@@ -4,14 +4,13 @@ import { useEffect, useState } from 'react';
 import { BORROWER_SORTS, type BorrowerQuery, type BorrowerRow } from '../../contracts/borrowers.ts';
 import type { Page } from '../../contracts/paging.ts';
 import { Refusal, getOrThrow } from '../ui/api.ts';
-import { ColumnChoice } from '../ui/ColumnChoice.tsx';
 import { DataGrid } from '../ui/DataGrid.tsx';
 import { gridFeatures } from '../ui/dataGrid.ts';
 import { ErrorState } from '../ui/ErrorState.tsx';
 import { FilterSelect } from '../ui/Filters.tsx';
 import { IslandQueries } from '../ui/IslandQueries.tsx';
 import { useRowKeys } from '../ui/keys.ts';
-import { Pager } from '../ui/Pager.tsx';
+import { GridFoot } from '../ui/GridFoot.tsx';
 import { Panel } from '../ui/Panel.tsx';
 import { EmptyState, LiveRegion } from '../ui/States.tsx';
 import { borrowerColumns } from './borrowerColumns.tsx';
@@ -121,19 +120,15 @@ function BorrowersTable({ page, query, onView }: BorrowersTableProps) {
           </EmptyState>
         }
       />
-      {page.total > 0 && (
-        <div className="table-tools">
-          <Pager
-            page={page.page}
-            perPage={page.perPage}
-            total={page.total}
-            what="borrowers"
-            hrefOf={(to) => `/borrowers${borrowerSearch({ ...query, page: to })}`}
-            onPage={(to) => onView({ ...query, page: to })}
-          />
-          <ColumnChoice table={table} />
-        </div>
-      )}
+      <GridFoot
+        table={table}
+        page={page.page}
+        perPage={page.perPage}
+        total={page.total}
+        what="borrowers"
+        hrefOf={(to) => `/borrowers${borrowerSearch({ ...query, page: to })}`}
+        onPage={(to) => onView({ ...query, page: to })}
+      />
     </Panel>
   );
 }

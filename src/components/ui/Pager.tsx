@@ -1,4 +1,4 @@
-interface PagerProps {
+export interface PagerProps {
   readonly page: number;
   readonly perPage: number;
   readonly total: number;
