@@ -2,7 +2,8 @@ import { ZERO } from '../money/decimal.ts';
 import type { LineItemCode } from './lineItems.ts';
 import type { Amounts } from './statement.ts';
 
-const COST_LINES = [
+/** Lines that a sheet may write as negatives, all of them or none. */
+export const COST_LINES = [
   'cogs',
   'sga',
   'staff_costs',
@@ -15,7 +16,9 @@ const COST_LINES = [
   'impairment',
   'interest_expense',
 ] as const satisfies readonly LineItemCode[];
-const NEGATIVE_SHARE = 0.8;
+
+/** Share of negative cells from which a block is written as negatives. Source: methods.md A1. */
+export const NEGATIVE_SHARE = 0.8;
 
 /**
  * Whether a sheet writes costs as negatives: at least 80 % of its cost cells are below nought. Then the whole block

@@ -1,5 +1,6 @@
 /** The end of a run: digests, the administrators' heartbeat, and the run's own state, in one transaction. */
 import type { Transaction } from 'sequelize';
+import { formatInstant } from '../../core/calendar/printInstant.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
 import { holdAuditHead } from '../db/repositories/audit.ts';
 import { countWaitingMail, listDigestReaders } from '../db/repositories/digestAlerts.ts';
@@ -141,19 +142,6 @@ const instants = (run: RunRecord, { zone }: Lender) => ({
   knownAt: formatInstant(run.knownAt, zone),
   runAt: formatInstant(run.startedAt, zone),
 });
-
-/** '1 Dec 2026, 03:00 CET' */
-function formatInstant(instant: Date, zone: string): string {
-  return new Intl.DateTimeFormat('en-GB', {
-    timeZone: zone,
-    day: 'numeric',
-    month: 'short',
-    year: 'numeric',
-    hour: '2-digit',
-    minute: '2-digit',
-    timeZoneName: 'short',
-  }).format(instant);
-}
 
 const sumOf = (counts: readonly AlertCounts[]): { raised: number; worsened: number; closed: number } => ({
   raised: counts.reduce((sum, one) => sum + one.raised, 0),

@@ -1,19 +1,11 @@
 /** What kind of row a line is: which way it goes into totals, and what it closes. */
+import { COST_LINES as COST_LINES_OF_STATEMENTS } from '#core/statements/costSigns.ts';
 import { LINE_ITEMS, type LineItemCode } from '#core/statements/lineItems.ts';
 import type { Line } from './wordings/lines.ts';
 
+/** Costs as the core counts them, and what a sheet has besides. */
 export const COST_LINES: ReadonlySet<Line> = new Set<Line>([
-  'cogs',
-  'sga',
-  'staff_costs',
-  'research_development',
-  'rent_expense',
-  'other_operating_expense',
-  'depreciation',
-  'amortisation',
-  'depreciation_and_amortisation',
-  'impairment',
-  'interest_expense',
+  ...COST_LINES_OF_STATEMENTS,
   'income_tax',
   'total_operating_costs',
 ]);

@@ -1,5 +1,6 @@
 /** The sign of each row: by block, proven by the totals; single cells are never turned. */
 import { decimal, type Decimal } from '#core/money/decimal.ts';
+import { NEGATIVE_SHARE } from '#core/statements/costSigns.ts';
 import { findSums, type SumFound, type SumRow } from './arithmetic.ts';
 import {
   ASIDE,
@@ -15,9 +16,6 @@ import {
 } from './lineNature.ts';
 import type { ReadRow } from './rows.ts';
 import type { Line } from './wordings/lines.ts';
-
-/** Share of negative cells from which costs or liabilities are written as negative figures: methods.md A1. */
-const NEGATIVE_BLOCK_SHARE = 0.8;
 
 export type Values = readonly (readonly (Decimal | null)[])[];
 
@@ -72,11 +70,10 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
   const of = (wanted: (line: Line) => boolean) =>
     rows.flatMap((row, at) => (row.line && wanted(row.line) ? (printed[at] ?? []) : []));
   /** Exports of ledgers write income as credit, negative. */
-  const turned = shareNegative(of((line) => line === 'revenue')) >= NEGATIVE_BLOCK_SHARE ? -1 : 1;
+  const turned = shareNegative(of((line) => line === 'revenue')) >= NEGATIVE_SHARE ? -1 : 1;
   const values = turned === 1 ? printed : printed.map((row) => row.map((value) => value && value.neg()));
   const negativeShare = shareNegative(of((line) => COST_LINES.has(line)));
-  const assumed =
-    turned === 1 ? negativeShare >= NEGATIVE_BLOCK_SHARE : negativeShare <= 1 - NEGATIVE_BLOCK_SHARE;
+  const assumed = turned === 1 ? negativeShare >= NEGATIVE_SHARE : negativeShare <= 1 - NEGATIVE_SHARE;
   const isCost = (line: Line | null) => line !== null && COST_LINES.has(line);
   const attempt = (costsNegative: boolean) =>
     findSums(
@@ -137,7 +134,7 @@ function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): S
   );
   const of = (lines: ReadonlySet<Line>) =>
     rows.flatMap((row, at) => (row.line && lines.has(row.line) ? (values[at] ?? []) : []));
-  const liabilitiesNegative = shareNegative(of(LIABILITY_LINES)) >= NEGATIVE_BLOCK_SHARE;
+  const liabilitiesNegative = shareNegative(of(LIABILITY_LINES)) >= NEGATIVE_SHARE;
   const equityNegative =
     liabilitiesNegative && shareNegative(of(new Set<Line>(['total_equity_and_liabilities']))) === 1;
   const flips = (line: Line | null): boolean =>
