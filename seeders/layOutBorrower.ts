@@ -1,5 +1,6 @@
 import type { Transaction } from 'sequelize';
 import { addDays, type PlainDate } from '../src/core/calendar/plainDate.ts';
+import { PLAIN_DEFINITION } from '../src/core/measures/definition.ts';
 import { decimal } from '../src/core/money/decimal.ts';
 import { insertBorrower } from '../src/server/db/repositories/borrowers.ts';
 import {
@@ -117,11 +118,13 @@ async function layOutCovenant(tx: Transaction, agreed: DemoCovenant, at: Covenan
       currency: borrower.currency,
       firstTestOn: agreed.firstTestOn,
       everyMonths: 3,
+      basis: null,
+      isOurs: false,
+      springing: null,
+      cureRights: null,
       definition: {
+        ...PLAIN_DEFINITION,
         addBackCap: agreed.addBackCap === null ? null : decimal(agreed.addBackCap),
-        addBackCapBasis: 'before',
-        leasesInDebt: false,
-        cashNettingCap: null,
         undrawnCountsAsLiquidity: isMoney,
       },
     },
@@ -130,6 +133,7 @@ async function layOutCovenant(tx: Transaction, agreed: DemoCovenant, at: Covenan
     from,
     until,
     level: level === null ? null : decimal(level).times(isMoney ? THOUSAND : 1),
+    isReset: false,
   }));
   await insertCovenantLevels(tx, covenantId, levels, agreedAt);
 

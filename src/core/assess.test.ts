@@ -5,10 +5,10 @@ import type { PlainDate } from './calendar/plainDate.ts';
 import { buildCovenant, buildLevel, buildYear } from './covenants/covenant.fixture.ts';
 import { smallestHeadroomAhead } from './covenants/smallestHeadroom.ts';
 import { POLICY_VERSION_1 as policy } from './policy.ts';
-import { buildCrossSection } from './quality/crossSection.ts';
+import { bookCrossSection } from './bookCrossSection.ts';
 
 const asOf: PlainDate = '2026-03-15';
-const nobody = buildCrossSection([], 1);
+const nobody = bookCrossSection([], 1);
 const yearly = { firstTestOn: '2024-12-31', everyMonths: 12 } as const;
 const inputs = buildInputs({
   statements: [

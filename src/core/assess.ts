@@ -1,19 +1,17 @@
 /** THE WALK: statements, measures, covenant tests, reporting quality, patterns, alerts. */
+import { allTests } from './allTests.ts';
 import type { AlertFinding } from './alerts/alert.ts';
 import { findingsOf } from './alerts/alertRules.ts';
+import type { BookCrossSection } from './bookCrossSection.ts';
 import type { BorrowerInputs } from './borrowerInputs.ts';
-import { reportingMonthEnd } from './calendar/fiscalYear.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
-import { testDates } from './covenants/levels.ts';
 import { smallestHeadroom, type SmallestHeadroom } from './covenants/smallestHeadroom.ts';
-import { testCovenant } from './covenants/testCovenant.ts';
 import { justPassingOf, type JustPassing } from './patterns/justPassing.ts';
 import { METHOD_VERSION, type Policy } from './policy.ts';
-import type { CrossSection } from './quality/crossSection.ts';
 import { reportingQuality } from './quality/reportingQuality.ts';
 import type { ReportingQuality } from './quality/score.ts';
-import { openBooks, type Books } from './statements/statementBook.ts';
+import { openBooks } from './statements/statementBook.ts';
 
 export interface Assessment {
   readonly borrowerId: number;
@@ -37,7 +35,7 @@ export interface Assessment {
  */
 export function assess(
   inputs: BorrowerInputs,
-  crossSection: CrossSection,
+  crossSection: BookCrossSection,
   policy: Policy,
   asOf: PlainDate,
 ): Assessment {
@@ -58,18 +56,3 @@ export function assess(
     findings: findingsOf({ inputs, tests, quality, patterns, policy, asOf }),
   };
 }
-
-/** Every test date up to the day; those before the first figures that are kept here are left out. */
-const allTests = (
-  { covenants }: BorrowerInputs,
-  books: Books,
-  policy: Policy,
-  asOf: PlainDate,
-): readonly CovenantTest[] =>
-  covenants.flatMap((covenant) => {
-    const book = books[covenant.scope];
-    const [first] = book.current;
-    return testDates(covenant, asOf)
-      .filter((date) => !first || reportingMonthEnd(first.periodEnd) <= date)
-      .map((date) => testCovenant(covenant, book, date, policy, asOf));
-  });

@@ -1,5 +1,6 @@
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { Covenant } from './covenants/covenant.ts';
+import type { CurrencyRate } from './measures/definition.ts';
 import type { Statement } from './statements/statement.ts';
 
 export const LEGAL_FORMS = [
@@ -47,6 +48,8 @@ export interface BorrowerInputs {
   readonly statements: readonly Statement[];
   readonly covenants: readonly Covenant[];
   readonly undertakings: readonly Undertaking[];
+  /** Currency rates that were recorded, with their sources. */
+  readonly rates: readonly CurrencyRate[];
   /** What was said before the inputs last changed, for "fell since"; null before the first. */
   readonly previous: PreviousAssessment | null;
 }

@@ -91,7 +91,7 @@ export const nightOf = (
 const borrowers = buildBook(12, 'metal goods', 1);
 /** Twelve borrowers of one sector at their last quarter ends. */
 export const peers = borrowers.flatMap((borrower) => peerInputsOfQuarters(borrower, asOf));
-export const crossSection = buildCrossSection(peers, 1);
+export const crossSection = { ...buildCrossSection(peers, 1), patterns: null, ratios: [] };
 /** The first of them, and what its figures of 30 September 2026 bring to the comparison. */
 export const inputs = { ...buildBorrower(1), covenants: [covenant] };
 export const peer = peerInputs(inputs, '2026-09-30', asOf)!;

@@ -7,7 +7,7 @@ import { execute } from '../../src/server/db/sql.ts';
 import { systemActor } from '../../src/server/services/actor.ts';
 import { assessBorrower, assessWithin } from '../../src/server/services/assessBorrower.ts';
 import { finishNight } from '../../src/server/services/finishNight.ts';
-import { peersOfBorrower } from '../../src/server/services/peersOfBorrower.ts';
+import { memberOfBook } from '../../src/server/services/memberOfBook.ts';
 import { runNight, type NightCommand, type NightSteps } from '../../src/server/services/runNight.ts';
 import { buildPerson } from '../support/factories.ts';
 import { ACCEPTED, buildNightBook, rows, type NightBook } from '../support/nightBook.ts';
@@ -31,7 +31,7 @@ const night = (day: string, over: Partial<NightCommand> = {}): NightCommand => (
 });
 const steps = (over: Partial<NightSteps> = {}): NightSteps => ({
   assessWithin,
-  peersOfBorrower,
+  memberOfBook,
   finishNight,
   ...over,
 });
@@ -291,10 +291,8 @@ describe('a borrower that fails', () => {
       night('2026-12-09'),
       steps({
         assessWithin: fails(book.thin.id),
-        peersOfBorrower: (tx, id, knownAt, asOf) =>
-          id === book.thin.id
-            ? Promise.reject(new Error('no peers'))
-            : peersOfBorrower(tx, id, knownAt, asOf),
+        memberOfBook: (tx, id, knownAt, asOf) =>
+          id === book.thin.id ? Promise.reject(new Error('no peers')) : memberOfBook(tx, id, knownAt, asOf),
       }),
     );
     expect(summary).toMatchObject({ tested: 2, failed: 1 });

@@ -2,6 +2,7 @@
 import type { Transaction } from 'sequelize';
 import { addDays, addMonthsToMonthEnd, type PlainDate } from '../../src/core/calendar/plainDate.ts';
 import type { CovenantLevel } from '../../src/core/covenants/covenant.ts';
+import { PLAIN_DEFINITION } from '../../src/core/measures/definition.ts';
 import { decimal } from '../../src/core/money/decimal.ts';
 import type { LineItemCode } from '../../src/core/statements/lineItems.ts';
 import type { Amounts } from '../../src/core/statements/statement.ts';
@@ -127,22 +128,22 @@ export async function buildCovenant(
       operator: '<=',
       roundingPlaces: null,
       scope: 'group',
+      basis: null,
+      isOurs: false,
       currency: 'EUR',
       firstTestOn: '2026-03-31',
       everyMonths: 3,
-      definition: {
-        addBackCap: null,
-        addBackCapBasis: 'before',
-        leasesInDebt: false,
-        cashNettingCap: null,
-        undrawnCountsAsLiquidity: false,
-      },
+      definition: PLAIN_DEFINITION,
+      springing: null,
+      cureRights: null,
       ...given.terms,
     },
     validFrom: '2025-01-01',
     knownFrom: given.knownFrom,
   });
-  const levels = given.levels ?? [{ from: '2025-01-01' as const, until: null, level: decimal('3.5') }];
+  const levels = given.levels ?? [
+    { from: '2025-01-01' as const, until: null, level: decimal('3.5'), isReset: false },
+  ];
   await insertCovenantLevels(tx, id, levels, given.knownFrom);
   return id;
 }

@@ -162,7 +162,7 @@ const deadline: Topic = (inputs) => {
   }
   if ('test_date' in given) {
     const covenant = netLeverageCovenant(
-      [{ from: given.test_date, until: null, level: ONE }],
+      [{ from: given.test_date, until: null, level: ONE, isReset: false }],
       given.test_date,
     );
     const test = testCovenant(

@@ -32,7 +32,9 @@ function tested(
   return testCovenant(covenant, book, testDate, POLICY_VERSION_1, asOf);
 }
 
-const always = (level: Decimal): readonly CovenantLevel[] => [{ from: BEGINNING, until: null, level }];
+const always = (level: Decimal): readonly CovenantLevel[] => [
+  { from: BEGINNING, until: null, level, isReset: false },
+];
 
 const schedule: Topic = (inputs) => {
   const given = z
@@ -44,7 +46,7 @@ const schedule: Topic = (inputs) => {
     .parse(inputs);
   const levels = given.schedule.map(({ until, max }, index) => {
     const before = given.schedule[index - 1]?.until;
-    return { from: before ? addDays(before, 1) : BEGINNING, until, level: max };
+    return { from: before ? addDays(before, 1) : BEGINNING, until, level: max, isReset: false };
   });
   const test = tested(
     levels,
@@ -163,7 +165,7 @@ const reset: Topic = (inputs) => {
     .parse(inputs);
   const levels = [
     ...always(given.original),
-    ...given.amendments.map(({ from, max }) => ({ from, until: null, level: max })),
+    ...given.amendments.map(({ from, max }) => ({ from, until: null, level: max, isReset: true })),
   ];
   return {
     status: Object.fromEntries(

@@ -1,6 +1,7 @@
 /** Statements and covenants that say what a vector says and nothing else. */
 import type { Covenant, CovenantLevel, Waiver } from '#core/covenants/covenant.ts';
 import { addDays, addMonthsToMonthEnd, type PlainDate } from '#core/calendar/plainDate.ts';
+import { PLAIN_DEFINITION } from '#core/measures/definition.ts';
 import { decimal, ZERO, type Decimal } from '#core/money/decimal.ts';
 import type { Amounts, Statement } from '#core/statements/statement.ts';
 
@@ -68,17 +69,16 @@ export const netLeverageCovenant = (
   operator: '<=',
   roundingPlaces: null,
   scope: 'group',
+  basis: null,
+  isOurs: false,
   currency: 'EUR',
   firstTestOn,
   everyMonths: 3,
-  definition: {
-    addBackCap: null,
-    addBackCapBasis: 'before',
-    leasesInDebt: false,
-    cashNettingCap: null,
-    undrawnCountsAsLiquidity: false,
-  },
+  definition: PLAIN_DEFINITION,
   levels,
   addBacks: [],
   waivers,
+  springing: null,
+  cureRights: null,
+  cures: [],
 });

@@ -21,6 +21,7 @@ export const buildInputs = (given: Partial<BorrowerInputs> = {}): BorrowerInputs
   statements: [],
   covenants: [buildCovenant()],
   undertakings: [],
+  rates: [],
   previous: null,
   ...given,
 });

@@ -1,5 +1,6 @@
 /** Covenants for tests: what matters is named, the rest is ordinary. */
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { PLAIN_DEFINITION } from '../measures/definition.ts';
 import { decimal } from '../money/decimal.ts';
 import { buildStatement } from '../statements/statement.fixture.ts';
 import type { Statement } from '../statements/statement.ts';
@@ -14,19 +15,18 @@ export const buildCovenant = (given: Partial<Covenant> = {}): Covenant => ({
   operator: '<=',
   roundingPlaces: null,
   scope: 'group',
+  basis: null,
+  isOurs: false,
   currency: 'EUR',
   firstTestOn: '2025-03-31',
   everyMonths: 3,
-  definition: {
-    addBackCap: null,
-    addBackCapBasis: 'before',
-    leasesInDebt: false,
-    cashNettingCap: null,
-    undrawnCountsAsLiquidity: false,
-  },
+  definition: PLAIN_DEFINITION,
   levels: [buildLevel('2025-01-01', null, '3.5')],
   addBacks: [],
   waivers: [],
+  springing: null,
+  cureRights: null,
+  cures: [],
   ...given,
 });
 
@@ -38,6 +38,7 @@ export const buildLevel = (
   from,
   until,
   level: level === null ? null : decimal(level),
+  isReset: false,
 });
 
 export const buildAddBack = (
@@ -52,6 +53,8 @@ export const buildAddBack = (
   amount: decimal(amount),
   capped: false,
   reason: 'plant closure',
+  evidence: 'board paper of March',
+  approvedBy: null,
   ...given,
 });
 

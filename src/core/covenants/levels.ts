@@ -47,3 +47,21 @@ export function testDates(
   for (let date = firstTestOn; date <= until; date = addMonthsToMonthEnd(date, everyMonths)) dates.push(date);
   return dates;
 }
+
+/**
+ * The first test date of every level that was agreed after signing.
+ *
+ * @example resetDates({ ...covenant, levels: [{ ...covenant.levels[0], from: '2025-08-01', isReset: true }] }).has('2025-09-30') // => true
+ */
+export const resetDates = (
+  covenant: Pick<Covenant, 'firstTestOn' | 'everyMonths' | 'levels'>,
+): ReadonlySet<PlainDate> => {
+  const resets = covenant.levels.filter(({ isReset }) => isReset).map(({ from }) => from);
+  const last = resets.reduce<PlainDate | null>(
+    (latest, from) => (latest && latest > from ? latest : from),
+    null,
+  );
+  if (last === null) return new Set();
+  const dates = testDates(covenant, addMonthsToMonthEnd(last, covenant.everyMonths));
+  return new Set(resets.flatMap((from) => dates.find((date) => date >= from) ?? []));
+};

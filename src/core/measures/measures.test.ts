@@ -7,20 +7,14 @@ import type { Statement } from '../statements/statement.ts';
 import { bookOf } from '../statements/statementBook.ts';
 import { addBacksWithinTwelveMonths, allowAddBacks } from './addBacks.ts';
 import { currentRatio } from './currentRatio.ts';
-import type { AddBack, MeasureRequest } from './definition.ts';
+import { PLAIN_DEFINITION, type AddBack, type MeasureRequest } from './definition.ts';
 import { ebitdaOfTwelveMonths, routesOfTwelveMonths } from './ebitda.ts';
 import { interestCover } from './interestCover.ts';
 import { minimumLiquidity } from './minimumLiquidity.ts';
 import { totalLeverage } from './totalLeverage.ts';
 
 const date: PlainDate = '2025-12-31';
-const definition = {
-  addBackCap: null,
-  addBackCapBasis: 'before',
-  leasesInDebt: false,
-  cashNettingCap: null,
-  undrawnCountsAsLiquidity: false,
-} as const;
+const definition = PLAIN_DEFINITION;
 const request = (statements: readonly Statement[], given: Partial<MeasureRequest> = {}): MeasureRequest => ({
   book: bookOf(statements, 12),
   date,
@@ -113,6 +107,8 @@ describe('add-backs', () => {
       amount: decimal(1),
       capped: false,
       reason: '',
+      evidence: '',
+      approvedBy: null,
     });
     const all = [
       addBack('2025-03-31', 3),

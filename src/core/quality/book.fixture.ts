@@ -36,6 +36,7 @@ export function buildBorrower(seed: number, bent: Bent = {}): BorrowerInputs {
     statements: statementsOf(seed, bent),
     covenants: [],
     undertakings: [],
+    rates: [],
     previous: null,
   };
 }

@@ -15,9 +15,10 @@ import { migration as audit } from './migrations/0002-audit.ts';
 import { migration as borrowers } from './migrations/0003-borrowers.ts';
 import { migration as statements } from './migrations/0004-statements.ts';
 import { migration as results } from './migrations/0005-results.ts';
+import { migration as covenants } from './migrations/0006-covenants.ts';
 import { select } from './sql.ts';
 
-export const MIGRATIONS: readonly Migration[] = [people, audit, borrowers, statements, results];
+export const MIGRATIONS: readonly Migration[] = [people, audit, borrowers, statements, results, covenants];
 
 const LEASE_SECONDS = 30;
 const WAIT_SECONDS = 180;

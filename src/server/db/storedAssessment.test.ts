@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest';
+import { NO_BOOK } from '../../core/bookCrossSection.ts';
 import { assess, type Assessment } from '../../core/assess.ts';
 import type { BorrowerInputs } from '../../core/borrowerInputs.ts';
 import { addMonthsToMonthEnd } from '../../core/calendar/plainDate.ts';
@@ -42,11 +43,11 @@ const inputs: BorrowerInputs = {
     buildCovenant({ id: 2, measure: 'interest-cover', operator: '>=' }),
   ],
   undertakings: [],
+  rates: [],
   previous: null,
 };
 
-const assessed = (): Assessment =>
-  assess(inputs, { version: 0, quarters: [] }, POLICY_VERSION_1, '2026-11-30');
+const assessed = (): Assessment => assess(inputs, NO_BOOK, POLICY_VERSION_1, '2026-11-30');
 
 test('an assessment read back is the one that was stored, to the last digit', () => {
   const assessment = assessed();

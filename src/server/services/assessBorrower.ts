@@ -4,8 +4,8 @@ import type { ServiceProblem } from '../../contracts/problem.ts';
 import type { AlertView } from '../../core/alerts/alertChanges.ts';
 import { leavesOpen } from '../../core/alerts/unknownConditions.ts';
 import { assess, type Assessment } from '../../core/assess.ts';
+import type { BookCrossSection } from '../../core/bookCrossSection.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
-import type { CrossSection } from '../../core/quality/crossSection.ts';
 import { err, ok, type Result } from '../../core/result.ts';
 import { holdAuditHead } from '../db/repositories/audit.ts';
 import { findCurrentBasis, insertAssessment, makeCurrent } from '../db/repositories/assessments.ts';
@@ -24,7 +24,7 @@ export interface AssessmentRequest {
   readonly knownAt: Date;
   readonly asOf: PlainDate;
   /** The night's own; left out by day, where the last stored one stands in: "peers as of last night". */
-  readonly crossSection?: CrossSection;
+  readonly crossSection?: BookCrossSection;
 }
 
 export interface AssessedBorrower {

@@ -9,7 +9,8 @@ import type { RunKind, RunPhase } from '../../contracts/runs.ts';
 import { businessDate } from '../../core/calendar/businessDate.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import { METHOD_VERSION } from '../../core/policy.ts';
-import { buildCrossSection, type CrossSection, type PeerInputs } from '../../core/quality/crossSection.ts';
+import { bookCrossSection, type BookCrossSection } from '../../core/bookCrossSection.ts';
+import type { BookMember } from '../../core/bookMember.ts';
 import { inTransaction, isOutage } from '../db/inTransaction.ts';
 import { findCrossSection, storeCrossSection } from '../db/repositories/crossSections.ts';
 import { releaseLock, takeLock, type HeldLock } from '../db/repositories/jobLocks.ts';
@@ -28,7 +29,7 @@ import {
   type Night,
 } from './eachBorrower.ts';
 import { finishNight, type RunSummary } from './finishNight.ts';
-import { peersOfBorrower } from './peersOfBorrower.ts';
+import { memberOfBook } from './memberOfBook.ts';
 
 export interface NightCommand {
   readonly businessDate: PlainDate;
@@ -45,11 +46,11 @@ export interface NightCommand {
 /** What the night does; a test puts a fault in its place. */
 export interface NightSteps {
   readonly assessWithin: typeof assessWithin;
-  readonly peersOfBorrower: typeof peersOfBorrower;
+  readonly memberOfBook: typeof memberOfBook;
   readonly finishNight: typeof finishNight;
 }
 
-const STEPS: NightSteps = { assessWithin, peersOfBorrower, finishNight };
+const STEPS: NightSteps = { assessWithin, memberOfBook, finishNight };
 
 /** Not done: another run is going on, the date is done and was not asked for again, or the process was told to stop. */
 export interface SkippedRun {
@@ -110,7 +111,7 @@ async function compute(night: Night, steps: NightSteps): Promise<RunSummary> {
   const { run } = night;
   await enter(run, 'tests');
   await eachBorrower(night, 'tests', async (tx, borrowerId) =>
-    JSON.stringify(await steps.peersOfBorrower(tx, borrowerId, run.knownAt, run.businessDate)),
+    JSON.stringify(await steps.memberOfBook(tx, borrowerId, run.knownAt, run.businessDate)),
   );
 
   await enter(run, 'cross-section');
@@ -138,17 +139,15 @@ const enter = (run: RunRecord, phase: RunPhase): Promise<void> =>
   inTransaction((tx) => setPhase(tx, run.id, phase));
 
 /** The attempt's own cross-section, built once: a run that goes on finds it. */
-async function crossSectionOf(run: RunRecord): Promise<CrossSection> {
+async function crossSectionOf(run: RunRecord): Promise<BookCrossSection> {
   return inTransaction(async (tx) => {
     const stored = run.crossSectionId === null ? null : await findCrossSection(tx, run.crossSectionId);
     if (stored) return stored;
-    const peers = (await listOutputs(tx, run.id, 'tests')).flatMap(
-      (text) => JSON.parse(text) as PeerInputs[],
-    );
+    const members = (await listOutputs(tx, run.id, 'tests')).map((text) => JSON.parse(text) as BookMember);
     const crossSection = await storeCrossSection(
       tx,
       { runId: run.id, asOf: run.businessDate, knownAt: run.knownAt, methodVersion: METHOD_VERSION },
-      (version) => buildCrossSection(peers, version),
+      (version) => bookCrossSection(members, version),
     );
     await setCrossSection(tx, run.id, crossSection.version);
     await dropOutputs(tx, run.id, 'tests');

@@ -4,6 +4,7 @@ import type { BorrowerInputs, LegalForm, Undertaking } from '../../../core/borro
 import { groupRows } from '../groupRows.ts';
 import { execute, select, selectOne } from '../sql.ts';
 import { loadCovenants } from './covenantInputs.ts';
+import { loadCurrencyRates } from './currencyRates.ts';
 import { loadPrevious } from './assessments.ts';
 import { loadStatements } from './statementInputs.ts';
 
@@ -43,6 +44,7 @@ export async function loadManyBorrowerInputs(
   const statements = await loadStatements(tx, borrowerIds, knownAt);
   const covenants = await loadCovenants(tx, borrowerIds, knownAt);
   const undertakings = await loadUndertakings(tx, borrowerIds, knownAt);
+  const rates = await loadCurrencyRates(tx, knownAt);
   const previous = await loadPrevious(tx, borrowers, knownAt);
   return borrowers.map(({ id, ...borrower }) => ({
     borrowerId: id,
@@ -50,6 +52,7 @@ export async function loadManyBorrowerInputs(
     statements: statements.get(id) ?? [],
     covenants: covenants.get(id) ?? [],
     undertakings: undertakings.get(id) ?? [],
+    rates,
     previous: previous.get(id) ?? null,
   }));
 }

@@ -1,11 +1,17 @@
 /** Covenants as they are recorded: the terms by validity and knowledge, the level schedule, add-backs and waivers. */
 import type { Transaction } from 'sequelize';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
-import type { AddBack, Covenant, CovenantLevel, Waiver } from '../../../core/covenants/covenant.ts';
+import type {
+  AddBack,
+  Covenant,
+  CovenantLevel,
+  EquityCure,
+  Waiver,
+} from '../../../core/covenants/covenant.ts';
 import { insertRows } from '../insertRows.ts';
 import { execute } from '../sql.ts';
 
-export type CovenantTerms = Omit<Covenant, 'id' | 'facilityId' | 'levels' | 'addBacks' | 'waivers'>;
+export type CovenantTerms = Omit<Covenant, 'id' | 'facilityId' | 'levels' | 'addBacks' | 'waivers' | 'cures'>;
 
 /** Since when something holds and since when the lender knows it. */
 export interface Recorded {
@@ -31,35 +37,48 @@ async function insertTerms(
   covenantId: number,
   { terms, validFrom, knownFrom }: { terms: CovenantTerms } & Recorded,
 ): Promise<void> {
-  const { definition } = terms;
-  await execute(
-    tx,
-    `insert into covenant_terms (covenant_id, name, clause, measure, operator, rounding_places, scope, currency,
-       first_test_on, every_months, add_back_cap, add_back_cap_basis, leases_in_debt, cash_netting_cap,
-       undrawn_counts_as_liquidity, valid_from, known_from)
-     values (:covenantId, :name, :clause, :measure, :operator, :roundingPlaces, :scope, :currency,
-       :firstTestOn, :everyMonths, :addBackCap, :addBackCapBasis, :leasesInDebt, :cashNettingCap,
-       :undrawnCounts, :validFrom, :knownFrom)`,
+  const { definition, cureRights } = terms;
+  await insertRows(tx, 'covenant_terms', [
     {
-      covenantId,
+      covenant_id: covenantId,
       name: terms.name,
       clause: terms.clause,
       measure: terms.measure,
       operator: terms.operator,
-      roundingPlaces: terms.roundingPlaces,
+      rounding_places: terms.roundingPlaces,
       scope: terms.scope,
+      basis: terms.basis,
+      is_ours: terms.isOurs,
       currency: terms.currency,
-      firstTestOn: terms.firstTestOn,
-      everyMonths: terms.everyMonths,
-      addBackCap: definition.addBackCap?.toFixed() ?? null,
-      addBackCapBasis: definition.addBackCapBasis,
-      leasesInDebt: definition.leasesInDebt,
-      cashNettingCap: definition.cashNettingCap?.toFixed() ?? null,
-      undrawnCounts: definition.undrawnCountsAsLiquidity,
-      validFrom,
-      knownFrom,
+      first_test_on: terms.firstTestOn,
+      every_months: terms.everyMonths,
+      add_back_cap: definition.addBackCap?.toFixed() ?? null,
+      add_back_cap_basis: definition.addBackCapBasis,
+      impairment_added_back: definition.impairmentAddedBack,
+      leases_in_debt: definition.leasesInDebt,
+      accounting: definition.accounting,
+      cash_netting_cap: definition.cashNettingCap?.toFixed() ?? null,
+      undrawn_counts_as_liquidity: definition.undrawnCountsAsLiquidity,
+      annualised_first_tests: definition.annualisedFirstTests,
+      debt_rate: definition.debtRate,
+      gearing: definition.gearing,
+      deferred_tax_in_net_worth: definition.deferredTaxInNetWorth,
+      shareholder_loans_in_net_worth: definition.shareholderLoansInNetWorth,
+      opening_cash_in_debt_service: definition.openingCashInDebtService,
+      dividends_in_fixed_charges: definition.dividendsInFixedCharges,
+      valuation_max_age_months: definition.valuationMaxAgeMonths,
+      capex_carried_share: definition.capexCarriedShare?.toFixed() ?? null,
+      profit_share_in_net_worth: definition.profitShareInNetWorth?.toFixed() ?? null,
+      springing_trigger: terms.springing?.trigger.toFixed() ?? null,
+      cure_method: cureRights?.method ?? null,
+      cure_business_days: cureRights?.withinBusinessDays ?? null,
+      cures_in_four: cureRights?.mostInFour ?? null,
+      cures_in_life: cureRights?.mostInLife ?? null,
+      cured_by_next_test: cureRights?.curedByNextTest ?? false,
+      valid_from: validFrom,
+      known_from: knownFrom,
     },
-  );
+  ]);
 }
 
 export async function insertCovenantLevels(
@@ -71,18 +90,18 @@ export async function insertCovenantLevels(
   await insertRows(
     tx,
     'covenant_levels',
-    levels.map(({ from, until, level }) => ({
+    levels.map(({ from, until, level, isReset }) => ({
       covenant_id: covenantId,
       from_date: from,
       until_date: until,
       level: level?.toFixed() ?? null,
+      is_reset: isReset,
       known_from: knownFrom,
     })),
   );
 }
 
-export interface RecordedAddBack extends Omit<AddBack, 'id'> {
-  readonly evidence: string;
+export interface RecordedAddBack extends Omit<AddBack, 'id' | 'approvedBy'> {
   readonly recordedBy: number;
   /** The second person; null while nobody has checked it. */
   readonly checkedBy: number | null;
@@ -122,6 +141,19 @@ export async function insertWaiver(
     `insert into waivers (covenant_id, test_date, granted_on, until_date, conditions, granted_by, known_from)
      values (:covenantId, :testDate, :grantedOn, :until, :conditions, :grantedBy, :knownFrom)`,
     { ...waiver },
+  );
+  return insertId;
+}
+
+export async function insertEquityCure(
+  tx: Transaction,
+  cure: EquityCure & { readonly covenantId: number; readonly recordedBy: number; readonly knownFrom: Date },
+): Promise<number> {
+  const { insertId } = await execute(
+    tx,
+    `insert into equity_cures (covenant_id, quarter_end, method, amount, received_on, recorded_by, known_from)
+     values (:covenantId, :quarterEnd, :method, :amount, :receivedOn, :recordedBy, :knownFrom)`,
+    { ...cure, amount: cure.amount.toFixed() },
   );
   return insertId;
 }

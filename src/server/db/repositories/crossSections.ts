@@ -1,10 +1,7 @@
 import type { Transaction } from 'sequelize';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
-import type { CrossSection } from '../../../core/quality/crossSection.ts';
+import { NO_BOOK, type BookCrossSection } from '../../../core/bookCrossSection.ts';
 import { execute, selectOne } from '../sql.ts';
-
-/** Before the first night there are no peers: what rests on them says so. */
-const NO_CROSS_SECTION: CrossSection = { version: 0, quarters: [] };
 
 /**
  * Stores the peers' standing. Its version is the row's own number, so it is built once the number is known, in
@@ -18,8 +15,8 @@ export async function storeCrossSection(
     readonly knownAt: Date;
     readonly methodVersion: string;
   },
-  build: (version: number) => CrossSection,
-): Promise<CrossSection> {
+  build: (version: number) => BookCrossSection,
+): Promise<BookCrossSection> {
   const { insertId } = await execute(
     tx,
     `insert into cross_sections (run_id, as_of, known_at, method_version, content)
@@ -35,18 +32,18 @@ export async function storeCrossSection(
 }
 
 /** Plain JSON that this file wrote. */
-export async function findCrossSection(tx: Transaction, id: number): Promise<CrossSection | null> {
+export async function findCrossSection(tx: Transaction, id: number): Promise<BookCrossSection | null> {
   const row = await selectOne<{ content: string }>(tx, 'select content from cross_sections where id = :id', {
     id,
   });
-  return row && (JSON.parse(row.content) as CrossSection);
+  return row && (JSON.parse(row.content) as BookCrossSection);
 }
 
-/** The peers as of the last night; NO_CROSS_SECTION before the first. */
-export async function latestCrossSection(tx: Transaction): Promise<CrossSection> {
+/** The peers as of the last night; NO_BOOK before the first. */
+export async function latestCrossSection(tx: Transaction): Promise<BookCrossSection> {
   const row = await selectOne<{ content: string }>(
     tx,
     'select content from cross_sections order by as_of desc, known_at desc, id desc limit 1',
   );
-  return row ? (JSON.parse(row.content) as CrossSection) : NO_CROSS_SECTION;
+  return row ? (JSON.parse(row.content) as BookCrossSection) : NO_BOOK;
 }

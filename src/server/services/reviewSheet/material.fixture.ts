@@ -9,9 +9,10 @@ import {
   buildLevel,
   buildYear,
 } from '../../../core/covenants/covenant.fixture.ts';
+import { PLAIN_DEFINITION } from '../../../core/measures/definition.ts';
 import { decimal } from '../../../core/money/decimal.ts';
 import { POLICY_VERSION_1 } from '../../../core/policy.ts';
-import { buildCrossSection } from '../../../core/quality/crossSection.ts';
+import { NO_BOOK } from '../../../core/bookCrossSection.ts';
 import type { Statement } from '../../../core/statements/statement.ts';
 import type { CheckRecord } from '../../db/repositories/covenantTests.ts';
 import type { FigureSourceRecord, SignalRecord } from '../../db/repositories/reviewSheets.ts';
@@ -34,13 +35,7 @@ export const COVENANTS: readonly Covenant[] = [
     ...yearly,
     id: 1,
     levels: [buildLevel('2024-01-01', '2026-05-31', '3.5'), buildLevel('2026-06-01', null, '3.25')],
-    definition: {
-      addBackCap: decimal('0.25'),
-      addBackCapBasis: 'before',
-      leasesInDebt: false,
-      cashNettingCap: null,
-      undrawnCountsAsLiquidity: false,
-    },
+    definition: { ...PLAIN_DEFINITION, addBackCap: decimal('0.25') },
     addBacks: [buildAddBack('2025-12-31', 0.5, { capped: true })],
   }),
   buildCovenant({
@@ -65,12 +60,7 @@ export interface MaterialGiven {
 
 export function buildMaterial(given: MaterialGiven = {}): SheetMaterial {
   const { covenants = COVENANTS, statements = STATEMENTS, fileName = 'Figures 2025.xlsx' } = given;
-  const assessment = assess(
-    buildInputs({ statements, covenants }),
-    buildCrossSection([], 1),
-    POLICY_VERSION_1,
-    AS_OF,
-  );
+  const assessment = assess(buildInputs({ statements, covenants }), NO_BOOK, POLICY_VERSION_1, AS_OF);
   const facilities = [{ id: 1, name: 'Term loan A' }];
   return {
     view: {

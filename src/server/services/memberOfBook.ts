@@ -1,17 +1,17 @@
 import type { Transaction } from 'sequelize';
+import { bookMember, type BookMember } from '../../core/bookMember.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
-import type { PeerInputs } from '../../core/quality/crossSection.ts';
-import { peerInputsOfQuarters } from '../../core/quality/peerInputs.ts';
 import { loadBorrowerInputs } from '../db/repositories/borrowerInputs.ts';
+import { policyInForce } from '../db/repositories/policies.ts';
 
-/** What one borrower brings to the comparison with its peers, as known by then. */
-export async function peersOfBorrower(
+/** What one borrower brings to the book, as known by then. */
+export async function memberOfBook(
   tx: Transaction,
   borrowerId: number,
   knownAt: Date,
   asOf: PlainDate,
-): Promise<readonly PeerInputs[]> {
+): Promise<BookMember> {
   const inputs = await loadBorrowerInputs(tx, borrowerId, knownAt);
   if (!inputs) throw new Error(`there is no borrower ${borrowerId}`);
-  return peerInputsOfQuarters(inputs, asOf);
+  return bookMember(inputs, await policyInForce(tx, asOf, knownAt), asOf);
 }

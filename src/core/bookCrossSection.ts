@@ -1,0 +1,32 @@
+/** The whole book on one night: the peers' standing, the patterns, and how ratios changed. Plain JSON, stored. */
+import type { BookMember } from './bookMember.ts';
+import type { RatioSeries } from './outlook/ratioSeries.ts';
+import { patternStanding, type PatternStanding } from './patterns/patternStanding.ts';
+import { buildCrossSection, type CrossSection } from './quality/crossSection.ts';
+
+export interface BookCrossSection extends CrossSection {
+  /** Null before the first night. */
+  readonly patterns: PatternStanding | null;
+  readonly ratios: readonly RatioSeries[];
+}
+
+/** Before the first night there are no peers: what rests on them says so. */
+export const NO_BOOK: BookCrossSection = { version: 0, quarters: [], patterns: null, ratios: [] };
+
+/**
+ * What every borrower is held against, out of what each brought. The version also seeds the bootstrap, so that a
+ * stored night can be computed again to the digit.
+ *
+ * @example bookCrossSection([], 1).version // => 1
+ */
+export const bookCrossSection = (members: readonly BookMember[], version: number): BookCrossSection => ({
+  ...buildCrossSection(
+    members.flatMap(({ peers }) => peers),
+    version,
+  ),
+  patterns: patternStanding(
+    members.flatMap(({ headrooms }) => headrooms),
+    version,
+  ),
+  ratios: members.flatMap(({ ratios }) => ratios),
+});

@@ -1,0 +1,36 @@
+import { z } from 'zod';
+import { QUALITY_BANDS, QUALITY_BLOCKS } from '../../../core/quality/score.ts';
+import { day } from './parts.ts';
+
+const quarterScore = z.object({
+  quarterEnd: day,
+  score: z.number().nullable(),
+  noScoreReason: z.string().nullable(),
+  coverage: z.number(),
+  blocks: z.array(
+    z.object({
+      name: z.enum(QUALITY_BLOCKS),
+      weight: z.number(),
+      risk: z.number().nullable(),
+      reason: z.string().nullable(),
+      figures: z.record(z.string(), z.number()),
+      peers: z.number(),
+    }),
+  ),
+  sectorPeers: z.number(),
+  bookPeers: z.number(),
+  sectorWeight: z.number(),
+  derivedCashFlow: z.boolean(),
+});
+
+export const quality = z.object({
+  headline: z.number().nullable(),
+  band: z.enum(QUALITY_BANDS).nullable(),
+  provisional: z.boolean(),
+  noScoreReason: z.string().nullable(),
+  latest: quarterScore.nullable(),
+  history: z.array(quarterScore),
+  explanations: z.array(z.string()),
+  whatWouldChangeIt: z.string().nullable(),
+  remarks: z.array(z.string()),
+});
