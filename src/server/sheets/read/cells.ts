@@ -44,6 +44,13 @@ export interface SheetGrid {
   readonly merges: readonly MergedArea[];
   /** Upper left cells of pictures. */
   readonly pictures: readonly string[];
+  /** Comments beside cells, which hold no figures. */
+  readonly comments: readonly CellComment[];
+}
+
+export interface CellComment {
+  readonly cell: string;
+  readonly text: string;
 }
 
 export interface MergedArea {

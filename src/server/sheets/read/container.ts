@@ -2,6 +2,7 @@
 import { err, ok, type Result } from '#core/result.ts';
 import type { ReadNote, ReadRefusal } from '#core/statements/workbookReading.ts';
 import { refusal } from './refusals.ts';
+import { blindUtf16 } from './textEncoding.ts';
 import { checkArchive } from './zipGate.ts';
 
 const MAX_FILE_BYTES = 10 * 1024 * 1024;
@@ -68,7 +69,7 @@ function otherContent(bytes: Buffer): string | null {
 function looksLikeText(bytes: Buffer): boolean {
   const sample = bytes.subarray(0, 65_536);
   if ((sample[0] === 0xff && sample[1] === 0xfe) || (sample[0] === 0xfe && sample[1] === 0xff)) return true;
-  return !holdsControlBytes(sample);
+  return blindUtf16(sample) !== null || !holdsControlBytes(sample);
 }
 
 function holdsControlBytes(bytes: Buffer): boolean {

@@ -32,7 +32,7 @@ export function factsOfRun(
     const rowWaits = [
       ...row.waitsFor,
       ...signQuestions(table, run, row, asking),
-      ...hiddenQuestions(table, row, asking),
+      ...hiddenQuestions(table, run, row, asking),
     ];
     if (isLeftOut(row, asking)) return [];
     return columns.flatMap((column) => {
@@ -136,14 +136,14 @@ function signOfColour(cell: SheetCell, table: StatementTable, row: PlacedRow, as
 }
 
 /** Hidden rows with amounts are asked about once for the whole file. */
-function hiddenQuestions(table: StatementTable, row: PlacedRow, asking: Asking): string[] {
+function hiddenQuestions(table: StatementTable, run: Run, row: PlacedRow, asking: Asking): string[] {
   if (!row.read.row.hidden) return [];
   const where: CellRef = rowPlace(table.table, row.read.row);
   asking.ask({
     key: HIDDEN_KEY,
     kind: 'hidden-rows',
     holdsFor: 'layout',
-    text: `Hidden rows on '${table.table.sheet.name}' carry amounts, first '${row.read.row.label}'. Do they belong in?`,
+    text: hiddenText(table, run, row),
     where: [where],
     options: [
       { value: 'include', label: 'Include the hidden rows' },
@@ -151,6 +151,16 @@ function hiddenQuestions(table: StatementTable, row: PlacedRow, asking: Asking):
     ],
   });
   return [HIDDEN_KEY];
+}
+
+/** '14 hidden rows on 'BS': 2 carry amounts, first 'Stock', which the totals include.' */
+function hiddenText({ table }: StatementTable, run: Run, row: PlacedRow): string {
+  const hidden = table.sheet.hiddenRows.size;
+  const filled = table.rows.filter(
+    (other) => other.hidden && other.cells.some((cell) => cell?.kind === 'amount'),
+  ).length;
+  const inTotals = run.signed.sums.signs.has(row.index) ? ', which the totals include' : '';
+  return `${hidden} hidden ${hidden === 1 ? 'row' : 'rows'} on '${table.sheet.name}': ${filled} ${filled === 1 ? 'carries' : 'carry'} amounts, first '${row.read.row.label}'${inTotals}. Do they belong in?`;
 }
 
 const isLeftOut = (row: PlacedRow, asking: Asking): boolean =>

@@ -21,6 +21,7 @@ import { placeRows, type PlacedRow } from './placing.ts';
 import { askUnbalanced, readingOf, refusedReading } from './readings.ts';
 import { refusal } from './refusals.ts';
 import { withoutRepeatedColumns, withoutRepeatedTables } from './repeats.ts';
+import { withoutSetAside } from './setAside.ts';
 import { readTrialBalance } from './trialBalance.ts';
 import { isStandardLine } from './lineNature.ts';
 import { type SettledColumns, statementTables, type Run, type StatementTable } from './statements.ts';
@@ -53,7 +54,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     .filter(({ isTrialBalance }) => isTrialBalance)
     .map((table) => readTrialBalance(table, scaleOf(scales, table), asking));
   const all = [...found, ...ledgers.flatMap((ledger) => ledger.facts)];
-  const single = withoutDoubledDepreciation(withoutRepeatedTables(all, asking));
+  const single = withoutSetAside(withoutDoubledDepreciation(withoutRepeatedTables(all, asking)), asking);
   const checks = [
     ...checksOf(
       tables.map((table) => ({ table, scale: scaleOf(scales, table) })),
@@ -70,7 +71,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     );
     return refusedReading(nothing, open, tables, asking);
   }
-  noteContents(tables, facts, asking);
+  noteContents(sheets, tables, facts, asking);
   return readingOf({
     grid: open,
     tables,

@@ -20,8 +20,8 @@ const SENTENCES: Readonly<Record<RefusalCode, (where: string, detail: string) =>
     `The formula${where} has no calculated value, and cannot be worked out from this file. Figures would be missing. Open the file, recalculate it, save it and send it again.`,
   'too-large': (_where, detail) =>
     `The file is too large to read: ${detail}. Remove the sheets that hold no statements and send it again.`,
-  damaged: (_where, detail) =>
-    `The file cannot be read completely: ${detail}. Figures could be missing without notice. Open it, save it anew and send that.`,
+  damaged: (where, detail) =>
+    `The file cannot be read completely${where && `, first at${where}`}: ${detail}. Figures could be missing without notice. Open it, save it anew and send that.`,
   hostile: (_where, detail) =>
     `The file was not opened: ${detail}. A workbook saved by a spreadsheet program has no such content. Save it anew and send that, or ask the sender how it was made.`,
   'took-too-long': (_where, detail) =>

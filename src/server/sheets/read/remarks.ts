@@ -1,10 +1,12 @@
 /** What is worth saying of a file that hinders nothing. */
 import type { Asking } from './asking.ts';
-import { cellName } from './cells.ts';
+import { cellName, type SheetGrid } from './cells.ts';
+import { quoted } from './drawnText.ts';
 import type { TableFact } from './facts.ts';
 import { rowPlace, type StatementTable } from './statements.ts';
 
 export function noteContents(
+  sheets: readonly SheetGrid[],
   tables: readonly StatementTable[],
   facts: readonly TableFact[],
   asking: Asking,
@@ -14,6 +16,7 @@ export function noteContents(
     noteRows(table, asking);
   }
   noteHiddenSheets(facts, asking);
+  for (const sheet of sheets) noteComments(sheet, asking);
   const hasCashFlow = tables.some(({ runs }) =>
     runs.some(
       ({ part, rows }) =>
@@ -84,4 +87,14 @@ function noteHiddenSheets(facts: readonly TableFact[], asking: Asking): void {
       cell,
     });
   }
+}
+
+function noteComments({ name, comments }: SheetGrid, asking: Asking): void {
+  const [first] = comments;
+  if (!first) return;
+  const texts = comments.map(({ cell, text }) => `${cell}: ${text}`);
+  asking.note('comments', `Comments on '${name}' were not read as figures: ${quoted(texts)}.`, {
+    sheet: name,
+    cell: first.cell,
+  });
 }

@@ -2,7 +2,9 @@
 import type { ReadNote } from '#core/statements/workbookReading.ts';
 import { decimalMarkOf } from './amountText.ts';
 import type { SheetCell, WorkbookGrid } from './cells.ts';
+import { raggedNotes, refuseSplitAmounts } from './raggedLines.ts';
 import { refusal, Refused } from './refusals.ts';
+import { decodeText, type DecodedText } from './textEncoding.ts';
 import { textCell } from './workbookGrid.ts';
 
 const MAX_RECORDS = 50_000;
@@ -14,10 +16,13 @@ export function textGrid(bytes: Buffer): {
   readonly grid: WorkbookGrid;
   readonly notes: readonly ReadNote[];
 } {
-  const { text, damaged } = decode(bytes);
+  const decoded = decodeText(bytes);
+  const text = decoded.text.replace(/^\ufeff/, '');
   const stated = /^sep=(.)\r?\n/i.exec(text);
   const content = stated ? text.slice(stated[0].length) : text;
-  const records = parseRecords(content, stated?.[1] ?? separatorOf(content));
+  const separator = stated?.[1] ?? separatorOf(content);
+  const records = parseRecords(content, separator);
+  refuseSplitAmounts(records, separator);
   const mark = decimalMarkOf(records.flat());
   const rows = new Map<number, Map<number, SheetCell>>();
   records.forEach((fields, index) => {
@@ -37,31 +42,26 @@ export function textGrid(bytes: Buffer): {
     hiddenColumns: new Set<number>(),
     merges: [],
     pictures: [],
+    comments: [],
   };
-  return { grid: { kind: 'csv', sheets: [sheet] }, notes: damaged ? [damagedText()] : [] };
+  return { grid: { kind: 'csv', sheets: [sheet] }, notes: [...notesOf(decoded), ...raggedNotes(records)] };
 }
 
-const damagedText = (): ReadNote => ({
-  code: 'damaged-text',
-  text: 'Some letters look damaged: the file was saved in one encoding and labelled as another. Amounts are not touched by it.',
-  where: null,
-});
-
-function decode(bytes: Buffer): { readonly text: string; readonly damaged: boolean } {
-  const text = new TextDecoder(encodingOf(bytes)).decode(bytes);
-  return { text, damaged: /Ã[¤¶¼Ÿ©¨]/.test(text) };
-}
-
-function encodingOf(bytes: Buffer): string {
-  if (bytes[0] === 0xff && bytes[1] === 0xfe) return 'utf-16le';
-  if (bytes[0] === 0xfe && bytes[1] === 0xff) return 'utf-16be';
-  try {
-    new TextDecoder('utf-8', { fatal: true }).decode(bytes);
-    return 'utf-8';
-  } catch (error) {
-    if (error instanceof TypeError) return 'windows-1252';
-    throw error;
+function notesOf({ repaired, damaged }: DecodedText): ReadNote[] {
+  const note = (text: string): ReadNote => ({ code: 'damaged-text', text, where: null });
+  if (repaired) {
+    return [
+      note(
+        'The letters were damaged: the file was saved in one encoding and labelled as another. They were put right. Amounts are not touched by it.',
+      ),
+    ];
   }
+  if (!damaged) return [];
+  return [
+    note(
+      'Some letters are damaged and cannot be put right: labels with them may not be recognised. Amounts are not touched by it. Save the file as UTF-8 and send that for whole labels.',
+    ),
+  ];
 }
 
 /** The separator that stands most evenly in the lines; a comma last, because amounts hold commas. */

@@ -3,7 +3,14 @@ import ExcelJS from 'exceljs';
 import { isPlainDate, type PlainDate } from '#core/calendar/plainDate.ts';
 import { decimal, decimalFromDouble, ZERO, type Decimal } from '#core/money/decimal.ts';
 import { decimalMarkOf, readAmountText, type DecimalMark } from './amountText.ts';
-import { columnNumber, type MergedArea, type SheetCell, type SheetGrid, type WorkbookGrid } from './cells.ts';
+import {
+  columnNumber,
+  type CellComment,
+  type MergedArea,
+  type SheetCell,
+  type SheetGrid,
+  type WorkbookGrid,
+} from './cells.ts';
 import { workOut } from './formulas.ts';
 import { formatShape, printNumber } from './numberFormat.ts';
 import { refusal, Refused } from './refusals.ts';
@@ -48,7 +55,10 @@ function* filledCells(sheet: ExcelJS.Worksheet): Generator<ExcelJS.Cell> {
 function sheetGrid(sheet: ExcelJS.Worksheet, mark: DecimalMark, values: WorkbookValues): SheetGrid {
   const rows = new Map<number, Map<number, SheetCell>>();
   const hiddenRows = new Set<number>();
+  const comments: CellComment[] = [];
   for (const cell of filledCells(sheet)) {
+    const comment = commentOf(cell);
+    if (comment !== '') comments.push({ cell: cell.address, text: comment });
     const read = sheetCell(sheet.name, cell, mark, values);
     if (!read) continue;
     const row = rows.get(read.row) ?? new Map<number, SheetCell>();
@@ -64,7 +74,15 @@ function sheetGrid(sheet: ExcelJS.Worksheet, mark: DecimalMark, values: Workbook
     hiddenColumns: new Set([...columns].filter((column) => sheet.getColumn(column).hidden)),
     merges: sheet.model.merges.map(mergedArea),
     pictures: sheet.getImages().map(({ range }) => cornerOf(range)),
+    comments,
   };
+}
+
+function commentOf(cell: ExcelJS.Cell): string {
+  const note: unknown = cell.note;
+  const words =
+    typeof note === 'string' ? note : textOf({ richText: (note as ExcelJS.Comment | undefined)?.texts });
+  return words.replace(/\s+/g, ' ').trim();
 }
 
 const cornerOf = (range: ExcelJS.ImageRange): string => {

@@ -5,6 +5,7 @@
 import yauzl from 'yauzl';
 import { err, ok, type Result } from '#core/result.ts';
 import type { ReadNote, ReadRefusal } from '#core/statements/workbookReading.ts';
+import { namesOfLinks, quoted, textBoxNote, textsOfDrawing } from './drawnText.ts';
 import { refusal, Refused } from './refusals.ts';
 import { checkXmlPart } from './xmlGate.ts';
 
@@ -33,8 +34,8 @@ export async function checkArchive(bytes: Buffer): Promise<Result<readonly ReadN
     const parts = await listParts(zip);
     const fault = faultOfNames(parts);
     if (fault) return err(fault);
-    await checkContents(zip, parts);
-    return ok(notesOf(parts));
+    const found = await checkContents(zip, parts);
+    return ok([...notesOf(parts, found.links), ...textBoxNote(found.drawn)]);
   } catch (error) {
     if (error instanceof Refused) return err(error.refusal);
     if (isArchiveFault(error)) return err(refusal('damaged', null, reason(error)));
@@ -59,19 +60,34 @@ function faultOfNames(parts: readonly Part[]): ReadRefusal | null {
     return refusal('not-a-workbook', null, 'it is a binary .xlsb workbook');
   }
   if (!seen.has('xl/workbook.xml') || !seen.has('[content_types].xml')) {
-    return refusal('not-a-workbook', null, 'it is an archive or a document of another program');
+    return refusal('not-a-workbook', null, otherArchive(seen));
   }
   return null;
 }
 
-async function checkContents(zip: yauzl.ZipFile, parts: readonly Part[]): Promise<void> {
+function otherArchive(names: ReadonlySet<string>): string {
+  if (names.has('content.xml') && names.has('mimetype')) return 'it is an OpenDocument file (.ods)';
+  return 'it is an archive or a document of another program';
+}
+
+interface Found {
+  readonly drawn: readonly string[];
+  /** Names of the files that it refers to. */
+  readonly links: readonly string[];
+}
+
+async function checkContents(zip: yauzl.ZipFile, parts: readonly Part[]): Promise<Found> {
   let total = 0;
+  const [drawn, links]: [string[], string[]] = [[], []];
   for (const { entry, name } of parts) {
     if (!/\.(xml|rels|vml)$/i.test(name)) continue;
     const content = await inflate(zip, entry, MAX_UNPACKED_BYTES - total);
     total += content.length;
     checkXmlPart(name, content);
+    drawn.push(...textsOfDrawing(name, content));
+    links.push(...namesOfLinks(name, content));
   }
+  return { drawn, links };
 }
 
 /** Other parts (pictures, macros, embedded files) are never inflated here: the workbook library keeps them as they are. */
@@ -103,7 +119,7 @@ async function inflate(zip: yauzl.ZipFile, entry: yauzl.Entry, allowed: number):
 const tooMuch = (): ReadRefusal =>
   refusal('too-large', null, `unpacked it passes ${MAX_UNPACKED_BYTES / 1024 / 1024} MB`);
 
-function notesOf(parts: readonly Part[]): ReadNote[] {
+function notesOf(parts: readonly Part[], links: readonly string[]): ReadNote[] {
   const holds = (pattern: RegExp) => parts.some(({ name }) => pattern.test(name));
   const notes: ReadNote[] = [];
   const add = (code: string, text: string) => notes.push({ code, text, where: null });
@@ -113,7 +129,7 @@ function notesOf(parts: readonly Part[]): ReadNote[] {
   if (holds(/^xl\/externalLinks\//i)) {
     add(
       'external-links',
-      'The file refers to other files. They were not opened; the stored values were read.',
+      `The file refers to other files${links.length > 0 ? `: ${quoted([...new Set(links)])}` : ''}. They were not opened; the stored values were read.`,
     );
   }
   if (holds(/^xl\/(connections\.xml|queryTables\/)/i)) {
