@@ -20,7 +20,8 @@ import { holdsPersonalData } from './personalSheets.ts';
 import { placeRows, type PlacedRow } from './placing.ts';
 import { askUnbalanced, readingOf, refusedReading } from './readings.ts';
 import { refusal } from './refusals.ts';
-import { withoutRepeatedColumns, withoutRepeatedTables } from './repeats.ts';
+import { withoutRepeatedColumns } from './repeats.ts';
+import { withoutRivalTables } from './rivalTables.ts';
 import { withoutSetAside } from './setAside.ts';
 import { readTrialBalance } from './trialBalance.ts';
 import { isStandardLine } from './lineNature.ts';
@@ -54,7 +55,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     .filter(({ isTrialBalance }) => isTrialBalance)
     .map((table) => readTrialBalance(table, scaleOf(scales, table), asking));
   const all = [...found, ...ledgers.flatMap((ledger) => ledger.facts)];
-  const single = withoutSetAside(withoutDoubledDepreciation(withoutRepeatedTables(all, asking)), asking);
+  const single = withoutSetAside(withoutRivalTables(withoutDoubledDepreciation(all), asking), asking);
   const checks = [
     ...checksOf(
       tables.map((table) => ({ table, scale: scaleOf(scales, table) })),

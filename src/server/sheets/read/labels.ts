@@ -43,6 +43,18 @@ const WIDER: Readonly<Partial<Record<Section, Section>>> = {
 
 /** The line of a label that is a known wording; null where it is none. */
 export function lineOf(label: string, part: Part, section: Section | null): Line | null {
+  return lineOfWords(label, part, section) ?? lineOfTwoLanguages(label, part, section);
+}
+
+/** 'Umsatzerlöse / Revenue', 'Net sales (Umsatzerlöse)': both halves name the same line. */
+function lineOfTwoLanguages(label: string, part: Part, section: Section | null): Line | null {
+  const halves = /^(.{3,}?)\s*(?:[/|]|\s[-–—]\s|\()\s*([^()/|]{3,}?)\)?\s*$/.exec(label);
+  if (!halves) return null;
+  const [first, second] = [halves[1] ?? '', halves[2] ?? ''].map((half) => lineOfWords(half, part, section));
+  return first && first === second ? first : null;
+}
+
+function lineOfWords(label: string, part: Part, section: Section | null): Line | null {
   const index = INDEXES.get(part);
   if (!index) return null;
   for (const text of variants(plainLabel(label.replace(SUM_OF_LETTERS, ' ')))) {

@@ -40,6 +40,7 @@ export function placeRows(table: StatementTable, run: Run, asking: Asking): Plac
       waitsFor,
     });
     if (!read.hasAmounts) return done(null, 'a heading');
+    if (answered(table, read, asking)) askPlacement(table, run, read, index, reference, asking);
     const why = dropped.get(index);
     if (why) return done(null, why);
     if (isStandardLine(read.line)) return done(read.line, reasonOf(table, run, read, index, asking));
@@ -90,20 +91,35 @@ function placeUnknown(
   }
   if (!matters(run, index, reference) || read.part === 'cash-flow')
     return done(null, 'unknown wording, too small to matter');
+  const key = askPlacement(table, run, read, index, reference, asking);
+  return done(null, 'unknown wording', asking.isOpen(key) ? [key] : []);
+}
+
+/** An answered question is asked as well, with its answer, so that the answer can be taken back. */
+function askPlacement(
+  table: StatementTable,
+  run: Run,
+  read: ReadRow,
+  index: number,
+  reference: Decimal | null,
+  asking: Asking,
+): string {
   const key = placementKey(table.table.sheet.name, read.row.label);
-  const answer = asking.ask({
+  const part = read.part ?? 'income';
+  const near = nearLines(read.row.label, part, read.section).filter(({ line }) => !isSubtotal(line));
+  asking.ask({
     key,
     kind: 'placement',
     holdsFor: 'layout',
     text: `'${read.row.label}' on '${table.table.sheet.name}' is no wording known here${shareText(run, index, reference)}. Which line does it belong to?`,
     where: [rowPlace(table.table, read.row)],
     options: optionsFor(
-      read.part,
+      part,
       near.map(({ line }) => line),
     ),
     accepts: (given) => given === LEAVE_OUT || LINE_ITEMS.some(({ code }) => code === given),
   });
-  return done(null, 'unknown wording', answer === null ? [key] : []);
+  return key;
 }
 
 /** A cost goes into its total the way costs do. */

@@ -1,8 +1,6 @@
-/** The same line and period read twice: from two columns, or from two tables. */
-import { decimal, type Decimal } from '#core/money/decimal.ts';
+/** The same period read twice, from two columns of one table. */
 import { cellName } from './cells.ts';
 import type { Asking } from './asking.ts';
-import type { TableFact } from './facts.ts';
 import type { SettledColumns, SettledColumn, StatementTable } from './statements.ts';
 
 /** Of columns for one period and one entity, those that are kept; equal ones once, differing ones asked about. */
@@ -70,55 +68,3 @@ const equalFigures = (table: StatementTable, one: SettledColumn, other: SettledC
       return !first || !second || first.eq(second);
     }),
   );
-
-/** Facts of one line and period from several tables: the table that says most of the period is kept. */
-export function withoutRepeatedTables(facts: readonly TableFact[], asking: Asking): TableFact[] {
-  const groups = new Map<string, TableFact[]>();
-  for (const fact of facts) {
-    const key = [fact.borrower ?? '', fact.periodEnd, fact.months, fact.code].join('|');
-    groups.set(key, [...(groups.get(key) ?? []), fact]);
-  }
-  const size = new Map<StatementTable, number>();
-  for (const { table } of facts) size.set(table, (size.get(table) ?? 0) + 1);
-  const rank = (table: StatementTable) => (size.get(table) ?? 0) - (table.table.sheet.hidden ? 1_000_000 : 0);
-  return [...groups.values()].flatMap((group) => {
-    const tables = [...new Set(group.map(({ table }) => table))].sort(
-      (one, other) => rank(other) - rank(one),
-    );
-    const [first, ...others] = tables;
-    if (!first || others.length === 0) return group;
-    const of = (table: StatementTable) => group.filter((fact) => fact.table === table);
-    const differing = others.filter((table) => !near(total(of(first)), total(of(table)), first));
-    if (differing.length === 0) return of(first);
-    const chosen = askSheet(first, differing, group[0], asking);
-    return chosen === null ? [] : of(tables.find((table) => table.table.sheet.name === chosen) ?? first);
-  });
-}
-
-const total = (facts: readonly TableFact[]): Decimal =>
-  facts.reduce((sum, { amount }) => sum.plus(amount), decimal(0));
-
-/** Equal within rounding to the coarser of two units is not told from equal. */
-const near = (one: Decimal, other: Decimal, table: StatementTable): boolean =>
-  one
-    .minus(other)
-    .abs()
-    .lte(decimal(table.scale.unit ?? 1).times(2));
-
-function askSheet(
-  first: StatementTable,
-  differing: readonly StatementTable[],
-  fact: TableFact | undefined,
-  asking: Asking,
-): string | null {
-  const names = [...new Set([first, ...differing].map(({ table }) => table.sheet.name))].sort();
-  if (names.length < 2) return null;
-  return asking.ask({
-    key: `which-sheets:${names.join('|')}`.slice(0, 190),
-    kind: 'which-sheets',
-    holdsFor: 'layout',
-    text: `${names.map((name) => `'${name}'`).join(' and ')} give different figures for the same period (first '${fact?.label ?? ''}' to ${fact?.periodEnd ?? ''}). Which sheet counts?`,
-    where: fact ? [{ sheet: fact.sheet, cell: fact.cell }] : [],
-    options: names.map((name) => ({ value: name, label: name })),
-  });
-}

@@ -6,6 +6,8 @@ export interface Segment {
   readonly values: readonly number[];
 }
 
+const YEAR_HEADING =
+  /^\s*(?:fy|(?:financial |fiscal |business )?year|jahr|gesch[äa]ftsjahr|ann[ée]e|exercice|a[ñn]o|ejercicio|år|jaar|period|periode|périodo|período)\s*$/i;
 const MIN_AMOUNTS_OF_COLUMN = 2;
 /** A number that is probably a year or a day in a heading is no amount there. */
 export function isAmount(cell: SheetCell): boolean {
@@ -20,13 +22,17 @@ export function couldBeYear(cell: SheetCell): boolean {
 /** Runs of label columns, each followed by its run of value columns. */
 export function segmentsOf(sheet: SheetGrid): Segment[] {
   const kinds = new Map<number, ColumnTally>();
-  for (const row of sheet.rows.values()) for (const cell of row.values()) tallyCell(kinds, cell);
+  for (const row of sheet.rows.values()) {
+    const inBody = [...row.values()].some((cell) => isAmount(cell) && !couldBeYear(cell));
+    for (const cell of row.values()) tallyCell(kinds, cell, inBody);
+  }
   const columns = [...kinds.keys()].sort((one, other) => one - other);
   const firstWords = columns.find((column) => holdsWords(kinds.get(column)));
   const segments: { labels: number[]; values: number[] }[] = [];
   for (const column of columns) {
     const tally = kinds.get(column);
     const current = segments.at(-1);
+    if (tally) tally.values += tally.saysYear ? 0 : tally.yearsInBody;
     const isLabel =
       (firstWords !== undefined && column <= firstWords) || (!holdsValues(tally) && holdsWords(tally));
     if (!current)
@@ -43,14 +49,25 @@ export function segmentsOf(sheet: SheetGrid): Segment[] {
 interface ColumnTally {
   values: number;
   texts: number;
+  /** 1990 to 2100 in rows of amounts: amounts of that size, unless the column is one of years. */
+  yearsInBody: number;
+  saysYear: boolean;
   readonly words: Set<string>;
 }
 
 /** Account numbers, dates and repeated codes such as EUR are texts, but no words. */
-function tallyCell(kinds: Map<number, ColumnTally>, cell: SheetCell): void {
-  const tally = kinds.get(cell.column) ?? { values: 0, texts: 0, words: new Set<string>() };
+function tallyCell(kinds: Map<number, ColumnTally>, cell: SheetCell, inBody: boolean): void {
+  const tally = kinds.get(cell.column) ?? {
+    values: 0,
+    texts: 0,
+    yearsInBody: 0,
+    saysYear: false,
+    words: new Set<string>(),
+  };
   kinds.set(cell.column, tally);
+  if (cell.kind === 'text' && YEAR_HEADING.test(cell.text)) tally.saysYear = true;
   if (cell.kind === 'percent' || (isAmount(cell) && !couldBeYear(cell))) tally.values += 1;
+  else if (inBody && isAmount(cell)) tally.yearsInBody += 1;
   else tally.texts += 1;
   if (cell.kind === 'text' && /\p{L}{3}/u.test(cell.text)) tally.words.add(cell.text);
 }

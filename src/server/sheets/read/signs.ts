@@ -42,8 +42,11 @@ function sumRow(
   values: readonly (Decimal | null)[],
   sign: 1 | -1,
   eitherSign: boolean,
+  before?: ReadRow,
 ): SumRow {
   const { line } = row;
+  // 'Sales' below 'Sales north' and 'Sales south': rows without a line of their own, or of the same one.
+  const followsItsParts = before?.hasAmounts === true && (before.line === null || before.line === line);
   const base = {
     values,
     sign,
@@ -62,7 +65,7 @@ function sumRow(
   const saysTotal = /^\s*(?:total|sub-?total|sum(?:me)?|zwischensumme|sous-total|suma)(?![a-z])/i.test(
     row.row.label,
   );
-  const couldBeSum = line === null || saysTotal || row.row.bold;
+  const couldBeSum = line === null || saysTotal || row.row.bold || followsItsParts;
   return { ...base, role: couldBeSum ? 'maybe' : 'part' };
 }
 
@@ -79,7 +82,7 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
     findSums(
       rows.map((row, at) => {
         const free = row.line === null || FREE_SIGNS.has(row.line);
-        return sumRow(row, values[at] ?? [], isCost(row.line) && !costsNegative ? -1 : 1, free);
+        return sumRow(row, values[at] ?? [], isCost(row.line) && !costsNegative ? -1 : 1, free, rows[at - 1]);
       }),
       step,
     );
@@ -111,7 +114,7 @@ function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): 
   const sums = findSums(
     rows.map((row, at) => {
       const free = row.line === null || positiveOutflow(at) || (saysUsed(row) && isSubtotal(row.line));
-      return sumRow(row, values[at] ?? [], 1, free === true);
+      return sumRow(row, values[at] ?? [], 1, free === true, rows[at - 1]);
     }),
     step,
   );
@@ -129,7 +132,7 @@ function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): 
 
 function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
   const sums = findSums(
-    rows.map((row, at) => sumRow(row, values[at] ?? [], 1, false)),
+    rows.map((row, at) => sumRow(row, values[at] ?? [], 1, false, rows[at - 1])),
     step,
   );
   const of = (lines: ReadonlySet<Line>) =>
