@@ -36,6 +36,7 @@ export const buildQuarterScore = (quarterEnd: PlainDate, score: number | null): 
   bookPeers: 60,
   sectorWeight: 1,
   derivedCashFlow: false,
+  earningsAtRisk: null,
 });
 
 export const buildQuality = (given: Partial<ReportingQuality> = {}): ReportingQuality => ({

@@ -93,6 +93,7 @@ function unscored(
     ...others,
     sectorWeight: Math.min(1, others.sectorPeers / QUALITY_TABLE.peers.fullSectorPeers),
     derivedCashFlow: peer.derivedCashFlow,
+    earningsAtRisk: null,
   };
 }
 

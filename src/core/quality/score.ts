@@ -28,6 +28,14 @@ export interface QualityBlock {
   readonly peers: number;
 }
 
+/** What of a year's earnings does not rest on cash as the peers' does, in whole units of the borrower's currency. */
+export interface EarningsAtRisk {
+  /** Unexplained accruals x assets a year ago; never below nought. */
+  readonly unexplained: number;
+  /** Working-capital accruals of twelve months less what growth takes; never below nought. */
+  readonly workingCapital: number;
+}
+
 /** The score of one quarter end. */
 export interface QuarterScore {
   readonly quarterEnd: PlainDate;
@@ -41,6 +49,8 @@ export interface QuarterScore {
   /** Weight given to the sector in the peer percentiles, 0 to 1; the rest leans on the whole book. */
   readonly sectorWeight: number;
   readonly derivedCashFlow: boolean;
+  /** Null where either part cannot be computed. */
+  readonly earningsAtRisk: EarningsAtRisk | null;
 }
 
 export interface ReportingQuality {

@@ -21,6 +21,7 @@ const quarterScore = z.object({
   bookPeers: z.number(),
   sectorWeight: z.number(),
   derivedCashFlow: z.boolean(),
+  earningsAtRisk: z.object({ unexplained: z.number(), workingCapital: z.number() }).nullable().default(null),
 });
 
 export const quality = z.object({
