@@ -28,5 +28,7 @@ export default defineConfig({
       ],
     },
   },
+  // The highlighter colours by inline styles, which the policy above refuses; formulas need no colours.
+  markdown: { syntaxHighlight: false },
   vite: { plugins: [tailwindcss()] },
 });

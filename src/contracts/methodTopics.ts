@@ -1,0 +1,13 @@
+/**
+ * Every topic that a number links to, with the accessible name of the link. A topic is a line here and a file
+ * src/content/methods/TOPIC.md; a test compares them. The order is that of the list of methods within a group.
+ */
+export const METHOD_TOPICS = {
+  'twelve-months': 'How twelve months are read',
+  headroom: 'How headroom is computed',
+  'why-it-moved': 'How a change is split into its causes',
+} as const;
+
+export type MethodTopic = keyof typeof METHOD_TOPICS;
+
+export const METHOD_TOPIC_NAMES = Object.keys(METHOD_TOPICS) as readonly MethodTopic[];
