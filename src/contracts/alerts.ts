@@ -10,6 +10,7 @@ import {
 } from '../core/alerts/alert.ts';
 import type { Outcome } from '../core/covenants/covenantTest.ts';
 import type { QualityBand } from '../core/quality/score.ts';
+import type { MovementsView } from './movements.ts';
 import { pageQuery } from './paging.ts';
 import { day } from './watchlist.ts';
 
@@ -93,6 +94,8 @@ export interface AlertDetail extends AlertRow {
   readonly factDate: string;
   readonly wouldChange: string;
   readonly evidence: readonly { readonly label: string; readonly value: string }[];
+  /** What moved it since the last night; null where it did not move. */
+  readonly movements: MovementsView | null;
   readonly events: readonly AlertEvent[];
   readonly closing: { readonly reason: string; readonly text: string; readonly by: string } | null;
   readonly steps: AlertSteps;

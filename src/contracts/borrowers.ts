@@ -5,6 +5,7 @@ import type { Outcome } from '../core/covenants/covenantTest.ts';
 import type { MeasureCode, MeasureUnit } from '../core/measures/measure.ts';
 import type { QualityBand, ReportingQuality } from '../core/quality/score.ts';
 import type { AlertRow, StripTest } from './alerts.ts';
+import type { MovementsView } from './movements.ts';
 import { pageQuery } from './paging.ts';
 import type { ProposalRow, WatchlistRow } from './watchlist.ts';
 
@@ -164,6 +165,8 @@ export interface BorrowerView {
   readonly computed: ComputedFacts | null;
   readonly covenants: readonly CovenantView[];
   readonly quality: ReportingQuality | null;
+  /** Null before there was an earlier night to hold the result against. */
+  readonly movements: MovementsView | null;
   /** The lender's day, against which due dates stand. */
   readonly today: string;
   readonly alerts: readonly AlertRow[];

@@ -1,6 +1,7 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import type { AlertDetail } from '../../contracts/alerts.ts';
+import { MovementList } from '../borrowers/Movements.tsx';
 import { AlertMark, alertKindText } from '../marks/AlertMark.tsx';
 import { Cautions } from '../marks/Cautions.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
@@ -78,6 +79,12 @@ export function AlertEvidence({ id, first, onChanged, onClose }: AlertEvidencePr
         <span className="type-name">What would change this: </span>
         {alert.wouldChange}
       </p>
+      {alert.movements && (
+        <section className="mt-3">
+          <h3 className="type-heading">Moved since the night of {dayText(alert.movements.since)}</h3>
+          <MovementList rows={alert.movements.rows} />
+        </section>
+      )}
       {alert.closing && (
         <p className="mt-3">
           <span className="type-name">{alert.state === 'closed' ? 'Closed' : 'Asked to close'}: </span>

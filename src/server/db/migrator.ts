@@ -16,9 +16,18 @@ import { migration as borrowers } from './migrations/0003-borrowers.ts';
 import { migration as statements } from './migrations/0004-statements.ts';
 import { migration as results } from './migrations/0005-results.ts';
 import { migration as covenants } from './migrations/0006-covenants.ts';
+import { migration as movements } from './migrations/0008-movements.ts';
 import { select } from './sql.ts';
 
-export const MIGRATIONS: readonly Migration[] = [people, audit, borrowers, statements, results, covenants];
+export const MIGRATIONS: readonly Migration[] = [
+  people,
+  audit,
+  borrowers,
+  statements,
+  results,
+  covenants,
+  movements,
+];
 
 const LEASE_SECONDS = 30;
 const WAIT_SECONDS = 180;

@@ -14,6 +14,7 @@ import { latestCrossSection } from '../db/repositories/crossSections.ts';
 import { policyInForce } from '../db/repositories/policies.ts';
 import { figuresChangedAt } from '../db/repositories/statementInputs.ts';
 import type { Actor } from './actor.ts';
+import { keepWhyItMoved, type CrossSectionOf } from './keepWhyItMoved.ts';
 import { raiseAlerts, type AlertCounts } from './raiseAlerts.ts';
 import { audit, write, type Outcome } from './write.ts';
 
@@ -25,6 +26,8 @@ export interface AssessmentRequest {
   readonly asOf: PlainDate;
   /** The night's own; left out by day, where the last stored one stands in: "peers as of last night". */
   readonly crossSection?: BookCrossSection;
+  /** How peers of an earlier night are read; the night reads them once. */
+  readonly crossSectionOf?: CrossSectionOf;
 }
 
 export interface AssessedBorrower {
@@ -78,6 +81,16 @@ export async function assessWithin(
   if (!isCurrent) return ok({ assessmentId, isCurrent, alerts: NO_ALERTS });
 
   await makeCurrent(tx, assessmentId, assessment);
+  await keepWhyItMoved(
+    tx,
+    {
+      assessmentId,
+      isNight: runId !== null,
+      basis: { inputs, crossSection, policy, asOf },
+      result: assessment,
+    },
+    request.crossSectionOf,
+  );
   const alerts = await raiseAlerts(
     tx,
     actor,

@@ -29,6 +29,7 @@ import {
   type Night,
 } from './eachBorrower.ts';
 import { finishNight, type RunSummary } from './finishNight.ts';
+import { lastReadCrossSection } from './keepWhyItMoved.ts';
 import { memberOfBook } from './memberOfBook.ts';
 
 export interface NightCommand {
@@ -115,9 +116,10 @@ async function compute(night: Night, steps: NightSteps): Promise<RunSummary> {
   );
 
   await enter(run, 'cross-section');
-  const crossSection = await crossSectionOf(run);
+  const crossSection = await bookOfNight(run);
 
   await enter(run, 'scores');
+  const crossSectionOf = lastReadCrossSection();
   const actor = systemActor(`night-${run.id}-${run.attempt}`, run.knownAt);
   await eachBorrower(night, 'scores', async (tx, borrowerId) => {
     const { knownAt, businessDate: asOf } = run;
@@ -126,6 +128,7 @@ async function compute(night: Night, steps: NightSteps): Promise<RunSummary> {
       knownAt,
       asOf,
       crossSection,
+      crossSectionOf,
     });
     if (!done.ok) throw new Error(`borrower ${borrowerId} is ${done.error.kind}`);
     return JSON.stringify(done.value.alerts);
@@ -139,7 +142,7 @@ const enter = (run: RunRecord, phase: RunPhase): Promise<void> =>
   inTransaction((tx) => setPhase(tx, run.id, phase));
 
 /** The attempt's own cross-section, built once: a run that goes on finds it. */
-async function crossSectionOf(run: RunRecord): Promise<BookCrossSection> {
+async function bookOfNight(run: RunRecord): Promise<BookCrossSection> {
   return inTransaction(async (tx) => {
     const stored = run.crossSectionId === null ? null : await findCrossSection(tx, run.crossSectionId);
     if (stored) return stored;

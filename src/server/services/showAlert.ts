@@ -7,11 +7,13 @@ import { deskScope, may } from '../auth/policy.ts';
 import { inTransaction } from '../db/inTransaction.ts';
 import { findAlert, listAlertEvents, type AlertListRecord } from '../db/repositories/alertLists.ts';
 import { actsFor } from '../db/repositories/borrowerDesks.ts';
+import { findCurrentAssessment } from '../db/repositories/assessments.ts';
 import { findWaitingProposal } from '../db/repositories/proposals.ts';
 import { standingEntry } from '../db/repositories/watchlist.ts';
 import type { PersonActor } from './actor.ts';
 import { hindrance, NOT_CARRIED } from './alertHindrance.ts';
 import { lenderDay } from './lenderDay.ts';
+import { movementsOf } from './movementViews.ts';
 import { withStrips } from './listAlerts.ts';
 import { isSecondPerson } from './workAlert.ts';
 import type { Outcome } from './write.ts';
@@ -34,6 +36,7 @@ export function showAlert(actor: PersonActor, id: number): Promise<Outcome<Alert
       factDate: record.factDate,
       wouldChange: record.wouldChange,
       evidence: storedEvidence.parse(JSON.parse(record.evidence)),
+      movements: await movementsOfAlert(tx, record),
       events: (await listAlertEvents(tx, id)).map((event) => ({
         at: event.at.toISOString(),
         who: event.who ?? 'Underkeel',
@@ -48,6 +51,23 @@ export function showAlert(actor: PersonActor, id: number): Promise<Outcome<Alert
       proposalWaiting: waiting !== null,
     });
   });
+}
+
+/** Of the result that stands now; an alert that nothing moved has none. */
+async function movementsOfAlert(
+  tx: Transaction,
+  { borrowerId, kind, covenantId }: AlertListRecord,
+): Promise<AlertDetail['movements']> {
+  const stored = await findCurrentAssessment(tx, borrowerId);
+  const movements =
+    stored &&
+    (await movementsOf(
+      tx,
+      borrowerId,
+      stored,
+      (subject) => subject.kind === 'alert' && subject.alert === kind && subject.covenantId === covenantId,
+    ));
+  return movements && movements.rows.length > 0 ? movements : null;
 }
 
 async function stepsFor(

@@ -14,6 +14,7 @@ import { listFacilities } from '../db/repositories/facilities.ts';
 import type { PersonActor } from './actor.ts';
 import { toCovenantViews } from './covenantViews.ts';
 import { lenderDay } from './lenderDay.ts';
+import { movementsOf } from './movementViews.ts';
 import { alertFilter, withStrips } from './listAlerts.ts';
 import { borrowerWatch } from './listWatchlist.ts';
 import type { Outcome } from './write.ts';
@@ -63,6 +64,7 @@ export async function borrowerView(
     computed: stored && computedFacts(stored),
     covenants: stored ? await covenantViews(tx, id, stored, facilities) : [],
     quality: stored?.assessment.quality ?? null,
+    movements: stored && (await movementsOf(tx, id, stored)),
     today,
     alerts: await withStrips(tx, alerts.rows, actor.now),
     ...watch,
