@@ -1,6 +1,6 @@
 /**
- * Every topic that a number links to, with the accessible name of the link. A topic is a line here and a file
- * src/content/methods/TOPIC.md; a test compares them. The order is that of the list of methods within a group.
+ * Every topic that a number links to, with the accessible name of the link. A topic is a line here and a page
+ * of that name in src/content/methods; a test compares them. The order is that of the list of methods within a group.
  */
 export const METHOD_TOPICS = {
   'twelve-months': 'How twelve months are read',

@@ -1,4 +1,4 @@
-/** What the page of a method must say: the front matter of src/content/methods/TOPIC.md. */
+/** What the page of a method must say: the front matter of each file in src/content/methods. */
 import { METHOD_SETTING_KEYS } from '../core/methodSettings.ts';
 import { POLICY_KEYS } from '../core/policySettings.ts';
 import { LINE_ITEMS } from '../core/statements/lineItems.ts';
