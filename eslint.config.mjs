@@ -62,7 +62,12 @@ const layers = [
     ['services', 'http', 'auth', 'contracts', 'core', 'components', 'layouts', 'styles'],
     'a page calls one service: move the query there',
   ],
-  ['jobs', 'jobs', ['jobs', 'services', 'sheets', 'http', 'db', 'config', 'core'], 'a job calls one service'],
+  [
+    'jobs',
+    'jobs',
+    ['jobs', 'services', 'sheets', 'http', 'db', 'config', 'contracts', 'core'],
+    'a job calls one service',
+  ],
   [
     'seeders',
     'seeders',
