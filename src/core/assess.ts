@@ -6,12 +6,20 @@ import type { BookCrossSection } from './bookCrossSection.ts';
 import type { BorrowerInputs } from './borrowerInputs.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
-import { smallestHeadroom, type SmallestHeadroom } from './covenants/smallestHeadroom.ts';
+import {
+  headroomCovenants,
+  smallestHeadroom,
+  smallestHeadroomsAhead,
+  type SmallestHeadroom,
+  type SmallestHeadroomAhead,
+} from './covenants/smallestHeadroom.ts';
 import { justPassingOf, type JustPassing } from './patterns/justPassing.ts';
+import { nearLinesOf, type CovenantNearLine } from './patterns/nearLine.ts';
 import { METHOD_VERSION, type Policy } from './policy.ts';
 import { reportingQuality } from './quality/reportingQuality.ts';
 import type { ReportingQuality } from './quality/score.ts';
 import { openBooks } from './statements/statementBook.ts';
+import { testsOnAccruals } from './testsOnAccruals.ts';
 
 export interface Assessment {
   readonly borrowerId: number;
@@ -22,8 +30,12 @@ export interface Assessment {
   readonly tests: readonly CovenantTest[];
   /** Against the levels of the test dates; later levels stand with each test, apart. */
   readonly smallestHeadroom: SmallestHeadroom | null;
+  /** The same at each step agreed for later, in order of days. */
+  readonly headroomsAhead: readonly SmallestHeadroomAhead[];
   readonly quality: ReportingQuality;
   readonly patterns: readonly JustPassing[];
+  /** Each covenant of an agreement, as of the last night; empty before the first. */
+  readonly nearLine: readonly CovenantNearLine[];
   readonly findings: readonly AlertFinding[];
 }
 
@@ -40,19 +52,24 @@ export function assess(
   asOf: PlainDate,
 ): Assessment {
   const books = openBooks(inputs, asOf);
-  const tests = allTests(inputs, books, policy, asOf);
+  const tested = allTests(inputs, books, policy, asOf);
   const quality = reportingQuality(inputs, books, crossSection, policy, asOf);
+  const tests = testsOnAccruals(inputs, books, tested, quality);
+  const counting = headroomCovenants(inputs.covenants);
   const covenantIds = inputs.covenants.map(({ id }) => id);
   const patterns = covenantIds.map((id) => justPassingOf(tests, id, policy.repeated.ofLast));
+  const nearLine = nearLinesOf(inputs.covenants, crossSection.patterns);
   return {
     borrowerId: inputs.borrowerId,
     asOf,
     methodVersion: METHOD_VERSION,
     policyVersion: policy.version,
     tests,
-    smallestHeadroom: smallestHeadroom(tests, covenantIds),
+    smallestHeadroom: smallestHeadroom(tests, counting),
+    headroomsAhead: smallestHeadroomsAhead(tests, counting),
     quality,
     patterns,
-    findings: findingsOf({ inputs, tests, quality, patterns, policy, asOf }),
+    nearLine,
+    findings: findingsOf({ inputs, tests, quality, patterns, nearLine, policy, asOf }),
   };
 }

@@ -14,8 +14,7 @@ export interface BookCrossSection extends CrossSection {
 export const NO_BOOK: BookCrossSection = { version: 0, quarters: [], patterns: null, ratios: [] };
 
 /**
- * What every borrower is held against, out of what each brought. The version also seeds the bootstrap, so that a
- * stored night can be computed again to the digit.
+ * What every borrower is held against, out of what each brought.
  *
  * @example bookCrossSection([], 1).version // => 1
  */
@@ -24,9 +23,6 @@ export const bookCrossSection = (members: readonly BookMember[], version: number
     members.flatMap(({ peers }) => peers),
     version,
   ),
-  patterns: patternStanding(
-    members.flatMap(({ headrooms }) => headrooms),
-    version,
-  ),
+  patterns: patternStanding(members.flatMap(({ headrooms }) => headrooms)),
   ratios: members.flatMap(({ ratios }) => ratios),
 });

@@ -5,6 +5,7 @@ import { allTests } from './allTests.ts';
 import { resetDates } from './covenants/levels.ts';
 import { ratioSeries, type RatioSeries } from './outlook/ratioSeries.ts';
 import { headroomRows, type HeadroomRow } from './patterns/headroomRow.ts';
+import { statementDigits, type StatementDigits } from './patterns/statementDigits.ts';
 import type { Policy } from './policy.ts';
 import { peerInputsFrom } from './quality/peerInputs.ts';
 import type { PeerInputs } from './quality/peerFigures.ts';
@@ -15,6 +16,7 @@ export interface BookMember {
   readonly peers: readonly PeerInputs[];
   readonly headrooms: readonly HeadroomRow[];
   readonly ratios: readonly RatioSeries[];
+  readonly digits: StatementDigits;
 }
 
 /**
@@ -40,11 +42,15 @@ export function bookMember(inputs: BorrowerInputs, policy: Policy, asOf: PlainDa
         headroomRows({
           borrowerId,
           sector,
+          roundingPlaces: covenant.roundingPlaces,
           tests: own,
           resetOn: resetDates(covenant),
           curedOn: new Set(covenant.cures.map(({ quarterEnd }) => quarterEnd)),
         }),
       ),
-    ratios: byCovenant.flatMap(({ own }) => ratioSeries({ borrowerId, sector }, own) ?? []),
+    ratios: byCovenant.flatMap(
+      ({ covenant, own }) => ratioSeries({ borrowerId, sector }, own, books[covenant.scope]) ?? [],
+    ),
+    digits: statementDigits(Object.values(books).flatMap(({ current }) => current)),
   };
 }

@@ -20,10 +20,34 @@ const DRAWINGS: Readonly<Record<AlertKind, ReactNode>> = {
       <path {...LINE} d="M1 14h14" />
     </>
   ),
+  pattern: (
+    <>
+      <path {...LINE} d="M1 14h14M8 1v13" />
+      <path className="mark-fill" d="M8.75 4h3v10h-3z" />
+      <path {...LINE} strokeWidth="1" d="M3.5 14v-3M6 14v-1.5M14 14V9" />
+    </>
+  ),
   'met only with add-backs': (
     <>
       <rect {...LINE} x="2.25" y="2.25" width="11.5" height="11.5" />
       <path {...LINE} d="M8 5v6M5 8h6" />
+    </>
+  ),
+  'met only on accruals': (
+    <>
+      <rect {...LINE} x="2.25" y="2.25" width="11.5" height="11.5" />
+      <path {...LINE} d="M5 9.5c1-3 2-3 3-1.5s2 1.5 3-1.5" />
+    </>
+  ),
+  'past our trigger': (
+    <>
+      <rect {...LINE} x="4" y="6" width="8" height="8" />
+      <path {...LINE} d="M1 3h14" />
+    </>
+  ),
+  'waiver, cure running out': (
+    <>
+      <path {...LINE} d="M3 1.75h10M3 14.25h10M4 2v2.5L8 8l4-3.5V2M4 14v-2.5L8 8l4 3.5V14" />
     </>
   ),
   'step-down ahead': (

@@ -2,6 +2,7 @@
 import type { AlertFinding } from './alert.ts';
 import { justPassingRepeated } from './justPassingRepeated.ts';
 import { metOnlyWithAddBacks } from './metOnlyWithAddBacks.ts';
+import { pattern } from './pattern.ts';
 import { priorFiguresRestated } from './priorFiguresRestated.ts';
 import { qualityFell } from './qualityFell.ts';
 import { qualityWeak } from './qualityWeak.ts';
@@ -15,6 +16,7 @@ const ALERT_RULES: readonly AlertRule[] = [
   testNotMet,
   thinHeadroom,
   justPassingRepeated,
+  pattern,
   metOnlyWithAddBacks,
   stepDownAhead,
   qualityFell,

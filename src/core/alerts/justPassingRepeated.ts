@@ -5,6 +5,8 @@ import { testedInWords, testInWords } from '../covenants/wording.ts';
 import { formatShare } from '../money/print.ts';
 import type { JustPassing } from '../patterns/justPassing.ts';
 import type { Policy } from '../policy.ts';
+import { nearLineFacts, nearLineSentence } from '../patterns/patternWording.ts';
+import type { AlertFinding } from './alert.ts';
 import { liveTests, type AlertContext, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
@@ -30,11 +32,19 @@ export const justPassingRepeated: AlertRule = (context) =>
         evidence: [
           { label: 'Just passing', value: `${pattern.inBand} of the last ${pattern.ofLast} tests` },
           { label: 'On', value: pattern.testDates.map(formatDay).join(', ') },
+          ...nearLineOf(covenant.id, context),
           ...testEvidence(covenant, test),
         ],
       },
     ];
   });
+
+/** What the whole book says of it, where it may say anything: added to the observation, never in place of it. */
+function nearLineOf(id: number, { nearLine }: AlertContext): AlertFinding['evidence'] {
+  const figures = nearLine.find(({ covenantId }) => covenantId === id)?.figures;
+  if (!figures?.isPublished) return [];
+  return [{ label: 'Pattern', value: nearLineSentence(figures) }, ...nearLineFacts(figures)];
+}
 
 function isLeaning({ counterfactuals, outcome }: CovenantTest, { quality, policy }: AlertContext): boolean {
   const needsAddBacks = !isNotMet(outcome) && counterfactuals.some((one) => isNotMet(one.outcome));

@@ -65,5 +65,5 @@ export function buildContext(
     ),
   );
   const patterns = inputs.covenants.map(({ id }) => justPassingOf(tests, id, policy.repeated.ofLast));
-  return { inputs, tests, quality, patterns, policy, asOf };
+  return { inputs, tests, quality, patterns, nearLine: [], policy, asOf };
 }

@@ -4,6 +4,7 @@ import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { latestLiveTest } from '../covenants/latestLiveTest.ts';
 import type { JustPassing } from '../patterns/justPassing.ts';
+import type { CovenantNearLine } from '../patterns/nearLine.ts';
 import type { Policy } from '../policy.ts';
 import type { ReportingQuality } from '../quality/score.ts';
 import type { AlertFinding } from './alert.ts';
@@ -15,6 +16,8 @@ export interface AlertContext {
   readonly tests: readonly CovenantTest[];
   readonly quality: ReportingQuality;
   readonly patterns: readonly JustPassing[];
+  /** As of the last night; empty before the first. */
+  readonly nearLine: readonly CovenantNearLine[];
   readonly policy: Policy;
   readonly asOf: PlainDate;
 }

@@ -120,21 +120,49 @@ test('flags what shows on one scale only', () => {
   expect(pattern.isScaleDependent).toBe(true);
 });
 
-test('counts ratios on a coarse step by Frandsen’s test, where the step is given', () => {
-  const onStep = (steps: number, count: number) =>
+test('counts ratios on the agreements’ own step by Frandsen’s test, where an agreement rounds', () => {
+  const onStep = (steps: number, count: number, ratioStep: number | null) =>
     Array.from({ length: count }, (_, k) =>
       buildRow({
         borrowerId: k,
-        headroom: (steps * 0.05) / 3.5,
-        distance: steps * 0.05,
-        tested: 3.5 - steps * 0.05,
+        headroom: (steps * 0.01) / 3.5,
+        distance: steps * 0.01,
+        tested: 3.5 - steps * 0.01,
+        ratioStep,
       }),
     );
-  const rows = [...onStep(-1, 40), ...onStep(0, 90), ...onStep(1, 45)];
-  expect(patternOf(rows).discrete).toBeNull();
-  const found = bookPattern(rows, { ...SETTINGS, ratioStep: 0.05 });
-  expect(found).toMatchObject({ ok: true, value: { discrete: { n: 175 } } });
-  expect(found.ok && found.value.discrete!.pAtLeast).toBeLessThan(0.001);
+  const rowsAt = (ratioStep: number | null) => [
+    ...onStep(-1, 40, ratioStep),
+    ...onStep(0, 90, ratioStep),
+    ...onStep(1, 45, ratioStep),
+  ];
+  expect(patternOf(rowsAt(null)).discrete).toBeNull();
+  const { discrete } = patternOf([...rowsAt(0.01), ...onStep(0, 30, null)]);
+  expect(discrete).toMatchObject({ n: 175, counts: { previous: 40, at: 90, next: 45 }, rounded: 175 });
+  expect(discrete!.pAtLeast).toBeLessThan(0.001);
+});
+
+test('says of how many borrowers and of which days it speaks, and counts them at every width', () => {
+  const rows = buildEvenBook(600).map((row, k) => ({
+    ...row,
+    testDate: k % 2 ? ('2024-12-31' as const) : ('2026-09-30' as const),
+  }));
+  const pattern = patternOf(rows);
+  expect(pattern).toMatchObject({ borrowers: 150, from: '2024-12-31', until: '2026-09-30' });
+  expect(pattern.histograms.map(({ width, from, counts }) => [width, from, counts.length])).toEqual([
+    [0.02, -0.3, 45],
+    [0.01, -0.3, 90],
+    [0.03, -0.3, 30],
+  ]);
+  for (const { counts, below, above } of pattern.histograms)
+    expect(counts.reduce((sum, count) => sum + count, below + above)).toBe(600);
+  const { bins } = pattern.headline;
+  expect(pattern.histograms[0]!.counts.slice(13, 17)).toEqual([
+    bins.farLeft,
+    bins.left,
+    bins.right,
+    bins.farRight,
+  ]);
 });
 
 describe('parts of the book', () => {

@@ -2,12 +2,13 @@ import { ok, type Result } from '../result.ts';
 import { approximateSignTest, type SignTest } from '../statistics/approximateSignTest.ts';
 import { clusterBootstrap, type BootstrapInterval } from '../statistics/clusterBootstrap.ts';
 import { densityBreak, type DensityBreak, type DensityBreakError } from '../statistics/densityBreak.ts';
-import { discreteCutoff, type DiscreteCutoff } from '../statistics/discreteCutoff.ts';
-import type { FourBins } from '../statistics/standardizedDifference.ts';
+import type { PlainDate } from '../calendar/plainDate.ts';
 import type { StatisticsError } from '../statistics/statisticsError.ts';
+import { coarseRatios, type CoarseRatios } from './coarseRatios.ts';
 import { groupedBy } from './groupedBy.ts';
+import { headroomHistogram, type HeadroomHistogram } from './headroomHistogram.ts';
 import { removedRows, type HeadroomRow, type Removal } from './headroomRow.ts';
-import { headroomsOf, keptRows, type KeptRows, type TooFewNearLimit } from './nearLimit.ts';
+import { borrowersOf, headroomsOf, keptRows, type KeptRows, type TooFewNearLimit } from './nearLimit.ts';
 import { onSecondScale } from './secondScale.ts';
 import { sidesOfLimit, type SidesOfLimit } from './sidesOfLimit.ts';
 import { splitBy, splitByRun, type RunSplit, type SplitPart } from './splits.ts';
@@ -23,8 +24,6 @@ export interface BookPatternSettings {
   readonly widths: readonly [number, ...number[]];
   /** Cut-offs at which nothing should show. */
   readonly placeboPoints: readonly number[];
-  /** Where ratios are printed to a coarse step (0.05x): that step, in the measure's own unit. */
-  readonly ratioStep: number | null;
   readonly draws: number;
   readonly seed: number;
 }
@@ -33,16 +32,21 @@ export interface BookPatternSettings {
 export const BOOK_PATTERN_SETTINGS: Omit<BookPatternSettings, 'seed'> = {
   widths: [0.02, 0.01, 0.03],
   placeboPoints: [0.06, 0.1, 0.14, 0.2],
-  ratioStep: null,
   draws: 500,
 };
 
 export interface BookPattern {
   readonly n: number;
+  readonly borrowers: number;
+  /** First and last test date among them. */
+  readonly from: PlainDate;
+  readonly until: PlainDate;
   readonly nearLimit: number;
   /** Tests whose ratio has no meaning or that have net cash: counted in n, outside every window. */
   readonly withoutHeadroom: number;
   readonly removed: Readonly<Record<Removal, number>>;
+  /** One a width, in the order of the settings. */
+  readonly histograms: readonly HeadroomHistogram[];
   readonly headline: SidesOfLimit;
   readonly otherWidths: readonly SidesOfLimit[];
   readonly secondScale: SidesOfLimit;
@@ -57,8 +61,8 @@ export interface BookPattern {
   };
   readonly signTest: Result<SignTest, StatisticsError>;
   readonly hasLowPower: boolean;
-  /** Null where ratios are not on a coarse step. */
-  readonly discrete: DiscreteCutoff | null;
+  /** Null where no agreement rounds its ratio. */
+  readonly discrete: CoarseRatios | null;
   readonly byMeasure: readonly SplitPart[];
   readonly bySector: readonly SplitPart[];
   readonly byRun: RunSplit;
@@ -79,14 +83,19 @@ export function bookPattern(
   const kept = keptRows(rows);
   if (!kept.ok) return kept;
   const { headrooms, n, nearLimit } = kept.value;
+  const dates = kept.value.rows.map(({ testDate }) => testDate).sort();
   const [width, ...otherWidths] = settings.widths;
   const headline = sidesOfLimit(headrooms, n, width, 0);
   const secondScale = sidesOfLimit(onSecondScale(kept.value.rows), n, width, 0);
   return ok({
     n,
+    borrowers: borrowersOf(rows),
+    from: dates[0]!,
+    until: dates.at(-1)!,
     nearLimit,
     withoutHeadroom: n - headrooms.length,
     removed: removedRows(rows),
+    histograms: settings.widths.map((each) => headroomHistogram(headrooms, each)),
     headline,
     otherWidths: otherWidths.map((each) => sidesOfLimit(headrooms, n, each, 0)),
     secondScale,
@@ -96,7 +105,7 @@ export function bookPattern(
     densityBreak: densityBreaks(headrooms),
     signTest: approximateSignTest(headrooms, 0, SIGNIFICANCE, 'one-sided'),
     hasLowPower: n < LOW_POWER_BELOW,
-    discrete: settings.ratioStep === null ? null : onCoarseScale(kept.value.rows, settings.ratioStep),
+    discrete: coarseRatios(kept.value.rows),
     byMeasure: splitBy(rows, ({ measure }) => measure, width),
     bySector: splitBy(rows, ({ sector }) => sector, width),
     byRun: splitByRun(rows, width),
@@ -109,21 +118,17 @@ const isOtherwise = (first: SidesOfLimit, second: SidesOfLimit): boolean =>
   isSignificant(first) !== isSignificant(second) ||
   Math.sign(first.right.zMultinomial ?? 0) !== Math.sign(second.right.zMultinomial ?? 0);
 
+/** Each borrower's own share of the excess is drawn with all of its tests, whatever their covenants. */
 function excessOverBorrowers(
   { rows }: KeptRows,
   width: number,
   { draws, seed }: BookPatternSettings,
 ): Result<BootstrapInterval, StatisticsError> {
-  const borrowers = [...groupedBy(rows, ({ borrowerId }) => borrowerId).values()].map((own) =>
-    binsAround(headroomsOf(own), width, 0),
-  );
-  const total = (drawn: readonly FourBins[], of: (bins: FourBins) => number): number =>
-    drawn.reduce((sum, bins) => sum + of(bins), 0);
-  return clusterBootstrap(
-    borrowers,
-    (drawn) => total(drawn, ({ left, right, farRight }) => right - (left + farRight) / 2),
-    { draws, seed },
-  );
+  const shares = [...groupedBy(rows, ({ borrowerId }) => borrowerId).values()].map((own) => {
+    const { left, right, farRight } = binsAround(headroomsOf(own), width, 0);
+    return right - (left + farRight) / 2;
+  });
+  return clusterBootstrap(shares, (drawn) => drawn.reduce((sum, share) => sum + share, 0), { draws, seed });
 }
 
 /** Beyond one whole level either side EBITDA is near nought, and a few such ratios would set the width of the bins. */
@@ -135,13 +140,4 @@ function densityBreaks(headrooms: readonly number[]): BookPattern['densityBreak'
   if (!defaultBandwidth.ok) return { defaultBandwidth, halfBandwidth: defaultBandwidth };
   const bandwidth = defaultBandwidth.value.bandwidth / 2;
   return { defaultBandwidth, halfBandwidth: densityBreak(within, 0, { bandwidth }) };
-}
-
-/** Second differences of a density over steps of 0.05x stay within this share of it. Source: methods.md Part C 3.3. */
-const CURVATURE_BOUND = 0.05;
-
-function onCoarseScale(rows: readonly HeadroomRow[], step: number): DiscreteCutoff {
-  const cells = rows.flatMap(({ distance }) => (distance === null ? [] : [Math.round(distance / step)]));
-  const count = (cell: number): number => cells.filter((each) => each === cell).length;
-  return discreteCutoff({ previous: count(-1), at: count(0), next: count(1) }, CURVATURE_BOUND);
 }

@@ -13,6 +13,7 @@ export const buildRow = (given: Partial<HeadroomRow> = {}): HeadroomRow => {
     headroom,
     distance: headroom === null ? null : headroom * 3.5,
     tested: headroom === null ? null : 3.5 * (1 - headroom),
+    ratioStep: null,
     metBefore: 0,
     removal: null,
     ...given,

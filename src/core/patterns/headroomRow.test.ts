@@ -9,10 +9,14 @@ const testOn = (testDate: CovenantTest['testDate'], given: Partial<CovenantTest>
   testDate,
   ...given,
 });
-const rowsOf = (tests: readonly CovenantTest[], given: { reset?: string[]; cured?: string[] } = {}) =>
+const rowsOf = (
+  tests: readonly CovenantTest[],
+  given: { reset?: string[]; cured?: string[]; roundingPlaces?: number } = {},
+) =>
   headroomRows({
     borrowerId: 7,
     sector: 'metal goods',
+    roundingPlaces: given.roundingPlaces ?? null,
     tests,
     resetOn: new Set(given.reset as CovenantTest['testDate'][]),
     curedOn: new Set(given.cured as CovenantTest['testDate'][]),
@@ -27,6 +31,13 @@ describe('rows of a covenant', () => {
     const [row] = rowsOf([testOn('2026-03-31')]);
     expect(row).toMatchObject({ borrowerId: 7, measure: 'net-leverage', distance: 0.5, tested: 3 });
     expect(row?.headroom).toBeCloseTo(1 / 7, 12);
+  });
+
+  test('carry the step to which the agreement rounds', () => {
+    const steps = [{}, { roundingPlaces: 2 }, { roundingPlaces: 1 }].map(
+      (given) => rowsOf([testOn('2026-03-31')], given)[0]?.ratioStep,
+    );
+    expect(steps).toEqual([null, 0.01, 0.1]);
   });
 
   test('leave out, each with its reason, waived, reset, cured and first tests', () => {

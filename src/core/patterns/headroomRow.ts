@@ -23,6 +23,8 @@ export interface HeadroomRow {
   readonly distance: number | null;
   /** The tested ratio or amount. */
   readonly tested: number | null;
+  /** Where the agreement rounds the ratio before comparing: its step, in the measure's own unit; 0.01 for two places. */
+  readonly ratioStep: number | null;
   /** Tests in a row, up to the one before, that were met. */
   readonly metBefore: number;
   readonly removal: Removal | null;
@@ -32,6 +34,8 @@ export interface HeadroomRow {
 export interface CovenantHistory {
   readonly borrowerId: number;
   readonly sector: string;
+  /** Decimal places that the agreement rounds to; null compares unrounded. */
+  readonly roundingPlaces: number | null;
   /** Oldest first. */
   readonly tests: readonly CovenantTest[];
   /** Test dates that were the first after an amendment of the level. */
@@ -44,9 +48,11 @@ export interface CovenantHistory {
  * The rows of one covenant. Tests without a result are no rows. A test that would be removed for two reasons has the
  * first of the list; removed tests still count in the runs of tests met, by what they came to without waiver.
  *
- * @example headroomRows({ borrowerId: 1, sector: 'metal goods', tests: [test, test], resetOn: new Set(), curedOn: new Set() })[1].metBefore // => 1
+ * @example headroomRows({ borrowerId: 1, sector: 'metal goods', roundingPlaces: null, tests: [test, test], resetOn: new Set(), curedOn: new Set() })[1].metBefore // => 1
  */
 export function headroomRows(history: CovenantHistory): readonly HeadroomRow[] {
+  const { roundingPlaces } = history;
+  const ratioStep = roundingPlaces === null ? null : Number(`1e-${roundingPlaces}`);
   let metBefore = 0;
   return history.tests.filter(hasResult).map((test, place) => {
     const row = {
@@ -58,6 +64,7 @@ export function headroomRows(history: CovenantHistory): readonly HeadroomRow[] {
       headroom: test.headroom.shareOfLevel?.toNumber() ?? null,
       distance: test.headroom.absolute?.toNumber() ?? null,
       tested: test.tested?.toNumber() ?? null,
+      ratioStep,
       metBefore,
       removal: removalOf(test, place, history),
     };

@@ -48,3 +48,14 @@ export function headroomsOf(rows: readonly Pick<HeadroomRow, 'headroom'>[]): rea
   for (const { headroom } of rows) if (headroom !== null) headrooms.push(headroom);
   return headrooms;
 }
+
+/**
+ * How many borrowers have a test that is not removed.
+ *
+ * @example borrowersOf([{ borrowerId: 1, removal: null }, { borrowerId: 2, removal: 'waived' }]) // => 1
+ */
+export function borrowersOf(rows: readonly Pick<HeadroomRow, 'borrowerId' | 'removal'>[]): number {
+  const borrowers = new Set<number>();
+  for (const { borrowerId, removal } of rows) if (removal === null) borrowers.add(borrowerId);
+  return borrowers.size;
+}

@@ -26,6 +26,8 @@ export interface RankedSeries<Id> extends NearLineEvidence {
   readonly listed: boolean;
   /** With whom it was fitted. */
   readonly peers: 'sector' | 'book';
+  /** How many series of them, itself among them. */
+  readonly peerCount: number;
 }
 
 export interface NearLineRanking<Id> {
@@ -67,6 +69,7 @@ export function rankNearLine<Id>(
     localFdr: 1 - posterior(priorShare, each.bayesFactor),
     hasEnoughNear: each.near >= FEWEST_NEAR,
     peers: fits[k]!.peers,
+    peerCount: fits[k]!.peerCount,
   }));
   const listed = listOf(ranked);
   return {
@@ -81,6 +84,7 @@ export function rankNearLine<Id>(
 interface PeerFit {
   readonly chances: NearChances;
   readonly peers: 'sector' | 'book';
+  readonly peerCount: number;
 }
 
 function fitByPeers(
@@ -97,11 +101,13 @@ function fitByPeers(
       fitHeadrooms(
         grid,
         members.map((k) => samples[k]!),
-      ).chances.forEach((chances, place) => (fits[members[place]!] = { chances, peers: 'sector' }));
+      ).chances.forEach((chances, place) => {
+        fits[members[place]!] = { chances, peers: 'sector', peerCount: members.length };
+      });
   }
   if (leaning.length === 0) return fits;
   const { chances } = fitHeadrooms(grid, samples);
-  for (const k of leaning) fits[k] = { chances: chances[k]!, peers: 'book' };
+  for (const k of leaning) fits[k] = { chances: chances[k]!, peers: 'book', peerCount: series.length };
   return fits;
 }
 

@@ -1,8 +1,11 @@
 import { expect, test } from 'vitest';
 import {
   BOOK_SENTENCE,
+  formatProbability,
+  INNOCENT_REASONS,
   LEVERAGE_SENTENCE,
   LOW_POWER_SENTENCE,
+  NO_PATTERN_SENTENCE,
   NOT_ENOUGH_NEAR,
   nearLineSentence,
 } from './patternWording.ts';
@@ -17,6 +20,22 @@ test('says nothing below three tests near the line', () => {
 
 test('is never worded stronger than a pattern', () => {
   const sentence = nearLineSentence({ near: 6, passing: 6, expectedPassing: 2 });
-  const texts = [BOOK_SENTENCE, LEVERAGE_SENTENCE, LOW_POWER_SENTENCE, NOT_ENOUGH_NEAR, sentence];
-  for (const text of texts) expect(text).not.toMatch(/manipulat|fraud|misconduct|breach|deliberate|manage/i);
+  const texts = [
+    ...[BOOK_SENTENCE, NO_PATTERN_SENTENCE, LEVERAGE_SENTENCE, LOW_POWER_SENTENCE, NOT_ENOUGH_NEAR],
+    ...[INNOCENT_REASONS, sentence],
+  ];
+  for (const text of texts)
+    expect(text).not.toMatch(
+      /manipulat|fraud|misconduct|breach|deliberate|manage|lift|suspicio|evidence of/i,
+    );
+});
+
+test.each([
+  [0.0009999, 'below 0.001'],
+  [0.001, '0.001'],
+  [0.0999, '0.100'],
+  [0.1, '0.10'],
+  [1, '1.00'],
+])('prints a probability of %s as %s', (value, text) => {
+  expect(formatProbability(value)).toBe(text);
 });

@@ -3,13 +3,15 @@ import { risingTrend, type Trend } from '../statistics/trend.ts';
 import type { StatisticsError } from '../statistics/statisticsError.ts';
 import { groupedBy } from './groupedBy.ts';
 import type { HeadroomRow } from './headroomRow.ts';
-import { headroomsOf, keptRows, type TooFewNearLimit } from './nearLimit.ts';
+import { borrowersOf, headroomsOf, keptRows, type TooFewNearLimit } from './nearLimit.ts';
 import { sidesOfLimit, type SidesOfLimit } from './sidesOfLimit.ts';
 import { binsAround } from './windows.ts';
 
 /** Both sides of the limit in one part of the book, refused where it is too small. */
 export interface SplitPart {
   readonly name: string;
+  /** With tests that count. */
+  readonly borrowers: number;
   readonly sides: Result<SidesOfLimit, TooFewNearLimit>;
 }
 
@@ -69,6 +71,7 @@ export function splitByRun(rows: readonly HeadroomRow[], width: number): RunSpli
 
 function partOfBook(name: string, rows: readonly HeadroomRow[], width: number): SplitPart {
   const kept = keptRows(rows);
-  if (!kept.ok) return { name, sides: kept };
-  return { name, sides: ok(sidesOfLimit(kept.value.headrooms, kept.value.n, width, 0)) };
+  const borrowers = borrowersOf(rows);
+  if (!kept.ok) return { name, borrowers, sides: kept };
+  return { name, borrowers, sides: ok(sidesOfLimit(kept.value.headrooms, kept.value.n, width, 0)) };
 }

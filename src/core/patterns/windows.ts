@@ -25,3 +25,15 @@ export function binsAround(values: readonly number[], width: number, cutoff: num
   const [farLeft = 0, left = 0, right = 0, farRight = 0] = counts;
   return { farLeft, left, right, farRight };
 }
+
+/**
+ * In which interval of a width a value lies, counted from the limit: 0 is the first on the passing side. By the same
+ * edges as the bins around a cut-off.
+ *
+ * @example [-0.001, 0, 0.06].map((value) => binOf(value, 0.02)) // => [-1, 0, 3]
+ */
+export function binOf(value: number, width: number): number {
+  const near = Math.floor(value / width);
+  if (value < edge(near, width)) return near - 1;
+  return value >= edge(near + 1, width) ? near + 1 : near;
+}

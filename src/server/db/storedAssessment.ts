@@ -4,6 +4,7 @@ import { ALERT_KINDS, SEVERITIES } from '../../core/alerts/alert.ts';
 import type { Assessment } from '../../core/assess.ts';
 import { covenantTest } from './stored/covenantTest.ts';
 import { amount, day } from './stored/parts.ts';
+import { nearLine } from './stored/patterns.ts';
 import { quality } from './stored/quality.ts';
 
 const assessment = z.object({
@@ -13,6 +14,7 @@ const assessment = z.object({
   policyVersion: z.number(),
   tests: z.array(covenantTest),
   smallestHeadroom: z.object({ covenantId: z.number(), mayFall: amount }).nullable(),
+  headroomsAhead: z.array(z.object({ covenantId: z.number(), from: day, mayFall: amount })).default([]),
   quality,
   patterns: z.array(
     z.object({
@@ -23,6 +25,7 @@ const assessment = z.object({
       testDates: z.array(day),
     }),
   ),
+  nearLine,
   findings: z.array(
     z.object({
       kind: z.enum(ALERT_KINDS),
