@@ -2,7 +2,6 @@ import fc from 'fast-check';
 import { Matrix, QrDecomposition } from 'ml-matrix';
 import { expect, test } from 'vitest';
 import { leastSquares } from './leastSquares.ts';
-import { LONGLEY, NORRIS, WAMPLER } from './nistStrd.fixture.ts';
 
 const close = (got: readonly number[], certified: readonly number[], relative: number): void => {
   expect(got).toHaveLength(certified.length);
@@ -16,31 +15,6 @@ const fitted = (...args: Parameters<typeof leastSquares>) => {
   if (!fit.ok) throw new Error(fit.error.kind);
   return fit.value;
 };
-
-test.each([
-  ['Norris', NORRIS, 1e-12],
-  ['Longley, nearly collinear', LONGLEY, 1e-9],
-])('agrees with the certified values of NIST StRD %s', (_name, set, relative) => {
-  const fit = fitted(set.response, set.columns, { constant: true });
-  close(fit.coefficients, set.certified.coefficients, relative);
-  close(fit.standardErrors, set.certified.standardErrors, relative);
-  close([fit.residualStandardDeviation], [set.certified.residualStandardDeviation], relative);
-  close([fit.rSquared!], [set.certified.rSquared], 1e-12);
-});
-
-test.each([
-  ['Wampler 1', 1],
-  ['Wampler 2', 0.1],
-])('finds the fifth-degree polynomial of NIST StRD %s', (_name, base) => {
-  const { columns, polynomial } = WAMPLER;
-  const fit = fitted(polynomial(base), columns, { constant: true });
-  close(
-    fit.coefficients,
-    [0, 1, 2, 3, 4, 5].map((power) => base ** power),
-    1e-8,
-  );
-  expect(fit.rSquared).toBeCloseTo(1, 12);
-});
 
 test('needs one degree of freedom', () => {
   expect(leastSquares([1, 2], [[0, 1]], { constant: true })).toEqual({

@@ -2,7 +2,7 @@
  * NIST Statistical Reference Datasets, linear least squares (www.itl.nist.gov/div898/strd): data and certified values
  * as several public test suites reproduce them.
  */
-interface CertifiedRegression {
+export interface CertifiedRegression {
   readonly response: readonly number[];
   readonly columns: readonly (readonly number[])[];
   readonly certified: {
@@ -27,10 +27,10 @@ export const NORRIS: CertifiedRegression = {
     ],
   ],
   certified: {
-    coefficients: [-0.262323073774, 1.00211681802],
-    standardErrors: [0.232818234301, 0.000429796848],
-    residualStandardDeviation: 0.884796396144,
-    rSquared: 0.999993745884,
+    coefficients: [-0.262323073774029, 1.00211681802045],
+    standardErrors: [0.232818234301152, 0.000429796848199937],
+    residualStandardDeviation: 0.884796396144373,
+    rSquared: 0.999993745883712,
   },
 };
 
@@ -68,10 +68,70 @@ export const LONGLEY: CertifiedRegression = {
 };
 
 const STEPS = Array.from({ length: 21 }, (_, x) => x);
+const POWERS = [1, 2, 3, 4, 5].map((power) => STEPS.map((x) => x ** power));
 
-/** Wampler 1 and 2: y is the sum of (base x)^k for k = 0 to 5, x = 0 to 20; base 1 and 0.1. */
-export const WAMPLER = {
-  columns: [1, 2, 3, 4, 5].map((power) => STEPS.map((x) => x ** power)),
-  polynomial: (base: number): number[] =>
-    STEPS.map((x) => [0, 1, 2, 3, 4, 5].reduce((sum, power) => sum + base ** power * x ** power, 0)),
+/** Wampler 1 and 2: y is the sum of (base x)^k for k = 0 to 5, x = 0 to 20, which leaves nothing unexplained. */
+const exactPolynomial = (base: number): CertifiedRegression => ({
+  response: STEPS.map((x) => [0, 1, 2, 3, 4, 5].reduce((sum, power) => sum + base ** power * x ** power, 0)),
+  columns: POWERS,
+  certified: {
+    coefficients: [0, 1, 2, 3, 4, 5].map((power) => base ** power),
+    standardErrors: [0, 0, 0, 0, 0, 0],
+    residualStandardDeviation: 0,
+    rSquared: 1,
+  },
+});
+
+/** Wampler 3 to 5: the same polynomial of base 1 under noise that is a hundred times larger each time. */
+const noisyPolynomial = (
+  response: readonly number[],
+  standardErrors: readonly number[],
+  residualStandardDeviation: number,
+  rSquared: number,
+): CertifiedRegression => ({
+  response,
+  columns: POWERS,
+  certified: { coefficients: [1, 1, 1, 1, 1, 1], standardErrors, residualStandardDeviation, rSquared },
+});
+
+export const WAMPLER: Readonly<Record<1 | 2 | 3 | 4 | 5, CertifiedRegression>> = {
+  1: exactPolynomial(1),
+  2: exactPolynomial(0.1),
+  3: noisyPolynomial(
+    [
+      760, -2042, 2111, -1684, 3888, 1858, 11379, 17560, 39287, 64382, 113159, 175108, 273291, 400186, 581243,
+      811568, 1121004, 1506550, 2002767, 2611612, 3369180,
+    ],
+    [
+      2152.3262467817, 2363.55173469681, 779.343524331583, 101.47550755035, 5.64566512170752,
+      0.112324854679312,
+    ],
+    2360.14502379268,
+    0.99999555902582,
+  ),
+  4: noisyPolynomial(
+    [
+      75901, -204794, 204863, -204436, 253665, -200894, 214131, -185192, 221249, -138370, 315911, -27644,
+      455253, 197434, 783995, 608816, 1370781, 1303798, 2205519, 2408860, 3444321,
+    ],
+    [
+      215232.62467817, 236355.173469681, 77934.3524331583, 10147.550755035, 564.566512170752,
+      11.2324854679312,
+    ],
+    236014.502379268,
+    0.957478440825662,
+  ),
+  5: noisyPolynomial(
+    [
+      7590001, -20479994, 20480063, -20479636, 25231365, -20476094, 20489331, -20460392, 18417449, -20413570,
+      20591111, -20302844, 18651453, -20077766, 21059195, -19666384, 26348481, -18971402, 22480719, -17866340,
+      10958421,
+    ],
+    [
+      21523262.467817, 23635517.3469681, 7793435.24331583, 1014755.0755035, 56456.6512170752,
+      1123.24854679312,
+    ],
+    23601450.2379268,
+    0.0022466892157494,
+  ),
 };
