@@ -4,7 +4,7 @@
  */
 import { decimal, type Decimal } from './money/decimal.ts';
 import { formatShare } from './money/print.ts';
-import type { Policy } from './policy.ts';
+import type { OutlookPolicy, Policy, ScenarioSizes } from './policy.ts';
 
 /** A share of one, or a whole number of something. */
 export type SettingUnit = 'share' | 'tests' | 'days' | 'points';
@@ -26,6 +26,42 @@ const bounds = (least: string | number, most: string | number) => ({
   least: decimal(least),
   most: decimal(most),
 });
+
+const outlookShare = (label: string, key: 'variableCostShare' | 'floatingDebtShare') =>
+  ({
+    label,
+    rule: 'Sensitivity',
+    unit: 'share',
+    ...bounds(0, 1),
+    read: ({ outlook }: Policy) => outlook[key],
+    change: (policy: Policy, value: Decimal): Policy => ({
+      ...policy,
+      outlook: { ...policy.outlook, [key]: value },
+    }),
+  }) as const;
+
+const SCENARIO_LABELS = {
+  salesFall: 'sales fall by',
+  workingCapitalLoss: 'of receivables and stocks no cash comes in from',
+  rateRise: 'interest on floating debt rises, of the debt a year, by',
+} as const satisfies Record<keyof ScenarioSizes, string>;
+
+const scenarioShare = (
+  name: string,
+  scenario: Extract<keyof OutlookPolicy, 'slowerSales' | 'dearerMoney'>,
+  key: keyof ScenarioSizes,
+) =>
+  ({
+    label: `${name}: ${SCENARIO_LABELS[key]}`,
+    rule: 'Scenarios',
+    unit: 'share',
+    ...bounds(0, '0.50'),
+    read: ({ outlook }: Policy) => outlook[scenario][key],
+    change: (policy: Policy, value: Decimal): Policy => ({
+      ...policy,
+      outlook: { ...policy.outlook, [scenario]: { ...policy.outlook[scenario], [key]: value } },
+    }),
+  }) as const;
 
 export const POLICY_SETTINGS = {
   justPassingBand: {
@@ -90,6 +126,28 @@ export const POLICY_SETTINGS = {
     read: ({ stepDown }) => decimal(stepDown.noteDays),
     change: (policy, value) => ({ ...policy, stepDown: { ...policy.stepDown, noteDays: value.toNumber() } }),
   },
+  'runningOut.soonDays': {
+    label: 'Waiver, cure running out: soon within',
+    rule: 'Waiver, cure running out',
+    unit: 'days',
+    ...bounds(1, 365),
+    read: ({ runningOut }) => decimal(runningOut.soonDays),
+    change: (policy, value) => ({
+      ...policy,
+      runningOut: { ...policy.runningOut, soonDays: value.toNumber() },
+    }),
+  },
+  'runningOut.urgentDays': {
+    label: 'Waiver, cure running out: urgent within',
+    rule: 'Waiver, cure running out',
+    unit: 'days',
+    ...bounds(1, 365),
+    read: ({ runningOut }) => decimal(runningOut.urgentDays),
+    change: (policy, value) => ({
+      ...policy,
+      runningOut: { ...policy.runningOut, urgentDays: value.toNumber() },
+    }),
+  },
   restatedBy: {
     label: 'Prior figures restated: twelve months’ EBITDA moved by more than',
     rule: 'Prior figures restated',
@@ -117,6 +175,28 @@ export const POLICY_SETTINGS = {
     read: (policy) => decimal(policy.qualityWeakBelow),
     change: (policy, value) => ({ ...policy, qualityWeakBelow: value.toNumber() }),
   },
+  'outlook.variableCostShare': outlookShare(
+    'Sensitivity: share of sales that is variable cost, saved when sales fall',
+    'variableCostShare',
+  ),
+  'outlook.floatingDebtShare': outlookShare(
+    'Sensitivity: share of the debt whose interest moves with rates',
+    'floatingDebtShare',
+  ),
+  'outlook.slowerSales.salesFall': scenarioShare('Slower sales', 'slowerSales', 'salesFall'),
+  'outlook.slowerSales.workingCapitalLoss': scenarioShare(
+    'Slower sales',
+    'slowerSales',
+    'workingCapitalLoss',
+  ),
+  'outlook.slowerSales.rateRise': scenarioShare('Slower sales', 'slowerSales', 'rateRise'),
+  'outlook.dearerMoney.salesFall': scenarioShare('Dearer money', 'dearerMoney', 'salesFall'),
+  'outlook.dearerMoney.workingCapitalLoss': scenarioShare(
+    'Dearer money',
+    'dearerMoney',
+    'workingCapitalLoss',
+  ),
+  'outlook.dearerMoney.rateRise': scenarioShare('Dearer money', 'dearerMoney', 'rateRise'),
 } as const satisfies Record<string, PolicySetting>;
 
 export type PolicyKey = keyof typeof POLICY_SETTINGS;
@@ -142,3 +222,88 @@ export function printSetting(key: PolicyKey, value: Decimal): string {
     ? formatShare(value, { places: Math.max(1, value.times(100).dp()) })
     : `${value.toFixed()} ${unit}`;
 }
+
+/** Why a value cannot stand, in words that say what to do. */
+export interface SettingFault {
+  readonly key: PolicyKey;
+  readonly message: string;
+}
+
+/**
+ * Why a value cannot be that of the setting by itself; null where it can. In the setting's unit: a share of one, or a
+ * count.
+ *
+ * @example settingFault('thinBelow', decimal('0.6')) // => 'between 1.0\u00a0% and 50.0\u00a0%'
+ * @example settingFault('repeated.ofLast', decimal('2.5')) // => 'a whole number of tests'
+ */
+export function settingFault(key: PolicyKey, value: Decimal): string | null {
+  const { unit, least, most } = policySetting(key);
+  if (unit !== 'share' && !value.isInteger()) return `a whole number of ${unit}`;
+  if (value.lt(least) || value.gt(most))
+    return `between ${printSetting(key, least)} and ${printSetting(key, most)}`;
+  return null;
+}
+
+/**
+ * What cannot stand together, once every value by itself can.
+ *
+ * @example policyFaults(POLICY_VERSION_1) // => []
+ * @example policyFaults({ ...POLICY_VERSION_1, stepDown: { soonDays: 200, noteDays: 180 } })[0].key // => 'stepDown.soonDays'
+ */
+export function policyFaults({ repeated, stepDown, runningOut }: Policy): readonly SettingFault[] {
+  const faults: SettingFault[] = [];
+  if (repeated.atLeast > repeated.ofLast)
+    faults.push({
+      key: 'repeated.atLeast',
+      message: `not more than the ${repeated.ofLast} tests that are looked at`,
+    });
+  if (stepDown.soonDays > stepDown.noteDays)
+    faults.push({
+      key: 'stepDown.soonDays',
+      message: `not more than the ${stepDown.noteDays} days of the note that comes before`,
+    });
+  if (runningOut.urgentDays > runningOut.soonDays)
+    faults.push({
+      key: 'runningOut.urgentDays',
+      message: `not more than the ${runningOut.soonDays} days of the alert that comes before`,
+    });
+  if (runningOut.urgentDays > runningOut.soonDays)
+    faults.push({
+      key: 'runningOut.urgentDays',
+      message: `not more than the ${runningOut.soonDays} days of what comes before`,
+    });
+  return faults;
+}
+
+/** A setting that two policies hold different values of. */
+export interface SettingChange {
+  readonly key: PolicyKey;
+  readonly before: Decimal;
+  readonly after: Decimal;
+}
+
+/**
+ * What differs between two policies, in the register's order.
+ *
+ * @example policyChanges(POLICY_VERSION_1, { ...POLICY_VERSION_1, qualityWeakBelow: 25 }) // => [{ key: 'qualityWeakBelow', before: 30, after: 25 }]
+ */
+export const policyChanges = (before: Policy, after: Policy): readonly SettingChange[] =>
+  POLICY_KEYS.map((key) => ({
+    key,
+    before: policySetting(key).read(before),
+    after: policySetting(key).read(after),
+  })).filter((change) => !change.before.eq(change.after));
+
+/**
+ * A policy with some of its values changed. Values are taken as they are: ask `settingFault` and `policyFaults`.
+ *
+ * @example changedPolicy(POLICY_VERSION_1, { qualityWeakBelow: decimal(25) }).qualityWeakBelow // => 25
+ */
+export const changedPolicy = (
+  policy: Policy,
+  values: Readonly<Partial<Record<PolicyKey, Decimal>>>,
+): Policy =>
+  POLICY_KEYS.reduce((changed, key) => {
+    const value = values[key];
+    return value === undefined ? changed : policySetting(key).change(changed, value);
+  }, policy);

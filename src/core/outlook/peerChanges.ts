@@ -1,5 +1,5 @@
 import { linearPercentile } from '../statistics/percentile.ts';
-import { groupedBy } from './groupedBy.ts';
+import { groupedBy } from '../patterns/groupedBy.ts';
 import type { RatioChange } from './peerDraws.ts';
 
 /** A ratio at one quarter end; `hasEarnings` is false where EBITDA is zero or below and the ratio has no meaning. */
@@ -22,6 +22,7 @@ export interface PeerCell {
   /** Ascending, without the outer hundredths. */
   readonly changes: Float64Array;
   readonly earningsGone: number;
+  /** Members with any change. */
   readonly own: ReadonlyMap<number, readonly RatioChange[]>;
 }
 
@@ -33,7 +34,7 @@ export interface PeerChanges {
 }
 
 /** Changes that end in these last quarters count. */
-const QUARTERS = 8;
+export const QUARTERS_OF_CHANGES = 8;
 const TRUNCATED_SHARE = 0.01;
 
 /**
@@ -79,7 +80,7 @@ function thirdsOfLeverage(histories: readonly RatioHistory[]): ReadonlyMap<numbe
 
 function changesOf(points: readonly (RatioPoint | null)[], horizon: number): readonly RatioChange[] {
   const changes: RatioChange[] = [];
-  for (let end = Math.max(horizon, points.length - QUARTERS); end < points.length; end += 1) {
+  for (let end = Math.max(horizon, points.length - QUARTERS_OF_CHANGES); end < points.length; end += 1) {
     const before = points[end - horizon];
     const after = points[end];
     if (!before || !after || !before.hasEarnings || !(before.ratio > 0)) continue;
@@ -96,7 +97,11 @@ function peerCell(members: readonly (readonly [number, readonly RatioChange[]])[
     ([borrowerId, changes]) =>
       [borrowerId, changes.filter((change) => change === 'earnings gone' || isKept(change))] as const,
   );
-  return { changes: sorted.filter(isKept), earningsGone: all.length - sorted.length, own: new Map(own) };
+  return {
+    changes: sorted.filter(isKept),
+    earningsGone: all.length - sorted.length,
+    own: new Map(own.filter(([, changes]) => changes.length > 0)),
+  };
 }
 
 function withinOuterHundredths(sorted: Float64Array): (change: number) => boolean {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { chanceByReversion, chanceOfAnyNotMet, nextTest } from './nextTest.ts';
+import { nextTest } from './nextTest.ts';
 import { peerChanges, type RatioHistory, type RatioPoint } from './peerChanges.ts';
 import { peerDraws } from './peerDraws.ts';
 
@@ -155,43 +155,4 @@ test('a ratio of nought or below has no multiple', () => {
       ok: false,
       error: { kind: 'ratio without meaning' },
     });
-});
-
-describe('the checks beside it', () => {
-  const given = { headroom: 0.06, mean: 0.12, persistence: 0.75, deviation: 0.1, tightening: 0, quarters: 1 };
-
-  test('gives the published chances by reversion', () => {
-    // scipy.stats.norm: .128420 and, with a step of .05, .352728.
-    expect(chanceByReversion(given)).toBeCloseTo(0.12842, 6);
-    expect(chanceByReversion({ ...given, tightening: 0.05 })).toBeCloseTo(0.352728, 6);
-  });
-
-  test('forgets where it stands as the quarters go by', () => {
-    const far = { ...given, quarters: 60 };
-    expect(chanceByReversion(far)).toBeCloseTo(chanceByReversion({ ...far, headroom: -0.3 }), 6);
-    // Two steps at once are two single steps: mean and variance by hand.
-    const mean = 0.12 + 0.75 * (0.75 * (0.06 - 0.12));
-    const variance = 0.01 * (1 - 0.75 ** 2) * (1 + 0.75 ** 2);
-    const shifted = { ...given, headroom: mean, mean, persistence: 0, deviation: Math.sqrt(variance) };
-    expect(chanceByReversion({ ...given, quarters: 2 })).toBeCloseTo(chanceByReversion(shifted), 12);
-  });
-
-  test('gives R’s chances of any test not met', () => {
-    // R mvtnorm 1.1-3: .2792416 and .4869141.
-    const three = [
-      [0.04, 0.02, 0.01],
-      [0.02, 0.09, 0.03],
-      [0.01, 0.03, 0.16],
-    ];
-    expect(
-      chanceOfAnyNotMet(
-        [0.2, 0.3],
-        [
-          [0.04, 0.012],
-          [0.012, 0.09],
-        ],
-      ),
-    ).toBeCloseTo(0.2792416, 7);
-    expect(chanceOfAnyNotMet([0.1, 0.25, 0.4], three)).toBeCloseTo(0.4869141, 6);
-  });
 });
