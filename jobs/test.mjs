@@ -49,8 +49,10 @@ async function prepare() {
   const missing = [
     ...(existsSync('/usr/sbin/mariadbd') ? [] : ['mariadb-server']),
     ...(process.env.CHROMIUM || existsSync('/usr/bin/chromium') ? [] : ['chromium']),
+    // Recalculates the workbooks whose formulas are held against the product's figures.
+    ...(existsSync('/usr/bin/soffice') ? [] : ['libreoffice-calc-nogui']),
   ];
-  if (missing.length > 0) await installPackages(missing, 'the database and browser of the tests', say);
+  if (missing.length > 0) await installPackages(missing, 'the database, browser and spreadsheet program of the tests', say);
 }
 
 async function runChecks() {

@@ -70,6 +70,10 @@ export const MATRIX: Readonly<Record<string, Sample>> = {
 
   'GET borrowers/index': list('read borrower', '/borrowers'),
   'GET borrowers/[id]/index': get('read borrower', (desk) => `/borrowers/${desk.borrower}`),
+  'GET borrowers/[id]/covenants/[covenantId]/tests/[testDate]': get(
+    'read borrower',
+    (desk) => `/borrowers/${desk.borrower}/covenants/${desk.covenant}/tests/2026-09-30`,
+  ),
   'GET borrowers/[id]/review-sheet': get(
     'read borrower',
     (desk) => `/borrowers/${desk.borrower}/review-sheet`,

@@ -14,7 +14,7 @@ const WALK: readonly (readonly string[])[] = [
   ['measures'],
   ['covenants', 'accruals'],
   ['quality', 'patterns'],
-  ['outlook'],
+  ['outlook', 'reperformance'],
   ['alerts'],
 ];
 

@@ -9,7 +9,12 @@ import { hashPassword } from '../../src/server/auth/passwords.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
 import { addDeskMember, insertDesk, setDeskHead } from '../../src/server/db/repositories/desks.ts';
 import { insertPerson } from '../../src/server/db/repositories/people.ts';
+import { decimal } from '../../src/core/money/decimal.ts';
+import { insertFacility } from '../../src/server/db/repositories/facilities.ts';
 import { execute } from '../../src/server/db/sql.ts';
+import { systemActor } from '../../src/server/services/actor.ts';
+import { assessWithin } from '../../src/server/services/assessBorrower.ts';
+import { buildCovenant } from './factories.ts';
 
 export const PASSWORD = 'kettle marble fathom osier';
 
@@ -35,6 +40,8 @@ export interface DeskThings {
   readonly proposal: number;
   readonly import: number;
   readonly statement: number;
+  /** Assessed; its latest test is of 30 September 2026. */
+  readonly covenant: number;
 }
 
 export interface TwoDesks {
@@ -98,7 +105,31 @@ async function makeDesk(tx: Transaction, passwordHash: string, now: Date): Promi
     proposal: await makeProposal(tx, { desk, borrower, proposer: analyst.id, now }),
     import: await makeImport(tx, { borrower, uploader: analyst.id, now }),
     statement: await makeStatement(tx, borrower, now),
+    covenant: await makeAssessedCovenant(tx, borrower, now),
   };
+}
+
+async function makeAssessedCovenant(tx: Transaction, borrower: number, now: Date): Promise<number> {
+  const facilityId = await insertFacility(tx, {
+    borrowerId: borrower,
+    name: 'Term loan',
+    kind: 'term loan',
+    currency: 'EUR',
+    limit: decimal(12_000_000),
+    drawn: decimal(10_000_000),
+    marginBps: 250,
+    startsOn: '2024-01-01',
+    maturesOn: '2029-12-31',
+    security: 'unsecured',
+  });
+  const id = await buildCovenant(tx, { id: borrower, name: '', facilityId }, { knownFrom: now });
+  const assessed = await assessWithin(tx, systemActor('two-desks', now), borrower, {
+    runId: null,
+    knownAt: now,
+    asOf: '2026-12-01',
+  });
+  if (!assessed.ok) throw new Error('the borrower of the tests could not be assessed');
+  return id;
 }
 
 async function insert(
