@@ -11,11 +11,13 @@ import type { Covenant } from './covenants/covenant.ts';
 import { figuresOf } from './covenants/figures.ts';
 import { testCovenant } from './covenants/testCovenant.ts';
 import { netLeverage } from './measures/netLeverage.ts';
+import { translationInto } from './measures/translation.ts';
 import { decimal, ZERO } from './money/decimal.ts';
 import { POLICY_VERSION_1 } from './policy.ts';
 import { accountsAt } from './quality/accountsAt.ts';
 import { buildBorrower, buildBook } from './quality/book.fixture.ts';
 import { buildCrossSection } from './quality/crossSection.ts';
+import { figureReader } from './quality/figureReader.ts';
 import { peerInputs, peerInputsOfQuarters } from './quality/peerInputs.ts';
 import { scoreQuarter } from './quality/quarterScore.ts';
 import { buildStatement } from './statements/statement.fixture.ts';
@@ -30,6 +32,7 @@ export {
   buildQuarterScore,
   buildStatement,
   decimal,
+  figureReader,
   netLeverage,
   openBooks,
   POLICY_VERSION_1,
@@ -73,6 +76,8 @@ export const request = {
   date: '2026-09-30',
   definition: covenant.definition,
   addBacks: [],
+  months: 12,
+  translation: translationInto('EUR', []),
 } as const;
 
 /** What the rules of alerts see of one borrower with one leverage covenant at 3.50x and a year's figures in millions. */

@@ -13,12 +13,14 @@ import type { StatisticsError } from '../statistics/statisticsError.ts';
 /** Usable quarters below which nothing is said (methods.md B2). */
 const FEWEST_QUARTERS = 12;
 
-/** One value per quarter, oldest first, scaled by average assets. */
+/** One value per quarter, oldest first, scaled by average assets; null where a quarter's figure is missing. */
+export type QuarterSeries = readonly (number | null)[];
+
 export interface NoiseSeries {
-  readonly cashFlow: readonly number[];
-  readonly workingCapitalChange: readonly number[];
+  readonly cashFlow: QuarterSeries;
+  readonly workingCapitalChange: QuarterSeries;
   /** Both or neither. */
-  readonly controls?: { readonly revenueChange: readonly number[]; readonly ppe: readonly number[] };
+  readonly controls?: { readonly revenueChange: QuarterSeries; readonly ppe: QuarterSeries };
 }
 
 export interface AccrualNoise {
@@ -31,26 +33,20 @@ export interface AccrualNoise {
 }
 
 /**
- * The standard deviation of what cash does not explain. Errors: those of leastSquares, and `too-few-points` below
- * twelve quarters with a quarter before and after.
+ * The standard deviation of what cash does not explain. A quarter is usable with every term of its own and the cash of
+ * the quarter before and after; a gap costs its neighbours too. Errors: those of leastSquares, and `too-few-points`
+ * below twelve usable quarters.
  *
  * @example accrualNoise({ cashFlow: [1, 2], workingCapitalChange: [1, 2] }) // => { ok: false, error: { kind: 'too-few-points', needed: 12, given: 0 } }
  */
 export function accrualNoise(series: NoiseSeries): Result<AccrualNoise, StatisticsError> {
-  const { cashFlow, workingCapitalChange, controls } = series;
-  const usable = workingCapitalChange.length - 2;
-  if (usable < FEWEST_QUARTERS) {
-    return err({ kind: 'too-few-points', needed: FEWEST_QUARTERS, given: Math.max(0, usable) });
-  }
-  const within = (values: readonly number[]): readonly number[] => values.slice(1, -1);
+  const rows = usableQuarters(series);
+  if (rows.length < FEWEST_QUARTERS)
+    return err({ kind: 'too-few-points', needed: FEWEST_QUARTERS, given: rows.length });
+  const column = (place: number): number[] => rows.map((row) => row[place]!);
   const fit = leastSquares(
-    within(workingCapitalChange),
-    [
-      cashFlow.slice(0, -2),
-      within(cashFlow),
-      cashFlow.slice(2),
-      ...(controls ? [within(controls.revenueChange), within(controls.ppe)] : []),
-    ],
+    column(0),
+    rows[0]!.slice(1).map((_, term) => column(term + 1)),
     { constant: true },
   );
   if (!fit.ok) return fit;
@@ -60,5 +56,19 @@ export function accrualNoise(series: NoiseSeries): Result<AccrualNoise, Statisti
     residualStandardDeviation,
     residualSpread: residualStandardDeviation * Math.sqrt(degreesOfFreedom / n),
     n,
+  });
+}
+
+/** The change, then the regressors, of each quarter that has them all. */
+function usableQuarters({ cashFlow, workingCapitalChange, controls }: NoiseSeries): number[][] {
+  return workingCapitalChange.flatMap((change, quarter) => {
+    const row = [
+      change,
+      cashFlow[quarter - 1],
+      cashFlow[quarter],
+      cashFlow[quarter + 1],
+      ...(controls ? [controls.revenueChange[quarter], controls.ppe[quarter]] : []),
+    ];
+    return row.every((term) => typeof term === 'number') ? [row] : [];
   });
 }

@@ -6,6 +6,8 @@ export interface BeneishYear {
   readonly receivables: number;
   readonly currentAssets: number;
   readonly ppeNet: number;
+  /** Securities held for the long term; left out, none. */
+  readonly longTermSecurities?: number;
   readonly totalAssets: number;
   readonly currentLiabilities: number;
   readonly longTermDebt: number;
@@ -17,6 +19,9 @@ export interface BeneishYear {
   /** Depreciation only, without amortisation. */
   readonly depreciation: number;
 }
+
+/** A year of which lines may be missing: an index that needs one is missing too. */
+export type BeneishFigures = Readonly<Partial<BeneishYear>>;
 
 export const BENEISH_INDICES = ['dsri', 'gmi', 'aqi', 'sgi', 'depi', 'sgai', 'lvgi', 'tata'] as const;
 export type BeneishIndex = (typeof BENEISH_INDICES)[number];
@@ -38,29 +43,47 @@ export interface MScore {
 }
 
 /**
- * The eight indices of a year against the year before. An index whose base is not positive is null.
+ * The eight indices of a year against the year before. An index is null where its base is not positive or a line
+ * that it needs is missing.
  *
  * Gross margin and depreciation are prior over current, the others current over prior.
  *
  * @example beneishIndices({ ...firmYear, sales: 177 }, firmYear).sgi // => 1.5
  */
-export function beneishIndices(current: BeneishYear, prior: BeneishYear): BeneishIndices {
-  const over = (read: (year: BeneishYear) => number): number | null => index(read(current), read(prior));
-  const under = (read: (year: BeneishYear) => number): number | null => index(read(prior), read(current));
+export function beneishIndices(current: BeneishFigures, prior: BeneishFigures): BeneishIndices {
+  const [now, before] = [withGaps(current), withGaps(prior)];
+  const over = (read: (year: BeneishYear) => number): number | null => index(read(now), read(before));
+  const under = (read: (year: BeneishYear) => number): number | null => index(read(before), read(now));
   return {
     dsri: over((year) => year.receivables / year.sales),
     gmi: under((year) => (year.sales - year.costOfSales) / year.sales),
-    aqi: over((year) => 1 - (year.currentAssets + year.ppeNet) / year.totalAssets),
+    aqi: over(
+      (year) => 1 - (year.currentAssets + year.ppeNet + (year.longTermSecurities ?? 0)) / year.totalAssets,
+    ),
     sgi: over((year) => year.sales),
     depi: under((year) => year.depreciation / (year.depreciation + year.ppeNet)),
     sgai: over((year) => year.sellingAndAdministrative / year.sales),
     lvgi: over((year) => (year.currentLiabilities + year.longTermDebt) / year.totalAssets),
-    tata:
-      current.totalAssets > 0
-        ? (current.incomeFromContinuingOperations - current.cashFromOperations) / current.totalAssets
-        : null,
+    tata: index(now.incomeFromContinuingOperations - now.cashFromOperations, now.totalAssets),
   };
 }
+
+/** A missing line is not a number, and so is all that is reckoned with it; `index` turns that into null. */
+const withGaps = (figures: BeneishFigures): BeneishYear => ({
+  receivables: NaN,
+  currentAssets: NaN,
+  ppeNet: NaN,
+  totalAssets: NaN,
+  currentLiabilities: NaN,
+  longTermDebt: NaN,
+  sales: NaN,
+  costOfSales: NaN,
+  sellingAndAdministrative: NaN,
+  incomeFromContinuingOperations: NaN,
+  cashFromOperations: NaN,
+  depreciation: NaN,
+  ...figures,
+});
 
 /**
  * Both published forms out of the indices. Weights confirmed in several public sources.

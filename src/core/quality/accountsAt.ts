@@ -1,9 +1,10 @@
 import { monthsBefore } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
 import { toSample } from '../money/toSample.ts';
 import { balanceAt, lastTwelveMonths, quarterFlow, type Presence } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
-import type { Reading } from '../statements/reading.ts';
+import type { InputUsed, Reading } from '../statements/reading.ts';
 import type { Statement } from '../statements/statement.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 
@@ -15,6 +16,7 @@ export const NOW: Back = { months: 0 };
 export const YEAR_AGO: Back = { months: 12 };
 export const QUARTER_AGO: Back = { months: 3 };
 export const YEAR_AND_QUARTER_AGO: Back = { months: 15 };
+export const TWO_YEARS_AGO: Back = { months: 24 };
 
 /** A borrower's accounts around one quarter end, read as points of a sample; undefined where a figure is missing. */
 export interface AccountsAt {
@@ -25,11 +27,16 @@ export interface AccountsAt {
   readonly optionalTwelveMonths: (line: LineItemCode, back?: Back) => number | undefined;
   readonly optionalQuarter: (line: LineItemCode, back?: Back) => number | undefined;
   readonly optionalBalance: (line: LineItemCode, back?: Back) => number | undefined;
+  readonly ebitda: () => number | undefined;
+  readonly hasBalanceSheet: (back: Back) => boolean;
+  readonly hasQuarter: (line: LineItemCode, back?: Back) => boolean;
   /** Nobody gave it, as against figures that contradict each other. */
   readonly isMissing: (line: LineItemCode) => boolean;
   readonly sample: (reading: Reading) => number | undefined;
   /** The statements that any figure read so far rests on. */
   readonly used: () => readonly Statement[];
+  /** The cells that they came from. */
+  readonly cells: () => readonly InputUsed[];
 }
 
 /**
@@ -39,19 +46,19 @@ export interface AccountsAt {
  * @example accountsAt(book, '2026-09-30').twelveMonths('revenue') // => 90000000
  */
 export function accountsAt(book: StatementBook, quarterEnd: PlainDate): AccountsAt {
-  const usedIds = new Set<number>();
+  const read: (readonly InputUsed[])[] = [];
   const sample = (reading: Reading): number | undefined => {
     if (reading.kind !== 'value') return undefined;
-    for (const { statementId } of reading.inputs) usedIds.add(statementId);
+    read.push(reading.inputs);
     return toSample(reading.value);
   };
   const figure =
     (
-      read: (book: StatementBook, line: LineItemCode, date: PlainDate, presence: Presence) => Reading,
+      find: (book: StatementBook, line: LineItemCode, date: PlainDate, presence: Presence) => Reading,
       presence: Presence,
     ) =>
     (line: LineItemCode, back: Back = NOW): number | undefined =>
-      sample(read(book, line, monthsBefore(quarterEnd, back.months), presence));
+      sample(find(book, line, monthsBefore(quarterEnd, back.months), presence));
   return {
     twelveMonths: figure(lastTwelveMonths, 'required'),
     quarter: figure(quarterFlow, 'required'),
@@ -59,9 +66,17 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
     optionalTwelveMonths: figure(lastTwelveMonths, 'optional'),
     optionalQuarter: figure(quarterFlow, 'optional'),
     optionalBalance: figure(balanceAt, 'optional'),
+    ebitda: () => sample(ebitdaOfTwelveMonths(book, quarterEnd).ebitda),
+    hasQuarter: (line, back = NOW) =>
+      quarterFlow(book, line, monthsBefore(quarterEnd, back.months)).kind === 'value',
+    hasBalanceSheet: ({ months }) => book.statementOf(monthsBefore(quarterEnd, months), 0) !== null,
     isMissing: (line) => lastTwelveMonths(book, line, quarterEnd).kind === 'missing',
     sample,
-    used: () => book.statements.filter(({ id }) => usedIds.has(id)),
+    used: () => {
+      const ids = new Set(read.flatMap((inputs) => inputs.map(({ statementId }) => statementId)));
+      return [...ids].flatMap((id) => book.statementById(id) ?? []);
+    },
+    cells: () => read.flat(),
   };
 }
 

@@ -12,8 +12,8 @@ export interface BlockContext {
   readonly standing: (figure: ComparedFigure) => Standing | null;
 }
 
-/** Null from a block that nothing feeds: it is left out of the list, and coverage is the lower for it. */
-export type Block = (context: BlockContext) => QualityBlock | null;
+/** A block that cannot be given says why, and coverage is the lower for it. */
+export type Block = (context: BlockContext) => QualityBlock;
 
 const { weights, gates } = QUALITY_TABLE;
 

@@ -35,7 +35,10 @@ function unexplainedBlock({ peer, compared, standing }: BlockContext): QualityBl
   if (share === null) {
     const ppe = peer.figures.ppeGross === undefined && peer.figures.ppeNet === undefined;
     const missing = missingFigures(peer, [...UNEXPLAINED_INPUTS, ...(ppe ? (['ppeGross'] as const) : [])]);
-    return without('unexplained accruals', missing ?? 'too few peers for the accrual model');
+    return without(
+      'unexplained accruals',
+      brokenSeries(peer) ?? missing ?? 'too few peers for the accrual model',
+    );
   }
   const place = standing('unexplainedAccruals');
   if (!place) return without('unexplained accruals', NOBODY, { unexplainedShare: share });
@@ -58,7 +61,10 @@ function conversionBlock({ peer, standing }: BlockContext): QualityBlock {
       'revenue',
       'revenuePrior',
     ]);
-    return without('cash conversion', missing ?? 'EBITDA is not above 1\u00a0% of revenue');
+    return without(
+      'cash conversion',
+      brokenSeries(peer) ?? missing ?? 'EBITDA is not above 1\u00a0% of revenue',
+    );
   }
   const place = standing('cashConversion');
   const figures = {
@@ -72,28 +78,45 @@ function conversionBlock({ peer, standing }: BlockContext): QualityBlock {
   return { ...block('cash conversion', gated(1 - place.percentile, isEnough), place), figures };
 }
 
-function screensBlock({ peer }: BlockContext): QualityBlock | null {
+function screensBlock({ peer }: BlockContext): QualityBlock {
   const { mScore, fScore } = peer.figures;
-  if (mScore === undefined || fScore === undefined) return null;
-  const figures = { mScore, fScore };
+  const figures = {
+    ...(mScore !== undefined && { mScore, mScoreVariables: peer.mScoreForm === 'M5' ? 5 : 8 }),
+    ...(fScore !== undefined && { fScore }),
+  };
   const damped = dampedReason(peer);
   if (damped) return without('published screens', damped, figures);
+  if (mScore === undefined || fScore === undefined)
+    return without('published screens', missingScreens(peer), figures);
   return {
     ...block('published screens', (mScoreRisk(mScore) + fScoreRisk(fScore)) / 2, null),
     figures,
   };
 }
 
-function noiseBlock({ peer, standing }: BlockContext): QualityBlock | null {
+const missingScreens = ({ figures, whyMissing }: PeerInputs): string =>
+  (['mScore', 'fScore'] as const)
+    .filter((screen) => figures[screen] === undefined)
+    .map((screen) => `${screen === 'mScore' ? 'M-score' : 'F-score'}: ${whyMissing?.[screen] ?? 'missing'}`)
+    .join('; ');
+
+function noiseBlock({ peer, standing }: BlockContext): QualityBlock {
   const { accrualNoise } = peer.figures;
-  if (accrualNoise === undefined) return null;
+  const damped = dampedReason(peer);
+  if (accrualNoise === undefined)
+    return without('accrual noise', damped ?? peer.whyMissing?.accrualNoise ?? 'missing');
   const place = standing('accrualNoise');
   const figures = { accrualNoise, ...placeFigures('accrualNoise', place) };
-  const damped = dampedReason(peer);
   if (damped) return without('accrual noise', damped, figures);
   if (!place) return without('accrual noise', NOBODY, figures);
   return { ...block('accrual noise', place.percentile, place), figures };
 }
+
+/** IFRS 18: no block that uses cash flow until the year before is restated. */
+const brokenSeries = (peer: PeerInputs): string | null =>
+  peer.cashFlowPresentationChanged
+    ? 'the presentation of cash flows changed within the two years compared and the year before is not restated'
+    : null;
 
 /** Measures built on growth mark a fast grower and an acquirer whatever their accounts are like. */
 function dampedReason(peer: PeerInputs): string | null {

@@ -1,39 +1,37 @@
 /** The cash flow figures of twelve months, from the cash flow statement or, marked, from two balance sheets. */
 import { ifAll, NOW, YEAR_AGO, type AccountsAt, type Back } from './accountsAt.ts';
-import type { PeerFigure } from './peerFigures.ts';
+import { acquisitionsOf } from './acquisitions.ts';
 import { workingCapital } from './workingCapital.ts';
 
-export interface CashFlowFigures {
-  readonly isDerived: boolean;
-  readonly figures: Readonly<Partial<Record<PeerFigure, number | undefined>>>;
-}
+export type CashFlowFigure =
+  'cfo' | 'capex' | 'capitalisedCosts' | 'capitalisedCostsPrior' | 'interestPaid' | 'taxPaid';
+type Reads = Readonly<Record<CashFlowFigure, (accounts: AccountsAt) => number | undefined>>;
+
+/**
+ * Whether cash from operations has to be derived from the balance sheets and can be: there is no cash flow statement,
+ * and no acquisition in the year, which the balance sheets could not tell from accruals. Source: methods.md B2.
+ *
+ * @example isDerivedCashFlow(accounts) // => false
+ */
+export const isDerivedCashFlow = (accounts: AccountsAt): boolean =>
+  accounts.isMissing('cfo') && !acquisitionsOf(accounts).inYear && derivedCash(accounts) !== undefined;
 
 /**
  * Cash from operations, capital expenditure, capitalised costs, interest and tax paid; positive outflows.
  *
- * Without a cash flow statement they are derived from the balance sheets, but not in a year with an acquisition, which
- * the balance sheets cannot tell from accruals. Source: methods.md B2.
- *
- * @example cashFlowOf(accounts, false).isDerived // => false
+ * @example cashFlowOf(accounts, 'cfo') // => undefined
  */
-export function cashFlowOf(accounts: AccountsAt, isAcquirer: boolean): CashFlowFigures {
-  const cfo = accounts.twelveMonths('cfo');
-  if (accounts.isMissing('cfo') && !isAcquirer) {
-    const derived = derivedCashFlow(accounts);
-    if (derived) return { isDerived: true, figures: derived };
-  }
-  return {
-    isDerived: false,
-    figures: {
-      cfo,
-      capex: outflow(accounts.twelveMonths('capex')),
-      capitalisedCosts: capitalisedCosts(accounts, NOW),
-      capitalisedCostsPrior: capitalisedCosts(accounts, YEAR_AGO),
-      interestPaid: outflow(accounts.twelveMonths('interest_paid')),
-      taxPaid: outflow(accounts.twelveMonths('tax_paid')),
-    },
-  };
-}
+export const cashFlowOf = (accounts: AccountsAt, figure: CashFlowFigure): number | undefined =>
+  (isDerivedCashFlow(accounts) ? DERIVED : STATED)[figure](accounts);
+
+const STATED: Reads = {
+  cfo: ({ twelveMonths }) => twelveMonths('cfo'),
+  capex: ({ twelveMonths }) => outflow(twelveMonths('capex')),
+  capitalisedCosts: (accounts) => capitalisedCosts(accounts, NOW),
+  capitalisedCostsPrior: (accounts) => capitalisedCosts(accounts, YEAR_AGO),
+  interestPaid: ({ twelveMonths }) => outflow(twelveMonths('interest_paid')),
+  taxPaid: ({ twelveMonths }) => outflow(twelveMonths('tax_paid')),
+};
 
 const outflow = (signed: number | undefined): number | undefined =>
   signed === undefined ? undefined : signed === 0 ? 0 : -signed;
@@ -45,39 +43,30 @@ function capitalisedCosts(accounts: AccountsAt, back: Back): number | undefined 
 }
 
 /**
- * Net income with depreciation, amortisation and impairment added back, less what working capital took; spending on
- * fixed assets is their rise plus what was written off. Interest and tax are those of the income statement, since
- * the changes in what is owed for them stand in working capital.
+ * Depreciation, amortisation and impairment of twelve months.
+ *
+ * @example writtenOff(accounts) // => 3700000
  */
-function derivedCashFlow(accounts: AccountsAt): CashFlowFigures['figures'] | null {
-  const writtenOff = ifAll(
+export const writtenOff = (accounts: AccountsAt): number | undefined =>
+  ifAll(
     {
       depreciation: accounts.twelveMonths('depreciation_and_amortisation'),
       impairment: accounts.optionalTwelveMonths('impairment'),
     },
     ({ depreciation, impairment }) => depreciation + impairment,
   );
-  const cfo = ifAll(
+
+/** Net income with what was written off added back, less what working capital took. */
+function derivedCash(accounts: AccountsAt): number | undefined {
+  return ifAll(
     {
       netIncome: accounts.twelveMonths('net_income'),
-      writtenOff,
+      writtenOff: writtenOff(accounts),
       closing: workingCapital(accounts, NOW),
       opening: workingCapital(accounts, YEAR_AGO),
     },
     (sums) => sums.netIncome + sums.writtenOff - (sums.closing - sums.opening),
   );
-  if (cfo === undefined) return null;
-  return {
-    cfo,
-    capex: ifAll(
-      { closing: fixedAssets(accounts, NOW), opening: fixedAssets(accounts, YEAR_AGO), writtenOff },
-      (sums) => sums.closing - sums.opening + sums.writtenOff,
-    ),
-    capitalisedCosts: 0,
-    capitalisedCostsPrior: 0,
-    interestPaid: accounts.twelveMonths('interest_expense'),
-    taxPaid: accounts.twelveMonths('income_tax'),
-  };
 }
 
 const fixedAssets = (accounts: AccountsAt, back: Back): number | undefined =>
@@ -89,3 +78,24 @@ const fixedAssets = (accounts: AccountsAt, back: Back): number | undefined =>
     },
     (parts) => parts.ppe + parts.intangibles + parts.goodwill,
   );
+
+/**
+ * Spending on fixed assets is their rise plus what was written off. Interest and tax are those of the income
+ * statement, since the changes in what is owed for them stand in working capital.
+ */
+const DERIVED: Reads = {
+  cfo: derivedCash,
+  capex: (accounts) =>
+    ifAll(
+      {
+        closing: fixedAssets(accounts, NOW),
+        opening: fixedAssets(accounts, YEAR_AGO),
+        writtenOff: writtenOff(accounts),
+      },
+      (sums) => sums.closing - sums.opening + sums.writtenOff,
+    ),
+  capitalisedCosts: () => 0,
+  capitalisedCostsPrior: () => 0,
+  interestPaid: ({ twelveMonths }) => twelveMonths('interest_expense'),
+  taxPaid: ({ twelveMonths }) => twelveMonths('income_tax'),
+};

@@ -85,7 +85,7 @@ test('a sector that nobody else is in is compared with ten others or not at all'
   const alone = { ...latestOf(500, { sector: 'shipping' }) };
   const others = (count: number) => buildCrossSection(peersOf(...buildBook(count, 'food', 100)), 1);
   expect(scoreQuarter(alone, others(10)).blocks[1]?.risk).not.toBeNull();
-  expect(scoreQuarter(alone, others(9))).toMatchObject({ score: null, coverage: 0 });
+  expect(scoreQuarter(alone, others(9))).toMatchObject({ score: null, coverage: 10 });
 });
 
 test('the accrual model needs eleven firms: ten in a sector use the slopes of the book', () => {

@@ -46,8 +46,7 @@ export interface PeerMember {
 }
 
 /**
- * The peers' standing out of everybody's inputs; accounts that do not tie or whose cash flow presentation changed
- * stay out. Of two quarter ends of one borrower in one calendar quarter the later one counts.
+ * The peers' standing out of everybody's inputs; accounts that do not tie stay out. Of two quarter ends of one borrower in one calendar quarter the later one counts.
  *
  * Work grows as n log n in the number of peers. Source: methods.md B6.
  *
@@ -56,7 +55,7 @@ export interface PeerMember {
 export function buildCrossSection(peers: readonly PeerInputs[], version: number): CrossSection {
   const byQuarter = new Map<PlainDate, Map<number, PeerInputs>>();
   for (const peer of peers) {
-    if (!peer.ties || peer.cashFlowPresentationChanged) continue;
+    if (!peer.ties) continue;
     const quarterEnd = comparisonQuarterEnd(peer.quarterEnd);
     const quarter = byQuarter.get(quarterEnd) ?? new Map<number, PeerInputs>();
     byQuarter.set(quarterEnd, quarter);

@@ -25,6 +25,7 @@ const NAMES: Readonly<Record<PeerFigure, string>> = {
   cogsTwoQuarters: 'cost of sales of the last two quarters',
   cogsTwoQuartersPrior: 'cost of sales of the same two quarters a year ago',
   nwcPrior: 'working capital a year ago',
+  workingCapitalAccruals: 'depreciation or cash from operations over twelve months',
   mScore: 'M-score',
   fScore: 'F-score',
   accrualNoise: 'accrual noise',

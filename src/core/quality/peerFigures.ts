@@ -27,6 +27,7 @@ export const PEER_FIGURES = [
   'cogsTwoQuarters',
   'cogsTwoQuartersPrior',
   'nwcPrior',
+  'workingCapitalAccruals',
   'mScore',
   'fScore',
   'accrualNoise',
@@ -50,6 +51,10 @@ export interface PeerInputs {
   /** No quarterly income statements: days are counted on the year's flows. */
   readonly daysOnYear: boolean;
   readonly figures: Readonly<Partial<Record<PeerFigure, number>>>;
+  /** Of figures that are computed out of many lines: why one is not there. */
+  readonly whyMissing?: Readonly<Partial<Record<PeerFigure, string>>>;
+  /** Which published form the M-score is; eight variables where nothing is said. */
+  readonly mScoreForm?: 'M8' | 'M5';
   readonly acquisitionInYear: boolean;
   readonly acquisitionThisQuarter: boolean;
 }

@@ -1,19 +1,20 @@
 /** From a borrower's statements to what it brings to the comparison at one quarter end. */
+import { accrualNoise, type NoiseSeries } from '../accruals/accrualNoise.ts';
 import { NEVER_SCORED, type BorrowerInputs } from '../borrowerInputs.ts';
 import { fiscalPosition } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
-import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
 import type { Statement, Tie } from '../statements/statement.ts';
 import { openBooks, type Books, type StatementBook } from '../statements/statementBook.ts';
-import { accountsAt, ifAll, NOW, QUARTER_AGO, YEAR_AGO, YEAR_AND_QUARTER_AGO } from './accountsAt.ts';
-import type { AccountsAt, Back } from './accountsAt.ts';
-import { cashFlowOf } from './cashFlowOf.ts';
+import { accountsAt, type AccountsAt } from './accountsAt.ts';
+import { acquisitionsOf } from './acquisitions.ts';
+import { isDerivedCashFlow } from './cashFlowOf.ts';
+import { mixesPresentations } from './cashFlowPresentation.ts';
+import { hasDaysOnYear } from './dayFlows.ts';
+import { noiseSeriesOf } from './noiseSeries.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
+import { LINE_FIGURES, readFigure, UNDER_ONE_PRESENTATION } from './lineFigures.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
-import { workingCapital } from './workingCapital.ts';
-
-/** The highest rate of tax that is believed when impairment is taken after tax. */
-const HIGHEST_TAX_RATE = 0.5;
+import { fScreen, mScreen } from './screenScores.ts';
 
 /**
  * One borrower at one quarter end, amounts in its own currency units, paid items positive. Null for legal forms that
@@ -31,7 +32,8 @@ export function peerInputs(
   asOf: PlainDate,
 ): PeerInputs | null {
   if (NEVER_SCORED.includes(inputs.legalForm)) return null;
-  return atQuarterEnd(inputs, scoredBook(openBooks(inputs, asOf)), quarterEnd);
+  const book = scoredBook(openBooks(inputs, asOf));
+  return atQuarterEnd(inputs, book, noiseSeriesOf(book), quarterEnd);
 }
 
 /**
@@ -50,9 +52,10 @@ export const peerInputsOfQuarters = (inputs: BorrowerInputs, asOf: PlainDate): r
 export function peerInputsFrom(inputs: BorrowerInputs, books: Books): readonly PeerInputs[] {
   if (NEVER_SCORED.includes(inputs.legalForm)) return [];
   const book = scoredBook(books);
+  const noiseSeries = noiseSeriesOf(book);
   return quarterEndsOf(book)
     .slice(-QUALITY_TABLE.historyQuarters)
-    .flatMap((quarterEnd) => atQuarterEnd(inputs, book, quarterEnd) ?? []);
+    .flatMap((quarterEnd) => atQuarterEnd(inputs, book, noiseSeries, quarterEnd) ?? []);
 }
 
 /** Fiscal quarter ends with a balance sheet, oldest first. Months between quarter ends are left out. */
@@ -64,38 +67,36 @@ const quarterEndsOf = (book: StatementBook): readonly PlainDate[] =>
     )
     .map(({ periodEnd }) => periodEnd);
 
-/** Group accounts where the borrower gives any. */
-const scoredBook = (books: Books): StatementBook =>
+/**
+ * The book that is scored: group accounts where the borrower gives any.
+ *
+ * @example scoredBook(openBooks(inputs, '2026-11-30')).fiscalYearEndMonth // => 12
+ */
+export const scoredBook = (books: Books): StatementBook =>
   books.group.statements.length > 0 ? books.group : books['stand-alone'];
 
-function atQuarterEnd(inputs: BorrowerInputs, book: StatementBook, quarterEnd: PlainDate): PeerInputs | null {
+function atQuarterEnd(
+  inputs: BorrowerInputs,
+  book: StatementBook,
+  noiseSeries: ReturnType<typeof noiseSeriesOf>,
+  quarterEnd: PlainDate,
+): PeerInputs | null {
   const balanceSheet = book.statementOf(quarterEnd, 0);
   if (!balanceSheet) return null;
   const accounts = accountsAt(book, quarterEnd);
-  const ebitda = accounts.sample(ebitdaOfTwelveMonths(book, quarterEnd).ebitda);
   const acquisition = acquisitionsOf(accounts);
-  const cashFlow = cashFlowOf(accounts, acquisition.inYear);
-  const days = dayFlows(accounts);
-  const figures = given({
-    assets: accounts.balance('total_assets'),
-    assetsPrior: accounts.balance('total_assets', YEAR_AGO),
-    netIncome: accounts.twelveMonths('net_income'),
-    impairmentAfterTax: impairmentAfterTax(accounts),
-    revenue: accounts.twelveMonths('revenue'),
-    revenuePrior: accounts.twelveMonths('revenue', YEAR_AGO),
-    ppeGross: accounts.balance('ppe_gross'),
-    ppeNet: accounts.balance('ppe_net'),
-    ebitda,
-    receivables: accounts.balance('receivables'),
-    receivablesPrior: accounts.balance('receivables', YEAR_AGO),
-    inventory: accounts.optionalBalance('inventory'),
-    inventoryPrior: accounts.optionalBalance('inventory', YEAR_AGO),
-    nwcPrior: workingCapital(accounts, YEAR_AGO),
-    ...cashFlow.figures,
-    ...days.figures,
-  });
+  const derivedCashFlow = isDerivedCashFlow(accounts);
+  const lines = LINE_FIGURES.map((figure) => [figure, readFigure(figure, accounts)] as const);
   const used = accounts.used();
   const tie = worstTie(used);
+  const cashFlowPresentationChanged = mixesPresentations(used);
+  const hasCashFlow = !derivedCashFlow && !cashFlowPresentationChanged;
+  const { screens, whyMissing, mScoreForm } = manyLineFigures(accountsAt(book, quarterEnd), hasCashFlow);
+  const noise = noiseOf(noiseSeries(quarterEnd));
+  const given = lines.filter(
+    ([figure, value]) =>
+      value !== undefined && !(cashFlowPresentationChanged && UNDER_ONE_PRESENTATION.includes(figure)),
+  );
   return {
     borrowerId: inputs.borrowerId,
     sector: inputs.sector,
@@ -103,85 +104,52 @@ function atQuarterEnd(inputs: BorrowerInputs, book: StatementBook, quarterEnd: P
     ties: tie !== 'does-not-tie',
     tie,
     basis: balanceSheet.basis,
-    derivedCashFlow: cashFlow.isDerived,
-    cashFlowPresentationChanged: mixesPresentations(used),
-    daysOnYear: days.onYear,
-    figures,
+    derivedCashFlow,
+    cashFlowPresentationChanged,
+    daysOnYear: hasDaysOnYear(accounts),
+    figures: { ...Object.fromEntries(given), ...screens, ...noise.figures },
+    whyMissing: { ...whyMissing, ...noise.whyMissing },
+    ...(mScoreForm && { mScoreForm }),
     acquisitionInYear: acquisition.inYear,
     acquisitionThisQuarter: acquisition.thisQuarter,
   };
 }
 
-const given = (
-  figures: Readonly<Partial<Record<PeerFigure, number | undefined>>>,
-): Readonly<Partial<Record<PeerFigure, number>>> =>
-  Object.fromEntries(Object.entries(figures).filter(([, value]) => value !== undefined));
+type Some<Value> = Readonly<Partial<Record<PeerFigure, Value>>>;
 
-/** Own rule: the year's effective rate, none where there is no profit to set it off against. */
-function impairmentAfterTax(accounts: AccountsAt): number | undefined {
-  const impairment = accounts.optionalTwelveMonths('impairment');
-  if (impairment === undefined || impairment === 0) return impairment;
-  const profit = accounts.twelveMonths('profit_before_tax');
-  const tax = accounts.twelveMonths('income_tax');
-  const rate =
-    profit !== undefined && tax !== undefined && profit > 0
-      ? Math.min(HIGHEST_TAX_RATE, Math.max(0, tax / profit))
-      : 0;
-  return impairment * (1 - rate);
-}
-
-/** Own rule: acquisitions paid, or goodwill risen, by at least 1 % of assets a year before. */
-const MATERIAL_ACQUISITION = 0.01;
-
-function acquisitionsOf(accounts: AccountsAt): { readonly inYear: boolean; readonly thisQuarter: boolean } {
-  const assets = accounts.balance('total_assets', YEAR_AGO) ?? accounts.balance('total_assets') ?? 0;
-  const isMaterial = (paid: number | undefined, back: Back): boolean => {
-    const goodwillRise = ifAll(
-      { closing: accounts.optionalBalance('goodwill'), opening: accounts.optionalBalance('goodwill', back) },
-      ({ closing, opening }) => closing - opening,
-    );
-    return Math.max(-(paid ?? 0), goodwillRise ?? 0) > MATERIAL_ACQUISITION * assets;
-  };
-  const inYear = isMaterial(accounts.optionalTwelveMonths('acquisitions_paid'), YEAR_AGO);
-  const quarter = accounts.optionalQuarter('acquisitions_paid');
-  // Where the quarter cannot be told from the year, the year's acquisition may have closed in it.
-  return { inYear, thisQuarter: inYear && (quarter === undefined || isMaterial(quarter, QUARTER_AGO)) };
-}
-
-/** The flows that days are counted on; the year's share where there are no quarterly income statements. */
-function dayFlows(accounts: AccountsAt): {
-  readonly figures: Readonly<Partial<Record<PeerFigure, number | undefined>>>;
-  readonly onYear: boolean;
+/** They read their own accounts: a line that only they need and that does not tie costs them alone. */
+function manyLineFigures(
+  accounts: AccountsAt,
+  hasCashFlow: boolean,
+): {
+  readonly screens: Some<number>;
+  readonly whyMissing: Some<string>;
+  readonly mScoreForm?: 'M8' | 'M5';
 } {
-  const revenueQuarter = accounts.quarter('revenue');
-  const revenueQuarterPrior = accounts.quarter('revenue', YEAR_AGO);
-  const twoQuarters = (latest: Back, before: Back): number | undefined =>
-    ifAll(
-      { latest: accounts.quarter('cogs', latest), before: accounts.quarter('cogs', before) },
-      (costs) => costs.latest + costs.before,
-    );
-  if (revenueQuarter !== undefined && revenueQuarterPrior !== undefined) {
-    return {
-      figures: {
-        revenueQuarter,
-        revenueQuarterPrior,
-        cogsTwoQuarters: twoQuarters(NOW, QUARTER_AGO),
-        cogsTwoQuartersPrior: twoQuarters(YEAR_AGO, YEAR_AND_QUARTER_AGO),
-      },
-      onYear: false,
-    };
-  }
-  const shareOfYear = (line: 'revenue' | 'cogs', back: Back, quarters: number): number | undefined =>
-    ifAll({ year: accounts.twelveMonths(line, back) }, ({ year }) => (year * quarters) / 4);
+  const m = mScreen(accounts, hasCashFlow);
+  const f = fScreen(accounts);
   return {
-    figures: {
-      revenueQuarter: shareOfYear('revenue', NOW, 1),
-      revenueQuarterPrior: shareOfYear('revenue', YEAR_AGO, 1),
-      cogsTwoQuarters: shareOfYear('cogs', NOW, 2),
-      cogsTwoQuartersPrior: shareOfYear('cogs', YEAR_AGO, 2),
+    screens: { ...('score' in m && { mScore: m.score }), ...('f' in f && { fScore: f.f }) },
+    whyMissing: {
+      ...('missing' in m && { mScore: m.missing }),
+      ...('missing' in f && { fScore: f.missing }),
     },
-    onYear: true,
+    ...('form' in m && { mScoreForm: m.form }),
   };
+}
+
+/** As Dechow and Dichev fit it; the controls of McNichols stand beside the score. */
+function noiseOf({ cashFlow, workingCapitalChange }: NoiseSeries): {
+  readonly figures: Some<number>;
+  readonly whyMissing: Some<string>;
+} {
+  const noise = accrualNoise({ cashFlow, workingCapitalChange });
+  if (noise.ok) return { figures: { accrualNoise: noise.value.residualStandardDeviation }, whyMissing: {} };
+  const reason =
+    noise.error.kind === 'too-few-points'
+      ? `${noise.error.given} usable quarters, ${noise.error.needed} are needed`
+      : 'cash from operations hardly moves, so nothing can be fitted';
+  return { figures: {}, whyMissing: { accrualNoise: reason } };
 }
 
 /** From best to worst as a comparison sees it: what was not checked is taken as it is. */
@@ -192,10 +160,3 @@ const worstTie = (statements: readonly Statement[]): Tie =>
     (worst, { tie }) => (TIE_ORDER.indexOf(tie) > TIE_ORDER.indexOf(worst) ? tie : worst),
     'ties',
   );
-
-/** IFRS 18 moves interest and dividends out of cash from operations; two years are comparable within one rule only. */
-function mixesPresentations(statements: readonly Statement[]): boolean {
-  const flows = statements.filter(({ months }) => months > 0);
-  const underNewRule = flows.filter(({ framework }) => /IFRS\s*18/i.test(framework)).length;
-  return underNewRule > 0 && underNewRule < flows.length;
-}

@@ -43,5 +43,7 @@ export const QUALITY_TABLE = {
   bandHysteresisPoints: 5,
   headlineQuarters: 3,
   historyQuarters: 8,
+  /** Quarters that accrual noise may rest on, at most. */
+  noiseQuarters: 16,
   explanationLines: 4,
 } as const;

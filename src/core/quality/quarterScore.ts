@@ -1,12 +1,12 @@
 /** One quarter end's score out of the blocks, and what each block adds to it. */
 import { unexplainedAccruals } from './accrualModel.ts';
 import { BLOCKS } from './blocks.ts';
-import { comparedFigures } from './comparedFigures.ts';
+import { comparedFigures, figuresOf, revenueGrowth } from './comparedFigures.ts';
 import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
 import type { CrossSection, QuarterCrossSection } from './crossSection.ts';
 import type { PeerInputs } from './peerFigures.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
-import type { QualityBlock, QuarterScore } from './score.ts';
+import type { EarningsAtRisk, QualityBlock, QuarterScore } from './score.ts';
 import { otherFirms, standingIn } from './standing.ts';
 
 /**
@@ -49,17 +49,17 @@ export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): Quar
   const section = crossSection.quarters.find((quarter) => quarter.quarterEnd === quarterEnd);
   const refused = refusal(peer, section);
   if (refused !== null || !section) return unscored(peer, section, refused ?? 'no peers');
-  const compared = comparedFigures(peer, unexplainedAccruals(section.accrualModel, peer));
-  const blocks = BLOCKS.flatMap(
-    (assess) =>
-      assess({
-        peer,
-        compared,
-        standing: (figure) => {
-          const value = compared[figure];
-          return value === null ? null : standingIn(section, peer, figure, value);
-        },
-      }) ?? [],
+  const unexplained = unexplainedAccruals(section.accrualModel, peer);
+  const compared = comparedFigures(peer, unexplained);
+  const blocks = BLOCKS.map((assess) =>
+    assess({
+      peer,
+      compared,
+      standing: (figure) => {
+        const value = compared[figure];
+        return value === null ? null : standingIn(section, peer, figure, value);
+      },
+    }),
   );
   const { coverage, score } = compositeScore(blocks);
   return {
@@ -68,13 +68,31 @@ export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): Quar
     noScoreReason: score === null ? thinCoverage(coverage, blocks) : null,
     coverage: peer.derivedCashFlow ? Math.min(coverage, QUALITY_TABLE.mostCoverageDerived) : coverage,
     blocks,
+    earningsAtRisk: earningsAtRisk(peer, unexplained),
+  };
+}
+
+/**
+ * What of twelve months' earnings rests on accruals, in the borrower's currency: what the peers do not explain, and
+ * the rise of working capital beyond what growth takes. Nothing is ever given back for accruals below the peers'.
+ * Null where either cannot be given.
+ *
+ * Source: methods.md B7.
+ *
+ * @example earningsAtRisk({ ...peer, figures: { assetsPrior: 200, workingCapitalAccruals: 9, nwcPrior: 50, revenue: 110, revenuePrior: 100 } }, 0.03) // => { unexplained: 6, workingCapital: 4 }
+ */
+export function earningsAtRisk(peer: PeerInputs, unexplained: number | null): EarningsAtRisk | null {
+  const given = figuresOf(peer.figures, ['assetsPrior', 'workingCapitalAccruals', 'nwcPrior']);
+  const growth = revenueGrowth(peer.figures);
+  if (!given || growth === null || unexplained === null) return null;
+  return {
+    unexplained: Math.max(0, unexplained) * given.assetsPrior,
+    workingCapital: Math.max(0, given.workingCapitalAccruals - given.nwcPrior * growth),
   };
 }
 
 function refusal(peer: PeerInputs, section: QuarterCrossSection | undefined): string | null {
   if (!peer.ties) return 'The accounts do not tie, so they are not scored.';
-  if (peer.cashFlowPresentationChanged)
-    return 'The presentation of the cash flow statement changed within the twelve months and the year before was not restated.';
   return section ? null : 'No other accounts of this quarter end are in the book as of last night.';
 }
 

@@ -7,6 +7,7 @@ import { buildCrossSection, type CrossSection } from './crossSection.ts';
 import { openBooks } from '../statements/statementBook.ts';
 import { peerInputsOfQuarters } from './peerInputs.ts';
 import { reportingQuality } from './reportingQuality.ts';
+import { QUALITY_BLOCKS } from './score.ts';
 
 const book = [
   ...buildBook(16, 'metal goods', 1),
@@ -24,19 +25,31 @@ const crossSection = JSON.parse(
 const qualityOf = (borrower: BorrowerInputs) =>
   reportingQuality(borrower, openBooks(borrower, AS_OF), crossSection, POLICY_VERSION_1, AS_OF);
 
-test('every borrower of an ordinary book is scored with 85 of 100 points of weight', () => {
+test('every borrower of an ordinary book is scored with 95 of 100 points of weight, and noise waits for quarters', () => {
   for (const borrower of book) {
     const quality = qualityOf(borrower);
-    expect(quality.latest?.blocks.map(({ name }) => name)).toEqual([
-      'unexplained accruals',
-      'sharpest stretch',
-      'cash conversion',
-    ]);
-    expect(quality.latest?.coverage).toBe(85);
+    expect(quality.latest?.blocks.map(({ name }) => name)).toEqual(QUALITY_BLOCKS);
+    expect(quality.latest?.coverage).toBe(95);
+    expect(quality.latest?.blocks.at(-1)).toMatchObject({
+      risk: null,
+      reason: '10 usable quarters, 12 are needed',
+    });
     expect(quality.headline).toBeGreaterThanOrEqual(0);
     expect(quality.headline).toBeLessThanOrEqual(100);
     expect(quality.history).toHaveLength(8);
   }
+});
+
+test('with twenty-four quarters every point of weight is there', () => {
+  const long = Array.from({ length: 14 }, (_, k) => buildBorrower(300 + k, { quarters: 24 }));
+  const peers = buildCrossSection(
+    long.flatMap((borrower) => peerInputsOfQuarters(borrower, AS_OF)),
+    1,
+  );
+  const [first] = long;
+  const quality = reportingQuality(first!, openBooks(first!, AS_OF), peers, POLICY_VERSION_1, AS_OF);
+  expect(quality.latest?.coverage).toBe(100);
+  expect(quality.latest?.blocks.at(-1)?.figures.accrualNoise).toBeGreaterThan(0);
 });
 
 test('the headline is the mean of the last three quarter ends', () => {
@@ -84,10 +97,10 @@ test('without a cash flow statement coverage is 70 at most, and it is said', () 
 });
 
 test('too little to go by gives no score, names what is missing and asks for it', () => {
-  const quality = qualityOf(buildBorrower(504, { leaveOut: ['capex'] }));
+  const quality = qualityOf(buildBorrower(504, { leaveOut: ['capex', 'interest_paid'] }));
   expect(quality).toMatchObject({ headline: null, band: null });
   expect(quality.noScoreReason).toBe(
-    'Only 50 of 100 points of weight are available and 60 are needed. Not available: unexplained accruals (missing: capital expenditure over twelve months).',
+    'Only 50 of 100 points of weight are available and 60 are needed. Not available: unexplained accruals (missing: capital expenditure over twelve months); cash conversion (missing: interest paid over twelve months); accrual noise (10 usable quarters, 12 are needed).',
   );
   expect(quality.whatWouldChangeIt).toBe('Ask for what is missing: capital expenditure over twelve months.');
 });
