@@ -107,6 +107,20 @@ export interface ReadCheck {
   readonly months: number;
 }
 
+/** An adjustment that a compliance certificate adds to EBITDA: as the borrower states it, one of a list. */
+export interface ReadAddBack {
+  readonly periodEnd: string;
+  readonly months: number;
+  /** In whole currency units; as printed while the question of the unit is open. */
+  readonly amount: string;
+  readonly sheet: string;
+  readonly cell: string;
+  readonly rawText: string;
+  readonly label: string;
+  /** Keys of open questions that it waits for. */
+  readonly waitsFor: readonly string[];
+}
+
 export interface RowPlacement {
   readonly sheet: string;
   readonly row: number;
@@ -151,6 +165,8 @@ export interface Reading {
   readonly sheets: readonly ReadSheet[];
   readonly placements: readonly RowPlacement[];
   readonly facts: readonly ReadFact[];
+  /** Absent where the file holds no compliance certificate. */
+  readonly addBacks?: readonly ReadAddBack[];
   readonly questions: readonly Question[];
   readonly notes: readonly ReadNote[];
   readonly checks: readonly ReadCheck[];

@@ -13,19 +13,28 @@ export type TextMeaning =
   | { readonly kind: 'missing' }
   /** One group of three digits behind a mark that may be decimal or thousands, and nothing to tell. */
   | { readonly kind: 'ambiguous' }
+  /** '#REF!' and its like, also as an export writes it. */
+  | { readonly kind: 'error' }
   | { readonly kind: 'text' };
 
 const TEXT: TextMeaning = { kind: 'text' };
 const DASHES = /^[-\u2010-\u2015\u2212]+$/;
-const MISSING = /^(n\/a|n\.a\.?|na|k\.a\.|n\.d\.|nd|\.|#n\/a|not available|s\.o\.)$/i;
+const MISSING = /^(n\/a|n\.a\.?|na|k\.a\.|n\.d\.|nd|\.|not available|s\.o\.)$/i;
+/** As English, German, French and Spanish programs write them. */
+const ERRORS =
+  /^#\u00a1?(?:REF|BEZUG|DIV\/0|N\/A|N\/D|NV|NAME|NOM|NOMBRE|VALUE|WERT|VALEUR|VALOR|SPILL|\u00dcBERLAUF|CALC|NULL|NULO|NUM|ZAHL|NOMBRE)[!?]?$/i;
 const ZERO_WORDS = /^(nil|null|zero|néant|neant)$/i;
 const CURRENCY = /(?:us\$|[€£$¥]|\b(?:eur|usd|gbp|chf|sek|nok|dkk|pln|czk|jpy|cad|aud|huf|ron|kr)\b\.?)/gi;
 
 export function readAmountText(raw: string, mark: DecimalMark): TextMeaning {
-  const text = raw.replace(/[\u00a0\u202f\u2007\u2009\u200a]/g, ' ').trim();
+  const text = raw
+    .replace(/[\u00a0\u202f\u2007\u2009\u200a]/g, ' ')
+    .trim()
+    .replace(/^['\u2019]\s*(?=[-(\d.])/, '');
   if (text === '') return TEXT;
   if (DASHES.test(text) || ZERO_WORDS.test(text)) return { kind: 'zero' };
   if (MISSING.test(text)) return { kind: 'missing' };
+  if (ERRORS.test(text)) return { kind: 'error' };
   if (!/\d/.test(text) || text.length > 40) return TEXT;
   const { body, negative } = withoutSign(withoutFootnote(text));
   if (/^\d[\d.,' ]*\s*%$/.test(body)) return { kind: 'percent' };
@@ -48,11 +57,13 @@ export function readAmountText(raw: string, mark: DecimalMark): TextMeaning {
 export function decimalMarkOf(texts: Iterable<string>): DecimalMark {
   const votes = { ',': 0, '.': 0 };
   const groupsOfThree = { ',': 0, '.': 0 };
+  let plainHundreds = 0;
   for (const raw of texts) {
     const { body } = withoutSign(
       withoutFootnote(raw.replace(/[\u00a0\u202f\u2007\u2009\u200a]/g, ' ').trim()),
     );
     if (!/^\d[\d.,' ]*$/.test(body)) continue;
+    if (/^[1-9]\d\d$/.test(body)) plainHundreds += 1;
     const proven = provenMark(body.replace(/[ ']/g, ''));
     if (proven === ',' || proven === '.') votes[proven] += 1;
     if (proven === 'three behind ,') groupsOfThree[','] += 1;
@@ -60,8 +71,10 @@ export function decimalMarkOf(texts: Iterable<string>): DecimalMark {
   }
   if (votes[','] !== votes['.']) return votes[','] > votes['.'] ? ',' : '.';
   if (votes[','] > 0) return null;
-  if (groupsOfThree[','] >= 3 && groupsOfThree['.'] === 0) return '.';
-  if (groupsOfThree['.'] >= 3 && groupsOfThree[','] === 0) return ',';
+  // Beside whole hundreds without a mark two such groups are enough: three decimals are not left away.
+  const needed = plainHundreds > 0 ? 2 : 3;
+  if (groupsOfThree[','] >= needed && groupsOfThree['.'] === 0) return '.';
+  if (groupsOfThree['.'] >= needed && groupsOfThree[','] === 0) return ',';
   return null;
 }
 

@@ -58,7 +58,7 @@ export function findSums(rows: readonly SumRow[], step: Decimal): SumFound {
       isTotal: row.role === 'total',
       instead: null,
     };
-    const match = row.role === 'part' ? null : matchOf(terms, row, step);
+    const match = row.role === 'part' || row.role === 'aside' ? null : matchOf(terms, row, step);
     if (match) {
       const parts = terms.slice(terms.length - match.count);
       sums.set(
@@ -84,7 +84,7 @@ export function findSums(rows: readonly SumRow[], step: Decimal): SumFound {
       );
       terms = [
         ...terms.slice(0, terms.length - closed.length),
-        { ...own, instead: total(closed, own.values.length) },
+        { ...own, instead: closed.length >= 2 ? total(closed, own.values.length) : null },
       ];
     } else if (row.role !== 'aside' && row.role !== 'total') terms.push(own);
     if (row.barrier) terms = [];

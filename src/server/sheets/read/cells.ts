@@ -31,6 +31,10 @@ export interface SheetCell {
   readonly indent: number;
   /** Printed decimals, to tell cents. */
   readonly decimals: number;
+  /** '1,234' as text in a file that does not show which mark it uses. */
+  readonly ambiguous: boolean;
+  /** What a simple formula gives, where the value that the file holds for it is another. */
+  readonly recomputed: Decimal | null;
 }
 
 export interface SheetGrid {

@@ -14,6 +14,9 @@ export interface ColumnWords {
   readonly scenario: Scenario;
   readonly priorYear: boolean;
   readonly restated: boolean;
+  readonly indexed: boolean;
+  /** Where the heading names one of its own. */
+  readonly currency: string | null;
   /** A name beside the period: an entity, or a borrower in a file of many. */
   readonly name: string;
   readonly nameText: string;
@@ -70,6 +73,8 @@ function wordsOf(
     scenario: scenario ?? whole,
     priorYear: headings.some((heading) => heading.priorYear),
     restated: headings.some((heading) => heading.restated),
+    indexed: headings.some((heading) => heading.indexed),
+    currency: headings.map(({ scale }) => scale.currency).findLast((found) => found !== null) ?? null,
     name: named.map(({ rest }) => rest).join(' '),
     nameText: named.map(({ text }) => text).join(' · '),
   };
@@ -111,9 +116,12 @@ function leadingTexts(table: Table): SheetCell[] {
   return table.footnotes.filter(({ row }) => row < first);
 }
 
+const PRO_FORMA = /(?<![a-z])pro[ -]?forma(?![a-z])/i;
+
 /** A whole table is of one scenario where its sheet or title says so and its columns say nothing else. */
 function scenarioOfTable(table: Table): Scenario {
   for (const text of [table.sheet.name, ...table.titles.map((cell) => cell.text)]) {
+    if (PRO_FORMA.test(text)) return 'forecast';
     const { scenario, derived } = readHeadingText(text);
     if (
       scenario &&

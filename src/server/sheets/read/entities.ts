@@ -28,12 +28,12 @@ export function chooseEntities(
     if (named) borrowers.set(table, named);
     else {
       const names = rivalNames(columns);
-      if (names.length > 1) rivals.set(table, names);
+      if (names.length > 0) rivals.set(table, names);
     }
   }
   const borrowerOf = (table: StatementTable, column: SettledColumn) =>
     borrowers.get(table)?.get(column.key) ?? null;
-  const answer = rivals.size > 0 ? askEntity(rivals, asking) : null;
+  const answer = entityAnswer(rivals, asking);
   const chosen = new Map(
     [...settled].map(([table, columns]) => {
       if (borrowers.has(table))
@@ -41,14 +41,17 @@ export function chooseEntities(
       if (!rivals.has(table)) return [table, columns] as const;
       return [
         table,
-        columns.filter(({ nameText }) => answer !== null && plainText(nameText) === plainText(answer)),
+        columns.filter((column) => answer !== null && plainText(entityOf(column)) === plainText(answer)),
       ] as const;
     }),
   );
   return { columns: chosen, all: settled, borrowerOf };
 }
 
-/** Names that stand beside one another for the same period and scenario. */
+/**
+ * Names that stand beside one another for the same period and scenario; a column without a name goes by its heading.
+ * Eliminations and adjustments are no choice.
+ */
 function rivalNames(columns: readonly SettledColumn[]): string[] {
   const names = new Map<string, string>();
   for (const column of columns) {
@@ -58,13 +61,28 @@ function rivalNames(columns: readonly SettledColumn[]): string[] {
     );
     const distinct = new Set(sharing.map(({ name }) => name));
     if (distinct.size < 2 || sharing.every(({ restated, name }) => restated || name === '')) continue;
-    if (column.name !== '' && !NO_ENTITY.test(column.name)) names.set(column.name, column.nameText);
+    const name = entityOf(column);
+    if (!NO_ENTITY.test(column.name)) names.set(plainText(name), name);
   }
   return [...names.values()];
 }
 
-function askEntity(rivals: ReadonlyMap<StatementTable, readonly string[]>, asking: Asking): string | null {
+/** The name of a column's entity, as the question offers it. */
+const entityOf = ({ name, nameText, heading }: SettledColumn): string => (name === '' ? heading : nameText);
+
+/** The only name that is left beside eliminations needs no question. */
+function entityAnswer(rivals: ReadonlyMap<StatementTable, readonly string[]>, asking: Asking): string | null {
   const names = [...new Set([...rivals.values()].flat())];
+  const [only] = names;
+  if (only === undefined || names.length === 1) return only ?? null;
+  return askEntity(rivals, names, asking);
+}
+
+function askEntity(
+  rivals: ReadonlyMap<StatementTable, readonly string[]>,
+  names: readonly string[],
+  asking: Asking,
+): string | null {
   const [table] = rivals.keys();
   const cells =
     table?.table.columns.flatMap(({ headings }) =>

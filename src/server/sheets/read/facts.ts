@@ -25,8 +25,12 @@ export function factsOfRun(
   asking: Asking,
 ): TableFact[] {
   const columns = (entities.columns.get(table) ?? []).filter(
-    ({ scenario, months }) => scenario === 'actual' && (run.part === 'balance' || months !== null),
+    ({ scenario, months, currency }) =>
+      scenario === 'actual' &&
+      (run.part === 'balance' || months !== null) &&
+      (currency === null || scale.currency === null || currency === scale.currency),
   );
+  if (scale.leftOut) return [];
   return placed.flatMap((row) => {
     if (row.code === null) return [];
     const rowWaits = [
@@ -58,7 +62,8 @@ function factOf(
   const months = run.part === 'balance' ? 0 : column.months;
   if (months === null) return null;
   const sign = run.signed.factorOf(row.index, row.code) * signOfColour(cell, table, row, asking);
-  const amount = cell.amount.times(sign).times(scale.unit ?? 1);
+  const printed = run.amounts[row.index]?.[column.index] ?? cell.amount;
+  const amount = printed.times(sign).times(scale.unit ?? 1);
   return {
     code: row.code,
     periodEnd: column.end,

@@ -11,6 +11,8 @@ export interface HeadingText {
   readonly scenario: Scenario | null;
   /** Variance, change, share: worked out from other columns. */
   readonly derived: boolean;
+  /** Restated for a price index. */
+  readonly indexed: boolean;
   /** Numbers of notes. */
   readonly note: boolean;
   /** 'Prior year': the same period a year before the column beside it. */
@@ -23,7 +25,9 @@ export interface HeadingText {
 
 const WORDS = {
   derived:
-    /(?<![a-z])(?:var(?:iance|iation)?s?\.?|diff(?:erence|erenz)?\.?|delta|abw(?:eichung)?\.?|ecart|desviacion|change|growth|yoy|y\/y|veranderung|evolution|margin|common size|share of|anteil|in %|of sales|of revenu|vs\.?)(?![a-z])|[%δ△∆]/,
+    /(?<![a-z])(?:var(?:iance|iation)?s?\.?|diff(?:erence|erenz)?\.?|delta|abw(?:eichung)?\.?|ecart|desviacion|change|growth|yoy|y\/y|veranderung|evolution|margin|common size|share of|anteil|in %|of sales|of revenu|vs\.?|average|avg\.?|mean|durchschnitt\w*|run[ -]?rate|annuali[sz]ed|hochgerechnet|annualise|moyen(?:ne)?s?|promedio|pro[ -]?forma)(?![a-z])|[%δ△∆]/,
+  indexed:
+    /(?<![a-z])(?:(?:price[ -])?index(?:ed|ation)?(?:[ -]adjusted)?|(?:hyper)?inflation(?:[ -](?:adjusted|restated|accounting))?|inflationsberein\w*|kaufkraftberein\w*|ias ?29|indexe|ajustad[oa] por inflacion|constant (?:prices|purchasing power)|retraite de l inflation)(?![a-z])/,
   note: /^(?:notes?|anm(?:erkung)?\.?|anhang|ref\.?|annexe|nota|notas|no\.|nr\.?)$/,
   priorYear:
     /(?<![a-z])(?:prior year|previous year|last year|py|vorjahr|vj|annee precedente|exercice precedent|n-1|ano anterior|ejercicio anterior|same period last year)(?![a-z])/,
@@ -31,9 +35,9 @@ const WORDS = {
     /(?<![a-z])(?:restated|as restated|adjusted comparatives|angepasst|retraite|reexpresado|reclassified)(?![a-z])/,
   original:
     /(?<![a-z])(?:as (?:originally |previously )?reported|original|as published|previously reported)(?![a-z])/,
-  budget: /(?<![a-z])(?:budget|bud|plan(?:ned)?|soll|target|presupuesto|budgete)(?![a-z])/,
+  budget: /(?<![a-z])(?:budget|bud|plan(?:ned)?|soll|target|presupu?e?sto|budgete)(?![a-z])/,
   forecast:
-    /(?<![a-z])(?:forecast|fcst|fc|estimate[ds]?|est\.?|outlook|latest estimate|le|projection|projected|prevision(?:nel|s)?|prognose|hochrechnung|expected|erwartet)(?![a-z])/,
+    /(?<![a-z])(?:forecast|fcst|fc|rf ?\d?|guidance|latest (?:view|outlook)|\d{1,2} ?\+ ?\d{1,2}|estimate[ds]?|est\.?|outlook|latest estimate|le|projection|projected|prevision(?:nel|s)?|prognose|hochrechnung|expected|erwartet)(?![a-z])/,
   actual: /(?<![a-z])(?:actuals?|act\.?|ist|reel|real|realise)(?![a-z])/,
   debit: /(?<![a-z])(?:debits?|soll|debe|dr)(?![a-z])/,
   credit: /(?<![a-z])(?:credits?|haben|haber|cr)(?![a-z])/,
@@ -62,7 +66,8 @@ export function readHeadingText(text: string): HeadingText {
   const priorYear = taken(WORDS.priorYear);
   const restated = taken(WORDS.restated);
   taken(WORDS.original);
-  const derived = taken(WORDS.derived);
+  const indexed = taken(WORDS.indexed);
+  const derived = taken(WORDS.derived) || indexed;
   const budget = taken(WORDS.budget);
   const forecast = taken(WORDS.forecast);
   const actual = taken(WORDS.actual);
@@ -79,6 +84,7 @@ export function readHeadingText(text: string): HeadingText {
           ? 'actual'
           : ((suffix ? SUFFIXES[suffix] : null) ?? null),
     derived,
+    indexed,
     note,
     priorYear,
     restated,
@@ -88,7 +94,7 @@ export function readHeadingText(text: string): HeadingText {
 }
 
 const CONNECTING =
-  /(?<![a-z])(?:as|at|of|the|for|to|on|in|ended|ending|per|zum|vom|am|au|du|le|a|al|de|stand|and|quarter|period|month|months|year|half|unaudited|audited|thousands?|millions?|tsd|eur|usd|gbp|sek|teur|keur|meur|k|m|mio|000s?)(?![a-z])/g;
+  /(?<![a-z])(?:as|at|of|the|for|to|on|in|ended|ending|per|zum|vom|am|au|du|le|a|al|de|stand|and|quarter|period|month|months|year|half|unaudited|audited|reviewed|draft|final|preliminary|provisional|management accounts|mgmt accounts|mgmt|statutory accounts|statutory|vorlaufig|gepruft|ungepruft|testiert|entwurf|audite|non audite|provisoire|auditado|no auditado|provisional|borrador|thousands?|millions?|tsd|eur|usd|gbp|sek|teur|keur|meur|k|m|mio|000s?)(?![a-z])/g;
 
 /** A name of at least two letters, without what connects dates and states units. */
 function nameLeft(rest: string): string {

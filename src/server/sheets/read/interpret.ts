@@ -7,7 +7,8 @@ import type {
   RowPlacement,
 } from '#core/statements/workbookReading.ts';
 import { Asking } from './asking.ts';
-import type { SheetGrid, WorkbookGrid } from './cells.ts';
+import { cellName, type SheetGrid, type WorkbookGrid } from './cells.ts';
+import { isCertificate, readCertificate } from './certificate.ts';
 import { checksOf } from './checks.ts';
 import { chooseEntities } from './entities.ts';
 import { factsOfRun, type TableFact } from './facts.ts';
@@ -36,27 +37,33 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
   for (const { code, text, where } of notes) asking.note(code, text, where);
   const sheets = grid.sheets.filter((sheet) => !isPersonal(sheet, asking));
   const open: WorkbookGrid = { kind: grid.kind, sheets };
-  const tables = withStatements(sheets.flatMap((sheet) => statementTables(sheet, asking)));
-  const empty = refuseWithoutAmounts(sheets, tables);
+  const found = sheets.flatMap((sheet) => statementTables(sheet, asking));
+  const certificates = found.filter(isCertificate);
+  const tables = withStatements(found.filter((table) => !certificates.includes(table)));
+  const empty = refuseWithoutAmounts(sheets, [...tables, ...certificates]);
   if (empty) return refusedReading(empty, open, tables, asking);
 
-  const evidence = periodEvidence(open, tables, context.fiscalYearEndMonth, asking);
+  const evidence = periodEvidence(open, [...tables, ...certificates], context.fiscalYearEndMonth, asking);
   const settled = withoutRepeatedColumns(settleColumns(tables, evidence, asking), asking);
   const gaps = refuseForGaps(open, settled, asking);
   if (gaps) return refusedReading(gaps, open, tables, asking);
 
-  const scales = settleScales(open, tables, context, asking);
+  const scales = settleScales(open, [...tables, ...certificates], context, asking);
   const entities = chooseEntities(settled, context.borrowerName ?? null, asking);
   const placed = placeTables(tables, entities.columns, asking);
-  const found = placed.flatMap(({ table, run, rows }) =>
+  const placedFacts = placed.flatMap(({ table, run, rows }) =>
     factsOfRun(table, run, rows, scaleOf(scales, table), entities, asking),
   );
   const ledgers = tables
     .filter(({ isTrialBalance }) => isTrialBalance)
     .map((table) => readTrialBalance(table, scaleOf(scales, table), asking));
-  const all = [...found, ...ledgers.flatMap((ledger) => ledger.facts)];
+  const all = [...placedFacts, ...ledgers.flatMap((ledger) => ledger.facts)];
   const single = withoutSetAside(withoutRivalTables(withoutDoubledDepreciation(all), asking), asking);
+  const certified = certificates.map((table) =>
+    readCertificate(table, scaleOf(scales, table), evidence, single, asking),
+  );
   const checks = [
+    ...certified.flatMap((certificate) => certificate.checks),
     ...checksOf(
       tables.map((table) => ({ table, scale: scaleOf(scales, table) })),
       entities,
@@ -64,7 +71,11 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     ...ledgers.flatMap((ledger) => ledger.checks),
   ];
   const facts = askUnbalanced(withoutJumps(single, context, asking), checks, asking);
-  if (facts.length === 0 && asking.questions.every(({ answer }) => answer !== null)) {
+  if (
+    facts.length === 0 &&
+    certificates.length === 0 &&
+    asking.questions.every(({ answer }) => answer !== null)
+  ) {
     const nothing = refusal(
       'no-amounts',
       null,
@@ -78,6 +89,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
     tables,
     settled,
     facts,
+    addBacks: certified.flatMap((certificate) => certificate.addBacks),
     checks,
     asking,
     scales,
@@ -85,7 +97,7 @@ export function interpret(grid: WorkbookGrid, notes: readonly ReadNote[], contex
       ...placed.flatMap(({ table, rows }) => placementsOf(table, rows)),
       ...ledgers.flatMap((ledger) => ledger.placements),
     ],
-    layoutKey: layoutKeyOf(tables),
+    layoutKey: layoutKeyOf([...tables, ...certificates]),
   });
 }
 
@@ -98,7 +110,7 @@ function withStatements(tables: readonly StatementTable[]): StatementTable[] {
 }
 
 const scaleOf = (scales: ReadonlyMap<StatementTable, SettledScale>, table: StatementTable): SettledScale =>
-  scales.get(table) ?? { unit: null, currency: null, waitsFor: [] };
+  scales.get(table) ?? { unit: null, currency: null, waitsFor: [], leftOut: false };
 
 function isPersonal(sheet: SheetGrid, asking: Asking): boolean {
   if (!holdsPersonalData(sheet)) return false;
@@ -124,7 +136,16 @@ function refuseWithoutAmounts(
   const pictured = sheets.find(({ pictures }) => pictures.length > 0);
   const [corner] = pictured?.pictures ?? [];
   if (pictured && corner) return refusal('picture-only', { sheet: pictured.name, cell: corner });
-  return refusal('no-amounts');
+  const unclear = sheets
+    .flatMap(({ rows }) => [...rows.values()].flatMap((row) => [...row.values()]))
+    .find(({ ambiguous }) => ambiguous);
+  if (!unclear) return refusal('no-amounts');
+  const place = { sheet: unclear.sheet, cell: cellName(unclear) };
+  return refusal(
+    'no-amounts',
+    place,
+    `texts such as '${unclear.text}' in ${place.sheet}!${place.cell} can be read as thousands or as decimals, and nothing in the file tells. Numbers need to be numbers, or to be written with two marks or none`,
+  );
 }
 
 interface PlacedRun {

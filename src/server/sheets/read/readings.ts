@@ -1,5 +1,6 @@
 /** Puts a reading together, ready, with questions or refused. */
 import type {
+  ReadAddBack,
   ReadCheck,
   Reading,
   ReadFact,
@@ -19,6 +20,7 @@ export interface ReadingParts {
   readonly tables: readonly StatementTable[];
   readonly settled: SettledColumns;
   readonly facts: readonly TableFact[];
+  readonly addBacks: readonly ReadAddBack[];
   readonly checks: readonly ReadCheck[];
   readonly asking: Asking;
   readonly scales: ReadonlyMap<StatementTable, SettledScale>;
@@ -40,6 +42,7 @@ export function readingOf(parts: ReadingParts): Reading {
     sheets: sheetsOut(parts.grid.sheets, parts.tables, parts.settled),
     placements: parts.placements,
     facts: parts.facts.map(plainFact),
+    ...(parts.addBacks.length > 0 ? { addBacks: parts.addBacks } : {}),
     questions: asking.questions,
     notes: asking.notes,
     checks: parts.checks,

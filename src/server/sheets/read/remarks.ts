@@ -1,6 +1,6 @@
 /** What is worth saying of a file that hinders nothing. */
 import type { Asking } from './asking.ts';
-import { cellName, type SheetGrid } from './cells.ts';
+import { cellName, type SheetCell, type SheetGrid } from './cells.ts';
 import { quoted } from './drawnText.ts';
 import type { TableFact } from './facts.ts';
 import { rowPlace, type StatementTable } from './statements.ts';
@@ -44,12 +44,53 @@ function noteColumns({ table, columns }: StatementTable, asking: Asking): void {
       where,
     );
   }
+  const indexed = columns.find((column) => column.indexed);
+  if (indexed) {
+    asking.note(
+      'index-adjusted',
+      `Columns restated for a price index were left out, first '${indexed.heading}': no trend runs across them.`,
+      where,
+    );
+  }
+  noteStated(table, asking);
   const inWeeks = columns.find(({ period }) => period.weeks !== null);
   if (inWeeks) asking.note('week-year', `Periods are counted in weeks: '${inWeeks.heading}'.`, where);
 }
 
+/** What a table says of its status and its basis: the analyst enters both, and sees here what the file says. */
+const STATED = [
+  [
+    'status-stated',
+    /(?<![a-z])(?:un-?audited|audited|reviewed by|draft|preliminary|(?:un)?gepr[üu]ft|vorl[äa]ufig|entwurf|(?:non )?audit[ée]e?s?|provisoire|(?:no )?auditad[oa]s?|provisional|borrador)(?![a-z])/i,
+    'The file says of its status',
+  ],
+  [
+    'basis-stated',
+    /(?<![a-z])(?:ifrs|hgb|us[ -]?gaap|uk[ -]?gaap|frs ?10[12]|local gaap|consolidated|stand-?alone|konzern\w*|konsolidiert|consolid[ée]s?|consolidad[oa]s?|individual(?:es)?|discontinued operations)(?![a-z])/i,
+    'The file says of its basis',
+  ],
+  [
+    'index-adjusted',
+    /hyperinflation|ias ?29|inflation[ -](?:adjusted|restated|accounting)/i,
+    'Figures are restated for a price index',
+  ],
+] as const;
+
+function noteStated(table: StatementTable['table'], asking: Asking): void {
+  const headings = table.columns.flatMap((column) => column.headings);
+  const cells = [...table.titles, ...headings, ...table.footnotes].filter(({ kind }) => kind === 'text');
+  for (const [code, words, says] of STATED) {
+    const stated = cells.filter(({ text }) => words.test(text));
+    const [first] = stated;
+    if (!first) continue;
+    const texts = [...new Set(stated.map(({ text }) => text.trim()))];
+    asking.note(code, `${says}: ${quoted(texts)}.`, { sheet: first.sheet, cell: cellName(first) });
+  }
+}
+
 function noteRows({ table, runs }: StatementTable, asking: Asking): void {
   const cells = table.rows.flatMap((row) => row.cells.flatMap((cell) => cell ?? []));
+  noteDoubtful(cells, asking);
   const texts = cells.filter(({ fromText }) => fromText);
   const [first] = texts;
   if (first) {
@@ -97,4 +138,25 @@ function noteComments({ name, comments }: SheetGrid, asking: Asking): void {
     sheet: name,
     cell: first.cell,
   });
+}
+
+function noteDoubtful(cells: readonly SheetCell[], asking: Asking): void {
+  const ambiguous = cells.filter((cell) => cell.ambiguous);
+  const [first] = ambiguous;
+  if (first) {
+    asking.note(
+      'ambiguous-numbers',
+      `${ambiguous.length} texts such as '${first.text}' in ${first.sheet}!${cellName(first)} can be read as thousands or as decimals, and nothing in the file tells. They were not read.`,
+      { sheet: first.sheet, cell: cellName(first) },
+    );
+  }
+  const stale = cells.filter(({ recomputed }) => recomputed !== null);
+  const [example] = stale;
+  if (example) {
+    asking.note(
+      'stale-values',
+      `${stale.length} stored values are not what their formulas give, first ${example.sheet}!${cellName(example)}: ${example.text} is stored, ${example.recomputed?.toFixed() ?? ''} is worked out. The stored values were read. Ask for the file recalculated.`,
+      { sheet: example.sheet, cell: cellName(example) },
+    );
+  }
 }

@@ -14,7 +14,8 @@ const samePeriod = (one: SettledColumn, other: SettledColumn): boolean =>
   one.months === other.months &&
   (one.months !== null || one.heading === other.heading) &&
   one.scenario === other.scenario &&
-  one.name === other.name;
+  one.name === other.name &&
+  one.currency === other.currency;
 
 function keptColumns(
   table: StatementTable,

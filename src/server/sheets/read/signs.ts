@@ -69,6 +69,34 @@ function sumRow(
   return { ...base, role: couldBeSum ? 'maybe' : 'part' };
 }
 
+/**
+ * Costs that are negative in one column and positive in the others ('sign flips between years'): each column is a
+ * block of its own, and those that are negative are turned. One cost alone turns nothing: it may be a credit.
+ */
+export function withEvenCosts(
+  rows: readonly ReadRow[],
+  printed: readonly (readonly (Decimal | null)[])[],
+  columns: readonly number[],
+): Values {
+  const costs = rows.flatMap(({ line, part }, at) =>
+    part === 'income' && line !== null && COST_LINES.has(line) && !FREE_SIGNS.has(line) ? [at] : [],
+  );
+  const shareOf = (column: number) => {
+    const values = costs.flatMap((at) => printed[at]?.[column] ?? []).filter((value) => !value.isZero());
+    return values.length < 2 ? null : shareNegative(values);
+  };
+  const shares = columns.map((column) => ({ column, share: shareOf(column) }));
+  const negative = shares.filter(({ share }) => share !== null && share >= NEGATIVE_SHARE);
+  const positive = shares.filter(({ share }) => share !== null && share <= 1 - NEGATIVE_SHARE);
+  if (negative.length === 0 || positive.length === 0) return printed;
+  const turned = new Set(negative.map(({ column }) => column));
+  return printed.map((row, at) => {
+    const { line } = rows[at] as ReadRow;
+    if (line === null || !COST_LINES.has(line)) return row;
+    return row.map((value, column) => (value && turned.has(column) ? value.neg() : value));
+  });
+}
+
 function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): Signed {
   const of = (wanted: (line: Line) => boolean) =>
     rows.flatMap((row, at) => (row.line && wanted(row.line) ? (printed[at] ?? []) : []));

@@ -10,7 +10,7 @@ import type { PeriodText } from './periodText.ts';
 import type { ColumnPeriod } from './periods.ts';
 import { readRows, type ReadRow } from './rows.ts';
 import { tableScale, type TableScale } from './scale.ts';
-import { printedStep, signRows, type Signed, type Values } from './signs.ts';
+import { printedStep, signRows, withEvenCosts, type Signed, type Values } from './signs.ts';
 import { tablesOf, type Table, type TableRow } from './tables.ts';
 import type { Line } from './wordings/lines.ts';
 
@@ -18,7 +18,7 @@ import type { Line } from './wordings/lines.ts';
 export interface Run {
   readonly part: ReadRow['part'];
   readonly rows: readonly ReadRow[];
-  /** Printed amounts, by row and by column of the table. */
+  /** Printed amounts, by row and by column of the table; costs in one convention throughout. */
   readonly amounts: Values;
   readonly signed: Signed;
   readonly step: Decimal;
@@ -78,7 +78,12 @@ function runsOf(rows: readonly ReadRow[], counted: readonly ColumnWords[]): Run[
     else groups.push([row]);
   }
   return groups.map((group) => {
-    const amounts = group.map(({ row }) => row.cells.map((cell) => cell?.amount ?? null));
+    const printed = group.map(({ row }) => row.cells.map((cell) => cell?.amount ?? null));
+    const amounts = withEvenCosts(
+      group,
+      printed,
+      counted.map(({ index }) => index),
+    );
     const values = amounts.map((row) => counted.map(({ index }) => row[index] ?? null));
     const step = printedStep(values.flat());
     return {

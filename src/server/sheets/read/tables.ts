@@ -104,7 +104,9 @@ function isHeadingRow(cells: readonly SheetCell[], bodySeen: boolean): boolean {
   if (years.length > 0)
     return cells.every((cell) => couldBeYear(cell) || !isAmount(cell)) && areYears(years, bodySeen);
   if (!bodySeen) return true;
-  return cells.some((cell) => cell.kind === 'date' || saysPeriod(readHeadingText(cell.text)));
+  return cells.some(
+    ({ kind, text }) => kind === 'date' || (kind === 'text' && saysPeriod(readHeadingText(text))),
+  );
 }
 
 /** 'Current portion of debt 2000 2001' is a row of amounts, whatever its amounts look like. */

@@ -13,6 +13,8 @@ export interface SettledScale {
   readonly currency: string | null;
   /** Keys of the questions that are open. */
   readonly waitsFor: readonly string[];
+  /** The table is in another currency than the one that was chosen: amounts are never translated here. */
+  readonly leftOut: boolean;
 }
 
 export interface ScaleContext {
@@ -41,13 +43,13 @@ export function settleScales(
   return new Map(
     tables.map((table) => {
       const own = units.get(table) ?? { unit: null, waitsFor: [] };
-      const ownCurrency = table.scale.currency ?? currency;
       return [
         table,
         {
           unit: own.unit,
-          currency: ownCurrency,
-          waitsFor: [...own.waitsFor, ...(ownCurrency ? [] : ['currency'])],
+          currency,
+          waitsFor: [...own.waitsFor, ...(currency ? [] : ['currency'])],
+          leftOut: currency !== null && table.scale.currency !== null && table.scale.currency !== currency,
         },
       ];
     }),
@@ -190,6 +192,8 @@ const SHARERS: Readonly<Record<string, readonly string[]>> = {
 };
 const USUAL_CURRENCIES = ['EUR', 'USD', 'GBP', 'CHF', 'SEK', 'NOK', 'DKK', 'PLN'];
 
+const inSeveral = (stated: ReadonlySet<string>): boolean => stated.size > 1;
+
 /** A sign that several currencies share is always asked the first time; then it is known for the layout. */
 function currencyOf(
   grid: WorkbookGrid,
@@ -197,7 +201,12 @@ function currencyOf(
   context: ScaleContext,
   asking: Asking,
 ): string | null {
-  const stated = new Set(tables.flatMap(({ scale }) => scale.currency ?? []));
+  const stated = new Set(
+    tables.flatMap(({ scale, columns }) => [
+      ...(scale.currency === null ? [] : [scale.currency]),
+      ...columns.flatMap((column) => (column.role === 'period' ? (column.currency ?? []) : [])),
+    ]),
+  );
   const contradicted = tables.some(({ scale }) => scale.contradicted && scale.currency === null);
   if (stated.size === 0 && !contradicted) {
     for (const sheet of grid.sheets) {
@@ -222,9 +231,11 @@ function currencyOf(
     key: 'currency',
     kind: 'currency',
     holdsFor: 'layout',
-    text: sign
-      ? `The file says '${sign}', which several currencies share. Which one is it?`
-      : 'No sheet says which currency the amounts are in. Which one is it?',
+    text: inSeveral(stated)
+      ? `The file holds figures in ${[...stated].join(' and ')}. Which one is the reporting currency? The others are left out, and nothing is translated.`
+      : sign
+        ? `The file says '${sign}', which several currencies share. Which one is it?`
+        : 'No sheet says which currency the amounts are in. Which one is it?',
     where,
     options: codes.map((code) => ({ value: code, label: code })),
     accepts: (given) => /^[A-Z]{3}$/.test(given),

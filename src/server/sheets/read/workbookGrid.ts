@@ -14,12 +14,15 @@ import {
 import { workOut } from './formulas.ts';
 import { formatShape, printNumber } from './numberFormat.ts';
 import { refusal, Refused } from './refusals.ts';
+import { withSerialHeadings } from './serialHeadings.ts';
 
 /** Cells beyond these hold no statement. */
 const LAST_ROW = 50_000;
 const LAST_COLUMN = 500;
 /** Formulas that name formulas without a value, and so on. */
 const MAX_FORMULA_DEPTH = 60;
+/** Beyond so many, stored values are taken without working them out again. */
+const MAX_RECOMPUTED = 5_000;
 
 export async function workbookGrid(bytes: Buffer): Promise<WorkbookGrid> {
   const workbook = new ExcelJS.Workbook();
@@ -31,7 +34,13 @@ export async function workbookGrid(bytes: Buffer): Promise<WorkbookGrid> {
   }
   const mark = decimalMarkOf(textsOf(workbook));
   const values = new WorkbookValues(workbook, mark);
-  return { kind: 'xlsx', sheets: workbook.worksheets.map((sheet) => sheetGrid(sheet, mark, values)) };
+  const { date1904 } = workbook.properties;
+  return {
+    kind: 'xlsx',
+    sheets: workbook.worksheets.map((sheet) =>
+      withSerialHeadings(sheetGrid(sheet, mark, values), date1904 === true),
+    ),
+  };
 }
 
 function* textsOf(workbook: ExcelJS.Workbook): Generator<string> {
@@ -107,6 +116,8 @@ const PLAIN = {
   fromText: false,
   formatScale: 1,
   decimals: 0,
+  ambiguous: false,
+  recomputed: null,
 } as const;
 
 function sheetCell(
@@ -126,7 +137,8 @@ function sheetCell(
       : { ...PLAIN, ...place, ...style, kind: 'uncalculated', text: `=${cell.formula}`, fromFormula: true };
   }
   const read = storedCell(place, style, stored, mark);
-  return read && { ...read, fromFormula: isFormula };
+  if (!read || !isFormula) return read;
+  return { ...read, fromFormula: true, recomputed: values.recomputed(cell, sheet) };
 }
 
 function storedCell(place: Place, style: Style, stored: unknown, mark: DecimalMark): SheetCell | null {
@@ -172,6 +184,8 @@ export function textCell(place: Place, style: Style, text: string, mark: Decimal
     return { ...cell, kind: 'amount', amount: meaning.amount, decimals: meaning.decimals, fromText: true };
   }
   if (meaning.kind === 'zero') return { ...cell, kind: 'amount', amount: ZERO };
+  if (meaning.kind === 'error') return { ...cell, kind: 'error', text: text.trim() };
+  if (meaning.kind === 'ambiguous') return { ...cell, kind: 'text', ambiguous: true };
   return { ...cell, kind: meaning.kind === 'percent' ? 'percent' : 'text' };
 }
 
@@ -214,6 +228,7 @@ class WorkbookValues {
   private readonly mark: DecimalMark;
   private readonly known = new Map<string, Decimal | undefined>();
   private depth = 0;
+  private checked = 0;
 
   constructor(workbook: ExcelJS.Workbook, mark: DecimalMark) {
     this.sheets = new Map(workbook.worksheets.map((sheet) => [sheet.name.toLowerCase(), sheet]));
@@ -230,6 +245,17 @@ class WorkbookValues {
     this.depth -= 1;
     this.known.set(key, value);
     return value;
+  }
+
+  /** What a simple formula gives now, where that is not the value that the file holds for it. */
+  recomputed(cell: ExcelJS.Cell, sheet: string): Decimal | null {
+    if (this.checked >= MAX_RECOMPUTED || typeof cell.result !== 'number' || !cell.formula) return null;
+    this.checked += 1;
+    const value = workOut(cell.formula, sheet, (name, row, column) => this.ofCell(name, row, column));
+    if (!value || !Number.isFinite(cell.result)) return null;
+    const stored = decimal(decimalFromDouble(cell.result));
+    const allowed = stored.abs().times('0.000001').plus('0.005');
+    return value.minus(stored).abs().lte(allowed) ? null : value;
   }
 
   private ofCell(name: string, row: number, column: number): Decimal | undefined {

@@ -8,11 +8,14 @@ import { NOTHING_KNOWN, type Change } from '../messyFiles.fixture.ts';
 export { balance, codes, figures, income, kinds, NOTHING_KNOWN } from '../messyFiles.fixture.ts';
 export type { Change } from '../messyFiles.fixture.ts';
 
+/** Workers start slowly on a busy machine. */
+const MOST_MILLISECONDS = 60_000;
+
 afterAll(() => readingPool().close());
 
 /** One test of one mess. */
 export const mess = (number: number, title: string, body: () => Promise<void>): void =>
-  test(`mess ${number}: ${title}`, body);
+  test(`mess ${number}: ${title}`, body, MOST_MILLISECONDS);
 
 export const readBytesAs = (
   bytes: Buffer,
