@@ -3,7 +3,7 @@ import { buildInputs } from './alerts/rule.fixture.ts';
 import { assess } from './assess.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import { buildCovenant, buildLevel, buildYear } from './covenants/covenant.fixture.ts';
-import { smallestHeadroomAhead } from './covenants/smallestHeadroom.ts';
+import { smallestHeadroomsAhead } from './covenants/smallestHeadroom.ts';
 import { POLICY_VERSION_1 as policy } from './policy.ts';
 import { bookCrossSection } from './bookCrossSection.ts';
 
@@ -68,7 +68,7 @@ test('the smallest headroom is over the latest live tests; later levels are kept
   );
   expect(smallestHeadroom?.covenantId).toBe(1);
   expect(smallestHeadroom?.mayFall.toFixed(4)).toBe('0.0143');
-  const ahead = smallestHeadroomAhead(tests, [1, 2]);
+  const [ahead] = smallestHeadroomsAhead(tests, [1, 2]);
   expect(ahead).toMatchObject({ covenantId: 1, from: '2026-06-01' });
   expect(ahead?.mayFall.toFixed(4)).toBe('-0.0615');
 });

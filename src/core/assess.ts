@@ -1,4 +1,4 @@
-/** THE WALK: statements, measures, covenant tests, reporting quality, patterns, alerts. */
+/** THE WALK: statements, measures, covenant tests, reporting quality, patterns, what may come, alerts. */
 import { allTests } from './allTests.ts';
 import type { AlertFinding } from './alerts/alert.ts';
 import { findingsOf } from './alerts/alertRules.ts';
@@ -13,6 +13,9 @@ import {
   type SmallestHeadroom,
   type SmallestHeadroomAhead,
 } from './covenants/smallestHeadroom.ts';
+import { peersOfBook } from './outlook/peersOfBook.ts';
+import { projections as projectionsOf, type Projection } from './outlook/projection.ts';
+import { sensitivity, type Sensitivity } from './outlook/sensitivity.ts';
 import { justPassingOf, type JustPassing } from './patterns/justPassing.ts';
 import { nearLinesOf, type CovenantNearLine } from './patterns/nearLine.ts';
 import { METHOD_VERSION, type Policy } from './policy.ts';
@@ -36,6 +39,10 @@ export interface Assessment {
   readonly patterns: readonly JustPassing[];
   /** Each covenant of an agreement, as of the last night; empty before the first. */
   readonly nearLine: readonly CovenantNearLine[];
+  /** Each covenant's tests within four quarters of its latest one. */
+  readonly projections: readonly Projection[];
+  /** Null in results that were stored before there was any. */
+  readonly sensitivity: Sensitivity | null;
   readonly findings: readonly AlertFinding[];
 }
 
@@ -59,6 +66,7 @@ export function assess(
   const covenantIds = inputs.covenants.map(({ id }) => id);
   const patterns = covenantIds.map((id) => justPassingOf(tests, id, policy.repeated.ofLast));
   const nearLine = nearLinesOf(inputs.covenants, crossSection.patterns);
+  const projections = projectionsOf(inputs, tests, peersOfBook(crossSection.ratios));
   return {
     borrowerId: inputs.borrowerId,
     asOf,
@@ -70,6 +78,8 @@ export function assess(
     quality,
     patterns,
     nearLine,
-    findings: findingsOf({ inputs, tests, quality, patterns, nearLine, policy, asOf }),
+    projections,
+    sensitivity: sensitivity(inputs.covenants, tests, books, policy.outlook),
+    findings: findingsOf({ inputs, tests, quality, patterns, nearLine, projections, policy, asOf }),
   };
 }

@@ -56,6 +56,12 @@ const DRAWINGS: Readonly<Record<AlertKind, ReactNode>> = {
       <path className="mark-fill" d="M11 8h4v4h-4z" fillOpacity="0.35" />
     </>
   ),
+  'headroom shrinking': (
+    <>
+      <path {...LINE} d="M1 14h14M3.5 2v9.5M12.5 6.5v5" />
+      <path {...LINE} strokeWidth="1" d="M3.5 2l9 4.5" />
+    </>
+  ),
   'reporting quality fell': (
     <>
       <path {...LINE} d="M1 4l4.5 4.5L8 6l5.5 5.5" />

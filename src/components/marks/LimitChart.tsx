@@ -24,7 +24,7 @@ export function LimitChart(figures: LimitChartFigures) {
       </div>
       <figcaption className="type-second mt-2">
         {chartText(figures)} Shaded: {figures.maximum ? 'above' : 'below'} the limit. Filled circles are just
-        passing, diamonds not met.
+        passing, filled diamonds not met, open ones waived or cured, squares past our trigger.
       </figcaption>
       <details className="mt-2">
         <summary className="cursor-pointer">Figures of this chart</summary>

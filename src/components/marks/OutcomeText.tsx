@@ -76,9 +76,14 @@ function drawing(outcome: Outcome, justPassing: boolean) {
       );
     case 'not met':
     case 'not met, ratio has no meaning':
+    case 'not met, in cure period':
       return <path className="mark-fill" d="M5 .5L9.5 5 5 9.5.5 5z" />;
     case 'not met, waived':
+    case 'cured':
       return <path {...line} d="M5 1.2L8.8 5 5 8.8 1.2 5z" />;
+    case 'above our trigger':
+    case 'below our trigger':
+      return <path {...line} d="M1.75 1.75h6.5v6.5h-6.5z" />;
     case 'cannot be tested':
       return <path {...line} d="M1.5 1.5l7 7m0-7l-7 7" />;
     case 'not tested':

@@ -87,6 +87,19 @@ function Shape({ mark: { shape, x, y, radius }, line }: { readonly mark: StripMa
       return <path className="strip-not-met" strokeWidth="0.75" d={diamond} />;
     case 'waived':
       return <path className="strip-waived" strokeWidth={line} d={diamond} />;
+    case 'past our trigger': {
+      const half = radius * 0.75;
+      return (
+        <rect
+          className="strip-waived"
+          strokeWidth={line}
+          x={x - half}
+          y={y - half}
+          width={2 * half}
+          height={2 * half}
+        />
+      );
+    }
     case 'cross': {
       const cross = `M${x - radius} ${y - radius}l${2 * radius} ${2 * radius}m0 ${-2 * radius}l${-2 * radius} ${2 * radius}`;
       return (

@@ -1,7 +1,7 @@
 import type { Chart, ChartDataset, ChartOptions, Plugin, PointStyle } from 'chart.js';
 import { formatDay } from '../../core/calendar/printDay.ts';
 import { fromEpochDay } from '../../core/calendar/plainDate.ts';
-import { isNotMet } from '../../core/covenants/covenantTest.ts';
+import { isNotMet, isPastOurTrigger, isShort } from '../../core/covenants/covenantTest.ts';
 import {
   chartRange,
   dayOf,
@@ -33,7 +33,7 @@ export function limitChartDatasets(figures: LimitChartFigures, colours: SheetCol
       borderColor: colours['ink-2'],
       borderWidth: 1,
       pointStyle: results.map(styleOf),
-      pointRadius: results.map((result) => (isNotMet(result.outcome) ? RING + 1 : RING)),
+      pointRadius: results.map((result) => (isShort(result.outcome) ? RING + 1 : RING)),
       pointHoverRadius: RING + 2,
       pointBorderWidth: 1.5,
       pointBorderColor: results.map((result) => (isFilled(result) ? colours.magenta : colours.ink)),
@@ -81,7 +81,10 @@ function levelLine(segments: readonly LevelSegment[]) {
 const isWaived = (result: ChartResult): boolean => result.outcome === 'not met, waived';
 const isFilled = (result: ChartResult): boolean =>
   result.justPassing || (isNotMet(result.outcome) && !isWaived(result));
-const styleOf = (result: ChartResult): PointStyle => (isNotMet(result.outcome) ? 'rectRot' : 'circle');
+const styleOf = ({ outcome }: ChartResult): PointStyle => {
+  if (isPastOurTrigger(outcome)) return 'rect';
+  return isShort(outcome) ? 'rectRot' : 'circle';
+};
 
 export function limitChartOptions(
   figures: LimitChartFigures,
@@ -171,8 +174,15 @@ export function directLabels(figures: LimitChartFigures, colours: SheetColours):
       ctx.font = '13px "Roboto Flex Variable", sans-serif';
       ctx.fillStyle = colours.ink;
       const segments = levelSegments(figures);
-      segments.forEach((segment) => labelLevel(chart, segment, failing, segment === segments.at(-1)));
       const results = figures.results.map(({ testDate, tested }) => pointAt(testDate, tested));
+      const lines = [
+        results,
+        (figures.second?.values ?? []).map(({ testDate, tested }) => pointAt(testDate, tested)),
+        levelLine(segments),
+      ].map((line) => drawnPoints(chart, line));
+      segments.forEach((segment) =>
+        labelLevel(chart, segment, { side: failing, isLast: segment === segments.at(-1), lines }),
+      );
       ctx.strokeStyle = colours.sheet;
       labelLine(chart, results, 'as reported', passing, 0.75);
       const { second } = figures;
@@ -185,19 +195,74 @@ export function directLabels(figures: LimitChartFigures, colours: SheetColours):
   };
 }
 
+type Line = readonly ChartPoint[];
+
+const drawnPoints = (
+  chart: Chart<'line'>,
+  line: readonly { readonly x: number; readonly y: number | null }[],
+): Line => line.flatMap(({ x, y }) => (y === null ? [] : [pixel(chart, { x, y })]));
+
+/** Shares of the room along a segment at which its name is tried, the start first. */
+const PLACES = [0, 0.25, 0.5, 0.75, 1] as const;
+
 /**
- * On the failing side at the start of its segment. Where that is too short, the last level is named at the right edge on
- * the other side, and an earlier one only in the table.
+ * On the failing side of its segment, at the first place where no line runs through the name; else on the other side.
+ * Where the segment is too short, the last level is named at the right edge on the other side, and an earlier one only
+ * in the table.
  */
-function labelLevel(chart: Chart<'line'>, { start, end, text }: LevelSegment, side: Side, isLast: boolean) {
+function labelLevel(
+  chart: Chart<'line'>,
+  { start, end, text }: LevelSegment,
+  { side, isLast, lines }: { readonly side: Side; readonly isLast: boolean; readonly lines: readonly Line[] },
+) {
   const left = pixel(chart, start);
   const right = pixel(chart, end);
-  const fits = right.x - left.x >= chart.ctx.measureText(text).width + 2 * TEXT_AIR;
-  if (!fits && !isLast) return;
+  const { width } = chart.ctx.measureText(text);
+  const room = right.x - left.x - width - 2 * TEXT_AIR;
   const other: Side = side === 1 ? -1 : 1;
-  chart.ctx.textAlign = fits ? 'left' : 'right';
-  write(chart, text, fits ? left.x + 6 : chart.chartArea.right, left.y, fits ? side : other);
+  if (room < 0) {
+    chart.ctx.textAlign = 'right';
+    if (isLast) write(chart, text, chart.chartArea.right, left.y, other);
+    return;
+  }
+  const places = [side, other].flatMap((onSide) =>
+    PLACES.map((share) => ({ onSide, x: left.x + 6 + share * room })),
+  );
+  const free = places.find(
+    ({ onSide, x }) => !lines.some((line) => crosses(line, boxOf(x, left.y, width, onSide))),
+  );
+  const { onSide, x } = free ?? { onSide: side, x: left.x + 6 };
+  chart.ctx.textAlign = 'left';
+  write(chart, text, x, left.y, onSide);
 }
+
+interface Box {
+  readonly left: number;
+  readonly right: number;
+  readonly top: number;
+  readonly bottom: number;
+}
+
+const TEXT_HEIGHT = 13;
+
+function boxOf(x: number, y: number, width: number, side: Side): Box {
+  const near = y + side * (TEXT_AIR / 2);
+  const far = y + side * (TEXT_AIR + TEXT_HEIGHT);
+  return { left: x, right: x + width, top: Math.min(near, far), bottom: Math.max(near, far) };
+}
+
+const STEPS_ALONG = 24;
+
+/** Whether a line runs through a box; looked at in small steps along each of its parts. */
+const crosses = (line: Line, box: Box): boolean =>
+  line.some((to, place) => {
+    const from = line[place - 1] ?? to;
+    return Array.from({ length: STEPS_ALONG + 1 }, (_, step) => step / STEPS_ALONG).some((share) => {
+      const x = from.x + share * (to.x - from.x);
+      const y = from.y + share * (to.y - from.y);
+      return x >= box.left && x <= box.right && y >= box.top && y <= box.bottom;
+    });
+  });
 
 /** Beside the point that lies so far along the line. */
 function labelLine(

@@ -3,9 +3,10 @@ import { epochDay, plainDate } from '../../core/calendar/plainDate.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
 import { isNotMet, type Outcome } from '../../core/covenants/covenantTest.ts';
 import { decimal } from '../../core/money/decimal.ts';
-import { formatLevel, formatMoney, formatRatio } from '../../core/money/print.ts';
+import type { MeasureUnit } from '../../core/measures/measure.ts';
+import { figureInUnit, levelInUnit } from '../../core/measures/printUnit.ts';
 
-export type ChartUnit = 'times' | 'money';
+export type ChartUnit = MeasureUnit;
 
 export interface ChartResult {
   readonly testDate: string;
@@ -68,11 +69,11 @@ const DAYS_OF_COMING_LEVEL = 100;
 export const dayOf = (date: string): number => epochDay(plainDate(date));
 
 export function figureText(value: string, unit: ChartUnit): string {
-  return unit === 'times' ? formatRatio(decimal(value)) : formatMoney(decimal(value));
+  return figureInUnit(unit, decimal(value));
 }
 
 function levelText(value: string, unit: ChartUnit): string {
-  return unit === 'times' ? formatLevel(decimal(value)) : formatMoney(decimal(value));
+  return levelInUnit(unit, decimal(value));
 }
 
 /** Level segments that fall into the chart, the coming one with its first months. */

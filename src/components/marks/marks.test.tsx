@@ -80,7 +80,7 @@ describe('outcome and headroom', () => {
     const coloured = OUTCOMES.filter((outcome) =>
       renderToStaticMarkup(<OutcomeText outcome={outcome} />).includes('figure-magenta'),
     );
-    expect(coloured).toEqual(['not met', 'not met, ratio has no meaning']);
+    expect(coloured).toEqual(['not met', 'not met, ratio has no meaning', 'not met, in cure period']);
     expect(renderToStaticMarkup(<OutcomeText outcome="met, thin" justPassing />)).toContain('figure-magenta');
     expect(renderToStaticMarkup(<HeadroomText mayFall="0.03" outcome="met, thin" />)).not.toContain(
       'figure-magenta',

@@ -54,7 +54,8 @@ export const STRIP_FRAMES: Readonly<Record<StripSize, StripFrame>> = {
   },
 };
 
-export type StripShape = 'ring' | 'just passing' | 'not met' | 'waived' | 'cross' | 'gap';
+export type StripShape =
+  'ring' | 'just passing' | 'not met' | 'waived' | 'past our trigger' | 'cross' | 'gap';
 
 export interface StripMark {
   readonly test: StripTest;
@@ -100,7 +101,7 @@ export function lastTests(tests: readonly StripTest[]): readonly StripTest[] {
 
 function markOf(test: StripTest, frame: StripFrame, x: number, newest: boolean): StripMark {
   const shape = shapeOf(test);
-  const below = shape === 'not met' || shape === 'waived';
+  const below = shape === 'not met' || shape === 'waived' || shape === 'past our trigger';
   const radius = below
     ? newest
       ? frame.newestDiamond
@@ -134,9 +135,14 @@ function shapeOf({ outcome, justPassing }: StripTest): StripShape {
       return justPassing ? 'just passing' : 'ring';
     case 'not met':
     case 'not met, ratio has no meaning':
+    case 'not met, in cure period':
       return 'not met';
     case 'not met, waived':
+    case 'cured':
       return 'waived';
+    case 'above our trigger':
+    case 'below our trigger':
+      return 'past our trigger';
     case 'cannot be tested':
       return 'cross';
     case 'not tested':

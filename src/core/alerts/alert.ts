@@ -10,6 +10,7 @@ export const ALERT_KINDS = [
   'past our trigger',
   'waiver, cure running out',
   'step-down ahead',
+  'headroom shrinking',
   'reporting quality fell',
   'reporting quality weak',
   'prior figures restated',

@@ -1,6 +1,6 @@
 import { formatDay } from '../calendar/printDay.ts';
 import { isMaximum } from '../covenants/covenant.ts';
-import { isNotMet, type CovenantTest } from '../covenants/covenantTest.ts';
+import { isMet, isNotMet, type CounterfactualKind, type CovenantTest } from '../covenants/covenantTest.ts';
 import { testedInWords, testInWords } from '../covenants/wording.ts';
 import { formatShare } from '../money/print.ts';
 import type { JustPassing } from '../patterns/justPassing.ts';
@@ -12,12 +12,14 @@ import { testEvidence } from './testEvidence.ts';
 
 /**
  * So many of the last tests ended just passing: an observation, k of n, nothing about chance. A note; soon where
- * the latest test is met only with add-backs, or the reporting quality is below the policy's line.
+ * the latest test is met only with add-backs or on accruals, or the reporting quality is below the policy's line.
  *
  * @example justPassingRepeated({ ...nightOf({ ebitda: 12, debt: 47.5, cash: 6 }), patterns: [{ covenantId: 1, inBand: 3, ofLast: 6, run: 1, testDates: ['2026-09-30'] }] }).map(({ severity }) => severity) // => ['note']
  */
 export const justPassingRepeated: AlertRule = (context) =>
   liveTests(context).flatMap(({ covenant, test }) => {
+    // A borrower does not know the desk's own trigger, so it cannot end just inside it.
+    if (covenant.isOurs) return [];
     const pattern = context.patterns.find(({ covenantId }) => covenantId === covenant.id);
     const lastInBand = pattern?.testDates.at(-1);
     if (!pattern || !lastInBand || pattern.inBand < context.policy.repeated.atLeast) return [];
@@ -46,9 +48,12 @@ function nearLineOf(id: number, { nearLine }: AlertContext): AlertFinding['evide
   return [{ label: 'Pattern', value: nearLineSentence(figures) }, ...nearLineFacts(figures)];
 }
 
+const LEANING: readonly CounterfactualKind[] = ['without add-backs', 'without unexplained accruals'];
+
 function isLeaning({ counterfactuals, outcome }: CovenantTest, { quality, policy }: AlertContext): boolean {
-  const needsAddBacks = !isNotMet(outcome) && counterfactuals.some((one) => isNotMet(one.outcome));
-  return needsAddBacks || (quality.headline !== null && quality.headline < policy.repeated.weakBelow);
+  const rests =
+    isMet(outcome) && counterfactuals.some((one) => LEANING.includes(one.kind) && isNotMet(one.outcome));
+  return rests || (quality.headline !== null && quality.headline < policy.repeated.weakBelow);
 }
 
 const ORDINALS = [

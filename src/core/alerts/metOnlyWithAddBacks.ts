@@ -1,10 +1,10 @@
 import { isMet, isNotMet, type Counterfactual, type CovenantTest } from '../covenants/covenantTest.ts';
-import { OPERATOR_WORDS, levelInWords, testedInWords } from '../covenants/wording.ts';
+import { OPERATOR_WORDS, OUR_TRIGGER, levelInWords, testedInWords } from '../covenants/wording.ts';
 import { MEASURES } from '../measures/index.ts';
 import { ZERO } from '../money/decimal.ts';
 import { formatMoney, formatShare } from '../money/print.ts';
 import { amountThatLeaves, subjectAmount } from './neededAmount.ts';
-import { liveTests, type AlertRule } from './rule.ts';
+import { liveTests, severityOn, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
 /**
@@ -22,9 +22,9 @@ export const metOnlyWithAddBacks: AlertRule = (context) =>
       {
         kind: 'met only with add-backs',
         covenantId: covenant.id,
-        severity: 'soon',
+        severity: severityOn(covenant, 'soon'),
         factDate: test.testDate,
-        sentence: sentenceOf(test, without),
+        sentence: `${covenant.isOurs ? `${OUR_TRIGGER}: ` : ''}${sentenceOf(test, without)}`,
         wouldChange: wouldChange(test, without),
         evidence: [
           ...testEvidence(covenant, test),

@@ -3,6 +3,7 @@ import type { BorrowerInputs } from '../borrowerInputs.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { buildCovenant } from '../covenants/covenant.fixture.ts';
 import { testDates } from '../covenants/levels.ts';
+import { withRights } from '../covenants/rights.ts';
 import { testCovenant } from '../covenants/testCovenant.ts';
 import { justPassingOf } from '../patterns/justPassing.ts';
 import { POLICY_VERSION_1 as policy } from '../policy.ts';
@@ -60,10 +61,14 @@ export function buildContext(
 ): AlertContext {
   const books = openBooks(inputs, asOf);
   const tests = inputs.covenants.flatMap((covenant) =>
-    testDates(covenant, asOf).map((date) =>
-      testCovenant(covenant, books[covenant.scope], date, policy, asOf),
+    withRights(
+      covenant,
+      testDates(covenant, asOf).map((date) =>
+        testCovenant(covenant, books[covenant.scope], date, policy, asOf),
+      ),
+      { undertakings: inputs.undertakings, asOf },
     ),
   );
   const patterns = inputs.covenants.map(({ id }) => justPassingOf(tests, id, policy.repeated.ofLast));
-  return { inputs, tests, quality, patterns, nearLine: [], policy, asOf };
+  return { inputs, tests, quality, patterns, nearLine: [], projections: [], policy, asOf };
 }

@@ -4,10 +4,11 @@ import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { latestLiveTest } from '../covenants/latestLiveTest.ts';
 import type { JustPassing } from '../patterns/justPassing.ts';
+import type { Projection } from '../outlook/projection.ts';
 import type { CovenantNearLine } from '../patterns/nearLine.ts';
 import type { Policy } from '../policy.ts';
 import type { ReportingQuality } from '../quality/score.ts';
-import type { AlertFinding } from './alert.ts';
+import type { AlertFinding, Severity } from './alert.ts';
 
 /** What every rule may look at. */
 export interface AlertContext {
@@ -18,6 +19,8 @@ export interface AlertContext {
   readonly patterns: readonly JustPassing[];
   /** As of the last night; empty before the first. */
   readonly nearLine: readonly CovenantNearLine[];
+  /** Each covenant's coming tests, by the changes of last night's peers. */
+  readonly projections: readonly Projection[];
   readonly policy: Policy;
   readonly asOf: PlainDate;
 }
@@ -38,3 +41,14 @@ export const liveTests = ({
     const test = latestLiveTest(tests, covenant.id);
     return test ? [{ covenant, test }] : [];
   });
+
+/**
+ * How serious a finding on a covenant is: one step less where it is the desk's own trigger, which is no promise of the
+ * borrower.
+ *
+ * @example severityOn({ isOurs: true }, 'soon') // => 'note'
+ */
+export function severityOn({ isOurs }: Pick<Covenant, 'isOurs'>, severity: Severity): Severity {
+  if (!isOurs) return severity;
+  return severity === 'urgent' ? 'soon' : 'note';
+}

@@ -1,10 +1,11 @@
 import { addDays, daysBetween } from '../calendar/plainDate.ts';
 import { formatDay } from '../calendar/printDay.ts';
 import { isMet, isNotMet } from '../covenants/covenantTest.ts';
-import { levelInWords, OPERATOR_WORDS, testInWords, testedInWords } from '../covenants/wording.ts';
+import { triggerWords } from '../covenants/rights.ts';
+import { levelInWords, OPERATOR_WORDS, saidOf, testedInWords } from '../covenants/wording.ts';
 import { ZERO } from '../money/decimal.ts';
 import { amountThatLeaves, insteadOf } from './neededAmount.ts';
-import { liveTests, type AlertRule } from './rule.ts';
+import { liveTests, severityOn, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
 /**
@@ -27,9 +28,9 @@ export const stepDownAhead: AlertRule = (context) =>
       {
         kind: 'step-down ahead',
         covenantId: covenant.id,
-        severity: ahead.from <= addDays(context.asOf, soonDays) ? 'soon' : 'note',
+        severity: severityOn(covenant, ahead.from <= addDays(context.asOf, soonDays) ? 'soon' : 'note'),
         factDate: test.testDate,
-        sentence: `${testInWords(test)}. The level is ${level} from ${formatDay(ahead.from)}: ${result} would not be met.`,
+        sentence: `${saidOf(covenant, test)}. The level is ${level} from ${formatDay(ahead.from)}: ${result} ${covenant.isOurs ? `would be ${triggerWords(covenant.operator)}` : 'would not be met'}.`,
         wouldChange: needed
           ? `${insteadOf(test, needed)}.`
           : `A result of ${OPERATOR_WORDS[test.operator]} ${level}.`,

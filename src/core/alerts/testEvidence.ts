@@ -1,7 +1,7 @@
 import { formatDay } from '../calendar/printDay.ts';
 import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
-import { levelInWords, OPERATOR_WORDS, testedInWords } from '../covenants/wording.ts';
+import { covenantInWords, levelInWords, OPERATOR_WORDS, testedInWords } from '../covenants/wording.ts';
 import { formatMoney, formatShare } from '../money/print.ts';
 import type { AlertFinding } from './alert.ts';
 
@@ -14,7 +14,7 @@ export function testEvidence(covenant: Covenant, test: CovenantTest): AlertFindi
   const { measure, tested, level, headroom } = test;
   const { mayFall, moneyLeft, shareOfLevel } = headroom;
   return [
-    { label: 'Covenant', value: `${covenant.name}, clause ${covenant.clause}` },
+    { label: 'Covenant', value: covenantInWords(covenant) },
     { label: 'Test date', value: formatDay(test.testDate) },
     { label: 'Result', value: tested ? testedInWords(measure, tested, level) : 'no meaning' },
     ...(level
@@ -31,6 +31,9 @@ export function testEvidence(covenant: Covenant, test: CovenantTest): AlertFindi
       : []),
     ...(moneyLeft ? [{ label: 'What is left', value: formatMoney(moneyLeft) }] : []),
     ...(shareOfLevel ? [{ label: 'Share of level', value: formatShare(shareOfLevel) }] : []),
+    ...(test.cure?.ratioWith
+      ? [{ label: 'With the money put in', value: testedInWords(measure, test.cure.ratioWith, level) }]
+      : []),
     ...(test.reason ? [{ label: 'Remark', value: test.reason }] : []),
   ];
 }

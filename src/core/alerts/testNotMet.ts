@@ -9,7 +9,7 @@ import { liveTests, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
 /**
- * The latest live test is not met, in any form: urgent. A waiver is said, and does not make it met.
+ * The latest live test is not met, in any form: urgent. A waiver or a cure period is said, and does not make it met.
  *
  * @example testNotMet(nightOf({ ebitda: 12, debt: 51, cash: 6 })).map(({ severity }) => severity) // => ['urgent']
  */
@@ -30,8 +30,12 @@ function sentenceOf(covenant: Covenant, test: CovenantTest): string {
   const waiver = covenant.waivers.find(({ testDate }) => testDate === test.testDate);
   const waived =
     test.outcome === 'not met, waived' && waiver ? ` Waived on ${formatDay(waiver.grantedOn)}.` : '';
+  const inPeriod =
+    test.outcome === 'not met, in cure period' && test.cure?.periodEnds
+      ? ` In cure period until ${formatDay(test.cure.periodEnds)}.`
+      : '';
   const why = test.tested ? '' : ` (${test.reason ?? 'no ratio'})`;
-  return `${testInWords(test)}${why}: not met on our figures.${waived}`;
+  return `${testInWords(test)}${why}: not met on our figures.${waived}${inPeriod}`;
 }
 
 function wouldChange(test: CovenantTest): string {

@@ -1,10 +1,11 @@
+import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
-import { testInWords } from '../covenants/wording.ts';
+import { saidOf } from '../covenants/wording.ts';
 import { MEASURES } from '../measures/index.ts';
 import { formatMoney, formatShare } from '../money/print.ts';
 import type { Policy } from '../policy.ts';
 import { amountThatLeaves, insteadOf } from './neededAmount.ts';
-import { liveTests, type AlertRule } from './rule.ts';
+import { liveTests, severityOn, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
 
 /**
@@ -18,19 +19,20 @@ export const thinHeadroom: AlertRule = (context) =>
     .map(({ covenant, test }) => ({
       kind: 'thin headroom',
       covenantId: covenant.id,
-      severity: 'soon',
+      severity: severityOn(covenant, 'soon'),
       factDate: test.testDate,
-      sentence: sentenceOf(test, context.policy),
+      sentence: sentenceOf(covenant, test, context.policy),
       wouldChange: wouldChange(test, context.policy),
       evidence: testEvidence(covenant, test),
     }));
 
-function sentenceOf(test: CovenantTest, { thinBelow }: Policy): string {
+function sentenceOf(covenant: Covenant, test: CovenantTest, { thinBelow }: Policy): string {
   const { mayFall, moneyLeft } = test.headroom;
-  if (mayFall?.lt(0)) return `${testInWords(test)}: met only as the agreement rounds.`;
+  if (mayFall?.lt(0)) return `${saidOf(covenant, test)}: met only as the agreement rounds.`;
   const share = mayFall ? formatShare(mayFall, { beside: thinBelow }) : 'nothing';
   const money = moneyLeft ? ` (${formatMoney(moneyLeft)})` : '';
-  return `${testInWords(test)}. ${MEASURES[test.measure].words.subject} may fall ${share}${money}.`;
+  const { subject, room } = MEASURES[test.measure].words;
+  return `${saidOf(covenant, test)}. ${subject} ${room?.may ?? 'may fall'} ${share}${money}.`;
 }
 
 function wouldChange(test: CovenantTest, { thinBelow }: Policy): string {

@@ -1,15 +1,8 @@
 import { ZERO, type Decimal } from '../money/decimal.ts';
 import { isMet, isNotMet, type Counterfactual } from './covenantTest.ts';
+import { withEarnings } from './equityCure.ts';
 import { amountAtLevel, type Sides } from './headroom.ts';
 import { verdictOn, type Shaped, type Terms, type Verdict } from './holdAgainstLevel.ts';
-
-/** The sides with some earnings taken out of the side that earnings stand on. */
-function withoutEarnings(measure: Shaped, sides: Sides, takenOut: Decimal): Sides {
-  if (measure.earningsSide === 'numerator') return { ...sides, numerator: sides.numerator.minus(takenOut) };
-  if (measure.earningsSide === 'denominator' && sides.denominator)
-    return { ...sides, denominator: sides.denominator.minus(takenOut) };
-  return sides;
-}
 
 /**
  * A haircut for accruals that the peers do not show: never less than nought, a negative residual is not added back.
@@ -29,7 +22,7 @@ export const verdictWithoutEarnings = (
   sides: Sides,
   terms: Terms,
   takenOut: Decimal,
-): Verdict => verdictOn(measure, withoutEarnings(measure, sides, takenOut), terms);
+): Verdict => verdictOn(measure, withEarnings(measure, sides, takenOut.negated()), terms);
 
 /**
  * Whether a test that is met rests on what was taken out: it would not have been met without.
@@ -73,7 +66,7 @@ export function withoutAddBacks(
   addBacks: Decimal,
 ): readonly Counterfactual[] {
   if (addBacks.isZero() || measure.earningsSide === null) return [];
-  const without = withoutEarnings(measure, sides, addBacks);
+  const without = withEarnings(measure, sides, addBacks.negated());
   const verdict = verdictOn(measure, without, terms);
   const earningsBefore = measure.earningsSide === 'numerator' ? without.numerator : without.denominator;
   const earningsNeeded = amountAtLevel(measure.shape, sides, terms.level);

@@ -15,6 +15,10 @@ export const OUTCOMES = [
   'not met',
   'not met, ratio has no meaning',
   'not met, waived',
+  'not met, in cure period',
+  'cured',
+  'above our trigger',
+  'below our trigger',
   'cannot be tested',
   'not tested',
   'awaiting figures',
@@ -35,6 +39,23 @@ export const isMet = (outcome: Outcome): boolean => outcome.startsWith('met');
  */
 export const isNotMet = (outcome: Outcome): boolean => outcome.startsWith('not met');
 
+/**
+ * Whether the result stands on the wrong side of the desk's own trigger, which is no covenant and so never not met.
+ *
+ * @example isPastOurTrigger('above our trigger') // => true
+ */
+export const isPastOurTrigger = (outcome: Outcome): boolean =>
+  outcome === 'above our trigger' || outcome === 'below our trigger';
+
+/**
+ * Whether the borrower's own figures miss the level, whatever stands over it: a waiver, money put in, our own
+ * trigger.
+ *
+ * @example isShort('cured') // => true
+ */
+export const isShort = (outcome: Outcome): boolean =>
+  isNotMet(outcome) || outcome === 'cured' || isPastOurTrigger(outcome);
+
 /** Every form of headroom; null where it has no meaning. Shares are fractions (0.05 is 5 %). */
 export interface Headroom {
   /** Distance to the level in the measure's own unit; negative on the failing side. */
@@ -51,14 +72,76 @@ export interface Headroom {
   readonly otherSideShare: Decimal | null;
 }
 
-/** A test recomputed under another reading of earnings. */
+export const COUNTERFACTUAL_KINDS = [
+  'without add-backs',
+  'without unexplained accruals',
+  'without either',
+  'on a cash basis',
+] as const;
+export type CounterfactualKind = (typeof COUNTERFACTUAL_KINDS)[number];
+
+/** A test recomputed under another reading of earnings: methods.md B7 (a) to (d), in the order of the kinds. */
 export interface Counterfactual {
-  readonly kind: 'without add-backs';
+  readonly kind: CounterfactualKind;
   readonly earningsTakenOut: Decimal;
   readonly ratio: Decimal | null;
   readonly outcome: Outcome;
   /** Share of the add-backs that the test needs to be met; null where it is met without them or not met with them. */
   readonly breakEvenShare: Decimal | null;
+}
+
+/** Drawings against commitments on the test date, where the covenant is tested only above a share of them. */
+export interface SpringingStanding {
+  readonly drawn: Decimal;
+  readonly commitment: Decimal;
+  /** A fraction; null where there is no commitment. */
+  readonly utilisation: Decimal | null;
+  readonly trigger: Decimal;
+}
+
+/** Money put in, or that may be put in, for a test that the borrower's own figures do not meet: methods.md A6. */
+export interface CureStanding {
+  readonly curedBy: 'money' | 'money of an earlier quarter' | 'the next test' | null;
+  /** How the agreement counts the money; null where it gives no right of cure. */
+  readonly method: 'ebitda' | 'debt' | 'both' | null;
+  /** The last day on which money may come in; null where it cannot be told. */
+  readonly periodEnds: PlainDate | null;
+  /** What it takes to land on the level; null for a way that cannot reach it. */
+  readonly needed: {
+    readonly ebitda: Decimal | null;
+    readonly debt: Decimal | null;
+    readonly both: Decimal | null;
+  };
+  readonly received: Decimal | null;
+  readonly receivedOn: PlainDate | null;
+  /** The part of it that counts: never more than is needed. */
+  readonly counted: Decimal | null;
+  /** EBITDA of earlier cures that still counts on this date. */
+  readonly carried: Decimal;
+  /** The last test date on which money counted as EBITDA counts. */
+  readonly countsUntil: PlainDate | null;
+  /** The ratio with the money; for covenant purposes only. */
+  readonly ratioWith: Decimal | null;
+  /** This one included, where the money cured. Limits are null where the agreement gives no right. */
+  readonly usedInFour: number;
+  readonly mostInFour: number | null;
+  readonly usedInLife: number;
+  readonly mostInLife: number | null;
+}
+
+export interface WaiverStanding {
+  readonly grantedOn: PlainDate;
+  readonly until: PlainDate | null;
+  readonly conditions: string;
+}
+
+/** The same test by other accounting rules: shown beside, decides nothing. */
+export interface OtherAccounting {
+  readonly accounting: 'current' | 'frozen';
+  readonly numerator: Decimal;
+  readonly denominator: Decimal | null;
+  readonly tested: Decimal | null;
+  readonly outcome: Outcome;
 }
 
 export interface CovenantTest {
@@ -74,7 +157,7 @@ export interface CovenantTest {
   readonly numerator: Decimal | null;
   readonly denominator: Decimal | null;
   readonly outcome: Outcome;
-  /** The outcome without the waiver; equals `outcome` where there is none. */
+  /** What the borrower's own figures come to, without waiver, cure money or trigger words. */
   readonly underlyingOutcome: Outcome;
   readonly reason: string | null;
   readonly headroom: Headroom;
@@ -84,9 +167,24 @@ export interface CovenantTest {
     readonly level: Decimal;
     readonly outcome: Outcome;
     readonly mayFall: Decimal | null;
+    readonly shareOfLevel: Decimal | null;
+    readonly moneyLeft: Decimal | null;
+    readonly otherSideMayRise: Decimal | null;
   }[];
   readonly justPassing: boolean;
+  /** The money that earnings may fall over the standard deviation of their last eight quarterly changes. */
+  readonly roomInDeviations: Decimal | null;
+  readonly springing: SpringingStanding | null;
+  /** The waiver that stands on the day. */
+  readonly waiver: WaiverStanding | null;
+  readonly cure: CureStanding | null;
+  /** The first test under a level agreed after signing. */
+  readonly isFirstUnderReset: boolean;
   readonly bridge: readonly BridgeLine[];
+  /** Adjusted EBITDA that one side is or holds, as the covenant defines it; null in a test without earnings. */
+  readonly earnings: Decimal | null;
+  /** By today's accounting, leases in debt, where the covenant goes by the rules at signing; else null. */
+  readonly otherAccounting: OtherAccounting | null;
   readonly counterfactuals: readonly Counterfactual[];
   readonly inputs: readonly InputUsed[];
   readonly missing: readonly MissingLine[];

@@ -1,12 +1,12 @@
-import { isMet, isNotMet, type CovenantTest } from './covenantTest.ts';
+import { isMet, isShort, type CovenantTest } from './covenantTest.ts';
 
 /**
- * Whether a test has a result: met or not met, in whichever form.
+ * Whether a test has a result: met or not met, in whichever form, cured or held against our own trigger.
  *
  * @example hasResult({ outcome: 'awaiting figures' }) // => false
  */
 export const hasResult = ({ outcome }: Pick<CovenantTest, 'outcome'>): boolean =>
-  isMet(outcome) || isNotMet(outcome);
+  isMet(outcome) || isShort(outcome);
 
 /**
  * The latest test of one covenant that stands: the newest one whose figures are there. Null where there is none or

@@ -1,5 +1,6 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { Decimal } from '../money/decimal.ts';
+import type { Covenant } from './covenant.ts';
 import type { CovenantTest } from './covenantTest.ts';
 import { latestLiveTest } from './latestLiveTest.ts';
 
@@ -33,21 +34,41 @@ export const smallestHeadroom = (
   );
 
 /**
- * The least against every level agreed for later, kept apart from today's.
+ * The least at each step that is agreed for later, in order of days: today's results against the levels in force from
+ * that day on. Empty where no live test has a later level.
  *
- * @example smallestHeadroomAhead([test], [1])?.from // => '2027-01-01'
+ * @example smallestHeadroomsAhead([test], [1]).map(({ from }) => from) // => ['2027-01-01']
  */
-export const smallestHeadroomAhead = (
+export function smallestHeadroomsAhead(
   tests: readonly CovenantTest[],
   covenantIds: readonly number[],
-): SmallestHeadroomAhead | null =>
-  smallest(
-    covenantIds.flatMap((covenantId) =>
-      (latestLiveTest(tests, covenantId)?.againstLaterLevels ?? []).flatMap(({ from, mayFall }) =>
-        mayFall ? [{ covenantId, from, mayFall }] : [],
-      ),
-    ),
-  );
+): readonly SmallestHeadroomAhead[] {
+  const live = covenantIds.flatMap((covenantId) => latestLiveTest(tests, covenantId) ?? []);
+  const steps = new Set(live.flatMap(({ againstLaterLevels }) => againstLaterLevels.map(({ from }) => from)));
+  return [...steps].sort().flatMap((from) => {
+    const least = smallest(
+      live.flatMap((test) => {
+        const mayFall = mayFallFrom(test, from);
+        return mayFall ? [{ covenantId: test.covenantId, from, mayFall }] : [];
+      }),
+    );
+    return least ?? [];
+  });
+}
+
+/** Against the level in force on that day, which is today's where no step comes before it. */
+const mayFallFrom = (test: CovenantTest, day: PlainDate): Decimal | null =>
+  (test.againstLaterLevels.findLast(({ from }) => from <= day) ?? test.headroom).mayFall;
+
+/**
+ * The covenants whose headroom is the borrower's: those of agreements, or, where it has none, the desk's own triggers.
+ *
+ * @example headroomCovenants([covenant, { ...covenant, id: 2, isOurs: true }]) // => [1]
+ */
+export function headroomCovenants(covenants: readonly Pick<Covenant, 'id' | 'isOurs'>[]): readonly number[] {
+  const agreed = covenants.filter(({ isOurs }) => !isOurs);
+  return (agreed.length > 0 ? agreed : covenants).map(({ id }) => id);
+}
 
 const smallest = <Headroom extends SmallestHeadroom>(all: readonly Headroom[]): Headroom | null =>
   all.reduce<Headroom | null>((least, one) => (least && least.mayFall.lte(one.mayFall) ? least : one), null);

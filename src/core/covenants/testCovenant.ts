@@ -1,6 +1,9 @@
 /** One covenant tested on one day, as the agreement defines it, on the figures known by another day. */
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { formatDay } from '../calendar/printDay.ts';
+import type { CurrencyRate } from '../measures/definition.ts';
 import { MEASURES } from '../measures/index.ts';
+import type { Measure } from '../measures/measured.ts';
 import type { Policy } from '../policy.ts';
 import { daysOfFlow, DAYS_OF_LONGEST_YEAR, lengthInWords } from '../statements/periodLength.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
@@ -8,14 +11,16 @@ import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
 import { isNotMet, type CovenantTest, type Outcome } from './covenantTest.ts';
 import { figuresOf, type Figures } from './figures.ts';
-import { fallOf, type Sides } from './headroom.ts';
-import { holdAgainstLevel, type Held, type Terms } from './holdAgainstLevel.ts';
+import { fallOf, NO_HEADROOM, type Sides } from './headroom.ts';
+import { holdAgainstLevel, verdictOn, type Held, type Terms } from './holdAgainstLevel.ts';
 import { hasResult } from './latestLiveTest.ts';
 import { laterLevels, levelInForce } from './levels.ts';
+import { springingOn, type SpringingOn } from './springing.ts';
 import { withoutResult } from './withoutResult.ts';
 
 /**
- * Tests a covenant on a test date out of the book of its scope; `asOf` says which waivers stand.
+ * Tests a covenant on a test date out of the book of its scope; `asOf` says which waivers stand, `rates` turn the
+ * figures into the covenant's currency where it is another one.
  *
  * Only met is met: figures that have not come are awaited, a line or an older period that is not there means that
  * it cannot be tested, a holiday or a day without a level is not tested though the ratio is shown, and a waived
@@ -29,11 +34,13 @@ export function testCovenant(
   testDate: PlainDate,
   policy: Policy,
   asOf: PlainDate,
+  rates: readonly CurrencyRate[] = [],
 ): CovenantTest {
-  const figures = figuresOf(covenant, book, testDate);
+  const figures = figuresOf(covenant, book, testDate, rates);
   const inForce = levelInForce(covenant.levels, testDate);
-  const level = inForce.kind === 'level' ? inForce.level : null;
-  const nothing = withoutResult(covenant, testDate, inForce, figures);
+  const { level } = figures;
+  const sprung = covenant.springing && springingOn(covenant.springing, book, testDate);
+  const nothing = notSprung(sprung, withoutResult(covenant, testDate, inForce, figures), figures);
   const { measure, operator, roundingPlaces } = covenant;
   const common = {
     covenantId: covenant.id,
@@ -45,8 +52,11 @@ export function testCovenant(
     numerator: figures.sides?.numerator ?? null,
     denominator: figures.sides?.denominator ?? null,
     bridge: figures.bridge,
-    inputs: figures.inputs,
+    inputs: [...figures.inputs, ...figures.levelInputs],
+    earnings: figures.sides?.earnings ?? null,
     missing: figures.missing,
+    ...STANDING_LATER,
+    springing: sprung?.standing ?? null,
   };
   if (nothing) return { ...common, ...nothingSaid(nothing, covenant) };
   if (!figures.sides || !level)
@@ -54,6 +64,30 @@ export function testCovenant(
   const terms = { operator, level, roundingPlaces };
   return { ...common, ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf }) };
 }
+
+/** What only the tests beside it, the undertakings and the other figures of the borrower can tell: withRights, assess. */
+const STANDING_LATER = { roomInDeviations: null, cure: null, isFirstUnderReset: false } as const;
+
+/**
+ * Below its share of drawings a covenant is not tested, whatever its figures came to; where the drawings are not
+ * known it cannot be tested. Figures that have not come, a holiday and a day without a level come first.
+ */
+function notSprung(sprung: SpringingOn | null, nothing: Held | null, { sides }: Figures): Held | null {
+  if (!sprung || sprung.outcome === 'tested') return nothing;
+  if (nothing && nothing.outcome !== 'cannot be tested') return nothing;
+  return {
+    tested: sides && ratioShown(sides),
+    outcome: sprung.outcome,
+    reason: sprung.reason,
+    roundingDecides: false,
+    headroom: { ...NO_HEADROOM, fallOf: 'earnings' },
+  };
+}
+
+const ratioShown = ({ numerator, denominator }: Sides): Held['tested'] => {
+  if (!denominator) return numerator;
+  return denominator.gt(0) ? numerator.div(denominator) : null;
+};
 
 type Said = Pick<
   CovenantTest,
@@ -65,6 +99,8 @@ type Said = Pick<
   | 'againstLaterLevels'
   | 'justPassing'
   | 'counterfactuals'
+  | 'otherAccounting'
+  | 'waiver'
 >;
 
 const nothingSaid = ({ tested, outcome, reason, headroom }: Held, { measure }: Covenant): Said => ({
@@ -76,6 +112,8 @@ const nothingSaid = ({ tested, outcome, reason, headroom }: Held, { measure }: C
   againstLaterLevels: [],
   justPassing: false,
   counterfactuals: [],
+  otherAccounting: null,
+  waiver: null,
 });
 
 function resultSaid(
@@ -88,25 +126,48 @@ function resultSaid(
   const measure = MEASURES[covenant.measure];
   const held = holdAgainstLevel(measure, sides, terms);
   const underlyingOutcome = thinOrNot(held, on.policy);
-  const isWaived = isNotMet(underlyingOutcome) && waiverOf(covenant.waivers, on.testDate, on.asOf);
+  const granted = isNotMet(underlyingOutcome)
+    ? covenant.waivers.filter(({ testDate, grantedOn }) => testDate === on.testDate && grantedOn <= on.asOf)
+    : [];
+  const waiver = granted.find(({ until }) => until === null || on.asOf <= until) ?? null;
   return {
     tested: held.tested,
-    outcome: isWaived ? 'not met, waived' : underlyingOutcome,
+    outcome: waiver ? 'not met, waived' : underlyingOutcome,
     underlyingOutcome,
-    reason: remarks(covenant, held, figures),
+    waiver: waiver && { grantedOn: waiver.grantedOn, until: waiver.until, conditions: waiver.conditions },
+    reason: remarks(covenant, held, figures, waiver ? null : ranOut(granted)),
     headroom: held.headroom,
     againstLaterLevels: hasResult(held) ? againstLater(covenant, on.testDate, sides) : [],
     justPassing: isJustPassing(held, on.policy),
+    otherAccounting: byTodaysRules(measure, figures, terms),
     counterfactuals: hasResult(held) ? withoutAddBacks(measure, sides, terms, figures.addBacksTaken) : [],
   };
 }
 
+/** The same test by the accounting rules of today, where the covenant goes by those at signing: both are shown. */
+function byTodaysRules(
+  measure: Measure,
+  { otherSides }: Figures,
+  terms: Terms,
+): CovenantTest['otherAccounting'] {
+  if (!otherSides) return null;
+  const { tested, outcome } = verdictOn(measure, otherSides, terms);
+  const { numerator, denominator } = otherSides;
+  return { accounting: 'current', numerator, denominator, tested, outcome };
+}
+
 /** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
-function remarks({ roundingPlaces }: Covenant, held: Held, figures: Figures): string | null {
+function remarks(
+  { roundingPlaces }: Covenant,
+  held: Held,
+  figures: Figures,
+  waiverGone: string | null,
+): string | null {
   const said = [
     held.reason,
+    waiverGone,
     held.roundingDecides ? `at the ${roundingPlaces} decimal places that the agreement rounds to` : null,
-    ...(hasResult(held) ? restsOnWhat(figures) : []),
+    ...(hasResult(held) ? [...figures.remarks, ...restsOnWhat(figures)] : []),
   ].filter((remark) => remark !== null);
   return said.length > 0 ? said.join('; ') : null;
 }
@@ -136,14 +197,11 @@ function thinOrNot({ outcome, headroom: { mayFall } }: Held, policy: Policy): Ou
 const isJustPassing = ({ outcome, headroom: { shareOfLevel } }: Held, policy: Policy): boolean =>
   outcome === 'met' && shareOfLevel !== null && shareOfLevel.lt(policy.justPassingBand);
 
-/** One test date each; one that was granted later, or has run out, is not there. */
-const waiverOf = (waivers: readonly Waiver[], testDate: PlainDate, asOf: PlainDate): Waiver | undefined =>
-  waivers.find(
-    (waiver) =>
-      waiver.testDate === testDate &&
-      waiver.grantedOn <= asOf &&
-      (waiver.until === null || asOf <= waiver.until),
-  );
+/** A waiver that has run out says so by itself: the failure stands alone again. */
+function ranOut(granted: readonly Waiver[]): string | null {
+  const last = granted.at(-1);
+  return last?.until ? `waiver of ${formatDay(last.grantedOn)} ran out on ${formatDay(last.until)}` : null;
+}
 
 function againstLater(
   covenant: Covenant,
@@ -154,6 +212,7 @@ function againstLater(
     if (level === null) return [];
     const { operator, roundingPlaces } = covenant;
     const held = holdAgainstLevel(MEASURES[covenant.measure], sides, { operator, level, roundingPlaces });
-    return [{ from, level, outcome: held.outcome, mayFall: held.headroom.mayFall }];
+    const { mayFall, shareOfLevel, moneyLeft, otherSideMayRise } = held.headroom;
+    return [{ from, level, outcome: held.outcome, mayFall, shareOfLevel, moneyLeft, otherSideMayRise }];
   });
 }

@@ -1,9 +1,9 @@
 /** A test in words, the same on screens, in mail and in sheets. */
 import { MEASURES } from '../measures/index.ts';
 import type { MeasureCode } from '../measures/measure.ts';
+import { figureInUnit, levelInUnit } from '../measures/printUnit.ts';
 import type { Decimal } from '../money/decimal.ts';
-import { formatLevel, formatMoney, formatMoneyLevel, formatRatio } from '../money/print.ts';
-import type { Operator } from './covenant.ts';
+import type { Covenant, Operator } from './covenant.ts';
 import type { CovenantTest } from './covenantTest.ts';
 
 export const OPERATOR_WORDS: Readonly<Record<Operator, string>> = {
@@ -19,9 +19,7 @@ export const OPERATOR_WORDS: Readonly<Record<Operator, string>> = {
  * @example testedInWords('net-leverage', decimal('3.4512'), decimal('3.5')) // => '3.45x'
  */
 export const testedInWords = (measure: MeasureCode, tested: Decimal, level: Decimal | null): string =>
-  MEASURES[measure].unit === 'times'
-    ? formatRatio(tested, { beside: level })
-    : formatMoney(tested, { beside: level });
+  figureInUnit(MEASURES[measure].unit, tested, { beside: level });
 
 /**
  * A level in its measure's unit, with every digit that a ratio's level has.
@@ -29,7 +27,7 @@ export const testedInWords = (measure: MeasureCode, tested: Decimal, level: Deci
  * @example levelInWords('minimum-liquidity', decimal(5_250_000)) // => '5.25m'
  */
 export const levelInWords = (measure: MeasureCode, level: Decimal): string =>
-  MEASURES[measure].unit === 'times' ? formatLevel(level) : formatMoneyLevel(level);
+  levelInUnit(MEASURES[measure].unit, level);
 
 /**
  * A test with its level: 'Net leverage 3.45x, at most 3.50x'.
@@ -46,3 +44,29 @@ export function testInWords({
   const result = tested ? `${label} ${testedInWords(measure, tested, level)}` : `${label} has no meaning`;
   return level ? `${result}, ${OPERATOR_WORDS[operator]} ${levelInWords(measure, level)}` : result;
 }
+
+/** The mark of the desk's own trigger, wherever a test is shown. */
+export const OURS = 'ours, not in the agreement';
+export const OUR_TRIGGER = 'Our trigger, not in the agreement';
+
+/**
+ * A test as a sentence about a covenant begins; the desk's own trigger says that it is ours.
+ *
+ * @example saidOf({ isOurs: true }, test) // => 'Our trigger, not in the agreement: Net leverage 3.00x, at most 3.50x'
+ */
+export const saidOf = (
+  { isOurs }: Pick<Covenant, 'isOurs'>,
+  test: Pick<CovenantTest, 'measure' | 'tested' | 'level' | 'operator'>,
+): string => (isOurs ? `${OUR_TRIGGER}: ${testInWords(test)}` : testInWords(test));
+
+/**
+ * A covenant by name and clause; the desk's own trigger has no clause.
+ *
+ * @example covenantInWords(covenant) // => 'Net leverage, clause 20.2(a)'
+ */
+export const covenantInWords = ({
+  name,
+  clause,
+  isOurs,
+}: Pick<Covenant, 'name' | 'clause' | 'isOurs'>): string =>
+  isOurs ? `${name}, ${OURS}` : `${name}, clause ${clause}`;

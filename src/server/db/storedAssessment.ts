@@ -2,7 +2,9 @@
 import { z } from 'zod';
 import { ALERT_KINDS, SEVERITIES } from '../../core/alerts/alert.ts';
 import type { Assessment } from '../../core/assess.ts';
+import { finiteJson } from './finiteJson.ts';
 import { covenantTest } from './stored/covenantTest.ts';
+import { projections, sensitivity } from './stored/outlook.ts';
 import { amount, day } from './stored/parts.ts';
 import { nearLine } from './stored/patterns.ts';
 import { quality } from './stored/quality.ts';
@@ -26,6 +28,8 @@ const assessment = z.object({
     }),
   ),
   nearLine,
+  projections,
+  sensitivity,
   findings: z.array(
     z.object({
       kind: z.enum(ALERT_KINDS),
@@ -39,16 +43,8 @@ const assessment = z.object({
   ),
 });
 
-/**
- * Text to store. A decimal prints itself as text; a number that is no number would be stored as null and lost,
- * so it is refused here.
- */
-export const storedAssessment = (value: Assessment): string =>
-  JSON.stringify(value, (key, member: unknown) => {
-    if (typeof member === 'number' && !Number.isFinite(member))
-      throw new RangeError(`the assessment's ${key} is no number: ${member}`);
-    return member;
-  });
+/** Text to store; refused where a number in it is none. */
+export const storedAssessment = (value: Assessment): string => finiteJson('the assessment', value);
 
 /** Throws where the stored text is no assessment: it was written by storedAssessment, or somebody changed it. */
 export const readAssessment = (content: string): Assessment => assessment.parse(JSON.parse(content));

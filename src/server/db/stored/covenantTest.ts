@@ -1,7 +1,45 @@
 import { z } from 'zod';
 import { OPERATORS } from '../../../core/covenants/covenant.ts';
+import { COUNTERFACTUAL_KINDS } from '../../../core/covenants/covenantTest.ts';
+import { BRIDGE_KINDS } from '../../../core/measures/bridge.ts';
 import { MEASURE_CODES } from '../../../core/measures/measure.ts';
 import { amount, amountOrNull, day, inputUsed, line, outcome } from './parts.ts';
+
+const cureMethod = z.enum(['ebitda', 'debt', 'both']);
+
+const springing = z.object({
+  drawn: amount,
+  commitment: amount,
+  utilisation: amountOrNull,
+  trigger: amount,
+});
+
+const waiver = z.object({ grantedOn: day, until: day.nullable(), conditions: z.string() });
+
+const cure = z.object({
+  curedBy: z.enum(['money', 'money of an earlier quarter', 'the next test']).nullable(),
+  method: cureMethod.nullable(),
+  periodEnds: day.nullable(),
+  needed: z.object({ ebitda: amountOrNull, debt: amountOrNull, both: amountOrNull }),
+  received: amountOrNull,
+  receivedOn: day.nullable(),
+  counted: amountOrNull,
+  carried: amount,
+  countsUntil: day.nullable(),
+  ratioWith: amountOrNull,
+  usedInFour: z.number(),
+  mostInFour: z.number().nullable(),
+  usedInLife: z.number(),
+  mostInLife: z.number().nullable(),
+});
+
+const otherAccounting = z.object({
+  accounting: z.enum(['current', 'frozen']),
+  numerator: amount,
+  denominator: amountOrNull,
+  tested: amountOrNull,
+  outcome,
+});
 
 export const covenantTest = z.object({
   covenantId: z.number(),
@@ -25,19 +63,37 @@ export const covenantTest = z.object({
     otherSideMayRise: amountOrNull,
     otherSideShare: amountOrNull,
   }),
-  againstLaterLevels: z.array(z.object({ from: day, level: amount, outcome, mayFall: amountOrNull })),
+  againstLaterLevels: z.array(
+    z.object({
+      from: day,
+      level: amount,
+      outcome,
+      mayFall: amountOrNull,
+      shareOfLevel: amountOrNull.default(null),
+      moneyLeft: amountOrNull.default(null),
+      otherSideMayRise: amountOrNull.default(null),
+    }),
+  ),
   justPassing: z.boolean(),
+  roomInDeviations: amountOrNull.default(null),
+  springing: springing.nullable().default(null),
+  waiver: waiver.nullable().default(null),
+  cure: cure.nullable().default(null),
+  isFirstUnderReset: z.boolean().default(false),
   bridge: z.array(
     z.object({
       label: z.string(),
       amount,
-      kind: z.enum(['figure', 'subtotal', 'add-back', 'disallowed']),
+      kind: z.enum(BRIDGE_KINDS),
       inputs: z.array(inputUsed),
+      note: z.string().optional(),
     }),
   ),
+  earnings: amountOrNull.default(null),
+  otherAccounting: otherAccounting.nullable().default(null),
   counterfactuals: z.array(
     z.object({
-      kind: z.literal('without add-backs'),
+      kind: z.enum(COUNTERFACTUAL_KINDS),
       earningsTakenOut: amount,
       ratio: amountOrNull,
       outcome,
