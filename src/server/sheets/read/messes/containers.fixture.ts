@@ -1,5 +1,5 @@
 /** Workbooks with parts that no workbook library writes. */
-import ExcelJS from 'exceljs';
+import type ExcelJS from 'exceljs';
 import { gridWorkbook, type TypedSheets } from '../../../../../tests/support/gridWorkbook.ts';
 import { rawArchive, type RawPart } from '../../../../../tests/support/rawArchive.ts';
 import { partsOfArchive } from '../../../../../tests/support/archiveParts.ts';

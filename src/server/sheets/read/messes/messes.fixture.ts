@@ -32,12 +32,16 @@ export const readSheets = async (
 export const readText = (text: string, context: Partial<ReadingContext> = {}): Promise<Reading> =>
   readBytesAs(Buffer.from(text), 'sent.csv', context);
 
+const written = (value: Typed): string => {
+  if (value === null) return '';
+  if (value instanceof Date) return value.toISOString().slice(0, 10);
+  if (typeof value !== 'object') return String(value);
+  return 'error' in value ? value.error : String(value.result ?? '');
+};
+
 /** The rows as a text file with semicolons. */
 export const asText = (rows: readonly (readonly Typed[])[]): string =>
-  rows
-    .map((row) => row.map((value) => (value instanceof Date ? value.toISOString().slice(0, 10) : value)))
-    .map((row) => row.map((value) => String(value ?? '')).join(';'))
-    .join('\r\n');
+  rows.map((row) => row.map(written).join(';')).join('\r\n');
 
 /** The same rows as a workbook of one sheet and as a text file: both are read alike. */
 export async function bothWays(
