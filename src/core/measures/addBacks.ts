@@ -51,7 +51,9 @@ export function allowAddBacks({
 function addBackLimit(base: Decimal, { cap, basis }: AddBackTerms): Decimal | null {
   if (cap === null || (basis === 'after' && cap.gte(1))) return null;
   if (base.lte(0)) return ZERO;
-  return base.times(basis === 'before' ? cap : cap.div(cap.negated().plus(1)));
+  const share = base.times(cap);
+  // Divided last: a third that was rounded first would put 4 of 12 a trace below its limit.
+  return basis === 'before' ? share : share.div(cap.negated().plus(1));
 }
 
 /**
