@@ -1,5 +1,6 @@
 /** The whole book on one night: the peers' standing, the patterns, and how ratios changed. Plain JSON, stored. */
 import type { BookMember } from './bookMember.ts';
+import { projectionRecord, type ProjectionRecord } from './outlook/backTest.ts';
 import type { RatioSeries } from './outlook/ratioSeries.ts';
 import { patternStanding, type PatternStanding } from './patterns/patternStanding.ts';
 import { buildCrossSection, type CrossSection } from './quality/crossSection.ts';
@@ -8,21 +9,33 @@ export interface BookCrossSection extends CrossSection {
   /** Null before the first night. */
   readonly patterns: PatternStanding | null;
   readonly ratios: readonly RatioSeries[];
+  /** What was said of past tests, against what happened; null before the first night. */
+  readonly projectionRecord: ProjectionRecord | null;
 }
 
 /** Before the first night there are no peers: what rests on them says so. */
-export const NO_BOOK: BookCrossSection = { version: 0, quarters: [], patterns: null, ratios: [] };
+export const NO_BOOK: BookCrossSection = {
+  version: 0,
+  quarters: [],
+  patterns: null,
+  ratios: [],
+  projectionRecord: null,
+};
 
 /**
  * What every borrower is held against, out of what each brought.
  *
  * @example bookCrossSection([], 1).version // => 1
  */
-export const bookCrossSection = (members: readonly BookMember[], version: number): BookCrossSection => ({
-  ...buildCrossSection(
-    members.flatMap(({ peers }) => peers),
-    version,
-  ),
-  patterns: patternStanding(members.flatMap(({ headrooms }) => headrooms)),
-  ratios: members.flatMap(({ ratios }) => ratios),
-});
+export function bookCrossSection(members: readonly BookMember[], version: number): BookCrossSection {
+  const ratios = members.flatMap((member) => member.ratios);
+  return {
+    ...buildCrossSection(
+      members.flatMap(({ peers }) => peers),
+      version,
+    ),
+    patterns: patternStanding(members.flatMap(({ headrooms }) => headrooms)),
+    ratios,
+    projectionRecord: projectionRecord(ratios),
+  };
+}

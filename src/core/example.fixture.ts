@@ -5,6 +5,7 @@
 import { buildContext, buildInputs, buildQuality, buildQuarterScore } from './alerts/rule.fixture.ts';
 import type { AlertContext } from './alerts/rule.ts';
 import { assess } from './assess.ts';
+import { NO_BOOK } from './bookCrossSection.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import { buildAddBack, buildCovenant, buildLevel, buildYear } from './covenants/covenant.fixture.ts';
 import type { Covenant } from './covenants/covenant.ts';
@@ -96,7 +97,7 @@ export const nightOf = (
 const borrowers = buildBook(12, 'metal goods', 1);
 /** Twelve borrowers of one sector at their last quarter ends. */
 export const peers = borrowers.flatMap((borrower) => peerInputsOfQuarters(borrower, asOf));
-export const crossSection = { ...buildCrossSection(peers, 1), patterns: null, ratios: [] };
+export const crossSection = { ...NO_BOOK, ...buildCrossSection(peers, 1) };
 /** The first of them, and what its figures of 30 September 2026 bring to the comparison. */
 export const inputs = { ...buildBorrower(1), covenants: [covenant] };
 export const peer = peerInputs(inputs, '2026-09-30', asOf)!;

@@ -6,6 +6,7 @@
  */
 import { performance } from 'node:perf_hooks';
 import { assess } from '#core/assess.ts';
+import { NO_BOOK } from '#core/bookCrossSection.ts';
 import { POLICY_VERSION_1 } from '#core/policy.ts';
 import { AS_OF, buildBook, generator } from '#core/quality/book.fixture.ts';
 import { buildCrossSection, type PeerInputs } from '#core/quality/crossSection.ts';
@@ -48,7 +49,7 @@ function medianMs(runs: number, work: () => unknown): number {
 const say = (label: string, figure: string): void => console.log(`${label.padEnd(56)}${figure.padStart(12)}`);
 const ms = (value: number): string => `${value.toFixed(2)} ms`;
 
-const crossSection = { ...buildCrossSection(peersOf(1_000), 1), patterns: null, ratios: [] };
+const crossSection = { ...NO_BOOK, ...buildCrossSection(peersOf(1_000), 1) };
 
 console.log(
   `One borrower: ${QUARTERS} quarters, 4 covenants, ${TESTED_QUARTERS} quarters of tests; median of 100`,

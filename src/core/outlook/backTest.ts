@@ -3,7 +3,14 @@ import type { PlainDate } from '../calendar/plainDate.ts';
 import { nextTest } from './nextTest.ts';
 import { peerChanges } from './peerChanges.ts';
 import { PROJECTION_WORDS, projectionWord, type ProjectionWord } from './projectionWord.ts';
-import { historiesAt, HORIZONS, ratioGrids, type Horizon, type RatioGrid, type RatioRow } from './ratioGrid.ts';
+import {
+  historiesAt,
+  HORIZONS,
+  ratioGrids,
+  type Horizon,
+  type RatioGrid,
+  type RatioRow,
+} from './ratioGrid.ts';
 import type { RatioAt, RatioSeries } from './ratioSeries.ts';
 
 export interface ProjectionRecord {

@@ -70,7 +70,6 @@ function sidesOn({ from, to, start, end }: Stretch, at: Decimal): Sides {
   const between = (one: Decimal, other: Decimal): Decimal => one.plus(other.minus(one).times(share));
   return {
     numerator: between(start.numerator, end.numerator),
-    denominator:
-      start.denominator && end.denominator ? between(start.denominator, end.denominator) : null,
+    denominator: start.denominator && end.denominator ? between(start.denominator, end.denominator) : null,
   };
 }

@@ -29,8 +29,7 @@ function remembered(ratios: readonly RatioSeries[]): PeersOfBook {
     const grid = grids.get(measure);
     if (!grid) return null;
     const key = `${measure} ${quarters}`;
-    const changes =
-      built.get(key) ?? peerChanges(historiesAt(grid, grid.quarterEnds.length - 1), quarters);
+    const changes = built.get(key) ?? peerChanges(historiesAt(grid, grid.quarterEnds.length - 1), quarters);
     built.set(key, changes);
     return changes;
   };

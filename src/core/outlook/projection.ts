@@ -69,7 +69,8 @@ export const projections = (
     if (!latest) return { covenantId, fromTestDate: null, reason: whyNoLiveTest(own), tests: [] };
     const fromTestDate = latest.testDate;
     const { tested, level } = latest;
-    if (!tested?.gt(0) || !level) return { covenantId, fromTestDate, reason: whyNotCarriedOn(latest), tests: [] };
+    if (!tested?.gt(0) || !level)
+      return { covenantId, fromTestDate, reason: whyNotCarriedOn(latest), tests: [] };
     const from: CarriedOn = {
       borrowerId,
       bound: isMaximum(covenant.operator) ? 'most' : 'least',

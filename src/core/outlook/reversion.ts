@@ -7,6 +7,8 @@ import { normalCdf } from '../statistics/normalDistribution.ts';
 export const PERSISTENCE = 0.75;
 export const FEWEST_OWN_TESTS = 8;
 const LAST_TESTS = 12;
+/** Below it the tests never moved but for the last digit of a double. */
+const LEAST_DEVIATION = 1e-9;
 
 /**
  * Chance that headroom ends below nought after some quarters, were it to return to its mean with normal shocks: the
@@ -50,7 +52,7 @@ export function chanceFromOwnTests(
   if (last.length < FEWEST_OWN_TESTS) return null;
   const mean = last.reduce((sum, one) => sum + one, 0) / last.length;
   const deviation = Math.sqrt(last.reduce((sum, one) => sum + (one - mean) ** 2, 0) / (last.length - 1));
-  if (!(deviation > 0)) return null;
+  if (deviation < LEAST_DEVIATION) return null;
   const [now, ahead] = [test.ratio / test.level, test.ratio / test.levelAhead];
   return chanceByReversion({
     headroom: test.bound === 'most' ? 1 - now : now - 1,

@@ -122,7 +122,9 @@ function breakEven(asked: Asked, factor: Factor): BreakEven {
   if ('missing' in blow) return { kind: 'unknown', reason: blow.missing };
   if (factor === 'earnings' && !base.earnings) return { kind: 'unknown', reason: 'no positive earnings' };
   const share = shareBeforeNotMet(struck, { operator: test.operator, level }, blow);
-  return share ? { kind: 'at', share, amount: amountOf(asked, factor)?.times(share) ?? null } : { kind: 'never' };
+  return share
+    ? { kind: 'at', share, amount: amountOf(asked, factor)?.times(share) ?? null }
+    : { kind: 'never' };
 }
 
 const UNIT: Blow = { earnings: WHOLE, cash: WHOLE, interest: WHOLE };
