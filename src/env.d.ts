@@ -10,6 +10,8 @@ declare global {
       deskNames: readonly string[];
       /** Open alerts on the desks that the person reads; null where the person reads none. */
       openAlerts: number | null;
+      /** Changes of the policy that wait for this person's decision; null where the person decides none. */
+      policyToDecide: number | null;
       sessionId: string | null;
       requestId: string;
       /** The client's address as the socket (or the named proxy) gives it. */

@@ -2,7 +2,7 @@
 import { sequence } from 'astro:middleware';
 import { isOutage } from './server/db/inTransaction.ts';
 import {
-  alertCountStage,
+  barCountStage,
   headerStage,
   methodStage,
   originStage,
@@ -12,8 +12,8 @@ import {
   requireUserStage,
   sessionStage,
 } from './server/http/stages.ts';
+import { barCounts } from './server/services/barCounts.ts';
 import { currentPerson } from './server/services/currentPerson.ts';
-import { openAlertCount } from './server/services/openAlertCount.ts';
 import { recordRefusal } from './server/services/recordRefusal.ts';
 
 /**
@@ -30,6 +30,6 @@ export const onRequest = sequence(
   sessionStage(currentPerson),
   refusalStage(recordRefusal),
   requireUserStage,
-  alertCountStage(openAlertCount),
+  barCountStage(barCounts),
   methodStage,
 );

@@ -265,11 +265,6 @@ export function policyFaults({ repeated, stepDown, runningOut }: Policy): readon
   if (runningOut.urgentDays > runningOut.soonDays)
     faults.push({
       key: 'runningOut.urgentDays',
-      message: `not more than the ${runningOut.soonDays} days of the alert that comes before`,
-    });
-  if (runningOut.urgentDays > runningOut.soonDays)
-    faults.push({
-      key: 'runningOut.urgentDays',
       message: `not more than the ${runningOut.soonDays} days of what comes before`,
     });
   return faults;

@@ -110,6 +110,30 @@ export const MATRIX: Readonly<Record<string, Sample>> = {
   // Runs belong to no desk: the one of the tests is not there for anybody who may ask.
   'GET runs/[id]': { ...get('administer', () => '/runs/999999999999', 'nothing'), may: 404 },
 
+  'GET book/index': list('read borrower', '/book'),
+
+  'GET policy/index': list('signed in', '/policy'),
+  // Version 4,000,000 has not been: nothing is proposed.
+  'POST policy/proposals/index': post(
+    'propose policy',
+    () => '/policy/proposals',
+    { from: 4_000_000, validFrom: '2035-01-31', reason: TEXT, values: { qualityWeakBelow: '25' } },
+    412,
+    'nothing',
+  ),
+  // The policy belongs to no desk: the proposal of the tests is not there for anybody who may ask.
+  'POST policy/proposals/[id]/decision': post(
+    'confirm policy',
+    () => '/policy/proposals/999999999999/decision',
+    { decision: 'decline', text: TEXT },
+    404,
+    'nothing',
+  ),
+  'POST policy/proposals/[id]/withdrawal': {
+    ...postEmpty('propose policy', () => '/policy/proposals/999999999999/withdrawal', 404),
+    names: 'nothing',
+  },
+
   'GET watchlist/index': list('read borrower', '/watchlist'),
   'POST proposals/index': {
     can: 'propose',

@@ -1,15 +1,15 @@
 import { Ladder } from './Ladder.tsx';
-import type { Section, SectionKey } from './sections.ts';
+import type { Section, SectionCounts, SectionKey } from './sections.ts';
 
 interface SectionLinksProps {
   readonly sections: readonly Section[];
   readonly active: SectionKey | null;
-  /** Open alerts, printed beside Alerts; null where the page does not know. */
-  readonly alertCount: number | null;
+  /** Printed beside the name; nothing where the page does not know, and no nought beside Policy. */
+  readonly counts: SectionCounts;
   readonly folded?: boolean;
 }
 
-export function SectionLinks({ sections, active, alertCount, folded = false }: SectionLinksProps) {
+export function SectionLinks({ sections, active, counts, folded = false }: SectionLinksProps) {
   return sections.map((section) => (
     <a
       key={section.key}
@@ -18,13 +18,20 @@ export function SectionLinks({ sections, active, alertCount, folded = false }: S
       aria-current={section.key === active ? 'page' : undefined}
     >
       {section.name}
-      {section.key === 'alerts' && alertCount !== null && (
-        <span className="section-count">
-          {alertCount}
-          <span className="sr-only"> open</span>
-        </span>
-      )}
+      <SectionCount section={section.key} count={counts[section.key] ?? null} />
       {section.key === active && !folded && <Ladder />}
     </a>
   ));
+}
+
+const COUNTED: Readonly<Partial<Record<SectionKey, string>>> = { alerts: 'open', policy: 'to decide' };
+
+function SectionCount({ section, count }: { readonly section: SectionKey; readonly count: number | null }) {
+  if (count === null || (section === 'policy' && count === 0)) return null;
+  return (
+    <span className="section-count">
+      {count}
+      <span className="sr-only"> {COUNTED[section]}</span>
+    </span>
+  );
 }

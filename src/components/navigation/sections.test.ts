@@ -4,9 +4,9 @@ import { readsBorrowers, roleAndDesk, sectionsFor } from './sections.ts';
 const names = (...roles: string[]) => sectionsFor(roles).map((section) => section.name);
 
 describe('sections', () => {
-  test('of those who work on borrowers are the four that exist', () => {
+  test('of those who work on borrowers are the five that exist', () => {
     for (const role of ['analyst', 'relationship manager'])
-      expect(names(role)).toEqual(['Alerts', 'Watchlist', 'Borrowers', 'Imports']);
+      expect(names(role)).toEqual(['Alerts', 'Watchlist', 'Borrowers', 'Imports', 'Book']);
   });
 
   test('of an administrator are the desk settings and the audit log, and no borrower', () => {
@@ -14,9 +14,10 @@ describe('sections', () => {
     expect(readsBorrowers(['administrator'])).toBe(false);
   });
 
-  test('of auditor and committee member end with the audit log', () => {
-    for (const role of ['auditor', 'committee member'])
-      expect(names(role)).toEqual(['Alerts', 'Watchlist', 'Borrowers', 'Imports', 'Audit log']);
+  test('of auditor and committee member end with the audit log; the committee decides on the policy', () => {
+    const readers = names('analyst');
+    expect(names('auditor')).toEqual([...readers, 'Audit log']);
+    expect(names('committee member')).toEqual([...readers, 'Policy', 'Audit log']);
   });
 
   test('of several roles are all of theirs, once each', () => {
@@ -25,6 +26,7 @@ describe('sections', () => {
       'Watchlist',
       'Borrowers',
       'Imports',
+      'Book',
       'Desk settings',
       'Audit log',
     ]);

@@ -5,7 +5,8 @@ export interface Section {
   readonly href: string;
 }
 
-export type SectionKey = 'alerts' | 'watchlist' | 'borrowers' | 'imports' | 'reviews' | 'settings' | 'audit';
+export type SectionKey =
+  'alerts' | 'watchlist' | 'borrowers' | 'imports' | 'book' | 'reviews' | 'settings' | 'policy' | 'audit';
 
 interface SectionRule extends Section {
   /** Roles that see it; none named is everybody who reads borrowers. */
@@ -19,7 +20,10 @@ const SECTIONS: readonly SectionRule[] = [
   { key: 'watchlist', name: 'Watchlist', href: '/watchlist', roles: READERS },
   { key: 'borrowers', name: 'Borrowers', href: '/borrowers', roles: READERS },
   { key: 'imports', name: 'Imports', href: '/imports', roles: READERS },
+  { key: 'book', name: 'Book', href: '/book', roles: READERS },
   { key: 'settings', name: 'Desk settings', href: '/desk-settings', roles: ['administrator'] },
+  // Administrators find it among the desk settings.
+  { key: 'policy', name: 'Policy', href: '/desk-settings/policy', roles: ['committee member'] },
   {
     key: 'audit',
     name: 'Audit log',
@@ -27,6 +31,9 @@ const SECTIONS: readonly SectionRule[] = [
     roles: ['committee member', 'administrator', 'auditor'],
   },
 ];
+
+/** What stands beside a section's name: open alerts, changes of the policy that wait for this person's decision. */
+export type SectionCounts = Readonly<Partial<Record<SectionKey, number | null>>>;
 
 /** What a person with these roles sees in the top bar, in its order. The server decides again on every page. */
 export function sectionsFor(roles: readonly string[]): readonly Section[] {

@@ -16,7 +16,9 @@ import { migration as borrowers } from './migrations/0003-borrowers.ts';
 import { migration as statements } from './migrations/0004-statements.ts';
 import { migration as results } from './migrations/0005-results.ts';
 import { migration as covenants } from './migrations/0006-covenants.ts';
+import { migration as policy } from './migrations/0007-policy.ts';
 import { migration as movements } from './migrations/0008-movements.ts';
+import { migration as bookPatterns } from './migrations/0009-book-patterns.ts';
 import { select } from './sql.ts';
 
 export const MIGRATIONS: readonly Migration[] = [
@@ -26,7 +28,9 @@ export const MIGRATIONS: readonly Migration[] = [
   statements,
   results,
   covenants,
+  policy,
   movements,
+  bookPatterns,
 ];
 
 const LEASE_SECONDS = 30;

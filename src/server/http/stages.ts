@@ -24,6 +24,7 @@ export const requestStage =
     locals.person = null;
     locals.deskNames = [];
     locals.openAlerts = null;
+    locals.policyToDecide = null;
     locals.sessionId = null;
     locals.requestId ??= randomUUID();
     locals.now = new Date();
@@ -97,12 +98,18 @@ export const sessionStage =
     return next();
   };
 
-/** Every page's bar shows how many alerts are open; an API answer has no bar. */
-export const alertCountStage =
-  (countOpen: (person: SignedIn['person']) => Promise<number | null>): MiddlewareHandler =>
+/** What every page's bar counts. */
+interface BarCounts {
+  readonly openAlerts: number | null;
+  readonly policyToDecide: number | null;
+}
+
+/** Every page's bar shows how many alerts are open and what waits to be decided; an API answer has no bar. */
+export const barCountStage =
+  (count: (person: SignedIn['person']) => Promise<BarCounts>): MiddlewareHandler =>
   async (context, next) => {
     const { person } = context.locals;
-    if (person && !isApi(context.url.pathname)) context.locals.openAlerts = await countOpen(person);
+    if (person && !isApi(context.url.pathname)) Object.assign(context.locals, await count(person));
     return next();
   };
 
