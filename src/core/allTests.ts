@@ -25,7 +25,10 @@ export const allTests = (
   covenants.flatMap((covenant) => {
     const ofScope = books[covenant.scope];
     const book = covenant.basis === null ? ofScope : ofScope.onBasis(covenant.basis);
-    const tests = withRights(covenant, onEachDate(covenant, book, { policy, asOf, rates }), { undertakings, asOf });
+    const tests = withRights(covenant, onEachDate(covenant, book, { policy, asOf, rates }), {
+      undertakings,
+      asOf,
+    });
     return covenant.currency === currency ? withRoomInDeviations(tests, book) : tests;
   });
 

@@ -50,7 +50,7 @@ export interface Assessment {
  * Everything that is said of one borrower on a day, from what was known by that day. The same arguments give the
  * same answer, for ever: the clock is `asOf`, the peers are the stored cross-section.
  *
- * @example assess(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').methodVersion // => '1.0'
+ * @example assess(inputs, crossSection, POLICY_VERSION_1, '2026-11-30').methodVersion // => '2.0'
  */
 export function assess(
   inputs: BorrowerInputs,

@@ -64,4 +64,4 @@ export const POLICY_VERSION_1: Policy = {
 };
 
 /** Raised with every change of a formula, so that an old result says what computed it. */
-export const METHOD_VERSION = '1.0';
+export const METHOD_VERSION = '2.0';

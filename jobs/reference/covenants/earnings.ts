@@ -6,8 +6,7 @@ import {
   restsOn,
 } from '#core/covenants/counterfactual.ts';
 import { amountAtLevel, type Sides } from '#core/covenants/headroom.ts';
-import { holdAgainstLevel, type Held, type Verdict } from '#core/covenants/holdAgainstLevel.ts';
-import { leverageByAccountingBasis } from '#core/measures/accountingBasis.ts';
+import { holdAgainstLevel, type Verdict } from '#core/covenants/holdAgainstLevel.ts';
 import { allowAddBacks, proFormaEbitda } from '#core/measures/addBacks.ts';
 import { ebitdaFromNetIncome, ebitdaFromRevenue, routeDifference } from '#core/measures/ebitda.ts';
 import { netLeverage } from '#core/measures/netLeverage.ts';
@@ -15,6 +14,7 @@ import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { withCostsTurned, writesCostsNegative } from '#core/statements/costSigns.ts';
 import type { Topic } from '../topic.ts';
 import { amount, atMost, status } from './amounts.ts';
+import { earning, owing, registered } from './registered.ts';
 
 const ebitda: Topic = (inputs) => {
   const given = z
@@ -91,15 +91,16 @@ const gaap: Topic = (inputs) => {
       max: amount,
     })
     .parse(inputs);
-  const bases = leverageByAccountingBasis({
-    ebitda: given.ebitda_reported,
-    leaseAddBack: given.lease_addback,
-    debt: given.debt,
-    leaseLiability: given.lease_liability,
-  });
-  const [frozen, current] = [bases.frozen, bases.current].map((sides) =>
-    holdAgainstLevel(netLeverage, sides, atMost(given.max)),
-  ) as [Held, Held];
+  const { held: frozen, otherHeld: current } = registered(
+    'net-leverage',
+    {
+      flows: { ...earning(given.ebitda_reported), rent_paid: given.lease_addback.negated() },
+      balances: { ...owing(given.debt), lease_liabilities: given.lease_liability },
+      definition: { accounting: 'frozen' },
+    },
+    atMost(given.max),
+  );
+  if (!current) throw new Error('frozen rules without those of today beside them');
   return {
     frozen: frozen.tested,
     current: current.tested,

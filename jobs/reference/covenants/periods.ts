@@ -1,10 +1,12 @@
 import { z } from 'zod';
 import { deadlineOn, dueDate, type Roll } from '#core/calendar/deadline.ts';
 import { fiscalPosition } from '#core/calendar/fiscalYear.ts';
-import { addMonthsToMonthEnd, plainDate } from '#core/calendar/plainDate.ts';
+import { addMonthsToMonthEnd, plainDate, type PlainDate } from '#core/calendar/plainDate.ts';
 import { testCovenant } from '#core/covenants/testCovenant.ts';
 import { sumOfInputs, type MissingLine, type Reading } from '#core/statements/reading.ts';
-import { translatedQuarters, translatedSides } from '#core/measures/translation.ts';
+import { PLAIN_DEFINITION, type CurrencyRate } from '#core/measures/definition.ts';
+import { flowIn } from '#core/measures/readLines.ts';
+import { translationInto } from '#core/measures/translation.ts';
 import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { POLICY_VERSION_1 } from '#core/policy.ts';
 import { flowOfMonths, lastTwelveMonths, quarterFlow } from '#core/statements/flows.ts';
@@ -16,7 +18,8 @@ import {
   lengthOfQuarters,
 } from '#core/statements/periodLength.ts';
 import type { Topic } from '../topic.ts';
-import { amount, day, status } from './amounts.ts';
+import { amount, atMost, day, status } from './amounts.ts';
+import { earning, owing, registered } from './registered.ts';
 import { netLeverageCovenant, statementOf } from './statements.ts';
 
 const ONE = decimal(1);
@@ -131,21 +134,52 @@ const fx: Topic = (inputs) => {
       z.strictObject({ debt_eur: amount, ebitda_eur: amount, avg: amount, closing: amount.optional() }),
     ])
     .parse(inputs);
-  if ('q' in given)
-    return { ltm: translatedQuarters(given.q.map((flow, k) => ({ flow, averageRate: given.avg[k]! }))) };
-  const at = (debtRate: Decimal, earningsRate: Decimal) => {
-    const sides = translatedSides({
-      debt: given.debt_eur,
-      earnings: given.ebitda_eur,
-      debtRate,
-      earningsRate,
-    });
-    return sides.numerator.div(sides.denominator);
-  };
+  if ('q' in given) return { ltm: yearInDollars(given.q, given.avg) };
+  const ratioIn = (currency: string, debtRate: 'closing' | 'average') =>
+    registered(
+      'net-leverage',
+      {
+        flows: earning(given.ebitda_eur),
+        balances: owing(given.debt_eur),
+        definition: { debtRate },
+        currency,
+        rates: [
+          rateTo('USD', 'average', '2025-01-01', '2025-12-31', given.avg),
+          ...(given.closing ? [rateTo('USD', 'closing', '2025-12-31', '2025-12-31', given.closing)] : []),
+        ],
+      },
+      atMost(ONE),
+    ).held.tested;
   return given.closing
-    ? { local: at(ONE, ONE), translated: at(given.closing, given.avg) }
-    : { ratio: at(given.avg, given.avg) };
+    ? { local: ratioIn('EUR', 'closing'), translated: ratioIn('USD', 'closing') }
+    : { ratio: ratioIn('USD', 'average') };
 };
+
+/** Twelve months of a flow, each quarter at its own average rate. */
+function yearInDollars(quarters: readonly Decimal[], averages: readonly Decimal[]): Decimal | null {
+  const ends = quarters.map((_, k) => addMonthsToMonthEnd(YEAR_END, 3 * (k + 1)));
+  const statements = quarters.map((revenue, k) => statementOf(k, ends[k]!, 3, { revenue }));
+  const rates = averages.map((rate, k) =>
+    rateTo('USD', 'average', statements[k]!.periodStart, ends[k]!, rate),
+  );
+  const request = {
+    book: bookOf(statements, YEAR_END_MONTH),
+    date: ends.at(-1)!,
+    definition: PLAIN_DEFINITION,
+    addBacks: [],
+    months: 12,
+    translation: translationInto('USD', rates),
+  };
+  return valueOf(flowIn(request, 'revenue'));
+}
+
+const rateTo = (
+  to: string,
+  kind: CurrencyRate['kind'],
+  periodStart: PlainDate,
+  periodEnd: PlainDate,
+  rate: Decimal,
+): CurrencyRate => ({ from: 'EUR', to, kind, periodStart, periodEnd, rate, source: 'the vector' });
 
 const deadlineInputs = z.union([
   z.strictObject({ period_end: day, days: z.number(), roll: z.enum(['none', 'following']).optional() }),

@@ -1,18 +1,18 @@
 import { z } from 'zod';
-import { capexLimit, minimumWithProfits } from '#core/covenants/agreedAmounts.ts';
-import { amountAtLevel, earningsMayFall, type Sides } from '#core/covenants/headroom.ts';
-import { holdAgainstLevel, type Held, type Shaped } from '#core/covenants/holdAgainstLevel.ts';
-import { valuationAgeMonths, valuationTooOld } from '#core/covenants/valuation.ts';
-import { cashForDebtService, debtService, fixedChargeSides } from '#core/measures/cashCover.ts';
-import { currentLiabilitiesCounted, currentRatio, quickAssets } from '#core/measures/currentRatio.ts';
-import { netDebt } from '#core/measures/debt.ts';
-import { interestCover } from '#core/measures/interestCover.ts';
-import { liquidity as liquidityOf, minimumLiquidity } from '#core/measures/minimumLiquidity.ts';
-import { netLeverage } from '#core/measures/netLeverage.ts';
-import { tangibleNetWorth } from '#core/measures/netWorth.ts';
+import { addMonthsToMonthEnd } from '#core/calendar/plainDate.ts';
+import { amountAtLevel, earningsMayFall } from '#core/covenants/headroom.ts';
+import { holdAgainstLevel, type Held } from '#core/covenants/holdAgainstLevel.ts';
+import { debtService } from '#core/measures/cashCover.ts';
+import { currentLiabilitiesCounted } from '#core/measures/currentRatio.ts';
+import { MEASURES } from '#core/measures/index.ts';
+import type { MeasureCode } from '#core/measures/measure.ts';
+import { valuationAgeMonths } from '#core/measures/valuation.ts';
 import { ZERO, type Decimal } from '#core/money/decimal.ts';
+import type { Amounts } from '#core/statements/statement.ts';
 import type { Topic } from '../topic.ts';
-import { amount, atLeast, atMost, coverResultOf, day, resultOf, status } from './amounts.ts';
+import { amount, atLeast, atMost, coverResultOf, day, resultOf } from './amounts.ts';
+import { earning, owing, registered, type Accounts } from './registered.ts';
+import { statementOf } from './statements.ts';
 
 const leverageInputs = z.strictObject({
   net_debt: amount.optional(),
@@ -30,17 +30,26 @@ const leverageInputs = z.strictObject({
 
 const leverage: Topic = (inputs) => {
   const given = leverageInputs.parse(inputs);
-  const burden = given.net_debt ?? given.senior_debt ?? debtLessCash(given);
-  const sides: Sides = { numerator: burden, denominator: given.ebitda };
-  const held = holdAgainstLevel(netLeverage, sides, {
-    operator: given.strict ? '<' : '<=',
-    level: given.max,
-    roundingPlaces: given.round_dp ?? null,
-  });
-  const needed = amountAtLevel(netLeverage.shape, sides, given.max);
+  const measure = given.senior_debt ? 'senior-leverage' : 'net-leverage';
+  const burden = given.net_debt ?? given.senior_debt;
+  const { held, sides } = registered(
+    measure,
+    {
+      flows: earning(given.ebitda),
+      balances: burden ? owing(burden) : debtAndCash(given),
+      definition: { cashNettingCap: given.cash_cap ?? null },
+    },
+    {
+      operator: given.strict ? '<' : '<=',
+      level: given.max,
+      roundingPlaces: given.round_dp ?? null,
+    },
+  );
+  if (!sides) throw new Error('leverage without its two sides');
+  const needed = amountAtLevel(MEASURES[measure].shape, sides, given.max);
   return {
     ...resultOf(held),
-    net_debt: burden,
+    net_debt: sides.numerator,
     earnings_cushion: held.headroom.mayFall,
     debt_capacity: held.headroom.otherSideMayRise,
     debt_cushion: held.headroom.otherSideShare,
@@ -51,15 +60,11 @@ const leverage: Topic = (inputs) => {
   };
 };
 
-function debtLessCash(given: z.infer<typeof leverageInputs>): Decimal {
+/** Cash on our line is what may be used: what of it is pledged stands apart. */
+function debtAndCash(given: z.infer<typeof leverageInputs>): Amounts {
   const debt = given.debt ?? given.total_debt;
   if (!debt) throw new Error('no debt');
-  return netDebt({
-    debt,
-    cash: given.cash ?? ZERO,
-    restrictedCash: given.restricted_cash ?? ZERO,
-    cashCap: given.cash_cap ?? null,
-  });
+  return { senior_debt: debt, cash: (given.cash ?? ZERO).minus(given.restricted_cash ?? ZERO) };
 }
 
 const coverInputs = z.union([
@@ -95,8 +100,12 @@ const coverInputs = z.union([
 
 const cover: Topic = (inputs) => {
   const given = coverInputs.parse(inputs);
-  const { numerator, denominator } = coverSides(given);
-  const held = holdAgainstLevel(interestCover, { numerator, denominator }, atLeast(given.min));
+  const { measure, accounts } = coverAccounts(given);
+  const { sides } = registered(measure, accounts, atLeast(given.min));
+  if (!sides?.denominator) throw new Error('a cover without its two sides');
+  // The vectors tell what may fall of the numerator; what may fall of EBITDA inside it stands beside.
+  const { numerator, denominator } = sides;
+  const held = holdAgainstLevel(MEASURES[measure], { numerator, denominator }, atLeast(given.min));
   const { moneyLeft } = held.headroom;
   return {
     ...coverResultOf(held),
@@ -109,58 +118,88 @@ const cover: Topic = (inputs) => {
   };
 };
 
-function coverSides(given: z.infer<typeof coverInputs>): { numerator: Decimal; denominator: Decimal } {
+interface CoverAccounts {
+  readonly measure: MeasureCode;
+  readonly accounts: Accounts;
+}
+
+function coverAccounts(given: z.infer<typeof coverInputs>): CoverAccounts {
   if ('rent' in given)
-    return fixedChargeSides({
-      ebitda: given.ebitda,
-      rent: given.rent,
-      unfundedCapex: given.capex_unfunded,
-      cashTax: given.cash_tax,
-      cashInterest: given.interest,
-      scheduledPrincipal: given.principal,
-    });
-  if ('nwc_increase' in given)
     return {
-      numerator: cashForDebtService({
-        ebitda: given.ebitda,
-        cashTax: given.cash_tax,
-        unfundedCapex: given.capex_unfunded,
-        workingCapitalIncrease: given.nwc_increase,
-      }),
-      denominator: debtService({
-        cashInterest: given.cash_interest,
-        scheduledPrincipal: given.principal,
-        bullet: ZERO,
-      }),
+      measure: 'fixed-charge-cover',
+      accounts: {
+        flows: {
+          ...earning(given.ebitda),
+          rent_expense: given.rent,
+          capex: given.capex_unfunded.negated(),
+          tax_paid: given.cash_tax.negated(),
+          interest_paid: given.interest.negated(),
+          scheduled_principal: given.principal,
+        },
+      },
     };
+  if ('nwc_increase' in given)
+    return debtServiceOf({
+      ebitda: given.ebitda,
+      cashTax: given.cash_tax,
+      capex: given.capex_unfunded,
+      increase: given.nwc_increase,
+      interest: given.cash_interest,
+      principal: given.principal,
+    });
   if ('bullet' in given)
-    return {
-      numerator: given.cfads,
-      denominator: debtService({
-        cashInterest: given.cash_interest,
+    return debtServiceOf({
+      ebitda: given.cfads,
+      interest: given.cash_interest,
+      principal: debtService({
+        cashInterest: ZERO,
         scheduledPrincipal: given.scheduled_principal,
         bullet: given.include_bullet ? given.bullet : ZERO,
       }),
-    };
-  return 'debt_service' in given
-    ? { numerator: given.cfads, denominator: given.debt_service }
-    : { numerator: given.ebitda, denominator: given.interest };
+    });
+  if ('debt_service' in given) return debtServiceOf({ ebitda: given.cfads, principal: given.debt_service });
+  return {
+    measure: 'interest-cover',
+    accounts: { flows: { ...earning(given.ebitda), interest_paid: given.interest.negated() } },
+  };
 }
 
-const loanToValue: Shaped = {
-  shape: 'burden',
-  earningsSide: null,
-  words: { subject: 'Value', otherSide: 'loan', carrier: 'value', charge: 'loan' },
-};
-const debtYield: Shaped = {
-  shape: 'cover',
-  earningsSide: null,
-  words: { subject: 'Net operating income', otherSide: 'loan', carrier: 'income', charge: 'loan' },
-};
-const gearing: Shaped = {
-  shape: 'burden',
-  earningsSide: null,
-  words: { subject: 'Net worth', otherSide: 'debt', carrier: 'net worth', charge: 'debt' },
+interface DebtServiceItems {
+  readonly ebitda: Decimal;
+  readonly cashTax?: Decimal;
+  readonly capex?: Decimal;
+  readonly increase?: Decimal;
+  readonly interest?: Decimal;
+  readonly principal: Decimal;
+}
+
+const debtServiceOf = ({
+  ebitda,
+  cashTax = ZERO,
+  capex = ZERO,
+  increase = ZERO,
+  interest = ZERO,
+  principal,
+}: DebtServiceItems): CoverAccounts => {
+  const workingCapital = (amount: Decimal): Amounts => ({
+    current_assets: amount,
+    cash: ZERO,
+    current_liabilities: ZERO,
+  });
+  return {
+    measure: 'debt-service-cover',
+    accounts: {
+      flows: {
+        ...earning(ebitda),
+        tax_paid: cashTax.negated(),
+        capex: capex.negated(),
+        interest_paid: interest.negated(),
+        scheduled_principal: principal,
+      },
+      balances: workingCapital(increase),
+      before: workingCapital(ZERO),
+    },
+  };
 };
 
 const asset: Topic = (inputs) => {
@@ -177,20 +216,30 @@ const asset: Topic = (inputs) => {
       }),
     ])
     .parse(inputs);
-  if ('noi' in given) {
-    const sides = { numerator: given.noi, denominator: given.loan };
-    return coverResultOf(holdAgainstLevel(debtYield, sides, atLeast(given.min)));
-  }
+  if ('noi' in given)
+    return coverResultOf(
+      registered(
+        'debt-yield',
+        { flows: { noi: given.noi }, balances: { senior_debt: given.loan } },
+        atLeast(given.min),
+      ).held,
+    );
   const { valuation_date: valuationDate, test_date: testDate, max_age_months: mostMonths } = given;
-  const isDated = valuationDate && testDate && mostMonths !== undefined;
-  const reason = isDated ? valuationTooOld({ valuationDate, testDate, mostMonths }) : null;
-  const age = isDated ? { age_months: valuationAgeMonths(valuationDate, testDate) } : {};
-  if (reason !== null) return { status: status('cannot be tested'), reason, ...age };
-  const sides = { numerator: given.loan, denominator: given.value };
-  const held = holdAgainstLevel(loanToValue, sides, atMost(given.max));
+  const { held } = registered(
+    'loan-to-value',
+    {
+      balances: { senior_debt: given.loan, ...(valuationDate ? {} : { collateral_value: given.value }) },
+      definition: { valuationMaxAgeMonths: mostMonths ?? null },
+      ...(testDate ? { testDate } : {}),
+      ...(valuationDate
+        ? { further: [statementOf(4, valuationDate, 0, { collateral_value: given.value })] }
+        : {}),
+    },
+    atMost(given.max),
+  );
   return {
     ...resultOf(held),
-    ...age,
+    ...(valuationDate && testDate ? { age_months: valuationAgeMonths(valuationDate, testDate) } : {}),
     ltv: held.tested,
     value_cushion: held.headroom.mayFall,
     loan_cushion: held.headroom.otherSideShare,
@@ -213,30 +262,40 @@ const liquidity: Topic = (inputs) => {
   const given = liquidityInputs.parse(inputs);
   if ('undrawn' in given) {
     const { cash, undrawn, draw_stop: drawStop = false } = given;
-    const available = liquidityOf({ cash, undrawn, drawStop });
-    return { ...amountResult(available, given.min), liquidity: available };
-  }
-  if ('receivables' in given) {
-    const numerator = quickAssets(given.cash, given.receivables);
-    const sides = { numerator, denominator: given.current_liabilities };
-    return {
-      ...coverResultOf(holdAgainstLevel(currentRatio, sides, atLeast(given.min))),
-      quick_assets: numerator,
-    };
-  }
-  const counted = (leavesFacilityOut: boolean): Held =>
-    holdAgainstLevel(
-      currentRatio,
+    const { held } = registered(
+      'minimum-liquidity',
       {
-        numerator: given.current_assets,
-        denominator: currentLiabilitiesCounted({
-          currentLiabilities: given.current_liabilities,
-          loanTurnedCurrent: given.loan_reclassified ?? ZERO,
-          leavesFacilityOut,
-        }),
+        balances: { cash, revolver_commitment: undrawn, revolver_drawn: ZERO },
+        definition: { undrawnCountsAsLiquidity: !drawStop },
       },
       atLeast(given.min),
     );
+    return { ...amountResultOf(held), liquidity: held.tested };
+  }
+  if ('receivables' in given) {
+    const { cash, receivables, current_liabilities } = given;
+    const { held, sides } = registered(
+      'quick-ratio',
+      { balances: { cash, receivables, current_liabilities } },
+      atLeast(given.min),
+    );
+    return { ...coverResultOf(held), quick_assets: sides?.numerator ?? null };
+  }
+  const counted = (leavesFacilityOut: boolean): Held =>
+    registered(
+      'current-ratio',
+      {
+        balances: {
+          current_assets: given.current_assets,
+          current_liabilities: currentLiabilitiesCounted({
+            currentLiabilities: given.current_liabilities,
+            loanTurnedCurrent: given.loan_reclassified ?? ZERO,
+            leavesFacilityOut,
+          }),
+        },
+      },
+      atLeast(given.min),
+    ).held;
   return {
     ...coverResultOf(counted(given.exclude_facility ?? true)),
     excluded: counted(true).tested,
@@ -244,10 +303,10 @@ const liquidity: Topic = (inputs) => {
   };
 };
 
-const amountResult = (tested: Decimal, min: Decimal): Record<string, unknown> => {
-  const held = holdAgainstLevel(minimumLiquidity, { numerator: tested, denominator: null }, atLeast(min));
-  return { ...resultOf(held), cushion: held.headroom.mayFall };
-};
+const amountResultOf = (held: Held): Record<string, unknown> => ({
+  ...resultOf(held),
+  cushion: held.headroom.mayFall,
+});
 
 const net_worth: Topic = (inputs) => {
   const given = z
@@ -263,34 +322,72 @@ const net_worth: Topic = (inputs) => {
       z.strictObject({ debt: amount, tangible_net_worth: amount, max: amount }),
     ])
     .parse(inputs);
-  if ('base' in given)
-    return {
-      minimum: minimumWithProfits({ base: given.base, share: given.share, netIncomes: given.net_income }),
-    };
-  if ('debt' in given) {
-    const sides = { numerator: given.debt, denominator: given.tangible_net_worth };
-    return resultOf(holdAgainstLevel(gearing, sides, atMost(given.max)));
-  }
-  const worth = tangibleNetWorth({
-    equity: given.equity,
-    goodwill: given.goodwill,
-    otherIntangibles: given.other_intangibles,
-    subordinatedShareholderLoans: given.subordinated_shareholder_loans,
-  });
-  return { ...amountResult(worth, given.min), tangible_net_worth: worth };
+  if ('base' in given) return { minimum: minimumAfter(given.net_income, given.base, given.share) };
+  if ('debt' in given)
+    return resultOf(
+      registered(
+        'gearing',
+        { balances: { senior_debt: given.debt, equity: given.tangible_net_worth } },
+        atMost(given.max),
+      ).held,
+    );
+  const { held } = registered(
+    'tangible-net-worth',
+    {
+      balances: {
+        equity: given.equity,
+        goodwill: given.goodwill,
+        intangibles: given.other_intangibles,
+        shareholder_loans: given.subordinated_shareholder_loans,
+      },
+      definition: { shareholderLoansInNetWorth: true },
+    },
+    atLeast(given.min),
+  );
+  return { ...amountResultOf(held), tangible_net_worth: held.tested };
 };
+
+/** Years of profit one after the other since the agreement began, the last one the year of the test. */
+function minimumAfter(netIncomes: readonly Decimal[], base: Decimal, share: Decimal): Decimal | null {
+  const ends = netIncomes.map((_, at) => addMonthsToMonthEnd('2020-12-31', 12 * (at + 1)));
+  const testDate = ends.at(-1);
+  if (!testDate) return base;
+  const { level } = registered(
+    'tangible-net-worth',
+    {
+      flows: { net_income: netIncomes.at(-1)! },
+      balances: { equity: ZERO },
+      further: ends
+        .slice(0, -1)
+        .map((end, at) => statementOf(4 + at, end, 12, { net_income: netIncomes[at]! })),
+      definition: { profitShareInNetWorth: share },
+      testDate,
+      levels: [{ from: '2021-01-01', until: null, level: base, isReset: false }],
+    },
+    atLeast(base),
+  );
+  return level;
+}
 
 const capex: Topic = (inputs) => {
   const given = z
     .strictObject({ capex: amount, limit: amount, prior_unused: amount, carry_share: amount })
     .parse(inputs);
-  const limit = capexLimit({
-    ownYear: given.limit,
-    unusedLastYear: given.prior_unused,
-    carriedShare: given.carry_share,
-  });
-  const sides = { numerator: given.capex, denominator: null };
-  return { ...resultOf(holdAgainstLevel(minimumLiquidity, sides, atMost(limit))), limit_total: limit };
+  // Last year spent nothing under a limit of what it left unused.
+  const { held, level } = registered(
+    'capital-expenditure',
+    {
+      flows: { capex: given.capex.negated() },
+      further: [statementOf(4, '2024-12-31', 12, { capex: ZERO })],
+      definition: { capexCarriedShare: given.carry_share },
+      levels: [
+        { from: '2024-01-01', until: '2024-12-31', level: given.prior_unused, isReset: false },
+        { from: '2025-01-01', until: null, level: given.limit, isReset: false },
+      ],
+    },
+    atMost(given.limit),
+  );
+  return { ...resultOf(held), limit_total: level };
 };
 
 export const ratioTopics: Readonly<Record<string, Topic>> = {

@@ -3,7 +3,8 @@ import { dayText } from '../../core/calendar/printDay.ts';
 import type { CovenantView, TestView } from '../../contracts/borrowers.ts';
 import { isMaximum } from '../../core/covenants/covenant.ts';
 import { decimal } from '../../core/money/decimal.ts';
-import { formatLevel, formatMoney, formatMoneyInFull, formatRatio } from '../../core/money/print.ts';
+import { figureInUnit, levelInUnit } from '../../core/measures/printUnit.ts';
+import { formatMoneyInFull } from '../../core/money/print.ts';
 
 type Unit = Pick<CovenantView, 'unit' | 'operator'>;
 
@@ -11,17 +12,14 @@ type Unit = Pick<CovenantView, 'unit' | 'operator'>;
 export function limitText(covenant: Unit, level: string | null): string {
   if (level === null) return 'no level in force';
   const words = { '<=': 'at most', '<': 'less than', '>=': 'at least', '>': 'more than' } as const;
-  const figure = covenant.unit === 'times' ? formatLevel(decimal(level)) : formatMoney(decimal(level));
-  return `${words[covenant.operator]} ${figure}`;
+  return `${words[covenant.operator]} ${levelInUnit(covenant.unit, decimal(level))}`;
 }
 
 /** The tested figure, with as many digits as show which side of the level it is on. */
 export function testedText(covenant: Unit, test: Pick<TestView, 'tested' | 'level'>): string {
   if (test.tested === null) return 'n.m.';
   const beside = test.level === null ? null : decimal(test.level);
-  return covenant.unit === 'times'
-    ? formatRatio(decimal(test.tested), { beside })
-    : formatMoney(decimal(test.tested), { beside });
+  return figureInUnit(covenant.unit, decimal(test.tested), { beside });
 }
 
 export const isMaximumTest = (covenant: Pick<CovenantView, 'operator'>): boolean =>

@@ -1,8 +1,10 @@
 /** The amount at which a test would stand elsewhere, in words: what would change an alert. */
+import { isMaximum } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { amountAtLevel } from '../covenants/headroom.ts';
 import { MEASURES } from '../measures/index.ts';
-import { decimal, type Decimal } from '../money/decimal.ts';
+import type { MeasureCode } from '../measures/measure.ts';
+import { decimal, ZERO, type Decimal } from '../money/decimal.ts';
 import { formatMoney } from '../money/print.ts';
 
 /**
@@ -10,8 +12,11 @@ import { formatMoney } from '../money/print.ts';
  *
  * @example subjectAmount(test) // => 13000000
  */
-export const subjectAmount = ({ measure, numerator, denominator }: CovenantTest): Decimal | null =>
-  MEASURES[measure].earningsSide === 'denominator' ? denominator : numerator;
+export const subjectAmount = ({ measure, numerator, denominator, earnings }: CovenantTest): Decimal | null =>
+  earnings ?? (isOnDenominator(measure) ? denominator : numerator);
+
+/** Earnings, value and net worth carry a burden; what covers and an amount stand above. */
+const isOnDenominator = (measure: MeasureCode): boolean => MEASURES[measure].shape === 'burden';
 
 /**
  * The earnings (or tested amount) at which a share of them is left before the test is not met; nought is at the
@@ -20,10 +25,16 @@ export const subjectAmount = ({ measure, numerator, denominator }: CovenantTest)
  * @example amountThatLeaves(test, decimal('3.9'), decimal('0.5')) // => 20000000
  */
 export function amountThatLeaves(test: CovenantTest, level: Decimal, share: Decimal): Decimal | null {
-  if (!test.numerator) return null;
-  const { numerator, denominator } = test;
-  const atLevel = amountAtLevel(MEASURES[test.measure].shape, { numerator, denominator }, level);
-  return atLevel && atLevel.div(decimal(1).minus(share));
+  const { numerator, denominator, earnings, operator } = test;
+  if (!numerator) return null;
+  const { shape, earningsSide } = MEASURES[test.measure];
+  const atLevel = amountAtLevel(shape, { numerator, denominator }, level);
+  if (!atLevel) return null;
+  const left = decimal(1).minus(share);
+  if (shape === 'amount' && isMaximum(operator)) return atLevel.times(left);
+  // Of a cash cover the earnings are told, not the cash that covers: what lies between the two stays as it is.
+  const besideEarnings = earnings && earningsSide === 'numerator' ? earnings.minus(numerator) : ZERO;
+  return atLevel.plus(besideEarnings).div(left);
 }
 
 /**

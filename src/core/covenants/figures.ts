@@ -1,14 +1,19 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
+import { monthsOfFlow } from '../measures/annualised.ts';
+import type { CurrencyRate, MeasureDefinition, MeasureRequest } from '../measures/definition.ts';
 import { MEASURES } from '../measures/index.ts';
 import type { InputUsed, MissingLine, Reading } from '../measures/measure.ts';
 import type { Measured } from '../measures/measured.ts';
+import { rateLines, translationInto } from '../measures/translation.ts';
 import type { Statement } from '../statements/statement.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
+import { agreedLevelOf } from './agreedAmounts.ts';
 import type { Covenant } from './covenant.ts';
 import type { Sides } from './headroom.ts';
+import { levelInForce } from './levels.ts';
 
 /** What a covenant's measure found on a test date. */
-export interface Figures extends Pick<Measured, 'addBacksTaken' | 'bridge'> {
+export interface Figures extends Pick<Measured, 'addBacksTaken' | 'bridge' | 'remarks'> {
   readonly readings: readonly Reading[];
   readonly inputs: readonly InputUsed[];
   /** Each gap once. */
@@ -17,32 +22,69 @@ export interface Figures extends Pick<Measured, 'addBacksTaken' | 'bridge'> {
   readonly statements: readonly Statement[];
   /** Null where a side has no value. */
   readonly sides: Sides | null;
+  /** The sides by the accounting rules of today, where the covenant goes by those at signing. */
+  readonly otherSides: Sides | null;
+  /** The level of the day, as far as the agreement computes it itself; null where none is in force. */
+  readonly level: Sides['numerator'] | null;
+  /** What that level was computed from. */
+  readonly levelInputs: readonly InputUsed[];
 }
 
 /**
- * Measures a covenant on a day, out of the book of its scope.
+ * Measures a covenant on a day, out of the book of its scope: on the accounts that it asks for, over its months, in
+ * its currency by the rates that are recorded.
  *
- * @example figuresOf(covenant, book, '2026-09-30').sides // => { numerator: 39000000, denominator: 13000000 }
+ * @example figuresOf(covenant, book, '2026-09-30').sides // => { numerator: 39000000, denominator: 13000000, earnings: 13000000 }
  */
 export function figuresOf(
-  { measure, definition, addBacks }: Covenant,
+  covenant: Covenant,
   book: StatementBook,
   date: PlainDate,
+  rates: readonly CurrencyRate[] = [],
 ): Figures {
-  const measured = MEASURES[measure].measure({ book, date, definition, addBacks });
-  const { numerator, denominator, addBacksTaken, bridge } = measured;
-  const readings = denominator ? [numerator, denominator] : [numerator];
-  const inputs = readings.flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
+  const request: MeasureRequest = {
+    book: covenant.basis === null ? book : book.onBasis(covenant.basis),
+    date,
+    definition: covenant.definition,
+    addBacks: covenant.addBacks,
+    months: monthsOfFlow(covenant.definition, covenant, date),
+    translation: translationInto(covenant.currency, rates),
+  };
+  const { measure } = MEASURES[covenant.measure];
+  const measured = measure(request);
+  const { numerator, denominator, addBacksTaken, bridge, remarks } = measured;
+  const inForce = levelInForce(covenant.levels, date);
+  const agreed = inForce.kind === 'level' ? agreedLevelOf(covenant, request, inForce) : null;
+  const sides = denominator ? [numerator, denominator] : [numerator];
+  const readings = [...sides, ...(agreed?.behind ?? [])];
+  const inputs = inputsOf(sides);
   return {
     addBacksTaken,
-    bridge,
+    bridge: [...bridge, ...(agreed?.bridge ?? []), ...rateLines(request.translation)],
+    remarks,
     readings,
     inputs,
     missing: missingOf(readings),
     statements: statementsBehind(book, inputs),
     sides: sidesOf(measured),
+    otherSides:
+      covenant.definition.accounting === 'frozen'
+        ? sidesOf(measure({ ...request, definition: byTodaysRules(covenant.definition) }))
+        : null,
+    level: agreed?.level ?? null,
+    levelInputs: inputsOf(agreed?.behind ?? []),
   };
 }
+
+const inputsOf = (readings: readonly Reading[]): readonly InputUsed[] =>
+  readings.flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
+
+/** Today's rules count lease liabilities as debt and keep their rent out of EBITDA. */
+const byTodaysRules = (definition: MeasureDefinition): MeasureDefinition => ({
+  ...definition,
+  accounting: 'current',
+  leasesInDebt: true,
+});
 
 function missingOf(readings: readonly Reading[]): readonly MissingLine[] {
   const gaps = readings.flatMap((reading) => (reading.kind === 'missing' ? reading.missing : []));
@@ -50,9 +92,13 @@ function missingOf(readings: readonly Reading[]): readonly MissingLine[] {
   return [...byKey.values()];
 }
 
-function sidesOf({ numerator, denominator }: Measured): Sides | null {
+function sidesOf({ numerator, denominator, earnings }: Measured): Sides | null {
   if (numerator.kind !== 'value' || (denominator && denominator.kind !== 'value')) return null;
-  return { numerator: numerator.value, denominator: denominator ? denominator.value : null };
+  return {
+    numerator: numerator.value,
+    denominator: denominator ? denominator.value : null,
+    ...(earnings?.kind === 'value' ? { earnings: earnings.value } : {}),
+  };
 }
 
 function statementsBehind(book: StatementBook, inputs: readonly InputUsed[]): readonly Statement[] {

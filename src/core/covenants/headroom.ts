@@ -3,10 +3,14 @@ import { decimal, type Decimal } from '../money/decimal.ts';
 import type { Measure } from '../measures/measured.ts';
 import type { Headroom } from './covenantTest.ts';
 
-/** What stands on the two sides of a test; `denominator` is null for an amount. */
+/**
+ * What stands on the two sides of a test; `denominator` is null for an amount. `earnings` are the EBITDA inside what
+ * covers, where it holds other cash items too.
+ */
 export interface Sides {
   readonly numerator: Decimal;
   readonly denominator: Decimal | null;
+  readonly earnings?: Decimal;
 }
 
 /** Whether the level is the most or the least that the agreement allows. */

@@ -8,6 +8,7 @@ import {
   amountHeadroom,
   burdenHeadroom,
   coverHeadroom,
+  earningsMayFall,
   fallOf,
   NO_HEADROOM,
   type Sides,
@@ -33,7 +34,7 @@ export interface Held extends Verdict {
   readonly headroom: Headroom;
 }
 
-export type Shaped = Pick<Measure, 'shape' | 'earningsSide' | 'words'>;
+export type Shaped = Pick<Measure, 'shape' | 'earningsSide' | 'withoutCharge' | 'words'>;
 
 /**
  * Holds a result against a level: the verdict, and every form of headroom.
@@ -49,15 +50,16 @@ export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): H
 
 function formsOf(
   shape: Measure['shape'],
-  { numerator, denominator }: Sides,
+  { numerator, denominator, earnings }: Sides,
   tested: Decimal,
   { level, operator }: Terms,
 ): Omit<Headroom, 'fallOf'> {
   if (shape === 'amount' || !denominator)
     return amountHeadroom(numerator, level, isMaximum(operator) ? 'most' : 'least');
-  return shape === 'burden'
-    ? burdenHeadroom(numerator, denominator, level, tested)
-    : coverHeadroom(numerator, denominator, level, tested);
+  if (shape === 'burden') return burdenHeadroom(numerator, denominator, level, tested);
+  const forms = coverHeadroom(numerator, denominator, level, tested);
+  if (!earnings || !forms.moneyLeft) return forms;
+  return { ...forms, mayFall: earningsMayFall({ moneyLeft: forms.moneyLeft, ebitda: earnings }) };
 }
 
 /**
@@ -83,7 +85,7 @@ export function verdictOn(measure: Shaped, sides: Sides, terms: Terms): Verdict 
 }
 
 function onBurden(
-  { words }: Shaped,
+  { words, withoutCharge }: Shaped,
   { numerator: burden, denominator: carrier }: Sides,
   terms: Terms,
 ): Verdict {
@@ -91,6 +93,7 @@ function onBurden(
   if (carrier.gt(0)) {
     const ratio = burden.div(carrier);
     if (burden.gt(0)) return compared(ratio, terms);
+    if (withoutCharge === 'met') return { ...compared(ratio, terms), reason: `no ${words.otherSide}` };
     return { ...withoutRatio('met, net cash', 'net cash'), tested: ratio };
   }
   return burden.gt(0)
@@ -99,14 +102,14 @@ function onBurden(
 }
 
 function onCover(
-  { words }: Shaped,
+  { words, withoutCharge }: Shaped,
   { numerator: covers, denominator: charge }: Sides,
   terms: Terms,
 ): Verdict {
   if (!charge || isMaximum(terms.operator)) return doesNotFit(terms.operator);
   if (charge.gt(0)) return compared(covers.div(charge), terms);
   const nothing = `no ${words.charge} to cover`;
-  return covers.gt(0)
+  return covers.gt(0) || withoutCharge === 'met'
     ? withoutRatio('met, no charge to cover', nothing)
     : withoutRatio('cannot be tested', `${nothing} and numerator not positive`);
 }

@@ -115,7 +115,7 @@ describe('outcomes that are no result', () => {
   test('figures in another currency than the covenant cannot be tested without a rate', () => {
     const statements = buildYear(on, { ebitda: 12, debt: 40, cash: 6 }, { currency: 'USD' });
     expect(run(buildCovenant(), statements).reason).toBe(
-      'figures in USD, covenant in EUR: no rate is recorded',
+      'figures in USD, covenant in EUR: no closing rate of USD in EUR on 31 Dec 2025 is recorded',
     );
   });
 

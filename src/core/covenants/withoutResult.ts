@@ -1,4 +1,4 @@
-/** Why a test date has no result: nothing to be tested, no figures, no common currency. */
+/** Why a test date has no result: nothing to be tested, no figures, no rate, no valuation that may be used. */
 import { isSamePeriodEnd } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { formatDay } from '../calendar/printDay.ts';
@@ -23,9 +23,7 @@ export const withoutResult = (
   inForce: LevelInForce,
   figures: Figures,
 ): Held | null =>
-  notTested(covenant, testDate, inForce.kind, figures.sides) ??
-  withoutFigures(figures, testDate) ??
-  otherCurrency(covenant, figures);
+  notTested(covenant, testDate, inForce.kind, figures.sides) ?? withoutFigures(covenant, figures, testDate);
 
 /** A day on which the agreement tests nothing; the ratio is shown all the same. */
 function notTested(
@@ -52,9 +50,14 @@ function ratioOf(sides: Sides | null): Held['tested'] {
 }
 
 /** Figures of the test date that have not come are awaited; any other gap is for a person to look at. */
-function withoutFigures({ missing, readings }: Figures, testDate: PlainDate): Held | null {
+function withoutFigures(
+  { basis }: Covenant,
+  { missing, readings }: Figures,
+  testDate: PlainDate,
+): Held | null {
+  const kind = basis === null || basis === 'management' ? '' : `${basis} `;
   if (missing.some(({ line, periodEnd }) => line === 'statement' && isSamePeriodEnd(periodEnd, testDate)))
-    return nothingHeld('awaiting figures', `figures to ${formatDay(testDate)} are not there`);
+    return nothingHeld('awaiting figures', `${kind}figures to ${formatDay(testDate)} are not there`);
   if (missing.length > 0)
     return nothingHeld('cannot be tested', `missing: ${missing.map(gapInWords).join(', ')}`);
   const refused = readings.find((reading) => reading.kind === 'not-meaningful');
@@ -66,16 +69,6 @@ function gapInWords({ line, periodEnd, months }: MissingLine): string {
   return months === 0
     ? `${what} on ${formatDay(periodEnd)}`
     : `${what} of ${months} months to ${formatDay(periodEnd)}`;
-}
-
-function otherCurrency({ currency }: Covenant, { statements }: Figures): Held | null {
-  const foreign = statements.find((statement) => statement.currency !== currency);
-  return foreign
-    ? nothingHeld(
-        'cannot be tested',
-        `figures in ${foreign.currency}, covenant in ${currency}: no rate is recorded`,
-      )
-    : null;
 }
 
 const nothingHeld = (outcome: Outcome, reason: string): Held => ({

@@ -57,19 +57,20 @@ function addBackLimit(base: Decimal, { cap, basis }: AddBackTerms): Decimal | nu
 }
 
 /**
- * The add-backs whose whole period lies within the twelve months up to a day. One that reaches further back is
- * left out: no rule says which part of it would count.
+ * The add-backs whose whole period lies within the months up to a day. One that reaches further back is left out:
+ * no rule says which part of it would count.
  *
- * @example addBacksWithinTwelveMonths([buildAddBack('2025-09-30', 2)], '2026-09-30') // => []
+ * @example addBacksWithin(12, [buildAddBack('2025-09-30', 2)], '2026-09-30') // => []
  */
-export function addBacksWithinTwelveMonths(
+export function addBacksWithin(
+  lengthInMonths: number,
   addBacks: readonly AddBack[],
   date: PlainDate,
 ): readonly AddBack[] {
   const closing = monthCount(reportingMonthEnd(date));
   return addBacks.filter(({ periodEnd, months }) => {
     const end = monthCount(reportingMonthEnd(periodEnd));
-    return end <= closing && end - months >= closing - 12;
+    return end <= closing && end - months >= closing - lengthInMonths;
   });
 }
 

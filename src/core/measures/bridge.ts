@@ -1,12 +1,20 @@
 import { ZERO, type Decimal } from '../money/decimal.ts';
 import type { InputUsed, Reading } from '../statements/reading.ts';
 
-/** One line of the way from the statements' lines to a tested amount; the lines above a subtotal add up to it. */
+export const BRIDGE_KINDS = ['figure', 'subtotal', 'add-back', 'disallowed', 'check', 'rate'] as const;
+
+/**
+ * One line of the way from the statements' lines to a tested amount; the lines above a subtotal add up to it, apart
+ * from those that stand beside the sum: a check (EBITDA as stated, by the other route) and a currency rate.
+ */
 export interface BridgeLine {
   readonly label: string;
+  /** Currency units of the covenant; of a rate, how many of them one unit is worth. */
   readonly amount: Decimal;
-  readonly kind: 'figure' | 'subtotal' | 'add-back' | 'disallowed';
+  readonly kind: (typeof BRIDGE_KINDS)[number];
   readonly inputs: readonly InputUsed[];
+  /** Of an add-back its reason, evidence and approver; of what is over the cap the cap; of a rate its source. */
+  readonly note?: string;
 }
 
 /**

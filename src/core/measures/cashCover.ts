@@ -1,23 +1,62 @@
-/** What covers debt service and fixed charges, and what they come to: methods.md A3. Paid items are positive. */
+/** Covers whose numerator is EBITDA less other cash items: methods.md A3. Paid items are positive here. */
 import type { Decimal } from '../money/decimal.ts';
+import { annualisedByMonths } from '../statements/periodLength.ts';
+import { sumOfReadings, type Reading } from '../statements/reading.ts';
+import { adjustedEbitda, type Earnings } from './adjustedEbitda.ts';
+import { annualised, annualisedRemark, type Lined } from './annualised.ts';
+import { bridgeFigure, bridgeSubtotal } from './bridge.ts';
+import type { MeasureRequest } from './definition.ts';
+import type { Measured } from './measured.ts';
+
+/** One item of a side: what it is called, and whether it adds or takes away. */
+export interface CashItem {
+  readonly label: string;
+  readonly sign: 1 | -1;
+  readonly reading: Reading;
+}
+
+/** One side of a cash cover by its items. */
+export interface CashSide {
+  readonly label: string;
+  readonly items: readonly CashItem[];
+}
 
 /**
- * Cash flow available for debt service: EBITDA less cash tax, capital expenditure that is not financed, and the
- * increase in working capital.
+ * A cover out of adjusted EBITDA and the items of its two sides, both set to a year where the agreement annualises.
  *
- * @example cashForDebtService({ ebitda: decimal(12), cashTax: decimal(2), unfundedCapex: decimal(3), workingCapitalIncrease: decimal(1) }) // => 6
+ * @example cashCover(request, { cash: { label: 'Cash', items: [] }, charges: { label: 'Charges', items: [] } }).numerator.value // => 13000000
  */
-export const cashForDebtService = ({
-  ebitda,
-  cashTax,
-  unfundedCapex,
-  workingCapitalIncrease,
-}: {
-  readonly ebitda: Decimal;
-  readonly cashTax: Decimal;
-  readonly unfundedCapex: Decimal;
-  readonly workingCapitalIncrease: Decimal;
-}): Decimal => ebitda.minus(cashTax).minus(unfundedCapex).minus(workingCapitalIncrease);
+export function cashCover(
+  request: MeasureRequest,
+  { cash, charges }: { readonly cash: CashSide; readonly charges: CashSide },
+): Measured {
+  const earnings = adjustedEbitda(request);
+  const covers = sideOf(request, cash, earnings);
+  const charge = sideOf(request, charges, null);
+  return {
+    numerator: covers.reading,
+    denominator: charge.reading,
+    earnings: annualised(request.months, '', { reading: earnings.reading, bridge: [] }).reading,
+    addBacksTaken: ofYear(request, earnings.addBacksTaken),
+    bridge: [...earnings.bridge, ...covers.bridge, ...charge.bridge],
+    remarks: annualisedRemark(request.months),
+  };
+}
+
+function sideOf({ months }: MeasureRequest, { label, items }: CashSide, earnings: Earnings | null): Lined {
+  const parts = [...(earnings ? [{ sign: 1 as const, reading: earnings.reading }] : []), ...items];
+  const reading = sumOfReadings(parts);
+  return annualised(months, `${label}, annualised`, {
+    reading,
+    bridge: [
+      ...items.flatMap((item) => bridgeFigure(item.label, item.reading, item.sign)),
+      ...bridgeSubtotal(label, reading),
+    ],
+  });
+}
+
+const ofYear = ({ months }: MeasureRequest, amount: Decimal): Decimal =>
+  months === 12 ? amount : annualisedByMonths(amount, months);
 
 /**
  * Cash interest and scheduled principal; a bullet only where the agreement counts it.
@@ -34,27 +73,3 @@ export const debtService = ({
   /** What the agreement counts of final repayments; nought where it leaves them out. */
   readonly bullet: Decimal;
 }): Decimal => cashInterest.plus(scheduledPrincipal).plus(bullet);
-
-/**
- * EBITDA before rent less capital expenditure that is not financed and cash tax, over interest, principal and rent.
- *
- * @example fixedChargeSides({ ebitda: decimal(12), rent: decimal(2), unfundedCapex: decimal(3), cashTax: decimal(1), cashInterest: decimal(2), scheduledPrincipal: decimal(4) }) // => { numerator: 10, denominator: 8 }
- */
-export const fixedChargeSides = ({
-  ebitda,
-  rent,
-  unfundedCapex,
-  cashTax,
-  cashInterest,
-  scheduledPrincipal,
-}: {
-  readonly ebitda: Decimal;
-  readonly rent: Decimal;
-  readonly unfundedCapex: Decimal;
-  readonly cashTax: Decimal;
-  readonly cashInterest: Decimal;
-  readonly scheduledPrincipal: Decimal;
-}): { readonly numerator: Decimal; readonly denominator: Decimal } => ({
-  numerator: ebitda.plus(rent).minus(unfundedCapex).minus(cashTax),
-  denominator: cashInterest.plus(scheduledPrincipal).plus(rent),
-});

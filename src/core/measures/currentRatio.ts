@@ -1,7 +1,7 @@
-import { ZERO, type Decimal } from '../money/decimal.ts';
-import { balanceAt } from '../statements/flows.ts';
+import type { Decimal } from '../money/decimal.ts';
 import { bridgeFigure } from './bridge.ts';
-import type { Measure } from './measured.ts';
+import { WITHOUT_EARNINGS, type Measure } from './measured.ts';
+import { balanceIn } from './readLines.ts';
 
 /** Current assets over current liabilities. Source: methods.md A3. */
 export const currentRatio: Measure = {
@@ -10,23 +10,24 @@ export const currentRatio: Measure = {
   unit: 'times',
   shape: 'cover',
   earningsSide: null,
+  withoutCharge: 'met',
   words: {
     subject: 'Current assets',
     otherSide: 'current liabilities',
     carrier: 'current assets',
     charge: 'current liabilities',
   },
-  measure: ({ book, date }) => {
-    const numerator = balanceAt(book, 'current_assets', date);
-    const denominator = balanceAt(book, 'current_liabilities', date);
+  measure: (request) => {
+    const numerator = balanceIn(request, 'current_assets', request.date);
+    const denominator = balanceIn(request, 'current_liabilities', request.date);
     return {
       numerator,
       denominator,
-      addBacksTaken: ZERO,
       bridge: [
         ...bridgeFigure('Current assets', numerator),
         ...bridgeFigure('Current liabilities', denominator),
       ],
+      ...WITHOUT_EARNINGS,
     };
   },
 };
@@ -47,10 +48,3 @@ export const currentLiabilitiesCounted = ({
   readonly loanTurnedCurrent: Decimal;
   readonly leavesFacilityOut: boolean;
 }): Decimal => (leavesFacilityOut ? currentLiabilities : currentLiabilities.plus(loanTurnedCurrent));
-
-/**
- * Cash and trade receivables, over current liabilities the quick ratio. Source: methods.md A3.
- *
- * @example quickAssets(decimal(6), decimal(14)) // => 20
- */
-export const quickAssets = (cash: Decimal, receivables: Decimal): Decimal => cash.plus(receivables);

@@ -1,17 +1,24 @@
 import { Decimal, ZERO } from '../money/decimal.ts';
-import { balanceAt } from '../statements/flows.ts';
+import { formatMoneyInFull } from '../money/print.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
+import type { Lined } from './annualised.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
-import type { MeasureRequest } from './definition.ts';
+import type { MeasureDefinition, MeasureRequest } from './definition.ts';
+import { balanceIn } from './readLines.ts';
 
-const BORROWINGS = [
+interface DebtLine {
+  readonly line: LineItemCode;
+  readonly label: string;
+}
+
+const SENIOR: readonly DebtLine[] = [
   { line: 'short_term_debt', label: 'Short-term debt' },
   { line: 'senior_debt', label: 'Senior debt' },
-  { line: 'junior_debt', label: 'Junior debt' },
-  { line: 'shareholder_loans', label: 'Shareholder loans' },
-] as const satisfies readonly { line: LineItemCode; label: string }[];
-const LEASES = { line: 'lease_liabilities', label: 'Lease liabilities' } as const;
+];
+const JUNIOR: DebtLine = { line: 'junior_debt', label: 'Junior debt' };
+const SHAREHOLDER_LOANS: DebtLine = { line: 'shareholder_loans', label: 'Shareholder loans' };
+const LEASES: DebtLine = { line: 'lease_liabilities', label: 'Lease liabilities' };
 
 /**
  * Net debt = debt - the cash that may be netted: unrestricted cash, up to the agreement's cap.
@@ -35,46 +42,79 @@ export function netDebt({
   return debt.minus(cashCap === null ? unrestricted : Decimal.min(unrestricted, cashCap));
 }
 
-/** A debt measure and its way from the balance sheet. */
-export interface MeasuredDebt {
-  readonly reading: Reading;
-  readonly bridge: readonly BridgeLine[];
-}
-
 /**
  * Borrowings on a day: short-term, senior and junior debt, shareholder loans, and leases where the definition
- * counts them. Shareholder loans count as debt because nothing recorded says that they are subordinated.
+ * counts them. Shareholder loans count as debt unless the agreement counts them as net worth, which says that they
+ * are subordinated; rules frozen at signing know no lease liabilities.
  *
  * Whole currency units. Missing where no debt line at all is there, or one that was carried before is left out.
  *
  * @example totalDebt(request).reading.value // => 45000000
  */
-export function totalDebt({ book, date, definition }: MeasureRequest): MeasuredDebt {
-  const lines = definition.leasesInDebt ? [...BORROWINGS, LEASES] : BORROWINGS;
-  const parts = lines.map(({ line, label }) => ({
-    label,
+export const totalDebt = (request: MeasureRequest): Lined =>
+  debtOf(request, 'Total debt', [
+    ...SENIOR,
+    JUNIOR,
+    ...(request.definition.shareholderLoansInNetWorth ? [] : [SHAREHOLDER_LOANS]),
+    ...leasesOf(request.definition),
+  ]);
+
+/**
+ * Debt that ranks first: short-term and senior debt, and leases where the definition counts them.
+ *
+ * @example seniorDebt(request).reading.value // => 45000000
+ */
+export const seniorDebt = (request: MeasureRequest): Lined =>
+  debtOf(request, 'Senior debt in all', [...SENIOR, ...leasesOf(request.definition)]);
+
+/**
+ * The loan against a property: short-term and senior debt, at the rate of the day.
+ *
+ * @example loanOn(request).reading.value // => 45000000
+ */
+export const loanOn = (request: MeasureRequest): Lined => debtOf(atClosingRate(request), 'Loan', SENIOR);
+
+/**
+ * The same request with debt at the rate of the day, whatever leverage takes: for tests that hold no earnings.
+ *
+ * @example atClosingRate(request).definition.debtRate // => 'closing'
+ */
+export const atClosingRate = (request: MeasureRequest): MeasureRequest =>
+  request.definition.debtRate === 'closing'
+    ? request
+    : { ...request, definition: { ...request.definition, debtRate: 'closing' } };
+
+const leasesOf = ({ leasesInDebt, accounting }: MeasureDefinition): readonly DebtLine[] =>
+  leasesInDebt && accounting === 'current' ? [LEASES] : [];
+
+function debtOf(request: MeasureRequest, label: string, lines: readonly DebtLine[]): Lined {
+  const { date, definition } = request;
+  const parts = lines.map(({ line, label: lineLabel }) => ({
+    label: lineLabel,
     sign: 1 as const,
-    reading: balanceAt(book, line, date, 'optional'),
+    reading: balanceIn(request, line, date, 'optional', definition.debtRate),
   }));
-  const isGiven = parts.some(({ reading }) => reading.kind === 'value' && reading.inputs.length > 0);
-  const reading = isGiven ? sumOfReadings(parts) : balanceAt(book, 'senior_debt', date);
+  const isGiven = parts.some(({ reading }) => reading.kind !== 'missing' && reading.inputs.length > 0);
+  const reading = isGiven ? sumOfReadings(parts) : balanceIn(request, 'senior_debt', date);
   return {
     reading,
     bridge: [
-      ...parts.flatMap(({ label, reading }) => bridgeFigure(label, reading)),
-      ...bridgeSubtotal('Total debt', reading),
+      ...parts.flatMap((part) => bridgeFigure(part.label, part.reading)),
+      ...bridgeSubtotal(label, reading),
     ],
   };
 }
 
 /**
- * Total debt less unrestricted cash, as far as the definition nets it; the balance line `cash` is unrestricted.
+ * Total debt less unrestricted cash, as far as the definition nets it; the balance line `cash` is unrestricted. The
+ * cap on netting is in the covenant's currency.
  *
  * @example netDebtOn(request).reading.value // => 39000000
  */
-export function netDebtOn(request: MeasureRequest): MeasuredDebt {
+export function netDebtOn(request: MeasureRequest): Lined {
+  const { date, definition } = request;
   const debt = totalDebt(request);
-  const cash = balanceAt(request.book, 'cash', request.date);
+  const cash = balanceIn(request, 'cash', date, 'required', definition.debtRate);
   const both = sumOfReadings([
     { sign: 1, reading: debt.reading },
     { sign: -1, reading: cash },
@@ -85,7 +125,7 @@ export function netDebtOn(request: MeasureRequest): MeasuredDebt {
     debt: debt.reading.value,
     cash: cash.value,
     restrictedCash: ZERO,
-    cashCap: request.definition.cashNettingCap,
+    cashCap: definition.cashNettingCap,
   });
   const reading: Reading = { kind: 'value', value, inputs: both.inputs };
   const netted: BridgeLine = {
@@ -93,6 +133,9 @@ export function netDebtOn(request: MeasureRequest): MeasuredDebt {
     amount: value.minus(debt.reading.value),
     kind: 'figure',
     inputs: cash.inputs,
+    ...(definition.cashNettingCap?.lt(cash.value)
+      ? { note: `of ${formatMoneyInFull(cash.value)}, the agreement nets no more` }
+      : {}),
   };
   return { reading, bridge: [...debt.bridge, netted, ...bridgeSubtotal('Net debt', reading)] };
 }

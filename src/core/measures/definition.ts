@@ -83,10 +83,30 @@ export interface CurrencyRate {
   readonly source: string;
 }
 
+/** The way into the currency of a covenant, with a record of the rates that were taken. */
+export interface Translation {
+  /** The covenant's. */
+  readonly currency: string;
+  /** The rate of a currency: 'closing' of a day (months 0), 'average' of the months up to it; null where none is recorded. */
+  readonly rateOf: (
+    kind: CurrencyRate['kind'],
+    from: string,
+    periodEnd: PlainDate,
+    months: number,
+  ) => Decimal | null;
+  /** Each rate that was asked for and found, once, in the order of asking. */
+  readonly used: () => readonly CurrencyRate[];
+}
+
 /** What a measure is computed from. */
 export interface MeasureRequest {
   readonly book: StatementBook;
   readonly date: PlainDate;
   readonly definition: MeasureDefinition;
+  /** In the currency of the covenant. */
   readonly addBacks: readonly AddBack[];
+  /** Months that flows are taken over: twelve, fewer where the agreement annualises its first tests. */
+  readonly months: number;
+  /** Into the currency of the covenant. */
+  readonly translation: Translation;
 }

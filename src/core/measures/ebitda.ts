@@ -1,11 +1,14 @@
 /** EBITDA, built from the bottom of the income statement and held against the way down from revenue. */
 import type { PlainDate } from '../calendar/plainDate.ts';
-import { ZERO, type Decimal } from '../money/decimal.ts';
-import { lastTwelveMonths } from '../statements/flows.ts';
+import type { Decimal } from '../money/decimal.ts';
+import { formatMoneyInFull } from '../money/print.ts';
+import { lastTwelveMonths, type Presence } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
+import type { MeasureRequest } from './definition.ts';
+import { flowIn } from './readLines.ts';
 
 /** Amounts of one period, costs positive. */
 export interface EarningsFromBottom {
@@ -18,8 +21,7 @@ export interface EarningsFromBottom {
 /**
  * EBITDA up from net income: net income + income tax + net finance costs + depreciation and amortisation.
  *
- * All in one currency unit. Impairment is not added: agreements that add non-cash charges list them as add-backs.
- * Source: methods.md A3.
+ * All in one currency unit. Impairment is added only where the agreement says so. Source: methods.md A3.
  *
  * @example ebitdaFromNetIncome({ netIncome: decimal('4.2'), incomeTax: decimal('1.6'), netFinanceCosts: decimal('2.5'), depreciationAndAmortisation: decimal('3.7') }) // => 12
  */
@@ -67,7 +69,7 @@ export function routeDifference({
   const difference = fromRevenue.minus(fromNetIncome);
   if (difference.isZero()) return { difference, name: null };
   const kind = difference.lt(0) ? 'income' : 'cost';
-  return { difference, name: `other ${kind} ${difference.abs().toFixed()} below gross profit` };
+  return { difference, name: `other ${kind} ${formatMoneyInFull(difference.abs())} below gross profit` };
 }
 
 export interface MeasuredEbitda {
@@ -75,78 +77,72 @@ export interface MeasuredEbitda {
   readonly bridge: readonly BridgeLine[];
 }
 
+interface EbitdaPart {
+  readonly line: LineItemCode;
+  readonly label: string;
+  readonly sign: 1 | -1;
+  readonly presence: Presence;
+}
+
+const PARTS: readonly EbitdaPart[] = [
+  { line: 'net_income', label: 'Net income', sign: 1, presence: 'required' },
+  { line: 'income_tax', label: 'Income tax', sign: 1, presence: 'required' },
+  { line: 'interest_expense', label: 'Interest expense', sign: 1, presence: 'required' },
+  { line: 'interest_income', label: 'Interest income', sign: -1, presence: 'optional' },
+  {
+    line: 'depreciation_and_amortisation',
+    label: 'Depreciation and amortisation',
+    sign: 1,
+    presence: 'required',
+  },
+];
+const WITH_IMPAIRMENT: readonly EbitdaPart[] = [
+  ...PARTS,
+  { line: 'impairment', label: 'Impairment', sign: 1, presence: 'optional' },
+];
+
 /**
- * EBITDA of the twelve months up to a period end, from net income, with its bridge.
+ * EBITDA of the twelve months up to a period end, from net income, with its bridge, in the statements' currency.
  *
  * Whole currency units. Missing names every line and period that is not there.
  *
  * @example ebitdaOfTwelveMonths(book, '2026-09-30').ebitda.value // => 13000000
  */
 export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): MeasuredEbitda {
-  const parts = [
-    { label: 'Net income', sign: 1 as const, reading: lastTwelveMonths(book, 'net_income', date) },
-    { label: 'Income tax', sign: 1 as const, reading: lastTwelveMonths(book, 'income_tax', date) },
-    {
-      label: 'Interest expense',
-      sign: 1 as const,
-      reading: lastTwelveMonths(book, 'interest_expense', date),
-    },
-    {
-      label: 'Interest income',
-      sign: -1 as const,
-      reading: lastTwelveMonths(book, 'interest_income', date, 'optional'),
-    },
-    {
-      label: 'Depreciation and amortisation',
-      sign: 1 as const,
-      reading: lastTwelveMonths(book, 'depreciation_and_amortisation', date),
-    },
-  ];
-  // Kept under the line it starts from: several covenants of a borrower rest on the same EBITDA.
-  const ebitda = book.kept('EBITDA', 'net_income', date, () => sumOfReadings(parts));
+  const read = ({ line, presence }: EbitdaPart) => lastTwelveMonths(book, line, date, presence);
+  return addedUp(PARTS, read, (sum) =>
+    // Kept under the line it starts from: several covenants of a borrower rest on the same EBITDA.
+    book.kept('EBITDA', 'net_income', date, sum),
+  );
+}
+
+/**
+ * EBITDA as a covenant takes it before any add-back: over its months, in its currency, impairment added where the
+ * agreement adds it.
+ *
+ * @example ebitdaIn(request).ebitda.value // => 13000000
+ */
+export function ebitdaIn(request: MeasureRequest): MeasuredEbitda {
+  const parts = request.definition.impairmentAddedBack ? WITH_IMPAIRMENT : PARTS;
+  return addedUp(
+    parts,
+    ({ line, presence }) => flowIn(request, line, presence),
+    (sum) => sum(),
+  );
+}
+
+function addedUp(
+  parts: readonly EbitdaPart[],
+  read: (part: EbitdaPart) => Reading,
+  keep: (sum: () => Reading) => Reading,
+): MeasuredEbitda {
+  const lines = parts.map((part) => ({ ...part, reading: read(part) }));
+  const ebitda = keep(() => sumOfReadings(lines));
   return {
     ebitda,
     bridge: [
-      ...parts.flatMap(({ label, sign, reading }) => bridgeFigure(label, reading, sign)),
+      ...lines.flatMap(({ label, sign, reading }) => bridgeFigure(label, reading, sign)),
       ...bridgeSubtotal('EBITDA', ebitda),
     ],
   };
-}
-
-const OPERATING_COSTS = [
-  'sga',
-  'staff_costs',
-  'research_development',
-  'rent_expense',
-  'other_operating_expense',
-] as const satisfies readonly LineItemCode[];
-
-/**
- * EBITDA of twelve months from revenue less EBITDA from net income, by name; null where the way down from revenue is
- * not there. Source: methods.md A3.
- *
- * @example routesOfTwelveMonths(book, '2026-09-30') // => null
- */
-export function routesOfTwelveMonths(book: StatementBook, date: PlainDate): RouteDifference | null {
-  const { ebitda } = ebitdaOfTwelveMonths(book, date);
-  const [revenue, costOfSales] = [
-    lastTwelveMonths(book, 'revenue', date),
-    lastTwelveMonths(book, 'cogs', date),
-  ];
-  const operating = sumOfReadings(
-    OPERATING_COSTS.map((line) => ({
-      sign: 1 as const,
-      reading: lastTwelveMonths(book, line, date, 'optional'),
-    })),
-  );
-  if (ebitda.kind !== 'value' || revenue.kind !== 'value' || costOfSales.kind !== 'value') return null;
-  if (operating.kind !== 'value' || operating.value.eq(ZERO)) return null;
-  return routeDifference({
-    fromRevenue: ebitdaFromRevenue({
-      revenue: revenue.value,
-      costOfSales: costOfSales.value,
-      operatingCosts: operating.value,
-    }),
-    fromNetIncome: ebitda.value,
-  });
 }

@@ -1,35 +1,75 @@
 /** Figures in another currency: methods.md A3 (income at average rates, balance sheet at the closing rate). */
-import { Decimal } from '../money/decimal.ts';
+import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import { addDays, monthCount, type PlainDate } from '../calendar/plainDate.ts';
+import { formatDay } from '../calendar/printDay.ts';
+import type { BridgeLine } from './bridge.ts';
+import type { CurrencyRate, Translation } from './definition.ts';
 
-/** What a burden over earnings stands on, in the currency of the agreement. */
-export interface TranslatedSides {
-  readonly numerator: Decimal;
-  readonly denominator: Decimal;
+/**
+ * Opens the recorded rates into one currency. Of two rates for the same period the later one counts; a rate the
+ * other way round is not turned, because the average of a turned rate is another one.
+ *
+ * @example translationInto('EUR', []).rateOf('closing', 'GBP', '2026-09-30', 0) // => null
+ */
+export function translationInto(currency: string, rates: readonly CurrencyRate[]): Translation {
+  const used = new Set<CurrencyRate>();
+  return {
+    currency,
+    rateOf: (kind, from, periodEnd, months) => {
+      const found = rates.findLast(
+        (rate) =>
+          rate.to === currency &&
+          rate.from === from &&
+          rate.kind === kind &&
+          isSamePeriodEnd(rate.periodEnd, periodEnd) &&
+          (kind === 'closing' || monthsOf(rate) === months),
+      );
+      if (!found) return null;
+      used.add(found);
+      return found.rate;
+    },
+    used: () => [...used],
+  };
 }
 
-/**
- * Debt at the closing rate, earnings at the average rate: a gap opens between the two with no economic change. A
- * constant-rate clause gives the average rate for both. Rates are units of the agreement's currency for one unit.
- *
- * @example translatedSides({ debt: decimal(30), earnings: decimal(10), debtRate: decimal('1.15'), earningsRate: decimal('1.08') }) // => { numerator: 34.5, denominator: 10.8 }
- */
-export const translatedSides = ({
-  debt,
-  earnings,
-  debtRate,
-  earningsRate,
-}: {
-  readonly debt: Decimal;
-  readonly earnings: Decimal;
-  readonly debtRate: Decimal;
-  readonly earningsRate: Decimal;
-}): TranslatedSides => ({ numerator: debt.times(debtRate), denominator: earnings.times(earningsRate) });
+/** Whole months that an average is of: from the month of its first day to that of its last. */
+const monthsOf = ({ periodStart, periodEnd }: CurrencyRate): number =>
+  monthCount(reportingMonthEnd(periodEnd)) - monthCount(dayBefore(periodStart));
+
+const dayBefore = (day: PlainDate): PlainDate => reportingMonthEnd(addDays(day, -1));
 
 /**
- * Twelve months in another currency: the sum of the quarters, each at its own average rate.
+ * 'average of GBP in EUR over 3 months to 30 Sep 2026', 'closing rate of GBP in EUR on 30 Sep 2026'.
  *
- * @example translatedQuarters([{ flow: decimal(10), averageRate: decimal('1.1') }, { flow: decimal(20), averageRate: decimal('1.2') }]) // => 35
+ * @example rateInWords({ kind: 'closing', from: 'GBP', to: 'EUR', periodEnd: '2026-09-30', months: 0 }) // => 'closing rate of GBP in EUR on 30 Sep 2026'
  */
-export const translatedQuarters = (
-  quarters: readonly { readonly flow: Decimal; readonly averageRate: Decimal }[],
-): Decimal => Decimal.sum(0, ...quarters.map(({ flow, averageRate }) => flow.times(averageRate)));
+export const rateInWords = ({
+  kind,
+  from,
+  to,
+  periodEnd,
+  months,
+}: {
+  readonly kind: CurrencyRate['kind'];
+  readonly from: string;
+  readonly to: string;
+  readonly periodEnd: PlainDate;
+  readonly months: number;
+}): string =>
+  kind === 'closing'
+    ? `closing rate of ${from} in ${to} on ${formatDay(periodEnd)}`
+    : `average rate of ${from} in ${to} over ${months} months to ${formatDay(periodEnd)}`;
+
+/**
+ * The rates that were taken, each with its source, as lines under the way to the tested amount.
+ *
+ * @example rateLines(translationInto('EUR', [])) // => []
+ */
+export const rateLines = ({ used }: Translation): readonly BridgeLine[] =>
+  used().map((rate) => ({
+    label: rateInWords({ ...rate, months: monthsOf(rate) }),
+    amount: rate.rate,
+    kind: 'rate',
+    inputs: [],
+    note: rate.source,
+  }));

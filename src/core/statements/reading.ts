@@ -18,6 +18,8 @@ export interface InputUsed {
   readonly amount: Decimal;
   readonly periodEnd: PlainDate;
   readonly months: number;
+  /** What one unit of the statement's currency counts in the covenant's; left out where they are the same. */
+  readonly rate?: Decimal;
 }
 
 /** A measured amount or ratio. There is no number where there is no meaning. */
@@ -58,7 +60,7 @@ export function sumOfReadings(parts: readonly SignedReading[]): Reading {
  * @example sumOfInputs([{ sign: 1, amount: decimal(84) }, { sign: -1, amount: decimal(60) }]) // => 24
  */
 export const sumOfInputs = (inputs: readonly InputUsed[]): Decimal =>
-  inputs.reduce((sum, { sign, amount }) => added(sum, sign, amount), ZERO);
+  inputs.reduce((sum, { sign, amount, rate }) => added(sum, sign, rate ? amount.times(rate) : amount), ZERO);
 
 const added = (sum: Decimal, sign: 1 | -1, amount: Decimal): Decimal =>
   sign === 1 ? sum.plus(amount) : sum.minus(amount);

@@ -2,6 +2,7 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import {
+  basisRank,
   inForceByPeriodEnd,
   inForce,
   knownStatements,
@@ -10,7 +11,7 @@ import {
 } from './currentStatements.ts';
 import type { LineItemCode } from './lineItems.ts';
 import type { Reading } from './reading.ts';
-import type { Statement, StatementScope } from './statement.ts';
+import type { Statement, StatementBasis, StatementScope } from './statement.ts';
 
 /**
  * Statements of one scope, every version of a period: flows over several versions need the superseded ones too, to
@@ -34,6 +35,8 @@ export interface StatementBook {
   readonly isCarriedBy: (line: LineItemCode, periodEnd: PlainDate) => boolean;
   /** Whether a later period was out already when this version came: then it restates, before that it closes the books. */
   readonly isRestating: (version: Statement) => boolean;
+  /** The same book with only the accounts that are founded at least as well: audited, or reviewed and audited. */
+  readonly onBasis: (basis: StatementBasis) => StatementBook;
   /** What `read` gives for a line on a day by one route, kept. */
   readonly kept: (route: string, line: LineItemCode, date: PlainDate, read: () => Reading) => Reading;
 }
@@ -97,6 +100,12 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
     },
     isRestating: remembering((version: Statement) =>
       statements.some((other) => isLaterPeriodKnownWith(version, other)),
+    ),
+    onBasis: remembering((basis: StatementBasis) =>
+      bookOf(
+        statements.filter((statement) => basisRank(statement.basis) >= basisRank(basis)),
+        fiscalYearEndMonth,
+      ),
     ),
     kept: keptReadings(),
   };

@@ -18,4 +18,5 @@ export const inputUsed = z.object({
   amount,
   periodEnd: day,
   months: z.number(),
+  rate: amount.optional(),
 });

@@ -24,12 +24,24 @@ const COLUMNS: readonly SheetColumn[] = [
 ];
 
 /** What stands on each side of a measure. */
-const SIDES: Readonly<Record<CovenantView['measure'], readonly [falls: string, rises: string | null]>> = {
+const SIDES: Readonly<
+  Record<CovenantView['measure'], readonly [falls: string | null, rises: string | null]>
+> = {
   'total-leverage': ['EBITDA', 'Debt'],
+  'senior-leverage': ['EBITDA', 'Senior debt'],
   'net-leverage': ['EBITDA', 'Net debt'],
   'interest-cover': ['EBITDA', 'Interest'],
+  'debt-service-cover': ['EBITDA', 'Debt service'],
+  'fixed-charge-cover': ['EBITDA', 'Fixed charges'],
+  'loan-to-value': ['Value', 'Loan'],
+  'debt-yield': ['Net operating income', 'Loan'],
   'current-ratio': ['Current assets', 'Current liabilities'],
+  'quick-ratio': ['Quick assets', 'Current liabilities'],
+  'tangible-net-worth': ['Tangible net worth', null],
+  gearing: ['Net worth', 'Debt'],
   'minimum-liquidity': ['Liquidity', null],
+  'minimum-ebitda': ['EBITDA', null],
+  'capital-expenditure': [null, 'Capital expenditure'],
 };
 
 export function breakEvenSection(material: SheetMaterial): readonly SheetBlock[] {
@@ -56,21 +68,35 @@ function breakEvenRow(material: SheetMaterial, covenant: CovenantView): readonly
   const { headroom } = covenant;
   const [falls, rises] = SIDES[covenant.measure];
   const nm = test?.reason ?? 'n.m.';
+  const ownSide = { share: headroom?.mayFall ?? null, money: headroom?.moneyLeft ?? null };
+  const otherSide = { share: headroom?.otherSideShare ?? null, money: headroom?.otherSideMayRise ?? null };
   const later = covenant.laterLevels.find(({ outcome }) => isNotMet(outcome));
   const agreed = test && terms ? laterLevels(terms.levels, plainDate(test.testDate)) : [];
   return [
     textCell(covenant.name),
-    textCell(falls),
-    shareOrAbsent(headroom?.mayFall ?? null, nm),
-    moneyOrAbsent(covenant.currency, headroom?.moneyLeft ?? null, 'n.m.'),
-    rises === null ? absent('') : textCell(rises),
-    shareOrAbsent(headroom?.otherSideShare ?? null, rises === null ? '' : 'n.m.'),
-    moneyOrAbsent(covenant.currency, headroom?.otherSideMayRise ?? null, rises === null ? '' : 'n.m.'),
+    ...sideCells(falls, covenant.currency, ownSide, nm),
+    ...sideCells(
+      rises,
+      covenant.currency,
+      falls === null ? ownSide : otherSide,
+      falls === null ? nm : 'n.m.',
+    ),
     laterCell(covenant, later, agreed.length > 0),
     later ? dayCell(later.from) : absent(''),
     notRecorded,
   ];
 }
+
+/** What may move, by which share and by how much money; empty where nothing stands on that side. */
+const sideCells = (
+  name: string | null,
+  currency: string,
+  { share, money }: { readonly share: string | null; readonly money: string | null },
+  nm: string,
+): readonly SheetCell[] =>
+  name === null
+    ? [absent(''), absent(''), absent('')]
+    : [textCell(name), shareOrAbsent(share, nm), moneyOrAbsent(currency, money, 'n.m.')];
 
 function laterCell(
   covenant: CovenantView,

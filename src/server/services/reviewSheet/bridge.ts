@@ -1,11 +1,12 @@
 /** Section 9: the way from reported to covenant EBITDA, each add-back with its evidence, the cap, the source cells. */
 import type { BridgeRow, CovenantView } from '../../../contracts/borrowers.ts';
 import type { SheetBlock, SheetCell, SheetColumn } from '../../../contracts/reviewSheet.ts';
-import { plainDate } from '../../../core/calendar/plainDate.ts';
+import { plainDate, type PlainDate } from '../../../core/calendar/plainDate.ts';
 import { dayText } from '../../../core/calendar/printDay.ts';
 import type { AddBack, Covenant } from '../../../core/covenants/covenant.ts';
 import { testedInWords } from '../../../core/covenants/wording.ts';
-import { addBacksWithinTwelveMonths, allowAddBacks } from '../../../core/measures/addBacks.ts';
+import { addBacksWithin, allowAddBacks } from '../../../core/measures/addBacks.ts';
+import { monthsOfFlow } from '../../../core/measures/annualised.ts';
 import { Decimal, decimal } from '../../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../../core/money/print.ts';
 import { absent, amountCell, notRecorded, textCell } from './cells.ts';
@@ -66,7 +67,7 @@ const beginsWith = (rows: readonly BridgeRow[], start: readonly BridgeRow[]): bo
 function bridgeBlocks(material: SheetMaterial, bridge: Bridge): readonly SheetBlock[] {
   const { covenant, testDate, rows, alsoFor } = bridge;
   const terms = termsOf(material, covenant);
-  const recorded = terms ? addBacksWithinTwelveMonths(terms.addBacks, plainDate(testDate)) : [];
+  const recorded = terms ? addBacksOn(terms, plainDate(testDate)) : [];
   const addBackRows = rows.filter(({ kind }) => kind === 'add-back');
   return [
     {
@@ -86,6 +87,10 @@ function bridgeBlocks(material: SheetMaterial, bridge: Bridge): readonly SheetBl
   ];
 }
 
+/** Over the months of the test, which are fewer where the agreement annualises the first ones. */
+const addBacksOn = (terms: Covenant, testDate: PlainDate): readonly AddBack[] =>
+  addBacksWithin(monthsOfFlow(terms.definition, terms, testDate), terms.addBacks, testDate);
+
 /** The add-backs of a bridge stand in the order in which they are recorded. */
 function recordedOf(
   row: BridgeRow,
@@ -101,19 +106,29 @@ function bridgeRow(material: SheetMaterial, row: BridgeRow, addBack: AddBack | n
     textCell(row.label),
     amountCell(decimal(row.amount)),
     textCell(kindText(row, addBack)),
-    row.kind === 'add-back' ? (addBack ? textCell(evidenceText(addBack)) : notRecorded) : absent(''),
+    row.kind === 'add-back'
+      ? addBack
+        ? textCell(evidenceText(addBack))
+        : notRecorded
+      : absent(row.note ?? ''),
     row.sources.length > 0 ? referencesCell(material.figureSources, row.sources) : absent(''),
   ];
 }
 
 function kindText({ kind }: BridgeRow, addBack: AddBack | null): string {
   if (kind === 'disallowed') return 'over the cap';
+  if (kind === 'check') return 'beside, not in the sum';
   if (kind !== 'add-back') return kind === 'subtotal' ? 'subtotal' : 'reported';
   return addBack ? `add-back, ${addBack.capped ? 'capped' : 'not capped'}` : 'add-back';
 }
 
-const evidenceText = ({ reason, months, periodEnd }: AddBack): string =>
-  `${reason === '' ? 'no evidence recorded' : reason}; ${months} months to ${dayText(periodEnd)}`;
+const evidenceText = ({ reason, evidence, approvedBy, months, periodEnd }: AddBack): string =>
+  [
+    reason === '' ? 'no reason recorded' : reason,
+    evidence === '' ? 'no evidence recorded' : evidence,
+    approvedBy === null ? 'not approved by a second person yet' : `approved by ${approvedBy}`,
+    `${months} months to ${dayText(periodEnd)}`,
+  ].join('; ');
 
 /** 'Cap 20 % of EBITDA before the capped add-backs: 3.9m. Capped add-backs 2.5m, taken 2.5m: 62.4 % of the cap used.' */
 function capLine(

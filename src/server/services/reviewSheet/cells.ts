@@ -2,14 +2,12 @@
 import type { FigureCell, SheetCell } from '../../../contracts/reviewSheet.ts';
 import { NOT_RECORDED } from '../../../contracts/reviewSheet.ts';
 import type { MeasureUnit } from '../../../core/measures/measure.ts';
+import { figureInUnit, levelInUnit } from '../../../core/measures/printUnit.ts';
 import { dayText } from '../../../core/calendar/printDay.ts';
 import { decimal, type Decimal, ZERO } from '../../../core/money/decimal.ts';
 import {
-  formatLevel,
   formatMoney,
   formatMoneyInFull,
-  formatMoneyLevel,
-  formatRatio,
   formatScore,
   formatShare,
   placesThatShowTheSide,
@@ -33,19 +31,20 @@ export const testedCell = (
   tested: Decimal,
   level: Decimal | null,
 ): FigureCell =>
+  unit === 'money'
+    ? moneyCell(currency, tested, level)
+    : figure(unit, tested, placesOf(unit, tested, level), figureInUnit(unit, tested, { beside: level }));
+
+/** Decimals that show the side of the level, of a share those of its per cent. */
+const placesOf = (unit: 'times' | 'share', tested: Decimal, level: Decimal | null): number =>
   unit === 'times'
-    ? figure('times', tested, placesThatShowTheSide(tested, level, 2), formatRatio(tested, { beside: level }))
-    : moneyCell(currency, tested, level);
+    ? placesThatShowTheSide(tested, level, 2)
+    : placesThatShowTheSide(tested.times(100), level && level.times(100), 1);
 
 /** A level in the agreement's words: 'at most 3.50x'. */
 export function levelCell({ unit }: Measured, operator: string, level: Decimal): FigureCell {
-  const isRatio = unit === 'times';
-  const cell = figure(
-    isRatio ? 'times' : 'money',
-    level,
-    isRatio ? Math.max(2, level.dp()) : level.dp(),
-    isRatio ? formatLevel(level) : formatMoneyLevel(level),
-  );
+  const places = { times: Math.max(2, level.dp()), share: Math.max(1, level.dp() - 2), money: level.dp() };
+  const cell = figure(unit, level, places[unit], levelInUnit(unit, level));
   return { ...cell, before: operator, text: `${operator} ${cell.text}` };
 }
 

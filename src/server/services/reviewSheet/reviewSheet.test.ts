@@ -250,7 +250,9 @@ test('the bridge leads from net income to covenant EBITDA with cap, evidence and
     ['Restructuring', '0.5', 'add-back, capped'],
     ['Adjusted EBITDA', '10.5', 'subtotal'],
   ]);
-  expect(rows[5]?.['evidence']?.text).toBe('plant closure; 3 months to 31 Dec 2025');
+  expect(rows[5]?.['evidence']?.text).toBe(
+    'plant closure; board paper of March; not approved by a second person yet; 3 months to 31 Dec 2025',
+  );
   expect(rows[3]?.['cells']?.text).toBe("Figures 2025.xlsx: 'P&L ''25'!D6, D7");
   expect(textsOf(sheet, 9)).toEqual([
     'Cap on add-backs 25\u00a0% of EBITDA before the capped add-backs: EUR 3. Capped add-backs 1, taken 1: 20.0\u00a0% of the cap used.',

@@ -3,7 +3,8 @@ import type { CovenantView, SourceLink } from '../../../contracts/borrowers.ts';
 import type { CellReference, SheetCell, SheetSource } from '../../../contracts/reviewSheet.ts';
 import { plainDate, type PlainDate } from '../../../core/calendar/plainDate.ts';
 import { dayText } from '../../../core/calendar/printDay.ts';
-import { addBacksWithinTwelveMonths } from '../../../core/measures/addBacks.ts';
+import { addBacksWithin } from '../../../core/measures/addBacks.ts';
+import { monthsOfFlow } from '../../../core/measures/annualised.ts';
 import type { FigureSourceRecord } from '../../db/repositories/reviewSheets.ts';
 import { absent } from './cells.ts';
 import { shownTest, termsOf, type SheetMaterial } from './material.ts';
@@ -127,7 +128,8 @@ function addBackSources(
 ): readonly SheetSource[] {
   const terms = termsOf(material, covenant);
   if (!terms || !covenant.bridge.some(({ kind }) => kind === 'add-back')) return [];
-  return addBacksWithinTwelveMonths(terms.addBacks, testDate).map((addBack) => ({
+  const months = monthsOfFlow(terms.definition, terms, testDate);
+  return addBacksWithin(months, terms.addBacks, testDate).map((addBack) => ({
     usedIn: covenant.name,
     line: `Add-back: ${addBack.label}`,
     period: periodText(addBack.months, addBack.periodEnd),
