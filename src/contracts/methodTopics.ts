@@ -5,6 +5,9 @@
 export const METHOD_TOPICS = {
   'twelve-months': 'How twelve months are read',
   headroom: 'How headroom is computed',
+  'just-passing-patterns': 'How tests near the limit are read',
+  'book-pattern': 'How the book’s own test is made',
+  'leading-digits': 'How leading digits are tested',
   'why-it-moved': 'How a change is split into its causes',
 } as const;
 

@@ -2,6 +2,13 @@
  * Fixed values of the methods that a method page prints beside those of the policy. Nobody changes them on a screen:
  * a new value is a new method version. Whoever writes a page adds the lines that it names.
  */
+import { BOOK_PATTERN_SETTINGS, LOW_POWER_BELOW, SIGNIFICANCE } from './patterns/bookPattern.ts';
+import { FEWEST_BORROWERS } from './patterns/bookParts.ts';
+import { NEAR_LINE } from './patterns/headroomGrid.ts';
+import { FEWEST_NEAR_LIMIT, NEAR_LIMIT } from './patterns/nearLimit.ts';
+import { FEWEST_NEAR } from './patterns/nearLineEvidence.ts';
+import { FEWEST_PEERS, LARGEST_MEAN_FDR } from './patterns/nearLineRanking.ts';
+import { FEWEST_AMOUNTS } from './patterns/statementDigits.ts';
 import { QUALITY_TABLE } from './quality/qualityTable.ts';
 
 export interface MethodSetting {
@@ -40,6 +47,36 @@ export const METHOD_SETTINGS = {
     label: 'Quarter ends in the headline',
     value: String(QUALITY_TABLE.headlineQuarters),
   },
+  'patterns.nearLine': {
+    label: 'Near the limit',
+    value: `${percent(NEAR_LINE.band)} of the level on the passing side, ${percent(NEAR_LINE.gap)} on the failing side`,
+  },
+  'patterns.fewestNear': { label: 'Fewest tests near the line', value: String(FEWEST_NEAR) },
+  'patterns.fewestPeers': {
+    label: 'Fewest covenants of a sector that are fitted by themselves',
+    value: String(FEWEST_PEERS),
+  },
+  'patterns.largestMeanFdr': {
+    label: 'Largest mean local false-discovery rate of a list',
+    value: percent(LARGEST_MEAN_FDR),
+  },
+  'patterns.significance': { label: 'Level of the one-sided tests', value: percent(SIGNIFICANCE) },
+  'patterns.widths': {
+    label: 'Intervals, the headline first',
+    value: BOOK_PATTERN_SETTINGS.widths.map(percent).join(', '),
+  },
+  'patterns.placebos': {
+    label: 'Placebo points',
+    value: BOOK_PATTERN_SETTINGS.placeboPoints.map(percent).join(', '),
+  },
+  'patterns.fewestNearLimit': {
+    label: 'Fewest tests near the limit',
+    value: `${FEWEST_NEAR_LIMIT} within ${percent(NEAR_LIMIT)} of the level`,
+  },
+  'patterns.fewestBorrowers': { label: 'Fewest borrowers of a part', value: String(FEWEST_BORROWERS) },
+  'patterns.lowPowerBelow': { label: 'Low power below', value: `${LOW_POWER_BELOW} tests` },
+  'patterns.draws': { label: 'Draws of borrowers', value: String(BOOK_PATTERN_SETTINGS.draws) },
+  'patterns.fewestAmounts': { label: 'Fewest amounts for a digit test', value: String(FEWEST_AMOUNTS) },
 } as const satisfies Record<string, MethodSetting>;
 
 export type MethodSettingKey = keyof typeof METHOD_SETTINGS;

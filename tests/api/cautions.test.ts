@@ -34,6 +34,12 @@ test('an alert carries all four cautions', async () => {
   for (const caution of CAUTIONS) expect(text).toContain(caution);
 });
 
+test('the book carries all four cautions', async () => {
+  const reader = await signInAs('auditor');
+  const text = textOf(await (await reader.send('/book')).text());
+  for (const caution of CAUTIONS) expect(text).toContain(caution);
+});
+
 test('the watchlist carries all four cautions', async () => {
   const reader = await signInAs('auditor');
   const text = textOf(await (await reader.send('/watchlist')).text());

@@ -44,6 +44,7 @@ async function addressesFor(page: Page): Promise<string[]> {
     '/watchlist',
     '/borrowers',
     '/imports',
+    '/book',
     '/audit-log',
     '/desk-settings/runs',
     '/account',
@@ -183,6 +184,7 @@ test('an administrator without another role sees no borrower', async () => {
     ['/borrowers', 'read borrowers'],
     ['/watchlist', 'read the watchlist'],
     ['/imports', 'read imports'],
+    ['/book', 'read the book'],
   ] as const) {
     await visit(page, address);
     await page.getByText(`Your role may not ${what}`).waitFor();

@@ -55,6 +55,13 @@ describe('rows of a covenant', () => {
     expect(removedRows(rows)).toEqual({ waived: 1, reset: 1, cured: 1, 'first test': 1 });
   });
 
+  test('leave out a test that meeting the next one cured', () => {
+    const deemed = testOn('2026-03-31', { outcome: 'cured', underlyingOutcome: 'not met' });
+    const rows = rowsOf([testOn('2025-12-31'), deemed, testOn('2026-06-30')]);
+    expect(rows.map(({ removal }) => removal)).toEqual(['first test', 'cured', null]);
+    expect(rows.map(({ metBefore }) => metBefore)).toEqual([0, 1, 0]);
+  });
+
   test('count the tests met in a row before each, a waived one as not met', () => {
     const rows = rowsOf([
       testOn('2025-09-30'),

@@ -40,7 +40,7 @@ export interface CovenantHistory {
   readonly tests: readonly CovenantTest[];
   /** Test dates that were the first after an amendment of the level. */
   readonly resetOn: ReadonlySet<PlainDate>;
-  /** Test dates for which an equity cure was paid in. */
+  /** Test dates for which an equity cure was paid in, whether it cured or not; a deemed cure says so by its outcome. */
   readonly curedOn: ReadonlySet<PlainDate>;
 }
 
@@ -76,7 +76,7 @@ export function headroomRows(history: CovenantHistory): readonly HeadroomRow[] {
 function removalOf(test: CovenantTest, place: number, history: CovenantHistory): Removal | null {
   if (test.outcome === 'not met, waived') return 'waived';
   if (history.resetOn.has(test.testDate)) return 'reset';
-  if (history.curedOn.has(test.testDate)) return 'cured';
+  if (test.outcome === 'cured' || history.curedOn.has(test.testDate)) return 'cured';
   return place === 0 ? 'first test' : null;
 }
 

@@ -3,9 +3,9 @@ import type { HeadroomRow } from './headroomRow.ts';
 import { edge } from './windows.ts';
 
 /** Fewer tests than this near the limit show nothing: the counts of the bins would be a handful each. */
-const FEWEST_NEAR_LIMIT = 100;
+export const FEWEST_NEAR_LIMIT = 100;
 /** Near is within this share of the level on either side. */
-const NEAR_LIMIT = 0.1;
+export const NEAR_LIMIT = 0.1;
 
 export interface TooFewNearLimit {
   readonly kind: 'too few tests near the limit';

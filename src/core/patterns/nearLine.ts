@@ -24,7 +24,7 @@ export interface CovenantNearLine {
  * which no borrower promised.
  *
  * @example nearLinesOf([covenant], null) // => []
- * @example nearLinesOf([covenant], patternStanding([])) // => [{ covenantId: 1, figures: null }]
+ * @example nearLinesOf([covenant], { window: { band: 0.02, gap: 0.04 }, gates: [], refused: [], types: [], nearLine: [] }) // => [{ covenantId: 1, figures: null }]
  */
 export function nearLinesOf(
   covenants: readonly Pick<Covenant, 'id' | 'measure' | 'isOurs'>[],

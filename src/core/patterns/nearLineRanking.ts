@@ -41,9 +41,9 @@ export interface NearLineRanking<Id> {
 }
 
 /** The list is the largest one whose mean local false-discovery rate is at most this. */
-const LARGEST_MEAN_FDR = 0.1;
+export const LARGEST_MEAN_FDR = 0.1;
 /** A sector of fewer series leans on the whole book. */
-const FEWEST_PEERS = 20;
+export const FEWEST_PEERS = 20;
 
 /**
  * Ranks the series of a book by how unlike a smooth headroom their tests near the line lie. Never more than a

@@ -33,6 +33,15 @@ export const nearLineSentence = ({
     ? NOT_ENOUGH_NEAR
     : `${passing} of ${near} tests that ended near the limit are on the passing side; about ${expectedPassing.toFixed(1)} would be expected`;
 
+const DEBT_TO_EBITDA = ['total-leverage', 'senior-leverage', 'net-leverage'];
+
+/**
+ * Whether a measure, by its code, is debt to EBITDA, beside whose figures LEVERAGE_SENTENCE stands.
+ *
+ * @example isDebtToEbitda('net-leverage') // => true
+ */
+export const isDebtToEbitda = (measure: string): boolean => DEBT_TO_EBITDA.includes(measure);
+
 /**
  * A probability as it is printed.
  *

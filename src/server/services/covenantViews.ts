@@ -2,9 +2,11 @@ import type { BridgeRow, CovenantView, SourceLink, TestView } from '../../contra
 import type { Assessment } from '../../core/assess.ts';
 import type { Covenant } from '../../core/covenants/covenant.ts';
 import type { CovenantTest } from '../../core/covenants/covenantTest.ts';
+import { shownOutcome } from '../../core/covenants/rights.ts';
 import { spokenTest } from '../../core/covenants/spokenTest.ts';
 import { whatIsLeft } from '../../core/covenants/whatIsLeft.ts';
 import { measureUnit } from '../../core/measures/index.ts';
+import type { Decimal } from '../../core/money/decimal.ts';
 import type { InputUsed } from '../../core/measures/measure.ts';
 import { lineItem, type LineItemCode } from '../../core/statements/lineItems.ts';
 import type { CheckRecord } from '../db/repositories/covenantTests.ts';
@@ -37,8 +39,10 @@ export function toCovenantViews(
       currency: covenant.currency,
       operator: covenant.operator,
       roundingPlaces: covenant.roundingPlaces,
+      isOurs: covenant.isOurs,
       tests: tests.map(toTestView),
-      ...latestParts(shown),
+      ...latestParts(covenant, shown),
+      nearLine: assessment.nearLine.find((one) => one.covenantId === covenant.id) ?? null,
       pattern: pattern ? { inBand: pattern.inBand, ofLast: pattern.ofLast, run: pattern.run } : null,
       checking: check?.checking ?? 'preliminary',
       certified: check?.certifiedValue ?? null,
@@ -46,19 +50,60 @@ export function toCovenantViews(
   });
 }
 
-type LatestParts = Pick<
-  CovenantView,
-  'fallOf' | 'whatIsLeft' | 'headroom' | 'laterLevels' | 'bridge' | 'counterfactuals' | 'sources' | 'missing'
->;
+type Rights = Pick<CovenantView, 'roomInDeviations' | 'springing' | 'waiver' | 'cure'>;
 
-function latestParts(test: CovenantTest | undefined): LatestParts {
+type LatestParts = Rights &
+  Pick<
+    CovenantView,
+    | 'fallOf'
+    | 'whatIsLeft'
+    | 'headroom'
+    | 'laterLevels'
+    | 'bridge'
+    | 'otherAccounting'
+    | 'counterfactuals'
+    | 'sources'
+    | 'missing'
+  >;
+
+const rightsOf = ({ roomInDeviations, springing, waiver, cure }: CovenantTest): Rights => ({
+  roomInDeviations: textOf(roomInDeviations),
+  springing: springing && {
+    drawn: springing.drawn.toFixed(),
+    commitment: springing.commitment.toFixed(),
+    utilisation: textOf(springing.utilisation),
+    trigger: springing.trigger.toFixed(),
+  },
+  waiver,
+  cure: cure && {
+    ...cure,
+    needed: {
+      ebitda: textOf(cure.needed.ebitda),
+      debt: textOf(cure.needed.debt),
+      both: textOf(cure.needed.both),
+    },
+    received: textOf(cure.received),
+    counted: textOf(cure.counted),
+    carried: cure.carried.toFixed(),
+    ratioWith: textOf(cure.ratioWith),
+  },
+});
+
+const textOf = (amount: Decimal | null): string | null => amount?.toFixed() ?? null;
+
+function latestParts(covenant: Covenant, test: CovenantTest | undefined): LatestParts {
   if (!test)
     return {
       fallOf: 'earnings',
       whatIsLeft: 'Not tested yet',
       headroom: null,
+      roomInDeviations: null,
+      springing: null,
+      waiver: null,
+      cure: null,
       laterLevels: [],
       bridge: [],
+      otherAccounting: null,
       counterfactuals: [],
       sources: [],
       missing: [],
@@ -78,20 +123,29 @@ function latestParts(test: CovenantTest | undefined): LatestParts {
     laterLevels: test.againstLaterLevels.map((later) => ({
       from: later.from,
       level: later.level.toFixed(),
-      outcome: later.outcome,
+      outcome: shownOutcome(covenant, later.outcome),
       mayFall: later.mayFall?.toFixed() ?? null,
+      shareOfLevel: later.shareOfLevel?.toFixed() ?? null,
+      moneyLeft: later.moneyLeft?.toFixed() ?? null,
+      otherSideMayRise: later.otherSideMayRise?.toFixed() ?? null,
     })),
+    ...rightsOf(test),
     bridge: test.bridge.map((line): BridgeRow => ({
       label: line.label,
       amount: line.amount.toFixed(),
       kind: line.kind,
+      note: line.note ?? null,
       sources: line.inputs.map(toSource),
     })),
+    otherAccounting: test.otherAccounting && {
+      ratio: test.otherAccounting.tested?.toFixed() ?? null,
+      outcome: test.otherAccounting.outcome,
+    },
     counterfactuals: test.counterfactuals.map((other) => ({
       label: other.kind,
       takenOut: other.earningsTakenOut.toFixed(),
       ratio: other.ratio?.toFixed() ?? null,
-      outcome: other.outcome,
+      outcome: shownOutcome(covenant, other.outcome),
       breakEvenShare: other.breakEvenShare?.toFixed() ?? null,
     })),
     sources: test.inputs.map(toSource),
@@ -118,6 +172,7 @@ const toTestView = (test: CovenantTest): TestView => ({
   justPassing: test.justPassing,
   withoutAddBacks:
     test.counterfactuals.find((other) => other.kind === 'without add-backs')?.ratio?.toFixed() ?? null,
+  isFirstUnderReset: test.isFirstUnderReset,
 });
 
 const toSource = (input: InputUsed): SourceLink => ({

@@ -31,6 +31,7 @@ import {
 import { finishNight, type RunSummary } from './finishNight.ts';
 import { lastReadCrossSection } from './keepWhyItMoved.ts';
 import { memberOfBook } from './memberOfBook.ts';
+import { storeBook } from './storeBook.ts';
 
 export interface NightCommand {
   readonly businessDate: PlainDate;
@@ -152,6 +153,7 @@ async function bookOfNight(run: RunRecord): Promise<BookCrossSection> {
       { runId: run.id, asOf: run.businessDate, knownAt: run.knownAt, methodVersion: METHOD_VERSION },
       (version) => bookCrossSection(members, version),
     );
+    await storeBook(tx, crossSection, members);
     await setCrossSection(tx, run.id, crossSection.version);
     await dropOutputs(tx, run.id, 'tests');
     return crossSection;

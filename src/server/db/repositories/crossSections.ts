@@ -1,6 +1,7 @@
 import type { Transaction } from 'sequelize';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { NO_BOOK, type BookCrossSection } from '../../../core/bookCrossSection.ts';
+import { finiteJson } from '../finiteJson.ts';
 import { execute, selectOne } from '../sql.ts';
 
 /**
@@ -26,7 +27,7 @@ export async function storeCrossSection(
   const crossSection = build(insertId);
   await execute(tx, 'update cross_sections set content = :content where id = :id', {
     id: insertId,
-    content: JSON.stringify(crossSection),
+    content: finiteJson('the cross-section', crossSection),
   });
   return crossSection;
 }
