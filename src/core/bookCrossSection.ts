@@ -9,7 +9,7 @@ export interface BookCrossSection extends CrossSection {
   /** Null before the first night. */
   readonly patterns: PatternStanding | null;
   readonly ratios: readonly RatioSeries[];
-  /** What was said of past tests, against what happened; null before the first night. */
+  /** What was said of past tests, against what happened; null until the night has looked back. */
   readonly projectionRecord: ProjectionRecord | null;
 }
 
@@ -36,6 +36,17 @@ export function bookCrossSection(members: readonly BookMember[], version: number
     ),
     patterns: patternStanding(members.flatMap(({ headrooms }) => headrooms)),
     ratios,
-    projectionRecord: projectionRecord(ratios),
+    projectionRecord: null,
   };
 }
+
+/**
+ * The same with what was said of past tests, by the changes before them, against what happened: once a night, because
+ * it goes over every quarter end.
+ *
+ * @example lookedBack(bookCrossSection([], 1)).projectionRecord?.horizons.length // => 4
+ */
+export const lookedBack = (crossSection: BookCrossSection): BookCrossSection => ({
+  ...crossSection,
+  projectionRecord: projectionRecord(crossSection.ratios),
+});

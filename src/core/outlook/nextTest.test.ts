@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { nextTest } from './nextTest.ts';
-import { peerChanges, type RatioHistory, type RatioPoint } from './peerChanges.ts';
+import { ownChanges, peerChanges, type RatioHistory, type RatioPoint } from './peerChanges.ts';
 import { peerDraws } from './peerDraws.ts';
 
 const at = (ratio: number): RatioPoint => ({ ratio, hasEarnings: true });
@@ -95,12 +95,12 @@ describe('changes', () => {
   test('end in the last eight quarters', () => {
     const countOf = (quarters: number) => {
       const points = Array.from({ length: quarters }, () => at(2));
-      return peerChanges([history(1, points)], 1).book.own.get(1)!.length;
+      return peerChanges([history(1, points)], 1).own.get(1)!.length;
     };
     expect([countOf(8), countOf(9), countOf(10)]).toEqual([7, 8, 8]);
     const early = [at(1), ...Array.from({ length: 9 }, () => at(3))];
     const others = Array.from({ length: 400 }, (_, k) => history(k + 10, [at(1), at(1 + k / 40)]));
-    expect(peerChanges([history(1, early), ...others], 1).book.own.get(1)).toEqual(Array(8).fill(1));
+    expect(peerChanges([history(1, early), ...others], 1).own.get(1)).toEqual(Array(8).fill(1));
   });
 
   test('to earnings of nought or below count as not met; such a ratio is no start', () => {
@@ -113,7 +113,7 @@ describe('changes', () => {
   });
 
   test('skip a quarter without figures', () => {
-    expect(peerChanges([history(1, [at(2), null, at(3), at(6)])], 1).book.own.get(1)).toEqual([2]);
+    expect(peerChanges([history(1, [at(2), null, at(3), at(6)])], 1).own.get(1)).toEqual([2]);
   });
 });
 
@@ -132,7 +132,9 @@ test('the figure is that of the peers’ draws, each once', () => {
           1,
         );
         const found = nextTest(peers, { borrowerId: 1, bound: side, ratio: own, level });
-        const draws = [...peers.book.own.values()].flat().map((change) => [change]);
+        const draws = [...peers.own.values()]
+          .flatMap((changes) => ownChanges(peers.book, changes))
+          .map((change) => [change]);
         const drawn = peerDraws([{ bound: side, ratio: own, level }], draws);
         expect(found).toMatchObject({
           ok: true,

@@ -1,8 +1,8 @@
 import type { Bound } from '../covenants/headroom.ts';
 import { err, ok, type Result } from '../result.ts';
 import { rankCounts } from '../statistics/percentile.ts';
-import type { PeerCell, PeerChanges } from './peerChanges.ts';
-import { isNotMetAfter, slackOf } from './peerDraws.ts';
+import { ownChanges, type PeerCell, type PeerChanges } from './peerChanges.ts';
+import { isNotMetAfter, slackOf, type RatioChange } from './peerDraws.ts';
 import { WORD_LINES } from './projectionWord.ts';
 
 export interface NextTest {
@@ -42,14 +42,14 @@ export interface TestAhead {
  *
  * Source: methods.md Part C 2.2 c.
  *
- * @example nextTest({ book: { changes: [], earningsGone: 0, own: new Map() }, cells: new Map(), cellOf: new Map() }, { borrowerId: 1, bound: 'most', ratio: 3, level: 3.5 }).error.kind // => 'too few peers'
+ * @example nextTest({ book: { changes: [], earningsGone: 0, borrowers: 0 }, cells: new Map(), cellOf: new Map(), own: new Map() }, { borrowerId: 1, bound: 'most', ratio: 3, level: 3.5 }).error.kind // => 'too few peers'
  */
 export function nextTest(peers: PeerChanges, test: TestAhead): Result<NextTest, NextTestError> {
   const slack = slackOf(test);
   if (slack === null || !(test.ratio > 0)) return err({ kind: 'ratio without meaning' });
   const group = groupFor(peers, test.borrowerId);
   if (!isEnough(group)) return err({ kind: 'too few peers', needed: FEWEST_PEERS, given: group.n });
-  const notMet = countNotMet(group.cell, test, slack);
+  const notMet = countNotMet(group, test, slack);
   return ok({
     notMet,
     share: notMet / group.n,
@@ -65,7 +65,7 @@ export function nextTest(peers: PeerChanges, test: TestAhead): Result<NextTest, 
  * The ratio (or amount) at which the coming test would no longer be likely not met: the nearest one to the level that
  * gives a share of at most 66 %. Null where no ratio does, or where there are too few peers.
  *
- * @example ratioNotLikely({ book: { changes: [], earningsGone: 0, own: new Map() }, cells: new Map(), cellOf: new Map() }, { borrowerId: 1, bound: 'most', ratio: 3, level: 3.5 }) // => null
+ * @example ratioNotLikely({ book: { changes: [], earningsGone: 0, borrowers: 0 }, cells: new Map(), cellOf: new Map(), own: new Map() }, { borrowerId: 1, bound: 'most', ratio: 3, level: 3.5 }) // => null
  */
 export function ratioNotLikely(peers: PeerChanges, test: TestAhead): number | null {
   const group = groupFor(peers, test.borrowerId);
@@ -74,7 +74,7 @@ export function ratioNotLikely(peers: PeerChanges, test: TestAhead): number | nu
   const slackAt = (place: number): number =>
     test.bound === 'most' ? changes[place]! : 1 / changes[changes.length - 1 - place]!;
   const isLeftOpen = (place: number): boolean =>
-    slackAt(place) > 0 && countNotMet(group.cell, test, slackAt(place)) / group.n <= WORD_LINES.likely;
+    slackAt(place) > 0 && countNotMet(group, test, slackAt(place)) / group.n <= WORD_LINES.likely;
   let low = 0;
   let high = changes.length;
   while (low < high) {
@@ -89,36 +89,38 @@ export function ratioNotLikely(peers: PeerChanges, test: TestAhead): number | nu
 interface Group {
   readonly cell: PeerCell;
   readonly peers: NextTest['peers'];
-  /** Without the borrower itself. */
+  readonly itself: readonly RatioChange[];
+  /** Without the borrower itself, as is what follows. */
   readonly n: number;
   readonly borrowers: number;
 }
 
 function groupFor(peers: PeerChanges, borrowerId: number): Group {
-  const own = peers.cells.get(peers.cellOf.get(borrowerId) ?? '');
-  const near = own && groupOf(own, 'sector and third of leverage', borrowerId);
-  return near && isEnough(near) ? near : groupOf(peers.book, 'book', borrowerId);
+  const own = peers.own.get(borrowerId);
+  const cell = peers.cells.get(peers.cellOf.get(borrowerId) ?? '');
+  const near = cell && groupOf(cell, 'sector and third of leverage', own);
+  return near && isEnough(near) ? near : groupOf(peers.book, 'book', own);
 }
 
 const isEnough = ({ n, borrowers }: Group): boolean =>
   n >= FEWEST_PEERS && borrowers >= FEWEST_PEER_BORROWERS;
 
-function groupOf(cell: PeerCell, peers: Group['peers'], borrowerId: number): Group {
-  const itself = cell.own.get(borrowerId)?.length ?? 0;
+function groupOf(cell: PeerCell, peers: Group['peers'], own: readonly RatioChange[] | undefined): Group {
+  const itself = ownChanges(cell, own);
   return {
     cell,
     peers,
-    n: cell.changes.length + cell.earningsGone - itself,
-    borrowers: cell.own.size - (itself > 0 ? 1 : 0),
+    itself,
+    n: cell.changes.length + cell.earningsGone - itself.length,
+    borrowers: cell.borrowers - (own && own.length > 0 ? 1 : 0),
   };
 }
 
 function countNotMet(
-  { changes, earningsGone, own }: PeerCell,
-  { borrowerId, bound }: TestAhead,
+  { cell: { changes, earningsGone }, itself }: Group,
+  { bound }: TestAhead,
   slack: number,
 ): number {
-  const itself = own.get(borrowerId) ?? [];
   const notMet = bound === 'most' ? countAbove(changes, slack) : countNotReaching(changes, slack);
   return notMet + earningsGone - itself.filter((change) => isNotMetAfter(bound, slack, change)).length;
 }

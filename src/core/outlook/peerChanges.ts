@@ -1,4 +1,4 @@
-import { linearPercentile } from '../statistics/percentile.ts';
+import { linearPercentile, rankCounts } from '../statistics/percentile.ts';
 import { groupedBy } from '../patterns/groupedBy.ts';
 import type { RatioChange } from './peerDraws.ts';
 
@@ -17,13 +17,13 @@ export interface RatioHistory {
   readonly points: readonly (RatioPoint | null)[];
 }
 
-/** The changes of one peer group, those of each member kept apart so that nobody is compared with itself. */
+/** The changes of one peer group. */
 export interface PeerCell {
   /** Ascending, without the outer hundredths. */
   readonly changes: Float64Array;
   readonly earningsGone: number;
   /** Members with any change. */
-  readonly own: ReadonlyMap<number, readonly RatioChange[]>;
+  readonly borrowers: number;
 }
 
 export interface PeerChanges {
@@ -31,6 +31,8 @@ export interface PeerChanges {
   readonly cells: ReadonlyMap<string, PeerCell>;
   readonly book: PeerCell;
   readonly cellOf: ReadonlyMap<number, string>;
+  /** What each borrower brought, so that nobody is compared with itself. */
+  readonly own: ReadonlyMap<number, readonly RatioChange[]>;
 }
 
 /** Changes that end in these last quarters count. */
@@ -48,11 +50,11 @@ const TRUNCATED_SHARE = 0.01;
  */
 export function peerChanges(histories: readonly RatioHistory[], horizonQuarters: number): PeerChanges {
   const cellOf = thirdsOfLeverage(histories);
-  const changes = new Map(
+  const own = new Map(
     histories.map((history) => [history.borrowerId, changesOf(history.points, horizonQuarters)]),
   );
   const cellWith = (members: readonly RatioHistory[]): PeerCell =>
-    peerCell(members.map(({ borrowerId }) => [borrowerId, changes.get(borrowerId)!]));
+    peerCell(members.map(({ borrowerId }) => own.get(borrowerId)!));
   const placed = histories.filter(({ borrowerId }) => cellOf.has(borrowerId));
   const byCell = groupedBy(placed, ({ borrowerId }) => cellOf.get(borrowerId)!);
   return {
@@ -60,6 +62,7 @@ export function peerChanges(histories: readonly RatioHistory[], horizonQuarters:
     cells: new Map([...byCell].map(([cell, members]) => [cell, cellWith(members)])),
     book: cellWith(histories),
     cellOf,
+    own,
   };
 }
 
@@ -70,10 +73,9 @@ function thirdsOfLeverage(histories: readonly RatioHistory[]): ReadonlyMap<numbe
     if (withLeverage.length === 0) continue;
     const sorted = Float64Array.from(withLeverage, ({ leverage }) => leverage!).sort();
     const [lower, upper] = [linearPercentile(sorted, 1 / 3), linearPercentile(sorted, 2 / 3)];
-    for (const { borrowerId, leverage } of withLeverage) {
-      const third = leverage! <= lower ? 1 : leverage! <= upper ? 2 : 3;
-      cellOf.set(borrowerId, `${sector}, third ${third}`);
-    }
+    const thirds = [1, 2, 3].map((third) => `${sector}, third ${third}`);
+    for (const { borrowerId, leverage } of withLeverage)
+      cellOf.set(borrowerId, thirds[leverage! <= lower ? 0 : leverage! <= upper ? 1 : 2]!);
   }
   return cellOf;
 }
@@ -89,24 +91,40 @@ function changesOf(points: readonly (RatioPoint | null)[], horizon: number): rea
   return changes;
 }
 
-function peerCell(members: readonly (readonly [number, readonly RatioChange[]])[]): PeerCell {
-  const all = members.flatMap(([, changes]) => changes);
-  const sorted = Float64Array.from(all.filter((change) => change !== 'earnings gone')).sort();
-  const isKept = withinOuterHundredths(sorted);
-  const own = members.map(
-    ([borrowerId, changes]) =>
-      [borrowerId, changes.filter((change) => change === 'earnings gone' || isKept(change))] as const,
-  );
+function peerCell(members: readonly (readonly RatioChange[])[]): PeerCell {
+  const all = new Float64Array(members.reduce((count, changes) => count + changes.length, 0));
+  let known = 0;
+  for (const changes of members)
+    for (const change of changes)
+      if (change !== 'earnings gone') {
+        all[known] = change;
+        known += 1;
+      }
+  const sorted = all.subarray(0, known).sort();
   return {
-    changes: sorted.filter(isKept),
-    earningsGone: all.length - sorted.length,
-    own: new Map(own.filter(([, changes]) => changes.length > 0)),
+    changes: withoutOuterHundredths(sorted),
+    earningsGone: all.length - known,
+    borrowers: members.filter((changes) => changes.length > 0).length,
   };
 }
 
-function withinOuterHundredths(sorted: Float64Array): (change: number) => boolean {
-  if (sorted.length === 0) return () => false;
+function withoutOuterHundredths(sorted: Float64Array): Float64Array {
+  if (sorted.length === 0) return sorted;
   const low = linearPercentile(sorted, TRUNCATED_SHARE);
   const high = linearPercentile(sorted, 1 - TRUNCATED_SHARE);
-  return (change) => change >= low && change <= high;
+  const upToHigh = rankCounts(sorted, high);
+  return sorted.subarray(rankCounts(sorted, low).below, upToHigh.below + upToHigh.equal);
 }
+
+/**
+ * What a borrower brought to a group's changes, the outer hundredths left out as they are there.
+ *
+ * @example ownChanges({ changes: new Float64Array([0.5, 1]), earningsGone: 0, borrowers: 1 }, [1, 2, 'earnings gone']) // => [1, 'earnings gone']
+ */
+export const ownChanges = (
+  { changes }: PeerCell,
+  own: readonly RatioChange[] | undefined,
+): readonly RatioChange[] =>
+  (own ?? []).filter(
+    (change) => change === 'earnings gone' || (change >= changes[0]! && change <= changes.at(-1)!),
+  );

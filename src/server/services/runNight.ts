@@ -9,7 +9,7 @@ import type { RunKind, RunPhase } from '../../contracts/runs.ts';
 import { businessDate } from '../../core/calendar/businessDate.ts';
 import type { PlainDate } from '../../core/calendar/plainDate.ts';
 import { METHOD_VERSION } from '../../core/policy.ts';
-import { bookCrossSection, type BookCrossSection } from '../../core/bookCrossSection.ts';
+import { bookCrossSection, lookedBack, type BookCrossSection } from '../../core/bookCrossSection.ts';
 import type { BookMember } from '../../core/bookMember.ts';
 import { inTransaction, isOutage } from '../db/inTransaction.ts';
 import { findCrossSection, storeCrossSection } from '../db/repositories/crossSections.ts';
@@ -151,7 +151,7 @@ async function bookOfNight(run: RunRecord): Promise<BookCrossSection> {
     const crossSection = await storeCrossSection(
       tx,
       { runId: run.id, asOf: run.businessDate, knownAt: run.knownAt, methodVersion: METHOD_VERSION },
-      (version) => bookCrossSection(members, version),
+      (version) => lookedBack(bookCrossSection(members, version)),
     );
     await storeBook(tx, crossSection, members);
     await setCrossSection(tx, run.id, crossSection.version);
