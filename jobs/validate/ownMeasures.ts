@@ -118,6 +118,7 @@ function fScoreOf(year: FirmYear, before: FirmYear): number | null {
     softAssets: (totalAssetsOf(closing) - closing.ppeNet - closing.cash) / totalAssetsOf(closing),
     cashSalesGrowth: cashSales / cashSalesBefore - 1,
     returnOnAssetsChange: flows.netIncome / average - before.flows.netIncome / averageBefore,
+    // Net of repayments, which is kinder to the measure: a revolver is drawn somewhere in most years.
     hasIssued: flows.equityIssued > 0 || debtOf(closing) > debtOf(opening),
   }).f;
 }

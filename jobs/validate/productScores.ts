@@ -8,7 +8,6 @@ import { scoreQuarter } from '#core/quality/quarterScore.ts';
 import type { QuarterScore } from '#core/quality/score.ts';
 import { AS_OF, borrowerInputs, quarterEndAt } from './borrowerInputs.ts';
 import { LAST } from './firmPlan.ts';
-import { ownMeasures } from './ownMeasures.ts';
 import type { Firm } from './statementBook.ts';
 
 export interface ProductScore {
@@ -43,21 +42,6 @@ export function productScores(firms: readonly Firm[]): readonly ProductScore[] {
 
 function peersOf(firm: Firm): readonly PeerInputs[] {
   const peers = peerInputsOfQuarters(borrowerInputs(firm), AS_OF).slice(-QUARTER_ENDS);
-  return peers.map((peer, k) => {
-    const quarter = LAST - (peers.length - 1 - k);
-    if (peer.quarterEnd !== quarterEndAt(quarter)) throw new Error(`no figures of quarter ${quarter}`);
-    return withPublished(peer, firm, quarter);
-  });
-}
-
-/** Screens and noise, where the product's own path gives none. */
-function withPublished(peer: PeerInputs, { quarters }: Firm, quarter: number): PeerInputs {
-  const measured = ownMeasures(quarters, quarter);
-  const given = {
-    mScore: measured['M-score, eight variables'],
-    fScore: measured['F-score'],
-    accrualNoise: measured['accrual noise (Dechow and Dichev)'],
-  };
-  const known = Object.fromEntries(Object.entries(given).filter(([, value]) => typeof value === 'number'));
-  return { ...peer, figures: { ...known, ...peer.figures } };
+  if (peers.at(-1)?.quarterEnd !== quarterEndAt(LAST)) throw new Error('no figures of the last quarter');
+  return peers;
 }
