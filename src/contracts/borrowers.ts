@@ -1,11 +1,14 @@
 import { z } from './zod.ts';
 import type { LegalForm } from '../core/borrowerInputs.ts';
 import type { Operator } from '../core/covenants/covenant.ts';
-import type { Outcome } from '../core/covenants/covenantTest.ts';
+import type { CounterfactualKind, Outcome } from '../core/covenants/covenantTest.ts';
+import type { BridgeLine } from '../core/measures/bridge.ts';
 import type { MeasureCode, MeasureUnit } from '../core/measures/measure.ts';
+import type { CovenantNearLine } from '../core/patterns/nearLine.ts';
 import type { QualityBand, ReportingQuality } from '../core/quality/score.ts';
 import type { AlertRow, StripTest } from './alerts.ts';
 import type { MovementsView } from './movements.ts';
+import type { OutlookView } from './outlook.ts';
 import { pageQuery } from './paging.ts';
 import type { ProposalRow, WatchlistRow } from './watchlist.ts';
 
@@ -33,6 +36,8 @@ export interface BorrowerRow {
   readonly covenantName: string | null;
   readonly strip: readonly StripTest[];
   readonly mayFall: string | null;
+  /** The same at the tightest step agreed for later. */
+  readonly mayFallAhead: { readonly mayFall: string; readonly from: string } | null;
   readonly latestOutcome: Outcome | null;
   readonly qualityHeadline: number | null;
   readonly qualityBand: QualityBand | null;
@@ -67,7 +72,9 @@ export interface SourceLink {
 export interface BridgeRow {
   readonly label: string;
   readonly amount: string;
-  readonly kind: 'figure' | 'subtotal' | 'add-back' | 'disallowed';
+  readonly kind: BridgeLine['kind'];
+  /** Reason, evidence and approver of an add-back, the cap, the source of a rate; null where nothing is to be said. */
+  readonly note: string | null;
   readonly sources: readonly SourceLink[];
 }
 
@@ -85,6 +92,38 @@ export interface TestView {
   readonly shareOfLevel: string | null;
   readonly justPassing: boolean;
   readonly withoutAddBacks: string | null;
+  /** The first test under a level agreed after signing. */
+  readonly isFirstUnderReset: boolean;
+}
+
+/** Money put in, or that may be put in, for the latest test; amounts as decimal text, days as YYYY-MM-DD. */
+export interface CureView {
+  readonly curedBy: 'money' | 'money of an earlier quarter' | 'the next test' | null;
+  readonly method: 'ebitda' | 'debt' | 'both' | null;
+  readonly periodEnds: string | null;
+  readonly needed: {
+    readonly ebitda: string | null;
+    readonly debt: string | null;
+    readonly both: string | null;
+  };
+  readonly received: string | null;
+  readonly receivedOn: string | null;
+  readonly counted: string | null;
+  readonly carried: string;
+  readonly countsUntil: string | null;
+  readonly ratioWith: string | null;
+  readonly usedInFour: number;
+  readonly mostInFour: number | null;
+  readonly usedInLife: number;
+  readonly mostInLife: number | null;
+}
+
+/** Drawings against the share above which a covenant is tested. */
+export interface SpringingView {
+  readonly drawn: string;
+  readonly commitment: string;
+  readonly utilisation: string | null;
+  readonly trigger: string;
 }
 
 export interface CovenantView {
@@ -97,6 +136,8 @@ export interface CovenantView {
   readonly currency: string;
   readonly operator: Operator;
   readonly roundingPlaces: number | null;
+  /** The desk's own trigger, not in the agreement: marked so wherever it is shown. */
+  readonly isOurs: boolean;
   /** Oldest first; the last one is the latest test. */
   readonly tests: readonly TestView[];
   readonly fallOf: 'earnings' | 'tested amount';
@@ -115,10 +156,24 @@ export interface CovenantView {
     readonly level: string;
     readonly outcome: Outcome;
     readonly mayFall: string | null;
+    readonly shareOfLevel: string | null;
+    readonly moneyLeft: string | null;
+    readonly otherSideMayRise: string | null;
   }[];
+  /** Money room over the standard deviation of the last eight quarterly changes in EBITDA; null where not known. */
+  readonly roomInDeviations: string | null;
+  readonly springing: SpringingView | null;
+  readonly waiver: {
+    readonly grantedOn: string;
+    readonly until: string | null;
+    readonly conditions: string;
+  } | null;
+  readonly cure: CureView | null;
   readonly bridge: readonly BridgeRow[];
+  /** The latest test by today's accounting, where the covenant goes by the rules at signing. */
+  readonly otherAccounting: { readonly ratio: string | null; readonly outcome: Outcome } | null;
   readonly counterfactuals: readonly {
-    readonly label: string;
+    readonly label: CounterfactualKind;
     readonly takenOut: string;
     readonly ratio: string | null;
     readonly outcome: Outcome;
@@ -126,6 +181,8 @@ export interface CovenantView {
   }[];
   readonly sources: readonly SourceLink[];
   readonly missing: readonly string[];
+  /** As of the last night; null before the first and for the desk's own triggers. */
+  readonly nearLine: CovenantNearLine | null;
   readonly pattern: { readonly inBand: number; readonly ofLast: number; readonly run: number } | null;
   /** Of the latest test: 'preliminary', 'checked', 'disputed'; and what the borrower certified, where it did. */
   readonly checking: string;
@@ -165,6 +222,8 @@ export interface BorrowerView {
   readonly computed: ComputedFacts | null;
   readonly covenants: readonly CovenantView[];
   readonly quality: ReportingQuality | null;
+  /** Null before the first assessment. */
+  readonly outlook: OutlookView | null;
   /** Null before there was an earlier night to hold the result against. */
   readonly movements: MovementsView | null;
   /** The lender's day, against which due dates stand. */

@@ -5,6 +5,8 @@
 export const METHOD_TOPICS = {
   'twelve-months': 'How twelve months are read',
   headroom: 'How headroom is computed',
+  'cures-and-waivers': 'How cures, waivers and resets are read',
+  'counterfactual-tests': 'How a test is computed on other earnings',
   'just-passing-patterns': 'How tests near the limit are read',
   'book-pattern': 'How the book’s own test is made',
   'leading-digits': 'How leading digits are tested',

@@ -11,7 +11,7 @@ import type { Books } from './statements/statementBook.ts';
  * accounts where there are any and in the borrower's currency: a covenant on other accounts, or in another currency,
  * is left as it is. Source: methods.md B7.
  *
- * @example testsOnAccruals(inputs, openBooks(inputs, '2026-11-30'), [test], { history: [] }) // => [test]
+ * @example testsOnAccruals(inputs, openBooks(inputs, '2026-11-30'), assessment.tests, assessment.quality).length === assessment.tests.length // => true
  */
 export function testsOnAccruals(
   { covenants, currency }: Pick<BorrowerInputs, 'covenants' | 'currency'>,

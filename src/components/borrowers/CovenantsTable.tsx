@@ -1,6 +1,9 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import type { CovenantView } from '../../contracts/borrowers.ts';
+import { OURS } from '../../core/covenants/wording.ts';
 import { spokenTest } from '../../core/covenants/spokenTest.ts';
+import { decimal } from '../../core/money/decimal.ts';
+import { formatShare } from '../../core/money/print.ts';
 import { HeadroomText, OutcomeText } from '../marks/OutcomeText.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
 import { Cell, HeadCell, NameCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
@@ -39,7 +42,7 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                 name={covenant.name}
                 href={hrefOf(covenant.id)}
                 current={covenant.id === selected}
-                second={`${covenant.facilityName}, clause ${covenant.clause}`}
+                second={`${covenant.facilityName}, ${covenant.isOurs ? OURS : `clause ${covenant.clause}`}`}
               />
               <Cell nowrap>{limitText(covenant, tested?.level ?? null)}</Cell>
               <Cell numeric nowrap>
@@ -59,14 +62,21 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                 {covenant.fallOf === 'tested amount' && (
                   <span className="type-second type-small block">of the tested amount</span>
                 )}
+                <Ahead covenant={covenant} />
               </Cell>
-              <Cell>{covenant.whatIsLeft}</Cell>
+              <Cell>
+                {covenant.whatIsLeft}
+                {tested && tested.outcome === 'cured' && (
+                  <span className="type-second type-small block">on the borrower’s own figures</span>
+                )}
+              </Cell>
               <Cell entry="extra">
                 {test && (
                   <OutcomeText outcome={test.outcome} justPassing={test.justPassing} reason={test.reason} />
                 )}
                 <span className="type-second type-small block">
                   {test && `${dayText(test.testDate)}, ${covenant.checking}`}
+                  {tested?.isFirstUnderReset && ', first under a reset'}
                 </span>
               </Cell>
             </Row>
@@ -74,5 +84,18 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
         })}
       </TableBody>
     </Table>
+  );
+}
+
+/** The tightest level agreed for later, beside today's. */
+function Ahead({ covenant }: { readonly covenant: CovenantView }) {
+  const tightest = covenant.laterLevels
+    .filter(({ mayFall }) => mayFall !== null)
+    .toSorted((one, other) => decimal(one.mayFall ?? 0).comparedTo(decimal(other.mayFall ?? 0)))[0];
+  if (!tightest || tightest.mayFall === null) return null;
+  return (
+    <span className="type-second type-small block">
+      {formatShare(decimal(tightest.mayFall))} from {dayText(tightest.from)}
+    </span>
   );
 }

@@ -2,7 +2,7 @@ import { dayText } from '../../core/calendar/printDay.ts';
 import { createColumnHelper } from '@tanstack/react-table';
 import type { BorrowerRow } from '../../contracts/borrowers.ts';
 import { decimal } from '../../core/money/decimal.ts';
-import { formatMoney } from '../../core/money/print.ts';
+import { formatMoney, formatShare } from '../../core/money/print.ts';
 import { HeadroomText } from '../marks/OutcomeText.tsx';
 import { QualityBar } from '../marks/QualityBar.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
@@ -48,11 +48,18 @@ export const borrowerColumns = column.columns([
     header: 'Earnings may fall',
     cell: ({ row: { original } }) =>
       original.latestOutcome ? (
-        <HeadroomText
-          mayFall={original.mayFall}
-          outcome={original.latestOutcome}
-          justPassing={original.strip.at(-1)?.justPassing ?? false}
-        />
+        <>
+          <HeadroomText
+            mayFall={original.mayFall}
+            outcome={original.latestOutcome}
+            justPassing={original.strip.at(-1)?.justPassing ?? false}
+          />
+          {original.mayFallAhead && (
+            <span className="type-second type-small block">
+              {formatShare(decimal(original.mayFallAhead.mayFall))} from {dayText(original.mayFallAhead.from)}
+            </span>
+          )}
+        </>
       ) : (
         <span className="type-second">–</span>
       ),

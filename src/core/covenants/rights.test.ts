@@ -87,7 +87,7 @@ describe('an equity cure', () => {
     ['ebitda', '0.8571428571', 'cov-067'],
     ['debt', '3', 'cov-039'],
     ['both', '0.6666666667', 'cov-069'],
-  ] as const)('counted as %s needs %s (%s)', (method, needed) => {
+  ] as const)('counted as %s needs %s (%s)', (method, needed, _id) => {
     const { cure } = shortTest({ cureRights: { ...RIGHTS, method } });
     expect(cure?.needed[method]?.toDecimalPlaces(10).toFixed()).toBe(needed);
   });

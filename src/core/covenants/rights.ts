@@ -82,10 +82,10 @@ function curedInWords(cure: CureStanding): string {
   return `cured by ${amount} put in${cure.receivedOn ? ` on ${formatDay(cure.receivedOn)}` : ''}${way}`;
 }
 
-function againstOurTrigger({ operator }: Covenant, test: CovenantTest): CovenantTest {
-  if (!isNotMet(test.outcome)) return test;
-  return { ...test, outcome: triggerWords(operator) };
-}
+const againstOurTrigger = (covenant: Covenant, test: CovenantTest): CovenantTest => ({
+  ...test,
+  outcome: shownOutcome(covenant, test.outcome),
+});
 
 /**
  * The words for a result on the wrong side of the desk's own trigger, which is no covenant.
@@ -94,6 +94,17 @@ function againstOurTrigger({ operator }: Covenant, test: CovenantTest): Covenant
  */
 export const triggerWords = (operator: Covenant['operator']): Outcome =>
   isMaximum(operator) ? 'above our trigger' : 'below our trigger';
+
+/**
+ * How an outcome against another level or on other earnings reads: as it is, or in the words of the desk's own
+ * trigger.
+ *
+ * @example shownOutcome({ isOurs: true, operator: '>=' }, 'not met') // => 'below our trigger'
+ */
+export const shownOutcome = (
+  { isOurs, operator }: Pick<Covenant, 'isOurs' | 'operator'>,
+  outcome: Outcome,
+): Outcome => (isOurs && isNotMet(outcome) ? triggerWords(operator) : outcome);
 
 const joined = (...said: readonly (string | null)[]): string | null => {
   const parts = said.filter((one) => one !== null && one !== '');

@@ -56,6 +56,14 @@ export function smallestHeadroomsAhead(
   });
 }
 
+/**
+ * The step at which the least is left; null where no step is agreed.
+ *
+ * @example tightestAhead(smallestHeadroomsAhead([test], [1]))?.from // => '2027-01-01'
+ */
+export const tightestAhead = (ahead: readonly SmallestHeadroomAhead[]): SmallestHeadroomAhead | null =>
+  smallest(ahead);
+
 /** Against the level in force on that day, which is today's where no step comes before it. */
 const mayFallFrom = (test: CovenantTest, day: PlainDate): Decimal | null =>
   (test.againstLaterLevels.findLast(({ from }) => from <= day) ?? test.headroom).mayFall;

@@ -42,6 +42,10 @@ const toRow = (record: BorrowerListRecord, strip: Strip): BorrowerRow => ({
   drawn: record.drawnTotal,
   managerName: record.managerName,
   ...strip,
+  mayFallAhead:
+    record.aheadMayFall !== null && record.aheadFrom !== null
+      ? { mayFall: record.aheadMayFall, from: record.aheadFrom }
+      : null,
   qualityHeadline: record.qualityHeadline === null ? null : Math.round(Number(record.qualityHeadline)),
   qualityBand: record.qualityBand as QualityBand | null,
   openAlerts: record.openAlerts,

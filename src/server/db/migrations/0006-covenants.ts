@@ -26,6 +26,9 @@ export const migration: Migration = {
       add column if not exists cures_in_life tinyint unsigned null,
       add column if not exists cured_by_next_test tinyint(1) not null default 0`,
     'alter table covenant_levels add column if not exists is_reset tinyint(1) not null default 0',
+    `alter table assessments
+      add column if not exists ahead_may_fall decimal(20,10) null,
+      add column if not exists ahead_from date null`,
     `create table if not exists equity_cures (
       id bigint unsigned not null auto_increment primary key,
       covenant_id bigint unsigned not null,
@@ -58,6 +61,7 @@ export const migration: Migration = {
   down: [
     'drop table if exists currency_rates',
     'drop table if exists equity_cures',
+    'alter table assessments drop column if exists ahead_may_fall, drop column if exists ahead_from',
     'alter table covenant_levels drop column if exists is_reset',
     `alter table covenant_terms
       drop column if exists basis, drop column if exists is_ours, drop column if exists impairment_added_back,

@@ -172,7 +172,7 @@ export async function listStrips(
   if (wanted.length === 0) return [];
   return select<StripRecord>(
     tx,
-    `select t.assessment_id as assessmentId, t.covenant_id as covenantId, n.name as covenantName, t.test_date as testDate,
+    `select t.assessment_id as assessmentId, t.covenant_id as covenantId, concat(n.name, if(n.is_ours = 1, ', ours, not in the agreement', '')) as covenantName, t.test_date as testDate,
        t.outcome, t.may_fall as mayFall, t.level, t.is_just_passing as justPassing
      from test_results t
      join covenant_terms n on n.covenant_id = t.covenant_id and n.known_to is null and n.valid_to is null

@@ -2,6 +2,7 @@ import type { Transaction } from 'sequelize';
 import type { Assessment } from '../../../core/assess.ts';
 import type { PreviousAssessment } from '../../../core/borrowerInputs.ts';
 import type { PlainDate } from '../../../core/calendar/plainDate.ts';
+import { tightestAhead } from '../../../core/covenants/smallestHeadroom.ts';
 import { insertRows } from '../insertRows.ts';
 import { execute, select, selectOne } from '../sql.ts';
 import { readAssessment, storedAssessment } from '../storedAssessment.ts';
@@ -27,12 +28,13 @@ export async function insertAssessment(
   assessment: Assessment,
   basis: AssessmentBasis,
 ): Promise<number> {
+  const ahead = tightestAhead(assessment.headroomsAhead);
   const { insertId } = await execute(
     tx,
     `insert into assessments (borrower_id, run_id, as_of, known_at, input_version, method_version, policy_version,
-       cross_section_id, smallest_may_fall, smallest_covenant_id, quality_headline, quality_band, content)
+       cross_section_id, smallest_may_fall, smallest_covenant_id, ahead_may_fall, ahead_from, quality_headline, quality_band, content)
      values (:borrowerId, :runId, :asOf, :knownAt, :inputVersion, :methodVersion, :policyVersion,
-       :crossSectionId, :smallestMayFall, :smallestCovenantId, :qualityHeadline, :qualityBand, :content)`,
+       :crossSectionId, :smallestMayFall, :smallestCovenantId, :aheadMayFall, :aheadFrom, :qualityHeadline, :qualityBand, :content)`,
     {
       ...basis,
       borrowerId: assessment.borrowerId,
@@ -41,6 +43,8 @@ export async function insertAssessment(
       policyVersion: assessment.policyVersion,
       smallestMayFall: assessment.smallestHeadroom?.mayFall.toFixed(10) ?? null,
       smallestCovenantId: assessment.smallestHeadroom?.covenantId ?? null,
+      aheadMayFall: ahead?.mayFall.toFixed(10) ?? null,
+      aheadFrom: ahead?.from ?? null,
       qualityHeadline: assessment.quality.headline,
       qualityBand: assessment.quality.band,
       content: storedAssessment(assessment),

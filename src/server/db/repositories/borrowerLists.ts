@@ -16,6 +16,9 @@ export interface BorrowerListRecord {
   readonly managerName: string;
   readonly assessmentId: number | null;
   readonly smallestCovenantId: number | null;
+  /** At the tightest step agreed for later. */
+  readonly aheadMayFall: string | null;
+  readonly aheadFrom: PlainDate | null;
   readonly qualityHeadline: string | null;
   readonly qualityBand: string | null;
   readonly openAlerts: number;
@@ -28,6 +31,7 @@ const COLUMNS = `b.id, b.name, d.name as deskName, s.label as sectorLabel, b.cur
   coalesce((select sum(f.limit_amount) from facilities f where f.borrower_id = b.id and f.currency = b.currency), 0) as limitTotal,
   coalesce((select sum(f.drawn_amount) from facilities f where f.borrower_id = b.id and f.currency = b.currency), 0) as drawnTotal,
   manager.name as managerName, x.id as assessmentId, x.smallest_covenant_id as smallestCovenantId,
+  x.ahead_may_fall as aheadMayFall, x.ahead_from as aheadFrom,
   x.quality_headline as qualityHeadline, x.quality_band as qualityBand,
   (select count(*) from alerts o where o.borrower_id = b.id and o.open_slot is not null) as openAlerts,
   (select count(*) from alerts u where u.borrower_id = b.id and u.open_slot is not null and u.severity = 'urgent') as urgentAlerts,
