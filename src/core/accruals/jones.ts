@@ -9,9 +9,10 @@
  *
  * What it cannot show: growth and unusual performance leave residuals too, and a residual is not evidence of intent.
  */
-import { err, ok, type Result } from '../result.ts';
-import { leastSquares, type LeastSquares } from '../statistics/leastSquares.ts';
+import { ok, type Result } from '../result.ts';
+import type { LeastSquares } from '../statistics/leastSquares.ts';
 import type { StatisticsError } from '../statistics/statisticsError.ts';
+import { fitForm, formResidual, type LinearForm, type Terms } from './linearForm.ts';
 
 /** One firm's amounts over twelve months, all in one unit. */
 export interface JonesFirm {
@@ -24,17 +25,46 @@ export interface JonesFirm {
   readonly cashFromOperations: number;
 }
 
-export const JONES_MODELS = [
-  'jones-1991',
-  'jones-constant',
-  'modified-constant',
-  'kothari',
-  'with-cash-flow',
-  'modified-1995',
-] as const;
-export type JonesModel = (typeof JONES_MODELS)[number];
+/** Over last year's assets, but for the reciprocal of those and the return, which is a share already. */
+export type JonesTerm =
+  | 'accruals'
+  | 'reciprocalAssets'
+  | 'revenueChange'
+  | 'cashRevenueChange'
+  | 'ppe'
+  | 'priorReturnOnAssets'
+  | 'cashFlow';
+
+const PLAIN = { response: 'accruals', regressors: ['reciprocalAssets', 'revenueChange', 'ppe'] } as const;
+const CASH_REVENUE = ['reciprocalAssets', 'cashRevenueChange', 'ppe'] as const;
+
+export const JONES_FORMS = {
+  'jones-1991': { ...PLAIN, constant: false },
+  'jones-constant': { ...PLAIN, constant: true },
+  'modified-constant': { ...PLAIN, regressors: CASH_REVENUE, constant: true },
+  kothari: { ...PLAIN, regressors: [...CASH_REVENUE, 'priorReturnOnAssets'], constant: true },
+  'with-cash-flow': { ...PLAIN, regressors: [...PLAIN.regressors, 'cashFlow'], constant: true },
+  'modified-1995': { ...PLAIN, predictors: CASH_REVENUE, constant: false },
+} as const satisfies Record<string, LinearForm<JonesTerm>>;
+export type JonesModel = keyof typeof JONES_FORMS;
+export const JONES_MODELS = Object.keys(JONES_FORMS) as readonly JonesModel[];
 
 type JonesFit = Pick<LeastSquares, 'coefficients' | 'residuals' | 'rSquared' | 'n'>;
+
+/**
+ * The terms of one firm. Lagged assets have to be positive: the caller leaves out a firm that has none.
+ *
+ * @example jonesTerms({ lagAssets: 50, totalAccruals: 2, revenueChange: 5, receivablesChange: 1, ppeGross: 30, priorReturnOnAssets: 0.04, cashFromOperations: 6 }).cashRevenueChange // => 0.08
+ */
+export const jonesTerms = (firm: JonesFirm): Terms<JonesTerm> => ({
+  accruals: firm.totalAccruals / firm.lagAssets,
+  reciprocalAssets: 1 / firm.lagAssets,
+  revenueChange: firm.revenueChange / firm.lagAssets,
+  cashRevenueChange: (firm.revenueChange - firm.receivablesChange) / firm.lagAssets,
+  ppe: firm.ppeGross / firm.lagAssets,
+  priorReturnOnAssets: firm.priorReturnOnAssets,
+  cashFlow: firm.cashFromOperations / firm.lagAssets,
+});
 
 /**
  * One of the family fitted on a cross-section of firms. Residuals are shares of last year's assets.
@@ -47,43 +77,15 @@ export function jonesModel(
   model: JonesModel,
   firms: readonly JonesFirm[],
 ): Result<JonesFit, StatisticsError> {
-  const revenue = firms.map((firm) => firm.revenueChange / firm.lagAssets);
-  const cashRevenue = firms.map((firm) => (firm.revenueChange - firm.receivablesChange) / firm.lagAssets);
-  const scale = firms.map((firm) => 1 / firm.lagAssets);
-  const ppe = firms.map((firm) => firm.ppeGross / firm.lagAssets);
-  const accruals = firms.map((firm) => firm.totalAccruals / firm.lagAssets);
-  const fit = (constant: boolean, ...columns: number[][]) => leastSquares(accruals, columns, { constant });
-  switch (model) {
-    case 'jones-1991':
-      return fit(false, scale, revenue, ppe);
-    case 'jones-constant':
-      return fit(true, scale, revenue, ppe);
-    case 'modified-constant':
-      return fit(true, scale, cashRevenue, ppe);
-    case 'kothari':
-      return fit(
-        true,
-        scale,
-        cashRevenue,
-        ppe,
-        firms.map((firm) => firm.priorReturnOnAssets),
-      );
-    case 'with-cash-flow':
-      return fit(
-        true,
-        scale,
-        revenue,
-        ppe,
-        firms.map((firm) => firm.cashFromOperations / firm.lagAssets),
-      );
-    case 'modified-1995': {
-      const fitted = fit(false, scale, revenue, ppe);
-      if (!fitted.ok) return err(fitted.error);
-      const [onScale, onRevenue, onPpe] = fitted.value.coefficients as [number, number, number];
-      const residuals = accruals.map(
-        (value, k) => value - onScale * scale[k]! - onRevenue * cashRevenue[k]! - onPpe * ppe[k]!,
-      );
-      return ok({ coefficients: fitted.value.coefficients, residuals, rSquared: null, n: firms.length });
-    }
-  }
+  const form: LinearForm<JonesTerm> = JONES_FORMS[model];
+  const rows = firms.map(jonesTerms);
+  const fit = fitForm(form, rows);
+  if (!fit.ok || form.predictors === undefined) return fit;
+  const { coefficients } = fit.value;
+  return ok({
+    coefficients,
+    residuals: rows.map((row) => formResidual(form, coefficients, row.accruals, row)),
+    rSquared: null,
+    n: firms.length,
+  });
 }

@@ -2,11 +2,12 @@ import { monthsBefore } from '../calendar/fiscalYear.ts';
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
 import { toSample } from '../money/toSample.ts';
-import { balanceAt, lastTwelveMonths, quarterFlow, type Presence } from '../statements/flows.ts';
+import { lastTwelveMonths, quarterFlow } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
 import type { InputUsed, Reading } from '../statements/reading.ts';
 import type { Statement } from '../statements/statement.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
+import { samplesOf, type Route } from './samples.ts';
 
 /** Years and quarters before the quarter end that is looked at. */
 export interface Back {
@@ -52,24 +53,33 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
     read.push(reading.inputs);
     return toSample(reading.value);
   };
+  const samples = samplesOf(book);
+  const dates = new Map<number, PlainDate>();
+  const dateOf = (months: number): PlainDate => {
+    const known = dates.get(months);
+    if (known !== undefined) return known;
+    const date = monthsBefore(quarterEnd, months);
+    dates.set(months, date);
+    return date;
+  };
   const figure =
-    (
-      find: (book: StatementBook, line: LineItemCode, date: PlainDate, presence: Presence) => Reading,
-      presence: Presence,
-    ) =>
-    (line: LineItemCode, back: Back = NOW): number | undefined =>
-      sample(find(book, line, monthsBefore(quarterEnd, back.months), presence));
+    (route: Route) =>
+    (line: LineItemCode, back: Back = NOW): number | undefined => {
+      const found = samples(route, line, dateOf(back.months));
+      if (found === null) return undefined;
+      read.push(found.inputs);
+      return found.value;
+    };
   return {
-    twelveMonths: figure(lastTwelveMonths, 'required'),
-    quarter: figure(quarterFlow, 'required'),
-    balance: figure(balanceAt, 'required'),
-    optionalTwelveMonths: figure(lastTwelveMonths, 'optional'),
-    optionalQuarter: figure(quarterFlow, 'optional'),
-    optionalBalance: figure(balanceAt, 'optional'),
+    twelveMonths: figure('twelve months'),
+    quarter: figure('quarter'),
+    balance: figure('balance'),
+    optionalTwelveMonths: figure('twelve months, optional'),
+    optionalQuarter: figure('quarter, optional'),
+    optionalBalance: figure('balance, optional'),
     ebitda: () => sample(ebitdaOfTwelveMonths(book, quarterEnd).ebitda),
-    hasQuarter: (line, back = NOW) =>
-      quarterFlow(book, line, monthsBefore(quarterEnd, back.months)).kind === 'value',
-    hasBalanceSheet: ({ months }) => book.statementOf(monthsBefore(quarterEnd, months), 0) !== null,
+    hasQuarter: (line, back = NOW) => quarterFlow(book, line, dateOf(back.months)).kind === 'value',
+    hasBalanceSheet: ({ months }) => book.statementOf(dateOf(months), 0) !== null,
     isMissing: (line) => lastTwelveMonths(book, line, quarterEnd).kind === 'missing',
     sample,
     used: () => {

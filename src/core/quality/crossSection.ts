@@ -8,6 +8,7 @@ import { accrualModelFor, unexplainedAccruals, type AccrualModel } from './accru
 import { comparedFigures, COMPARED_FIGURES, type ComparedFigure } from './comparedFigures.ts';
 import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
 import type { PeerInputs } from './peerFigures.ts';
+import { publishedModelsFor, type PublishedModels } from './publishedModels.ts';
 import { bySector } from './bySector.ts';
 
 export type { PeerFigure, PeerInputs } from './peerFigures.ts';
@@ -22,6 +23,8 @@ export interface QuarterCrossSection {
   readonly quarterEnd: PlainDate;
   /** Null where the whole book is too small for a fit. */
   readonly accrualModel: AccrualModel | null;
+  /** Beside the score; null in cross-sections that were stored before they were kept. */
+  readonly published?: PublishedModels | null;
   readonly firms: number;
   /** Together the whole book. */
   readonly sectors: readonly SectorFigures[];
@@ -81,6 +84,7 @@ function quarterCrossSection(quarterEnd: PlainDate, peers: readonly PeerInputs[]
   return {
     quarterEnd,
     accrualModel,
+    published: publishedModelsFor(peers),
     firms: peers.length,
     sectors: sectors.map(([sector, own]) => ({
       sector,

@@ -1,5 +1,5 @@
 /** How each figure that a borrower brings to the comparison is read from its lines. */
-import { ifAll, YEAR_AGO, type AccountsAt } from './accountsAt.ts';
+import { ifAll, TWO_YEARS_AGO, YEAR_AGO, type AccountsAt } from './accountsAt.ts';
 import { cashFlowOf, writtenOff } from './cashFlowOf.ts';
 import { dayFlow } from './dayFlows.ts';
 import type { PeerFigure } from './peerFigures.ts';
@@ -7,7 +7,15 @@ import { workingCapital } from './workingCapital.ts';
 
 /** Computed out of many lines over years: screens and noise have files of their own. */
 type ManyLineFigure = 'mScore' | 'fScore' | 'accrualNoise';
-export type LineFigure = Exclude<PeerFigure, ManyLineFigure>;
+/** Needed by published models beside the score alone. */
+const BESIDE_FIGURES = [
+  'netIncomePrior',
+  'revenueBefore',
+  'productionCosts',
+  'discretionaryExpenses',
+] as const;
+type BesideFigure = (typeof BESIDE_FIGURES)[number];
+export type LineFigure = Exclude<PeerFigure, ManyLineFigure | BesideFigure>;
 
 type Read = (accounts: AccountsAt) => number | undefined;
 
@@ -48,6 +56,36 @@ export const UNDER_ONE_PRESENTATION: readonly LineFigure[] = [
   'taxPaid',
   'workingCapitalAccruals',
 ];
+
+const READ_BESIDE: Readonly<Record<BesideFigure, Read>> = {
+  netIncomePrior: ({ twelveMonths }) => twelveMonths('net_income', YEAR_AGO),
+  revenueBefore: ({ twelveMonths }) => twelveMonths('revenue', TWO_YEARS_AGO),
+  productionCosts: ({ twelveMonths, optionalBalance }) =>
+    ifAll(
+      {
+        cogs: twelveMonths('cogs'),
+        closing: optionalBalance('inventory'),
+        opening: optionalBalance('inventory', YEAR_AGO),
+      },
+      ({ cogs, closing, opening }) => cogs + closing - opening,
+    ),
+  discretionaryExpenses: ({ twelveMonths, optionalTwelveMonths }) =>
+    ifAll(
+      { overheads: twelveMonths('sga'), research: optionalTwelveMonths('research_development') },
+      ({ overheads, research }) => overheads + research,
+    ),
+};
+
+/**
+ * The figures that only published models beside the score need; none where they rest on accounts that do not tie.
+ *
+ * @example figuresBeside(accounts) // => {}
+ */
+export function figuresBeside(accounts: AccountsAt): Readonly<Partial<Record<BesideFigure, number>>> {
+  const read = BESIDE_FIGURES.map((figure) => [figure, READ_BESIDE[figure](accounts)] as const);
+  if (accounts.used().some(({ tie }) => tie === 'does-not-tie')) return {};
+  return Object.fromEntries(read.filter(([, value]) => value !== undefined));
+}
 
 /**
  * One figure, positive where it is paid; undefined where a line is missing or has no meaning.

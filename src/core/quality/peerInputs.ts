@@ -12,7 +12,7 @@ import { mixesPresentations } from './cashFlowPresentation.ts';
 import { hasDaysOnYear } from './dayFlows.ts';
 import { noiseSeriesOf } from './noiseSeries.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
-import { LINE_FIGURES, readFigure, UNDER_ONE_PRESENTATION } from './lineFigures.ts';
+import { figuresBeside, LINE_FIGURES, readFigure, UNDER_ONE_PRESENTATION } from './lineFigures.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import { fScreen, mScreen } from './screenScores.ts';
 
@@ -107,7 +107,12 @@ function atQuarterEnd(
     derivedCashFlow,
     cashFlowPresentationChanged,
     daysOnYear: hasDaysOnYear(accounts),
-    figures: { ...Object.fromEntries(given), ...screens, ...noise.figures },
+    figures: {
+      ...Object.fromEntries(given),
+      ...figuresBeside(accountsAt(book, quarterEnd)),
+      ...screens,
+      ...noise.figures,
+    },
     whyMissing: { ...whyMissing, ...noise.whyMissing },
     ...(mScoreForm && { mScoreForm }),
     acquisitionInYear: acquisition.inYear,
