@@ -71,6 +71,6 @@ test.each([
 });
 
 test('a share is printed with every digit it has', () => {
-  expect(printSetting('justPassingBand', decimal('0.02'))).toBe('2.0\u00a0%');
+  expect(printSetting('justPassingBand', decimal('0.02'))).toBe('2\u00a0%');
   expect(printSetting('justPassingBand', decimal('0.01755'))).toBe('1.755\u00a0%');
 });

@@ -3,7 +3,7 @@
  * to `Policy` adds its line here; the form, the comparison of versions and the method pages follow from it.
  */
 import { decimal, type Decimal } from './money/decimal.ts';
-import { formatShare } from './money/print.ts';
+import { formatShareLevel } from './money/print.ts';
 import type { OutlookPolicy, Policy, ScenarioSizes } from './policy.ts';
 
 /** A share of one, or a whole number of something. */
@@ -213,14 +213,12 @@ export const policySetting = (key: PolicyKey): PolicySetting => POLICY_SETTINGS[
 /**
  * A setting's value as printed, with its unit.
  *
- * @example printSetting('thinBelow', decimal('0.1')) // => '10.0\u00a0%'
+ * @example printSetting('thinBelow', decimal('0.1')) // => '10\u00a0%'
  * @example printSetting('stepDown.soonDays', decimal(90)) // => '90 days'
  */
 export function printSetting(key: PolicyKey, value: Decimal): string {
   const { unit } = policySetting(key);
-  return unit === 'share'
-    ? formatShare(value, { places: Math.max(1, value.times(100).dp()) })
-    : `${value.toFixed()} ${unit}`;
+  return unit === 'share' ? formatShareLevel(value) : `${value.toFixed()} ${unit}`;
 }
 
 /** Why a value cannot stand, in words that say what to do. */
@@ -233,7 +231,7 @@ export interface SettingFault {
  * Why a value cannot be that of the setting by itself; null where it can. In the setting's unit: a share of one, or a
  * count.
  *
- * @example settingFault('thinBelow', decimal('0.6')) // => 'between 1.0\u00a0% and 50.0\u00a0%'
+ * @example settingFault('thinBelow', decimal('0.6')) // => 'between 1\u00a0% and 50\u00a0%'
  * @example settingFault('repeated.ofLast', decimal('2.5')) // => 'a whole number of tests'
  */
 export function settingFault(key: PolicyKey, value: Decimal): string | null {

@@ -87,7 +87,7 @@ describe('a proposal', () => {
         id,
         state: 'proposed',
         proposedBy: administrator.name,
-        changes: [{ key: 'thinBelow', before: '10.0\u00a0%', after: '50.0\u00a0%' }],
+        changes: [{ key: 'thinBelow', before: '10\u00a0%', after: '50\u00a0%' }],
       },
     ]);
     expect((await barCounts(member)).policyToDecide).toBe(1);
@@ -239,7 +239,7 @@ describe('a further version', () => {
     await change({ from: 2, validFrom: '2026-12-20', values: { qualityWeakBelow: '25' } });
     const { values, versions: all } = await shown(new Date('2026-12-20T09:00:00Z'));
     const valueOf = (key: string) => values.find((value) => value.key === key)?.inForce;
-    expect(valueOf('thinBelow')).toBe('50.0\u00a0%');
+    expect(valueOf('thinBelow')).toBe('50\u00a0%');
     expect(valueOf('qualityWeakBelow')).toBe('25 points');
     expect(all.map(({ version, validTo }) => [version, validTo])).toEqual([
       [3, null],

@@ -38,6 +38,8 @@ function PolicyParts({ first, personId }: PolicySheetProps) {
   const changed = (what: string) => {
     setProposing(false);
     setSaid(what);
+    // The form or dialog that had the focus is gone; what was decided stands at the top.
+    document.getElementById('main')?.focus();
     void policy.refetch();
   };
   return (

@@ -63,6 +63,7 @@ export function ProposePolicy({ view, onClose, onDone }: ProposePolicyProps) {
         </div>
         <Field
           label="Holds from"
+          fieldClassName="max-w-[250px]"
           type="date"
           min={view.earliest}
           value={validFrom}

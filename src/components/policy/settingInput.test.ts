@@ -13,7 +13,7 @@ describe('a share', () => {
     expect(inputValue('thinBelow', '50')).toEqual({ ok: true, value: '0.5' });
     expect(inputValue('thinBelow', '50.1')).toEqual({
       ok: false,
-      fault: 'It must be between 1.0\u00a0% and 50.0\u00a0%.',
+      fault: 'It must be between 1\u00a0% and 50\u00a0%.',
     });
   });
 });

@@ -2,7 +2,7 @@ import { formatDay } from '../calendar/printDay.ts';
 import { isMaximum } from '../covenants/covenant.ts';
 import { isMet, isNotMet, type CounterfactualKind, type CovenantTest } from '../covenants/covenantTest.ts';
 import { testedInWords, testInWords } from '../covenants/wording.ts';
-import { formatShare } from '../money/print.ts';
+import { formatShareLevel } from '../money/print.ts';
 import type { JustPassing } from '../patterns/justPassing.ts';
 import type { Policy } from '../policy.ts';
 import { nearLineFacts, nearLineSentence } from '../patterns/patternWording.ts';
@@ -78,7 +78,7 @@ function countInWords({ inBand, ofLast, run }: JustPassing): string {
 }
 
 function wouldChange({ measure, operator, level }: CovenantTest, { justPassingBand: band }: Policy): string {
-  const share = formatShare(band, { places: 0 });
+  const share = formatShareLevel(band);
   if (!level) return `Results ${share} of the level or more away from it.`;
   const edge = isMaximum(operator) ? level.minus(level.times(band)) : level.plus(level.times(band));
   return `Next tests at ${testedInWords(measure, edge, level)} or ${isMaximum(operator) ? 'less' : 'more'}, ${share} from the level.`;

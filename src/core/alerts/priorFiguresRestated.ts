@@ -1,6 +1,6 @@
 import { formatDay } from '../calendar/printDay.ts';
 import { MEASURES } from '../measures/index.ts';
-import { formatMoney, formatShare } from '../money/print.ts';
+import { formatMoney, formatShare, formatShareLevel } from '../money/print.ts';
 import type { Policy } from '../policy.ts';
 import { restatementsOf, type EarningsMove, type OutcomeMove, type Restatement } from './restatements.ts';
 import type { AlertContext, AlertRule } from './rule.ts';
@@ -48,7 +48,7 @@ function sentenceOf(largest: EarningsMove | null, outcomes: readonly OutcomeMove
 
 const wouldChange = (largest: EarningsMove | null, { restatedBy }: Policy): string =>
   largest
-    ? `EBITDA within ${formatShare(restatedBy, { places: 0 })} of ${formatMoney(largest.before)}, and no past outcome changed.`
+    ? `EBITDA within ${formatShareLevel(restatedBy)} of ${formatMoney(largest.before)}, and no past outcome changed.`
     : 'No past outcome changed: 0 instead of 1 or more.';
 
 function evidenceOf({ receivedOn, earnings, outcomes }: Restatement, { inputs }: AlertContext) {

@@ -2,7 +2,7 @@ import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { saidOf } from '../covenants/wording.ts';
 import { MEASURES } from '../measures/index.ts';
-import { formatMoney, formatShare } from '../money/print.ts';
+import { formatMoney, formatShare, formatShareLevel } from '../money/print.ts';
 import type { Policy } from '../policy.ts';
 import { amountThatLeaves, insteadOf } from './neededAmount.ts';
 import { liveTests, severityOn, type AlertRule } from './rule.ts';
@@ -37,6 +37,6 @@ function sentenceOf(covenant: Covenant, test: CovenantTest, { thinBelow }: Polic
 
 function wouldChange(test: CovenantTest, { thinBelow }: Policy): string {
   const needed = test.level && amountThatLeaves(test, test.level, thinBelow);
-  const left = `leaves ${formatShare(thinBelow, { places: 0 })}`;
+  const left = `leaves ${formatShareLevel(thinBelow)}`;
   return needed ? `${insteadOf(test, needed)} ${left}.` : `A result that ${left}.`;
 }

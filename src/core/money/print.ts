@@ -58,6 +58,15 @@ export function formatShare(share: Decimal, { places = 1, beside = null }: Print
 }
 
 /**
+ * A share that an agreement or the policy states: every digit it has, whole where it is whole.
+ *
+ * @example formatShareLevel(decimal('0.02')) // => '2\u00a0%'
+ * @example formatShareLevel(decimal('0.125')) // => '12.5\u00a0%'
+ */
+export const formatShareLevel = (share: Decimal): string =>
+  formatShare(share, { places: share.times(100).dp() });
+
+/**
  * A score of nought to a hundred, whole unless a line lies beside it.
  *
  * @example formatScore(decimal('29.6'), { beside: decimal(30) }) // => '29.6'

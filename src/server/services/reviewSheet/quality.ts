@@ -4,7 +4,7 @@ import type { SheetBlock, SheetCell, SheetColumn } from '../../../contracts/revi
 import { dayText } from '../../../core/calendar/printDay.ts';
 import { NO_FINDING_OF_MISCONDUCT, POPULATION_NOT_BORROWER } from '../../../core/cautions.ts';
 import { decimal } from '../../../core/money/decimal.ts';
-import { formatShare } from '../../../core/money/print.ts';
+import { formatShareLevel } from '../../../core/money/print.ts';
 import type { QualityBlock, QuarterScore, ReportingQuality } from '../../../core/quality/score.ts';
 import { absent, countCell, dayCell, pointsCell, shareCell, textCell } from './cells.ts';
 import { headlineBefore } from './changes.ts';
@@ -119,7 +119,7 @@ export function justPassingSection({ view: { covenants }, policy }: SheetMateria
   return [
     {
       kind: 'paragraph',
-      text: `Just passing: within ${formatShare(policy.justPassingBand, { places: 0 })} of the level on the passing side, as a share of the level. An observation, nothing about chance. How the whole book stands at its limits: not recorded.`,
+      text: `Just passing: within ${formatShareLevel(policy.justPassingBand)} of the level on the passing side, as a share of the level. An observation, nothing about chance. How the whole book stands at its limits: not recorded.`,
     },
     {
       kind: 'table',
