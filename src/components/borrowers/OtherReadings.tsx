@@ -1,19 +1,13 @@
 import type { CovenantView } from '../../contracts/borrowers.ts';
-import { isMet, isShort, type CounterfactualKind, type Outcome } from '../../core/covenants/covenantTest.ts';
+import type { Outcome } from '../../core/covenants/covenantTest.ts';
 import { spokenTest } from '../../core/covenants/spokenTest.ts';
+import { COUNTERFACTUAL_WORDS, wouldHaveBeen } from '../../core/covenants/wording.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../core/money/print.ts';
 import { MethodLink } from '../marks/MethodLink.tsx';
 import { OutcomeText } from '../marks/OutcomeText.tsx';
 import { Facts, type Fact } from '../ui/Facts.tsx';
 import { testedText } from './figures.ts';
-
-const LABELS: Readonly<Record<CounterfactualKind, string>> = {
-  'without add-backs': 'Without add-backs',
-  'without unexplained accruals': 'Without accruals the peers do not show',
-  'without either': 'Without either',
-  'on a cash basis': 'On a cash basis',
-};
 
 /** What the latest test would have come to on other readings of earnings and of accounting. */
 export function OtherReadings({ covenant }: { readonly covenant: CovenantView }) {
@@ -33,11 +27,11 @@ export function OtherReadings({ covenant }: { readonly covenant: CovenantView })
           },
           ...covenant.counterfactuals.map((other): Fact => ({
             key: other.label,
-            label: `${LABELS[other.label]}, ${formatMoney(decimal(other.takenOut))} taken out`,
+            label: `${COUNTERFACTUAL_WORDS[other.label]}, ${formatMoney(decimal(other.takenOut))} taken out`,
             value: (
               <>
                 {testedText(covenant, { tested: other.ratio, ...level })}{' '}
-                <Would outcome={other.outcome} isOurs={covenant.isOurs} />
+                <span className="type-second">{wouldHaveBeen(other.outcome)}</span>
               </>
             ),
           })),
@@ -79,14 +73,5 @@ function Line({ text, outcome }: { readonly text: string; readonly outcome: Outc
     <>
       {text} <OutcomeText outcome={outcome} />
     </>
-  );
-}
-
-/** A reading that nobody reported decides nothing, so its words stay conditional. */
-function Would({ outcome, isOurs }: { readonly outcome: Outcome; readonly isOurs: boolean }) {
-  if (isMet(outcome)) return <span className="type-second">would have been met</span>;
-  if (!isShort(outcome)) return <span className="type-second">{outcome}</span>;
-  return (
-    <span className="type-second">{isOurs ? `would have been ${outcome}` : 'would not have been met'}</span>
   );
 }

@@ -4,7 +4,14 @@ import type { MeasureCode } from '../measures/measure.ts';
 import { figureInUnit, levelInUnit } from '../measures/printUnit.ts';
 import type { Decimal } from '../money/decimal.ts';
 import type { Covenant, Operator } from './covenant.ts';
-import type { CovenantTest } from './covenantTest.ts';
+import {
+  isMet,
+  isNotMet,
+  isPastOurTrigger,
+  type CounterfactualKind,
+  type CovenantTest,
+  type Outcome,
+} from './covenantTest.ts';
 
 export const OPERATOR_WORDS: Readonly<Record<Operator, string>> = {
   '<=': 'at most',
@@ -70,3 +77,23 @@ export const covenantInWords = ({
   isOurs,
 }: Pick<Covenant, 'name' | 'clause' | 'isOurs'>): string =>
   isOurs ? `${name}, ${OURS}` : `${name}, clause ${clause}`;
+
+/** What was taken out of earnings, in words: methods.md B7. */
+export const COUNTERFACTUAL_WORDS: Readonly<Record<CounterfactualKind, string>> = {
+  'without add-backs': 'Without add-backs',
+  'without unexplained accruals': 'Without accruals the peers do not show',
+  'without either': 'Without either',
+  'on a cash basis': 'On a cash basis',
+};
+
+/**
+ * The outcome of a reading that nobody reported: it decides nothing, so its words stay conditional.
+ *
+ * @example wouldHaveBeen('not met') // => 'would not have been met'
+ * @example wouldHaveBeen('above our trigger') // => 'would have been above our trigger'
+ */
+export function wouldHaveBeen(outcome: Outcome): string {
+  if (isMet(outcome)) return 'would have been met';
+  if (isNotMet(outcome)) return 'would not have been met';
+  return isPastOurTrigger(outcome) ? `would have been ${outcome}` : outcome;
+}

@@ -2,13 +2,13 @@
 import type { CovenantView } from '../../../contracts/borrowers.ts';
 import type { SheetBlock, SheetCell, SheetColumn } from '../../../contracts/reviewSheet.ts';
 import { plainDate } from '../../../core/calendar/plainDate.ts';
-import { isNotMet } from '../../../core/covenants/covenantTest.ts';
+import { isShort } from '../../../core/covenants/covenantTest.ts';
 import { laterLevels } from '../../../core/covenants/levels.ts';
 import { OPERATOR_WORDS } from '../../../core/covenants/wording.ts';
 import { decimal } from '../../../core/money/decimal.ts';
 import { formatShare } from '../../../core/money/print.ts';
 import { absent, dayCell, levelCell, moneyOrAbsent, notRecorded, shareOrAbsent, textCell } from './cells.ts';
-import { NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
+import { covenantName, NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
 
 const COLUMNS: readonly SheetColumn[] = [
   { key: 'covenant', label: 'Covenant', span: 2 },
@@ -70,10 +70,10 @@ function breakEvenRow(material: SheetMaterial, covenant: CovenantView): readonly
   const nm = test?.reason ?? 'n.m.';
   const ownSide = { share: headroom?.mayFall ?? null, money: headroom?.moneyLeft ?? null };
   const otherSide = { share: headroom?.otherSideShare ?? null, money: headroom?.otherSideMayRise ?? null };
-  const later = covenant.laterLevels.find(({ outcome }) => isNotMet(outcome));
+  const later = covenant.laterLevels.find(({ outcome }) => isShort(outcome));
   const agreed = test && terms ? laterLevels(terms.levels, plainDate(test.testDate)) : [];
   return [
-    textCell(covenant.name),
+    textCell(covenantName(covenant)),
     ...sideCells(falls, covenant.currency, ownSide, nm),
     ...sideCells(
       rises,

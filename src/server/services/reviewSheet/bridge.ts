@@ -4,13 +4,13 @@ import type { SheetBlock, SheetCell, SheetColumn } from '../../../contracts/revi
 import { plainDate, type PlainDate } from '../../../core/calendar/plainDate.ts';
 import { dayText } from '../../../core/calendar/printDay.ts';
 import type { AddBack, Covenant } from '../../../core/covenants/covenant.ts';
-import { testedInWords } from '../../../core/covenants/wording.ts';
+import { COUNTERFACTUAL_WORDS, testedInWords, wouldHaveBeen } from '../../../core/covenants/wording.ts';
 import { addBacksWithin, allowAddBacks } from '../../../core/measures/addBacks.ts';
 import { monthsOfFlow } from '../../../core/measures/annualised.ts';
 import { Decimal, decimal } from '../../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../../core/money/print.ts';
 import { absent, amountCell, notRecorded, textCell } from './cells.ts';
-import { NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
+import { covenantName, NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
 import { referencesCell } from './sources.ts';
 
 const COLUMNS: readonly SheetColumn[] = [
@@ -52,7 +52,7 @@ function bridgesOf(covenants: readonly CovenantView[]): readonly Bridge[] {
     const longer = kept.find((one) => one.testDate === bridge.testDate && beginsWith(one.rows, bridge.rows));
     if (!longer) return [...kept, bridge];
     const upTo = bridge.rows.at(-1)?.label ?? '';
-    const also = { ...longer, alsoFor: [...longer.alsoFor, { name: bridge.covenant.name, upTo }] };
+    const also = { ...longer, alsoFor: [...longer.alsoFor, { name: covenantName(bridge.covenant), upTo }] };
     return kept.map((one) => (one === longer ? also : one));
   }, []);
 }
@@ -72,7 +72,7 @@ function bridgeBlocks(material: SheetMaterial, bridge: Bridge): readonly SheetBl
   return [
     {
       kind: 'table',
-      caption: `${covenant.name}, twelve months to ${dayText(testDate)}, ${covenant.currency}`,
+      caption: `${covenantName(covenant)}, twelve months to ${dayText(testDate)}, ${covenant.currency}`,
       columns: COLUMNS,
       rows: rows.map((row) => bridgeRow(material, row, recordedOf(row, addBackRows, recorded))),
     },
@@ -162,5 +162,5 @@ const counterfactualLines = (covenant: CovenantView): readonly string[] =>
       other.breakEvenShare === null
         ? ''
         : ` The test needs ${formatShare(decimal(other.breakEvenShare))} of the add-backs to be met.`;
-    return `Without add-backs of ${covenant.currency} ${formatMoney(decimal(other.takenOut))}: ${ratio}, ${other.outcome}.${needed}`;
+    return `${COUNTERFACTUAL_WORDS[other.label]}, ${covenant.currency} ${formatMoney(decimal(other.takenOut))} taken out: ${ratio}, ${wouldHaveBeen(other.outcome)}.${needed}`;
   });

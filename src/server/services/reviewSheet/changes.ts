@@ -10,7 +10,7 @@ import { formatScore, formatShare } from '../../../core/money/print.ts';
 import { headlineOf } from '../../../core/quality/headline.ts';
 import { QUALITY_TABLE } from '../../../core/quality/qualityTable.ts';
 import type { ReportingQuality } from '../../../core/quality/score.ts';
-import type { SheetMaterial } from './material.ts';
+import { covenantName, type SheetMaterial } from './material.ts';
 
 const LINES_MOST = 5;
 
@@ -71,7 +71,7 @@ function byLargestMove(one: TestMove, other: TestMove): number {
 }
 
 const moveLine = ({ covenant, latest, before }: TestMove): string =>
-  `${covenant.name}, ${dayText(latest.testDate)}: ${saidOf(covenant, latest)}. ${dayText(before.testDate)}: ${saidOf(covenant, before)}.`;
+  `${covenantName(covenant)}, ${dayText(latest.testDate)}: ${saidOf(covenant, latest)}. ${dayText(before.testDate)}: ${saidOf(covenant, before)}.`;
 
 /** '3.47x, at most 3.50x: met, thin, earnings may fall 1.0 %' */
 function saidOf({ measure, operator, fallOf }: CovenantView, test: TestView): string {

@@ -6,7 +6,7 @@ import { dayText } from '../../../core/calendar/printDay.ts';
 import { THE_AGREEMENT_GOVERNS } from '../../../core/cautions.ts';
 import type { Covenant, CovenantLevel } from '../../../core/covenants/covenant.ts';
 import { laterLevels, testDates } from '../../../core/covenants/levels.ts';
-import { OPERATOR_WORDS } from '../../../core/covenants/wording.ts';
+import { OPERATOR_WORDS, OURS, testedInWords } from '../../../core/covenants/wording.ts';
 import { decimal, ZERO } from '../../../core/money/decimal.ts';
 import {
   absent,
@@ -18,7 +18,7 @@ import {
   testedCell,
   textCell,
 } from './cells.ts';
-import { NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
+import { covenantName, NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
 
 const LAST_TESTS = 8;
 
@@ -62,8 +62,8 @@ function covenantRow(material: SheetMaterial, covenant: CovenantView): readonly 
   const next = test && terms ? laterLevels(terms.levels, plainDate(test.testDate))[0] : undefined;
   const nm = 'n.m.';
   return [
-    textCell(covenant.name),
-    textCell(`${covenant.facilityName}, ${clauseText(covenant)}`),
+    textCell(covenantName(covenant)),
+    textCell(`${covenant.facilityName}, ${covenant.isOurs ? OURS : clauseText(covenant)}`),
     level ? levelCell(covenant, operator, level) : absent('no level in force'),
     test ? dayCell(test.testDate) : absent('not tested yet'),
     nextLevelCell(covenant, next),
@@ -124,7 +124,7 @@ function testsCell(covenant: CovenantView): SheetCell {
   if (tests.length === 0) return absent('not tested yet');
   const line = (test: (typeof tests)[number]) =>
     `${dayText(test.testDate)} ${test.outcome}${test.justPassing ? ', just passing' : ''}`;
-  return { kind: 'tests', label: covenant.name, tests, text: tests.map(line).join('; ') };
+  return { kind: 'tests', label: covenantName(covenant), tests, text: tests.map(line).join('; ') };
 }
 
 function statusCell(covenant: CovenantView, test: TestView, terms: Covenant | null): SheetCell {
@@ -134,6 +134,8 @@ function statusCell(covenant: CovenantView, test: TestView, terms: Covenant | nu
     test.reason !== null && !test.outcome.includes(test.reason) && test.reason,
     waiver &&
       `waived on ${dayText(waiver.grantedOn)}${waiver.until ? ` until ${dayText(waiver.until)}` : ''}: ${waiver.conditions}`,
+    test.isFirstUnderReset && 'first test under a reset',
+    covenant.cure?.ratioWith && withMoney(covenant, test, covenant.cure.ratioWith),
     covenant.checking,
     awaited && awaited !== test && `${dayText(awaited.testDate)}: ${awaited.outcome}`,
   ].filter((remark): remark is string => typeof remark === 'string' && remark !== '');
@@ -146,6 +148,10 @@ function statusCell(covenant: CovenantView, test: TestView, terms: Covenant | nu
     text: [`${outcome}${justPassing ? ', just passing' : ''}`, ...remarks].join('; '),
   };
 }
+
+/** 'with the money put in 3.50x, for the covenant only' */
+const withMoney = (covenant: CovenantView, { level }: TestView, ratio: string): string =>
+  `with the money put in ${testedInWords(covenant.measure, decimal(ratio), level === null ? null : decimal(level))}, for the covenant only`;
 
 function nextTestCell({ view: { computed } }: SheetMaterial, terms: Covenant | null): SheetCell {
   if (!computed || !terms) return notRecorded;

@@ -2,6 +2,7 @@
 import type { BorrowerView, CovenantView, TestView } from '../../../contracts/borrowers.ts';
 import type { Covenant } from '../../../core/covenants/covenant.ts';
 import { spokenTest } from '../../../core/covenants/spokenTest.ts';
+import { OURS } from '../../../core/covenants/wording.ts';
 import type { Policy } from '../../../core/policy.ts';
 import type { FigureSourceRecord, SignalRecord } from '../../db/repositories/reviewSheets.ts';
 
@@ -24,3 +25,6 @@ export const shownTest = ({ tests }: CovenantView): TestView | null => spokenTes
 
 export const termsOf = ({ covenants }: SheetMaterial, { id }: CovenantView): Covenant | null =>
   covenants.find((covenant) => covenant.id === id) ?? null;
+
+/** The desk's own trigger says so by its name: a committee reads no second column first. */
+export const covenantName = ({ name, isOurs }: CovenantView): string => (isOurs ? `${name}, ${OURS}` : name);

@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { REVIEW_SECTIONS, type ReviewSheet, type SheetCell } from '../../../contracts/reviewSheet.ts';
 import { CAUTIONS } from '../../../core/cautions.ts';
+import { decimal } from '../../../core/money/decimal.ts';
 import { buildCovenant, buildLevel, buildYear } from '../../../core/covenants/covenant.fixture.ts';
 import { buildMaterial, buildSignal, COVENANTS } from './material.fixture.ts';
 import { reviewSheet } from './reviewSheet.ts';
@@ -24,7 +25,7 @@ test('twenty sections stand in their order, and what fills itself is filled', ()
   expect(sheet.sections.map(({ title }) => title)).toEqual([...REVIEW_SECTIONS]);
   expect(sheet.sections.map(({ number }) => number)).toEqual(REVIEW_SECTIONS.map((_, place) => place + 1));
   expect(sheet.sections.filter(({ isRecorded }) => isRecorded).map(({ number }) => number)).toEqual([
-    1, 3, 6, 7, 9, 11, 12, 16,
+    1, 3, 6, 7, 9, 11, 12, 16, 18,
   ]);
 });
 
@@ -256,7 +257,7 @@ test('the bridge leads from net income to covenant EBITDA with cap, evidence and
   expect(rows[3]?.['cells']?.text).toBe("Figures 2025.xlsx: 'P&L ''25'!D6, D7");
   expect(textsOf(sheet, 9)).toEqual([
     'Cap on add-backs 25\u00a0% of EBITDA before the capped add-backs: EUR 3. Capped add-backs 1, taken 1: 20.0\u00a0% of the cap used.',
-    'Without add-backs of EUR 1: 3.68x, not met.',
+    'Without add-backs, EUR 1 taken out: 3.68x, would not have been met.',
   ]);
 });
 
@@ -346,4 +347,42 @@ test('stored as text and read again, a sheet is the same', () => {
 
 test('no decision word of the agreement is printed', () => {
   expect(JSON.stringify(sheet)).not.toMatch(/breach|default|fraud/i);
+});
+
+test('the desk’s own trigger is marked ours in every table and never reads not met', () => {
+  const [agreed, other] = COVENANTS;
+  const marked = reviewSheet(buildMaterial({ covenants: [{ ...agreed!, isOurs: true }, other!] }));
+  const [row] = rowsOf(marked, 6);
+  expect(row?.['covenant']?.text).toBe('Net leverage, ours, not in the agreement');
+  expect(row?.['clause']?.text).toBe('Term loan A, ours, not in the agreement');
+  expect(row?.['status']?.text).toMatch(/^above our trigger/);
+  expect(rowsOf(marked, 7)[0]?.['covenant']?.text).toBe('Net leverage, ours, not in the agreement');
+  expect(JSON.stringify(rowsOf(marked, 6))).not.toContain('not met');
+});
+
+test('waivers, resets and cures stand in their section, with how many cures are used', () => {
+  const [agreed] = COVENANTS;
+  const levels = [
+    ...agreed!.levels.slice(0, 1),
+    { ...buildLevel('2026-06-01', null, '3.25'), isReset: true },
+  ];
+  const cureRights = {
+    method: 'debt',
+    withinBusinessDays: 15,
+    mostInFour: 2,
+    mostInLife: 5,
+    curedByNextTest: false,
+  } as const;
+  const cures = [
+    { quarterEnd: '2025-12-31', method: 'debt', amount: decimal(1), receivedOn: '2026-02-20' } as const,
+  ];
+  const cured = reviewSheet(buildMaterial({ covenants: [{ ...agreed!, levels, cureRights, cures }] }));
+  expect(rowsOf(cured, 18).map((row) => [row['what']?.text, row['of']?.text, row['terms']?.text])).toEqual([
+    ['reset', '1 Jun 2026', 'at most 3.25x; past tests keep their level'],
+    ['equity cure', '31 Dec 2025', 'EUR 1 as debt repaid'],
+  ]);
+  expect(textsOf(cured, 18)).toEqual([
+    'Net leverage: 1 of 2 cures used in four quarters, 1 of 5 over the life.',
+  ]);
+  expect(rowsOf(cured, 6)[0]?.['status']?.text).toMatch(/^cured; .*with the money put in 3.50x/);
 });

@@ -13,6 +13,7 @@ import { basisLine, headerSection, privateSideMark } from './header.ts';
 import type { SheetMaterial } from './material.ts';
 import { justPassingSection, qualitySection } from './quality.ts';
 import { signalsSection } from './signals.ts';
+import { rightsSection } from './rights.ts';
 import { sheetSources } from './sources.ts';
 
 type Title = (typeof REVIEW_SECTIONS)[number];
@@ -27,6 +28,7 @@ const FILLED: Partial<Record<Title, (material: SheetMaterial) => readonly SheetB
   'Reporting quality': qualitySection,
   'Just-passing pattern': justPassingSection,
   'Signals open and closed': signalsSection,
+  'Waivers, amendments, cures used': rightsSection,
 };
 
 /** Stands where a person decides, also while nothing is recorded there. */
