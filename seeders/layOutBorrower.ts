@@ -1,6 +1,5 @@
 import type { Transaction } from 'sequelize';
 import { addDays, type PlainDate } from '../src/core/calendar/plainDate.ts';
-import { PLAIN_DEFINITION } from '../src/core/measures/definition.ts';
 import { decimal } from '../src/core/money/decimal.ts';
 import { insertBorrower } from '../src/server/db/repositories/borrowers.ts';
 import {
@@ -11,6 +10,7 @@ import {
 } from '../src/server/db/repositories/covenants.ts';
 import { insertFacility } from '../src/server/db/repositories/facilities.ts';
 import { insertUndertaking } from '../src/server/db/repositories/undertakings.ts';
+import { levelsOf, termsOf } from './demo/agreedTerms.ts';
 import type { DemoBorrower } from './demo/demoBorrower.ts';
 import type { DemoCovenant } from './demo/demoCovenant.ts';
 import type { LaidOutDesk, LaidOutPeople } from './layOutPeople.ts';
@@ -61,12 +61,12 @@ export async function layOutBorrower(
         drawn: decimal(drawn).times(THOUSAND),
       }),
     );
-  for (const agreed of borrower.covenants)
+  for (const agreed of [...borrower.covenants, ...borrower.furtherCovenants])
     await layOutCovenant(tx, agreed, {
       borrower,
       place,
       borrowerId,
-      facilityId: facilityIds[0] ?? 0,
+      facilityId: facilityIds[agreed.facilityNumber ?? 0] ?? facilityIds[0] ?? 0,
       agreedOn: facility.startsOn,
       granterId: people.committeeIds[1] ?? 0,
     });
@@ -102,40 +102,14 @@ interface CovenantPlace {
 async function layOutCovenant(tx: Transaction, agreed: DemoCovenant, at: CovenantPlace): Promise<void> {
   const { borrower, place, borrowerId, facilityId, agreedOn } = at;
   const agreedAt = instantOn(agreedOn);
-  const isMoney = agreed.measure === 'minimum-liquidity';
   const covenantId = await insertCovenant(tx, {
     borrowerId,
     facilityId,
     validFrom: agreedOn,
     knownFrom: agreedAt,
-    terms: {
-      name: agreed.name,
-      clause: agreed.clause,
-      measure: agreed.measure,
-      operator: agreed.operator,
-      roundingPlaces: agreed.roundingPlaces,
-      scope: 'group',
-      currency: borrower.currency,
-      firstTestOn: agreed.firstTestOn,
-      everyMonths: 3,
-      basis: null,
-      isOurs: false,
-      springing: null,
-      cureRights: null,
-      definition: {
-        ...PLAIN_DEFINITION,
-        addBackCap: agreed.addBackCap === null ? null : decimal(agreed.addBackCap),
-        undrawnCountsAsLiquidity: isMoney,
-      },
-    },
+    terms: termsOf(agreed, borrower.currency),
   });
-  const levels = agreed.levels.map(({ from, until, level }) => ({
-    from,
-    until,
-    level: level === null ? null : decimal(level).times(isMoney ? THOUSAND : 1),
-    isReset: false,
-  }));
-  await insertCovenantLevels(tx, covenantId, levels, agreedAt);
+  await insertCovenantLevels(tx, covenantId, levelsOf(agreed), agreedAt);
 
   // The latest add-back waits for its second person.
   const latest = agreed.addBacks.at(-1)?.periodEnd;

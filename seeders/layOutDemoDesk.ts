@@ -1,14 +1,18 @@
 import type { PlainDate } from '../src/core/calendar/plainDate.ts';
 import { err, ok } from '../src/core/result.ts';
 import { hashPassword } from '../src/server/auth/passwords.ts';
+import { insertCurrencyRates } from '../src/server/db/repositories/currencyRates.ts';
 import { anybodyExists } from '../src/server/db/repositories/people.ts';
 import { insertSector } from '../src/server/db/repositories/sectors.ts';
 import { systemActor } from '../src/server/services/actor.ts';
 import { audit, write, type Outcome } from '../src/server/services/write.ts';
 import { demoBook } from './demo/demoBook.ts';
+import { latestReportedQuarterEnd } from './demo/demoDays.ts';
+import { demoRates } from './demo/demoRates.ts';
 import { DEMO_PASSWORD, DEMO_PEOPLE, LENDER_NAME } from './demo/people.ts';
 import { SECTOR_PROFILES, SECTOR_SCHEME } from './demo/sectorProfiles.ts';
-import { layOutBorrower, placeOf } from './layOutBorrower.ts';
+import { quartersUpTo } from './demo/tradingPlan.ts';
+import { instantOn, layOutBorrower, placeOf } from './layOutBorrower.ts';
 import { layOutPeople } from './layOutPeople.ts';
 import { layOutStatements } from './layOutStatements.ts';
 import { prepareDeliveries, type PreparedDelivery } from './prepareDeliveries.ts';
@@ -36,6 +40,8 @@ export async function layOutDemoDesk({
     const people = await layOutPeople(tx, { seededOn: seedDay, hashes, now });
     for (const { code, label } of Object.values(SECTOR_PROFILES))
       await insertSector(tx, { code, label, scheme: SECTOR_SCHEME });
+    for (const { end } of quartersUpTo(latestReportedQuarterEnd(seedDay)))
+      await insertCurrencyRates(tx, demoRates(end), instantOn(end, '18:00'));
     for (const [index, borrower] of book.entries()) {
       const { analystId, deskId } = placeOf(borrower, people);
       const borrowerId = await layOutBorrower(tx, borrower, people);
@@ -47,7 +53,7 @@ export async function layOutDemoDesk({
         subjectId: String(borrowerId),
         borrowerId,
         deskId,
-        summary: `Laid out ${borrower.name} with ${borrower.covenants.length} covenants and ${borrower.quarters.length} quarters`,
+        summary: `Laid out ${borrower.name} with ${borrower.covenants.length + borrower.furtherCovenants.length} covenants and ${borrower.quarters.length} quarters`,
         before: null,
         after: { files: deliveries.map(({ sha256 }) => sha256) },
       });

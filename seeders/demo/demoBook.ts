@@ -11,12 +11,13 @@ import { covenantsFor } from './covenantPlans.ts';
 import type { DemoBorrower, DemoDelivery, DemoFacility } from './demoBorrower.ts';
 import { businessDayBefore, latestReportedQuarterEnd, quarterEndOnOrAfter } from './demoDays.ts';
 import type { DemoQuarter } from './demoLines.ts';
+import { furtherCovenants } from './furtherCovenants.ts';
 import { randomNumbers, type RandomNumbers } from './randomNumbers.ts';
 import { asFirstReported } from './restatement.ts';
 import { plannedFor } from './scenarioPlans.ts';
 import { SECTOR_PROFILES } from './sectorProfiles.ts';
 import { tradingYears } from './tradingYears.ts';
-import { ORDINARY, quartersUpTo, type CalendarQuarter } from './tradingPlan.ts';
+import { ORDINARY, quartersUpTo, type CalendarQuarter, type TradingPlan } from './tradingPlan.ts';
 
 export function demoBook(
   seedDay: PlainDate,
@@ -30,6 +31,14 @@ export function demoBook(
 }
 
 export const LATE: readonly Scenario[] = ['late', 'late within grace'];
+
+/** Behind the loans of hotels, a concession, and a works that nobody has had valued for long. */
+const PROPERTIES: Readonly<Record<string, TradingPlan['property']>> = {
+  'Pinevarra Resorts S.L.': { valueShare: 0.9, quartersBetweenValuations: 4, incomeShare: 0.85 },
+  'Dunemorrel Hotels B.V.': { valueShare: 0.85, quartersBetweenValuations: 4, incomeShare: null },
+  'Nordvelle Tramway Concession Ltd': { valueShare: 1.1, quartersBetweenValuations: 4, incomeShare: 0.9 },
+  'Kaldermarrow Pressings Ltd': { valueShare: 0.8, quartersBetweenValuations: 16, incomeShare: null },
+};
 
 interface BookDays {
   readonly seedDay: PlainDate;
@@ -60,6 +69,7 @@ function demoBorrower(
       interestRate: random.between(0.052, 0.072),
       dividendShare: random.between(0.55, 0.9),
       openingCashShare: random.between(0.04, 0.08),
+      property: PROPERTIES[row.name] ?? null,
       shape: ORDINARY,
     },
     random.between(0.9, 2.6),
@@ -94,6 +104,7 @@ function demoBorrower(
       nextQuarterEnd: quarterEndOnOrAfter(seedDay),
       random,
     }),
+    furtherCovenants: furtherCovenants(row.name, { quarters, firstTestIndex, fiscalYearEndMonth }),
     ...deadlineOf(row, latest, seedDay),
   };
 }

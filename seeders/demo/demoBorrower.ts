@@ -49,6 +49,8 @@ export interface DemoBorrower {
   readonly facilities: readonly DemoFacility[];
   /** The first hangs on the first facility. */
   readonly covenants: readonly DemoCovenant[];
+  /** Of measures and definitions that only a few agreed to. */
+  readonly furtherCovenants: readonly DemoCovenant[];
   readonly dueDays: number;
   readonly graceDays: number;
 }

@@ -1,8 +1,9 @@
 import type { PlainDate } from '../../src/core/calendar/plainDate.ts';
 import type { Operator } from '../../src/core/covenants/covenant.ts';
+import type { MeasureDefinition } from '../../src/core/measures/definition.ts';
 import type { MeasureCode } from '../../src/core/measures/measure.ts';
 
-/** A covenant as the demo desk agreed it. Levels are times, or thousands for minimum liquidity. */
+/** A covenant as the demo desk agreed it. Levels are times or shares, or thousands for amounts of money. */
 export interface DemoCovenant {
   readonly name: string;
   readonly clause: string;
@@ -11,6 +12,14 @@ export interface DemoCovenant {
   readonly roundingPlaces: number | null;
   readonly firstTestOn: PlainDate;
   readonly addBackCap: string | null;
+  /** What the agreement defines beyond the cap; left out where it says nothing. */
+  readonly definition?: Partial<MeasureDefinition>;
+  /** Which of the borrower's facilities, from 0; the first where left out. */
+  readonly facilityNumber?: number;
+  /** Quarterly where left out. */
+  readonly everyMonths?: 3 | 6 | 12;
+  /** The borrower's where left out. */
+  readonly currency?: 'EUR';
   readonly levels: readonly DemoLevel[];
   readonly addBacks: readonly DemoAddBack[];
   readonly waiver: DemoWaiver | null;
@@ -20,6 +29,8 @@ export interface DemoLevel {
   readonly from: PlainDate;
   readonly until: PlainDate | null;
   readonly level: number | null;
+  /** Agreed after signing. */
+  readonly isReset?: true;
 }
 
 /** Of one quarter, in thousands. */

@@ -10,6 +10,7 @@ export const INCOME_LINES = [
   'research_development',
   'rent_expense',
   'other_operating_expense',
+  'ebitda_reported',
   'depreciation',
   'amortisation',
   'ebit',
@@ -44,6 +45,7 @@ export const BALANCE_LINES = [
   'equity',
   'revolver_drawn',
   'revolver_commitment',
+  'collateral_value',
 ] as const satisfies readonly LineItemCode[];
 
 export const CASH_FLOW_LINES = [
@@ -57,7 +59,9 @@ export const CASH_FLOW_LINES = [
   'cff',
   'interest_paid',
   'tax_paid',
+  'rent_paid',
   'scheduled_principal',
+  'noi',
 ] as const satisfies readonly LineItemCode[];
 
 export type DemoLine =

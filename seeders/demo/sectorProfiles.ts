@@ -21,6 +21,8 @@ export interface SectorProfile {
   readonly capitalisedShare: number;
   readonly depreciationRate: number;
   readonly leaseShare: number;
+  /** Its sheets print an EBITDA of its own. */
+  readonly statesEbitda?: true;
   /** Weight of the quarters that end in March, June, September, December; averages 1. */
   readonly seasons: readonly [number, number, number, number];
 }
@@ -37,7 +39,7 @@ export const SECTOR_PROFILES = {
   wholesale: { code: '46', label: 'Wholesale trade', cogsShare: 0.76, sgaShare: 0.11, researchShare: 0, rentShare: 0.02, otherCostShare: 0.03, receivableDays: 46, inventoryDays: 54, payableDays: 46, ppeShare: 0.14, goodwillShare: 0.06, capitalisedShare: 0.002, depreciationRate: 0.1, leaseShare: 0.05, seasons: [0.96, 1.0, 0.99, 1.05] },
   transport: { code: '49', label: 'Land transport', cogsShare: 0.7, sgaShare: 0.08, researchShare: 0, rentShare: 0.02, otherCostShare: 0.04, receivableDays: 44, inventoryDays: 6, payableDays: 34, ppeShare: 0.62, goodwillShare: 0.03, capitalisedShare: 0, depreciationRate: 0.11, leaseShare: 0.08, seasons: [0.97, 1.0, 0.99, 1.04] },
   hotels: { code: '55', label: 'Accommodation', cogsShare: 0.42, sgaShare: 0.22, researchShare: 0, rentShare: 0.04, otherCostShare: 0.1, receivableDays: 14, inventoryDays: 12, payableDays: 40, ppeShare: 1.5, goodwillShare: 0.04, capitalisedShare: 0, depreciationRate: 0.045, leaseShare: 0.1, seasons: [0.66, 1.05, 1.42, 0.87] },
-  software: { code: '62', label: 'Computer programming and consultancy', cogsShare: 0.38, sgaShare: 0.28, researchShare: 0.12, rentShare: 0.02, otherCostShare: 0.03, receivableDays: 60, inventoryDays: 0, payableDays: 40, ppeShare: 0.1, goodwillShare: 0.35, capitalisedShare: 0.03, depreciationRate: 0.22, leaseShare: 0, seasons: [0.97, 0.99, 0.98, 1.06] },
+  software: { code: '62', label: 'Computer programming and consultancy', cogsShare: 0.38, sgaShare: 0.28, researchShare: 0.12, rentShare: 0.02, otherCostShare: 0.03, receivableDays: 60, inventoryDays: 0, payableDays: 40, ppeShare: 0.1, goodwillShare: 0.35, capitalisedShare: 0.03, depreciationRate: 0.22, leaseShare: 0, statesEbitda: true, seasons: [0.97, 0.99, 0.98, 1.06] },
 } as const satisfies Record<string, SectorProfile>;
 
 export type SectorName = keyof typeof SECTOR_PROFILES;

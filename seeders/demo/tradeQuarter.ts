@@ -63,6 +63,15 @@ function earn(plan: TradingPlan, opening: Position, { index, before, quarter, dr
   const other_operating_expense = Math.round(revenue * profile.otherCostShare);
   const depreciation = Math.round((opening.ppeGross * profile.depreciationRate) / 4);
   const amortisation = Math.round(opening.intangibles / 20);
+  // What a software house calls EBITDA leaves out a quarter of its research.
+  const ebitda_reported = profile.statesEbitda
+    ? gross_profit +
+      other_operating_income -
+      sga -
+      Math.round(research_development * 0.75) -
+      rent_expense -
+      other_operating_expense
+    : 0;
   const ebit =
     gross_profit +
     other_operating_income -
@@ -86,6 +95,7 @@ function earn(plan: TradingPlan, opening: Position, { index, before, quarter, dr
     research_development,
     rent_expense,
     other_operating_expense,
+    ebitda_reported,
     depreciation,
     amortisation,
     ebit,
@@ -182,7 +192,9 @@ function move(
     cff: drawn - repaid - dividends,
     interest_paid: 0 - income.interest_expense,
     tax_paid: working.taxPayable - opening.taxPayable - income.income_tax,
+    rent_paid: 0 - leasesRepaid - Math.round((opening.leases * LEASE_RATE) / 4),
     scheduled_principal: scheduled,
+    noi: 0,
   };
   return { flows, closing };
 }
@@ -218,5 +230,6 @@ function linesOf(closing: Position, flows: { readonly scheduled_principal: numbe
     equity: closing.capital + closing.retainedEarnings,
     revolver_drawn: closing.revolver,
     revolver_commitment: 0,
+    collateral_value: 0,
   };
 }

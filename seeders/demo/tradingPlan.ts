@@ -32,6 +32,15 @@ export const quartersUpTo = (latest: PlainDate): CalendarQuarter[] =>
     return { end, month: Number(end.slice(5, 7)), days };
   });
 
+/** A property that is valued every so often; between two valuations sheets carry the last one forward. */
+export interface DemoProperty {
+  /** Of gross plant on the day of a valuation. */
+  readonly valueShare: number;
+  readonly quartersBetweenValuations: number;
+  /** Of EBITDA; null where the property has no income of its own. */
+  readonly incomeShare: number | null;
+}
+
 export interface TradingPlan {
   /** Text that the random course is drawn from: same text, same course. */
   readonly seed: string;
@@ -50,6 +59,8 @@ export interface TradingPlan {
   readonly dividendShare: number;
   /** Cash at the start as a share of a year's revenue. */
   readonly openingCashShare: number;
+  /** A property behind the loan; null where there is none. */
+  readonly property: DemoProperty | null;
   /** 0 is the latest quarter, 1 the one before. */
   readonly shape: (quartersBeforeLatest: number) => QuarterShape;
 }

@@ -17,6 +17,7 @@ const plan = (changes: Partial<TradingPlan>): TradingPlan => ({
   interestRate: 0.06,
   dividendShare: 0.6,
   openingCashShare: 0.05,
+  property: null,
   shape: ORDINARY,
   ...changes,
 });

@@ -5,6 +5,7 @@
 import type { DemoQuarter } from './demoLines.ts';
 import { openingPosition, type Position } from './openingPosition.ts';
 import { randomNumbers, type RandomNumbers } from './randomNumbers.ts';
+import { quarterEbitda } from './ratios.ts';
 import { tradeQuarter, type QuarterDraw } from './tradeQuarter.ts';
 import { QUARTERS_BEFORE, type TradingPlan } from './tradingPlan.ts';
 
@@ -17,7 +18,7 @@ export function tradingYears(plan: TradingPlan): DemoQuarter[] {
     position = traded.closing;
     return { quarterEnd: quarter.end, lines: traded.lines };
   });
-  return withCommitment(quarters.slice(QUARTERS_BEFORE));
+  return withProperty(plan, withCommitment(quarters.slice(QUARTERS_BEFORE)));
 }
 
 function drawQuarter(random: RandomNumbers): QuarterDraw {
@@ -40,4 +41,17 @@ function withCommitment(quarters: readonly DemoQuarter[]): DemoQuarter[] {
     ...quarter,
     lines: { ...quarter.lines, revolver_commitment: commitment },
   }));
+}
+
+/** Valued on the first quarter end and so many quarters after each valuation. */
+function withProperty({ property }: TradingPlan, quarters: readonly DemoQuarter[]): DemoQuarter[] {
+  if (!property) return [...quarters];
+  let valued = 0;
+  return quarters.map((quarter, index) => {
+    const { lines } = quarter;
+    if (index % property.quartersBetweenValuations === 0)
+      valued = Math.round((lines.ppe_gross * property.valueShare) / 100) * 100;
+    const noi = property.incomeShare === null ? 0 : Math.round(quarterEbitda(quarter) * property.incomeShare);
+    return { ...quarter, lines: { ...lines, collateral_value: valued, noi } };
+  });
 }

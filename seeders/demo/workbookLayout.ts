@@ -35,6 +35,7 @@ const LABELS: Readonly<Record<SheetLine, string>> = {
   research_development: 'Research and development',
   rent_expense: 'Rent',
   other_operating_expense: 'Other operating expenses',
+  ebitda_reported: 'EBITDA',
   depreciation: 'Depreciation',
   amortisation: 'Amortisation',
   ebit: 'Operating profit',
@@ -66,6 +67,7 @@ const LABELS: Readonly<Record<SheetLine, string>> = {
   equity: 'Total equity',
   revolver_drawn: 'Revolver drawn',
   revolver_commitment: 'Revolver commitment',
+  collateral_value: 'Property, latest valuation',
   cfo: 'Net cash from operating activities',
   capex: 'Capital expenditure',
   capitalised_costs_paid: 'Capitalised development costs',
@@ -76,7 +78,9 @@ const LABELS: Readonly<Record<SheetLine, string>> = {
   cff: 'Net cash from financing activities',
   interest_paid: 'Interest paid',
   tax_paid: 'Tax paid',
+  rent_paid: 'Rent paid',
   scheduled_principal: 'Scheduled principal',
+  noi: 'Net operating income of the property',
 };
 
 interface SheetLayout {
@@ -90,7 +94,12 @@ interface SheetLayout {
   readonly memorandumFrom: SheetLine | null;
 }
 
-const MEMORANDUM: readonly SheetLine[] = ['ppe_gross', 'revolver_drawn', 'revolver_commitment'];
+const MEMORANDUM: readonly SheetLine[] = [
+  'ppe_gross',
+  'revolver_drawn',
+  'revolver_commitment',
+  'collateral_value',
+];
 
 const BALANCE_LINES_AS_PRINTED: readonly SheetLine[] = [
   ...BALANCE_LINES.filter((line) => !MEMORANDUM.includes(line)).flatMap((line): SheetLine[] => {
@@ -152,7 +161,9 @@ const HEADING_ROW = 5;
 export const MEMORANDUM_PLACEMENTS: Readonly<Record<string, DemoLine>> = {
   [`placement:Balance sheet:${LABELS.revolver_drawn}`]: 'revolver_drawn',
   [`placement:Balance sheet:${LABELS.revolver_commitment}`]: 'revolver_commitment',
+  [`placement:Balance sheet:${LABELS.collateral_value}`]: 'collateral_value',
   [`placement:Cash flow:${LABELS.scheduled_principal}`]: 'scheduled_principal',
+  [`placement:Cash flow:${LABELS.noi}`]: 'noi',
 };
 
 /** Lines that a borrower without them has no row for; any other line is printed, with zeros where it is nothing. */
@@ -162,6 +173,10 @@ const ONLY_WHERE_CARRIED: readonly SheetLine[] = [
   'junior_debt',
   'lease_liabilities',
   'capitalised_costs_paid',
+  'ebitda_reported',
+  'rent_paid',
+  'collateral_value',
+  'noi',
 ];
 
 /** The sheet's rows, headings apart. */
