@@ -3,6 +3,7 @@ import { addDays, addMonthsToMonthEnd, type PlainDate } from '../../src/core/cal
 import type { MeasureCode } from '../../src/core/measures/measure.ts';
 import { addBacksToReach } from './addBackPlans.ts';
 import type { Scenario } from './borrowerTable.ts';
+import { tightEarlyLevel } from './earlyLevel.ts';
 import type { DemoCovenant, DemoLevel } from './demoCovenant.ts';
 import type { DemoQuarter } from './demoLines.ts';
 import {
@@ -32,8 +33,14 @@ type ReadingOf = (quarters: readonly DemoQuarter[], index: number) => number | n
 /** Lowest and highest level that a lender agrees to. */
 type Usual = readonly [number, number];
 
+/** What every borrower of the book may have; the others are further covenants of a few. */
+type OrdinaryMeasure = Extract<
+  MeasureCode,
+  'total-leverage' | 'net-leverage' | 'interest-cover' | 'current-ratio' | 'minimum-liquidity'
+>;
+
 const MEASURES: Readonly<
-  Record<MeasureCode, { name: string; article: string; kind: LevelKind; usual: Usual; read: ReadingOf }>
+  Record<OrdinaryMeasure, { name: string; article: string; kind: LevelKind; usual: Usual; read: ReadingOf }>
 > = {
   'total-leverage': {
     name: 'Total leverage',
@@ -77,7 +84,7 @@ export function covenantsFor(context: CovenantContext): DemoCovenant[] {
   const { scenario, random } = context;
   const clause = random.oneOf(['20.2', '21.2', '22.3', '26.2']);
   const leverage = leverageMeasure(scenario, random);
-  const others: MeasureCode[] = [];
+  const others: OrdinaryMeasure[] = [];
   if (scenario !== 'ratio without meaning') others.push('interest-cover');
   const withCurrentRatio = scenario === 'thin current ratio' || random.share() < 0.4;
   const withLiquidity =
@@ -87,12 +94,12 @@ export function covenantsFor(context: CovenantContext): DemoCovenant[] {
   return [leverage, ...others].map((measure) => covenantOn(measure, clause, context));
 }
 
-function leverageMeasure(scenario: Scenario, random: RandomNumbers): MeasureCode {
+function leverageMeasure(scenario: Scenario, random: RandomNumbers): OrdinaryMeasure {
   if (scenario === 'ratio without meaning') return 'total-leverage';
   return scenario === 'healthy' && random.share() < 0.3 ? 'total-leverage' : 'net-leverage';
 }
 
-function covenantOn(measure: MeasureCode, clause: string, context: CovenantContext): DemoCovenant {
+function covenantOn(measure: OrdinaryMeasure, clause: string, context: CovenantContext): DemoCovenant {
   const { scenario, quarters, firstTestIndex, random } = context;
   const { name, article, kind, read } = MEASURES[measure];
   const tests: PastTest[] = quarters.slice(firstTestIndex).map((quarter, offset) => ({
@@ -118,7 +125,7 @@ function covenantOn(measure: MeasureCode, clause: string, context: CovenantConte
 }
 
 /** Which covenant carries which stories. */
-const STORIES_ON: Readonly<Record<MeasureCode, readonly Scenario[]>> = {
+const STORIES_ON: Readonly<Record<OrdinaryMeasure, readonly Scenario[]>> = {
   'total-leverage': ['ratio without meaning'],
   'net-leverage': [
     'thin headroom',
@@ -140,7 +147,11 @@ type Story = Partial<Pick<DemoCovenant, 'levels' | 'addBacks' | 'waiver'>>;
 /** Certified net leverage of the last five tests, in the band below 3.50. */
 const JUST_PASSING = [3.47, 3.44, 3.46, 3.48, 3.465] as const;
 
-function storyOf(measure: MeasureCode, tests: readonly PastTest[], context: CovenantContext): Story | null {
+function storyOf(
+  measure: OrdinaryMeasure,
+  tests: readonly PastTest[],
+  context: CovenantContext,
+): Story | null {
   const { scenario, quarters, nextQuarterEnd } = context;
   if (!STORIES_ON[measure].includes(scenario)) return null;
   const { kind } = MEASURES[measure];
@@ -187,11 +198,14 @@ function levelJustBelow(tests: readonly PastTest[], kind: LevelKind): number {
   return level;
 }
 
-/** Wide room now, wider before; a later step where the latest reading leaves room below that too. */
+/** Their stories speak of past tests too. */
+const AGREED_WITH_ROOM: readonly Scenario[] = ['restated', 'covenant holiday'];
+
+/** Wide room now; before, wider still or, for a part of the book, tight at first and reset. A later step where room is left. */
 function ordinaryLevels(
   tests: readonly PastTest[],
   { kind, usual }: { readonly kind: LevelKind; readonly usual: Usual },
-  { nextQuarterEnd, random }: CovenantContext,
+  { scenario, nextQuarterEnd, random }: CovenantContext,
 ): DemoLevel[] {
   const valuesOf = (past: readonly PastTest[]): number[] =>
     past.flatMap(({ value }) => (value === null ? [] : [value]));
@@ -202,14 +216,27 @@ function ordinaryLevels(
   const looser = kind.isMaximum ? within(usual, Math.max(before, now + 0.5)) : Math.min(before, now);
   const [first, from] = [tests[0], tests.at(-5)];
   if (!first || !from) throw new RangeError('ordinary levels require five past tests');
+  const tight = AGREED_WITH_ROOM.includes(scenario)
+    ? null
+    : tightEarlyLevel(
+        {
+          seed: `${first.date} ${tests.map(({ value }) => value).join(' ')}`,
+          values: valuesOf(tests.slice(0, -5)),
+        },
+        kind,
+      );
   const levels = schedule([
-    [first.date, looser],
+    [first.date, tight ?? looser],
     [from.date, now],
   ]);
   const tighter = now - 0.25;
   const latest = recent.at(-1);
   const mayTighten = kind.isMaximum && latest !== undefined && headroomShare(latest, tighter, kind) > 0.2;
-  return mayTighten ? withLaterStep(levels, addMonthsToMonthEnd(nextQuarterEnd, 9), tighter) : levels;
+  const agreed = mayTighten ? withLaterStep(levels, addMonthsToMonthEnd(nextQuarterEnd, 9), tighter) : levels;
+  const isLoosened = tight !== null && (kind.isMaximum ? now > tight : now < tight);
+  return isLoosened
+    ? agreed.map((row) => (row.from === from.date ? { ...row, isReset: true } : row))
+    : agreed;
 }
 
 const within = ([lowest, highest]: Usual, level: number): number =>

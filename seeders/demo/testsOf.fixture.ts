@@ -8,7 +8,7 @@ import { currentRatio, interestCover, liquidity, netLeverage, totalLeverage, yea
 
 type Read = (quarters: readonly DemoQuarter[], index: number, addBacks: number) => number | null;
 
-const READ: Readonly<Record<MeasureCode, Read>> = {
+const READ: Readonly<Partial<Record<MeasureCode, Read>>> = {
   'net-leverage': netLeverage,
   'total-leverage': (quarters, index) => totalLeverage(quarters, index),
   'interest-cover': (quarters, index) => interestCover(quarters, index),
@@ -26,6 +26,8 @@ interface DemoTest {
 
 export function testsOf({ quarters }: DemoBorrower, covenant: DemoCovenant | undefined): DemoTest[] {
   if (!covenant) throw new Error('a covenant expected');
+  const read = READ[covenant.measure];
+  if (!read) throw new Error(`no reading of ${covenant.measure}`);
   return quarters.flatMap(({ quarterEnd }, index) => {
     if (quarterEnd < covenant.firstTestOn) return [];
     const row = covenant.levels.find(
@@ -34,8 +36,8 @@ export function testsOf({ quarters }: DemoBorrower, covenant: DemoCovenant | und
     const addBacks = addBacksOfYear(quarters, index, covenant.addBacks);
     return {
       level: row?.level ?? null,
-      value: READ[covenant.measure](quarters, index, addBacks),
-      withoutAddBacks: READ[covenant.measure](quarters, index, 0),
+      value: read(quarters, index, addBacks),
+      withoutAddBacks: read(quarters, index, 0),
       addBacks,
       ebitda: yearEbitda(quarters, index) ?? Number.NaN,
     };
@@ -65,7 +67,12 @@ export function roomsOf(borrower: DemoBorrower, measure: string): Room[] {
   );
 }
 
+/** Of the last tests, under the levels that were agreed since. */
 export const lowestRoom = (borrower: DemoBorrower): number =>
   Math.min(
-    ...borrower.covenants.flatMap(({ measure }) => roomsOf(borrower, measure).map(({ room }) => room)),
+    ...borrower.covenants.flatMap(({ measure }) =>
+      roomsOf(borrower, measure)
+        .slice(-5)
+        .map(({ room }) => room),
+    ),
   );
