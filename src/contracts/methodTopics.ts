@@ -4,12 +4,24 @@
  */
 export const METHOD_TOPICS = {
   'twelve-months': 'How twelve months are read',
+  'statement-checks': 'How the figures of a statement are checked',
   headroom: 'How headroom is computed',
+  'smallest-headroom': 'How the smallest headroom is found',
+  'sounding-strip': 'How the last twelve tests are drawn',
+  exposure: 'How drawn and limit are added up',
   'cures-and-waivers': 'How cures, waivers and resets are read',
   'counterfactual-tests': 'How a test is computed on other earnings',
   'just-passing-patterns': 'How tests near the limit are read',
   'book-pattern': 'How the book’s own test is made',
   'leading-digits': 'How leading digits are tested',
+  'coming-tests': 'How tests to come are projected',
+  sensitivity: 'How far figures may move is computed',
+  alerts: 'How alerts are raised',
+  'alert-due-dates': 'How the due date of an alert is set',
+  'data-cut-off': 'How a result is dated',
+  'policy-changes': 'How the policy changes',
+  'statement-due-dates': 'How days late are counted',
+  watchlist: 'How the watchlist is kept',
   'why-it-moved': 'How a change is split into its causes',
 } as const;
 

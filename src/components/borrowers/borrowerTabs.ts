@@ -2,13 +2,15 @@ import { dayText } from '../../core/calendar/printDay.ts';
 import { formatInstant } from '../../core/calendar/printInstant.ts';
 import type { BorrowerView } from '../../contracts/borrowers.ts';
 
-export type BorrowerTab = 'covenants' | 'statements' | 'quality' | 'alerts' | 'facilities' | 'review-sheet';
+export type BorrowerTab =
+  'covenants' | 'outlook' | 'statements' | 'quality' | 'alerts' | 'facilities' | 'review-sheet';
 
 /** The parts of a borrower's page, each with an address of its own. */
 export const borrowerTabs = (borrower: Pick<BorrowerView, 'id' | 'alerts' | 'facilities'>) => {
   const at = `/borrowers/${borrower.id}`;
   return [
     { key: 'covenants', name: 'Covenants', href: at },
+    { key: 'outlook', name: 'Outlook', href: `${at}/outlook` },
     { key: 'statements', name: 'Statements', href: `${at}/statements` },
     { key: 'quality', name: 'Reporting quality', href: `${at}/quality` },
     { key: 'alerts', name: 'Alerts', href: `${at}/alerts`, count: borrower.alerts.length },

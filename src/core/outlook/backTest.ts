@@ -149,7 +149,7 @@ const countNotMet = (said: readonly Said[]): number => said.filter(({ cameNotMet
  *
  * Source: Brier (1950, Monthly Weather Review 78:1-3).
  *
- * @example brierScore([{ share: 0.8, wasMet: true, cameNotMet: true }, { share: 0.2, wasMet: true, cameNotMet: false }]) // => 0.04…
+ * @example brierScore([{ share: 0.75, wasMet: true, cameNotMet: true }, { share: 0.25, wasMet: true, cameNotMet: false }]) // => 0.0625
  */
 export const brierScore = (said: readonly Said[]): number | null =>
   said.length === 0

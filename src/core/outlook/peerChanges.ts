@@ -37,7 +37,7 @@ export interface PeerChanges {
 
 /** Changes that end in these last quarters count. */
 export const QUARTERS_OF_CHANGES = 8;
-const TRUNCATED_SHARE = 0.01;
+export const TRUNCATED_SHARE = 0.01;
 
 /**
  * How the ratios of the book changed over a horizon, by sector and by third of leverage within it.

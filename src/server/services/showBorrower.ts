@@ -17,6 +17,7 @@ import { lenderDay } from './lenderDay.ts';
 import { movementsOf } from './movementViews.ts';
 import { alertFilter, withStrips } from './listAlerts.ts';
 import { borrowerWatch } from './listWatchlist.ts';
+import { toOutlookView } from './outlookView.ts';
 import type { Outcome } from './write.ts';
 
 /** One borrower as its page shows it, from the stored result: nothing is computed for the screen. */
@@ -64,6 +65,7 @@ export async function borrowerView(
     computed: stored && computedFacts(stored),
     covenants: stored ? await covenantViews(tx, id, stored, facilities) : [],
     quality: stored?.assessment.quality ?? null,
+    outlook: stored && toOutlookView(stored.assessment),
     movements: stored && (await movementsOf(tx, id, stored)),
     today,
     alerts: await withStrips(tx, alerts.rows, actor.now),

@@ -150,6 +150,7 @@ const VIEW: BorrowerView = {
   },
   covenants: [],
   quality: null,
+  outlook: null,
   movements: null,
   today: AS_OF,
   alerts: [],
