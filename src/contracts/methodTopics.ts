@@ -11,6 +11,7 @@ export const METHOD_TOPICS = {
   exposure: 'How drawn and limit are added up',
   'cures-and-waivers': 'How cures, waivers and resets are read',
   'counterfactual-tests': 'How a test is computed on other earnings',
+  'reporting-quality': 'How reporting quality is scored',
   'just-passing-patterns': 'How tests near the limit are read',
   'book-pattern': 'How the book’s own test is made',
   'leading-digits': 'How leading digits are tested',

@@ -47,7 +47,7 @@ export function dueDate({
   return due;
 }
 
-const DUE_SOON_DAYS = 7;
+export const DUE_SOON_DAYS = 7;
 
 export interface Deadline {
   readonly state: 'not due' | 'due within 7 days' | 'late within grace' | 'overdue past grace';

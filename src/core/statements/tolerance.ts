@@ -2,9 +2,9 @@
 import { decimal, Decimal } from '../money/decimal.ts';
 import type { Tie } from './statement.ts';
 
-const ROUNDING_SHARE = decimal('0.0001');
+export const ROUNDING_SHARE = decimal('0.0001');
 /** Up to this share of the reference a difference is shown and taken; above, the figures do not tie. */
-const WARNING_SHARE = decimal('0.005');
+export const WARNING_SHARE = decimal('0.005');
 
 /**
  * The difference that rounding explains: the larger of half a rounding unit for each rounded figure and 0.01 % of
