@@ -106,6 +106,7 @@ test('every outcome that a desk meets is there', async () => {
   );
   expect(outcomes.toSorted()).toEqual([
     'awaiting figures',
+    'cannot be tested',
     'met',
     'met, net cash',
     'met, no charge to cover',
