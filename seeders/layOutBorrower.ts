@@ -6,6 +6,7 @@ import {
   insertAddBacks,
   insertCovenant,
   insertCovenantLevels,
+  insertEquityCure,
   insertWaiver,
 } from '../src/server/db/repositories/covenants.ts';
 import { insertFacility } from '../src/server/db/repositories/facilities.ts';
@@ -125,6 +126,14 @@ async function layOutCovenant(tx: Transaction, agreed: DemoCovenant, at: Covenan
       knownFrom: instantOn(addDays(addBack.periodEnd, borrower.usualDelayDays), '11:00'),
     })),
   );
+  for (const cure of agreed.cures ?? [])
+    await insertEquityCure(tx, {
+      ...cure,
+      amount: decimal(cure.amount).times(THOUSAND),
+      covenantId,
+      recordedBy: place.analystId,
+      knownFrom: instantOn(cure.receivedOn, '14:00'),
+    });
   if (agreed.waiver)
     await insertWaiver(tx, {
       ...agreed.waiver,

@@ -20,9 +20,9 @@ export const termsOf = (agreed: DemoCovenant, borrowerCurrency: string): Covenan
   firstTestOn: agreed.firstTestOn,
   everyMonths: agreed.everyMonths ?? 3,
   basis: null,
-  isOurs: false,
-  springing: null,
-  cureRights: null,
+  isOurs: agreed.isOurs ?? false,
+  springing: agreed.springingTrigger ? { trigger: decimal(agreed.springingTrigger) } : null,
+  cureRights: agreed.cureRights ?? null,
   definition: {
     ...PLAIN_DEFINITION,
     addBackCap: agreed.addBackCap === null ? null : decimal(agreed.addBackCap),

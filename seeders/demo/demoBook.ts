@@ -15,6 +15,7 @@ import { furtherCovenants } from './furtherCovenants.ts';
 import { randomNumbers, type RandomNumbers } from './randomNumbers.ts';
 import { asFirstReported } from './restatement.ts';
 import { plannedFor } from './scenarioPlans.ts';
+import { springingCovenant, withDemoRights } from './rightsPlans.ts';
 import { SECTOR_PROFILES } from './sectorProfiles.ts';
 import { tradingYears } from './tradingYears.ts';
 import { ORDINARY, quartersUpTo, type CalendarQuarter, type TradingPlan } from './tradingPlan.ts';
@@ -79,6 +80,14 @@ function demoBorrower(
   const quarters = isLate ? all.slice(0, -1) : all;
   const firstTestIndex = random.count(5, 7);
   const usualDelayDays = random.count(24, 41);
+  const deadline = deadlineOf(row, latest, seedDay);
+  const rights = {
+    scenario: row.scenario,
+    quarters,
+    firstTestIndex,
+    dueDays: deadline.dueDays,
+    asOf: businessDayBefore(seedDay),
+  };
   return {
     name: row.name,
     scenario: row.scenario,
@@ -97,15 +106,21 @@ function demoBorrower(
     owed: isLate ? (all.at(-1) ?? null) : null,
     usualDelayDays,
     facilities: facilitiesOf(quarters, firstTestIndex, random),
-    covenants: covenantsFor({
-      scenario: row.scenario,
-      quarters,
-      firstTestIndex,
-      nextQuarterEnd: quarterEndOnOrAfter(seedDay),
-      random,
-    }),
-    furtherCovenants: furtherCovenants(row.name, { quarters, firstTestIndex, fiscalYearEndMonth }),
-    ...deadlineOf(row, latest, seedDay),
+    covenants: withDemoRights(
+      covenantsFor({
+        scenario: row.scenario,
+        quarters,
+        firstTestIndex,
+        nextQuarterEnd: quarterEndOnOrAfter(seedDay),
+        random,
+      }),
+      rights,
+    ),
+    furtherCovenants: [
+      ...furtherCovenants(row.name, { quarters, firstTestIndex, fiscalYearEndMonth }),
+      ...springingCovenant(rights),
+    ],
+    ...deadline,
   };
 }
 

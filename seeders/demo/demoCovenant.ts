@@ -1,5 +1,5 @@
 import type { PlainDate } from '../../src/core/calendar/plainDate.ts';
-import type { Operator } from '../../src/core/covenants/covenant.ts';
+import type { CureRights, Operator } from '../../src/core/covenants/covenant.ts';
 import type { MeasureDefinition } from '../../src/core/measures/definition.ts';
 import type { MeasureCode } from '../../src/core/measures/measure.ts';
 
@@ -20,6 +20,12 @@ export interface DemoCovenant {
   readonly everyMonths?: 3 | 6 | 12;
   /** The borrower's where left out. */
   readonly currency?: 'EUR';
+  /** A trigger of the desk, not in the agreement. */
+  readonly isOurs?: true;
+  /** Tested only above this share of drawings, as decimal text. */
+  readonly springingTrigger?: string;
+  readonly cureRights?: DemoCureRights;
+  readonly cures?: readonly DemoCure[];
   readonly levels: readonly DemoLevel[];
   readonly addBacks: readonly DemoAddBack[];
   readonly waiver: DemoWaiver | null;
@@ -41,6 +47,16 @@ export interface DemoAddBack {
   readonly capped: boolean;
   readonly reason: string;
   readonly evidence: string;
+}
+
+export type DemoCureRights = CureRights;
+
+/** Money of the owners, in thousands. */
+export interface DemoCure {
+  readonly quarterEnd: PlainDate;
+  readonly method: CureRights['method'];
+  readonly amount: number;
+  readonly receivedOn: PlainDate;
 }
 
 interface DemoWaiver {

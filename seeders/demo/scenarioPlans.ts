@@ -102,6 +102,11 @@ const SCENARIO_PLANS: Readonly<Record<Scenario, ScenarioPlan>> = {
   'thin current ratio': { changes: {}, sizedTo: toNetLeverage(2.3) },
   'thin liquidity': { changes: {}, sizedTo: toNetLeverage(2.2) },
   'covenant holiday': { changes: {}, sizedTo: toNetLeverage(2.5) },
+  'in cure period': { changes: {}, sizedTo: 'ordinary' },
+  'cured by its owners': { changes: {}, sizedTo: 'ordinary' },
+  'cured by the next test': { changes: {}, sizedTo: 'ordinary' },
+  'springing revolver': { changes: {}, sizedTo: 'ordinary' },
+  'our own triggers': { changes: {}, sizedTo: 'ordinary' },
 };
 
 /** Seasons of a business that packs a summer's fruit for the winter. */
