@@ -14,7 +14,7 @@ export const LEVERAGE_SENTENCE =
 export const LOW_POWER_SENTENCE =
   'Low power: with fewer than 1,000 tests even a real pattern mostly stays unseen.';
 export const NOT_ENOUGH_NEAR = 'not enough tests near the line';
-/** Why results crowd at a limit with nobody steering the accounts. Source: practice.md 4.3. */
+/** Why results crowd at a limit with nobody steering the accounts. Desk practice, no source. */
 export const INNOCENT_REASONS =
   'Ordinary reasons: covenants agreed tight; real steps that kept the borrower inside; failing tests that vanish because the level was reset before the test date; ratios rounded by the agreement; standard definitions in place of the agreement’s own.';
 
