@@ -1,8 +1,9 @@
 /** The blocks of the score: each turns a borrower's standing among its peers into a risk from 0 to 1. */
 import { block, gated, NOBODY, placeFigures, without, type Block, type BlockContext } from './blockParts.ts';
 import { conversionOf, revenueGrowth } from './comparedFigures.ts';
-import { missingFigures } from './missingFigures.ts';
+import { brokenSeries, missingFigures } from './missingFigures.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
+import { withoutConversion } from './publishedAccruals.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import type { QualityBlock } from './score.ts';
 import { fScoreRisk, mScoreRisk } from './screens.ts';
@@ -51,21 +52,7 @@ function unexplainedBlock({ peer, compared, standing }: BlockContext): QualityBl
 
 function conversionBlock({ peer, standing }: BlockContext): QualityBlock {
   const conversion = conversionOf(peer.figures);
-  if (!conversion) {
-    const missing = missingFigures(peer, [
-      'ebitda',
-      'cfo',
-      'interestPaid',
-      'taxPaid',
-      'nwcPrior',
-      'revenue',
-      'revenuePrior',
-    ]);
-    return without(
-      'cash conversion',
-      brokenSeries(peer) ?? missing ?? 'EBITDA is not above 1\u00a0% of revenue',
-    );
-  }
+  if (!conversion) return without('cash conversion', withoutConversion(peer));
   const place = standing('cashConversion');
   const figures = {
     conversion: conversion.growthNeutral,
@@ -111,12 +98,6 @@ function noiseBlock({ peer, standing }: BlockContext): QualityBlock {
   if (!place) return without('accrual noise', NOBODY, figures);
   return { ...block('accrual noise', place.percentile, place), figures };
 }
-
-/** IFRS 18: no block that uses cash flow until the year before is restated. */
-const brokenSeries = (peer: PeerInputs): string | null =>
-  peer.cashFlowPresentationChanged
-    ? 'the presentation of cash flows changed within the two years compared and the year before is not restated'
-    : null;
 
 /** Measures built on growth mark a fast grower and an acquirer whatever their accounts are like. */
 function dampedReason(peer: PeerInputs): string | null {

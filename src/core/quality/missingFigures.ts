@@ -44,3 +44,13 @@ export function missingFigures(peer: PeerInputs, needed: readonly PeerFigure[]):
   const missing = needed.filter((figure) => peer.figures[figure] === undefined);
   return missing.length === 0 ? null : `missing: ${missing.map((figure) => NAMES[figure]).join(', ')}`;
 }
+
+/**
+ * IFRS 18: nothing that uses cash from operations until the year before is restated; null where one rule holds.
+ *
+ * @example brokenSeries(peer) // => null
+ */
+export const brokenSeries = (peer: PeerInputs): string | null =>
+  peer.cashFlowPresentationChanged
+    ? 'the presentation of cash flows changed within the two years compared and the year before is not restated'
+    : null;

@@ -13,6 +13,7 @@ import { hasDaysOnYear } from './dayFlows.ts';
 import { noiseSeriesOf } from './noiseSeries.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
 import { figuresBeside, LINE_FIGURES, readFigure, UNDER_ONE_PRESENTATION } from './lineFigures.ts';
+import { noNoise } from './publishedSeries.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import { fScreen, mScreen } from './screenScores.ts';
 
@@ -150,11 +151,7 @@ function noiseOf({ cashFlow, workingCapitalChange }: NoiseSeries): {
 } {
   const noise = accrualNoise({ cashFlow, workingCapitalChange });
   if (noise.ok) return { figures: { accrualNoise: noise.value.residualStandardDeviation }, whyMissing: {} };
-  const reason =
-    noise.error.kind === 'too-few-points'
-      ? `${noise.error.given} usable quarters, ${noise.error.needed} are needed`
-      : 'cash from operations hardly moves, so nothing can be fitted';
-  return { figures: {}, whyMissing: { accrualNoise: reason } };
+  return { figures: {}, whyMissing: { accrualNoise: noNoise(noise.error) } };
 }
 
 /** From best to worst as a comparison sees it: what was not checked is taken as it is. */

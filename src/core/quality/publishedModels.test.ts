@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { jonesModel, type JonesFirm } from '../accruals/jones.ts';
 import { plainDate } from '../calendar/plainDate.ts';
-import type { PeerInputs } from './peerFigures.ts';
+import type { PeerFigure, PeerInputs } from './peerFigures.ts';
 import { abnormalOf, publishedModelsFor } from './publishedModels.ts';
 
 /** Figures that spread evenly, so that one per cent at either end is drawn in by nothing that matters. */
@@ -25,9 +25,9 @@ const peerOf = (k: number, sector = 'metal goods'): PeerInputs => {
       netIncome: 5 + ((k * 3) % 5),
       netIncomePrior: 2 + ((k * 13) % 9),
       cfo: 6 + ((k * 5) % 7),
-      revenue: 100 + k + revenueChange,
-      revenuePrior: 100 + k,
-      revenueBefore: 98 + k - ((k * 5) % 6),
+      revenue: 100 + ((k * k) % 23) + revenueChange,
+      revenuePrior: 100 + ((k * k) % 23),
+      revenueBefore: 98 + ((k * k) % 23) - ((k * 5) % 6),
       receivables: 20 + ((k * 3) % 4),
       receivablesPrior: 19,
       ppeGross: 20 + ((k * 5) % 17),
@@ -37,6 +37,10 @@ const peerOf = (k: number, sector = 'metal goods'): PeerInputs => {
     },
   };
 };
+const lacking = (peer: PeerInputs, figure: PeerFigure): PeerInputs => ({
+  ...peer,
+  figures: Object.fromEntries(Object.entries(peer.figures).filter(([name]) => name !== figure)),
+});
 const peers = Array.from({ length: 24 }, (_, k) => peerOf(k));
 
 const jonesFirm = ({ figures }: PeerInputs): JonesFirm => ({
@@ -96,8 +100,7 @@ test.each([
 });
 
 test('one firm without gross property, plant and equipment puts the whole group on net', () => {
-  const { ppeGross: _gross, ...figures } = peers[3]!.figures;
-  const mixed = [...peers.slice(0, 3), { ...peers[3]!, figures }, ...peers.slice(4)];
+  const mixed = [...peers.slice(0, 3), lacking(peers[3]!, 'ppeGross'), ...peers.slice(4)];
   const onNet = mixed.map((peer) => ({
     ...peer,
     figures: { ...peer.figures, ppeGross: peer.figures.ppeNet! },
@@ -109,15 +112,24 @@ test('one firm without gross property, plant and equipment puts the whole group 
 });
 
 test('a firm that lacks a figure is left out of the fit and has no residual', () => {
-  const { receivablesPrior: _gone, ...figures } = peers[0]!.figures;
-  const lacking = { ...peers[0]!, figures };
-  const models = publishedModelsFor([lacking, ...peers.slice(1)]);
-  expect(abnormalOf(models, lacking, 'kothari')).toEqual({ missing: 'a figure of the model is missing' });
+  const without = lacking(peers[0]!, 'receivablesPrior');
+  const models = publishedModelsFor([without, ...peers.slice(1)]);
+  expect(abnormalOf(models, without, 'kothari')).toEqual({ missing: 'a figure of the model is missing' });
   expect(abnormalOf(models, peers[1]!, 'kothari')).toMatchObject({ firms: 23 });
 });
 
 test('a cross-section stored before the models were kept has none', () => {
   expect(abnormalOf(undefined, peers[0]!, 'jones')).toMatchObject({
     missing: expect.stringMatching(/^0 borrowers/) as string,
+  });
+});
+
+test('terms that do not differ among the firms are said to, whatever the number of firms', () => {
+  const alike = peers.map((peer) => ({
+    ...peer,
+    figures: { ...peer.figures, assetsPrior: 50, revenuePrior: 100 },
+  }));
+  expect(abnormalOf(publishedModelsFor(alike), alike[0]!, 'abnormal-discretionary')).toEqual({
+    missing: 'the terms hardly differ among the 24 borrowers of the sector, so nothing can be fitted',
   });
 });

@@ -106,6 +106,10 @@ export function abnormalOf(
   model: PublishedModel,
 ): Abnormal {
   const fitted = models?.sectors.find(({ sector }) => sector === peer.sector)?.fits[model];
+  if (fitted?.coefficients === null && fitted.firms >= fewestFirms(model))
+    return {
+      missing: `the terms hardly differ among the ${fitted.firms} borrowers of the sector, so nothing can be fitted`,
+    };
   if (!models || !fitted?.coefficients)
     return {
       missing: `${fitted?.firms ?? 0} borrowers of the sector have the figures at this quarter end, ${fewestFirms(model)} are needed`,

@@ -43,10 +43,7 @@ export function samplesOf(book: StatementBook): Samples {
 function readOnce(book: StatementBook): Samples {
   const byRoute = new Map<Route, Map<LineItemCode, Map<PlainDate, Sample | null>>>();
   return (route, line, date) => {
-    let byLine = byRoute.get(route);
-    if (!byLine) byRoute.set(route, (byLine = new Map()));
-    let byDate = byLine.get(line);
-    if (!byDate) byLine.set(line, (byDate = new Map()));
+    const byDate = within(within(byRoute, route), line);
     const known = byDate.get(date);
     if (known !== undefined) return known;
     const [find, presence] = ROUTES[route];
@@ -56,4 +53,13 @@ function readOnce(book: StatementBook): Samples {
     byDate.set(date, sample);
     return sample;
   };
+}
+
+/** The inner map under the key, made on first sight. */
+function within<Key, Inner, Value>(map: Map<Key, Map<Inner, Value>>, key: Key): Map<Inner, Value> {
+  const known = map.get(key);
+  if (known) return known;
+  const made = new Map<Inner, Value>();
+  map.set(key, made);
+  return made;
 }
