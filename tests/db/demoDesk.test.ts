@@ -77,6 +77,11 @@ test.each([
   ['step-down ahead', ['step-down ahead: soon']],
   ['step-down later', ['step-down ahead: note']],
   ['late', ['statement late: soon']],
+  ['in cure period', ['test not met: urgent', 'waiver, cure running out: urgent']],
+  ['cured by its owners', []],
+  ['cured by the next test', []],
+  ['springing revolver', []],
+  ['our own triggers', ['past our trigger: soon']],
   ['late within grace', ['statement late: note']],
 ] as const satisfies readonly (readonly [Scenario, readonly string[]])[])(
   'a borrower that is "%s" has the alerts of its story and no others',
@@ -105,13 +110,16 @@ test('every outcome that a desk meets is there', async () => {
     ({ outcome }) => outcome,
   );
   expect(outcomes.toSorted()).toEqual([
+    'above our trigger',
     'awaiting figures',
     'cannot be tested',
+    'cured',
     'met',
     'met, net cash',
     'met, no charge to cover',
     'met, thin',
     'not met',
+    'not met, in cure period',
     'not met, ratio has no meaning',
     'not met, waived',
     'not tested',
