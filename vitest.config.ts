@@ -31,6 +31,7 @@ export default defineConfig({
           name: 'product',
           include: ['tests/{api,jobs,e2e}/**/*.test.ts'],
           globalSetup: ['tests/support/product.ts'],
+          setupFiles: ['tests/support/productClock.ts'],
           ...slow,
         },
       },

@@ -87,9 +87,9 @@ async function recalculated(from: string): Promise<ReadonlyMap<string, ExcelJS.W
     { timeout: RECALCULATES },
   );
   const read = await Promise.all(
-    files.map(async (file, place): Promise<[string, ExcelJS.Workbook]> => {
+    files.map(async (_file, place): Promise<[string, ExcelJS.Workbook]> => {
       const workbook = new ExcelJS.Workbook();
-      await workbook.xlsx.load((await readFile(join(to, `test-${place}.xlsx`))).buffer as ArrayBuffer);
+      await workbook.xlsx.load((await readFile(join(to, `test-${place}.xlsx`))).buffer);
       return [`test-${place}`, workbook];
     }),
   );
@@ -101,6 +101,9 @@ function valueOf(cell: ExcelJS.Cell): ExcelJS.CellValue {
   const { value } = cell;
   return value !== null && typeof value === 'object' && 'formula' in value ? (value.result ?? null) : value;
 }
+
+const textOf = (value: ExcelJS.CellValue | undefined): string =>
+  typeof value === 'string' ? value : JSON.stringify(value ?? null);
 
 const columnsOf = (sheet: ExcelJS.Worksheet, columns: readonly number[]) => {
   const rows: ExcelJS.CellValue[][] = [];
@@ -121,14 +124,14 @@ describe('a re-performance workbook', () => {
       const differences = rows.filter(([, difference]) => difference !== null);
       expect(differences.length).toBeGreaterThan(0);
       for (const [label, difference] of differences)
-        expect([0, 'same'], `${asked[place]!.name}: ${String(label)}`).toContain(difference);
+        expect(difference, `${asked[place]!.name}: ${textOf(label)}`).toBe('same');
     }
   });
 
   test('works out every row that the product computed', () => {
     for (const [place, workbook] of [...books.values()].entries()) {
       const open = columnsOf(workbook.getWorksheet('Test')!, [1, 5]).filter(([, note]) =>
-        String(note).includes('not worked out here'),
+        textOf(note).includes('not worked out here'),
       );
       expect(open, asked[place]!.name).toEqual([]);
     }
@@ -139,7 +142,7 @@ describe('a re-performance workbook', () => {
       columnsOf(workbook.getWorksheet('Lines')!, [4, 7]).filter(([unit]) => typeof unit === 'number'),
     );
     expect(fromCells.length).toBeGreaterThan(0);
-    for (const [, difference] of fromCells) expect(difference).toBe(0);
+    for (const [, difference] of fromCells) expect(difference).toBe('same');
   });
 
   test(
@@ -148,10 +151,10 @@ describe('a re-performance workbook', () => {
       const place = asked.findIndex(({ outcome }) => outcome === 'met');
       const workbook = new ExcelJS.Workbook();
       const original = await readFile(join(folder, `test-${place}.xlsx`));
-      await workbook.xlsx.load(original.buffer as ArrayBuffer);
+      await workbook.xlsx.load(original.buffer);
       const sheet = workbook.getWorksheet('Test')!;
       const level = columnsOf(sheet, [1]).findIndex(([label]) => label === 'Level in force') + 5;
-      const operatorIsMost = String(sheet.getCell(1, 1).value).includes('most');
+      const operatorIsMost = textOf(sheet.getCell(1, 1).value).includes('most');
       sheet.getCell(level, 2).value = operatorIsMost ? 0.001 : 1e15;
       const changed = await mkdtemp(join(tmpdir(), 'reperformance-'));
       await writeFile(join(changed, 'test-0.xlsx'), new Uint8Array(await workbook.xlsx.writeBuffer()));

@@ -35,8 +35,10 @@ declare module 'vitest' {
   }
 }
 
-/** Everything that the demo desk holds is dated from here. */
+/** Everything that the demo desk holds is dated from here, and here the product's clock stands when it starts. */
 const SEED_DAY = '2026-12-01';
+const MORNING = Date.parse(`${SEED_DAY}T09:00:00Z`);
+const PINNED_CLOCK = new URL('./pinnedClock.mjs', import.meta.url).href;
 
 const processes: ChildProcess[] = [];
 let folder: string | null = null;
@@ -59,6 +61,8 @@ export async function setup(project: TestProject): Promise<void> {
     MAIL_SINK_PORT: String(sinkPort),
     DATA_DIR: folder,
     SEED_DAY,
+    CLOCK_OFFSET_MS: String(MORNING - Date.now()),
+    NODE_OPTIONS: `--import ${PINNED_CLOCK}`,
     NIGHT_SCHEDULE: '0',
     LOG_LEVEL: 'warn',
     NODE_ENV: 'production',

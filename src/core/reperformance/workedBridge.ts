@@ -2,8 +2,7 @@ import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import type { BridgeLine } from '../measures/bridge.ts';
 import { Decimal, decimal, ZERO } from '../money/decimal.ts';
-import type { InputUsed } from '../statements/reading.ts';
-import { lineKey } from './workedLines.ts';
+import { figureFormula } from './workedFigure.ts';
 import type { WorkedLine, WorkedRow } from './workedTest.ts';
 
 /** Lines that stand beside the sum. */
@@ -17,7 +16,7 @@ const BESIDE = ['check', 'rate'];
  */
 export function workedBridge(
   { bridge }: Pick<CovenantTest, 'bridge'>,
-  covenant: Pick<Covenant, 'definition' | 'addBacks'>,
+  covenant: Pick<Covenant, 'definition' | 'addBacks' | 'levels'>,
   lines: readonly WorkedLine[],
 ): readonly WorkedRow[] {
   const known = new Set(lines.map(({ key }) => key));
@@ -30,23 +29,30 @@ export function workedBridge(
       value: line.amount,
       note: line.note ?? '',
     };
-    const asRecorded = line.kind === 'add-back' || BESIDE.includes(line.kind);
+    const asRecorded = line.kind === 'add-back' || BESIDE.includes(line.kind) || isOfSchedule(line, covenant);
     const formula = asRecorded ? null : formulaOf(line, rows, bridge, covenant, known);
     rows.push({ ...common, formula, isOpen: formula === null && !asRecorded });
   });
   return rows;
 }
 
+/** A level as the schedule has it, which others are worked out from. */
+const isOfSchedule = ({ inputs, amount }: BridgeLine, { levels }: Pick<Covenant, 'levels'>): boolean =>
+  inputs.length === 0 && levels.some(({ level }) => level?.eq(amount));
+
+const subtotalAbove = (above: readonly WorkedRow[], bridge: readonly BridgeLine[]): WorkedRow | null =>
+  above.findLast((_, place) => bridge[place]!.kind === 'subtotal') ?? null;
+
 function formulaOf(
   line: BridgeLine,
   above: readonly WorkedRow[],
   bridge: readonly BridgeLine[],
-  covenant: Pick<Covenant, 'definition' | 'addBacks'>,
+  covenant: Pick<Covenant, 'definition' | 'addBacks' | 'levels'>,
   known: ReadonlySet<string>,
 ): string | null {
   switch (line.kind) {
     case 'figure':
-      return fromLines(line, known);
+      return figureFormula(line, subtotalAbove(above, bridge), covenant, known);
     case 'subtotal':
       return sumAbove(line.amount, above, bridge);
     case 'disallowed':
@@ -57,20 +63,6 @@ function formulaOf(
       return null;
   }
 }
-
-/** The inputs with their signs and rates, or all of them taken off. */
-function fromLines({ inputs, amount }: BridgeLine, known: ReadonlySet<string>): string | null {
-  if (inputs.length === 0 || inputs.some((input) => !known.has(lineKey(input)))) return null;
-  const sum = Decimal.sum(0, ...inputs.map(counted));
-  const terms = inputs.map(termOf).join('');
-  if (sum.eq(amount)) return terms;
-  return sum.negated().eq(amount) ? `-(${terms})` : null;
-}
-
-const counted = ({ sign, amount, rate }: InputUsed): Decimal => amount.times(sign).times(rate ?? 1);
-
-const termOf = (input: InputUsed): string =>
-  `${input.sign === 1 ? '+' : '-'}{${lineKey(input)}}${input.rate ? `*${input.rate.toFixed()}` : ''}`;
 
 /**
  * The rows since the last subtotal with it, without it, or all the rows since an earlier one: whichever comes to the
@@ -104,7 +96,7 @@ function overCap(
   { definition, addBacks }: Pick<Covenant, 'definition' | 'addBacks'>,
 ): string | null {
   const { addBackCap: cap, addBackCapBasis: basis } = definition;
-  const earnings = above.findLast((_, place) => bridge[place]!.kind === 'subtotal');
+  const earnings = subtotalAbove(above, bridge);
   if (!cap || !earnings || !(earnings.value instanceof Decimal)) return null;
   const taken = above.filter((_, place) => bridge[place]!.kind === 'add-back');
   const isCapped = (row: WorkedRow) =>

@@ -4,6 +4,7 @@ import { MEASURES } from '../measures/index.ts';
 import type { Measure } from '../measures/measured.ts';
 import { Decimal, decimal } from '../money/decimal.ts';
 import type { Policy } from '../policy.ts';
+import type { Candidate } from './workedFigure.ts';
 import type { WorkedRow } from './workedTest.ts';
 
 /**
@@ -24,7 +25,7 @@ export function workedResult(
     sideRow('numerator', 'Numerator', test.numerator, bridge),
     ...(measure.shape === 'amount' ? [] : [sideRow('denominator', 'Denominator', test.denominator, bridge)]),
   ];
-  const level = recorded('level', 'Level in force', measure.unit, test.level);
+  const level = levelRow(test, measure, bridge);
   const rows = [...sides, level];
   if (!test.numerator || !test.level) return [...rows, ...outcomeAsRecorded(test)];
   return [
@@ -53,6 +54,18 @@ function sideRow(key: string, label: string, value: Decimal | null, bridge: read
     isOpen: value !== null && !row,
     note: '',
   };
+}
+
+/** A level that the agreement computes is a subtotal of the bridge; any other is as its schedule has it. */
+function levelRow(
+  { level }: CovenantTest,
+  { unit }: Pick<Measure, 'unit'>,
+  bridge: readonly WorkedRow[],
+): WorkedRow {
+  const row = recorded('level', 'Level in force', unit, level);
+  const computed =
+    level && bridge.find(({ value, formula }) => formula && value instanceof Decimal && value.eq(level));
+  return unit === 'money' && computed ? { ...row, formula: `{${computed.key}}` } : row;
 }
 
 const recorded = (
@@ -98,9 +111,6 @@ interface Form {
   readonly value: Decimal | null;
   readonly candidates: readonly Candidate[];
 }
-
-/** A formula with what it comes to in decimals: the first that comes to the result is the one. */
-type Candidate = readonly [formula: string, value: Decimal | null];
 
 function headroomRows(
   test: CovenantTest,

@@ -122,7 +122,9 @@ function writeRow(
 
 /** Words agree or differ; figures differ by so much, binary rounding apart. */
 const differenceOf = (at: number, unit: WorkedRow['unit']): string =>
-  unit === 'words' ? `IF(B${at}=C${at},"same","differs")` : `ROUND(B${at}-C${at},6)`;
+  unit === 'words' ? `IF(B${at}=C${at},"same","differs")` : differs(`B${at}-C${at}`);
+
+const differs = (difference: string): string => `IF(ROUND(${difference},6)=0,"same",${difference})`;
 
 const cellValue = (value: WorkedRow['value']): ExcelJS.CellValue =>
   value instanceof Decimal ? value.toNumber() : (value ?? 'none');
@@ -166,7 +168,7 @@ function writeLines(workbook: ExcelJS.Workbook, sheet: ReperformanceSheet, addre
     const amount = isWorked ? { formula: resolved(`(${sum})*$D$${at}`, addresses) } : line.amount.toNumber();
     write(worksheet.getCell(at, 5), amount, money, { ...style, font: FONTS.name });
     write(worksheet.getCell(at, 6), line.amount.toNumber(), money, { ...style, font: FONTS.second });
-    if (isWorked) write(worksheet.getCell(at, 7), { formula: `ROUND(E${at}-F${at},6)` }, '0.000000', style);
+    if (isWorked) write(worksheet.getCell(at, 7), { formula: differs(`E${at}-F${at}`) }, '0.000000', style);
     put(
       worksheet.getCell(at, 8),
       writtenText(isWorked ? '' : 'As accepted: entered, or put together by an answer.'),
@@ -229,6 +231,6 @@ function write(
   numFmt: string,
   style: Partial<ExcelJS.Style>,
 ): void {
-  cell.value = value as ExcelJS.CellValue;
+  cell.value = value;
   cell.style = { ...style, numFmt };
 }
