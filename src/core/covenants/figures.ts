@@ -76,8 +76,15 @@ export function figuresOf(
   };
 }
 
-const inputsOf = (readings: readonly Reading[]): readonly InputUsed[] =>
-  readings.flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
+/** Each figure once: what stands on both sides (rent, debt in capital) is one figure of the accounts. */
+function inputsOf(readings: readonly Reading[]): readonly InputUsed[] {
+  const inputs = readings.flatMap((reading) => (reading.kind === 'missing' ? [] : reading.inputs));
+  const byKey = new Map(inputs.map((input) => [keyOf(input), input]));
+  return byKey.size === inputs.length ? inputs : [...byKey.values()];
+}
+
+const keyOf = ({ statementId, line, sign, rate }: InputUsed): string =>
+  `${statementId} ${line} ${sign} ${rate?.toFixed() ?? ''}`;
 
 /** Today's rules count lease liabilities as debt and keep their rent out of EBITDA. */
 const byTodaysRules = (definition: MeasureDefinition): MeasureDefinition => ({
