@@ -10,7 +10,7 @@ import { runningDatabase } from './database.mjs';
 import { StartFault, installModules, run } from './packages.mjs';
 import { takePlace } from './place.mjs';
 
-const NEEDS_NO_DATABASE = ['reference', 'readSheet', 'validate'];
+const NEEDS_NO_DATABASE = ['reference', 'readSheet', 'validate', 'fuzz'];
 const say = (text) => console.error(text);
 
 const [name = '', ...args] = process.argv.slice(2);

@@ -57,6 +57,8 @@ export function readAmountText(raw: string, mark: DecimalMark): TextMeaning {
 export function decimalMarkOf(texts: Iterable<string>): DecimalMark {
   const votes = { ',': 0, '.': 0 };
   const groupsOfThree = { ',': 0, '.': 0 };
+  /** Votes of numbers from 1: a share such as 0.358 may be written in another notation than the amounts. */
+  const strong = { ',': 0, '.': 0 };
   let plainHundreds = 0;
   for (const raw of texts) {
     const { body } = withoutSign(
@@ -66,10 +68,14 @@ export function decimalMarkOf(texts: Iterable<string>): DecimalMark {
     if (/^[1-9]\d\d$/.test(body)) plainHundreds += 1;
     const proven = provenMark(body.replace(/[ ']/g, ''));
     if (proven === ',' || proven === '.') votes[proven] += 1;
+    if ((proven === ',' || proven === '.') && !/^0?[.,]/.test(body)) strong[proven] += 1;
     if (proven === 'three behind ,') groupsOfThree[','] += 1;
     if (proven === 'three behind .') groupsOfThree['.'] += 1;
   }
-  if (votes[','] !== votes['.']) return votes[','] > votes['.'] ? ',' : '.';
+  if (votes[','] !== votes['.']) {
+    const winner = votes[','] > votes['.'] ? ',' : '.';
+    return groupsOfThree[winner] > 0 && strong[winner] === 0 ? null : winner;
+  }
   if (votes[','] > 0) return null;
   // Beside whole hundreds without a mark two such groups are enough: three decimals are not left away.
   const needed = plainHundreds > 0 ? 2 : 3;

@@ -86,6 +86,23 @@ function factOf(
   };
 }
 
+const OF_PAYMENT = {
+  words:
+    'is a payment by its name, but stands without a minus, and no total shows which is meant. Was money paid out?',
+  options: [
+    { value: 'negative', label: 'Paid out' },
+    { value: 'positive', label: 'Received' },
+  ],
+} as const;
+/** 'negative' turns what is printed, as it does for payments. */
+const OF_RESULT = {
+  words: 'has a sign that no total proves. Does it raise the result or lower it?',
+  options: [
+    { value: 'negative', label: 'It lowers the result' },
+    { value: 'positive', label: 'It raises the result' },
+  ],
+} as const;
+
 const HIDDEN_KEY = 'hidden-rows';
 const colourKey = (table: StatementTable, row: PlacedRow): string =>
   `sign:${table.table.sheet.name}:${row.read.row.label}`;
@@ -118,17 +135,15 @@ function signQuestions(table: StatementTable, run: Run, row: PlacedRow, asking: 
     return [key];
   }
   if (!run.signed.unsettled.has(row.index)) return [];
-  const key = `sign:${table.table.sheet.name}:${row.read.row.label}`;
+  const key = colourKey(table, row);
+  const { words, options } = run.part === 'income' ? OF_RESULT : OF_PAYMENT;
   asking.ask({
     key,
     kind: 'sign',
     holdsFor: 'layout',
-    text: `'${row.read.row.label}' on '${table.table.sheet.name}' is a payment by its name, but stands without a minus, and no total shows which is meant. Was money paid out?`,
+    text: `'${row.read.row.label}' on '${table.table.sheet.name}' ${words}`,
     where: [rowPlace(table.table, row.read.row)],
-    options: [
-      { value: 'negative', label: 'Paid out' },
-      { value: 'positive', label: 'Received' },
-    ],
+    options,
   });
   return [key];
 }

@@ -37,11 +37,14 @@ const WORDS = {
     /(?<![a-z])(?:as (?:originally |previously )?reported|original|as published|previously reported)(?![a-z])/,
   budget: /(?<![a-z])(?:budget|bud|plan(?:ned)?|soll|target|presupu?e?sto|budgete)(?![a-z])/,
   forecast:
-    /(?<![a-z])(?:forecast|fcst|fc|rf ?\d?|guidance|latest (?:view|outlook)|\d{1,2} ?\+ ?\d{1,2}|estimate[ds]?|est\.?|outlook|latest estimate|le|projection|projected|prevision(?:nel|s)?|prognose|hochrechnung|expected|erwartet)(?![a-z])/,
+    /(?<![a-z])(?:forecast|fcst|fc|rf ?\d?|guidance|latest (?:view|outlook)|\d{1,2} ?\+ ?\d{1,2}|estimate[ds]?|est\.?|outlook|latest estimate|projection|projected|prevision(?:nel|s)?|prognose|hochrechnung|expected|erwartet)(?![a-z])/,
   actual: /(?<![a-z])(?:actuals?|act\.?|ist|reel|real|realise)(?![a-z])/,
   debit: /(?<![a-z])(?:debits?|soll|debe|dr)(?![a-z])/,
   credit: /(?<![a-z])(?:credits?|haben|haber|cr)(?![a-z])/,
 } as const;
+
+/** 'LE Q4 2026', 'Q4 2026 LE'; but 'CLOS LE 31 DÉCEMBRE' is French. */
+const LATEST_ESTIMATE = /(?<![A-Za-z])LE(?![A-Za-z])(?!\s*\d{1,2}(?!\d))/;
 
 /** 'Dec-26E', '2026B', 'Q4 26F', '2025A': one letter behind the year. */
 const SUFFIX = /(?<=\d)\s?\(?([ebfa])\)?$/;
@@ -69,7 +72,7 @@ export function readHeadingText(text: string): HeadingText {
   const indexed = taken(WORDS.indexed);
   const derived = taken(WORDS.derived) || indexed;
   const budget = taken(WORDS.budget);
-  const forecast = taken(WORDS.forecast);
+  const forecast = taken(WORDS.forecast) || LATEST_ESTIMATE.test(text);
   const actual = taken(WORDS.actual);
   const scale = readScaleText(text);
   const period = readPeriodText(plain);
@@ -89,7 +92,9 @@ export function readHeadingText(text: string): HeadingText {
     priorYear,
     restated,
     side,
-    rest: nameLeft(period.rest),
+    rest: nameLeft(
+      LATEST_ESTIMATE.test(text) ? period.rest.replace(/(?<![a-z])le(?![a-z])/, ' ') : period.rest,
+    ),
   };
 }
 

@@ -16,7 +16,7 @@ const FIELDS = {
 type Field = keyof typeof FIELDS;
 
 const MIN_LINES = 3;
-const MIN_PERIODS = 2;
+const MIN_PERIODS = 1;
 
 export function oriented(table: Table): Table {
   const headings = table.columns.map(({ headings: cells }) =>

@@ -4,6 +4,7 @@ import { lineItem, LINE_ITEMS, type LineItemCode } from '#core/statements/lineIt
 import type { Question } from '#core/statements/workbookReading.ts';
 import type { Asking } from './asking.ts';
 import { nearLines, type Part } from './labels.ts';
+import { isOverheads, provenLine } from './provenTotals.ts';
 import type { ReadRow } from './rows.ts';
 import { COST_LINES, isStandardLine, isSubtotal } from './lineNature.ts';
 import { LEAVE_OUT, placementKey, rowPlace, type Run, type StatementTable } from './statements.ts';
@@ -21,6 +22,8 @@ export interface PlacedRow {
 
 /** Rows below this share of revenue or total assets are left out without a question. */
 const MATERIAL_SHARE = decimal('0.01');
+/** The same for a cash flow, of its largest total. */
+const MATERIAL_SHARE_OF_CASH = decimal('0.1');
 /** Likeness from which a wording is taken for a misspelt or longer known one, if sums bear it out. */
 const LIKE_ENOUGH = 0.85;
 
@@ -46,6 +49,7 @@ export function placeRows(table: StatementTable, run: Run, asking: Asking): Plac
     if (isStandardLine(read.line)) return done(read.line, reasonOf(table, run, read, index, asking));
     if (read.line === 'memo')
       return done(null, answered(table, read, asking) ? 'left out by answer' : 'no amount of the statements');
+    if (isOverheads(run, index)) return done('sga', 'overheads, in one total of the rows above');
     if (read.line !== null) return done(null, 'goes into totals, no standard line of its own');
     return placeUnknown(table, run, read, index, reference, asking, done);
   });
@@ -74,7 +78,10 @@ function placeUnknown(
   done: Done,
 ): PlacedRow {
   const { sums, signs } = run.signed.sums;
-  if (sums.has(index)) return done(null, 'a total of the rows above');
+  if (sums.has(index)) {
+    const proven = provenLine(run, index);
+    return done(proven, proven ? 'adds up as that total does' : 'a total of the rows above');
+  }
   if (read.row.label === '') return done(null, 'no label');
   if (read.part === null) return done(null, 'part of no statement');
   const near = nearLines(read.row.label, read.part, read.section).filter(({ line }) => !isSubtotal(line));
@@ -89,8 +96,7 @@ function placeUnknown(
       'like a known wording, and the total adds up with it',
     );
   }
-  if (!matters(run, index, reference) || read.part === 'cash-flow')
-    return done(null, 'unknown wording, too small to matter');
+  if (!matters(run, read, index, reference)) return done(null, 'unknown wording, too small to matter');
   const key = askPlacement(table, run, read, index, reference, asking);
   return done(null, 'unknown wording', asking.isOpen(key) ? [key] : []);
 }
@@ -132,10 +138,15 @@ function bearsOut(run: Run, index: number, line: Line): boolean {
   return COST_LINES.has(line) === lowers;
 }
 
-/** The largest revenue or total of assets in the run. */
+const REFERENCES: Readonly<Record<Part, readonly Line[]>> = {
+  income: ['revenue'],
+  balance: ['total_assets', 'total_equity_and_liabilities'],
+  'cash-flow': ['cfo', 'cfi', 'cff'],
+};
+
+/** The largest revenue, total of assets or cash flow of an activity in the run. */
 function referenceOf(run: Run): Decimal | null {
-  const lines: readonly Line[] =
-    run.part === 'income' ? ['revenue'] : ['total_assets', 'total_equity_and_liabilities'];
+  const lines = REFERENCES[run.part ?? 'balance'];
   const amounts = run.rows.flatMap((read, at) =>
     read.line && lines.includes(read.line) ? (run.amounts[at] ?? []) : [],
   );
@@ -145,17 +156,25 @@ function referenceOf(run: Run): Decimal | null {
   );
 }
 
-function matters(run: Run, index: number, reference: Decimal | null): boolean {
+/** Entries of the operating cash flow are many, and no line of their own needs them. */
+function matters(run: Run, read: ReadRow, index: number, reference: Decimal | null): boolean {
+  const isCashFlow = read.part === 'cash-flow';
+  if (isCashFlow && read.section !== 'investing' && read.section !== 'financing') return false;
   const amounts = (run.amounts[index] ?? []).flatMap((amount) => amount ?? []);
   if (amounts.every((amount) => amount.isZero())) return false;
-  return reference === null || amounts.some((amount) => amount.abs().gte(reference.times(MATERIAL_SHARE)));
+  return (
+    reference === null ||
+    amounts.some((amount) =>
+      amount.abs().gte(reference.times(isCashFlow ? MATERIAL_SHARE_OF_CASH : MATERIAL_SHARE)),
+    )
+  );
 }
 
 function shareText(run: Run, index: number, reference: Decimal | null): string {
   const [amount] = (run.amounts[index] ?? []).flatMap((found) => found ?? []);
   if (!amount || !reference || reference.isZero()) return '';
   const share = amount.abs().div(reference).times(100).toFixed(1);
-  return ` (${share} % of ${run.part === 'income' ? 'revenue' : 'total assets'})`;
+  return ` (${share} % of ${run.part === 'income' ? 'revenue' : run.part === 'cash-flow' ? 'the largest cash flow' : 'total assets'})`;
 }
 
 /** The likeliest lines first, then every line of the part that is no total. */
@@ -186,7 +205,7 @@ function droppedRows(run: Run): Map<number, string> {
 }
 
 function dropForSum(run: Run, index: number, parts: readonly number[], dropped: Map<number, string>): void {
-  const line = run.rows[index]?.line ?? null;
+  const line = isOverheads(run, index) ? 'sga' : (run.rows[index]?.line ?? null);
   if (!isStandardLine(line) || isSubtotal(line)) return;
   const others = parts.filter(
     (part) => isStandardLine(run.rows[part]?.line ?? null) && run.rows[part]?.line !== line,

@@ -19,8 +19,15 @@ export function couldBeYear(cell: SheetCell): boolean {
   return amount !== null && amount.isInteger() && amount.gte(1990) && amount.lte(2100);
 }
 
-/** Runs of label columns, each followed by its run of value columns. */
+/** Runs of label columns, each followed by its run of value columns; a sheet of one record has one amount a column. */
 export function segmentsOf(sheet: SheetGrid): Segment[] {
+  const segments = segmentsWith(sheet, MIN_AMOUNTS_OF_COLUMN);
+  return segments.length > 0 ? segments : segmentsWith(sheet, 1);
+}
+
+function segmentsWith(sheet: SheetGrid, least: number): Segment[] {
+  const holdsValues = (tally: ColumnTally | undefined): boolean =>
+    tally !== undefined && tally.values >= least && (tally.values * 2 >= tally.texts || tally.values >= 5);
   const kinds = new Map<number, ColumnTally>();
   for (const row of sheet.rows.values()) {
     const inBody = [...row.values()].some((cell) => isAmount(cell) && !couldBeYear(cell));
@@ -71,11 +78,6 @@ function tallyCell(kinds: Map<number, ColumnTally>, cell: SheetCell, inBody: boo
   else tally.texts += 1;
   if (cell.kind === 'text' && /\p{L}{3}/u.test(cell.text)) tally.words.add(cell.text);
 }
-
-const holdsValues = (tally: ColumnTally | undefined): boolean =>
-  tally !== undefined &&
-  tally.values >= MIN_AMOUNTS_OF_COLUMN &&
-  (tally.values * 2 >= tally.texts || tally.values >= 5);
 
 const holdsWords = (tally: ColumnTally | undefined): boolean =>
   tally !== undefined && tally.words.size >= 3 && tally.words.size > tally.values;

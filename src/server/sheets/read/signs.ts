@@ -124,10 +124,37 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
       const contribution = sums.signs.get(index) ?? (isCost(line) && !costsNegative ? -1 : 1);
       return (turned * (isCost(line) ? -contribution : contribution)) as 1 | -1;
     },
-    unsettled: new Set(),
+    unsettled: unsettledOfIncome(rows, values, sums, costsNegative),
     costsNegative: costsNegative && turned === 1,
     liabilitiesNegative: false,
   };
+}
+
+/** Gains by their own words; 'Exceptional items' and 'Restructuring costs' may be written either way. */
+const SAYS_GAIN = /income|gain|profit|ertr[äa]g|produit|ingreso|beneficio/i;
+
+/**
+ * Rows that no total proves and whose sign is not that of the block: a cost with a minus among costs without one, and
+ * an exceptional figure without a minus, which may raise or lower the result.
+ */
+function unsettledOfIncome(
+  rows: readonly ReadRow[],
+  values: Values,
+  sums: SumFound,
+  costsNegative: boolean,
+): ReadonlySet<number> {
+  return new Set(
+    rows.flatMap((row, at) => {
+      const filled = (values[at] ?? []).filter((value) => value !== null && !value.isZero());
+      if (sums.signs.has(at) || filled.length === 0 || row.line === null || row.ofWhich) return [];
+      const isNegative = filled.every((value) => value?.isNegative());
+      if (row.line === 'other_non_operating') {
+        return !isNegative && !SAYS_GAIN.test(row.row.label) ? [at] : [];
+      }
+      const isBlock = COST_LINES.has(row.line) && !costsNegative && !isSubtotal(row.line);
+      return isBlock && isNegative ? [at] : [];
+    }),
+  );
 }
 
 function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
