@@ -10,7 +10,8 @@ import { parseArgs } from 'node:util';
 import { plainDate } from '#core/calendar/plainDate.ts';
 import { validationFigures } from '#contracts/validation.ts';
 import { report } from './validate/report.ts';
-import { SEEDS, validate, type Seeds } from './validate/validation.ts';
+import { runSeeds } from './validate/runSeeds.ts';
+import { figuresOf, SEEDS, type Seeds } from './validate/validation.ts';
 
 const FIGURES = new URL('../src/core/validation.json', import.meta.url);
 
@@ -23,9 +24,10 @@ async function main(): Promise<number> {
     return 2;
   }
   const today = plainDate(new Date().toISOString().slice(0, 10));
-  const figures = validate(wanted.seeds, today, (seed) => {
-    if (process.stderr.isTTY) process.stderr.write(`\rseed ${seed}`);
+  const results = await runSeeds(wanted.seeds, (done) => {
+    if (process.stderr.isTTY) process.stderr.write(`\r${done} seeds done`);
   });
+  const figures = figuresOf(wanted.seeds, results, today);
   if (process.stderr.isTTY) process.stderr.write('\r');
   console.log(report(figures));
   if (wanted.isWriting)

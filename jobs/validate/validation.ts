@@ -32,15 +32,21 @@ const CAUTION =
 const MOST_BOOKS_WITH_LIST = 0.08;
 const MOST_FALSE_SHARE = 0.15;
 
-export function validate(seeds: Seeds, date: PlainDate, progress: (seed: number) => void): ValidationFigures {
-  const statements: StatementResult[] = [];
-  const headrooms: SeedHeadrooms[] = [];
-  for (let seed = seeds.from; seed <= seeds.to; seed += 1) {
-    statements.push(statementResult(seed));
-    headrooms.push(headroomResults(seed));
-    progress(seed);
-  }
-  const statementBooks = statementFigures(statements);
+/** What one seed's books come to, before they are put together. */
+export interface SeedResult {
+  readonly statements: StatementResult;
+  readonly headrooms: SeedHeadrooms;
+}
+
+export const seedResult = (seed: number): SeedResult => ({
+  statements: statementResult(seed),
+  headrooms: headroomResults(seed),
+});
+
+/** The figures of all seeds, whose results are given in their order. */
+export function figuresOf(seeds: Seeds, results: readonly SeedResult[], date: PlainDate): ValidationFigures {
+  const headrooms = results.map((result) => result.headrooms);
+  const statementBooks = statementFigures(results.map(({ statements }) => statements));
   const headroomBooks = {
     borrowers: BORROWERS,
     cells: headroomFigures(headrooms),
@@ -54,8 +60,8 @@ export function validate(seeds: Seeds, date: PlainDate, progress: (seed: number)
     caution: CAUTION,
     statementBooks,
     headroomBooks,
-    bounds: seeds.to - seeds.from + 1 < FEWEST_SEEDS ? [] : boundsOf(statementBooks, headroomBooks),
-    bySeed: statements.map((result, k) => seedFigures(result, headrooms[k]!)),
+    bounds: results.length < FEWEST_SEEDS ? [] : boundsOf(statementBooks, headroomBooks),
+    bySeed: results.map(seedFigures),
   };
 }
 
@@ -92,7 +98,7 @@ function boundsOf(
 }
 
 /** Enough of one seed to see that it comes out again. */
-function seedFigures({ seed, firms }: StatementResult, headrooms: SeedHeadrooms): SeedFigures {
+function seedFigures({ statements: { seed, firms }, headrooms }: SeedResult): SeedFigures {
   const areas = Object.keys(firms[0]!.measures)
     .map((name) => ({ name, area: areaOf(firms, ({ measures }) => measures[name]) }))
     .sort((a, b) => b.area - a.area);

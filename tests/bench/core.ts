@@ -1,43 +1,27 @@
 /**
- * npm run bench: how long the core takes by itself, without database and network.
+ * npm run bench: how long the core takes by itself, without database and network, on one thread.
  *
- * Prints the median of one borrower's assessment and of the peers' cross-section, and how the latter grows. It asserts
- * nothing: a figure of another machine is no failure.
+ * Prints the median of one borrower's assessment, what one quarter end of a whole book takes, how that grows with the
+ * book, and what it holds in memory. It asserts nothing: a figure of another machine is no failure.
  */
 import { performance } from 'node:perf_hooks';
 import { assess } from '#core/assess.ts';
 import { NO_BOOK } from '#core/bookCrossSection.ts';
+import { patternStanding } from '#core/patterns/patternStanding.ts';
 import { POLICY_VERSION_1 } from '#core/policy.ts';
-import { AS_OF, buildBook, generator } from '#core/quality/book.fixture.ts';
-import { buildCrossSection, type PeerInputs } from '#core/quality/crossSection.ts';
+import { AS_OF } from '#core/quality/book.fixture.ts';
+import { buildCrossSection } from '#core/quality/crossSection.ts';
 import { peerInputsOfQuarters } from '#core/quality/peerInputs.ts';
 import { inQuarters, inYearsToDate, QUARTERS, restated, TESTED_QUARTERS } from './heavyBorrower.ts';
+import { peersOf, testsOf, TESTS } from './wholeBook.ts';
 
-const SECTORS = 40;
-const PATTERNS = 80;
-
-const patterns = buildBook(PATTERNS, 'metal goods', 1).map((borrower) =>
-  peerInputsOfQuarters(borrower, AS_OF),
-);
-
-/** So many borrowers of eight quarter ends each, drawn around those that were built statement by statement. */
-function peersOf(borrowers: number): PeerInputs[] {
-  const random = generator(borrowers);
-  return Array.from({ length: borrowers }, (_, k) => k).flatMap((borrowerId) => {
-    const size = 0.5 + 3 * random();
-    return patterns[borrowerId % PATTERNS]!.map((peer) => ({
-      ...peer,
-      borrowerId,
-      sector: `sector ${borrowerId % SECTORS}`,
-      figures: Object.fromEntries(
-        Object.entries(peer.figures).map(([name, value]) => [name, value * size * (0.95 + random() / 10)]),
-      ),
-    }));
-  });
-}
+const RUNS = 200;
+const BOOK_RUNS = 5;
+const SIZES = [1_000, 10_000] as const;
+const MEBIBYTE = 2 ** 20;
 
 function medianMs(runs: number, work: () => unknown): number {
-  for (let warm = 0; warm < Math.min(10, runs); warm += 1) work();
+  for (let warm = 0; warm < Math.min(50, runs); warm += 1) work();
   const times = Array.from({ length: runs }, () => {
     const start = performance.now();
     work();
@@ -46,30 +30,68 @@ function medianMs(runs: number, work: () => unknown): number {
   return times[Math.floor(runs / 2)]!;
 }
 
-const say = (label: string, figure: string): void => console.log(`${label.padEnd(56)}${figure.padStart(12)}`);
+const say = (label: string, figure: string): void => console.log(`${label.padEnd(64)}${figure.padStart(12)}`);
 const ms = (value: number): string => `${value.toFixed(2)} ms`;
+const times = (large: number, small: number): string => `${(large / small).toFixed(1)} times`;
 
-const crossSection = { ...NO_BOOK, ...buildCrossSection(peersOf(1_000), 1) };
+/** What is held in memory by what `make` gives, after everything else is cleared away. */
+function heldMebibytes(make: () => unknown): number {
+  if (!globalThis.gc) throw new Error('run with --expose-gc, as npm run bench does');
+  globalThis.gc();
+  const before = process.memoryUsage().heapUsed;
+  const made = make();
+  globalThis.gc();
+  const held = process.memoryUsage().heapUsed - before;
+  // Read after the measurement, so that it is still held during it.
+  if (made === undefined) throw new Error('nothing was made');
+  return held / MEBIBYTE;
+}
 
-console.log(
-  `One borrower: ${QUARTERS} quarters, 4 covenants, ${TESTED_QUARTERS} quarters of tests; median of 100`,
-);
-for (const [label, inputs] of [
-  ['quarter by quarter', inQuarters],
-  ['years to date', inYearsToDate],
-  ['years to date, every period restated', restated],
-] as const)
-  say(`  assess, ${label}`, ms(medianMs(100, () => assess(inputs, crossSection, POLICY_VERSION_1, AS_OF))));
-say(
-  '  peer figures of the last 8 quarter ends',
-  ms(medianMs(100, () => peerInputsOfQuarters(inYearsToDate, AS_OF))),
-);
+function oneBorrower(): void {
+  console.log(
+    `One borrower: ${QUARTERS} quarters, 4 covenants, ${TESTED_QUARTERS} quarters of tests; median of ${RUNS}; wanted: 4 ms`,
+  );
+  const book = {
+    ...NO_BOOK,
+    ...buildCrossSection(peersOf(1_000), 1),
+    patterns: patternStanding(testsOf(1_000, 4)),
+  };
+  for (const [label, inputs] of [
+    ['quarter by quarter', inQuarters],
+    ['years to date', inYearsToDate],
+    ['years to date, every period restated', restated],
+  ] as const)
+    say(`  assess, ${label}`, ms(medianMs(RUNS, () => assess(inputs, book, POLICY_VERSION_1, AS_OF))));
+  say(
+    '  of that, figures for peers of 8 quarter ends',
+    ms(medianMs(RUNS, () => peerInputsOfQuarters(inYearsToDate, AS_OF))),
+  );
+}
 
-console.log('The cross-section of 8 quarter ends; median of 5');
-const [small, large] = [1_000, 10_000].map((borrowers) => {
-  const peers = peersOf(borrowers);
-  const took = medianMs(5, () => buildCrossSection(peers, 1));
-  say(`  ${borrowers.toLocaleString('en')} invented borrowers`, ms(took));
-  return took;
-});
-say('  ten times the borrowers take', `${(large! / small!).toFixed(1)} times`);
+function wholeBook(): void {
+  console.log(
+    `One quarter end of the whole book: peer models, and the patterns of ${TESTS} tests a covenant; median of ${BOOK_RUNS}; wanted: 2 s for 10,000`,
+  );
+  const taken = SIZES.map((borrowers) => {
+    const peers = peersOf(borrowers);
+    const [one, four] = [testsOf(borrowers, 1), testsOf(borrowers, 4)];
+    const models = medianMs(BOOK_RUNS, () => buildCrossSection(peers, 1));
+    const oneCovenant = medianMs(BOOK_RUNS, () => patternStanding(one));
+    const fourCovenants = medianMs(BOOK_RUNS, () => patternStanding(four));
+    const held = heldMebibytes(() => [buildCrossSection(peers, 1), patternStanding(four)]);
+    const name = `  ${borrowers.toLocaleString('en')} borrowers`;
+    say(`${name}: peer models`, ms(models));
+    say(`${name}: patterns, one covenant each`, ms(oneCovenant));
+    say(`${name}: patterns, four covenants each`, ms(fourCovenants));
+    say(`${name}: together, one covenant each`, ms(models + oneCovenant));
+    say(`${name}: together, four covenants each`, ms(models + fourCovenants));
+    say(`${name}: held in memory`, `${held.toFixed(1)} MiB`);
+    return { took: models + oneCovenant, held };
+  });
+  const [small, large] = taken;
+  say('  ten times the borrowers take', times(large!.took, small!.took));
+  say('  ten times the borrowers hold', times(large!.held, small!.held));
+}
+
+oneBorrower();
+wholeBook();
