@@ -4,6 +4,7 @@ import type { AlertDetail } from '../../contracts/alerts.ts';
 import { MovementList } from '../borrowers/Movements.tsx';
 import { AlertMark, alertKindText } from '../marks/AlertMark.tsx';
 import { Cautions } from '../marks/Cautions.tsx';
+import { MethodLink } from '../marks/MethodLink.tsx';
 import { SoundingStrip } from '../marks/SoundingStrip.tsx';
 import { getOrThrow, Refusal } from '../ui/api.ts';
 import { Button } from '../ui/Button.tsx';
@@ -73,11 +74,13 @@ export function AlertEvidence({ id, first, onChanged, onClose }: AlertEvidencePr
           />
         </div>
       )}
-      <p>{alert.sentence}</p>
+      <p>
+        {alert.sentence} <MethodLink topic="alerts" />
+      </p>
       <Facts text facts={alert.evidence.map((fact) => ({ label: fact.label, value: fact.value }))} />
       <p className="mt-3">
         <span className="type-name">What would change this: </span>
-        {alert.wouldChange}
+        {alert.wouldChange} {alert.covenantId !== null && <MethodLink topic="headroom" />}
       </p>
       {alert.movements && (
         <section className="mt-3">

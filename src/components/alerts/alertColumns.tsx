@@ -38,7 +38,7 @@ export const alertColumns = (today: string) =>
           keepSecond
         />
       ),
-      meta: { namesRow: true, fixed: true, name: 'Borrower' },
+      meta: { namesRow: true, fixed: true, name: 'Borrower', method: 'alerts' },
     }),
     column.display({
       id: 'strip',
@@ -53,7 +53,7 @@ export const alertColumns = (today: string) =>
         ) : (
           <span className="type-second">No test yet</span>
         ),
-      meta: { entry: 'strip', name: 'Last 12 tests' },
+      meta: { entry: 'strip', name: 'Last 12 tests', method: 'sounding-strip' },
     }),
     column.accessor('mayFall', {
       id: 'may-fall',
@@ -71,7 +71,7 @@ export const alertColumns = (today: string) =>
           <span className="type-second">–</span>
         );
       },
-      meta: { numeric: true, entry: 'figure', name: 'Earnings may fall' },
+      meta: { numeric: true, entry: 'figure', name: 'Earnings may fall', method: 'headroom' },
     }),
     column.accessor('qualityHeadline', {
       id: 'quality',
@@ -80,7 +80,7 @@ export const alertColumns = (today: string) =>
       cell: ({ row: { original } }) => (
         <QualityBar score={original.qualityHeadline} band={original.qualityBand} stacked />
       ),
-      meta: { name: 'Reporting quality' },
+      meta: { name: 'Reporting quality', method: 'reporting-quality' },
     }),
     column.accessor('ownerName', {
       id: 'owner',
@@ -101,6 +101,6 @@ export const alertColumns = (today: string) =>
       cell: ({ row: { original } }) => (
         <time dateTime={original.dueOn}>{dueText(original.dueOn, today)}</time>
       ),
-      meta: { nowrap: true, name: 'Due', entry: 'extra' },
+      meta: { nowrap: true, name: 'Due', entry: 'extra', method: 'alert-due-dates' },
     }),
   ]);

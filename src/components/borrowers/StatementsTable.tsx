@@ -30,7 +30,7 @@ export function StatementsTable({ part, statements }: StatementsTableProps) {
       <Table caption={`${PART_NAMES[part]}, whole currency units`} showCaption>
         <TableHead>
           <tr role="row">
-            <HeadCell>{PART_NAMES[part]}</HeadCell>
+            <HeadCell method="statement-checks">{PART_NAMES[part]}</HeadCell>
             {statements.map((statement) => (
               <HeadCell key={statement.id} numeric>
                 <StatementHead statement={statement} />

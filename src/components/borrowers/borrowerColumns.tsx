@@ -41,7 +41,7 @@ export const borrowerColumns = column.columns([
       ) : (
         <span className="type-second">No test yet</span>
       ),
-    meta: { entry: 'strip', name: 'Last 12 tests' },
+    meta: { entry: 'strip', name: 'Last 12 tests', method: 'sounding-strip' },
   }),
   column.accessor('mayFall', {
     id: 'may-fall',
@@ -63,7 +63,7 @@ export const borrowerColumns = column.columns([
       ) : (
         <span className="type-second">–</span>
       ),
-    meta: { numeric: true, entry: 'figure', name: 'Earnings may fall' },
+    meta: { numeric: true, entry: 'figure', name: 'Earnings may fall', method: 'smallest-headroom' },
   }),
   column.accessor('qualityHeadline', {
     id: 'quality',
@@ -71,7 +71,7 @@ export const borrowerColumns = column.columns([
     cell: ({ row: { original } }) => (
       <QualityBar score={original.qualityHeadline} band={original.qualityBand} stacked />
     ),
-    meta: { name: 'Reporting quality' },
+    meta: { name: 'Reporting quality', method: 'reporting-quality' },
   }),
   column.accessor('drawn', {
     header: 'Drawn of limit',
@@ -81,7 +81,7 @@ export const borrowerColumns = column.columns([
         <span className="type-second type-small block">of {formatMoney(decimal(original.limit))}</span>
       </>
     ),
-    meta: { numeric: true, nowrap: true, name: 'Drawn of limit' },
+    meta: { numeric: true, nowrap: true, name: 'Drawn of limit', method: 'exposure' },
   }),
   column.accessor('openAlerts', {
     id: 'alerts',
@@ -94,7 +94,7 @@ export const borrowerColumns = column.columns([
         )}
       </>
     ),
-    meta: { numeric: true, nowrap: true, name: 'Alerts' },
+    meta: { numeric: true, nowrap: true, name: 'Alerts', method: 'alerts' },
   }),
   column.accessor('latestFigures', {
     id: 'figures',
@@ -102,6 +102,6 @@ export const borrowerColumns = column.columns([
     enableSorting: false,
     cell: ({ row: { original } }) =>
       original.latestFigures ? dayText(original.latestFigures) : <span className="type-second">none</span>,
-    meta: { nowrap: true, name: 'Figures to', entry: 'extra' },
+    meta: { nowrap: true, name: 'Figures to', entry: 'extra', method: 'data-cut-off' },
   }),
 ]);

@@ -1,5 +1,6 @@
 import {
   NOT_RECORDED,
+  type REVIEW_SECTIONS,
   type ReviewSheet,
   type SheetBlock,
   type SheetSection,
@@ -7,9 +8,26 @@ import {
 import { LinkButton } from '../ui/Button.tsx';
 import { Facts } from '../ui/Facts.tsx';
 import { Panel } from '../ui/Panel.tsx';
+import type { MethodTopic } from '../../contracts/methodTopics.ts';
+import { MethodLink } from '../marks/MethodLink.tsx';
 import { Caution } from '../ui/States.tsx';
 import { SheetCellText } from './SheetCellText.tsx';
 import { SheetTable } from './SheetTable.tsx';
+
+type Title = (typeof REVIEW_SECTIONS)[number];
+
+/** How the figures of a section are computed; a section of words has none. */
+const METHODS: Readonly<Partial<Record<Title, readonly MethodTopic[]>>> = {
+  Header: ['data-cut-off', 'exposure'],
+  'What changed since the last sheet': ['data-cut-off'],
+  'Covenant table': ['headroom', 'sounding-strip', 'counterfactual-tests'],
+  'Break-even and projection': ['headroom', 'smallest-headroom'],
+  'Bridge from reported to covenant EBITDA': ['twelve-months'],
+  'Reporting quality': ['reporting-quality'],
+  'Just-passing pattern': ['just-passing-patterns'],
+  'Signals open and closed': ['alerts', 'alert-due-dates'],
+  'Waivers, amendments, cures used': ['cures-and-waivers'],
+};
 
 /** The committee's sheet, section by section in its fixed order; what nobody has written yet stands with its heading. */
 export function ReviewSheetPage({ sheet }: { readonly sheet: ReviewSheet }) {
@@ -40,6 +58,9 @@ function Section({ section: { number, title, isRecorded, blocks } }: { readonly 
     <section className="review-section" aria-labelledby={`section-${number}`}>
       <h3 id={`section-${number}`} className="type-heading review-heading">
         <span className="review-number">{number}</span> {title}
+        {METHODS[title as Title]?.map((topic) => (
+          <MethodLink key={topic} topic={topic} />
+        ))}
         {!isRecorded && <span className="review-empty type-second">{NOT_RECORDED}</span>}
       </h3>
       {blocks.map((block, place) => (

@@ -1,4 +1,5 @@
 import { FlexRender, type Cell as GridCell, type ReactTable, type RowData } from '@tanstack/react-table';
+import { FoldedMethodLinks } from '../marks/MethodLink.tsx';
 import { Fragment, type ReactNode } from 'react';
 import type { GridFeatures } from './dataGrid.ts';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from './Table.tsx';
@@ -23,40 +24,45 @@ export function DataGrid<TRow extends RowData>({
 }: DataGridProps<TRow>) {
   const rows = table.getRowModel().rows;
   if (rows.length === 0 && empty) return empty;
+  const methods = table.getVisibleLeafColumns().flatMap(({ columnDef }) => columnDef.meta?.method ?? []);
   return (
-    <Table caption={caption} entries>
-      <TableHead>
-        {table.getHeaderGroups().map((group) => (
-          <tr key={group.id} role="row">
-            {group.headers.map((header) => {
-              const { column } = header;
-              const sorted = column.getIsSorted();
-              const meta = column.columnDef.meta;
-              return (
-                <HeadCell
-                  key={header.id}
-                  numeric={meta?.numeric}
-                  label={meta?.name ?? column.id}
-                  sorted={column.getCanSort() ? directionOf(sorted) : undefined}
-                  onSort={column.getCanSort() ? () => column.toggleSorting() : undefined}
-                >
-                  {meta?.markOnly ? undefined : <FlexRender header={header} />}
-                </HeadCell>
-              );
-            })}
-          </tr>
-        ))}
-      </TableHead>
-      <TableBody>
-        {rows.map((row) => (
-          <Row key={row.id} current={row.id === current} onOpen={onOpen && (() => onOpen(row.original))}>
-            {row.getVisibleCells().map((cell) => (
-              <GridCellContent key={cell.id} cell={cell} />
-            ))}
-          </Row>
-        ))}
-      </TableBody>
-    </Table>
+    <>
+      <Table caption={caption} entries>
+        <TableHead>
+          {table.getHeaderGroups().map((group) => (
+            <tr key={group.id} role="row">
+              {group.headers.map((header) => {
+                const { column } = header;
+                const sorted = column.getIsSorted();
+                const meta = column.columnDef.meta;
+                return (
+                  <HeadCell
+                    key={header.id}
+                    numeric={meta?.numeric}
+                    label={meta?.name ?? column.id}
+                    method={meta?.method}
+                    sorted={column.getCanSort() ? directionOf(sorted) : undefined}
+                    onSort={column.getCanSort() ? () => column.toggleSorting() : undefined}
+                  >
+                    {meta?.markOnly ? undefined : <FlexRender header={header} />}
+                  </HeadCell>
+                );
+              })}
+            </tr>
+          ))}
+        </TableHead>
+        <TableBody>
+          {rows.map((row) => (
+            <Row key={row.id} current={row.id === current} onOpen={onOpen && (() => onOpen(row.original))}>
+              {row.getVisibleCells().map((cell) => (
+                <GridCellContent key={cell.id} cell={cell} />
+              ))}
+            </Row>
+          ))}
+        </TableBody>
+      </Table>
+      {methods.length > 0 && <FoldedMethodLinks topics={methods} />}
+    </>
   );
 }
 

@@ -1,4 +1,6 @@
 import type { MouseEvent, ReactNode, TableHTMLAttributes } from 'react';
+import type { MethodTopic } from '../../contracts/methodTopics.ts';
+import { MethodLink } from '../marks/MethodLink.tsx';
 import { classes } from './classes.ts';
 
 /** Where a cell stands when a narrow screen folds the row into an entry of two lines; without one it is left out. */
@@ -41,12 +43,14 @@ interface HeadCellProps {
   /** Undefined: cannot be sorted; null: can be, is not. */
   readonly sorted?: SortDirection | null;
   readonly onSort?: () => void;
+  /** How the figures of the column are computed. */
+  readonly method?: MethodTopic;
   /** Says what an empty head is for. */
   readonly label?: string;
   readonly className?: string;
 }
 
-export function HeadCell({ children, numeric, sorted, onSort, label, className }: HeadCellProps) {
+export function HeadCell({ children, numeric, sorted, onSort, method, label, className }: HeadCellProps) {
   return (
     <th
       scope="col"
@@ -64,6 +68,12 @@ export function HeadCell({ children, numeric, sorted, onSort, label, className }
         </button>
       ) : (
         (children ?? <span className="sr-only">{label}</span>)
+      )}
+      {method && (
+        <>
+          {' '}
+          <MethodLink topic={method} />
+        </>
       )}
     </th>
   );

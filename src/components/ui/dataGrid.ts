@@ -1,4 +1,5 @@
 import { columnVisibilityFeature, metaHelper, rowSortingFeature, tableFeatures } from '@tanstack/react-table';
+import type { MethodTopic } from '../../contracts/methodTopics.ts';
 import type { EntryPlace } from './Table.tsx';
 
 /** What the sheet needs to know of a column besides its content. */
@@ -12,6 +13,8 @@ export interface GridColumnMeta {
   readonly name?: string;
   /** The head shows nothing and is read as `name`: a column of marks. */
   readonly markOnly?: boolean;
+  /** How the figures of the column are computed. */
+  readonly method?: MethodTopic;
   /** Stays whatever is chosen. */
   readonly fixed?: boolean;
 }

@@ -1,6 +1,7 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import { useQuery } from '@tanstack/react-query';
 import { WATCHLIST_GRADES, type WatchlistRow, type WatchlistView } from '../../contracts/watchlist.ts';
+import { FoldedMethodLinks } from '../marks/MethodLink.tsx';
 import { Refusal, getOrThrow } from '../ui/api.ts';
 import { ErrorState } from '../ui/ErrorState.tsx';
 import { IslandQueries } from '../ui/IslandQueries.tsx';
@@ -66,48 +67,51 @@ function Entries({ entries }: { readonly entries: readonly WatchlistRow[] }) {
       </EmptyState>
     );
   return (
-    <Table caption="Borrowers on the watchlist, gravest grade first" entries>
-      <TableHead>
-        <tr role="row">
-          <HeadCell>Borrower</HeadCell>
-          <HeadCell>Grade</HeadCell>
-          <HeadCell>Plan</HeadCell>
-          <HeadCell>Owner</HeadCell>
-          <HeadCell>Next review</HeadCell>
-          <HeadCell>Since</HeadCell>
-        </tr>
-      </TableHead>
-      <TableBody>
-        {entries.map((entry) => (
-          <Row key={entry.id}>
-            <NameCell
-              name={entry.borrowerName}
-              href={`/borrowers/${entry.borrowerId}`}
-              beside={entry.deskName}
-              second={entry.reason}
-              keepSecond
-            />
-            <Cell entry="figure" nowrap>
-              <span className="type-name">{entry.grade}</span> {meaningOf(entry.grade)}
-              {entry.state === 'probation' && (
-                <span className="type-second type-small block">on probation</span>
-              )}
-            </Cell>
-            <Cell>{entry.plan}</Cell>
-            <Cell nowrap>{entry.ownerName}</Cell>
-            <Cell nowrap entry="extra">
-              {dayText(entry.nextReviewOn)}
-              {entry.reviewOverdue && <span className="type-name block">overdue</span>}
-            </Cell>
-            <Cell nowrap>
-              {dayText(entry.enteredOn)}
-              <span className="type-second type-small block">
-                proposed by {entry.proposedBy}, decided by {entry.decidedBy}
-              </span>
-            </Cell>
-          </Row>
-        ))}
-      </TableBody>
-    </Table>
+    <>
+      <Table caption="Borrowers on the watchlist, gravest grade first" entries>
+        <TableHead>
+          <tr role="row">
+            <HeadCell>Borrower</HeadCell>
+            <HeadCell method="watchlist">Grade</HeadCell>
+            <HeadCell>Plan</HeadCell>
+            <HeadCell>Owner</HeadCell>
+            <HeadCell>Next review</HeadCell>
+            <HeadCell>Since</HeadCell>
+          </tr>
+        </TableHead>
+        <TableBody>
+          {entries.map((entry) => (
+            <Row key={entry.id}>
+              <NameCell
+                name={entry.borrowerName}
+                href={`/borrowers/${entry.borrowerId}`}
+                beside={entry.deskName}
+                second={entry.reason}
+                keepSecond
+              />
+              <Cell entry="figure" nowrap>
+                <span className="type-name">{entry.grade}</span> {meaningOf(entry.grade)}
+                {entry.state === 'probation' && (
+                  <span className="type-second type-small block">on probation</span>
+                )}
+              </Cell>
+              <Cell>{entry.plan}</Cell>
+              <Cell nowrap>{entry.ownerName}</Cell>
+              <Cell nowrap entry="extra">
+                {dayText(entry.nextReviewOn)}
+                {entry.reviewOverdue && <span className="type-name block">overdue</span>}
+              </Cell>
+              <Cell nowrap>
+                {dayText(entry.enteredOn)}
+                <span className="type-second type-small block">
+                  proposed by {entry.proposedBy}, decided by {entry.decidedBy}
+                </span>
+              </Cell>
+            </Row>
+          ))}
+        </TableBody>
+      </Table>
+      <FoldedMethodLinks topics={['watchlist']} />
+    </>
   );
 }
