@@ -28,10 +28,12 @@ export function BookPanels({ look, book }: BookPanelsProps) {
       {pattern?.ok ? (
         <>
           <div className="with-evidence">
-            <Landings look={look} pattern={pattern.value} />
+            <div className="stack">
+              <Landings look={look} pattern={pattern.value} />
+              <FurtherTests pattern={pattern.value} />
+            </div>
             <AroundTheLimit pattern={pattern.value} />
           </div>
-          <FurtherTests pattern={pattern.value} />
           <BookSplits
             pattern={pattern.value}
             nameOfMeasure={nameOfMeasure}

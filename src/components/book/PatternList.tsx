@@ -34,6 +34,8 @@ export function PatternList({ book, nameOfMeasure }: PatternListProps) {
 }
 
 function Gates({ book: { standing }, nameOfMeasure }: PatternListProps) {
+  const byName = (a: { readonly measure: string }, b: { readonly measure: string }): number =>
+    nameOfMeasure(a.measure).localeCompare(nameOfMeasure(b.measure), 'en');
   return (
     <Table caption="The book’s own test of each type of covenant, corrected for their number" entries>
       <TableHead>
@@ -47,7 +49,7 @@ function Gates({ book: { standing }, nameOfMeasure }: PatternListProps) {
         </tr>
       </TableHead>
       <TableBody>
-        {standing.gates.map((gate) => (
+        {standing.gates.toSorted(byName).map((gate) => (
           <Row key={gate.measure}>
             <NameCell name={nameOfMeasure(gate.measure)} />
             <Cell numeric>{countText(gate.n)}</Cell>
@@ -62,7 +64,7 @@ function Gates({ book: { standing }, nameOfMeasure }: PatternListProps) {
             <Cell entry="extra">{gate.isOpen ? 'may be shown' : 'is not shown'}</Cell>
           </Row>
         ))}
-        {standing.refused.map(({ measure, error }) => (
+        {standing.refused.toSorted(byName).map(({ measure, error }) => (
           <Row key={measure}>
             <NameCell name={nameOfMeasure(measure)} />
             <Cell colSpan={4} entry="strip">
