@@ -3,6 +3,7 @@ import { allTests } from './allTests.ts';
 import type { AlertFinding } from './alerts/alert.ts';
 import { findingsOf } from './alerts/alertRules.ts';
 import type { BookCrossSection } from './bookCrossSection.ts';
+import { besideTheScore } from './besideTheScore.ts';
 import type { BorrowerInputs } from './borrowerInputs.ts';
 import type { PlainDate } from './calendar/plainDate.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
@@ -60,11 +61,16 @@ export function assess(
 ): Assessment {
   const books = openBooks(inputs, asOf);
   const tested = allTests(inputs, books, policy, asOf);
-  const quality = reportingQuality(inputs, books, crossSection, policy, asOf);
-  const tests = testsOnAccruals(inputs, books, tested, quality);
+  const scored = reportingQuality(inputs, books, crossSection, policy, asOf);
+  const tests = testsOnAccruals(inputs, books, tested, scored);
   const counting = headroomCovenants(inputs.covenants);
   const covenantIds = inputs.covenants.map(({ id }) => id);
   const patterns = covenantIds.map((id) => justPassingOf(tests, id, policy.repeated.ofLast));
+  const quarterEnd = scored.latest?.quarterEnd ?? null;
+  const quality = {
+    ...scored,
+    beside: besideTheScore({ inputs, books, tests, patterns, quarterEnd, asOf }),
+  };
   const nearLine = nearLinesOf(inputs.covenants, crossSection.patterns);
   const projections = projectionsOf(inputs, tests, peersOfBook(crossSection.ratios));
   return {

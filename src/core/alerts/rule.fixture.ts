@@ -50,6 +50,9 @@ export const buildQuality = (given: Partial<ReportingQuality> = {}): ReportingQu
   explanations: [],
   whatWouldChangeIt: null,
   remarks: [],
+  published: [],
+  beside: [],
+  sources: [],
   ...given,
 });
 

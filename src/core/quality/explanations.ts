@@ -1,4 +1,5 @@
 /** Why the score is what it is: the largest contributions as sentences with both values and the number of peers. */
+import { revenueGrowth } from './comparedFigures.ts';
 import { missingFigures } from './missingFigures.ts';
 import type { PeerInputs } from './peerFigures.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
@@ -31,10 +32,20 @@ export function explain(latest: QuarterScore, peer: PeerInputs): Explanations {
     .flatMap(explanationsOf)
     .filter(({ contribution }) => contribution > 0)
     .sort((a, b) => b.contribution - a.contribution);
+  const growth = growthLine(peer);
+  const most = QUALITY_TABLE.explanationLines - (growth === null ? 0 : 1);
   return {
-    lines: explanations.slice(0, QUALITY_TABLE.explanationLines).map(({ line }) => line),
+    lines: [...explanations.slice(0, most).map(({ line }) => line), ...(growth === null ? [] : [growth])],
     whatWouldChangeIt: explanations[0]?.question ?? null,
   };
+}
+
+/** Growth never draws the score down by itself, but nobody may read the score of a fast grower without it. */
+function growthLine({ figures }: PeerInputs): string | null {
+  const growth = revenueGrowth(figures);
+  return growth !== null && growth > QUALITY_TABLE.fastGrowth
+    ? `Revenue grew ${percent(growth)}: screens built on growth are left out.`
+    : null;
 }
 
 function whatWouldAllowAScore(peer: PeerInputs): string {
@@ -83,7 +94,7 @@ function explanationsOf(block: QualityBlock): readonly Explanation[] {
       return [
         {
           contribution,
-          line: `Published screens: M-score ${figure(block, 'mScore').toFixed(2)}, F-score ${figure(block, 'fScore').toFixed(2)}.`,
+          line: `Published screens: M-score ${figure(block, 'mScore').toFixed(2).replace('-', '−')}, F-score ${figure(block, 'fScore').toFixed(2)}.`,
           question: 'Ask what lies behind the largest term of the two published screens.',
         },
       ];

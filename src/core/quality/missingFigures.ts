@@ -25,7 +25,7 @@ const NAMES: Readonly<Record<PeerFigure, string>> = {
   cogsTwoQuarters: 'cost of sales of the last two quarters',
   cogsTwoQuartersPrior: 'cost of sales of the same two quarters a year ago',
   nwcPrior: 'working capital a year ago',
-  workingCapitalAccruals: 'depreciation or cash from operations over twelve months',
+  workingCapitalAccruals: 'net income before depreciation less cash from operations over twelve months',
   netIncomePrior: 'net income of the year before',
   revenueBefore: 'revenue of two years before',
   productionCosts: 'cost of sales or inventories',
@@ -34,6 +34,13 @@ const NAMES: Readonly<Record<PeerFigure, string>> = {
   fScore: 'F-score',
   accrualNoise: 'accrual noise',
 };
+
+/**
+ * What a figure is called.
+ *
+ * @example figureName('nwcPrior') // => 'working capital a year ago'
+ */
+export const figureName = (figure: PeerFigure): string => NAMES[figure];
 
 /**
  * "missing: cash from operations over twelve months, …"; null where all of them are there.

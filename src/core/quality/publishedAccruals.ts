@@ -8,7 +8,8 @@ import { conversionOf, figuresOf } from './comparedFigures.ts';
 import { figureReader } from './figureReader.ts';
 import { brokenSeries, missingFigures } from './missingFigures.ts';
 import type { PeerInputs } from './peerFigures.ts';
-import type { Given, Measures, PublishedContext } from './publishedMeasures.ts';
+import type { PublishedContext } from './publishedContext.ts';
+import type { Given, Measures } from './publishedMeasure.ts';
 
 const NO_AVERAGE = { missing: 'average assets are not positive' };
 

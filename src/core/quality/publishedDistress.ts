@@ -2,7 +2,8 @@
 import { altmanZ, ohlsonO, zmijewskiX } from '../accruals/distressScores.ts';
 import { YEAR_AGO } from './accountsAt.ts';
 import { figureReader } from './figureReader.ts';
-import type { Given, Measures, PublishedContext } from './publishedMeasures.ts';
+import type { PublishedContext } from './publishedContext.ts';
+import type { Given, Measures } from './publishedMeasure.ts';
 
 /** Of US prices over 1968 = 100, from memory; a tenth more or less moves O by 0.04. */
 const PRICE_LEVEL = 680;

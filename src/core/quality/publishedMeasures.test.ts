@@ -5,12 +5,8 @@ import { AS_OF, buildBook, buildBorrower, LAST_QUARTER_END } from './book.fixtur
 import { buildCrossSection } from './crossSection.ts';
 import { peerInputs, peerInputsOfQuarters } from './peerInputs.ts';
 import { publishedMeasures } from './publishedMeasures.ts';
-import {
-  PUBLISHED_MEASURES,
-  PUBLISHED_REGISTER,
-  saidOf,
-  type PublishedMeasureKey,
-} from './publishedRegister.ts';
+import { PUBLISHED_MEASURES, type PublishedMeasureKey } from './publishedMeasure.ts';
+import { PUBLISHED_REGISTER, saidOf } from './publishedRegister.ts';
 import {
   CLOSING,
   EARLIER,

@@ -1,40 +1,18 @@
 /** Every published measure of one borrower at one quarter end, or why it cannot be given. */
-import type { PlainDate } from '../calendar/plainDate.ts';
-import type { StatementBook } from '../statements/statementBook.ts';
-import type { QuarterCrossSection } from './crossSection.ts';
-import { accountsAt, type AccountsAt } from './accountsAt.ts';
+import { accountsAt } from './accountsAt.ts';
 import { balanceSheetMeasures, cashFlowMeasures } from './publishedAccruals.ts';
+import type { PublishedContext } from './publishedContext.ts';
 import { distressMeasures } from './publishedDistress.ts';
+import {
+  PUBLISHED_MEASURES,
+  type Given,
+  type Measures,
+  type PublishedMeasure,
+  type PublishedMeasureKey,
+} from './publishedMeasure.ts';
 import { modelMeasures } from './publishedResiduals.ts';
 import { screenMeasures } from './publishedScreens.ts';
 import { seriesMeasures } from './publishedSeries.ts';
-import type { PeerInputs } from './peerFigures.ts';
-import { PUBLISHED_MEASURES, type PublishedMeasureKey } from './publishedRegister.ts';
-
-/** A value with what has to be said beside it, or the reason why there is none. */
-export type Given =
-  { readonly value: number; readonly remarks?: readonly string[] } | { readonly missing: string };
-
-export interface PublishedMeasure {
-  readonly key: PublishedMeasureKey;
-  readonly value: number | null;
-  readonly reason: string | null;
-  /** What was filled or derived, and how many firms a model rests on. */
-  readonly remarks: readonly string[];
-}
-
-export interface PublishedContext {
-  readonly book: StatementBook;
-  readonly quarterEnd: PlainDate;
-  readonly peer: PeerInputs;
-  /** Null where nobody's accounts of the quarter end are in the book. */
-  readonly section: QuarterCrossSection | null;
-  readonly currency: string;
-  /** Accounts of its own for every measure, so that one that does not tie costs only what rests on it. */
-  readonly accounts: () => AccountsAt;
-}
-
-export type Measures = Readonly<Partial<Record<PublishedMeasureKey, Given>>>;
 
 /**
  * In the order of the register. Flows are twelve months, balances closing, comparisons with the same quarter a year

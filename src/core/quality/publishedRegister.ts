@@ -1,35 +1,6 @@
 /** The published measures that stand beside the score: what each is called, printed as, held against, and is not. */
+import type { PublishedMeasureKey } from './publishedMeasure.ts';
 import type { QualityBlockName } from './score.ts';
-
-export const PUBLISHED_MEASURES = [
-  'sloan',
-  'cash-flow-accruals',
-  'percent-accruals',
-  'total-accruals',
-  'net-operating-assets',
-  'jones',
-  'modified-jones',
-  'kothari',
-  'dechow-dichev',
-  'mcnichols',
-  'm-score',
-  'm-score-five',
-  'f-score',
-  'abnormal-cash-flow',
-  'abnormal-production',
-  'abnormal-discretionary',
-  'real-activities',
-  'smoothing-spread',
-  'smoothing-correlation',
-  'smoothing-size',
-  'cash-conversion',
-  'growth-neutral-conversion',
-  'altman-private',
-  'altman-any-trade',
-  'ohlson',
-  'zmijewski',
-] as const;
-export type PublishedMeasureKey = (typeof PUBLISHED_MEASURES)[number];
 
 /** A line that was published: a value beyond it is called so by its authors. */
 export interface PublishedLine {

@@ -2,7 +2,8 @@
 import { aggregateRealActivities } from '../accruals/realActivities.ts';
 import { brokenSeries, missingFigures } from './missingFigures.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
-import type { Given, Measures, PublishedContext } from './publishedMeasures.ts';
+import type { PublishedContext } from './publishedContext.ts';
+import type { Given, Measures } from './publishedMeasure.ts';
 import { abnormalOf, type PublishedModel } from './publishedModels.ts';
 
 const BASE: readonly PeerFigure[] = ['assetsPrior', 'revenue', 'revenuePrior'];

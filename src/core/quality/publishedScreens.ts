@@ -1,6 +1,7 @@
 /** The two published screens as they stand beside the score: methods.md B1 items 6 and 7. */
 import { brokenSeries } from './missingFigures.ts';
-import type { Given, Measures, PublishedContext } from './publishedMeasures.ts';
+import type { PublishedContext } from './publishedContext.ts';
+import type { Given, Measures } from './publishedMeasure.ts';
 import { fScreen, mScreen, type MScreen, type Screened } from './screenScores.ts';
 
 /**

@@ -6,7 +6,8 @@ import type { Statement } from '../statements/statement.ts';
 import { accountsAt, ifAll, YEAR_AGO } from './accountsAt.ts';
 import { mixesPresentations } from './cashFlowPresentation.ts';
 import { noiseSeriesOf } from './noiseSeries.ts';
-import type { Given, Measures, PublishedContext } from './publishedMeasures.ts';
+import type { PublishedContext } from './publishedContext.ts';
+import type { Given, Measures } from './publishedMeasure.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 
 /** Own rule: quarter ends below which nothing is described. */

@@ -1,4 +1,5 @@
 /** One quarter end's score out of the blocks, and what each block adds to it. */
+import type { PlainDate } from '../calendar/plainDate.ts';
 import { unexplainedAccruals } from './accrualModel.ts';
 import { BLOCKS } from './blocks.ts';
 import { comparedFigures, figuresOf, revenueGrowth } from './comparedFigures.ts';
@@ -45,8 +46,7 @@ const availableWeight = (blocks: readonly Pick<QualityBlock, 'weight' | 'risk'>[
  * @example scoreQuarter({ ...peer, ties: false }, crossSection).noScoreReason // => 'The accounts do not tie, so they are not scored.'
  */
 export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): QuarterScore {
-  const quarterEnd = comparisonQuarterEnd(peer.quarterEnd);
-  const section = crossSection.quarters.find((quarter) => quarter.quarterEnd === quarterEnd);
+  const section = sectionOf(crossSection, peer.quarterEnd);
   const refused = refusal(peer, section);
   if (refused !== null || !section) return unscored(peer, section, refused ?? 'no peers');
   const unexplained = unexplainedAccruals(section.accrualModel, peer);
@@ -91,14 +91,24 @@ export function earningsAtRisk(peer: PeerInputs, unexplained: number | null): Ea
   };
 }
 
-function refusal(peer: PeerInputs, section: QuarterCrossSection | undefined): string | null {
+/**
+ * The peers' standing that a quarter end is compared at; null where nobody's accounts of it are in the book.
+ *
+ * @example sectionOf(crossSection, '2026-09-30')?.firms // => 12
+ */
+export function sectionOf(crossSection: CrossSection, quarterEnd: PlainDate): QuarterCrossSection | null {
+  const comparedAt = comparisonQuarterEnd(quarterEnd);
+  return crossSection.quarters.find((quarter) => quarter.quarterEnd === comparedAt) ?? null;
+}
+
+function refusal(peer: PeerInputs, section: QuarterCrossSection | null): string | null {
   if (!peer.ties) return 'The accounts do not tie, so they are not scored.';
   return section ? null : 'No other accounts of this quarter end are in the book as of last night.';
 }
 
 function unscored(
   peer: PeerInputs,
-  section: QuarterCrossSection | undefined,
+  section: QuarterCrossSection | null,
   noScoreReason: string,
 ): QuarterScore {
   const others = section ? otherFirms(section, peer) : { sectorPeers: 0, bookPeers: 0 };

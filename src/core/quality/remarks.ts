@@ -29,6 +29,8 @@ export function remarksOf(peer: PeerInputs, score: QuarterScore): readonly strin
       ? 'An acquisition closed in the quarter: receivable and inventory days are left out.'
       : peer.acquisitionInYear &&
         'There was an acquisition in the year: comparisons with the year before mix two groups.',
+    peer.cashFlowPresentationChanged &&
+      'The presentation of cash flows changed within the two years compared: no part of the score uses cash from operations until the year before is restated.',
     score.score !== null && peersRemark(score),
   ].filter((remark) => remark !== false);
 }
@@ -38,7 +40,7 @@ function growthRemark(peer: PeerInputs): string | false {
   return (
     growth !== null &&
     growth > QUALITY_TABLE.fastGrowth &&
-    `Revenue grew ${percent(growth)}: fast growth alone doubles the chance of a low score.`
+    `Revenue grew ${percent(growth)}: screens built on growth are left out, and fast growth alone doubles the chance of a low score.`
   );
 }
 

@@ -76,9 +76,12 @@ test('costs put on the balance sheet show as accruals that cash does not explain
 });
 
 test('fast growth is said beside the number', () => {
-  expect(qualityOf(buildBorrower(502, { growth: 0.08 })).remarks).toContainEqual(
-    expect.stringMatching(/^Revenue grew 3\d\u00a0%: fast growth alone/),
+  const quality = qualityOf(buildBorrower(502, { growth: 0.08 }));
+  expect(quality.remarks).toContainEqual(expect.stringMatching(/fast growth alone doubles the chance/));
+  expect(quality.explanations.at(-1)).toMatch(
+    /^Revenue grew 3\d\u00a0%: screens built on growth are left out\.$/,
   );
+  expect(quality.explanations.length).toBeLessThanOrEqual(4);
 });
 
 test('unaudited accounts and few peers are said beside the number', () => {
@@ -150,4 +153,51 @@ test('no explanation accuses', () => {
       whatWouldChangeIt,
     ]);
   expect(words.join(' ')).not.toMatch(/fraud|manipulat|misstat|breach|default|suspicio/i);
+});
+
+test('under a changed presentation of cash flows only what uses none is there, and it is said', () => {
+  const borrower = buildBorrower(7);
+  const changed = {
+    ...borrower,
+    statements: borrower.statements.map((statement) =>
+      statement.periodEnd >= '2026-01-01' ? { ...statement, framework: 'IFRS 18' } : statement,
+    ),
+  };
+  const quality = qualityOf(changed);
+  expect(quality.latest).toMatchObject({ score: null, coverage: 50 });
+  expect(quality.latest?.blocks.filter(({ risk }) => risk !== null).map(({ name }) => name)).toEqual([
+    'sharpest stretch',
+    'published screens',
+  ]);
+  expect(quality.latest?.blocks[3]?.figures.mScoreVariables).toBe(5);
+  expect(quality.remarks).toContainEqual(expect.stringMatching(/until the year before is restated/));
+  expect(quality.whatWouldChangeIt).toBe(
+    'Ask for the year before under the same presentation of cash flows.',
+  );
+  const restated = {
+    ...borrower,
+    statements: borrower.statements.map((statement) => ({ ...statement, framework: 'IFRS 18' })),
+  };
+  expect(qualityOf(restated).headline).toBe(qualityOf(borrower).headline);
+});
+
+test('the figures of the latest quarter end lead back to the statements they were read from', () => {
+  const borrower = buildBorrower(8);
+  const { sources } = qualityOf(borrower);
+  const revenue = sources.find(({ figure }) => figure === 'revenue')!;
+  const quarters = borrower.statements.filter(({ months }) => months === 3).slice(-4);
+  expect(revenue.cells).toEqual([{ line: 'revenue', statementIds: expect.any(Array) as number[] }]);
+  expect([...revenue.cells[0]!.statementIds].sort()).toEqual(quarters.map(({ id }) => id).sort());
+  expect(revenue.amount).toBe(quarters.reduce((sum, { amounts }) => sum + amounts.revenue!.toNumber(), 0));
+  expect(sources.find(({ figure }) => figure === 'cfo')?.cells.map(({ line }) => line)).toEqual(['cfo']);
+});
+
+test('what of earnings rests on accruals is in money, and never below nought', () => {
+  const managed = qualityOf(buildBorrower(509, { receivablesUp: 0.25 })).latest!.earningsAtRisk!;
+  expect(managed.unexplained).toBeGreaterThan(0);
+  expect(managed.workingCapital).toBeGreaterThan(0);
+  for (const borrower of book) {
+    const atRisk = qualityOf(borrower).latest!.earningsAtRisk!;
+    expect(Math.min(atRisk.unexplained, atRisk.workingCapital)).toBeGreaterThanOrEqual(0);
+  }
 });

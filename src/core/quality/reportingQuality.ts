@@ -6,8 +6,12 @@ import { comparisonQuarterEnd } from './comparisonQuarterEnd.ts';
 import type { CrossSection } from './crossSection.ts';
 import { explain } from './explanations.ts';
 import { bandAfter, headlineOf } from './headline.ts';
-import { peerInputsFrom } from './peerInputs.ts';
-import { scoreQuarter } from './quarterScore.ts';
+import { accountsAt } from './accountsAt.ts';
+import { conditionsOf } from './conditions.ts';
+import { figureSources } from './figureSources.ts';
+import { peerInputsFrom, scoredBook } from './peerInputs.ts';
+import { publishedMeasures } from './publishedMeasures.ts';
+import { scoreQuarter, sectionOf } from './quarterScore.ts';
 import { QUALITY_TABLE } from './qualityTable.ts';
 import { moveRemark, remarksOf } from './remarks.ts';
 import { QUALITY_BANDS, type QualityBand, type QuarterScore, type ReportingQuality } from './score.ts';
@@ -32,6 +36,7 @@ export function reportingQuality(
 ): ReportingQuality {
   if (NEVER_SCORED.includes(inputs.legalForm))
     return unscored(`The legal form is ${inputs.legalForm}; this form is not scored.`);
+  const book = scoredBook(books);
   const peers = peerInputsFrom(inputs, books);
   const latestPeer = peers.at(-1);
   if (!latestPeer) return unscored(`No balance sheet of a quarter end is known on ${asOf}.`);
@@ -52,7 +57,21 @@ export function reportingQuality(
     history,
     explanations: lines,
     whatWouldChangeIt,
-    remarks: [...remarksOf(latestPeer, latest), ...(move === null ? [] : [move])],
+    remarks: [
+      ...remarksOf(latestPeer, latest),
+      ...conditionsOf(accountsAt(book, latest.quarterEnd), recent),
+      ...(move === null ? [] : [move]),
+    ],
+    published: publishedMeasures({
+      book,
+      quarterEnd: latest.quarterEnd,
+      peer: latestPeer,
+      section: sectionOf(crossSection, latest.quarterEnd),
+      currency: inputs.currency,
+    }),
+    // Filled in by the walk, which knows the tests and the patterns.
+    beside: [],
+    sources: figureSources(book, latestPeer),
   };
 }
 
@@ -80,4 +99,7 @@ const unscored = (noScoreReason: string): ReportingQuality => ({
   explanations: [],
   whatWouldChangeIt: null,
   remarks: [],
+  published: [],
+  beside: [],
+  sources: [],
 });

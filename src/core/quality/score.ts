@@ -1,4 +1,7 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
+import type { LineItemCode } from '../statements/lineItems.ts';
+import type { PeerFigure } from './peerFigures.ts';
+import type { PublishedMeasure } from './publishedMeasure.ts';
 
 export const QUALITY_BANDS = [
   'well supported',
@@ -53,6 +56,29 @@ export interface QuarterScore {
   readonly earningsAtRisk: EarningsAtRisk | null;
 }
 
+/** One figure of the latest quarter end and the cells it was read from. */
+export interface FigureSource {
+  readonly figure: PeerFigure;
+  /** Whole units of the borrower's currency, paid items positive; of screens their score. */
+  readonly amount: number;
+  readonly cells: readonly { readonly line: LineItemCode; readonly statementIds: readonly number[] }[];
+}
+
+export const BESIDE_FACTS = [
+  'add-backs',
+  'days late',
+  'restatements',
+  'audited less management',
+  'just passing',
+  'receivable days over two years',
+] as const;
+
+/** What stands beside the score and is never inside it, one sentence with its figures. */
+export interface BesideFact {
+  readonly fact: (typeof BESIDE_FACTS)[number];
+  readonly sentence: string;
+}
+
 export interface ReportingQuality {
   readonly headline: number | null;
   readonly band: QualityBand | null;
@@ -66,4 +92,9 @@ export interface ReportingQuality {
   readonly whatWouldChangeIt: string | null;
   /** Remarks that stand beside the number: unaudited, derived, does not tie, growing fast, few peers. */
   readonly remarks: readonly string[];
+  /** Every published measure at the latest quarter end. */
+  readonly published: readonly PublishedMeasure[];
+  readonly beside: readonly BesideFact[];
+  /** What the latest quarter end's figures were read from. */
+  readonly sources: readonly FigureSource[];
 }

@@ -1,6 +1,8 @@
 import { z } from 'zod';
-import { QUALITY_BANDS, QUALITY_BLOCKS } from '../../../core/quality/score.ts';
-import { day } from './parts.ts';
+import { PEER_FIGURES } from '../../../core/quality/peerFigures.ts';
+import { PUBLISHED_MEASURES } from '../../../core/quality/publishedMeasure.ts';
+import { BESIDE_FACTS, QUALITY_BANDS, QUALITY_BLOCKS } from '../../../core/quality/score.ts';
+import { day, line } from './parts.ts';
 
 const quarterScore = z.object({
   quarterEnd: day,
@@ -34,4 +36,24 @@ export const quality = z.object({
   explanations: z.array(z.string()),
   whatWouldChangeIt: z.string().nullable(),
   remarks: z.array(z.string()),
+  published: z
+    .array(
+      z.object({
+        key: z.enum(PUBLISHED_MEASURES),
+        value: z.number().nullable(),
+        reason: z.string().nullable(),
+        remarks: z.array(z.string()),
+      }),
+    )
+    .default([]),
+  beside: z.array(z.object({ fact: z.enum(BESIDE_FACTS), sentence: z.string() })).default([]),
+  sources: z
+    .array(
+      z.object({
+        figure: z.enum(PEER_FIGURES),
+        amount: z.number(),
+        cells: z.array(z.object({ line, statementIds: z.array(z.number()) })),
+      }),
+    )
+    .default([]),
 });
