@@ -3,13 +3,28 @@ import { decimal } from '../../core/money/decimal.ts';
 import { MethodLink } from '../marks/MethodLink.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { amountText, periodText, sourceHref } from './figures.ts';
+import { MEASURE_METHODS } from './measureMethods.ts';
 
 /** The way from reported to covenant figures, line by line, each to its cells. */
-export function CovenantBridge({ rows }: { readonly rows: readonly BridgeRow[] }) {
+export function CovenantBridge({
+  rows,
+  measure,
+}: {
+  readonly rows: readonly BridgeRow[];
+  readonly measure: CovenantView['measure'];
+}) {
+  const isTranslated = rows.some(({ kind }) => kind === 'rate');
   return (
     <section>
       <h3 className="type-heading">
-        From reported to covenant figures <MethodLink topic="twelve-months" />
+        From reported to covenant figures <MethodLink topic={MEASURE_METHODS[measure]} />{' '}
+        <MethodLink topic="twelve-months" />
+        {isTranslated && (
+          <>
+            {' '}
+            <MethodLink topic="other-currencies" />
+          </>
+        )}
       </h3>
       <Table caption="Bridge from reported to covenant figures, whole currency units">
         <TableHead>
@@ -24,6 +39,7 @@ export function CovenantBridge({ rows }: { readonly rows: readonly BridgeRow[] }
             <Row key={`${at} ${row.label}`}>
               <Cell>
                 {row.kind === 'subtotal' ? <span className="type-name">{row.label}</span> : row.label}
+                {row.kind === 'check' && <span className="type-second">, beside the sum</span>}
                 {row.note !== null && <p className="type-second">{row.note}</p>}
               </Cell>
               <Cell numeric>{row.kind === 'rate' ? row.amount : amountText(row.amount)}</Cell>

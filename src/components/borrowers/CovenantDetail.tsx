@@ -25,7 +25,7 @@ export function CovenantDetail({ covenant }: { readonly covenant: CovenantView }
       </div>
       <CovenantRights covenant={covenant} />
       <LaterLevels covenant={covenant} />
-      {covenant.bridge.length > 0 && <CovenantBridge rows={covenant.bridge} />}
+      {covenant.bridge.length > 0 && <CovenantBridge rows={covenant.bridge} measure={covenant.measure} />}
       <TestSources covenant={covenant} />
     </div>
   );
