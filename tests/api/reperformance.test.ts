@@ -121,7 +121,8 @@ describe('a re-performance workbook', () => {
   test('has no difference between what it works out and what the product computed', () => {
     for (const [place, workbook] of [...books.values()].entries()) {
       const rows = columnsOf(workbook.getWorksheet('Test')!, [1, 4]);
-      const differences = rows.filter(([, difference]) => difference !== null);
+      const differences = // The foot is one cell over all columns.
+        rows.filter(([label, difference]) => difference !== null && difference !== label);
       expect(differences.length).toBeGreaterThan(0);
       for (const [label, difference] of differences)
         expect(difference, `${asked[place]!.name}: ${textOf(label)}`).toBe('same');

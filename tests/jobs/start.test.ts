@@ -109,7 +109,8 @@ describe('npm start', () => {
     const note = join(own.settings['DATA_DIR']!, 'db', 'server.json');
     const server = JSON.parse(readFileSync(note, 'utf8')) as { pid: number };
     process.kill(server.pid, 'SIGKILL');
-    expect(await statusOf(`${own.address}/readyz`)).toBe(503);
+    // A killed process takes a moment to let go of its connections.
+    await expect.poll(() => statusOf(`${own.address}/readyz`), { timeout: 5_000, interval: 20 }).toBe(503);
     expect(await statusOf(`${own.address}/livez`)).toBe(200);
     await third.until(/the database server ended by itself/);
     for (let waited = 0; waited < 50 && (await statusOf(`${own.address}/readyz`)) !== 200; waited += 1)
