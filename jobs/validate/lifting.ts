@@ -15,7 +15,7 @@ export interface Lifted {
   readonly inventory: number;
 }
 
-export const NO_LIFT: Lift = { receivables: 0, inventory: 0, intangibles: 0, ppe: 0 };
+const NO_LIFT: Lift = { receivables: 0, inventory: 0, intangibles: 0, ppe: 0 };
 export const NOTHING_LIFTED: Lifted = { receivables: 0, inventory: 0 };
 
 /** Shares of the lift; half of the costs that are moved stands in intangibles, half is hidden in plant. */

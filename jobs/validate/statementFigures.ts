@@ -91,7 +91,7 @@ function partArea(
 const areaSpread = (results: readonly StatementResult[], suspicion: Suspicion): Spread =>
   spreadOf(results.map(({ firms }) => areaOf(firms, suspicion)));
 
-export function spreadOf(values: readonly number[]): Spread {
+function spreadOf(values: readonly number[]): Spread {
   const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
   const squares = values.reduce((sum, value) => sum + (value - mean) ** 2, 0);
   return {

@@ -20,7 +20,7 @@ export const plus = (a: Rational, b: Rational): Rational => ({
   numerator: a.numerator * b.denominator + b.numerator * a.denominator,
   denominator: a.denominator * b.denominator,
 });
-export const negated = ({ numerator, denominator }: Rational): Rational => ({
+const negated = ({ numerator, denominator }: Rational): Rational => ({
   numerator: -numerator,
   denominator,
 });
