@@ -31,7 +31,7 @@ export interface SensitivityView {
   readonly floatingDebtShare: string;
   readonly sizes: Readonly<Record<ScenarioName, ScenarioSizesView>>;
   readonly tests: readonly TestSensitivityView[];
-  /** Which test is not met first as each factor moves; null where none is, or one is not met already. */
+  /** Which test is not met first as each factor moves, of those that are met; null where none is. */
   readonly first: Readonly<Record<Factor, FirstNotMetView | null>>;
   /** The equal fall at which no test is met any more. */
   readonly every: string | null;

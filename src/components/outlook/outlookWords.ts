@@ -6,7 +6,7 @@ import { formatMoney, formatShare } from '../../core/money/print.ts';
 
 /** Stands with every projection. */
 export const NO_FORECAST =
-  'How often the tests would not be met were this borrower’s results to change as those of its peers did. It is no forecast: nothing here knows its orders, plans or market. Changes overlap and borrowers repeat, so that fewer independent cases stand behind n.';
+  'How often the tests would not be met were a borrower’s results to change as those of its peers did. It is no forecast: nothing here knows orders, plans or markets. Changes overlap and borrowers repeat, so that fewer independent cases stand behind n.';
 
 export const FACTOR_NAMES: Readonly<Record<Factor, string>> = {
   earnings: 'EBITDA may fall',
@@ -29,7 +29,8 @@ export const quartersText = (quarters: number): string =>
   quarters === 1 ? '1 quarter' : `${quarters} quarters`;
 
 const NOTHING_AT: Readonly<Record<'not met already' | 'not reached' | 'never', string>> = {
-  'not met already': 'not met already',
+  // The same for our own trigger, which is never not met.
+  'not met already': 'nothing left',
   'not reached': 'does not move it',
   never: 'not even all of it',
 };

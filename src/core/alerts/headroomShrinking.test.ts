@@ -63,7 +63,10 @@ describe('headroom shrinking', () => {
 
   test('on our own trigger is a note', () => {
     expect(found([coming()], { ebitda: 13, debt: 47, cash: 5 }, { isOurs: true })).toMatchObject([
-      { severity: 'note' },
+      {
+        severity: 'note',
+        sentence: expect.stringContaining('Likely above our trigger on 31 Dec 2026') as unknown,
+      },
     ]);
   });
 

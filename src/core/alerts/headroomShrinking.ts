@@ -1,7 +1,8 @@
 import { formatDay } from '../calendar/printDay.ts';
 import type { Covenant } from '../covenants/covenant.ts';
 import { isMet, type CovenantTest } from '../covenants/covenantTest.ts';
-import { OPERATOR_WORDS, levelInWords, testedInWords, testInWords } from '../covenants/wording.ts';
+import { triggerWords } from '../covenants/rights.ts';
+import { levelInWords, OPERATOR_WORDS, saidOf, testedInWords } from '../covenants/wording.ts';
 import { amountAtLevel } from '../covenants/headroom.ts';
 import { MEASURES } from '../measures/index.ts';
 import { decimal } from '../money/decimal.ts';
@@ -23,6 +24,7 @@ export const headroomShrinking: AlertRule = (context) =>
     if (!coming) return [];
     const { quarters, testDate, level, share, n, borrowers, peers, check } = coming;
     const limit = `${OPERATOR_WORDS[test.operator]} ${levelInWords(test.measure, level)}`;
+    const failing = covenant.isOurs ? triggerWords(covenant.operator) : 'not met';
     const often = formatShare(decimal(share), { places: 0, beside: decimal('0.66') });
     return [
       {
@@ -30,12 +32,15 @@ export const headroomShrinking: AlertRule = (context) =>
         covenantId: covenant.id,
         severity: severityOn(covenant, 'soon'),
         factDate: test.testDate,
-        sentence: `${testInWords(test)}. Likely not met on ${formatDay(testDate)} (${limit}): so in ${often} of ${n} peer changes over ${quartersInWords(quarters)}.`,
+        sentence: `${saidOf(covenant, test)}. Likely ${failing} on ${formatDay(testDate)} (${limit}): so in ${often} of ${n} peer changes over ${quartersInWords(quarters)}.`,
         wouldChange: wouldChange(test, coming),
         evidence: [
           ...testEvidence(covenant, test),
           { label: 'Test to come', value: `${formatDay(testDate)}, ${limit}` },
-          { label: 'Not met in', value: `${coming.notMet} of ${n} peer changes, ${borrowers} borrowers` },
+          {
+            label: `${covenant.isOurs ? 'Past it' : 'Not met'} in`,
+            value: `${coming.notMet} of ${n} peer changes, ${borrowers} borrowers`,
+          },
           { label: 'Peers', value: peers === 'book' ? 'the whole book' : peers },
           ...(check === null
             ? []

@@ -191,6 +191,11 @@ describe('scenarios', () => {
   });
 });
 
+test('our own trigger is never not met: it has words of its own', () => {
+  const { scenarios } = sensitivityOf([covenantOn('net-leverage', '3.3', { isOurs: true })]).tests[0]!;
+  expect(scenarios['slower sales']).toMatchObject({ outcome: 'above our trigger' });
+});
+
 describe('reverse stress', () => {
   const two = sensitivityOf([covenantOn('net-leverage', '3.5'), covenantOn('interest-cover', '3')]).tests;
 
@@ -209,12 +214,13 @@ describe('reverse stress', () => {
     expect(everyNotMet([])).toBeNull();
   });
 
-  test('says nothing of a first one where a test is not met already, and counts it among all', () => {
+  test('names the first of those that are met, and counts one that is not met already among all', () => {
     const failed = sensitivityOf([
       covenantOn('net-leverage', '2.7'),
       covenantOn('interest-cover', '3'),
     ]).tests;
-    expect(firstNotMet(failed, 'sales')).toBeNull();
+    expect(firstNotMet(failed, 'sales')).toMatchObject({ covenantId: 2 });
+    expect(firstNotMet(failed.slice(0, 1), 'sales')).toBeNull();
     expect(everyNotMet(failed)?.toSignificantDigits(8).toString()).toBe('0.15957447');
   });
 });

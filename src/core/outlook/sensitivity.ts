@@ -4,6 +4,7 @@ import type { Covenant } from '../covenants/covenant.ts';
 import { isShort, type CovenantTest, type Outcome } from '../covenants/covenantTest.ts';
 import { verdictOn } from '../covenants/holdAgainstLevel.ts';
 import { hasResult, latestLiveTest } from '../covenants/latestLiveTest.ts';
+import { shownOutcome } from '../covenants/rights.ts';
 import { MEASURES } from '../measures/index.ts';
 import { decimal, type Decimal } from '../money/decimal.ts';
 import type { OutlookPolicy } from '../policy.ts';
@@ -178,11 +179,11 @@ function scenarioResult(asked: Asked, falls: Falls): ScenarioResult {
     level,
     roundingPlaces: covenant.roundingPlaces,
   });
-  return { kind: 'computed', tested, outcome };
+  return { kind: 'computed', tested, outcome: shownOutcome(covenant, outcome) };
 }
 
 /**
- * The test that is not met first as a factor moves; null where none is, or where one is not met already.
+ * The test that is not met first as a factor moves, of those that are met; null where none is.
  *
  * @example firstNotMet([], 'sales') // => null
  */
@@ -190,7 +191,6 @@ export function firstNotMet(
   tests: readonly TestSensitivity[],
   factor: Factor,
 ): { readonly covenantId: number; readonly share: Decimal; readonly amount: Decimal | null } | null {
-  if (tests.some(({ breakEvens }) => breakEvens[factor].kind === 'not met already')) return null;
   return atBreakEven(tests, factor).reduce<ReturnType<typeof atBreakEven>[number] | null>(
     (first, one) => (first && first.share.lte(one.share) ? first : one),
     null,
