@@ -17,6 +17,7 @@ export type TextMeaning =
   | { readonly kind: 'error' }
   | { readonly kind: 'text' };
 
+const LONGEST_NUMBER = 40;
 const TEXT: TextMeaning = { kind: 'text' };
 const DASHES = /^[-\u2010-\u2015\u2212]+$/;
 const MISSING = /^(n\/a|n\.a\.?|na|k\.a\.|n\.d\.|nd|\.|not available|s\.o\.)$/i;
@@ -35,7 +36,7 @@ export function readAmountText(raw: string, mark: DecimalMark): TextMeaning {
   if (DASHES.test(text) || ZERO_WORDS.test(text)) return { kind: 'zero' };
   if (MISSING.test(text)) return { kind: 'missing' };
   if (ERRORS.test(text)) return { kind: 'error' };
-  if (!/\d/.test(text) || text.length > 40) return TEXT;
+  if (!/\d/.test(text) || text.length > LONGEST_NUMBER) return TEXT;
   const { body, negative } = withoutSign(withoutFootnote(text));
   if (/^\d[\d.,' ]*\s*%$/.test(body)) return { kind: 'percent' };
   const digits = plainDigits(body, mark);
@@ -61,6 +62,7 @@ export function decimalMarkOf(texts: Iterable<string>): DecimalMark {
   const strong = { ',': 0, '.': 0 };
   let plainHundreds = 0;
   for (const raw of texts) {
+    if (raw.length > LONGEST_NUMBER) continue;
     const { body } = withoutSign(
       withoutFootnote(raw.replace(/[\u00a0\u202f\u2007\u2009\u200a]/g, ' ').trim()),
     );

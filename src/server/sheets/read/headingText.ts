@@ -55,7 +55,11 @@ const SUFFIXES: Readonly<Record<string, Scenario>> = {
   a: 'actual',
 };
 
-export function readHeadingText(text: string): HeadingText {
+/** What stands further behind in a long text is no heading. */
+const LONGEST_HEADING = 300;
+
+export function readHeadingText(whole: string): HeadingText {
+  const text = whole.slice(0, LONGEST_HEADING);
   let plain = plainText(text).replace(/\s+/g, ' ').trim();
   const taken = (pattern: RegExp): boolean => {
     if (!pattern.test(plain)) return false;

@@ -35,6 +35,9 @@ const INDEXES: ReadonlyMap<Part, Index> = new Map(
   ]),
 );
 
+/** Longer texts are remarks, no labels; comparing them with every wording would take seconds. */
+const LONGEST_LABEL = 200;
+
 /** A section that is part of another looks there next. */
 const WIDER: Readonly<Partial<Record<Section, Section>>> = {
   'current-liabilities': 'liabilities',
@@ -43,6 +46,7 @@ const WIDER: Readonly<Partial<Record<Section, Section>>> = {
 
 /** The line of a label that is a known wording; null where it is none. */
 export function lineOf(label: string, part: Part, section: Section | null): Line | null {
+  if (label.length > LONGEST_LABEL) return null;
   return lineOfWords(label, part, section) ?? lineOfTwoLanguages(label, part, section);
 }
 
@@ -97,7 +101,7 @@ export interface NearLine {
 /** Lines whose wordings are like the label, the likest first. */
 export function nearLines(label: string, part: Part, section: Section | null): NearLine[] {
   const index = INDEXES.get(part);
-  if (!index) return [];
+  if (!index || label.length > LONGEST_LABEL) return [];
   const text = plainLabel(label);
   const best = new Map<Line, number>();
   const maps = [index.anywhere, ...(section ? [index.within.get(section) ?? new Map<string, Line>()] : [])];

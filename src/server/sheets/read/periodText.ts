@@ -33,9 +33,11 @@ const NUMBER_WORDS: ReadonlyMap<string, number> = new Map(
 );
 const MONTH_UNIT = 'months?|mths?|mos?|monate?|monaten|mois|meses|m|manader|maneder|maanden';
 
+const LONGEST = 300;
+
 export function readPeriodText(text: string): PeriodText {
   const taking = new Taking(
-    plainText(text)
+    plainText(text.slice(0, LONGEST))
       .replace(/\s+/g, ' ')
       .replace(/[‐‑–—]/g, '-')
       .trim(),

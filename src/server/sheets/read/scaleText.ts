@@ -42,7 +42,10 @@ const IN_CODE = new RegExp(
   'i',
 );
 
-export function readScaleText(text: string): ScaleText {
+const LONGEST = 500;
+
+export function readScaleText(whole: string): ScaleText {
+  const text = whole.slice(0, LONGEST);
   const prefixed = PREFIXED.exec(text);
   const suffixed = SUFFIXED.exec(text);
   const { unit, weak } = unitOf(text, prefixed?.[1], suffixed?.[2]);
