@@ -6,6 +6,7 @@ import { formatMoney, formatScore, formatShare } from '../../core/money/print.ts
 import { MethodLink } from '../marks/MethodLink.tsx';
 import { HeadroomText, OutcomeText } from '../marks/OutcomeText.tsx';
 import { Facts } from '../ui/Facts.tsx';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { limitText } from './figures.ts';
 
@@ -66,44 +67,46 @@ export function LaterLevels({ covenant }: { readonly covenant: CovenantView }) {
   return (
     <section>
       <h3 className="type-heading">Against the levels agreed for later</h3>
-      <Table caption="Today’s result against the levels agreed for later">
-        <TableHead>
-          <tr role="row">
-            <HeadCell>From</HeadCell>
-            <HeadCell>Limit</HeadCell>
-            <HeadCell numeric>
-              {covenant.fallOf === 'earnings' ? 'Earnings may fall' : 'Tested amount may fall'}
-            </HeadCell>
-            <HeadCell numeric>In money</HeadCell>
-            <HeadCell numeric>Share of level</HeadCell>
-            <HeadCell numeric>{otherSideOf(covenant)} may rise</HeadCell>
-            <HeadCell>Today’s result</HeadCell>
-          </tr>
-        </TableHead>
-        <TableBody>
-          {covenant.laterLevels.map((later) => (
-            <Row key={later.from}>
-              <Cell nowrap>{dayText(later.from)}</Cell>
-              <Cell nowrap>{limitText(covenant, later.level)}</Cell>
-              <Cell numeric nowrap>
-                <HeadroomText mayFall={later.mayFall} outcome={later.outcome} />
-              </Cell>
-              <Cell numeric nowrap>
-                {moneyOf(later.moneyLeft)}
-              </Cell>
-              <Cell numeric nowrap>
-                {share(later.shareOfLevel)}
-              </Cell>
-              <Cell numeric nowrap>
-                {moneyOf(later.otherSideMayRise)}
-              </Cell>
-              <Cell>
-                <OutcomeText outcome={later.outcome} />
-              </Cell>
-            </Row>
-          ))}
-        </TableBody>
-      </Table>
+      <ScrollRegion label="Levels agreed for later">
+        <Table caption="Today’s result against the levels agreed for later">
+          <TableHead>
+            <tr role="row">
+              <HeadCell>From</HeadCell>
+              <HeadCell>Limit</HeadCell>
+              <HeadCell numeric>
+                {covenant.fallOf === 'earnings' ? 'Earnings may fall' : 'Tested amount may fall'}
+              </HeadCell>
+              <HeadCell numeric>In money</HeadCell>
+              <HeadCell numeric>Share of level</HeadCell>
+              <HeadCell numeric>{otherSideOf(covenant)} may rise</HeadCell>
+              <HeadCell>Today’s result</HeadCell>
+            </tr>
+          </TableHead>
+          <TableBody>
+            {covenant.laterLevels.map((later) => (
+              <Row key={later.from}>
+                <Cell nowrap>{dayText(later.from)}</Cell>
+                <Cell nowrap>{limitText(covenant, later.level)}</Cell>
+                <Cell numeric nowrap>
+                  <HeadroomText mayFall={later.mayFall} outcome={later.outcome} />
+                </Cell>
+                <Cell numeric nowrap>
+                  {moneyOf(later.moneyLeft)}
+                </Cell>
+                <Cell numeric nowrap>
+                  {share(later.shareOfLevel)}
+                </Cell>
+                <Cell numeric nowrap>
+                  {moneyOf(later.otherSideMayRise)}
+                </Cell>
+                <Cell>
+                  <OutcomeText outcome={later.outcome} />
+                </Cell>
+              </Row>
+            ))}
+          </TableBody>
+        </Table>
+      </ScrollRegion>
     </section>
   );
 }

@@ -10,6 +10,7 @@ import { testedText } from './figures.ts';
 
 /** What stands over the borrower's own figures: trigger of a springing covenant, waiver, cure. */
 export function CovenantRights({ covenant }: { readonly covenant: CovenantView }) {
+  const { cure } = covenant;
   const facts = [...springingFacts(covenant), ...waiverFacts(covenant), ...cureFacts(covenant)];
   if (facts.length === 0) return null;
   return (
@@ -17,7 +18,10 @@ export function CovenantRights({ covenant }: { readonly covenant: CovenantView }
       <h3 className="type-heading">
         Rights of the agreement <MethodLink topic="cures-and-waivers" />
       </h3>
-      <Facts facts={facts} />
+      <div className="two-panels">
+        <Facts facts={facts} />
+        {cure && <Facts facts={[...moneyFacts(cure, covenant.currency), ...limitFacts(cure)]} />}
+      </div>
     </section>
   );
 }
@@ -76,15 +80,14 @@ function cureFacts(covenant: CovenantView): readonly Fact[] {
     ...WAYS.flatMap(([method, label]) => {
       const amount = cure.needed[method];
       if (amount === null || decimal(amount).lte(0)) return [];
-      const isAgreed = cure.method === method ? ', as the agreement counts' : '';
-      return [{ label: `${label}, it takes`, value: `${money(amount)}${isAgreed}` }];
+      const isAgreed = cure.method === method ? ', as the agreement counts it' : '';
+      return [{ label: `${label}${isAgreed}, it takes`, value: money(amount) }];
     }),
-    ...moneyFacts(cure, money),
-    ...limitFacts(cure),
   ];
 }
 
-function moneyFacts(cure: CureView, money: (amount: string) => string): readonly Fact[] {
+function moneyFacts(cure: CureView, currency: string): readonly Fact[] {
+  const money = (amount: string) => `${currency} ${formatMoney(decimal(amount))}`;
   const { received, receivedOn, counted, carried, countsUntil } = cure;
   return [
     ...(received === null || receivedOn === null

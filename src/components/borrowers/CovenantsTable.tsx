@@ -102,7 +102,9 @@ function Ahead({ covenant }: { readonly covenant: CovenantView }) {
   const tightest = covenant.laterLevels
     .filter(({ mayFall }) => mayFall !== null)
     .toSorted((one, other) => decimal(one.mayFall ?? 0).comparedTo(decimal(other.mayFall ?? 0)))[0];
+  const today = covenant.headroom?.mayFall ?? null;
   if (!tightest || tightest.mayFall === null) return null;
+  if (today !== null && decimal(tightest.mayFall).gte(decimal(today))) return null;
   return (
     <span className="type-second type-small block">
       {formatShare(decimal(tightest.mayFall))} from {dayText(tightest.from)}

@@ -11,6 +11,10 @@ import { NameCell } from '../ui/Table.tsx';
 
 const column = createColumnHelper<GridFeatures, BorrowerRow>();
 
+/** A step that leaves as much as today is no news. */
+const isTighter = ({ mayFall, mayFallAhead }: BorrowerRow): boolean =>
+  mayFallAhead !== null && (mayFall === null || decimal(mayFallAhead.mayFall).lt(decimal(mayFall)));
+
 /** The columns of the borrowers table; ids are the sort keys of the request. */
 export const borrowerColumns = column.columns([
   column.accessor('name', {
@@ -54,7 +58,7 @@ export const borrowerColumns = column.columns([
             outcome={original.latestOutcome}
             justPassing={original.strip.at(-1)?.justPassing ?? false}
           />
-          {original.mayFallAhead && (
+          {original.mayFallAhead && isTighter(original) && (
             <span className="type-second type-small block">
               {formatShare(decimal(original.mayFallAhead.mayFall))} from {dayText(original.mayFallAhead.from)}
             </span>

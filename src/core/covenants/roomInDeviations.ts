@@ -41,7 +41,8 @@ export function deviationOfChanges(values: readonly Decimal[]): Decimal {
 
 /**
  * The tests of one covenant with the latest live one's room in deviations: the money that earnings may fall over the
- * deviation of what they did fall and rise. The others say nothing of today, and a test without earnings has none.
+ * deviation of what they did fall and rise. The others say nothing of today; a test without earnings, or without
+ * room, has none.
  * Accounts and covenant must be in one currency. Source: methods.md A5, after Demerjian and Owens.
  *
  * @example withRoomInDeviations([test], book)[0].roomInDeviations // => null
@@ -53,7 +54,8 @@ export function withRoomInDeviations(
   const [first] = tests;
   const live = first ? latestLiveTest(tests, first.covenantId) : null;
   const money = live?.headroom.moneyLeft;
-  if (!live || !money || !hasResult(live) || MEASURES[live.measure].earningsSide === null) return tests;
+  if (!live || !money?.gt(0) || !hasResult(live) || MEASURES[live.measure].earningsSide === null)
+    return tests;
   const deviation = earningsDeviation(book, live.testDate);
   if (!deviation || deviation.isZero()) return tests;
   return tests.map((test) => (test === live ? { ...test, roomInDeviations: money.div(deviation) } : test));
