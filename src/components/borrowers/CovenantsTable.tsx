@@ -46,7 +46,8 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                   name={covenant.name}
                   href={hrefOf(covenant.id)}
                   current={covenant.id === selected}
-                  second={`${covenant.facilityName}, ${covenant.isOurs ? OURS : `clause ${covenant.clause}`}`}
+                  keepSecond={covenant.isOurs}
+                second={`${covenant.facilityName}, ${covenant.isOurs ? OURS : `clause ${covenant.clause}`}`}
                 />
                 <Cell nowrap>{limitText(covenant, tested?.level ?? null)}</Cell>
                 <Cell numeric nowrap>
