@@ -47,7 +47,7 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                   href={hrefOf(covenant.id)}
                   current={covenant.id === selected}
                   keepSecond={covenant.isOurs}
-                second={`${covenant.facilityName}, ${covenant.isOurs ? OURS : `clause ${covenant.clause}`}`}
+                  second={`${covenant.facilityName}, ${covenant.isOurs ? OURS : `clause ${covenant.clause}`}`}
                 />
                 <Cell nowrap>{limitText(covenant, tested?.level ?? null)}</Cell>
                 <Cell numeric nowrap>
