@@ -23,7 +23,7 @@ export function ReliabilityPanel({ record }: ReliabilityProps) {
   return (
     <Panel title={TITLE} aside={<MethodLink topic="coming-tests" />}>
       <p className="type-second">{placeText(record)} Share that was not met, of how many said.</p>
-      <ScrollRegion label={TITLE} className="mt-2">
+      <ScrollRegion label="Share not met by what was said" className="mt-2">
         <Table caption="Share not met by what was said, by quarters ahead">
           <TableHead>
             <tr role="row">
