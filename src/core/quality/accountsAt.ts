@@ -48,9 +48,11 @@ export interface AccountsAt {
  */
 export function accountsAt(book: StatementBook, quarterEnd: PlainDate): AccountsAt {
   const read: (readonly InputUsed[])[] = [];
+  const usedIds = new Set<number>();
   const sample = (reading: Reading): number | undefined => {
     if (reading.kind !== 'value') return undefined;
     read.push(reading.inputs);
+    for (const { statementId } of reading.inputs) usedIds.add(statementId);
     return toSample(reading.value);
   };
   const samples = samplesOf(book);
@@ -68,6 +70,7 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
       const found = samples(route, line, dateOf(back.months));
       if (found === null) return undefined;
       read.push(found.inputs);
+      for (const id of found.statementIds) usedIds.add(id);
       return found.value;
     };
   return {
@@ -82,10 +85,7 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
     hasBalanceSheet: ({ months }) => book.statementOf(dateOf(months), 0) !== null,
     isMissing: (line) => lastTwelveMonths(book, line, quarterEnd).kind === 'missing',
     sample,
-    used: () => {
-      const ids = new Set(read.flatMap((inputs) => inputs.map(({ statementId }) => statementId)));
-      return [...ids].flatMap((id) => book.statementById(id) ?? []);
-    },
+    used: () => [...usedIds].flatMap((id) => book.statementById(id) ?? []),
     cells: () => read.flat(),
   };
 }

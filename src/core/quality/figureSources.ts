@@ -1,10 +1,9 @@
 import type { InputUsed } from '../statements/reading.ts';
-import type { LineItemCode } from '../statements/lineItems.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import { accountsAt, type AccountsAt } from './accountsAt.ts';
 import { LINE_FIGURES, readFigure } from './lineFigures.ts';
 import type { PeerFigure, PeerInputs } from './peerFigures.ts';
-import type { FigureSource } from './score.ts';
+import type { FigureSource, SourceCell } from './score.ts';
 import { fScreen, mScreen } from './screenScores.ts';
 
 /**
@@ -27,14 +26,19 @@ export function figureSources(book: StatementBook, peer: PeerInputs): readonly F
     if (amount === undefined) return [];
     const accounts = accountsAt(book, peer.quarterEnd);
     read(accounts);
-    const cells = byLine(accounts.cells());
+    const cells = onceEach(accounts.cells());
     return cells.length === 0 ? [] : [{ figure, amount, cells }];
   });
 }
 
-function byLine(inputs: readonly InputUsed[]): FigureSource['cells'] {
-  const lines = new Map<LineItemCode, Set<number>>();
-  for (const { line, statementId } of inputs)
-    lines.set(line, (lines.get(line) ?? new Set<number>()).add(statementId));
-  return [...lines].map(([line, ids]) => ({ line, statementIds: [...ids] }));
+/** Every cell once, by line and then by period. */
+function onceEach(inputs: readonly InputUsed[]): readonly SourceCell[] {
+  const cells = new Map<string, SourceCell>();
+  for (const { statementId, line, periodEnd, months } of inputs)
+    cells.set(`${statementId} ${line}`, { statementId, line, periodEnd, months });
+  return [...cells.values()].sort(
+    (a, b) => compareText(a.line, b.line) || compareText(a.periodEnd, b.periodEnd) || a.months - b.months,
+  );
 }
+
+const compareText = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0);

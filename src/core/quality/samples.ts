@@ -1,4 +1,5 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
+import type { Decimal } from '../money/decimal.ts';
 import { toSample } from '../money/toSample.ts';
 import { balanceAt, lastTwelveMonths, quarterFlow, type Presence } from '../statements/flows.ts';
 import type { LineItemCode } from '../statements/lineItems.ts';
@@ -20,6 +21,8 @@ export type Route = keyof typeof ROUTES;
 export interface Sample {
   readonly value: number;
   readonly inputs: readonly InputUsed[];
+  /** Of the inputs, each once. */
+  readonly statementIds: readonly number[];
 }
 
 type Samples = (route: Route, line: LineItemCode, date: PlainDate) => Sample | null;
@@ -48,12 +51,17 @@ function readOnce(book: StatementBook): Samples {
     if (known !== undefined) return known;
     const [find, presence] = ROUTES[route];
     const reading = find(book, line, date, presence);
-    const sample =
-      reading.kind === 'value' ? { value: toSample(reading.value), inputs: reading.inputs } : null;
+    const sample = reading.kind === 'value' ? sampleOf(reading.value, reading.inputs) : null;
     byDate.set(date, sample);
     return sample;
   };
 }
+
+const sampleOf = (value: Decimal, inputs: readonly InputUsed[]): Sample => ({
+  value: toSample(value),
+  inputs,
+  statementIds: [...new Set(inputs.map(({ statementId }) => statementId))],
+});
 
 /** The inner map under the key, made on first sight. */
 function within<Key, Inner, Value>(map: Map<Key, Map<Inner, Value>>, key: Key): Map<Inner, Value> {

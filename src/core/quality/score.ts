@@ -56,12 +56,21 @@ export interface QuarterScore {
   readonly earningsAtRisk: EarningsAtRisk | null;
 }
 
+/** A line of one statement. */
+export interface SourceCell {
+  readonly statementId: number;
+  readonly line: LineItemCode;
+  readonly periodEnd: PlainDate;
+  /** 0 for a balance sheet. */
+  readonly months: number;
+}
+
 /** One figure of the latest quarter end and the cells it was read from. */
 export interface FigureSource {
   readonly figure: PeerFigure;
   /** Whole units of the borrower's currency, paid items positive; of screens their score. */
   readonly amount: number;
-  readonly cells: readonly { readonly line: LineItemCode; readonly statementIds: readonly number[] }[];
+  readonly cells: readonly SourceCell[];
 }
 
 export const BESIDE_FACTS = [

@@ -52,7 +52,7 @@ export const quality = z.object({
       z.object({
         figure: z.enum(PEER_FIGURES),
         amount: z.number(),
-        cells: z.array(z.object({ line, statementIds: z.array(z.number()) })),
+        cells: z.array(z.object({ statementId: z.number(), line, periodEnd: day, months: z.number() })),
       }),
     )
     .default([]),
