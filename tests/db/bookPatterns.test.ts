@@ -91,6 +91,7 @@ describe('a published list', () => {
     const lifted = buildBook({ seed: 3, borrowers: 300, quarters: 20, lifters: 0.35, lifting: 0.9 });
     const standing = patternStanding(lifted);
     const parts = bookParts(lifted, 1);
+    const [night] = await rows<{ id: number }>('select id from runs order by id limit 1');
     await inTransaction(async (tx) => {
       other = await buildDesk(tx, ACCEPTED);
       auditor = await buildPerson(tx, { roles: ['auditor'], now: ACCEPTED });
@@ -116,7 +117,7 @@ describe('a published list', () => {
       const { version } = await storeCrossSection(
         tx,
         {
-          runId: null,
+          runId: night!.id,
           asOf: '2026-12-01',
           knownAt: new Date('2026-12-02T01:30:00Z'),
           methodVersion: '2.0',

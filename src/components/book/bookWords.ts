@@ -1,6 +1,6 @@
 /** How the page of the book prints its figures. */
 import { FEWER_THAN_SHOWN } from '../../contracts/book.ts';
-import { FEWEST_BORROWERS, type BookPart, type TooFewBorrowers } from '../../core/patterns/bookParts.ts';
+import { FEWEST_BORROWERS, type TooFewBorrowers } from '../../core/patterns/bookParts.ts';
 import type { TooFewNearLimit } from '../../core/patterns/nearLimit.ts';
 import { formatProbability } from '../../core/patterns/patternWording.ts';
 import type { SidesOfLimit } from '../../core/patterns/sidesOfLimit.ts';
@@ -58,5 +58,3 @@ export function refusalText(error: TooFewNearLimit | TooFewBorrowers): string {
 /** In a row of a table. */
 export const shortRefusal = (error: TooFewNearLimit): string =>
   `${crossDeskCount(error.given)} tests near the limit, ${error.needed} needed`;
-
-export const patternOf = (pattern: BookPart['pattern'] | null) => (pattern?.ok ? pattern.value : null);

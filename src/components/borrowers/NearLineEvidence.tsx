@@ -28,8 +28,10 @@ export function NearLineEvidence({ nearLine: { figures }, measure }: NearLineEvi
       {figures && (
         <>
           <Facts text facts={nearLineFacts(figures)} />
-          {isDebtToEbitda(measure) && <p className="type-second">{LEVERAGE_SENTENCE}</p>}
-          <Caution>{POPULATION_NOT_BORROWER}</Caution>
+          {isDebtToEbitda(measure) && <p className="type-second mt-2">{LEVERAGE_SENTENCE}</p>}
+          <div className="cautions">
+            <Caution>{POPULATION_NOT_BORROWER}</Caution>
+          </div>
         </>
       )}
     </section>

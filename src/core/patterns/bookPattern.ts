@@ -5,14 +5,13 @@ import { densityBreak, type DensityBreak, type DensityBreakError } from '../stat
 import type { PlainDate } from '../calendar/plainDate.ts';
 import type { StatisticsError } from '../statistics/statisticsError.ts';
 import { coarseRatios, type CoarseRatios } from './coarseRatios.ts';
-import { groupedBy } from './groupedBy.ts';
 import { headroomHistogram, type HeadroomHistogram } from './headroomHistogram.ts';
 import { removedRows, type HeadroomRow, type Removal } from './headroomRow.ts';
-import { borrowersOf, headroomsOf, keptRows, type KeptRows, type TooFewNearLimit } from './nearLimit.ts';
+import { borrowersOf, keptRows, type KeptRows, type TooFewNearLimit } from './nearLimit.ts';
 import { onSecondScale } from './secondScale.ts';
 import { sidesOfLimit, type SidesOfLimit } from './sidesOfLimit.ts';
 import { splitBy, splitByRun, type RunSplit, type SplitPart } from './splits.ts';
-import { binsAround } from './windows.ts';
+import { binOf } from './windows.ts';
 
 /** Below this many tests nothing has power against moderate lifting. Source: methods.md Part C 3.5. */
 export const LOW_POWER_BELOW = 1_000;
@@ -83,15 +82,13 @@ export function bookPattern(
   const kept = keptRows(rows);
   if (!kept.ok) return kept;
   const { headrooms, n, nearLimit } = kept.value;
-  const dates = kept.value.rows.map(({ testDate }) => testDate).sort();
   const [width, ...otherWidths] = settings.widths;
   const headline = sidesOfLimit(headrooms, n, width, 0);
   const secondScale = sidesOfLimit(onSecondScale(kept.value.rows), n, width, 0);
   return ok({
     n,
     borrowers: borrowersOf(rows),
-    from: dates[0]!,
-    until: dates.at(-1)!,
+    ...spanOf(kept.value.rows),
     nearLimit,
     withoutHeadroom: n - headrooms.length,
     removed: removedRows(rows),
@@ -112,6 +109,15 @@ export function bookPattern(
   });
 }
 
+function spanOf(rows: readonly HeadroomRow[]): Pick<BookPattern, 'from' | 'until'> {
+  let [from, until] = [rows[0]!.testDate, rows[0]!.testDate];
+  for (const { testDate } of rows) {
+    if (testDate < from) from = testDate;
+    if (testDate > until) until = testDate;
+  }
+  return { from, until };
+}
+
 const isSignificant = ({ pRight }: SidesOfLimit): boolean => pRight !== null && pRight <= SIGNIFICANCE;
 
 const isOtherwise = (first: SidesOfLimit, second: SidesOfLimit): boolean =>
@@ -124,11 +130,16 @@ function excessOverBorrowers(
   width: number,
   { draws, seed }: BookPatternSettings,
 ): Result<BootstrapInterval, StatisticsError> {
-  const shares = [...groupedBy(rows, ({ borrowerId }) => borrowerId).values()].map((own) => {
-    const { left, right, farRight } = binsAround(headroomsOf(own), width, 0);
-    return right - (left + farRight) / 2;
+  const shares = new Map<number, number>();
+  for (const { borrowerId, headroom } of rows) {
+    const bin = headroom === null ? null : binOf(headroom, width);
+    const share = bin === 0 ? 1 : bin === -1 || bin === 1 ? -1 / 2 : 0;
+    shares.set(borrowerId, (shares.get(borrowerId) ?? 0) + share);
+  }
+  return clusterBootstrap([...shares.values()], (drawn) => drawn.reduce((sum, share) => sum + share, 0), {
+    draws,
+    seed,
   });
-  return clusterBootstrap(shares, (drawn) => drawn.reduce((sum, share) => sum + share, 0), { draws, seed });
 }
 
 /** Beyond one whole level either side EBITDA is near nought, and a few such ratios would set the width of the bins. */

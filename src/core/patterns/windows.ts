@@ -26,6 +26,9 @@ export function binsAround(values: readonly number[], width: number, cutoff: num
   return { farLeft, left, right, farRight };
 }
 
+/** Nearer to an edge than this share of an interval the edge itself decides, free of binary rounding. */
+const AT_AN_EDGE = 1e-6;
+
 /**
  * In which interval of a width a value lies, counted from the limit: 0 is the first on the passing side. By the same
  * edges as the bins around a cut-off.
@@ -33,7 +36,10 @@ export function binsAround(values: readonly number[], width: number, cutoff: num
  * @example [-0.001, 0, 0.06].map((value) => binOf(value, 0.02)) // => [-1, 0, 3]
  */
 export function binOf(value: number, width: number): number {
-  const near = Math.floor(value / width);
+  const intervals = value / width;
+  const near = Math.floor(intervals);
+  const within = intervals - near;
+  if (within > AT_AN_EDGE && within < 1 - AT_AN_EDGE) return near;
   if (value < edge(near, width)) return near - 1;
   return value >= edge(near + 1, width) ? near + 1 : near;
 }

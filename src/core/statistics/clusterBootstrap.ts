@@ -32,9 +32,12 @@ export function clusterBootstrap<Cluster>(
   const n = clusters.length;
   if (n < 2) return err({ kind: 'too-few-points', needed: 2, given: n });
   const random = seededRandom(seed);
-  const values = Float64Array.from({ length: draws }, () =>
-    statistic(Array.from({ length: n }, () => clusters[random.below(n)]!)),
-  ).sort();
+  // One array for all draws: the statistic reads it and keeps nothing.
+  const drawn = [...clusters];
+  const values = Float64Array.from({ length: draws }, () => {
+    for (let place = 0; place < n; place += 1) drawn[place] = clusters[random.below(n)]!;
+    return statistic(drawn);
+  }).sort();
   const mean = values.reduce((sum, value) => sum + value, 0) / draws;
   const squares = values.reduce((sum, value) => sum + (value - mean) ** 2, 0);
   return ok({
