@@ -2,6 +2,7 @@ import type { CovenantView } from '../../contracts/borrowers.ts';
 import type { ComingTestView, ProjectionView } from '../../contracts/outlook.ts';
 import { dayText } from '../../core/calendar/printDay.ts';
 import { spokenTest } from '../../core/covenants/spokenTest.ts';
+import { OURS } from '../../core/covenants/wording.ts';
 import { limitText, testedText } from '../borrowers/figures.ts';
 import { MethodLink } from '../marks/MethodLink.tsx';
 import { RuledScale } from '../marks/QualityBar.tsx';
@@ -52,6 +53,7 @@ function ComingTestsOf({ covenant, projection }: ComingTestsOfProps) {
     <section>
       <h3 className="type-heading">
         {covenant.name}
+        {covenant.isOurs && <span className="type-second">, {OURS}</span>}
         {latest && projection?.fromTestDate && (
           <span className="type-second">
             {' '}
@@ -66,7 +68,7 @@ function ComingTestsOf({ covenant, projection }: ComingTestsOfProps) {
           <TableHead>
             <tr role="row">
               <HeadCell>Test</HeadCell>
-              <HeadCell>Not met</HeadCell>
+              <HeadCell>{covenant.isOurs ? 'Past our trigger' : 'Not met'}</HeadCell>
               <HeadCell numeric>Peer changes</HeadCell>
               <HeadCell numeric>By its own tests</HeadCell>
             </tr>

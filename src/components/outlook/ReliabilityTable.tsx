@@ -131,8 +131,8 @@ function HorizonTable({ horizon }: { readonly horizon: HorizonRecord }) {
       </ScrollRegion>
       <p className="type-second mt-1">
         {said} said, {notMet} came not met; {tooFewPeers} not said for want of peers. Brier score{' '}
-        {scoreText(said, brier)}, of the share of all of them {scoreText(said, brierOfBaseRate)}: the lower
-        the better.
+        {scoreText(said, brier)}; always saying the share of all of them would score{' '}
+        {scoreText(said, brierOfBaseRate)}. The lower the better.
       </p>
     </section>
   );

@@ -1,6 +1,7 @@
 import type { CovenantView } from '../../contracts/borrowers.ts';
-import type { BreakEvenView, SensitivityView, TestSensitivityView } from '../../contracts/outlook.ts';
+import type { BreakEvenView, SensitivityView } from '../../contracts/outlook.ts';
 import { dayText } from '../../core/calendar/printDay.ts';
+import { OURS } from '../../core/covenants/wording.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatShare } from '../../core/money/print.ts';
 import type { Factor } from '../../core/outlook/sensitivity.ts';
@@ -29,6 +30,8 @@ export function SensitivityPanel({ covenants, sensitivity }: SensitivityPanelPro
       </Panel>
     );
   const nameOf = namesOf(covenants);
+  const isOurs = (covenantId: number): boolean =>
+    covenants.some((covenant) => covenant.id === covenantId && covenant.isOurs);
   return (
     <Panel title="How far figures may move" aside={<MethodLink topic="sensitivity" />}>
       <div className="stack">
@@ -47,19 +50,20 @@ export function SensitivityPanel({ covenants, sensitivity }: SensitivityPanelPro
             <TableBody>
               {sensitivity.tests.map((test) => (
                 <Row key={test.covenantId}>
-                  <NameCell name={nameOf(test.covenantId)} second={`test of ${dayText(test.testDate)}`} />
+                  <NameCell
+                    name={nameOf(test.covenantId)}
+                    second={`${isOurs(test.covenantId) ? `${OURS}, ` : ''}test of ${dayText(test.testDate)}`}
+                  />
                   {SINGLE.map((factor) => (
                     <BreakEvenCell key={factor} factor={factor} found={test.breakEvens[factor]} />
                   ))}
                 </Row>
               ))}
               <Row>
-                <NameCell name="First not met" />
+                <NameCell name="First of those with room" />
                 {SINGLE.map((factor) => (
                   <Cell key={factor} numeric>
-                    {isFailedAlready(sensitivity.tests)
-                      ? 'not met already'
-                      : firstText(factor, sensitivity.first[factor], nameOf)}
+                    {firstText(factor, sensitivity.first[factor], nameOf)}
                   </Cell>
                 ))}
               </Row>
@@ -76,13 +80,10 @@ export function SensitivityPanel({ covenants, sensitivity }: SensitivityPanelPro
   );
 }
 
-export const namesOf =
+const namesOf =
   (covenants: readonly CovenantView[]) =>
   (covenantId: number): string =>
     covenants.find(({ id }) => id === covenantId)?.name ?? 'a covenant that is no more';
-
-const isFailedAlready = (tests: readonly TestSensitivityView[]): boolean =>
-  tests.some(({ breakEvens }) => breakEvens.together.kind === 'not met already');
 
 function BreakEvenCell({ factor, found }: { readonly factor: Factor; readonly found: BreakEvenView }) {
   const money = found.kind === 'at' ? moneyText(found.amount) : null;
@@ -107,18 +108,23 @@ function reverseText(
   { tests, first, every }: SensitivityView,
   nameOf: (covenantId: number) => string,
 ): string {
-  const whole = 'Sales, EBITDA, and receivables and stocks fall together by one and the same share.';
-  const firstSaid = first.together
-    ? `At ${formatShare(decimal(first.together.share))} the first test is not met: ${nameOf(first.together.covenantId)}.`
-    : isFailedAlready(tests)
-      ? 'A test is not met already.'
-      : 'No test is reached by it.';
-  const everySaid = every
-    ? `At ${formatShare(decimal(every))} none of ${tests.length} is met any more.`
-    : 'At no such share are all of them not met: some do not rest on these figures, or cannot be told.';
-  return tests.length === 1 && first.together
-    ? `${whole} ${firstSaid}`
-    : `${whole} ${firstSaid} ${everySaid}`;
+  const failed = tests
+    .filter(({ breakEvens }) => breakEvens.together.kind === 'not met already')
+    .map(({ covenantId }) => nameOf(covenantId));
+  return [
+    'Sales, EBITDA, and receivables and stocks fall together by one and the same share.',
+    failed.length > 0 ? `Nothing is left already of ${failed.join(', ')}.` : '',
+    first.together
+      ? `At ${formatShare(decimal(first.together.share))} the first of those with room is used up: ${nameOf(first.together.covenantId)}.`
+      : 'Nothing that has room is reached by it.',
+    tests.length === 1
+      ? ''
+      : every
+        ? `At ${formatShare(decimal(every))} nothing is left of any of the ${tests.length}.`
+        : 'At no such share is nothing left of all of them: some do not rest on these figures, or cannot be told.',
+  ]
+    .filter((sentence) => sentence !== '')
+    .join(' ');
 }
 
 const assumptions = ({ variableCostShare, floatingDebtShare }: SensitivityView): string =>
