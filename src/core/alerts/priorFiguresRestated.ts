@@ -1,4 +1,7 @@
 import { formatDay } from '../calendar/printDay.ts';
+import type { Outcome } from '../covenants/covenantTest.ts';
+import { shownOutcome } from '../covenants/rights.ts';
+import { OURS } from '../covenants/wording.ts';
 import { MEASURES } from '../measures/index.ts';
 import { formatMoney, formatShare, formatShareLevel } from '../money/print.ts';
 import type { Policy } from '../policy.ts';
@@ -61,7 +64,11 @@ function evidenceOf({ receivedOn, earnings, outcomes }: Restatement, { inputs }:
     ...outcomes.map(({ covenantId, testDate, before, after }) => {
       const covenant = inputs.covenants.find(({ id }) => id === covenantId);
       const label = covenant ? MEASURES[covenant.measure].label : 'Test';
-      return { label: `${label} on ${formatDay(testDate)}`, value: `${before}, after restatement ${after}` };
+      const said = (outcome: Outcome) => (covenant ? shownOutcome(covenant, outcome) : outcome);
+      return {
+        label: `${label}${covenant?.isOurs ? `, ${OURS},` : ''} on ${formatDay(testDate)}`,
+        value: `${said(before)}, after restatement ${said(after)}`,
+      };
     }),
   ];
 }

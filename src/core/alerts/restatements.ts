@@ -112,7 +112,7 @@ function outcomeMoves(
         test.covenantId === covenant.id && test.testDate >= earliestPeriodEnd && test.testDate < receivedOn,
     );
     const outcomeFrom = (books: Books, testDate: PlainDate): Outcome =>
-      testCovenant(covenant, books[covenant.scope], testDate, policy, asOf).underlyingOutcome;
+      testCovenant(covenant, books[covenant.scope], testDate, policy, asOf, inputs.rates).underlyingOutcome;
     return dates.flatMap(({ testDate }) => {
       const [was, is] = [outcomeFrom(before, testDate), outcomeFrom(after, testDate)];
       if (standing(was) === null || standing(was) === standing(is)) return [];

@@ -67,7 +67,7 @@ export function buildContext(
     withRights(
       covenant,
       testDates(covenant, asOf).map((date) =>
-        testCovenant(covenant, books[covenant.scope], date, policy, asOf),
+        testCovenant(covenant, books[covenant.scope], date, policy, asOf, inputs.rates),
       ),
       { undertakings: inputs.undertakings, asOf },
     ),
