@@ -215,10 +215,12 @@ export const policySetting = (key: PolicyKey): PolicySetting => POLICY_SETTINGS[
  *
  * @example printSetting('thinBelow', decimal('0.1')) // => '10\u00a0%'
  * @example printSetting('stepDown.soonDays', decimal(90)) // => '90 days'
+ * @example printSetting('stepDown.soonDays', decimal(1)) // => '1 day'
  */
 export function printSetting(key: PolicyKey, value: Decimal): string {
   const { unit } = policySetting(key);
-  return unit === 'share' ? formatShareLevel(value) : `${value.toFixed()} ${unit}`;
+  if (unit === 'share') return formatShareLevel(value);
+  return `${value.toFixed()} ${value.eq(1) ? unit.slice(0, -1) : unit}`;
 }
 
 /** Why a value cannot stand, in words that say what to do. */
