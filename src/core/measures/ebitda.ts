@@ -123,9 +123,11 @@ export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): Meas
  * @example ebitdaIn(request).ebitda.value // => 13000000
  */
 export function ebitdaIn(request: MeasureRequest): MeasuredEbitda {
-  const parts = request.definition.impairmentAddedBack ? WITH_IMPAIRMENT : PARTS;
+  const { book, date, months, definition, translation } = request;
+  if (!definition.impairmentAddedBack && months === 12 && book.currency === translation.currency)
+    return ebitdaOfTwelveMonths(book, date);
   return addedUp(
-    parts,
+    definition.impairmentAddedBack ? WITH_IMPAIRMENT : PARTS,
     ({ line, presence }) => flowIn(request, line, presence),
     (sum) => sum(),
   );

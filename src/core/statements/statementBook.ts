@@ -24,6 +24,8 @@ export interface StatementBook {
   /** Month in which the financial year ends, 1 to 12. */
   readonly fiscalYearEndMonth: number;
   readonly statements: readonly Statement[];
+  /** The currency of all of them; null where there are several, or no statement. */
+  readonly currency: string | null;
   /** One a period, in order of period end. */
   readonly current: readonly Statement[];
   readonly statementById: (id: number) => Statement | undefined;
@@ -87,6 +89,7 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
   return {
     fiscalYearEndMonth,
     statements,
+    currency: onlyCurrency(statements),
     current,
     statementById: (id) => byId.get(id),
     versionsOf: (periodEnd, months) => versionsOf(periodEnd, months) ?? [],
@@ -111,22 +114,24 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
   };
 }
 
+function onlyCurrency(statements: readonly Statement[]): string | null {
+  const [first] = statements;
+  return first && statements.every(({ currency }) => currency === first.currency) ? first.currency : null;
+}
+
 function keptReadings(): StatementBook['kept'] {
   const routes = new Map<string, Map<LineItemCode, Map<PlainDate, Reading>>>();
   return (route, line, date, read) => {
-    const lines = within(routes, route, () => new Map<LineItemCode, Map<PlainDate, Reading>>());
-    const readings = within(lines, line, () => new Map<PlainDate, Reading>());
-    return within(readings, date, read);
+    let lines = routes.get(route);
+    if (!lines) routes.set(route, (lines = new Map()));
+    let readings = lines.get(line);
+    if (!readings) lines.set(line, (readings = new Map()));
+    const known = readings.get(date);
+    if (known) return known;
+    const reading = read();
+    readings.set(date, reading);
+    return reading;
   };
-}
-
-/** What stands under the key, made on first sight. */
-function within<Key, Value extends object>(map: Map<Key, Value>, key: Key, make: () => Value): Value {
-  const known = map.get(key);
-  if (known) return known;
-  const made = make();
-  map.set(key, made);
-  return made;
 }
 
 function earliestWith(statements: readonly Statement[], line: LineItemCode): PlainDate | null {
