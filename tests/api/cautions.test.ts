@@ -2,6 +2,7 @@
 import { expect, test } from 'vitest';
 import type { AlertRow } from '../../src/contracts/alerts.ts';
 import type { Page } from '../../src/contracts/paging.ts';
+import { NO_FORECAST } from '../../src/components/outlook/outlookWords.ts';
 import { CAUTIONS } from '../../src/core/cautions.ts';
 import { signInAs } from '../support/demo.ts';
 
@@ -15,7 +16,7 @@ const textOf = (html: string): string =>
     .replaceAll('&amp;', '&')
     .replaceAll(/\s+/g, ' ');
 
-const PARTS = ['', '/statements', '/quality', '/alerts', '/facilities', '/review-sheet'];
+const PARTS = ['', '/outlook', '/statements', '/quality', '/alerts', '/facilities', '/review-sheet'];
 
 test.each(PARTS)('a borrower’s page carries all four cautions: %s', async (part) => {
   const reader = await signInAs('auditor');
@@ -44,4 +45,12 @@ test('the watchlist carries all four cautions', async () => {
   const reader = await signInAs('auditor');
   const text = textOf(await (await reader.send('/watchlist')).text());
   for (const caution of CAUTIONS) expect(text).toContain(caution);
+});
+
+test('what is said of tests to come carries its own caution, and all four', async () => {
+  const reader = await signInAs('auditor');
+  for (const address of ['/borrowers/1/outlook', '/book/projections']) {
+    const text = textOf(await (await reader.send(address)).text());
+    for (const caution of [NO_FORECAST, ...CAUTIONS]) expect(text).toContain(caution);
+  }
 });

@@ -63,6 +63,7 @@ test.each([
   [
     'just passing on add-backs',
     [
+      'headroom shrinking: soon',
       'just passing, repeated: soon',
       'met only with add-backs: soon',
       'step-down ahead: soon',

@@ -25,7 +25,7 @@ const ROLES = [
   { part: 'auditor', rulesAt: [] },
 ] as const;
 
-const BORROWER_PARTS = ['', '/statements', '/quality', '/alerts', '/facilities', '/review-sheet'];
+const BORROWER_PARTS = ['', '/outlook', '/statements', '/quality', '/alerts', '/facilities', '/review-sheet'];
 
 interface Rows {
   readonly rows: readonly { readonly id: number; readonly borrowerId: number }[];
@@ -45,6 +45,7 @@ async function addressesFor(page: Page): Promise<string[]> {
     '/borrowers',
     '/imports',
     '/book',
+    '/book/projections',
     '/audit-log',
     '/desk-settings/runs',
     '/desk-settings/policy',

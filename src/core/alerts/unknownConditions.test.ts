@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest';
 import { buildCovenant, buildLevel, buildYear } from '../covenants/covenant.fixture.ts';
+import { decimal } from '../money/decimal.ts';
 import { buildContext, buildInputs, buildQuality } from './rule.fixture.ts';
 import { leavesOpen } from './unknownConditions.ts';
 
@@ -43,4 +44,28 @@ test('without a score nothing about quality is known', () => {
   const ask = (headline: number | null) =>
     leavesOpen({ ...context, quality: buildQuality({ headline }) })('reporting quality weak', null);
   expect([ask(null), ask(29)]).toEqual([true, false]);
+});
+
+test('without peers nothing about tests to come is known; with some of them it is', () => {
+  const context = buildContext(buildInputs({ covenants, statements: year }), asOf);
+  const coming = { testDate: '2026-12-31', quarters: 1 } as const;
+  const withTests = (kinds: readonly ('too few peers' | 'nothing to project')[]) =>
+    leavesOpen({
+      ...context,
+      projections: [
+        {
+          covenantId: 1,
+          fromTestDate: '2026-09-30',
+          reason: null,
+          tests: kinds.map((kind) =>
+            kind === 'too few peers'
+              ? { ...coming, kind, level: decimal('3.5') }
+              : { ...coming, kind, reason: 'covenant holiday' },
+          ),
+        },
+      ],
+    })('headroom shrinking', 1);
+  expect(withTests(['too few peers'])).toBe(true);
+  expect(withTests(['nothing to project'])).toBe(false);
+  expect(withTests([])).toBe(false);
 });

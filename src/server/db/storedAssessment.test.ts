@@ -76,3 +76,39 @@ test('text that is no assessment is refused', () => {
   expect(() => readAssessment(JSON.stringify(stored))).toThrow();
   expect(() => readAssessment('{}')).toThrow();
 });
+
+test('coming tests and movements come back in every form, and an older result has none', () => {
+  const coming = { testDate: '2026-12-31', quarters: 1 } as const;
+  const projected = {
+    ...coming,
+    kind: 'projected',
+    level: decimal('3.25'),
+    word: 'open',
+    notMet: 20,
+    share: 0.5,
+    n: 40,
+    borrowers: 9,
+    peers: 'book',
+    check: null,
+    openAt: null,
+  } as const;
+  const assessment: Assessment = {
+    ...assessed(),
+    projections: [
+      {
+        covenantId: 1,
+        fromTestDate: '2026-09-30',
+        reason: null,
+        tests: [
+          projected,
+          { ...coming, kind: 'too few peers', level: decimal('3.25') },
+          { ...coming, kind: 'nothing to project', reason: 'covenant holiday' },
+        ],
+      },
+    ],
+  };
+  expect(assessment.sensitivity?.tests.length).toBeGreaterThan(0);
+  expect(readAssessment(storedAssessment(assessment))).toEqual(assessment);
+  const { projections: _projections, sensitivity: _sensitivity, ...older } = assessment;
+  expect(readAssessment(JSON.stringify(older))).toMatchObject({ projections: [], sensitivity: null });
+});
