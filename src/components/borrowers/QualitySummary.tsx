@@ -1,10 +1,13 @@
+import { monthCount } from '../../core/calendar/plainDate.ts';
 import { dayText } from '../../core/calendar/printDay.ts';
 import type { BorrowerView } from '../../contracts/borrowers.ts';
 import { NO_FINDING_OF_MISCONDUCT } from '../../core/cautions.ts';
-import type { QualityBlock } from '../../core/quality/score.ts';
+import type { QualityBlock, ReportingQuality } from '../../core/quality/score.ts';
+import { MethodLink } from '../marks/MethodLink.tsx';
 import { QualityBar, RuledScale } from '../marks/QualityBar.tsx';
 import { Panel } from '../ui/Panel.tsx';
 import { Caution } from '../ui/States.tsx';
+import { BLOCK_TOPICS } from './qualityRows.ts';
 
 /** Reporting quality beside the covenants: the number, its blocks, why. */
 export function QualitySummary({
@@ -32,10 +35,10 @@ export function QualitySummary({
       </p>
       {latest && (
         <p className="type-second">
-          Mean of the last three quarter ends, coverage {latest.coverage} of 100, {latest.sectorPeers} peers
-          in the sector
+          {meanText(quality)}, coverage {latest.coverage} of 100, {latest.sectorPeers} peers in the sector
           {latest.sectorWeight < 1 && `, leaning on ${latest.bookPeers} borrowers of the whole book`}
-          {computed?.peersAreLastNights && ', peers as of last night'}
+          {computed?.peersAreLastNights && ', peers as of last night'}{' '}
+          <MethodLink topic="reporting-quality" />
         </p>
       )}
       {latest && (
@@ -65,6 +68,19 @@ export function QualitySummary({
   );
 }
 
+/** Of how many quarter ends the headline is the mean: those within half a year of the latest. */
+function meanText({ headline, history, latest, provisional }: ReportingQuality): string {
+  if (headline === null || !latest) return 'No headline';
+  if (provisional) return 'One quarter end only, provisional';
+  const scored = history.filter(
+    ({ score, quarterEnd }) =>
+      score !== null && monthCount(latest.quarterEnd) - monthCount(quarterEnd) <= MONTHS_OF_HEADLINE,
+  );
+  return `Mean of the last ${scored.length === 2 ? 'two' : 'three'} quarter ends`;
+}
+
+const MONTHS_OF_HEADLINE = 6;
+
 /** 100 is well supported: a block's number is 100 less its risk in per cent. */
 export const blockScore = (block: QualityBlock): number | null =>
   block.risk === null ? null : Math.round(100 * (1 - block.risk));
@@ -77,7 +93,8 @@ function BlockList({ blocks }: { readonly blocks: readonly QualityBlock[] }) {
         return (
           <div key={block.name}>
             <dt>
-              {block.name.charAt(0).toUpperCase() + block.name.slice(1)}
+              {block.name.charAt(0).toUpperCase() + block.name.slice(1)}{' '}
+              <MethodLink topic={BLOCK_TOPICS[block.name]} />
               <span className="type-second type-small block">
                 weight {block.weight}
                 {block.reason !== null && `, ${block.reason}`}
