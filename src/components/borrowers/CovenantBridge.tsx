@@ -1,6 +1,7 @@
 import type { BridgeRow, CovenantView, SourceLink } from '../../contracts/borrowers.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { MethodLink } from '../marks/MethodLink.tsx';
+import { ScrollRegion } from '../ui/ScrollRegion.tsx';
 import { Cell, HeadCell, Row, Table, TableBody, TableHead } from '../ui/Table.tsx';
 import { amountText, periodText, sourceHref } from './figures.ts';
 import { MEASURE_METHODS } from './measureMethods.ts';
@@ -26,35 +27,39 @@ export function CovenantBridge({
           </>
         )}
       </h3>
-      <Table caption="Bridge from reported to covenant figures, whole currency units">
-        <TableHead>
-          <tr role="row">
-            <HeadCell>Line</HeadCell>
-            <HeadCell numeric>Amount</HeadCell>
-            <HeadCell>From</HeadCell>
-          </tr>
-        </TableHead>
-        <TableBody>
-          {rows.map((row, at) => (
-            <Row key={`${at} ${row.label}`}>
-              <Cell>
-                {row.kind === 'subtotal' ? <span className="type-name">{row.label}</span> : row.label}
-                {row.kind === 'check' && <span className="type-second">, beside the sum</span>}
-                {row.note !== null && <p className="type-second">{row.note}</p>}
-              </Cell>
-              <Cell numeric>{row.kind === 'rate' ? row.amount : amountText(row.amount)}</Cell>
-              <Cell>
-                {row.sources.map((source, at) => (
-                  <span key={`${source.statementId} ${source.line} ${source.sign}`}>
-                    {at > 0 && (source.sign === -1 ? ' less ' : ', ')}
-                    <a href={sourceHref(source.statementId, source.line)}>{linkText(source, row.sources)}</a>
-                  </span>
-                ))}
-              </Cell>
-            </Row>
-          ))}
-        </TableBody>
-      </Table>
+      <ScrollRegion label="From reported to covenant figures">
+        <Table caption="Bridge from reported to covenant figures, whole currency units">
+          <TableHead>
+            <tr role="row">
+              <HeadCell>Line</HeadCell>
+              <HeadCell numeric>Amount</HeadCell>
+              <HeadCell>From</HeadCell>
+            </tr>
+          </TableHead>
+          <TableBody>
+            {rows.map((row, at) => (
+              <Row key={`${at} ${row.label}`}>
+                <Cell>
+                  {row.kind === 'subtotal' ? <span className="type-name">{row.label}</span> : row.label}
+                  {row.kind === 'check' && <span className="type-second">, beside the sum</span>}
+                  {row.note !== null && <p className="type-second">{row.note}</p>}
+                </Cell>
+                <Cell numeric>{row.kind === 'rate' ? row.amount : amountText(row.amount)}</Cell>
+                <Cell>
+                  {row.sources.map((source, at) => (
+                    <span key={`${source.statementId} ${source.line} ${source.sign}`}>
+                      {at > 0 && (source.sign === -1 ? ' less ' : ', ')}
+                      <a href={sourceHref(source.statementId, source.line)}>
+                        {linkText(source, row.sources)}
+                      </a>
+                    </span>
+                  ))}
+                </Cell>
+              </Row>
+            ))}
+          </TableBody>
+        </Table>
+      </ScrollRegion>
     </section>
   );
 }

@@ -81,7 +81,11 @@ export function CovenantsTable({ covenants, selected, hrefOf }: CovenantsTablePr
                 </Cell>
                 <Cell entry="extra">
                   {test && (
-                    <OutcomeText outcome={test.outcome} justPassing={test.justPassing} reason={test.reason} />
+                    <OutcomeText
+                      outcome={test.outcome}
+                      justPassing={test.justPassing}
+                      reason={test.reason === covenant.whatIsLeft ? null : test.reason}
+                    />
                   )}
                   <span className="type-second type-small block">
                     {test && `${dayText(test.testDate)}, ${covenant.checking}`}
