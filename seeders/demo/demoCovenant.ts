@@ -52,7 +52,7 @@ export interface DemoAddBack {
 export type DemoCureRights = CureRights;
 
 /** Money of the owners, in thousands. */
-export interface DemoCure {
+interface DemoCure {
   readonly quarterEnd: PlainDate;
   readonly method: CureRights['method'];
   readonly amount: number;

@@ -41,7 +41,7 @@ export function cureAmount({
 }
 
 /** What it takes to land on the level, by the way in which the money counts; null for a way that cannot reach it. */
-export type CureNeeded = Readonly<Record<CureMethod, Decimal | null>>;
+type CureNeeded = Readonly<Record<CureMethod, Decimal | null>>;
 
 /**
  * What it takes to bring any test to its level. As EBITDA where earnings stand in the test; as debt where debt is the
