@@ -78,7 +78,7 @@ function demoBorrower(
   const all = tradingYears(plan);
   const isLate = LATE.includes(row.scenario);
   const quarters = isLate ? all.slice(0, -1) : all;
-  const firstTestIndex = random.count(5, 7);
+  const firstTestIndex = random.count(7, 9);
   const usualDelayDays = random.count(24, 41);
   const deadline = deadlineOf(row, latest, seedDay);
   const rights = {

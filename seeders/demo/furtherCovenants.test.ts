@@ -137,7 +137,7 @@ const READINGS: Readonly<Record<string, ReadingOf>> = {
   'Net leverage, rules at signing of Otterbrane': frozenLeverage,
   'Net leverage with leases of Halvorune': leverageWithLeases(2_000),
   'Net leverage in euro of Merrinstowe': leverageInEuro,
-  'Net leverage of the revolver of Rastevolde': annualisedLeverage(13),
+  'Net leverage of the revolver of Rastevolde': annualisedLeverage(15),
   'Tangible net worth of Cindrevall': (quarters, index) => tangibleNetWorth(quarters, index) * 1_000,
   'Loan to value of Nordvelle': loanToValue,
   'Debt yield of Nordvelle': debtYield,

@@ -47,7 +47,7 @@ interface FurtherPlan {
 const MOST_TIMES: LevelKind = { isMaximum: true, step: 0.25 };
 const LEAST_TIMES: LevelKind = { isMaximum: false, step: 0.05 };
 const LEAST_THOUSANDS: LevelKind = { isMaximum: false, step: 250 };
-const LAST_THREE_TESTS = 13;
+const LAST_THREE_TESTS = 15;
 const SECOND_FACILITY = { facilityNumber: 1 } as const;
 
 const debtService = { measure: 'debt-service-cover', name: 'Debt service cover', kind: LEAST_TIMES } as const;

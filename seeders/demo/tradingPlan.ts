@@ -20,9 +20,10 @@ export interface CalendarQuarter {
   readonly days: number;
 }
 
-const QUARTERS_REPORTED = 16;
+/** Eighteen are the fewest of which twelve are usable for accrual noise. */
+export const QUARTERS_REPORTED = 18;
 /** Quarters before the first reported one, in which the opening position settles. */
-export const QUARTERS_BEFORE = 4;
+export const QUARTERS_BEFORE = 2;
 
 /** The reported quarters up to the latest, and those before them. */
 export const quartersUpTo = (latest: PlainDate): CalendarQuarter[] =>

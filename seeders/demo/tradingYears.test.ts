@@ -2,7 +2,7 @@ import { expect, test } from 'vitest';
 import { randomNumbers } from './randomNumbers.ts';
 import { SECTOR_PROFILES, type SectorName } from './sectorProfiles.ts';
 import { faultsOf } from './identities.fixture.ts';
-import { ORDINARY, quartersUpTo, type TradingPlan } from './tradingPlan.ts';
+import { ORDINARY, QUARTERS_REPORTED, quartersUpTo, type TradingPlan } from './tradingPlan.ts';
 import { tradingYears } from './tradingYears.ts';
 
 const plan = (changes: Partial<TradingPlan>): TradingPlan => ({
@@ -22,9 +22,9 @@ const plan = (changes: Partial<TradingPlan>): TradingPlan => ({
   ...changes,
 });
 
-test.each(Object.keys(SECTOR_PROFILES) as SectorName[])('sixteen quarters of %s tie', (sector) => {
+test.each(Object.keys(SECTOR_PROFILES) as SectorName[])('eighteen quarters of %s tie', (sector) => {
   const quarters = tradingYears(plan({ profile: SECTOR_PROFILES[sector] }));
-  expect(quarters).toHaveLength(16);
+  expect(quarters).toHaveLength(QUARTERS_REPORTED);
   expect(quarters.at(-1)?.quarterEnd).toBe('2026-09-30');
   expect(faultsOf(quarters)).toEqual([]);
 });
@@ -34,7 +34,7 @@ test('a business that loses money ties as well, and draws rather than run out of
   expect(faultsOf(quarters)).toEqual([]);
   expect(quarters.at(-1)?.lines.revolver_drawn).toBeGreaterThan(0);
   expect(Math.min(...quarters.map(({ lines }) => lines.cash))).toBeGreaterThan(0);
-  expect(quarters.map(({ lines }) => lines.income_tax)).toEqual(Array(16).fill(0));
+  expect(quarters.map(({ lines }) => lines.income_tax)).toEqual(Array(QUARTERS_REPORTED).fill(0));
 });
 
 test('the identities notice a figure that is one thousand off', () => {

@@ -1,5 +1,5 @@
 /**
- * Sixteen quarters of three statements that tie exactly, in whole thousands: every figure is an integer before
+ * Eighteen quarters of three statements that tie exactly, in whole thousands: every figure is an integer before
  * anything is added up, so that no subtotal is a rounding away from its parts.
  */
 import type { DemoQuarter } from './demoLines.ts';
@@ -43,15 +43,20 @@ function withCommitment(quarters: readonly DemoQuarter[]): DemoQuarter[] {
   }));
 }
 
-/** Valued on the first quarter end and so many quarters after each valuation. */
+/** Valued on the first quarter end, on the third, and so many quarters after each valuation. */
 function withProperty({ property }: TradingPlan, quarters: readonly DemoQuarter[]): DemoQuarter[] {
   if (!property) return [...quarters];
   let valued = 0;
   return quarters.map((quarter, index) => {
     const { lines } = quarter;
-    if (index % property.quartersBetweenValuations === 0)
+    if (index === 0 || isValued(index, property.quartersBetweenValuations))
       valued = Math.round((lines.ppe_gross * property.valueShare) / 100) * 100;
     const noi = property.incomeShare === null ? 0 : Math.round(quarterEbitda(quarter) * property.incomeShare);
     return { ...quarter, lines: { ...lines, collateral_value: valued, noi } };
   });
 }
+
+const isValued = (index: number, quartersBetween: number): boolean =>
+  index >= FIRST_REGULAR_VALUATION && (index - FIRST_REGULAR_VALUATION) % quartersBetween === 0;
+
+const FIRST_REGULAR_VALUATION = 2;
