@@ -40,6 +40,8 @@ export interface StripTest {
   readonly mayFall: string | null;
   readonly justPassing: boolean;
   readonly level: string | null;
+  /** Width of the just-passing band of the policy it was judged by, a share of the level; left out: version 1's. */
+  readonly band?: string;
 }
 
 export interface AlertRow {

@@ -91,6 +91,8 @@ export interface TestView {
   readonly mayFall: string | null;
   readonly shareOfLevel: string | null;
   readonly justPassing: boolean;
+  /** Width of the just-passing band of the policy it was judged by, a share of the level; left out: version 1's. */
+  readonly band?: string;
   readonly withoutAddBacks: string | null;
   /** The first test under a level agreed after signing. */
   readonly isFirstUnderReset: boolean;

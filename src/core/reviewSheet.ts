@@ -54,6 +54,8 @@ export interface SheetTest {
   readonly mayFall: string | null;
   readonly justPassing: boolean;
   readonly level: string | null;
+  /** Width of the just-passing band of the policy it was judged by, a share of the level; left out: version 1's. */
+  readonly band?: string;
 }
 
 /** Where one amount stands in a file. */

@@ -9,13 +9,11 @@ interface SoundingStripProps {
   readonly size: StripSize;
   /** What was tested: "Net leverage". */
   readonly label: string;
-  /** Width of the just-passing band by policy, as a share of the level. */
-  readonly bandShare?: number;
 }
 
 /** The last twelve tests of a covenant, as soundings over the bed. */
-export function SoundingStrip({ tests, size, label, bandShare }: SoundingStripProps) {
-  const drawing = drawStrip(tests, size, bandShare);
+export function SoundingStrip({ tests, size, label }: SoundingStripProps) {
+  const drawing = drawStrip(tests, size);
   const { frame } = drawing;
   return (
     <svg

@@ -46,6 +46,15 @@ describe('the limit', () => {
     const { shoalY, frame } = drawStrip([], 'panel');
     expect(frame.limitY - shoalY).toBeCloseTo(2 * frame.pixelsPerPoint, 10);
   });
+
+  test('has the band of the policy that the newest test was judged by', () => {
+    const tests = [
+      aTest('2026-06-30', '0.1', { band: '0.02' }),
+      aTest('2026-09-30', '0.1', { band: '0.035' }),
+    ];
+    const { shoalY, frame } = drawStrip(tests, 'panel');
+    expect(frame.limitY - shoalY).toBeCloseTo(3.5 * frame.pixelsPerPoint, 10);
+  });
 });
 
 describe('the height of a result', () => {

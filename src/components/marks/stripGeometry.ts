@@ -3,6 +3,7 @@
  * limit is always at the same height, so that strips compare down a column.
  */
 import type { StripTest } from '../../contracts/alerts.ts';
+import { POLICY_VERSION_1 } from '../../core/policy.ts';
 
 export type StripSize = 'row' | 'panel';
 
@@ -76,10 +77,13 @@ export interface StripDrawing {
   readonly shoalY: number;
 }
 
-/** The last twelve tests in date order, the newest at the right edge whatever their number. */
-export function drawStrip(tests: readonly StripTest[], size: StripSize, bandShare = 0.02): StripDrawing {
+const BAND_OF_VERSION_1 = Number(POLICY_VERSION_1.justPassingBand);
+
+/** The last twelve tests in date order, the newest at the right edge whatever their number; the band is the newest's. */
+export function drawStrip(tests: readonly StripTest[], size: StripSize): StripDrawing {
   const frame = STRIP_FRAMES[size];
   const shown = lastTests(tests);
+  const band = Number(shown.at(-1)?.band ?? BAND_OF_VERSION_1);
   const slot = frame.width / STRIP_TESTS;
   const firstSlot = STRIP_TESTS - shown.length;
   const marks = shown.map((test, position) => {
@@ -92,7 +96,7 @@ export function drawStrip(tests: readonly StripTest[], size: StripSize, bandShar
     if (before === null || now === null || Number(before) === Number(now)) return [];
     return [{ x: mark.x - slot / 2, from: before, to: now }];
   });
-  return { frame, marks, steps, shoalY: heightOf(bandShare * 100, frame) };
+  return { frame, marks, steps, shoalY: heightOf(band * 100, frame) };
 }
 
 export function lastTests(tests: readonly StripTest[]): readonly StripTest[] {

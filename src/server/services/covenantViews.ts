@@ -14,6 +14,8 @@ import type { CheckRecord } from '../db/repositories/covenantTests.ts';
 interface Beside {
   readonly facilities: readonly { readonly id: number; readonly name: string }[];
   readonly checks: readonly CheckRecord[];
+  /** The just-passing band of the policy that the assessment went by. */
+  readonly band: Decimal;
 }
 
 /** A covenant with its tests as the stored result has them; decimals become text here, once. */
@@ -40,7 +42,7 @@ export function toCovenantViews(
       operator: covenant.operator,
       roundingPlaces: covenant.roundingPlaces,
       isOurs: covenant.isOurs,
-      tests: tests.map(toTestView),
+      tests: tests.map((test) => toTestView(test, beside.band)),
       ...latestParts(covenant, shown),
       nearLine: assessment.nearLine.find((one) => one.covenantId === covenant.id) ?? null,
       pattern: pattern ? { inBand: pattern.inBand, ofLast: pattern.ofLast, run: pattern.run } : null,
@@ -158,7 +160,7 @@ function latestParts(covenant: Covenant, test: CovenantTest | undefined): Latest
 
 const labelOf = (line: LineItemCode): string => lineItem(line).label;
 
-const toTestView = (test: CovenantTest): TestView => ({
+const toTestView = (test: CovenantTest, band: Decimal): TestView => ({
   testDate: test.testDate,
   level: test.level?.toFixed() ?? null,
   tested: test.tested?.toFixed() ?? null,
@@ -170,6 +172,7 @@ const toTestView = (test: CovenantTest): TestView => ({
   mayFall: test.headroom.mayFall?.toFixed() ?? null,
   shareOfLevel: test.headroom.shareOfLevel?.toFixed() ?? null,
   justPassing: test.justPassing,
+  band: band.toFixed(),
   withoutAddBacks:
     test.counterfactuals.find((other) => other.kind === 'without add-backs')?.ratio?.toFixed() ?? null,
   isFirstUnderReset: test.isFirstUnderReset,

@@ -11,6 +11,7 @@ import { findBorrower } from '../db/repositories/borrowers.ts';
 import { listChecks } from '../db/repositories/covenantTests.ts';
 import { loadCovenants } from '../db/repositories/covenantInputs.ts';
 import { listFacilities } from '../db/repositories/facilities.ts';
+import { policyOfVersion } from '../db/repositories/policies.ts';
 import type { PersonActor } from './actor.ts';
 import { toCovenantViews } from './covenantViews.ts';
 import { lenderDay } from './lenderDay.ts';
@@ -97,5 +98,6 @@ async function covenantViews(
     tx,
     covenants.map((covenant) => covenant.id),
   );
-  return toCovenantViews(covenants, stored.assessment, { facilities, checks });
+  const { justPassingBand: band } = await policyOfVersion(tx, stored.assessment.policyVersion);
+  return toCovenantViews(covenants, stored.assessment, { facilities, checks, band });
 }

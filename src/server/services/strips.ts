@@ -49,6 +49,7 @@ function toStrip(tests: readonly StripRecord[]): Strip {
       mayFall: test.mayFall,
       justPassing: test.justPassing === 1,
       level: test.level,
+      ...(test.band !== null && { band: test.band }),
     })),
     mayFall: latest?.mayFall ?? null,
     latestOutcome: (latest?.outcome as Outcome | undefined) ?? null,

@@ -162,6 +162,8 @@ export interface StripRecord {
   readonly mayFall: string | null;
   readonly level: string | null;
   readonly justPassing: number;
+  /** Null: that of version 1 of the policy. */
+  readonly band: string | null;
 }
 
 /** The tests behind the strips of many rows in one query, oldest first. */
@@ -173,8 +175,10 @@ export async function listStrips(
   return select<StripRecord>(
     tx,
     `select t.assessment_id as assessmentId, t.covenant_id as covenantId, concat(n.name, if(n.is_ours = 1, ', ours, not in the agreement', '')) as covenantName, t.test_date as testDate,
-       t.outcome, t.may_fall as mayFall, t.level, t.is_just_passing as justPassing
+       t.outcome, t.may_fall as mayFall, t.level, t.is_just_passing as justPassing, json_value(p.content, '$.justPassingBand') as band
      from test_results t
+     join assessments a on a.id = t.assessment_id
+     left join policies p on p.version = a.policy_version
      join covenant_terms n on n.covenant_id = t.covenant_id and n.known_to is null and n.valid_to is null
      where t.assessment_id in (:assessments) and t.covenant_id in (:covenants)
      order by t.covenant_id, t.test_date`,

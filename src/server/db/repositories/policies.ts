@@ -77,6 +77,16 @@ export async function policyInForce(tx: Transaction, asOf: PlainDate, knownAt: D
   return row ? readPolicy(row.content) : POLICY_VERSION_1;
 }
 
+/** The policy that a result names; version 1 is the product's. */
+export async function policyOfVersion(tx: Transaction, version: number): Promise<Policy> {
+  const row = await selectOne<{ content: string }>(
+    tx,
+    'select content from policies where version = :version',
+    { version },
+  );
+  return row ? readPolicy(row.content) : POLICY_VERSION_1;
+}
+
 export interface PolicyVersionRecord {
   readonly policy: Policy;
   readonly validFrom: PlainDate;

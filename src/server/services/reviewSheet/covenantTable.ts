@@ -114,12 +114,13 @@ function certifiedCells(covenant: CovenantView, test: TestView | null): readonly
 function testsCell(covenant: CovenantView): SheetCell {
   const tests = covenant.tests
     .slice(-LAST_TESTS)
-    .map(({ testDate, outcome, mayFall, justPassing, level }) => ({
+    .map(({ testDate, outcome, mayFall, justPassing, level, band }) => ({
       testDate,
       outcome,
       mayFall,
       justPassing,
       level,
+      ...(band !== undefined && { band }),
     }));
   if (tests.length === 0) return absent('not tested yet');
   const line = (test: (typeof tests)[number]) =>

@@ -65,7 +65,11 @@ export function buildMaterial(given: MaterialGiven = {}): SheetMaterial {
   return {
     view: {
       ...VIEW,
-      covenants: toCovenantViews(covenants, assessment, { facilities, checks: given.checks ?? [] }),
+      covenants: toCovenantViews(covenants, assessment, {
+        facilities,
+        checks: given.checks ?? [],
+        band: POLICY_VERSION_1.justPassingBand,
+      }),
       quality: assessment.quality,
       ...given.view,
     },
