@@ -3,7 +3,6 @@ import { addDays, addMonthsToMonthEnd, type PlainDate } from '../../src/core/cal
 import type { MeasureCode } from '../../src/core/measures/measure.ts';
 import { addBacksToReach } from './addBackPlans.ts';
 import type { Scenario } from './borrowerTable.ts';
-import { tightEarlyLevel } from './earlyLevel.ts';
 import type { DemoCovenant, DemoLevel } from './demoCovenant.ts';
 import type { DemoQuarter } from './demoLines.ts';
 import {
@@ -15,6 +14,7 @@ import {
   type LevelKind,
   type PastTest,
 } from './levelSchedule.ts';
+import { ordinaryLevels, type Usual } from './ordinaryLevels.ts';
 import type { RandomNumbers } from './randomNumbers.ts';
 import { currentRatio, interestCover, liquidity, netLeverage, totalLeverage } from './ratios.ts';
 
@@ -29,9 +29,6 @@ interface CovenantContext {
 }
 
 type ReadingOf = (quarters: readonly DemoQuarter[], index: number) => number | null;
-
-/** Lowest and highest level that a lender agrees to. */
-type Usual = readonly [number, number];
 
 /** What every borrower of the book may have; the others are further covenants of a few. */
 type OrdinaryMeasure = Extract<
@@ -197,50 +194,6 @@ function levelJustBelow(tests: readonly PastTest[], kind: LevelKind): number {
   if (!(room > 0.03 && room < 0.1)) throw new Error(`no round level near ${value}: ${level} leaves ${room}`);
   return level;
 }
-
-/** Their stories speak of past tests too. */
-const AGREED_WITH_ROOM: readonly Scenario[] = ['restated', 'covenant holiday'];
-
-/** Wide room now; before, wider still or, for a part of the book, tight at first and reset. A later step where room is left. */
-function ordinaryLevels(
-  tests: readonly PastTest[],
-  { kind, usual }: { readonly kind: LevelKind; readonly usual: Usual },
-  { scenario, nextQuarterEnd, random }: CovenantContext,
-): DemoLevel[] {
-  const valuesOf = (past: readonly PastTest[]): number[] =>
-    past.flatMap(({ value }) => (value === null ? [] : [value]));
-  const recent = valuesOf(tests.slice(-5));
-  const room = random.between(0.2, 0.34);
-  const now = within(usual, levelWithRoom(recent, room, kind));
-  const before = within(usual, levelWithRoom(valuesOf(tests), room, kind));
-  const looser = kind.isMaximum ? within(usual, Math.max(before, now + 0.5)) : Math.min(before, now);
-  const [first, from] = [tests[0], tests.at(-5)];
-  if (!first || !from) throw new RangeError('ordinary levels require five past tests');
-  const tight = AGREED_WITH_ROOM.includes(scenario)
-    ? null
-    : tightEarlyLevel(
-        {
-          seed: `${first.date} ${tests.map(({ value }) => value).join(' ')}`,
-          values: valuesOf(tests.slice(0, -5)),
-        },
-        kind,
-      );
-  const levels = schedule([
-    [first.date, tight ?? looser],
-    [from.date, now],
-  ]);
-  const tighter = now - 0.25;
-  const latest = recent.at(-1);
-  const mayTighten = kind.isMaximum && latest !== undefined && headroomShare(latest, tighter, kind) > 0.2;
-  const agreed = mayTighten ? withLaterStep(levels, addMonthsToMonthEnd(nextQuarterEnd, 9), tighter) : levels;
-  const isLoosened = tight !== null && (kind.isMaximum ? now > tight : now < tight);
-  return isLoosened
-    ? agreed.map((row) => (row.from === from.date ? { ...row, isReset: true } : row))
-    : agreed;
-}
-
-const within = ([lowest, highest]: Usual, level: number): number =>
-  Math.min(highest, Math.max(lowest, level));
 
 /** No level in force on the third and fourth test. */
 function withHoliday(levels: readonly DemoLevel[], tests: readonly PastTest[]): DemoLevel[] {
