@@ -171,4 +171,7 @@ test('words of movements and sizes', () => {
   );
   expect(sizesText({ salesFall: '0', workingCapitalLoss: '0', rateRise: '0' })).toBe('nothing moves');
   expect(wholeShare(0)).toBe('0\u00a0%');
+  expect(wholeShare(1e-9)).toBe('under 0.1\u00a0%');
+  expect(wholeShare(1 - 1e-9)).toBe('over 99.9\u00a0%');
+  expect(wholeShare(0.004)).toBe('0.4\u00a0%');
 });

@@ -3,6 +3,7 @@ import type { BreakEvenView, FirstNotMetView, ScenarioSizesView } from '../../co
 import type { Factor, ScenarioName } from '../../core/outlook/sensitivity.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { formatMoney, formatShare } from '../../core/money/print.ts';
+import { printOften } from '../../core/outlook/projectionWord.ts';
 
 /** Stands with every projection. */
 export const NO_FORECAST =
@@ -22,7 +23,7 @@ export const SCENARIO_NAMES: Readonly<Record<ScenarioName, string>> = {
 };
 
 /** "24 %": of counts, where tenths would pretend. */
-export const wholeShare = (share: number): string => formatShare(decimal(share), { places: 0 });
+export const wholeShare = (share: number): string => printOften(share);
 
 /** "2 quarters" */
 export const quartersText = (quarters: number): string =>

@@ -8,6 +8,7 @@ import { MEASURES } from '../measures/index.ts';
 import { decimal } from '../money/decimal.ts';
 import { formatShare } from '../money/print.ts';
 import type { ProjectedTest, Projection, TestToCome } from '../outlook/projection.ts';
+import { printOften } from '../outlook/projectionWord.ts';
 import { insteadOf } from './neededAmount.ts';
 import { liveTests, severityOn, type AlertContext, type AlertRule } from './rule.ts';
 import { testEvidence } from './testEvidence.ts';
@@ -42,9 +43,7 @@ export const headroomShrinking: AlertRule = (context) =>
             value: `${coming.notMet} of ${n} peer changes, ${borrowers} borrowers`,
           },
           { label: 'Peers', value: peers === 'book' ? 'the whole book' : peers },
-          ...(check === null
-            ? []
-            : [{ label: 'By its own tests alone', value: formatShare(decimal(check), { places: 0 }) }]),
+          ...(check === null ? [] : [{ label: 'By its own tests alone', value: printOften(check) }]),
         ],
       },
     ];
