@@ -6,7 +6,12 @@ import { decimal } from '../../src/core/money/decimal.ts';
 import { POLICY_VERSION_1, type Policy } from '../../src/core/policy.ts';
 import { closeDatabase } from '../../src/server/db/connection.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
-import { policyInForce, readPolicy, storedPolicy } from '../../src/server/db/repositories/policies.ts';
+import {
+  policyInForce,
+  policyOfVersion,
+  readPolicy,
+  storedPolicy,
+} from '../../src/server/db/repositories/policies.ts';
 import { execute } from '../../src/server/db/sql.ts';
 import { useOwnDatabase } from '../support/ownDatabase.ts';
 
