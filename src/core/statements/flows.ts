@@ -18,6 +18,15 @@ import { restatedAlone } from './versionMix.ts';
  */
 export type Presence = 'required' | 'optional';
 
+/** Names of routes under which a book keeps what was read; made once, since they are looked up for every figure. */
+const TWELVE_MONTHS: Readonly<Record<Presence, string>> = {
+  required: 'twelve months, required',
+  optional: 'twelve months, optional',
+};
+const FLOW_ROUTES: Readonly<Record<Presence, string[]>> = { required: [], optional: [] };
+const flowRoute = (months: number, presence: Presence): string =>
+  (FLOW_ROUTES[presence][months] ??= `${months} months, ${presence}`);
+
 const NONE: Reading = { kind: 'value', value: ZERO, inputs: [] };
 
 /**
@@ -69,7 +78,7 @@ export const flowOfMonths = (
   months: number,
   presence: Presence = 'required',
 ): Reading =>
-  book.kept(`${months} months, ${presence}`, line, periodEnd, () => {
+  book.kept(flowRoute(months, presence), line, periodEnd, () => {
     const direct = flowOver(book, line, periodEnd, months, presence);
     const intoYear = fiscalPosition(periodEnd, book.fiscalYearEndMonth).monthsIntoYear;
     if (direct.kind === 'value' || intoYear <= months) return direct;
@@ -109,7 +118,7 @@ export const lastTwelveMonths = (
   periodEnd: PlainDate,
   presence: Presence = 'required',
 ): Reading =>
-  book.kept(`twelve months, ${presence}`, line, periodEnd, () => {
+  book.kept(TWELVE_MONTHS[presence], line, periodEnd, () => {
     const yearToDate = byYearToDate(book, line, periodEnd, presence);
     const quarters = byQuarters(book, line, periodEnd, presence);
     const routes = [

@@ -17,12 +17,20 @@ export function lineInputs(
   statement: Statement,
   line: LineItemCode,
 ): readonly InputUsed[] | null {
-  if (line !== 'depreciation_and_amortisation') return cells(statement, [line]);
+  if (line !== 'depreciation_and_amortisation') return oneCell(statement, line);
   return (
     cells(statement, ['depreciation', 'amortisation']) ??
     cells(statement, ['depreciation_and_amortisation']) ??
     (book.isCarriedBy('amortisation', statement.periodEnd) ? null : cells(statement, ['depreciation']))
   );
+}
+
+function oneCell(
+  { id: statementId, periodEnd, months, amounts }: Statement,
+  line: LineItemCode,
+): readonly InputUsed[] | null {
+  const amount = amounts[line];
+  return amount ? [{ statementId, line, sign: 1, amount, periodEnd, months }] : null;
 }
 
 function cells(statement: Statement, lines: readonly LineItemCode[]): readonly InputUsed[] | null {

@@ -40,18 +40,23 @@ export interface SignedReading {
  * @example sumOfReadings([{ sign: 1, reading: { kind: 'value', value: decimal(84), inputs: [] } }, { sign: -1, reading: { kind: 'value', value: decimal(60), inputs: [] } }]).value // => 24
  */
 export function sumOfReadings(parts: readonly SignedReading[]): Reading {
-  const missing = parts.flatMap(({ reading }) => (reading.kind === 'missing' ? [reading.missing] : []));
-  if (missing.length > 0) return { kind: 'missing', missing: missing.flat() };
+  const missing: MissingLine[] = [];
   const inputs: InputUsed[] = [];
-  let value = ZERO;
+  let value: Decimal | null = null;
   let reason: string | null = null;
   for (const { sign, reading } of parts) {
-    if (reading.kind === 'missing') continue;
+    if (reading.kind === 'missing') {
+      missing.push(...reading.missing);
+      continue;
+    }
     for (const input of reading.inputs) inputs.push(withSign(input, sign));
     if (reading.kind === 'value') value = added(value, sign, reading.value);
     else reason ??= reading.reason;
   }
-  return reason === null ? { kind: 'value', value, inputs } : { kind: 'not-meaningful', reason, inputs };
+  if (missing.length > 0) return { kind: 'missing', missing };
+  return reason === null
+    ? { kind: 'value', value: value ?? ZERO, inputs }
+    : { kind: 'not-meaningful', reason, inputs };
 }
 
 /**
@@ -59,11 +64,20 @@ export function sumOfReadings(parts: readonly SignedReading[]): Reading {
  *
  * @example sumOfInputs([{ sign: 1, amount: decimal(84) }, { sign: -1, amount: decimal(60) }]) // => 24
  */
-export const sumOfInputs = (inputs: readonly InputUsed[]): Decimal =>
-  inputs.reduce((sum, { sign, amount, rate }) => added(sum, sign, rate ? amount.times(rate) : amount), ZERO);
+export function sumOfInputs(inputs: readonly InputUsed[]): Decimal {
+  let sum: Decimal | null = null;
+  for (const { sign, amount, rate } of inputs) sum = added(sum, sign, rate ? amount.times(rate) : amount);
+  return sum ?? ZERO;
+}
 
-const added = (sum: Decimal, sign: 1 | -1, amount: Decimal): Decimal =>
-  sign === 1 ? sum.plus(amount) : sum.minus(amount);
+/** The first amount is the sum, without adding it to nought: most lines have one. */
+function added(sum: Decimal | null, sign: 1 | -1, amount: Decimal): Decimal {
+  if (sum === null) return sign === 1 && !amount.isZero() ? amount : signed(sign, amount);
+  return sign === 1 ? sum.plus(amount) : sum.minus(amount);
+}
+
+const signed = (sign: 1 | -1, amount: Decimal): Decimal =>
+  sign === 1 ? ZERO.plus(amount) : ZERO.minus(amount);
 
 const withSign = (input: InputUsed, sign: 1 | -1): InputUsed =>
   sign === 1 ? input : { ...input, sign: input.sign === 1 ? -1 : 1 };

@@ -123,9 +123,9 @@ function keptReadings(): StatementBook['kept'] {
   const routes = new Map<string, Map<LineItemCode, Map<PlainDate, Reading>>>();
   return (route, line, date, read) => {
     let lines = routes.get(route);
-    if (!lines) routes.set(route, (lines = new Map()));
+    if (!lines) routes.set(route, (lines = new Map<LineItemCode, Map<PlainDate, Reading>>()));
     let readings = lines.get(line);
-    if (!readings) lines.set(line, (readings = new Map()));
+    if (!readings) lines.set(line, (readings = new Map<PlainDate, Reading>()));
     const known = readings.get(date);
     if (known) return known;
     const reading = read();
