@@ -21,7 +21,8 @@ const NOT_OF_THE_PRODUCT = [
 
 /** The lender and the agreement decide what a failed test is called. */
 const NOT_PRINTED = [/\bbreach/i, /events? of default/i, /\bin default\b/i, /\bfraud/i, /\bsnooz/i];
-const PRINTS = /^(src\/(components|content|pages|layouts|contracts|server\/(mail|sheets\/write|services))|seeders)\//;
+const PRINTS =
+  /^(src\/(components|content|pages|layouts|contracts|server\/(mail|sheets\/write|services))|seeders)\//;
 
 const found = (paths: readonly string[], words: readonly RegExp[]): string[] =>
   paths.flatMap((path) => {
