@@ -35,10 +35,10 @@ export const LATE: readonly Scenario[] = ['late', 'late within grace'];
 
 /** Behind the loans of hotels, a concession, and a works that nobody has had valued for long. */
 const PROPERTIES: Readonly<Record<string, TradingPlan['property']>> = {
-  'Pinevarra Resorts S.L.': { valueShare: 0.9, quartersBetweenValuations: 4, incomeShare: 0.85 },
+  'Pinevarra Resorts S.L.': { valueShare: 0.9, quartersBetweenValuations: 4, incomeShare: null },
   'Dunemorrel Hotels B.V.': { valueShare: 0.85, quartersBetweenValuations: 4, incomeShare: null },
-  'Nordvelle Tramway Concession Ltd': { valueShare: 1.1, quartersBetweenValuations: 4, incomeShare: 0.9 },
-  'Kaldermarrow Pressings Ltd': { valueShare: 0.8, quartersBetweenValuations: 16, incomeShare: null },
+  'Nordvelle Tramway Concession Ltd': { valueShare: 1.1, quartersBetweenValuations: 4, incomeShare: 0.25 },
+  'Kaldermarrow Pressings Ltd': { valueShare: 1.1, quartersBetweenValuations: 20, incomeShare: null },
 };
 
 interface BookDays {

@@ -48,7 +48,7 @@ export function CovenantBridge({
                 <Cell>
                   {row.sources.map((source, at) => (
                     <span key={`${source.statementId} ${source.line} ${source.sign}`}>
-                      {at > 0 && (source.sign === -1 ? ' less ' : ', ')}
+                      {at > 0 && (source.sign === row.sources[0]?.sign ? ', ' : ' less ')}
                       <a href={sourceHref(source.statementId, source.line)}>
                         {linkText(source, row.sources)}
                       </a>

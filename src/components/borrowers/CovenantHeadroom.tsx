@@ -24,14 +24,21 @@ export function CovenantHeadroom({ covenant }: { readonly covenant: CovenantView
 
 const share = (value: string | null) => (value === null ? 'n.m.' : formatShare(decimal(value)));
 
+/** 'Earnings may fall'; of a test without earnings what may move instead: 'Value may fall', 'Capital expenditure may rise'. */
+function roomLabel({ fallOf, measure }: CovenantView): string {
+  if (fallOf === 'earnings') return 'Earnings may fall';
+  const { subject, room } = MEASURES[measure].words;
+  return `${subject} ${room?.may ?? 'may fall'}`;
+}
+
 function headroomFacts(covenant: CovenantView) {
-  const { headroom, fallOf, roomInDeviations } = covenant;
+  const { headroom, roomInDeviations } = covenant;
   if (!headroom) return [];
   const money = (value: string | null) =>
     value === null ? 'n.m.' : `${covenant.currency} ${formatMoney(decimal(value))}`;
   return [
     {
-      label: fallOf === 'earnings' ? 'Earnings may fall' : 'Tested amount may fall',
+      label: roomLabel(covenant),
       value: share(headroom.mayFall),
     },
     { label: 'In money', value: money(headroom.moneyLeft) },
@@ -73,9 +80,7 @@ export function LaterLevels({ covenant }: { readonly covenant: CovenantView }) {
             <tr role="row">
               <HeadCell>From</HeadCell>
               <HeadCell>Limit</HeadCell>
-              <HeadCell numeric>
-                {covenant.fallOf === 'earnings' ? 'Earnings may fall' : 'Tested amount may fall'}
-              </HeadCell>
+              <HeadCell numeric>{roomLabel(covenant)}</HeadCell>
               <HeadCell numeric>In money</HeadCell>
               <HeadCell numeric>Share of level</HeadCell>
               <HeadCell numeric>{otherSideOf(covenant)} may rise</HeadCell>

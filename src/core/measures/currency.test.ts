@@ -105,8 +105,8 @@ describe('leverage in another currency', () => {
       'before add-backs 3.19x in EUR, 3.00x in GBP: the difference is the rates',
     ]);
     expect(rateLines(request.translation).map(({ label, note }) => `${label}: ${note ?? ''}`)).toEqual([
-      'closing rate of GBP in EUR on 31 Dec 2025: invented fixing',
-      'average rate of GBP in EUR over 12 months to 31 Dec 2025: invented fixing',
+      'Closing rate of GBP in EUR on 31 Dec 2025: invented fixing',
+      'Average rate of GBP in EUR over 12 months to 31 Dec 2025: invented fixing',
     ]);
   });
 

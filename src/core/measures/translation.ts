@@ -60,6 +60,8 @@ export const rateInWords = ({
     ? `closing rate of ${from} in ${to} on ${formatDay(periodEnd)}`
     : `average rate of ${from} in ${to} over ${months} months to ${formatDay(periodEnd)}`;
 
+const sentence = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+
 /**
  * The rates that were taken, each with its source, as lines under the way to the tested amount.
  *
@@ -67,7 +69,7 @@ export const rateInWords = ({
  */
 export const rateLines = ({ used }: Translation): readonly BridgeLine[] =>
   used().map((rate) => ({
-    label: rateInWords({ ...rate, months: monthsOf(rate) }),
+    label: sentence(rateInWords({ ...rate, months: monthsOf(rate) })),
     amount: rate.rate,
     kind: 'rate',
     inputs: [],
