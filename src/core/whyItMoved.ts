@@ -47,7 +47,7 @@ export interface Movement {
  * Every test, score and alert that stands otherwise than before, with what each cause added. `before.result` is as it
  * was stored, so that a change of method is seen: the earlier basis under today's method.
  *
- * @example whyItMoved({ basis: { inputs, crossSection, policy: POLICY_VERSION_1, asOf }, result: assessment }, { basis: { inputs, crossSection, policy: POLICY_VERSION_1, asOf }, result: assessment }) // => []
+ * @example whyItMoved({ basis: { inputs, crossSection, policy: POLICY_VERSION_1, asOf: '2026-11-30' }, result: assessment }, { basis: { inputs, crossSection, policy: POLICY_VERSION_1, asOf: '2026-11-30' }, result: assessment }) // => []
  */
 export function whyItMoved(
   before: { readonly basis: Basis; readonly result: Assessment },

@@ -3,7 +3,7 @@ import type { CovenantTest } from '../covenants/covenantTest.ts';
 import type { BridgeLine } from '../measures/bridge.ts';
 import { Decimal, decimal, ZERO } from '../money/decimal.ts';
 import { figureFormula } from './workedFigure.ts';
-import type { WorkedLine, WorkedRow } from './workedTest.ts';
+import type { WorkedLine, WorkedRow } from './worked.ts';
 
 /** Lines that stand beside the sum. */
 const BESIDE = ['check', 'rate'];
@@ -12,7 +12,7 @@ const BESIDE = ['check', 'rate'];
  * The bridge as formulas: figures out of statement lines, add-backs as recorded, what is over the cap out of the cap,
  * subtotals out of the rows above them.
  *
- * @example workedBridge(test, covenant, workedLines(test, [])).at(-1)?.label // => 'Net debt'
+ * @example workedBridge({ bridge: [] }, covenant, []) // => []
  */
 export function workedBridge(
   { bridge }: Pick<CovenantTest, 'bridge'>,

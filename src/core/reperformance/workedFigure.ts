@@ -3,7 +3,7 @@ import type { BridgeLine } from '../measures/bridge.ts';
 import { Decimal, decimal } from '../money/decimal.ts';
 import type { InputUsed } from '../statements/reading.ts';
 import { lineKey } from './workedLines.ts';
-import type { WorkedRow } from './workedTest.ts';
+import type { WorkedRow } from './worked.ts';
 
 /** A formula with what it comes to in decimals: the first that comes to the amount is the one. */
 export type Candidate = readonly [formula: string, value: Decimal | null];

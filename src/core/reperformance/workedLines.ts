@@ -2,17 +2,7 @@ import { decimal, type Decimal } from '../money/decimal.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { lineItem, type LineItemCode } from '../statements/lineItems.ts';
 import type { InputUsed } from '../statements/reading.ts';
-import type { WorkedLine } from './workedTest.ts';
-
-export interface SourceCell {
-  readonly statementId: number;
-  readonly line: LineItemCode;
-  readonly fileName: string | null;
-  readonly sha256: string | null;
-  readonly sheet: string;
-  readonly cell: string;
-  readonly rawText: string;
-}
+import type { SourceCell, WorkedLine } from './worked.ts';
 
 /** Units that sheets are kept in, and cents; either sign. */
 const POWERS = [0, 3, 6, 9, -2].map((power) => decimal(10).pow(power));

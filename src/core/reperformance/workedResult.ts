@@ -5,14 +5,14 @@ import type { Measure } from '../measures/measured.ts';
 import { Decimal, decimal } from '../money/decimal.ts';
 import type { Policy } from '../policy.ts';
 import type { Candidate } from './workedFigure.ts';
-import type { WorkedRow } from './workedTest.ts';
+import type { WorkedRow } from './worked.ts';
 
 /**
  * From the two sides to the outcome: ratio, headroom in every form, and the word.
  *
  * Spreadsheets count in binary: the compared figure is rounded to twelve decimals, or to the agreement's own.
  *
- * @example workedResult(test, covenant, POLICY_VERSION_1, workedBridge(test, covenant, workedLines(test, []))).map(({ key }) => key).slice(0, 3) // => ['numerator', 'denominator', 'level']
+ * @example workedResult(test, covenant, POLICY_VERSION_1, []).at(-1)?.value // => 'met'
  */
 export function workedResult(
   test: CovenantTest,

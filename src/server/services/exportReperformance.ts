@@ -6,7 +6,7 @@ import type { Covenant } from '../../core/covenants/covenant.ts';
 import type { CovenantTest } from '../../core/covenants/covenantTest.ts';
 import type { Decimal } from '../../core/money/decimal.ts';
 import { workedTest } from '../../core/reperformance/workedTest.ts';
-import type { SourceCell } from '../../core/reperformance/workedLines.ts';
+import type { SourceCell } from '../../core/reperformance/worked.ts';
 import { err, ok } from '../../core/result.ts';
 import { isLineItemCode } from '../../core/statements/lineItems.ts';
 import { countTry, REVIEW_EXPORTS } from '../auth/limits.ts';

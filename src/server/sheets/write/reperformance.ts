@@ -7,7 +7,7 @@ import type {
   WorkedLine,
   WorkedRow,
   WorkedTest,
-} from '../../../core/reperformance/workedTest.ts';
+} from '../../../core/reperformance/worked.ts';
 import { BORDERS, FONTS } from './cellStyle.ts';
 import { figureFormat, put, writtenDay, writtenText } from './cellValue.ts';
 import { pageSetup } from './printSetup.ts';
