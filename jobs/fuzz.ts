@@ -14,6 +14,7 @@ import { examplesIn } from './fuzz/examples.ts';
 import { fuzz, type FuzzResult } from './fuzz/run.ts';
 
 const FULL_RUN = 20_000;
+const SAID_EVERY = 1_000;
 const NOTHING_KNOWN: ReadingContext = {
   fiscalYearEndMonth: null,
   reportingCurrency: null,
@@ -46,6 +47,9 @@ if (!Number.isInteger(count) || count < 1 || !Number.isInteger(seed)) {
     (number) => seeded(seed * 1_000_003 + number),
     numbers,
     (bytes, name) => readWorkbook(bytes, name, NOTHING_KNOWN),
+    (done) => {
+      if (done % SAID_EVERY === 0) console.error(`${done} of ${numbers.length} files read`);
+    },
   );
   report(result, values.keep);
 }

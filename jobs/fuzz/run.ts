@@ -18,6 +18,8 @@ export interface FuzzResult {
   readonly failures: readonly FuzzFailure[];
 }
 
+/** Called after each file with how many have ended. */
+type Progress = (done: number) => void;
 type Read = (bytes: Buffer, name: string) => Promise<Reading>;
 /** As many as there are workers are read at once. */
 const AT_ONCE = 2;
@@ -27,9 +29,11 @@ export async function fuzz(
   randomOf: (number: number) => Random,
   numbers: readonly number[],
   read: Read,
+  progress: Progress = () => undefined,
 ): Promise<FuzzResult> {
   const ends = new Map<string, number>();
   const failures: FuzzFailure[] = [];
+  let done = 0;
   const waiting = [...numbers].reverse();
   const worker = async () => {
     for (let number = waiting.pop(); number !== undefined; number = waiting.pop()) {
@@ -38,6 +42,8 @@ export async function fuzz(
       const mutant = mutantOf(example, random);
       const { end, fault } = await endOf(mutant, read);
       ends.set(end, (ends.get(end) ?? 0) + 1);
+      done += 1;
+      progress(done);
       if (fault)
         failures.push({ number, file: mutant.name, how: mutant.how, what: fault, bytes: mutant.bytes });
     }

@@ -103,6 +103,28 @@ function eitherWay(first: number, second: number, year: number): DayFound | null
   return { end: null, either: { dmy, mdy } };
 }
 
+/**
+ * '30 September', 'September 30,': a day without a year. 'Sep 26' is a month of 2026, unless the number is the last
+ * day of that month; a month's name that stands alone is that month of a year said elsewhere.
+ */
+export function takeMonthDay(taking: Taking): { month: number; day: number | null } | null {
+  const alone = new RegExp(`^\\s*${MONTH}\\s*$`).exec(taking.rest);
+  if (alone) {
+    taking.rest = '';
+    return { month: monthOf(alone[1] ?? '') ?? 0, day: null };
+  }
+  const dayFirst = taking.take(`(?<!\\d[./-]?)${DAY}\\s*(?:de |of )?${MONTH}(?![\\s,./'’-]*\\d)`);
+  if (dayFirst) return { month: monthOf(dayFirst[2] ?? '') ?? 0, day: Number(dayFirst[1]) };
+  const named = new RegExp(`(?<![a-z0-9])${MONTH}\\s+(\\d{1,2})(,?)(?![\\d])`).exec(taking.rest);
+  const month = named ? monthOf(named[1] ?? '') : null;
+  if (!named || !month) return null;
+  const day = Number(named[2]);
+  const isLast = day === daysInMonth(2025, month) || day === daysInMonth(2024, month);
+  if (day > 31 || (!isLast && named[3] !== ',')) return null;
+  taking.rest = taking.rest.replace(named[0], ' ');
+  return { month, day };
+}
+
 export function takeMonth(taking: Taking): PlainDate | null {
   const named = taking.take(`${MONTH}[\\s,./-]*(?:de )?${YEAR}`) ?? null;
   if (named) return endOfMonth(fullYear(named[2] ?? ''), monthOf(named[1] ?? '') ?? 0);

@@ -61,7 +61,10 @@ function factOf(
   if (cell.kind !== 'amount' || cell.amount === null || row.code === null) return null;
   const months = run.part === 'balance' ? 0 : column.months;
   if (months === null) return null;
-  const sign = run.signed.factorOf(row.index, row.code) * signOfColour(cell, table, row, asking);
+  const sign =
+    run.signed.factorOf(row.index, row.code) *
+    signOfColour(cell, table, row, asking) *
+    (isTurned(table, run, row, asking) ? -1 : 1);
   const printed = run.amounts[row.index]?.[column.index] ?? cell.amount;
   const amount = printed.times(sign).times(scale.unit ?? 1);
   return {
@@ -107,6 +110,17 @@ const HIDDEN_KEY = 'hidden-rows';
 const colourKey = (table: StatementTable, row: PlacedRow): string =>
   `sign:${table.table.sheet.name}:${row.read.row.label}`;
 
+/** Payments of one cash flow, and losses of one statement, are written in one way: they are asked about once. */
+function signKey(table: StatementTable, run: Run, row: PlacedRow): string {
+  const sheet = table.table.sheet.name;
+  if (run.part === 'cash-flow') return `sign:${sheet}:payments`;
+  return run.signed.losses.has(row.index) ? `sign:${sheet}:losses` : `${colourKey(table, row)}:printed`;
+}
+
+const isTurned = (table: StatementTable, run: Run, row: PlacedRow, asking: Asking): boolean =>
+  run.signed.unsettled.has(row.index) &&
+  asking.questions.find(({ key }) => key === signKey(table, run, row))?.answer === 'negative';
+
 /** Lines that may be losses and are printed without a sign, some in red and some not. */
 function colourTellsSign(run: Run, row: PlacedRow): boolean {
   const cells = row.read.row.cells.filter(
@@ -135,8 +149,8 @@ function signQuestions(table: StatementTable, run: Run, row: PlacedRow, asking: 
     return [key];
   }
   if (!run.signed.unsettled.has(row.index)) return [];
-  const key = colourKey(table, row);
-  const { words, options } = run.part === 'income' ? OF_RESULT : OF_PAYMENT;
+  const key = signKey(table, run, row);
+  const { words, options } = run.part === 'cash-flow' ? OF_PAYMENT : OF_RESULT;
   asking.ask({
     key,
     kind: 'sign',

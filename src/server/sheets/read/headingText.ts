@@ -120,6 +120,7 @@ export function saysPeriod({ period, scenario, derived, priorYear }: HeadingText
   return (
     period.end !== null ||
     period.eitherDay !== null ||
+    period.monthDay !== null ||
     period.year !== null ||
     period.quarter !== null ||
     period.half !== null ||

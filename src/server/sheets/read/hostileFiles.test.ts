@@ -1,5 +1,5 @@
 /** A corpus of hostile files, made anew for each run: every one is refused, or read without harm, in time. */
-import { afterAll, expect, test } from 'vitest';
+import { afterAll, expect, test, vi } from 'vitest';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';
 import {
   incomeRows,
@@ -9,6 +9,9 @@ import {
   type RawPart,
 } from '../../../../tests/support/rawArchive.ts';
 import { readingPool, readWorkbook } from './readWorkbook.ts';
+
+/** Workers start slowly on a busy machine. */
+vi.setConfig({ testTimeout: 60_000 });
 
 const NOTHING_KNOWN: ReadingContext = {
   fiscalYearEndMonth: null,

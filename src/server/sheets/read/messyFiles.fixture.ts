@@ -1,7 +1,11 @@
 /** Ways in which borrowers' files are messy, and what is done with each. Common practice, no source. */
+import { vi } from 'vitest';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';
 import { gridWorkbook, type Typed, type TypedSheets } from '../../../../tests/support/gridWorkbook.ts';
 import { readWorkbook } from './readWorkbook.ts';
+
+/** Workers start slowly on a busy machine. */
+vi.setConfig({ testTimeout: 60_000 });
 
 export const NOTHING_KNOWN: ReadingContext = {
   fiscalYearEndMonth: null,

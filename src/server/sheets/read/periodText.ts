@@ -1,7 +1,13 @@
 /** What a heading says of its period, without knowing yet when the borrower's year ends. */
 import type { PlainDate } from '#core/calendar/plainDate.ts';
-import { fullYear, takeDay, takeMonth, takeSpan, Taking, YEAR } from './dayText.ts';
+import { fullYear, takeDay, takeMonth, takeMonthDay, takeSpan, Taking, YEAR } from './dayText.ts';
 import { plainText } from './plainWords.ts';
+
+/** A day or, with `day` null, a month, whose year stands elsewhere. */
+export interface MonthDay {
+  readonly month: number;
+  readonly day: number | null;
+}
 
 export interface PeriodText {
   /** The last day, where the heading names a day or a month. */
@@ -10,6 +16,7 @@ export interface PeriodText {
   readonly start: PlainDate | null;
   /** Both readings of a date such as 03/04/2026. */
   readonly eitherDay: { readonly dmy: PlainDate; readonly mdy: PlainDate } | null;
+  readonly monthDay: MonthDay | null;
   /** A length that the words state: 'three months', 'quarter ended', '52 weeks'. */
   readonly months: number | null;
   /** From the beginning of the financial year: 'YTD', 'cumulative'. */
@@ -46,7 +53,8 @@ export function readPeriodText(text: string): PeriodText {
   const span = takeSpan(taking);
   const day = span ? null : takeDay(taking);
   const length = takeLength(taking);
-  const month = span || day ? null : takeMonth(taking);
+  const monthDay = span || day ? null : takeMonthDay(taking);
+  const month = span || day || monthDay ? null : takeMonth(taking);
   const part = takePart(taking);
   const year = span || day?.end || day?.either || month ? null : takeYear(taking);
   const fiscal = part?.fiscal === true || year?.fiscal === true;
@@ -54,6 +62,7 @@ export function readPeriodText(text: string): PeriodText {
     end: span?.end ?? day?.end ?? month,
     start: span?.start ?? null,
     eitherDay: day?.either ?? null,
+    monthDay,
     months: weeks ? weeksToMonths(Number(weeks[1])) : (length.months ?? span?.months ?? null),
     yearToDate: length.yearToDate,
     quarter: part?.quarter ?? null,
@@ -81,6 +90,9 @@ function takeLength(taking: Taking): { months: number | null; yearToDate: boolea
   const yearToDate =
     taking.take('ytd|year[ -]to[ -]date|cumul\\w*|kumuliert|kum\\.?|acumulad[oa]|a date|lopende jaar') !==
     null;
+  if (taking.take('mtd|month[ -]to[ -]date')) return { months: 1, yearToDate };
+  // As long as the quarter is old: the figures or the analyst say how long.
+  taking.take('qtd|quarter[ -]to[ -]date');
   const counted = taking.take(`(\\d{1,2}|${[...NUMBER_WORDS.keys()].join('|')})[ -]?(?:${MONTH_UNIT})`);
   if (counted) {
     const count = NUMBER_WORDS.get(counted[1] ?? '') ?? Number(counted[1]);

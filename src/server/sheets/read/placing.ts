@@ -3,6 +3,7 @@ import { decimal, type Decimal } from '#core/money/decimal.ts';
 import { lineItem, LINE_ITEMS, type LineItemCode } from '#core/statements/lineItems.ts';
 import type { Question } from '#core/statements/workbookReading.ts';
 import type { Asking } from './asking.ts';
+import { droppedRows } from './droppedRows.ts';
 import { nearLines, type Part } from './labels.ts';
 import { isOverheads, provenLine } from './provenTotals.ts';
 import type { ReadRow } from './rows.ts';
@@ -26,11 +27,13 @@ const MATERIAL_SHARE = decimal('0.01');
 const MATERIAL_SHARE_OF_CASH = decimal('0.1');
 /** Likeness from which a wording is taken for a misspelt or longer known one, if sums bear it out. */
 const LIKE_ENOUGH = 0.85;
+/** Likeness from which an open label may belong to a line that has rows already. */
+const NEAR = 0.6;
 
 export function placeRows(table: StatementTable, run: Run, asking: Asking): PlacedRow[] {
   const dropped = droppedRows(run);
   const reference = referenceOf(run);
-  return run.rows.map((read, index) => {
+  const placed = run.rows.map((read, index) => {
     const done = (
       code: LineItemCode | null,
       reason: string,
@@ -52,6 +55,23 @@ export function placeRows(table: StatementTable, run: Run, asking: Asking): Plac
     if (isOverheads(run, index)) return done('sga', 'overheads, in one total of the rows above');
     if (read.line !== null) return done(null, 'goes into totals, no standard line of its own');
     return placeUnknown(table, run, read, index, reference, asking, done);
+  });
+  return withOpenNeighbours(placed);
+}
+
+/** 'Revenue from South' may be more of 'Revenue': until it is placed, that line is not known whole. */
+function withOpenNeighbours(placed: readonly PlacedRow[]): PlacedRow[] {
+  const open = placed.flatMap(({ read, code, waitsFor }) => {
+    const [key] = waitsFor;
+    if (code !== null || key === undefined || read.part === null) return [];
+    const near = nearLines(read.row.label, read.part, read.section).filter(
+      ({ likeness }) => likeness >= NEAR,
+    );
+    return near.map(({ line }) => ({ key, line }));
+  });
+  return placed.map((row) => {
+    const keys = open.filter(({ line }) => line === row.code).map(({ key }) => key);
+    return keys.length > 0 ? { ...row, waitsFor: [...row.waitsFor, ...keys] } : row;
   });
 }
 
@@ -188,71 +208,4 @@ function optionsFor(part: Part, near: readonly Line[]): Question['options'] {
     ...codes.map((code) => ({ value: code, label: lineItem(code).label })),
     { value: LEAVE_OUT, label: 'No line: leave it out' },
   ];
-}
-
-/** Rows that would count twice, with the reason. */
-function droppedRows(run: Run): Map<number, string> {
-  const dropped = new Map<number, string>();
-  const { sums, contradicted } = run.signed.sums;
-  run.rows.forEach((read, index) => {
-    if (read.ofWhich) dropped.set(index, 'already in the row above');
-    if (contradicted.has(index))
-      dropped.set(index, 'does not agree with its parts, which the wider total proves');
-  });
-  for (const [index, parts] of [...sums, ...totalsAbove(run)]) dropForSum(run, index, parts, dropped);
-  dropRepeatedTotals(run, dropped);
-  return dropped;
-}
-
-function dropForSum(run: Run, index: number, parts: readonly number[], dropped: Map<number, string>): void {
-  const line = isOverheads(run, index) ? 'sga' : (run.rows[index]?.line ?? null);
-  if (!isStandardLine(line) || isSubtotal(line)) return;
-  const others = parts.filter(
-    (part) => isStandardLine(run.rows[part]?.line ?? null) && run.rows[part]?.line !== line,
-  );
-  if (others.length > 0) dropped.set(index, 'a total of the rows that are placed one by one');
-  else for (const part of parts) dropped.set(part, `in the total '${run.rows[index]?.row.label ?? ''}'`);
-}
-
-/** A total that stands above its parts, which are set in below it. */
-function totalsAbove(run: Run): Map<number, number[]> {
-  const found = new Map<number, number[]>();
-  run.rows.forEach((read, index) => {
-    if (!read.hasAmounts || isSubtotal(read.line)) return;
-    const parts: number[] = [];
-    for (let at = index + 1; at < run.rows.length; at += 1) {
-      const below = run.rows[at];
-      if (!below?.hasAmounts || below.row.indent <= read.row.indent) break;
-      parts.push(at);
-    }
-    if (parts.length >= 2 && addUp(run, index, parts)) found.set(index, parts);
-  });
-  return found;
-}
-
-function addUp(run: Run, index: number, parts: readonly number[]): boolean {
-  const tolerance = run.step.times(parts.length + 1).div(2);
-  const wanted = run.amounts[index] ?? [];
-  if (wanted.every((amount) => amount === null || amount.isZero())) return false;
-  return wanted.every((amount, column) => {
-    if (amount === null) return true;
-    const sum = parts.reduce((total, part) => total.plus(run.amounts[part]?.[column] ?? 0), decimal(0));
-    return sum.minus(amount).abs().lte(tolerance);
-  });
-}
-
-/** The same total twice: the first, or the wider one where the second holds the first. */
-function dropRepeatedTotals(run: Run, dropped: Map<number, string>): void {
-  const first = new Map<Line, number>();
-  run.rows.forEach((read, index) => {
-    if (!read.line || !isSubtotal(read.line) || !read.hasAmounts || dropped.has(index)) return;
-    const before = first.get(read.line);
-    if (before === undefined) {
-      first.set(read.line, index);
-      return;
-    }
-    const holdsFirst = run.signed.sums.sums.get(index)?.includes(before) === true;
-    dropped.set(holdsFirst ? before : index, 'the same total stands twice');
-    if (holdsFirst) first.set(read.line, index);
-  });
 }

@@ -16,6 +16,7 @@ const TOTALS: readonly {
     needs: ['ebit', 'interest_expense'],
     allows: ['interest_income', 'net_finance_result', 'other_non_operating'],
   },
+  { line: 'ppe_net', needs: ['ppe_gross', 'accumulated_depreciation'], allows: [] },
   { line: 'total_assets', needs: ['current_assets', 'total_non_current_assets'], allows: [] },
   { line: 'total_liabilities', needs: ['current_liabilities', 'total_non_current_liabilities'], allows: [] },
 ];

@@ -1,9 +1,12 @@
-import { afterAll, describe, expect, test } from 'vitest';
+import { afterAll, describe, expect, test, vi } from 'vitest';
 import { decimal } from '#core/money/decimal.ts';
 import type { Reading, ReadingContext } from '#core/statements/workbookReading.ts';
 import { tyingPeriod } from '../../../../tests/support/tyingFigures.ts';
 import { buildWorkbook, type BorrowerWorkbook } from '../../../../tests/support/workbooks.ts';
 import { readingPool, readWorkbook } from './readWorkbook.ts';
+
+/** Workers start slowly on a busy machine. */
+vi.setConfig({ testTimeout: 60_000 });
 
 const NOTHING_KNOWN: ReadingContext = {
   fiscalYearEndMonth: null,

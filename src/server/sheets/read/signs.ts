@@ -25,6 +25,8 @@ export interface Signed {
   readonly factorOf: (index: number, line: Line | null) => 1 | -1;
   /** Rows whose sign neither the block nor a sum settles. */
   readonly unsettled: ReadonlySet<number>;
+  /** Rows that are losses by their words. */
+  readonly losses: ReadonlySet<number>;
   readonly costsNegative: boolean;
   readonly liabilitiesNegative: boolean;
 }
@@ -109,7 +111,7 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
   const attempt = (costsNegative: boolean) =>
     findSums(
       rows.map((row, at) => {
-        const free = row.line === null || FREE_SIGNS.has(row.line);
+        const free = row.line === null || FREE_SIGNS.has(row.line) || (isSubtotal(row.line) && saysLoss(row));
         return sumRow(row, values[at] ?? [], isCost(row.line) && !costsNegative ? -1 : 1, free, rows[at - 1]);
       }),
       step,
@@ -124,11 +126,22 @@ function signIncome(rows: readonly ReadRow[], printed: Values, step: Decimal): S
       const contribution = sums.signs.get(index) ?? (isCost(line) && !costsNegative ? -1 : 1);
       return (turned * (isCost(line) ? -contribution : contribution)) as 1 | -1;
     },
+    losses: lossesOf(rows),
     unsettled: unsettledOfIncome(rows, values, sums, costsNegative),
     costsNegative: costsNegative && turned === 1,
     liabilitiesNegative: false,
   };
 }
+
+/** 'Loss for the period', 'Jahresfehlbetrag', 'Verlustvortrag': a loss by its words alone, with or without a minus. */
+const saysLoss = ({ row: { label } }: ReadRow): boolean =>
+  /loss|verlust|fehlbetrag|perte|p[ée]rdida|d[ée]ficit/i.test(label) &&
+  !/profit|gewinn|[üu]berschuss|ueberschuss|b[ée]n[ée]fice|beneficio|gain|income|result|earnings|ganancia|impair|before|\bof\b.*value|credit/i.test(
+    label.replace(/before tax(?:es|ation)?|before interest|for the/gi, ''),
+  );
+
+const lossesOf = (rows: readonly ReadRow[]): ReadonlySet<number> =>
+  new Set(rows.flatMap((row, at) => (saysLoss(row) ? [at] : [])));
 
 /** Gains by their own words; 'Exceptional items' and 'Restructuring costs' may be written either way. */
 const SAYS_GAIN = /income|gain|profit|ertr[äa]g|produit|ingreso|beneficio/i;
@@ -148,6 +161,7 @@ function unsettledOfIncome(
       const filled = (values[at] ?? []).filter((value) => value !== null && !value.isZero());
       if (sums.signs.has(at) || filled.length === 0 || row.line === null || row.ofWhich) return [];
       const isNegative = filled.every((value) => value?.isNegative());
+      if (isSubtotal(row.line)) return saysLoss(row) && !isNegative ? [at] : [];
       if (row.line === 'other_non_operating') {
         return !isNegative && !SAYS_GAIN.test(row.row.label) ? [at] : [];
       }
@@ -166,6 +180,13 @@ function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): 
     );
   };
   const saysUsed = (row: ReadRow) => /used|outflow|abfluss|utilis/i.test(row.row.label);
+  const onlyUsed = (row: ReadRow) =>
+    saysUsed(row) && !/inflow|from|provided|generated|[(/]\s*(?:used|outflow)|zufluss/i.test(row.row.label);
+  const usedWithoutMinus = (row: ReadRow, at: number) =>
+    row.line !== null &&
+    onlyUsed(row) &&
+    (values[at] ?? []).some((value) => value !== null && !value.isZero()) &&
+    (values[at] ?? []).every((value) => value === null || !value.isNegative());
   const sums = findSums(
     rows.map((row, at) => {
       const free = row.line === null || positiveOutflow(at) || (saysUsed(row) && isSubtotal(row.line));
@@ -174,20 +195,32 @@ function signCashFlow(rows: readonly ReadRow[], values: Values, step: Decimal): 
     step,
   );
   const unsettled = new Set(
-    rows.flatMap((_, at) => (positiveOutflow(at) && !sums.signs.has(at) ? [at] : [])),
+    rows.flatMap((row, at) =>
+      (positiveOutflow(at) || usedWithoutMinus(row, at)) && !sums.signs.has(at) ? [at] : [],
+    ),
   );
   return {
     sums,
     factorOf: (index) => sums.signs.get(index) ?? 1,
+    losses: new Set(),
     unsettled,
     costsNegative: false,
     liabilitiesNegative: false,
   };
 }
 
+const isLossOfEquity = (row: ReadRow): boolean => row.line === 'retained_earnings' && saysLoss(row);
+
+const isPositive = (values: readonly (Decimal | null)[] = []): boolean =>
+  values.some((value) => value !== null && !value.isZero()) &&
+  values.every((value) => value === null || !value.isNegative());
+
 function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): Signed {
   const sums = findSums(
-    rows.map((row, at) => sumRow(row, values[at] ?? [], 1, false, rows[at - 1])),
+    rows.map((row, at) => {
+      const free = row.line === 'accumulated_depreciation' || isLossOfEquity(row);
+      return sumRow(row, values[at] ?? [], 1, free, rows[at - 1]);
+    }),
     step,
   );
   const of = (lines: ReadonlySet<Line>) =>
@@ -200,8 +233,17 @@ function signBalance(rows: readonly ReadRow[], values: Values, step: Decimal): S
     ((liabilitiesNegative && LIABILITY_LINES.has(line)) || (equityNegative && EQUITY_LINES.has(line)));
   return {
     sums,
-    factorOf: (_index, line) => (flips(line) ? -1 : 1),
-    unsettled: new Set(),
+    factorOf: (index, line) => {
+      const row = rows[index];
+      if (row && isLossOfEquity(row) && !equityNegative) return sums.signs.get(index) ?? 1;
+      return flips(line) ? -1 : 1;
+    },
+    losses: lossesOf(rows),
+    unsettled: new Set(
+      rows.flatMap((row, at) =>
+        isLossOfEquity(row) && isPositive(values[at]) && !sums.signs.has(at) ? [at] : [],
+      ),
+    ),
     costsNegative: false,
     liabilitiesNegative,
   };

@@ -6,6 +6,7 @@ import type { Asking } from './asking.ts';
 import { cellName, type SheetGrid } from './cells.ts';
 import { columnWords, titlePeriod, type ColumnWords } from './columns.ts';
 import { oriented } from './orientation.ts';
+import { withWholeDays } from './monthDays.ts';
 import type { PeriodText } from './periodText.ts';
 import type { ColumnPeriod } from './periods.ts';
 import { readRows, type ReadRow } from './rows.ts';
@@ -49,13 +50,14 @@ export function statementTables(sheet: SheetGrid, asking: Asking): StatementTabl
 }
 
 function statementTable(table: Table, asking: Asking): StatementTable {
-  const columns = columnWords(table);
+  const title = titlePeriod(table);
+  const columns = withWholeDays(columnWords(table), title);
   const rows = readRows(table, (row) => answeredLine(table, row, asking));
   const counted = columns.filter(({ role, scenario }) => role === 'period' && scenario === 'actual');
   return {
     table,
     columns,
-    title: titlePeriod(table),
+    title,
     scale: tableScale(table),
     runs: runsOf(rows, counted),
     isTrialBalance:

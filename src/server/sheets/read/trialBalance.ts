@@ -171,6 +171,7 @@ const emptyRun = (part: Part): Run => ({
     sums: { signs: new Map(), sums: new Map(), untied: new Map(), contradicted: new Set() },
     factorOf: () => 1,
     unsettled: new Set(),
+    losses: new Set(),
     costsNegative: false,
     liabilitiesNegative: false,
   },

@@ -11,6 +11,7 @@ import { READY, type ReadingAnswer, type ReadingJob } from './readingJob.ts';
 const WORKERS = 2;
 export const READING_LIMIT_MILLISECONDS = 5_000;
 const MEMORY_MEGABYTES = 256;
+const YOUNG_MEMORY_MEGABYTES = 64;
 
 /** How a file's turn ended without a reading, by the file's own doing. */
 export type ReadingEnd = 'took-too-long' | 'out-of-memory';
@@ -67,7 +68,10 @@ export class ReadingPool {
 
   private newSeat(): Seat {
     const worker = new Worker(join(programFolder(), 'src/server/sheets/workers/boot.mjs'), {
-      resourceLimits: { maxOldGenerationSizeMb: MEMORY_MEGABYTES },
+      resourceLimits: {
+        maxOldGenerationSizeMb: MEMORY_MEGABYTES,
+        maxYoungGenerationSizeMb: YOUNG_MEMORY_MEGABYTES,
+      },
       execArgv: [],
       name: 'reading',
     });

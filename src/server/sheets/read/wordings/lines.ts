@@ -17,6 +17,7 @@ export const HELPER_LINES = [
   'assets_less_current_liabilities',
   'total_debt',
   'net_debt',
+  'accumulated_depreciation',
   'share_capital',
   'other_equity',
   'minority_interests',
