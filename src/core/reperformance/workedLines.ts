@@ -1,6 +1,6 @@
 import { decimal, type Decimal } from '../money/decimal.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
-import { lineItem, type LineItemCode } from '../statements/lineItems.ts';
+import { lineItem } from '../statements/lineItems.ts';
 import type { InputUsed } from '../statements/reading.ts';
 import type { SourceCell, WorkedLine } from './worked.ts';
 
