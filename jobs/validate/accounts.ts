@@ -5,53 +5,15 @@ import type { FirmPlan } from './firmPlan.ts';
 import { financeQuarter } from './finance.ts';
 import { fixedAssetsQuarter, restingIntangibles, type FixedAssets } from './fixedAssets.ts';
 import { addedTo, NOTHING_LIFTED, quarterlyLift, type Lift, type Lifted } from './lifting.ts';
+import {
+  totalAssetsOf,
+  totalLiabilitiesOf,
+  workingCapitalOf,
+  type Balances,
+  type Flows,
+  type QuarterAccounts,
+} from './statements.ts';
 import type { TradingQuarter } from './trading.ts';
-
-/** Closing balances. */
-export interface Balances {
-  readonly cash: number;
-  readonly receivables: number;
-  readonly inventory: number;
-  readonly otherAssets: number;
-  readonly ppeGross: number;
-  readonly ppeNet: number;
-  readonly intangibles: number;
-  readonly goodwill: number;
-  readonly payables: number;
-  readonly accrued: number;
-  readonly taxPayable: number;
-  readonly shortTermDebt: number;
-  readonly seniorDebt: number;
-  readonly paidInCapital: number;
-  readonly retainedEarnings: number;
-}
-
-/** Flows of one quarter, paid items positive. */
-export interface Flows {
-  readonly revenue: number;
-  readonly costOfSales: number;
-  readonly overheads: number;
-  readonly depreciation: number;
-  readonly amortisation: number;
-  readonly impairment: number;
-  readonly interest: number;
-  readonly tax: number;
-  readonly netIncome: number;
-  readonly cfo: number;
-  readonly taxPaid: number;
-  readonly capex: number;
-  readonly capitalisedCosts: number;
-  readonly acquisitionsPaid: number;
-  readonly debtDrawn: number;
-  readonly debtRepaid: number;
-  readonly dividends: number;
-  readonly equityIssued: number;
-}
-
-export interface QuarterAccounts {
-  readonly flows: Flows;
-  readonly balances: Balances;
-}
 
 /** What goes on from quarter to quarter beside the balances. */
 export interface AccountsState {
@@ -63,22 +25,6 @@ export interface AccountsState {
 
 const TAX_RATE = 0.25;
 const INTEREST_PER_QUARTER = 0.016;
-
-export const currentAssetsOf = (at: Balances): number =>
-  at.cash + at.receivables + at.inventory + at.otherAssets;
-export const totalAssetsOf = (at: Balances): number =>
-  currentAssetsOf(at) + at.ppeNet + at.intangibles + at.goodwill;
-export const currentLiabilitiesOf = (at: Balances): number =>
-  at.payables + at.accrued + at.taxPayable + at.shortTermDebt;
-export const totalLiabilitiesOf = (at: Balances): number => currentLiabilitiesOf(at) + at.seniorDebt;
-export const equityOf = (at: Balances): number => at.paidInCapital + at.retainedEarnings;
-
-type WorkingCapital = Pick<
-  Balances,
-  'receivables' | 'inventory' | 'otherAssets' | 'payables' | 'accrued' | 'taxPayable'
->;
-export const workingCapitalOf = (at: WorkingCapital): number =>
-  at.receivables + at.inventory + at.otherAssets - at.payables - at.accrued - at.taxPayable;
 
 /** A firm at rest, before its first quarter: equity is what is left. */
 export function openingAccounts(plan: FirmPlan, trading: TradingQuarter): AccountsState {

@@ -14,7 +14,7 @@ import {
   type Balances,
   type Flows,
   type QuarterAccounts,
-} from './accounts.ts';
+} from './statements.ts';
 import { LAST } from './firmPlan.ts';
 import type { Firm } from './statementBook.ts';
 

@@ -1,4 +1,4 @@
-import { equityOf, totalAssetsOf, type Balances } from './accounts.ts';
+import { equityOf, totalAssetsOf, type Balances } from './statements.ts';
 import type { TradingQuarter } from './trading.ts';
 
 export interface Finance {

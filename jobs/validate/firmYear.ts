@@ -9,7 +9,7 @@ import {
   type Balances,
   type Flows,
   type QuarterAccounts,
-} from './accounts.ts';
+} from './statements.ts';
 
 export interface FirmYear {
   readonly flows: Flows;

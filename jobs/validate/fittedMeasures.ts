@@ -2,7 +2,7 @@
 import { jonesModel, type JonesFirm, type JonesModel } from '#core/accruals/jones.ts';
 import { realActivities, type RealActivitiesFirm } from '#core/accruals/realActivities.ts';
 import { clamp, winsorLimits } from '#core/statistics/winsorise.ts';
-import { totalAssetsOf } from './accounts.ts';
+import { totalAssetsOf } from './statements.ts';
 import { firmYear, type FirmYear } from './firmYear.ts';
 import type { Measured } from './ownMeasures.ts';
 import type { Firm } from './statementBook.ts';

@@ -1,5 +1,5 @@
 import type { Acquired } from './acquisition.ts';
-import type { Balances } from './accounts.ts';
+import type { Balances } from './statements.ts';
 import type { Draws } from './draws.ts';
 import type { FirmPlan } from './firmPlan.ts';
 import type { Lift } from './lifting.ts';

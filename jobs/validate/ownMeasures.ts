@@ -18,7 +18,7 @@ import {
   type Balances,
   type Flows,
   type QuarterAccounts,
-} from './accounts.ts';
+} from './statements.ts';
 import {
   averageAssets,
   beneishYear,

@@ -1,8 +1,9 @@
 /** A simulated book: six hundred firms with their accounts of twenty-four quarters. */
-import { accountsQuarter, openingAccounts, type QuarterAccounts } from './accounts.ts';
+import { accountsQuarter, openingAccounts } from './accounts.ts';
 import { drawsOf, nextOf, type Draws } from './draws.ts';
 import { firmPlans, QUARTERS, type FirmPlan } from './firmPlan.ts';
 import { SECTORS } from './sectorProfiles.ts';
+import type { QuarterAccounts } from './statements.ts';
 import { RUN_IN, startOfTrading, tradingQuarter } from './trading.ts';
 
 export interface Firm {
