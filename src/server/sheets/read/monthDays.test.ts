@@ -47,14 +47,16 @@ test('a balance date gives its day to the column of its own year only', async ()
 });
 
 test('months below a year are taken in their order, and a month to date is one month', async () => {
-  const months = [['2026'], ...income(['Jan', 'Feb', 'Mar'], [100, 110, 120])];
+  const months = [['Management accounts 2026'], ...income(['Jan', 'Feb', 'Mar'], [100, 110, 120])];
   const reading = await read({ PnL: months });
   expect(kinds(reading)).toEqual(['period-length']);
   const key = reading.questions[0]?.key ?? '';
   expect(figures(await read({ PnL: months }, { answers: { [key]: 'each:1' } }))).toHaveProperty([
     'revenue 2026-02-28 1',
   ]);
-  const wrapped = await read({ PnL: [['2026'], ...income(['Nov', 'Dec', 'Jan'], [100, 110, 120])] });
+  const wrapped = await read({
+    PnL: [['Management accounts 2026'], ...income(['Nov', 'Dec', 'Jan'], [100, 110, 120])],
+  });
   expect(wrapped.facts).toEqual([]);
   const toDate = await read({ PnL: income(['Sep 2026 MTD'], [100]) });
   expect(figures(toDate)).toHaveProperty(['revenue 2026-09-30 1']);
