@@ -5,11 +5,11 @@ import type { RawPart } from './rawArchive.ts';
 export function partsOfArchive(bytes: Buffer): Promise<{ name: string; content: Buffer }[]> {
   return new Promise((resolve, reject) => {
     yauzl.fromBuffer(bytes, { lazyEntries: true }, (error, zip) => {
-      if (!zip) return reject(error);
+      if (!zip) return reject(error ?? new Error('the archive cannot be opened'));
       const parts: (RawPart & { content: Buffer })[] = [];
       zip.on('entry', (entry: yauzl.Entry) => {
         zip.openReadStream(entry, (fault, stream) => {
-          if (!stream) return reject(fault);
+          if (!stream) return reject(fault ?? new Error(`${entry.fileName} cannot be unpacked`));
           const chunks: Buffer[] = [];
           stream.on('data', (chunk: Buffer) => chunks.push(chunk));
           stream.once('error', reject);
