@@ -52,7 +52,8 @@ async function prepare() {
     // Recalculates the workbooks whose formulas are held against the product's figures.
     ...(existsSync('/usr/bin/soffice') ? [] : ['libreoffice-calc-nogui']),
   ];
-  if (missing.length > 0) await installPackages(missing, 'the database, browser and spreadsheet program of the tests', say);
+  if (missing.length > 0)
+    await installPackages(missing, 'the database, browser and spreadsheet program of the tests', say);
 }
 
 async function runChecks() {

@@ -17,7 +17,7 @@ const over = (numerator: number, denominator: number): number | null =>
 const ebitdaOf = (quarters: readonly DemoQuarter[], index: number): number =>
   yearEbitda(quarters, index) ?? Number.NaN;
 
-export const seniorDebt = (quarters: readonly DemoQuarter[], index: number): number =>
+const seniorDebt = (quarters: readonly DemoQuarter[], index: number): number =>
   at(quarters, index, 'short_term_debt') + at(quarters, index, 'senior_debt');
 
 export const seniorLeverage: ReadingOf = (quarters, index) =>

@@ -43,7 +43,7 @@ export function breakEvenText(factor: Factor, found: BreakEvenView): string {
 }
 
 /** Rates move by points of the debt a year, everything else by a share of itself. */
-export const moveText = (factor: Factor, share: string): string =>
+const moveText = (factor: Factor, share: string): string =>
   factor === 'rates' ? `${decimal(share).times(100).toFixed(1)} points` : formatShare(decimal(share));
 
 export const moneyText = (amount: string | null): string | null =>

@@ -17,7 +17,7 @@ import { levelInForce, type LevelInForce } from './levels.ts';
  *
  * @example capexLimit({ ownYear: decimal(10), unusedLastYear: decimal(4), carriedShare: decimal('0.5') }) // => 12
  */
-export const capexLimit = ({
+const capexLimit = ({
   ownYear,
   unusedLastYear,
   carriedShare,
@@ -32,7 +32,7 @@ export const capexLimit = ({
  *
  * @example minimumWithProfits({ base: decimal(40), share: decimal('0.5'), netIncomes: [decimal(6), decimal(-3)] }) // => 43
  */
-export const minimumWithProfits = ({
+const minimumWithProfits = ({
   base,
   share,
   netIncomes,

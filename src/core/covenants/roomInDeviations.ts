@@ -16,7 +16,7 @@ const CHANGES = 8;
  *
  * @example earningsDeviation(book, '2026-09-30') // => null
  */
-export function earningsDeviation(book: StatementBook, date: PlainDate): Decimal | null {
+function earningsDeviation(book: StatementBook, date: PlainDate): Decimal | null {
   const earnings = Array.from(
     { length: CHANGES + 1 },
     (_, quarters) => ebitdaOfTwelveMonths(book, monthsBefore(date, 3 * quarters)).ebitda,

@@ -27,7 +27,7 @@ const LEASES: DebtLine = { line: 'lease_liabilities', label: 'Lease liabilities'
  *
  * @example netDebt({ debt: decimal(40), cash: decimal(6), restrictedCash: ZERO, cashCap: decimal(5) }) // => 35
  */
-export function netDebt({
+function netDebt({
   debt,
   cash,
   restrictedCash,

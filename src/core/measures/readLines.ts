@@ -113,7 +113,7 @@ export function atAverageOfMonths(request: MeasureRequest, amount: Value): Readi
  *
  * @example isForeign(request, []) // => false
  */
-export const isForeign = (request: MeasureRequest, inputs: readonly InputUsed[]): boolean =>
+const isForeign = (request: MeasureRequest, inputs: readonly InputUsed[]): boolean =>
   request.book.currency !== request.translation.currency &&
   inputs.some((input) => currencyOf(request, input) !== request.translation.currency);
 

@@ -12,7 +12,7 @@ export interface Blow {
   readonly interest: Decimal;
 }
 
-export const NO_BLOW: Blow = { earnings: ZERO, cash: ZERO, interest: ZERO };
+const NO_BLOW: Blow = { earnings: ZERO, cash: ZERO, interest: ZERO };
 
 /** Where missing cash shows; what is owed grows only by what cash does not cover. */
 type CashShows = 'net debt' | 'debt' | 'numerator' | 'net worth below' | null;

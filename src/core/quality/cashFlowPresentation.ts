@@ -6,7 +6,7 @@ import type { Statement } from '../statements/statement.ts';
  *
  * @example isUnderNewPresentation({ ...statements[0], framework: 'IFRS 18' }) // => true
  */
-export const isUnderNewPresentation = ({ framework }: Pick<Statement, 'framework'>): boolean =>
+const isUnderNewPresentation = ({ framework }: Pick<Statement, 'framework'>): boolean =>
   /IFRS\s*18/i.test(framework);
 
 /**

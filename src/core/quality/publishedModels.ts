@@ -29,7 +29,7 @@ const FEWEST_DEGREES_OF_FREEDOM = 6;
 const WINSOR_TAIL = 0.01;
 
 export type PublishedModel = keyof typeof MODELS;
-export const PUBLISHED_MODELS = Object.keys(MODELS) as readonly PublishedModel[];
+const PUBLISHED_MODELS = Object.keys(MODELS) as readonly PublishedModel[];
 
 /** Property, plant and equipment comes gross and net; a row keeps both. */
 const COLUMNS = [
@@ -130,7 +130,7 @@ export function abnormalOf(
  *
  * @example fewestFirms('kothari') // => 11
  */
-export function fewestFirms(model: PublishedModel): number {
+function fewestFirms(model: PublishedModel): number {
   const { form, fewestFirms: published } = MODELS[model];
   return Math.max(published, form.regressors.length + (form.constant ? 1 : 0) + FEWEST_DEGREES_OF_FREEDOM);
 }

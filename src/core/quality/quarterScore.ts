@@ -81,7 +81,7 @@ export function scoreQuarter(peer: PeerInputs, crossSection: CrossSection): Quar
  *
  * @example earningsAtRisk({ ...peer, figures: { assetsPrior: 200, workingCapitalAccruals: 9, nwcPrior: 50, revenue: 110, revenuePrior: 100 } }, 0.03) // => { unexplained: 6, workingCapital: 4 }
  */
-export function earningsAtRisk(peer: PeerInputs, unexplained: number | null): EarningsAtRisk | null {
+function earningsAtRisk(peer: PeerInputs, unexplained: number | null): EarningsAtRisk | null {
   const given = figuresOf(peer.figures, ['assetsPrior', 'workingCapitalAccruals', 'nwcPrior']);
   const growth = revenueGrowth(peer.figures);
   if (!given || growth === null || unexplained === null) return null;

@@ -8,8 +8,8 @@ import { bookOf } from '../statements/statementBook.ts';
 import { accountsAt } from './accountsAt.ts';
 
 export const LATEST = plainDate('2025-12-31');
-export const BEFORE = plainDate('2024-12-31');
-export const TWO_BEFORE = plainDate('2023-12-31');
+const BEFORE = plainDate('2024-12-31');
+const TWO_BEFORE = plainDate('2023-12-31');
 
 export type Lines = Readonly<Partial<Record<LineItemCode, number>>>;
 

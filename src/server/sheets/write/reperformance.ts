@@ -2,12 +2,7 @@
 import ExcelJS from 'exceljs';
 import { THE_AGREEMENT_GOVERNS } from '../../../core/cautions.ts';
 import { Decimal } from '../../../core/money/decimal.ts';
-import type {
-  WorkedCell,
-  WorkedLine,
-  WorkedRow,
-  WorkedTest,
-} from '../../../core/reperformance/worked.ts';
+import type { WorkedCell, WorkedLine, WorkedRow, WorkedTest } from '../../../core/reperformance/worked.ts';
 import { BORDERS, FONTS } from './cellStyle.ts';
 import { figureFormat, put, writtenDay, writtenText } from './cellValue.ts';
 import { pageSetup } from './printSetup.ts';
