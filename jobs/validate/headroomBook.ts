@@ -3,7 +3,7 @@ import { addMonthsToMonthEnd, plainDate } from '#core/calendar/plainDate.ts';
 import type { HeadroomRow } from '#core/patterns/headroomRow.ts';
 import { drawsOf, type Draws } from './draws.ts';
 
-/** One kind of book; methods.md Part C 5.1. */
+/** One kind of book; methods.md C5. */
 export interface HeadroomCell {
   readonly headroom: 'tight' | 'normal';
   readonly tests: number;

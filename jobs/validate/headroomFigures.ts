@@ -17,7 +17,7 @@ interface PlannedCell {
 /** More books without lifting, because how often a list appears there is what has a bound. */
 const BOOKS_WITHOUT_LIFTING = 2;
 
-/** The grid of methods.md Part C 5.3: tight and normal books, 8, 12 and 20 tests, lifting seldom, often, mostly. */
+/** The grid of methods.md C5: tight and normal books, 8, 12 and 20 tests, lifting seldom, often, mostly. */
 const PLAN: readonly PlannedCell[] = [0, 0.1].flatMap((cushionSeekers) =>
   (['tight', 'normal'] as const).flatMap((headroom) =>
     [8, 12, 20].flatMap((tests) =>

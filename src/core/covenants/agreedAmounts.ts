@@ -16,8 +16,10 @@ import { levelInForce, type LevelInForce } from './levels.ts';
  * The limit of capital expenditure: the year's own, used first, and a share of what last year left unused.
  *
  * @example capexLimit({ ownYear: decimal(10), unusedLastYear: decimal(4), carriedShare: decimal('0.5') }) // => 12
+ *
+ * @public the method pages compute their examples with it
  */
-const capexLimit = ({
+export const capexLimit = ({
   ownYear,
   unusedLastYear,
   carriedShare,
@@ -31,8 +33,10 @@ const capexLimit = ({
  * A minimum that rises with a share of every year's profit and does not fall with losses.
  *
  * @example minimumWithProfits({ base: decimal(40), share: decimal('0.5'), netIncomes: [decimal(6), decimal(-3)] }) // => 43
+ *
+ * @public the method pages compute their examples with it
  */
-const minimumWithProfits = ({
+export const minimumWithProfits = ({
   base,
   share,
   netIncomes,

@@ -26,8 +26,10 @@ const LEASES: DebtLine = { line: 'lease_liabilities', label: 'Lease liabilities'
  * `restrictedCash` is what of `cash` is pledged. Same currency unit throughout. Source: methods.md A3.
  *
  * @example netDebt({ debt: decimal(40), cash: decimal(6), restrictedCash: ZERO, cashCap: decimal(5) }) // => 35
+ *
+ * @public the method pages compute their examples with it
  */
-function netDebt({
+export function netDebt({
   debt,
   cash,
   restrictedCash,

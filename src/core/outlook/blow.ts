@@ -12,8 +12,6 @@ export interface Blow {
   readonly interest: Decimal;
 }
 
-const NO_BLOW: Blow = { earnings: ZERO, cash: ZERO, interest: ZERO };
-
 /** Where missing cash shows; what is owed grows only by what cash does not cover. */
 type CashShows = 'net debt' | 'debt' | 'numerator' | 'net worth below' | null;
 

@@ -16,7 +16,6 @@ export interface Back {
 export const NOW: Back = { months: 0 };
 export const YEAR_AGO: Back = { months: 12 };
 export const QUARTER_AGO: Back = { months: 3 };
-const YEAR_AND_QUARTER_AGO: Back = { months: 15 };
 export const TWO_YEARS_AGO: Back = { months: 24 };
 
 /** A borrower's accounts around one quarter end, read as points of a sample; undefined where a figure is missing. */

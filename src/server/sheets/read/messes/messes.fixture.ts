@@ -5,7 +5,7 @@ import { gridWorkbook, type Typed, type TypedSheets } from '../../../../../tests
 import { readingPool, readWorkbook } from '../readWorkbook.ts';
 import { NOTHING_KNOWN, type Change } from '../messyFiles.fixture.ts';
 
-export { balance, codes, figures, income, kinds, NOTHING_KNOWN } from '../messyFiles.fixture.ts';
+export { balance, codes, figures, income, kinds } from '../messyFiles.fixture.ts';
 export type { Change } from '../messyFiles.fixture.ts';
 
 /** Workers start slowly on a busy machine. */
