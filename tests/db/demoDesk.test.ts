@@ -157,7 +157,8 @@ test('every amount of a borrower stands in the cell of the kept workbook that it
      from statement_cells c join statements s on s.id = c.statement_id where s.import_id = :importId`,
     { importId: source.importId },
   );
-  expect(statements).toHaveLength(32);
+  // Eighteen quarters, a balance sheet and the flows of each.
+  expect(statements).toHaveLength(36);
   expect(cells.length).toBeGreaterThan(700);
   for (const { statementId, line, sheet, cell, label } of cells) {
     const worksheet = workbook.getWorksheet(sheet);

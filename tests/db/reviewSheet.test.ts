@@ -3,6 +3,7 @@ import '../support/useDatabase.ts';
 import ExcelJS from 'exceljs';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { Person } from '../../src/server/auth/policy.ts';
+import { METHOD_VERSION } from '../../src/core/policy.ts';
 import { closeDatabase } from '../../src/server/db/connection.ts';
 import { inTransaction } from '../../src/server/db/inTransaction.ts';
 import type { PersonActor } from '../../src/server/services/actor.ts';
@@ -66,7 +67,7 @@ test('an export is in the audit log with who, whose and what it rests on; a repe
     subjectId: String(book.notMet.id),
     borrowerId: book.notMet.id,
     deskId: book.desk.id,
-    summary: `Exported the review sheet of ${book.notMet.name} as XLSX (DRAFT, data cut-off 30 Nov 2026, 01:30 UTC, method 1.0, policy 1, input version 1)`,
+    summary: `Exported the review sheet of ${book.notMet.name} as XLSX (DRAFT, data cut-off 30 Nov 2026, 01:30 UTC, method ${METHOD_VERSION}, policy 1, input version 1)`,
   });
 });
 
