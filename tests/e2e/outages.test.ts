@@ -125,7 +125,7 @@ test('the mail server is gone: the mail waits, says so to nobody’s harm, and a
   const sink = `http://127.0.0.1:${Number(settings['MAIL_SINK_PORT']) + 1}`;
   expect(await untilAnswers(`${sink}/`, () => false)).toBe(true);
   // Half a minute passes.
-  await inTransaction((tx) => execute(tx, 'update outbox set next_try_at = now(6)'));
+  await inTransaction((tx) => execute(tx, 'update outbox set next_try_at = :now', { now: new Date() }));
   await expect.poll(waiting, { timeout: 15_000, interval: 250 }).toMatchObject({ state: 'sent', tries: 2 });
   await sleep(3_000);
   const mails = (await (await fetch(`${sink}/messages.json`)).json()) as SunkMail[];

@@ -91,6 +91,8 @@ async function makeDesk(tx: Transaction, passwordHash: string, now: Date): Promi
   await setDeskHead(tx, desk, manager.id);
   const borrowerName = `Fathom Works ${tag}`;
   const borrower = await makeBorrower(tx, { name: borrowerName, desk, analyst, manager, now });
+  // Assessed before there are alerts, so that none of them closes by itself.
+  const covenant = await makeAssessedCovenant(tx, borrower, now);
   const alert = (kind: string, state: string, closedBy: number | null) =>
     makeAlert(tx, { desk, borrower, owner: manager.id, kind, state, closedBy, now });
   return {
@@ -105,7 +107,7 @@ async function makeDesk(tx: Transaction, passwordHash: string, now: Date): Promi
     proposal: await makeProposal(tx, { desk, borrower, proposer: analyst.id, now }),
     import: await makeImport(tx, { borrower, uploader: analyst.id, now }),
     statement: await makeStatement(tx, borrower, now),
-    covenant: await makeAssessedCovenant(tx, borrower, now),
+    covenant,
   };
 }
 
