@@ -7,6 +7,7 @@ import { buildCovenant } from '../../core/covenants/covenant.fixture.ts';
 import { decimal } from '../../core/money/decimal.ts';
 import { POLICY_VERSION_1 } from '../../core/policy.ts';
 import { buildStatement } from '../../core/statements/statement.fixture.ts';
+import { readCrossSection } from './stored/crossSection.ts';
 import { readAssessment, storedAssessment } from './storedAssessment.ts';
 
 const quarterEnds = Array.from({ length: 8 }, (_, index) => addMonthsToMonthEnd('2026-09-30', -3 * index));
@@ -113,4 +114,10 @@ test('coming tests and movements come back in every form, and an older result ha
     key === 'projections' || key === 'sensitivity' ? undefined : value,
   );
   expect(readAssessment(older)).toMatchObject({ projections: [], sensitivity: null });
+});
+
+test('a night stored before patterns and changes were kept reads as one without them', () => {
+  const before = readCrossSection(JSON.stringify({ version: 7, quarters: [] }));
+  expect(before).toEqual({ ...NO_BOOK, version: 7 });
+  expect(assess(inputs, before, POLICY_VERSION_1, '2026-11-30').projections).not.toEqual([]);
 });

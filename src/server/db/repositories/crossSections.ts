@@ -3,6 +3,7 @@ import type { PlainDate } from '../../../core/calendar/plainDate.ts';
 import { NO_BOOK, type BookCrossSection } from '../../../core/bookCrossSection.ts';
 import { finiteJson } from '../finiteJson.ts';
 import { execute, selectOne } from '../sql.ts';
+import { readCrossSection } from '../stored/crossSection.ts';
 
 /**
  * Stores the peers' standing. Its version is the row's own number, so it is built once the number is known, in
@@ -32,12 +33,11 @@ export async function storeCrossSection(
   return crossSection;
 }
 
-/** Plain JSON that this file wrote. */
 export async function findCrossSection(tx: Transaction, id: number): Promise<BookCrossSection | null> {
   const row = await selectOne<{ content: string }>(tx, 'select content from cross_sections where id = :id', {
     id,
   });
-  return row && (JSON.parse(row.content) as BookCrossSection);
+  return row && readCrossSection(row.content);
 }
 
 /** The peers as of the last night; NO_BOOK before the first. */
@@ -46,5 +46,5 @@ export async function latestCrossSection(tx: Transaction): Promise<BookCrossSect
     tx,
     'select content from cross_sections order by as_of desc, known_at desc, id desc limit 1',
   );
-  return row ? (JSON.parse(row.content) as BookCrossSection) : NO_BOOK;
+  return row ? readCrossSection(row.content) : NO_BOOK;
 }
