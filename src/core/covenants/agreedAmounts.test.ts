@@ -56,6 +56,17 @@ describe('capital expenditure', () => {
     });
   });
 
+  test('is held against a later limit of its own year, never against the next year’s', () => {
+    const later = (from: '2025-07-01' | '2025-12-31' | '2026-01-01') => {
+      const levels = [buildLevel('2024-01-01', null, '6'), buildLevel(from, null, '4')];
+      return run({ ...limit, levels }, [spending('2024', 6), soFar], '2025-06-30').againstLaterLevels;
+    };
+    const soFar = buildStatement('2025-06-30', 6, { capex: -5 });
+    expect(later('2025-07-01')).toMatchObject([{ from: '2025-07-01', outcome: 'not met' }]);
+    expect(later('2025-12-31')).toHaveLength(1);
+    expect(later('2026-01-01')).toEqual([]);
+  });
+
   // Own arithmetic.
   test('of a year that runs is what was spent so far, with costs that were capitalised', () => {
     const soFar = buildStatement('2025-09-30', 9, { capex: -3, capitalised_costs_paid: -1 });

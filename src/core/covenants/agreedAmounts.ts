@@ -2,7 +2,7 @@
 import { lastYearEndBefore } from '../calendar/fiscalYear.ts';
 import { addMonthsToMonthEnd, type PlainDate } from '../calendar/plainDate.ts';
 import { formatDay } from '../calendar/printDay.ts';
-import { formatShare } from '../money/print.ts';
+import { formatShareLevel } from '../money/print.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
 import type { BridgeLine } from '../measures/bridge.ts';
 import { capitalExpenditureIn } from '../measures/charges.ts';
@@ -97,7 +97,7 @@ function withCarryOver(
       {
         ...figure(`Carried over from the year to ${formatDay(lastYear)}`, limit.minus(level)),
         inputs: spent.inputs,
-        note: `${formatShare(carriedShare, { places: 0 })} of what that year left unused`,
+        note: `${formatShareLevel(carriedShare)} of what that year left unused`,
       },
       { label: 'Limit with carry-over', amount: limit, kind: 'subtotal', inputs: [] },
     ],
@@ -129,7 +129,7 @@ function withProfits(
           {
             ...figure(`Share of the profit of the year to ${formatDay(end)}`, raised),
             inputs: reading.inputs,
-            note: `${formatShare(share, { places: 0 })}; a loss takes nothing away`,
+            note: `${formatShareLevel(share)}; a loss takes nothing away`,
           },
         ];
       }),

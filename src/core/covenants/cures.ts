@@ -81,11 +81,11 @@ function cureOf(
   const terms: Terms = { operator: covenant.operator, level, roundingPlaces: covenant.roundingPlaces };
   const carried = carriedOn(before, test.testDate);
   const sides = withEarnings(measure, { numerator, denominator }, carried);
-  const money = moneyFor(covenant.cures, test.testDate, context.asOf);
+  const standing = blankStanding(covenant.cureRights, test, before, context);
+  const { money, leftOut } = moneyFor(covenant, standing, test.testDate, context.asOf);
   const isCarried = carried.gt(0);
   if (isMet(test.underlyingOutcome) && !isCarried) return NOTHING;
   if (!covenant.cureRights && !money && !isCarried) return NOTHING;
-  const standing = blankStanding(covenant.cureRights, test, before, context);
   const base: CureStanding = {
     ...standing,
     carried,
@@ -98,7 +98,10 @@ function cureOf(
   if (isMet(test.underlyingOutcome)) return { cure: base, money: null, remark: null };
   if (isCarried && isMet(verdictOn(measure, sides, terms).outcome))
     return { cure: { ...base, curedBy: 'money of an earlier quarter' }, money: null, remark: null };
-  return money ? withMoney(covenant, base, { measure, sides, terms, money }) : { ...NOTHING, cure: base };
+  if (!money) return { ...NOTHING, cure: base };
+  const found = withMoney(covenant, base, { measure, sides, terms, money });
+  const said = [found.remark, leftOutInWords(leftOut)].filter((one) => one !== null);
+  return { ...found, remark: said.length > 0 ? said.join('; ') : null };
 }
 
 function blankStanding(
@@ -132,19 +135,41 @@ function blankStanding(
   };
 }
 
-/** All that came in for one quarter, as one; a payment later than another moves the day. */
-function moneyFor(cures: readonly EquityCure[], testDate: PlainDate, asOf: PlainDate): EquityCure | null {
+/**
+ * What came in for one quarter in time and the way the agreement counts it, as one; a payment later than another moves
+ * the day. Where nothing did, what came in first says why.
+ */
+function moneyFor(
+  { cures, cureRights }: Covenant,
+  { periodEnds }: CureStanding,
+  testDate: PlainDate,
+  asOf: PlainDate,
+): { readonly money: EquityCure | null; readonly leftOut: readonly EquityCure[] } {
   const own = cures.filter(
     ({ quarterEnd, receivedOn }) => receivedOn <= asOf && isSamePeriodEnd(quarterEnd, testDate),
   );
-  const [first] = own;
-  if (!first) return null;
-  return {
-    ...first,
-    amount: Decimal.sum(0, ...own.map(({ amount }) => amount)),
-    receivedOn: own.reduce((last, one) => (one.receivedOn > last ? one.receivedOn : last), first.receivedOn),
-  };
+  const counting = own.filter(
+    ({ method, receivedOn }) =>
+      method === cureRights?.method && (periodEnds === null || receivedOn <= periodEnds),
+  );
+  const taken = counting.length > 0 ? counting : own.filter(({ method }) => method === own[0]?.method);
+  const [first] = taken;
+  if (!first) return { money: null, leftOut: [] };
+  const amount = sumOfMoney(taken);
+  const receivedOn = taken.reduce(
+    (last, one) => (one.receivedOn > last ? one.receivedOn : last),
+    first.receivedOn,
+  );
+  return { money: { ...first, amount, receivedOn }, leftOut: own.filter((one) => !taken.includes(one)) };
 }
+
+const sumOfMoney = (cures: readonly EquityCure[]): Decimal =>
+  Decimal.sum(0, ...cures.map(({ amount }) => amount));
+
+const leftOutInWords = (leftOut: readonly EquityCure[]): string | null =>
+  leftOut.length === 0
+    ? null
+    : `${formatMoney(sumOfMoney(leftOut))} more put in is not counted: it came late or counts another way`;
 
 const carriedOn = (before: readonly CountedCure[], testDate: PlainDate): Decimal =>
   Decimal.sum(0, ...stillCounting(before, testDate).map(({ counted }) => counted));

@@ -224,6 +224,34 @@ describe('an equity cure', () => {
   });
 });
 
+describe('several payments for one quarter', () => {
+  const shortBy = (...cures: readonly Partial<EquityCure>[]) =>
+    shortTest({ cureRights: RIGHTS, cures: cures.map(buildCure) }, '2026-04-01');
+
+  test('cure together, in time', () => {
+    const found = shortBy({ amount: decimal('0.5') }, { amount: decimal('0.4'), receivedOn: '2026-03-06' });
+    expect(found.outcome).toBe('cured');
+    expect(found.cure).toMatchObject({ received: decimal('0.9'), receivedOn: '2026-03-06' });
+  });
+
+  test('one that comes late takes nothing from those in time, and adds nothing to them', () => {
+    const late = { amount: decimal(5), receivedOn: '2026-03-07' } as const;
+    expect(shortBy({}, late)).toMatchObject({
+      outcome: 'cured',
+      cure: { received: decimal(1), receivedOn: '2026-02-20' },
+    });
+    const found = shortBy({ amount: decimal('0.5') }, late);
+    expect(found.outcome).toBe('not met');
+    expect(found.reason).toContain('5 more put in is not counted: it came late or counts another way');
+  });
+
+  test('one recorded another way than the agreement counts is not added', () => {
+    const found = shortBy({ amount: decimal('0.2') }, { amount: decimal(2), method: 'debt' });
+    expect(found.outcome).toBe('not met');
+    expect(found.cure?.received?.toFixed()).toBe('0.2');
+  });
+});
+
 describe('a deemed cure', () => {
   const met = buildYear('2026-03-31', { ebitda: 12, debt: 40, cash: 0 });
   const deemed = { cureRights: { ...RIGHTS, curedByNextTest: true } };
@@ -326,6 +354,11 @@ describe('a springing covenant', () => {
   test('says utilisation and trigger, and shows the ratio anyway', () => {
     expect(on('6.5').reason).toBe('drawn 7 of 20 (32.5\u00a0%): tested only above 35\u00a0%');
     expect(on('6.5').springing?.utilisation?.toFixed()).toBe('0.325');
+  });
+
+  test('says its trigger with every digit that it has', () => {
+    const withHalf = { springing: { trigger: decimal('0.375') } };
+    expect(tested(withHalf, drawn('6.5'), at)[0]?.reason).toContain('tested only above 37.5\u00a0%');
   });
 
   test('cannot be tested where nobody knows what is drawn', () => {

@@ -1,7 +1,7 @@
 import type { PlainDate } from '../calendar/plainDate.ts';
 import { formatDay } from '../calendar/printDay.ts';
 import type { Decimal } from '../money/decimal.ts';
-import { formatMoney, formatShare } from '../money/print.ts';
+import { formatMoney, formatShare, formatShareLevel } from '../money/print.ts';
 import { balanceAt } from '../statements/flows.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import type { Springing } from './covenant.ts';
@@ -50,14 +50,14 @@ export function springingOn({ trigger }: Springing, book: StatementBook, testDat
     return {
       standing: null,
       outcome: 'cannot be tested',
-      reason: `tested only above ${formatShare(trigger, { places: 0 })} drawn; the revolver’s drawings or commitments on ${formatDay(testDate)} are missing`,
+      reason: `tested only above ${formatShareLevel(trigger)} drawn; the revolver’s drawings or commitments on ${formatDay(testDate)} are missing`,
     };
   const sides = { drawn: drawn.value, commitment: commitment.value, trigger };
   if (!sides.commitment.gt(0))
     return {
       standing: { ...sides, utilisation: null },
       outcome: 'cannot be tested',
-      reason: `tested only above ${formatShare(trigger, { places: 0 })} drawn; no commitment on ${formatDay(testDate)}`,
+      reason: `tested only above ${formatShareLevel(trigger)} drawn; no commitment on ${formatDay(testDate)}`,
     };
   const standing = { ...sides, utilisation: utilisation(sides.drawn, sides.commitment) };
   return isSprung(sides)
@@ -71,4 +71,4 @@ const notSprung = ({
   utilisation: share,
   trigger,
 }: SpringingStanding & { readonly utilisation: Decimal }): string =>
-  `drawn ${formatMoney(drawn)} of ${formatMoney(commitment)} (${formatShare(share, { beside: trigger })}): tested only above ${formatShare(trigger, { places: 0 })}`;
+  `drawn ${formatMoney(drawn)} of ${formatMoney(commitment)} (${formatShare(share, { beside: trigger })}): tested only above ${formatShareLevel(trigger)}`;

@@ -1,5 +1,6 @@
 /** One covenant tested on one day, as the agreement defines it, on the figures known by another day. */
-import type { PlainDate } from '../calendar/plainDate.ts';
+import { lastYearEndBefore } from '../calendar/fiscalYear.ts';
+import { addMonthsToMonthEnd, type PlainDate } from '../calendar/plainDate.ts';
 import { formatDay } from '../calendar/printDay.ts';
 import type { CurrencyRate } from '../measures/definition.ts';
 import { MEASURES } from '../measures/index.ts';
@@ -62,7 +63,11 @@ export function testCovenant(
   if (!figures.sides || !level)
     throw new Error(`covenant ${covenant.id} on ${testDate}: no sides or no level`);
   const terms = { operator, level, roundingPlaces };
-  return { ...common, ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf }) };
+  const lastDay = lastDayOfResult(covenant, book, testDate);
+  return {
+    ...common,
+    ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf, lastDay }),
+  };
 }
 
 /** What only the tests beside it, the undertakings and the other figures of the borrower can tell: withRights, assess. */
@@ -121,7 +126,12 @@ function resultSaid(
   figures: Figures,
   sides: Sides,
   terms: Terms,
-  on: { readonly testDate: PlainDate; readonly policy: Policy; readonly asOf: PlainDate },
+  on: {
+    readonly testDate: PlainDate;
+    readonly policy: Policy;
+    readonly asOf: PlainDate;
+    readonly lastDay: PlainDate | null;
+  },
 ): Said {
   const measure = MEASURES[covenant.measure];
   const held = holdAgainstLevel(measure, sides, terms);
@@ -137,7 +147,7 @@ function resultSaid(
     waiver: waiver && { grantedOn: waiver.grantedOn, until: waiver.until, conditions: waiver.conditions },
     reason: remarks(covenant, held, figures, waiver ? null : ranOut(granted)),
     headroom: held.headroom,
-    againstLaterLevels: hasResult(held) ? againstLater(covenant, on.testDate, sides) : [],
+    againstLaterLevels: hasResult(held) ? againstLater(covenant, on, sides) : [],
     justPassing: isJustPassing(held, on.policy),
     otherAccounting: byTodaysRules(measure, figures, terms),
     counterfactuals: hasResult(held) ? withoutAddBacks(measure, sides, terms, figures.addBacksTaken) : [],
@@ -203,13 +213,23 @@ function ranOut(granted: readonly Waiver[]): string | null {
   return last?.until ? `waiver of ${formatDay(last.grantedOn)} ran out on ${formatDay(last.until)}` : null;
 }
 
+/** Capital expenditure begins anew with every financial year: next year's limit says nothing of this year's. */
+const lastDayOfResult = (
+  { measure }: Covenant,
+  { fiscalYearEndMonth }: StatementBook,
+  testDate: PlainDate,
+): PlainDate | null =>
+  measure === 'capital-expenditure'
+    ? addMonthsToMonthEnd(lastYearEndBefore(testDate, fiscalYearEndMonth), 12)
+    : null;
+
 function againstLater(
   covenant: Covenant,
-  testDate: PlainDate,
+  { testDate, lastDay }: { readonly testDate: PlainDate; readonly lastDay: PlainDate | null },
   sides: Sides,
 ): CovenantTest['againstLaterLevels'] {
   return laterLevels(covenant.levels, testDate).flatMap(({ from, level }) => {
-    if (level === null) return [];
+    if (level === null || (lastDay !== null && from > lastDay)) return [];
     const { operator, roundingPlaces } = covenant;
     const held = holdAgainstLevel(MEASURES[covenant.measure], sides, { operator, level, roundingPlaces });
     const { mayFall, shareOfLevel, moneyLeft, otherSideMayRise } = held.headroom;

@@ -1,4 +1,4 @@
-import { formatMoneyInFull, formatShare } from '../money/print.ts';
+import { formatMoneyInFull, formatShareLevel } from '../money/print.ts';
 import { annualisedByMonths } from '../statements/periodLength.ts';
 import { Decimal, ZERO } from '../money/decimal.ts';
 import { sumOfReadings, type Reading } from '../statements/reading.ts';
@@ -112,7 +112,7 @@ function overCap(
       amount: disallowed.negated(),
       kind: 'disallowed',
       inputs: [],
-      note: `cap ${formatShare(addBackCap)} of EBITDA ${basis} them: ${formatMoneyInFull(limit)}`,
+      note: `cap ${formatShareLevel(addBackCap)} of EBITDA ${basis} them: ${formatMoneyInFull(limit)}`,
     },
   ];
 }

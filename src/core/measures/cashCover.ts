@@ -13,6 +13,8 @@ export interface CashItem {
   readonly label: string;
   readonly sign: 1 | -1;
   readonly reading: Reading;
+  /** What lies there on a day, which no more months would make more of. */
+  readonly isBalance?: true;
 }
 
 /** One side of a cash cover by its items. */
@@ -44,16 +46,24 @@ export function cashCover(
 }
 
 function sideOf({ months }: MeasureRequest, { label, items }: CashSide, earnings: Earnings | null): Lined {
-  const parts = [...(earnings ? [{ sign: 1 as const, reading: earnings.reading }] : []), ...items];
+  const balances = months === 12 ? [] : items.filter(({ isBalance }) => isBalance);
+  const flows = items.filter((item) => !balances.includes(item));
+  const parts = [...(earnings ? [{ sign: 1 as const, reading: earnings.reading }] : []), ...flows];
   const reading = sumOfReadings(parts);
-  return annualised(months, `${label}, annualised`, {
+  const year = annualised(months, `${label}, annualised`, {
     reading,
-    bridge: [
-      ...items.flatMap((item) => bridgeFigure(item.label, item.reading, item.sign)),
-      ...bridgeSubtotal(label, reading),
-    ],
+    bridge: [...linesOf(flows), ...bridgeSubtotal(label, reading)],
   });
+  if (balances.length === 0) return year;
+  const whole = sumOfReadings([{ sign: 1, reading: year.reading }, ...balances]);
+  return {
+    reading: whole,
+    bridge: [...year.bridge, ...linesOf(balances), ...bridgeSubtotal(`${label} with what lay there`, whole)],
+  };
 }
+
+const linesOf = (items: readonly CashItem[]) =>
+  items.flatMap((item) => bridgeFigure(item.label, item.reading, item.sign));
 
 const ofYear = ({ months }: MeasureRequest, amount: Decimal): Decimal =>
   months === 12 ? amount : annualisedByMonths(amount, months);

@@ -132,3 +132,25 @@ test('covers of the first tests are annualised on both sides', () => {
   expect(sidesOf(measured)).toEqual(['24', '4']);
   expect(measured.remarks).toEqual(['annualised from 6 months']);
 });
+
+// Own arithmetic: (12 - 1.5 - 1 - 0.5) of half a year is 18 a year; the 3 that lay in cash stay 3.
+test('opening cash of the first tests is what lay there, not twice as much', () => {
+  const half = {
+    ...yearOf({ interest_paid: -2, tax_paid: '-1.5', capex: -1, scheduled_principal: 3 }),
+    months: 6,
+  };
+  const sheets = [
+    sheetOf({ current_assets: '19.5', cash: 3, current_liabilities: 10 }),
+    sheetOf({ current_assets: 19, cash: 3, current_liabilities: 10 }, '2025-06-30'),
+  ];
+  const definition = { openingCashInDebtService: true };
+  const measured = debtServiceCover.measure(requestOf([half, ...sheets], { months: 6, definition }));
+  expect(sidesOf(measured)).toEqual(['21', '10']);
+  expect(bridgeOf(measured)).toEqual(
+    expect.arrayContaining([
+      'Cash for debt service, annualised 18',
+      'Opening cash 3',
+      'Cash for debt service with what lay there 21',
+    ]),
+  );
+});

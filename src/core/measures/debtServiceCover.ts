@@ -57,6 +57,7 @@ const openingCash = (request: MeasureRequest): readonly CashItem[] =>
           label: 'Opening cash',
           sign: 1,
           reading: balanceIn(request, 'cash', monthsBefore(request.date, request.months)),
+          isBalance: true,
         },
       ]
     : [];

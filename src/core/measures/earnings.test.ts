@@ -153,7 +153,7 @@ describe('EBITDA as a covenant defines it', () => {
     expect(measured.bridge.slice(-4).map(({ label, note }) => `${label}: ${note ?? ''}`)).toEqual([
       'Item 1: plant closure; no evidence given; approved by Iseult Brandrath; without cap',
       'Item 2: plant closure; board paper; not approved by a second person yet; under the cap',
-      'Add-backs over the cap: cap 20.0\u00a0% of EBITDA before them: 2.2',
+      'Add-backs over the cap: cap 20\u00a0% of EBITDA before them: 2.2',
       'Adjusted EBITDA: ',
     ]);
   });

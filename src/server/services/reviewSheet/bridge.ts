@@ -8,7 +8,7 @@ import { COUNTERFACTUAL_WORDS, testedInWords, wouldHaveBeen } from '../../../cor
 import { addBacksWithin, allowAddBacks } from '../../../core/measures/addBacks.ts';
 import { monthsOfFlow } from '../../../core/measures/annualised.ts';
 import { Decimal, decimal } from '../../../core/money/decimal.ts';
-import { formatMoney, formatShare } from '../../../core/money/print.ts';
+import { formatMoney, formatShare, formatShareLevel } from '../../../core/money/print.ts';
 import { absent, amountCell, notRecorded, textCell } from './cells.ts';
 import { covenantName, NOT_ASSESSED, shownTest, termsOf, type SheetMaterial } from './material.ts';
 import { referencesCell } from './sources.ts';
@@ -146,7 +146,7 @@ function capLine(
     capped: sumOf(true),
     terms: { cap: addBackCap, basis: addBackCapBasis },
   });
-  const cap = `Cap on add-backs ${formatShare(addBackCap, { places: 0 })} of EBITDA ${addBackCapBasis} the capped add-backs`;
+  const cap = `Cap on add-backs ${formatShareLevel(addBackCap)} of EBITDA ${addBackCapBasis} the capped add-backs`;
   if (limit === null) return `${cap}: no limit follows from it.`;
   const used = limit.isZero() ? '' : `: ${formatShare(allowed.div(limit))} of the cap used`;
   return `${cap}: ${currency} ${formatMoney(limit)}. Capped add-backs ${formatMoney(sumOf(true))}, taken ${formatMoney(allowed)}${used}.`;
