@@ -228,6 +228,7 @@ function outcomeFormula({ operator, headroom }: CovenantTest, { shape, withoutCh
   if (shape === 'amount') return compared;
   if (isMaximum(operator))
     return `IF({denominator}<=0,IF({numerator}>0,"not met, ratio has no meaning","cannot be tested"),IF({numerator}<=0,${quoted(withoutCharge === 'net cash' ? 'met, net cash' : 'met')},${compared}))`;
-  const nothingToCover = quoted(withoutCharge === 'met' ? 'met' : 'met, no charge to cover');
-  return `IF({denominator}<=0,IF({numerator}>0,${nothingToCover},"cannot be tested"),${compared})`;
+  const nothingToCover = quoted('met, no charge to cover');
+  const withoutCover = withoutCharge === 'met' ? nothingToCover : quoted('cannot be tested');
+  return `IF({denominator}<=0,IF({numerator}>0,${nothingToCover},${withoutCover}),${compared})`;
 }

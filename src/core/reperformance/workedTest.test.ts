@@ -4,6 +4,7 @@ import type { Covenant } from '../covenants/covenant.ts';
 import { testCovenant } from '../covenants/testCovenant.ts';
 import { decimal } from '../money/decimal.ts';
 import { POLICY_VERSION_1 } from '../policy.ts';
+import { buildStatement } from '../statements/statement.fixture.ts';
 import { bookOf } from '../statements/statementBook.ts';
 import { openRows, workedTest } from './workedTest.ts';
 
@@ -71,5 +72,23 @@ describe('a test worked out again', () => {
     const awaiting = testCovenant(covenant, bookOf([], 12), '2026-09-30', POLICY_VERSION_1, '2026-11-30');
     const rows = workedTest(awaiting, covenant, POLICY_VERSION_1, []);
     expect(rows.result.at(-1)).toMatchObject({ value: 'awaiting figures', formula: null, isOpen: false });
+  });
+
+  test('a cover with nothing to cover has the words of its outcome', () => {
+    const covenant = buildCovenant({
+      measure: 'current-ratio',
+      operator: '>=',
+      levels: [buildLevel('2025-01-01', null, '1.2')],
+    });
+    const nothingDue = bookOf(
+      [buildStatement('2026-09-30', 0, { current_assets: 30, current_liabilities: 0 })],
+      12,
+    );
+    const tested = testCovenant(covenant, nothingDue, '2026-09-30', POLICY_VERSION_1, '2026-11-30');
+    const outcome = workedTest(tested, covenant, POLICY_VERSION_1, []).result.at(-1);
+    expect(outcome?.value).toBe('met, no charge to cover');
+    expect(outcome?.formula).toContain(
+      'IF({denominator}<=0,IF({numerator}>0,"met, no charge to cover","met, no charge to cover"),',
+    );
   });
 });

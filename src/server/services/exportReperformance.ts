@@ -1,7 +1,7 @@
 import type { Transaction } from 'sequelize';
 import type { NamedTest } from '../../contracts/ids.ts';
 import { formatDay } from '../../core/calendar/printDay.ts';
-import { levelInWords, OPERATOR_WORDS } from '../../core/covenants/wording.ts';
+import { covenantInWords, levelInWords, OPERATOR_WORDS } from '../../core/covenants/wording.ts';
 import type { Covenant } from '../../core/covenants/covenant.ts';
 import type { CovenantTest } from '../../core/covenants/covenantTest.ts';
 import type { Decimal } from '../../core/money/decimal.ts';
@@ -91,11 +91,11 @@ async function covenantOf(
   return covenants.find(({ id }) => id === covenantId) ?? null;
 }
 
-function titleOf({ testDate, level, measure, operator }: CovenantTest, { name, clause }: Covenant): string {
+function titleOf({ testDate, level, measure, operator }: CovenantTest, covenant: Covenant): string {
   const limit = level
     ? `, ${OPERATOR_WORDS[operator]} ${levelInWords(measure, level)}`
     : ', no level in force';
-  return `${name}, clause ${clause}, tested on ${formatDay(testDate)}${limit}`;
+  return `${covenantInWords(covenant)}, tested on ${formatDay(testDate)}${limit}`;
 }
 
 const basisOf = ({ assessment, knownAt }: StoredAssessment): string =>
