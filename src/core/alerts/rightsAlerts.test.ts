@@ -55,6 +55,13 @@ describe('waiver, cure running out', () => {
     expect(found.map(({ severity }) => severity)).toEqual(severities);
   });
 
+  test('of two waivers for one test names the one that stands', () => {
+    const [waiver] = waivedUntil('2026-04-01').waivers;
+    const ranOut = { ...waiver!, grantedOn: '2026-01-20', until: '2026-02-10' } as const;
+    const [found] = testNotMet(night({ ...net, waivers: [ranOut, waiver!] }, 45));
+    expect(found?.sentence).toContain('Waived on 1 Feb 2026.');
+  });
+
   test('says what ends and when, and that the failure stands underneath', () => {
     expect(runningOut(night(waivedUntil('2026-03-11'), 45))).toMatchObject([
       {

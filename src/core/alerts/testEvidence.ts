@@ -2,6 +2,7 @@ import { formatDay } from '../calendar/printDay.ts';
 import type { Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
 import { covenantInWords, levelInWords, OPERATOR_WORDS, testedInWords } from '../covenants/wording.ts';
+import { MEASURES } from '../measures/index.ts';
 import { formatMoney, formatShare } from '../money/print.ts';
 import type { AlertFinding } from './alert.ts';
 
@@ -24,7 +25,10 @@ export function testEvidence(covenant: Covenant, test: CovenantTest): AlertFindi
     ...(mayFall
       ? [
           {
-            label: headroom.fallOf === 'earnings' ? 'Earnings may fall' : 'Tested amount may fall',
+            label:
+              headroom.fallOf === 'earnings'
+                ? 'Earnings may fall'
+                : `Tested amount ${MEASURES[measure].words.room?.may ?? 'may fall'}`,
             value: formatShare(mayFall),
           },
         ]

@@ -1,5 +1,4 @@
 import { isNotMet, type CovenantTest } from '../covenants/covenantTest.ts';
-import type { Covenant } from '../covenants/covenant.ts';
 import { formatDay } from '../calendar/printDay.ts';
 import { ZERO } from '../money/decimal.ts';
 import { levelInWords, OPERATOR_WORDS, testInWords } from '../covenants/wording.ts';
@@ -21,15 +20,16 @@ export const testNotMet: AlertRule = (context) =>
       covenantId: covenant.id,
       severity: 'urgent',
       factDate: test.testDate,
-      sentence: sentenceOf(covenant, test),
+      sentence: sentenceOf(test),
       wouldChange: wouldChange(test),
       evidence: testEvidence(covenant, test),
     }));
 
-function sentenceOf(covenant: Covenant, test: CovenantTest): string {
-  const waiver = covenant.waivers.find(({ testDate }) => testDate === test.testDate);
+function sentenceOf(test: CovenantTest): string {
   const waived =
-    test.outcome === 'not met, waived' && waiver ? ` Waived on ${formatDay(waiver.grantedOn)}.` : '';
+    test.outcome === 'not met, waived' && test.waiver
+      ? ` Waived on ${formatDay(test.waiver.grantedOn)}.`
+      : '';
   const inPeriod =
     test.outcome === 'not met, in cure period' && test.cure?.periodEnds
       ? ` In cure period until ${formatDay(test.cure.periodEnds)}.`

@@ -2,6 +2,7 @@ import { expect, test } from 'vitest';
 import { buildCovenant, buildLevel, buildYear } from '../covenants/covenant.fixture.ts';
 import { decimal } from '../money/decimal.ts';
 import { buildContext, buildInputs, buildQuality } from './rule.fixture.ts';
+import { withAccrualsTakenOut } from '../covenants/onAccruals.ts';
 import { leavesOpen } from './unknownConditions.ts';
 
 const asOf = '2026-03-15';
@@ -68,4 +69,14 @@ test('without peers nothing about tests to come is known; with some of them it i
   expect(withTests(['too few peers'])).toBe(true);
   expect(withTests(['nothing to project'])).toBe(false);
   expect(withTests([])).toBe(false);
+});
+
+test('accruals that were not computed for a test leave open whether it is met only on them', () => {
+  const context = buildContext(buildInputs({ covenants, statements: year }), asOf);
+  const ask = (tests: typeof context.tests) => leavesOpen({ ...context, tests })('met only on accruals', 1);
+  expect(ask(context.tests)).toBe(true);
+  const computed = context.tests.map((one) =>
+    withAccrualsTakenOut(one, covenants[0]!, { unexplained: 0, workingCapital: 0 }),
+  );
+  expect(ask(computed)).toBe(false);
 });

@@ -1,4 +1,4 @@
-import type { CovenantTest } from '../covenants/covenantTest.ts';
+import { isMet, type CovenantTest } from '../covenants/covenantTest.ts';
 import { latestLiveTest } from '../covenants/latestLiveTest.ts';
 import type { Projection } from '../outlook/projection.ts';
 import type { ReportingQuality } from '../quality/score.ts';
@@ -8,9 +8,9 @@ const NEEDS_A_SCORE: readonly AlertKind[] = ['reporting quality fell', 'reportin
 
 /**
  * Whether the figures leave open if the condition of an alert still holds: no score for what speaks of quality; a
- * latest test that cannot be made, or no test with figures at all, for what speaks of a covenant; too few peers for
- * what speaks of tests to come. An alert is closed
- * only by figures that say that its condition is gone, never by figures that say nothing.
+ * latest test that cannot be made, or no test with figures at all, for what speaks of a covenant; accruals that
+ * were not computed, for what speaks of them; too few peers for what speaks of tests to come. An alert is closed only
+ * by figures that say that its condition is gone, never by figures that say nothing.
  *
  * `tests` are oldest first within a covenant. A holiday, or a covenant that is no more, leaves nothing open.
  *
@@ -33,8 +33,12 @@ export const leavesOpen =
     if (covenantId === null || !newest || newest.outcome === 'not tested') return false;
     const live = latestLiveTest(tests, covenantId);
     if (live === null || live.outcome === 'cannot be tested') return true;
+    if (kind === 'met only on accruals') return isMet(live.outcome) && !isHeldAgainstAccruals(live);
     return kind === 'headroom shrinking' && isWithoutPeers(projections, covenantId);
   };
+
+const isHeldAgainstAccruals = ({ counterfactuals }: CovenantTest): boolean =>
+  counterfactuals.some(({ kind }) => kind === 'without unexplained accruals');
 
 /** Something is to be projected, and nothing of it can be. */
 function isWithoutPeers(projections: readonly Projection[], covenantId: number): boolean {
