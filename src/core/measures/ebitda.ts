@@ -109,12 +109,17 @@ const WITH_IMPAIRMENT: readonly EbitdaPart[] = [
  * @example ebitdaOfTwelveMonths(book, '2026-09-30').ebitda.value // => 13000000
  */
 export function ebitdaOfTwelveMonths(book: StatementBook, date: PlainDate): MeasuredEbitda {
-  const read = ({ line, presence }: EbitdaPart) => lastTwelveMonths(book, line, date, presence);
-  return addedUp(PARTS, read, (sum) =>
-    // Kept under the line it starts from: several covenants of a borrower rest on the same EBITDA.
-    book.kept('EBITDA', 'net_income', date, sum),
-  );
+  let ofBook = KNOWN.get(book);
+  if (!ofBook) KNOWN.set(book, (ofBook = new Map<PlainDate, MeasuredEbitda>()));
+  const known = ofBook.get(date);
+  if (known) return known;
+  const measured = addedUp(PARTS, ({ line, presence }) => lastTwelveMonths(book, line, date, presence));
+  ofBook.set(date, measured);
+  return measured;
 }
+
+/** Several covenants of a borrower rest on the same EBITDA; a book never changes, so it is kept as long as the book is. */
+const KNOWN = new WeakMap<StatementBook, Map<PlainDate, MeasuredEbitda>>();
 
 /**
  * EBITDA as a covenant takes it before any add-back: over its months, in its currency, impairment added where the
@@ -126,20 +131,14 @@ export function ebitdaIn(request: MeasureRequest): MeasuredEbitda {
   const { book, date, months, definition, translation } = request;
   if (!definition.impairmentAddedBack && months === 12 && book.currency === translation.currency)
     return ebitdaOfTwelveMonths(book, date);
-  return addedUp(
-    definition.impairmentAddedBack ? WITH_IMPAIRMENT : PARTS,
-    ({ line, presence }) => flowIn(request, line, presence),
-    (sum) => sum(),
+  return addedUp(definition.impairmentAddedBack ? WITH_IMPAIRMENT : PARTS, ({ line, presence }) =>
+    flowIn(request, line, presence),
   );
 }
 
-function addedUp(
-  parts: readonly EbitdaPart[],
-  read: (part: EbitdaPart) => Reading,
-  keep: (sum: () => Reading) => Reading,
-): MeasuredEbitda {
+function addedUp(parts: readonly EbitdaPart[], read: (part: EbitdaPart) => Reading): MeasuredEbitda {
   const lines = parts.map((part) => ({ ...part, reading: read(part) }));
-  const ebitda = keep(() => sumOfReadings(lines));
+  const ebitda = sumOfReadings(lines);
   return {
     ebitda,
     bridge: [

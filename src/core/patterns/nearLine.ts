@@ -34,9 +34,20 @@ export function nearLinesOf(
   return covenants
     .filter(({ isOurs }) => !isOurs)
     .map(({ id }) => {
-      const own = standing.nearLine.find(({ covenantId }) => covenantId === id);
+      const own = byCovenant(standing).get(id);
       return { covenantId: id, figures: own ? figuresOf(own, standing) : null };
     });
+}
+
+const BY_COVENANT = new WeakMap<PatternStanding, ReadonlyMap<number, NearLineStanding>>();
+
+/** Laid out once for the whole book: every borrower of a night asks the same standing. */
+function byCovenant(standing: PatternStanding): ReadonlyMap<number, NearLineStanding> {
+  const known = BY_COVENANT.get(standing);
+  if (known) return known;
+  const laidOut = new Map(standing.nearLine.map((each) => [each.covenantId, each]));
+  BY_COVENANT.set(standing, laidOut);
+  return laidOut;
 }
 
 function figuresOf(

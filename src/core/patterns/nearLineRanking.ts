@@ -63,20 +63,24 @@ export function rankNearLine<Id>(
   const fits = fitByPeers(usable, samples, near);
   const evidence = samples.map((sample, k) => nearLineEvidence(sample, fits[k]!.chances));
   const priorShare = shareLifted(evidence.map(({ bayesFactor }) => bayesFactor));
-  const ranked = evidence.map((each, k) => ({
-    ...each,
-    id: usable[k]!.id,
-    localFdr: 1 - posterior(priorShare, each.bayesFactor),
-    hasEnoughNear: each.near >= FEWEST_NEAR,
-    peers: fits[k]!.peers,
-    peerCount: fits[k]!.peerCount,
+  const rates = evidence.map(({ near: count, bayesFactor }) => ({
+    localFdr: 1 - posterior(priorShare, bayesFactor),
+    hasEnoughNear: count >= FEWEST_NEAR,
   }));
-  const listed = listOf(ranked);
+  const listed = listOf(rates);
   return {
-    series: ranked.map((each, k) => ({ ...each, listed: listed.has(k) })),
+    series: evidence.map((each, k) => ({
+      ...each,
+      id: usable[k]!.id,
+      localFdr: rates[k]!.localFdr,
+      hasEnoughNear: rates[k]!.hasEnoughNear,
+      peers: fits[k]!.peers,
+      peerCount: fits[k]!.peerCount,
+      listed: listed.has(k),
+    })),
     priorShare,
     near,
-    n: ranked.length,
+    n: evidence.length,
     method: 'two groups by empirical Bayes, headroom censored near the line',
   };
 }

@@ -4,7 +4,6 @@ import { reportingMonthEnd } from '../calendar/fiscalYear.ts';
 import {
   basisRank,
   inForceByPeriodEnd,
-  inForce,
   knownStatements,
   versionsByPeriod,
   type StatementSelection,
@@ -85,6 +84,7 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
   const versionsOf = (periodEnd: PlainDate, months: number) =>
     versions.get(months)?.get(reportingMonthEnd(periodEnd));
   const current = inForceByPeriodEnd(versions);
+  const ofMonths = byMonths(current);
   const firstCarried = remembering((line: LineItemCode) => earliestWith(statements, line));
   return {
     fiscalYearEndMonth,
@@ -93,10 +93,7 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
     current,
     statementById: (id) => byId.get(id),
     versionsOf: (periodEnd, months) => versionsOf(periodEnd, months) ?? [],
-    statementOf: (periodEnd, months) => {
-      const ofPeriod = versionsOf(periodEnd, months);
-      return ofPeriod ? inForce(ofPeriod) : null;
-    },
+    statementOf: (periodEnd, months) => ofMonths.get(months)?.get(reportingMonthEnd(periodEnd)) ?? null,
     isCarriedBy: (line, periodEnd) => {
       const first = firstCarried(line);
       return first !== null && first <= reportingMonthEnd(periodEnd);
@@ -112,6 +109,17 @@ export function bookOf(statements: readonly Statement[], fiscalYearEndMonth: num
     ),
     kept: keptReadings(),
   };
+}
+
+/** Every figure that is read asks which version is in force. */
+function byMonths(current: readonly Statement[]): ReadonlyMap<number, ReadonlyMap<PlainDate, Statement>> {
+  const laidOut = new Map<number, Map<PlainDate, Statement>>();
+  for (const statement of current) {
+    const byEnd = laidOut.get(statement.months) ?? new Map<PlainDate, Statement>();
+    laidOut.set(statement.months, byEnd);
+    byEnd.set(reportingMonthEnd(statement.periodEnd), statement);
+  }
+  return laidOut;
 }
 
 function onlyCurrency(statements: readonly Statement[]): string | null {
