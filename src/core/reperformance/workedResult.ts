@@ -1,5 +1,6 @@
 import { isMaximum, type Covenant } from '../covenants/covenant.ts';
 import type { CovenantTest } from '../covenants/covenantTest.ts';
+import { verdictOn } from '../covenants/holdAgainstLevel.ts';
 import { MEASURES } from '../measures/index.ts';
 import type { Measure } from '../measures/measured.ts';
 import { Decimal, decimal } from '../money/decimal.ts';
@@ -38,7 +39,7 @@ export function workedResult(
       'share',
       policy.thinBelow,
     ),
-    ...outcomeRows(test, measure),
+    ...outcomeRows(test, measure, covenant.roundingPlaces),
   ];
 }
 
@@ -197,15 +198,20 @@ function fallForms(test: CovenantTest, bridge: readonly WorkedRow[]): readonly C
 
 const quoted = (word: string): string => `"${word}"`;
 
-function outcomeRows(test: CovenantTest, measure: Measure): readonly WorkedRow[] {
+function outcomeRows(
+  test: CovenantTest,
+  measure: Measure,
+  roundingPlaces: number | null,
+): readonly WorkedRow[] {
+  const isDecided = isDecidedByFigures(test, measure, roundingPlaces);
   const words: WorkedRow = {
     key: 'underlying',
     label: 'Outcome on the borrower’s own figures',
     unit: 'words',
     value: test.underlyingOutcome,
-    formula: test.underlyingOutcome === 'not tested' ? null : outcomeFormula(test, measure),
+    formula: isDecided ? outcomeFormula(test, measure) : null,
     isOpen: false,
-    note: '',
+    note: isDecided ? '' : (test.reason ?? ''),
   };
   if (test.outcome === test.underlyingOutcome) return [{ ...words, label: 'Outcome' }];
   return [
@@ -215,6 +221,18 @@ function outcomeRows(test: CovenantTest, measure: Measure): readonly WorkedRow[]
       note: test.reason ?? '',
     },
   ];
+}
+
+/** A springing condition, a figure behind the level or an operator that does not fit decide before the two sides do. */
+function isDecidedByFigures(
+  { numerator, denominator, operator, level, underlyingOutcome }: CovenantTest,
+  measure: Measure,
+  roundingPlaces: number | null,
+): boolean {
+  if (!numerator || !level) return false;
+  if (measure.shape !== 'amount' && (measure.shape === 'burden') !== isMaximum(operator)) return false;
+  const { outcome } = verdictOn(measure, { numerator, denominator }, { operator, level, roundingPlaces });
+  return outcome === (underlyingOutcome === 'met, thin' ? 'met' : underlyingOutcome);
 }
 
 const outcomeAsRecorded = ({ outcome, reason }: CovenantTest): readonly WorkedRow[] => [

@@ -91,4 +91,26 @@ describe('a test worked out again', () => {
       'IF({denominator}<=0,IF({numerator}>0,"met, no charge to cover","met, no charge to cover"),',
     );
   });
+
+  test('an outcome that its figures do not decide stands as recorded, with its reason', () => {
+    const { tested, worked: rows } = worked({ springing: { trigger: decimal('0.35') } });
+    expect(tested.outcome).toBe('cannot be tested');
+    expect(rows.result.at(-1)).toMatchObject({
+      value: 'cannot be tested',
+      formula: null,
+      isOpen: false,
+      note: tested.reason,
+    });
+    const misfit = worked({ operator: '>=' }).worked.result.at(-1);
+    expect(misfit).toMatchObject({ value: 'cannot be tested', formula: null });
+  });
+
+  test('an outcome that its figures leave to the agreement follows from them', () => {
+    const covenant = buildCovenant({ levels: [buildLevel('2025-01-01', null, '3.5')] });
+    const idle = bookOf(buildYear('2026-09-30', { ebitda: -1, debt: 2, cash: 6 }), 12);
+    const tested = testCovenant(covenant, idle, '2026-09-30', POLICY_VERSION_1, '2026-11-30');
+    const outcome = workedTest(tested, covenant, POLICY_VERSION_1, []).result.at(-1);
+    expect(outcome?.value).toBe('cannot be tested');
+    expect(outcome?.formula).toContain('IF({denominator}<=0,IF({numerator}>0,');
+  });
 });
