@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest';
 import { besideTheScore, type BesideContext } from './besideTheScore.ts';
+import { daysBetween, plainDate } from './calendar/plainDate.ts';
 import { decimal } from './money/decimal.ts';
 import { AS_OF, buildBorrower, LAST_QUARTER_END } from './quality/book.fixture.ts';
 import { buildStatement } from './statements/statement.fixture.ts';
@@ -51,6 +52,48 @@ test('days late are those of the last four quarters, against the due dates', () 
   // The fixture's statements come forty days after the period end.
   expect(due(40)).toBe("The last quarter's accounts came in time.");
   expect(due(37)).toBe("The last quarter's accounts came 3 days late.");
+});
+
+test('a quarter that is due and has not come is said, months in between are not counted', () => {
+  const late = (
+    given: { readonly firstPeriodEnd?: `${number}-${number}-${number}`; readonly dueDays?: number },
+    statements: typeof borrower.statements,
+  ) =>
+    beside({
+      inputs: {
+        ...borrower,
+        statements,
+        undertakings: [
+          {
+            id: 1,
+            kind: 'quarterly accounts',
+            everyMonths: 3,
+            dayCount: 'calendar',
+            graceDays: 10,
+            firstPeriodEnd: plainDate(given.firstPeriodEnd ?? '2025-12-31'),
+            dueDays: given.dueDays ?? 45,
+          },
+        ],
+      },
+    })['days late'];
+  const { statements } = borrower;
+  const month = buildStatement('2026-08-31', 1, { revenue: 5 }, { receivedOn: plainDate('2026-11-20') });
+  expect(late({}, [...statements, month])).toBe("The last 4 quarters' accounts came in time.");
+  const without = (...ends: string[]) => statements.filter(({ periodEnd }) => !ends.includes(periodEnd));
+  expect(late({}, without('2026-06-30'))).toBe(
+    "Of the last 4 quarters' accounts 1 has not come; the others came in time.",
+  );
+  expect(late({ dueDays: 38, firstPeriodEnd: '2026-03-31' }, without('2026-03-31', '2026-09-30'))).toBe(
+    "Of the last 3 quarters' accounts 2 have not come; the other came 2 days late.",
+  );
+  expect(late({ firstPeriodEnd: LAST_QUARTER_END }, without(LAST_QUARTER_END))).toBe(
+    "The last quarter's accounts have not come.",
+  );
+  // Awaited, and not due before the day that is looked at.
+  const dueToday = daysBetween(LAST_QUARTER_END, AS_OF);
+  const awaited = { firstPeriodEnd: LAST_QUARTER_END } as const;
+  expect(late({ ...awaited, dueDays: dueToday }, without(LAST_QUARTER_END))).toBeUndefined();
+  expect(late({ ...awaited, dueDays: dueToday - 1 }, without(LAST_QUARTER_END))).toMatch(/have not come/);
 });
 
 test('a second version of a period is a restatement', () => {

@@ -1,8 +1,8 @@
 /** What stands beside reporting quality and is never inside it: methods.md B6. */
-import type { BorrowerInputs } from './borrowerInputs.ts';
+import type { BorrowerInputs, Undertaking } from './borrowerInputs.ts';
 import { deadlineOn, dueDate } from './calendar/deadline.ts';
-import { isSamePeriodEnd } from './calendar/fiscalYear.ts';
-import type { PlainDate } from './calendar/plainDate.ts';
+import { isSamePeriodEnd, reportingMonthEnd } from './calendar/fiscalYear.ts';
+import { addMonthsToMonthEnd, monthCount, type PlainDate } from './calendar/plainDate.ts';
 import { formatDay } from './calendar/printDay.ts';
 import type { CovenantTest } from './covenants/covenantTest.ts';
 import { toSample } from './money/toSample.ts';
@@ -66,40 +66,70 @@ function addBackShare({ tests }: BesideContext): BesideFact | null {
 
 const LATE_PERIODS = 4;
 
+/** Of the quarters that are due, not of every period that came: monthly figures in between were promised to nobody. */
 function daysLate({ inputs, asOf }: BesideContext): BesideFact | null {
   const undertaking = inputs.undertakings.find(({ kind }) => kind === 'quarterly accounts');
   if (!undertaking) return null;
-  const { dueDays: days, dayCount, graceDays, firstPeriodEnd } = undertaking;
-  const arrivals = firstArrivals(inputs.statements, asOf)
-    .filter(({ periodEnd }) => periodEnd >= firstPeriodEnd)
-    .slice(-LATE_PERIODS)
-    .map(
-      ({ periodEnd, receivedOn: day }) =>
-        deadlineOn({ due: dueDate({ periodEnd, days, dayCount }), graceDays, dayCount, day }).daysLate,
-    );
-  if (arrivals.length === 0) return null;
-  const whose =
-    arrivals.length === 1 ? "The last quarter's accounts" : `The last ${arrivals.length} quarters' accounts`;
-  const sentence = arrivals.every((late) => late === 0)
-    ? `${whose} came in time.`
-    : `${whose} came ${arrivals.join(', ')} days late${arrivals.length === 1 ? '' : ', the latest last'}.`;
-  return { fact: 'days late', sentence };
+  const due = duePeriods(undertaking, firstArrivals(inputs.statements, asOf), asOf).slice(-LATE_PERIODS);
+  if (due.length === 0) return null;
+  return {
+    fact: 'days late',
+    sentence: latenessOf(
+      due.length,
+      due.flatMap(({ late }) => late ?? []),
+    ),
+  };
 }
 
-/** The day on which the first figures of each period came, oldest period first. */
-function firstArrivals(
-  statements: readonly Statement[],
+interface DuePeriod {
+  /** Days after the due date; null where nothing has come and the date is past. */
+  readonly late: number | null;
+}
+
+/** Oldest first, from the first period that is kept here. */
+function duePeriods(
+  { dueDays: days, dayCount, graceDays, firstPeriodEnd, everyMonths }: Undertaking,
+  arrivals: ReadonlyMap<PlainDate, PlainDate>,
   asOf: PlainDate,
-): readonly { readonly periodEnd: PlainDate; readonly receivedOn: PlainDate }[] {
+): readonly DuePeriod[] {
+  const [earliest] = [...arrivals.keys()].sort();
+  if (earliest === undefined) return [];
+  const count = Math.floor((monthCount(asOf) - monthCount(firstPeriodEnd)) / everyMonths) + 1;
+  return Array.from({ length: Math.max(0, count) }, (_, k) =>
+    addMonthsToMonthEnd(firstPeriodEnd, k * everyMonths),
+  )
+    .filter((periodEnd) => periodEnd >= earliest && periodEnd < asOf)
+    .flatMap((periodEnd): readonly DuePeriod[] => {
+      const receivedOn = arrivals.get(periodEnd);
+      const due = dueDate({ periodEnd, days, dayCount });
+      const { daysLate: late } = deadlineOn({ due, graceDays, dayCount, day: receivedOn ?? asOf });
+      if (receivedOn !== undefined) return [{ late }];
+      return late > 0 ? [{ late: null }] : [];
+    });
+}
+
+function latenessOf(due: number, came: readonly number[]): string {
+  const whose = due === 1 ? "last quarter's accounts" : `last ${due} quarters' accounts`;
+  if (came.length === 0) return `The ${whose} have not come.`;
+  const how = came.every((late) => late === 0)
+    ? 'in time'
+    : `${came.join(', ')} days late${came.length === 1 ? '' : ', the latest last'}`;
+  const missing = due - came.length;
+  if (missing === 0) return `The ${whose} came ${how}.`;
+  const others = came.length === 1 ? 'the other' : 'the others';
+  return `Of the ${whose} ${missing} ${missing === 1 ? 'has' : 'have'} not come; ${others} came ${how}.`;
+}
+
+/** The day on which the first figures of each month end came. */
+function firstArrivals(statements: readonly Statement[], asOf: PlainDate): ReadonlyMap<PlainDate, PlainDate> {
   const first = new Map<PlainDate, PlainDate>();
   for (const { periodEnd, receivedOn, months, basis } of statements) {
     if (months === 0 || basis === 'forecast' || receivedOn > asOf) continue;
-    const known = first.get(periodEnd);
-    if (known === undefined || receivedOn < known) first.set(periodEnd, receivedOn);
+    const monthEnd = reportingMonthEnd(periodEnd);
+    const known = first.get(monthEnd);
+    if (known === undefined || receivedOn < known) first.set(monthEnd, receivedOn);
   }
-  return [...first]
-    .sort(([a], [b]) => (a < b ? -1 : 1))
-    .map(([periodEnd, receivedOn]) => ({ periodEnd, receivedOn }));
+  return first;
 }
 
 function restatements({ books }: BesideContext): BesideFact | null {

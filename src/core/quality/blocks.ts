@@ -31,15 +31,15 @@ const UNEXPLAINED_INPUTS: readonly PeerFigure[] = [
   'revenuePrior',
 ];
 
+const NO_MODEL =
+  'too few peers for the accrual model, or theirs rests on property, plant and equipment gross or net where this borrower gives the other';
+
 function unexplainedBlock({ peer, compared, standing }: BlockContext): QualityBlock {
   const share = compared.unexplainedAccruals;
   if (share === null) {
     const ppe = peer.figures.ppeGross === undefined && peer.figures.ppeNet === undefined;
     const missing = missingFigures(peer, [...UNEXPLAINED_INPUTS, ...(ppe ? (['ppeGross'] as const) : [])]);
-    return without(
-      'unexplained accruals',
-      brokenSeries(peer) ?? missing ?? 'too few peers for the accrual model',
-    );
+    return without('unexplained accruals', brokenSeries(peer) ?? missing ?? NO_MODEL);
   }
   const place = standing('unexplainedAccruals');
   if (!place) return without('unexplained accruals', NOBODY, { unexplainedShare: share });

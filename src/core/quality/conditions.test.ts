@@ -31,13 +31,13 @@ test('equity below nought is said, nought is not', () => {
   expect(conditions([25, 25, 25, 25], -1)[0]).toMatch(/^Equity is negative/);
 });
 
-test('first quarters are said until three are scored', () => {
+test('fewer than three scored quarter ends are said, of a new borrower as of one that reports by halves', () => {
   const flat = [25, 25, 25, 25];
   expect(conditions(flat, 5, [{ score: 60 }])).toEqual([
-    'Only 1 quarter end is scored so far: the headline rests on it alone.',
+    'Only 1 of the last three quarter ends is scored: the headline rests on it alone.',
   ]);
   expect(conditions(flat, 5, [{ score: null }, { score: 60 }, { score: 61 }])).toEqual([
-    'Only 2 quarter ends are scored so far: the headline is their mean.',
+    'Only 2 of the last three quarter ends are scored: the headline is their mean.',
   ]);
   expect(conditions(flat, 5, [{ score: null }])).toEqual([]);
 });

@@ -10,7 +10,7 @@ const SEASONAL_SHARE = 0.33;
 /**
  * The conditions of the latest quarter end. Source: methods.md B5 and B6.
  *
- * @example conditionsOf(accounts, [{ score: 61 }]) // => ['Only 1 quarter end is scored so far: the headline rests on it alone.']
+ * @example conditionsOf(accounts, [{ score: 61 }]) // => ['Only 1 of the last three quarter ends is scored: the headline rests on it alone.']
  */
 export const conditionsOf = (
   accounts: AccountsAt,
@@ -39,8 +39,8 @@ function firstQuarters(quarters: readonly Pick<QuarterScore, 'score'>[]): string
   const scored = quarters.filter(({ score }) => score !== null).length;
   if (scored === 0 || scored >= QUALITY_TABLE.headlineQuarters) return null;
   return scored === 1
-    ? 'Only 1 quarter end is scored so far: the headline rests on it alone.'
-    : 'Only 2 quarter ends are scored so far: the headline is their mean.';
+    ? 'Only 1 of the last three quarter ends is scored: the headline rests on it alone.'
+    : 'Only 2 of the last three quarter ends are scored: the headline is their mean.';
 }
 
 function negativeEquity({ balance }: AccountsAt): string | null {

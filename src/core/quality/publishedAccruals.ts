@@ -99,11 +99,13 @@ function conversions(peer: PeerInputs, remarks: readonly string[]): Measures {
 }
 
 /**
- * Why there is no cash conversion.
+ * Why there is no cash conversion, where there is none.
  *
  * @example withoutConversion(peer) // => 'EBITDA is not above 1\u00a0% of revenue'
  */
 export const withoutConversion = (peer: PeerInputs): string =>
   brokenSeries(peer) ??
   missingFigures(peer, ['ebitda', 'cfo', 'interestPaid', 'taxPaid', 'nwcPrior', 'revenue', 'revenuePrior']) ??
-  'EBITDA is not above 1\u00a0% of revenue';
+  (peer.figures.revenuePrior! > 0
+    ? 'EBITDA is not above 1\u00a0% of revenue'
+    : 'revenue of the year before is not positive');

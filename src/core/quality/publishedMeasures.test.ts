@@ -88,6 +88,14 @@ test('a cash flow that is derived is said, and with an acquisition there is none
   expect(acquirer('sloan').remarks).toEqual(['an acquisition in the year moves the balance sheets as well']);
 });
 
+test('why there is no cash conversion is said: no revenue to grow from is not a thin margin', () => {
+  const reasonOf = (firm: Firm) => measuresOf(firm)('cash-conversion').reason;
+  expect(reasonOf({ yearBefore: { ...YEAR_BEFORE, revenue: 0 } })).toBe(
+    'revenue of the year before is not positive',
+  );
+  expect(reasonOf({ year: { ...YEAR, revenue: 2000 } })).toBe('EBITDA is not above 1\u00a0% of revenue');
+});
+
 test('nothing is filled in for distress scores', () => {
   const noRetained = measuresOf({ closing: without(CLOSING, 'retained_earnings') });
   expect(noRetained('altman-any-trade').reason).toBe('missing: retained earnings');

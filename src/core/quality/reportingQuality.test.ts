@@ -5,7 +5,9 @@ import { POLICY_VERSION_1 } from '../policy.ts';
 import { AS_OF, buildBook, buildBorrower } from './book.fixture.ts';
 import { buildCrossSection, type CrossSection } from './crossSection.ts';
 import { openBooks } from '../statements/statementBook.ts';
+import type { PeerFigure, PeerInputs } from './peerFigures.ts';
 import { peerInputsOfQuarters } from './peerInputs.ts';
+import { scoreQuarter } from './quarterScore.ts';
 import { reportingQuality } from './reportingQuality.ts';
 import { QUALITY_BLOCKS } from './score.ts';
 
@@ -38,6 +40,23 @@ test('every borrower of an ordinary book is scored with 95 of 100 points of weig
     expect(quality.headline).toBeLessThanOrEqual(100);
     expect(quality.history).toHaveLength(8);
   }
+});
+
+test('a borrower that gives plant only gross has no place in a group that is on net, and it is not called few peers alone', () => {
+  const lacking = (peer: PeerInputs, figure: PeerFigure): PeerInputs => ({
+    ...peer,
+    figures: Object.fromEntries(Object.entries(peer.figures).filter(([name]) => name !== figure)),
+  });
+  const [first, second, ...rest] = buildBook(16, 'metal goods', 1).map((borrower) =>
+    peerInputsOfQuarters(borrower, AS_OF).at(-1)!,
+  );
+  const onNet = buildCrossSection([lacking(first!, 'ppeGross'), second!, ...rest], 1);
+  const blockOf = (peer: PeerInputs) =>
+    scoreQuarter(peer, onNet).blocks.find(({ name }) => name === 'unexplained accruals')!;
+  expect(blockOf(second!).risk).not.toBeNull();
+  const onlyGross = blockOf(lacking(second!, 'ppeNet'));
+  expect(onlyGross.risk).toBeNull();
+  expect(onlyGross.reason).toMatch(/gross or net where this borrower gives the other$/);
 });
 
 test('with twenty-four quarters every point of weight is there', () => {
