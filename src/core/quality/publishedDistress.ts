@@ -8,7 +8,7 @@ import type { Given, Measures } from './publishedMeasure.ts';
 /** Of US prices over 1968 = 100, from memory; a tenth more or less moves O by 0.04. */
 const PRICE_LEVEL = 680;
 
-/** Currencies taken for dollars in the size of assets: none is further off than moves O by 0.2. */
+/** Currencies taken for dollars in the size of assets: none is further off than moves O by a quarter. */
 const NEAR_DOLLARS: readonly string[] = ['USD', 'EUR', 'GBP', 'CHF', 'CAD', 'AUD', 'NZD', 'SGD'];
 
 /**

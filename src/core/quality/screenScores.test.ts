@@ -90,6 +90,16 @@ test('securities held for the long term are no soft assets', () => {
   expect(aqi(1000)).toBeLessThan(aqi(0));
 });
 
+test('securities that were carried and are blank now leave asset quality at one, those never carried are none', () => {
+  const opening = { ...published.opening, investments: 1000 };
+  expect(mScreen(accountsOfFirm({ ...published, opening }), true)).toMatchObject({
+    filled: ['aqi'],
+    indices: { aqi: null },
+  });
+  const none = mScreen(accountsOfFirm({ ...published, opening: { ...opening, investments: 0 } }), true);
+  expect('indices' in none && none.indices.aqi).not.toBeNull();
+});
+
 test('the F-score of the invented firm comes out of its statements', () => {
   const f = fScreen(accountsOfFirm());
   // Reference vector q-025, computed in Python.

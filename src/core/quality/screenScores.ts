@@ -71,7 +71,8 @@ function beneishYear(accounts: AccountsAt, back: Back, hasCashFlow: boolean): Be
     receivables: accounts.balance('receivables', back),
     currentAssets: accounts.balance('current_assets', back),
     ppeNet: accounts.balance('ppe_net', back),
-    longTermSecurities: accounts.balance('investments', back),
+    // Not a number rather than left out, which would be none: once carried a blank is missing, and with it the index.
+    longTermSecurities: accounts.optionalBalance('investments', back) ?? NaN,
     totalAssets: accounts.balance('total_assets', back),
     currentLiabilities: accounts.balance('current_liabilities', back),
     longTermDebt: Number.isNaN(debt) ? undefined : debt,
