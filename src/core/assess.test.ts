@@ -73,6 +73,25 @@ test('the smallest headroom is over the latest live tests; later levels are kept
   expect(ahead?.mayFall.toFixed(4)).toBe('-0.0615');
 });
 
+test('a covenant that goes on holiday has no headroom at a step that another one takes in it', () => {
+  const [leverage, ratio] = inputs.covenants;
+  const onHoliday = {
+    ...leverage!,
+    levels: [buildLevel('2024-01-01', '2026-05-31', '3.5'), buildLevel('2026-06-01', null, null)],
+  };
+  const steppingAt = (from: PlainDate) => ({
+    ...ratio!,
+    levels: [buildLevel('2024-01-01', null, '1.2'), buildLevel(from, null, '1.3')],
+  });
+  const ahead = (from: PlainDate) => {
+    const covenants = [onHoliday, steppingAt(from)];
+    const { tests } = assess({ ...inputs, covenants }, nobody, policy, asOf);
+    return smallestHeadroomsAhead(tests, [1, 2]).map(({ covenantId }) => covenantId);
+  };
+  expect(ahead('2026-05-31')).toEqual([1]);
+  expect(ahead('2026-06-01')).toEqual([2]);
+});
+
 test('a first period that ends a few days after its month end is tested on the month end', () => {
   const late = buildYear('2025-01-03', { ebitda: 12, debt: 30, cash: 0 });
   const { tests } = assess({ ...inputs, statements: late }, nobody, policy, asOf);

@@ -64,9 +64,15 @@ export function smallestHeadroomsAhead(
 export const tightestAhead = (ahead: readonly SmallestHeadroomAhead[]): SmallestHeadroomAhead | null =>
   smallest(ahead);
 
-/** Against the level in force on that day, which is today's where no step comes before it. */
-const mayFallFrom = (test: CovenantTest, day: PlainDate): Decimal | null =>
-  (test.againstLaterLevels.findLast(({ from }) => from <= day) ?? test.headroom).mayFall;
+/** Against the level in force on that day, which is today's where no step comes before it; a holiday leaves none. */
+function mayFallFrom(
+  { againstLaterLevels, nextLevel, headroom }: CovenantTest,
+  day: PlainDate,
+): Decimal | null {
+  const later = againstLaterLevels.findLast(({ from }) => from <= day);
+  if (later) return later.mayFall;
+  return nextLevel?.level === null && nextLevel.from <= day ? null : headroom.mayFall;
+}
 
 /**
  * The covenants whose headroom is the borrower's: those of agreements, or, where it has none, the desk's own triggers.
