@@ -67,6 +67,19 @@ describe('why it moved', () => {
     ]);
   });
 
+  test('another result on the same basis under the same version is put down to the method too', () => {
+    const today = resultOn(basis());
+    const [first] = today.result.tests;
+    const stored = {
+      ...today,
+      result: { ...today.result, tests: [{ ...first!, tested: decimal('2.9') }] },
+    };
+    expect(ofTest(whyItMoved(stored, today))).toMatchObject({
+      after: { figure: decimal('3') },
+      steps: [{ cause: 'method', from: { figure: decimal('2.9') }, to: { figure: decimal('3') } }],
+    });
+  });
+
   test('a waiver is a change of terms', () => {
     const inputs = inputsWith(51, '3.5');
     const waiver = {

@@ -71,13 +71,17 @@ interface Stage {
   readonly result: Assessment;
 }
 
-/** A part that did not change makes no stage; the last stage is today's result itself. */
+/**
+ * A part that did not change makes no stage; the last stage is today's result itself. Where nothing that it rests on
+ * changed, it was computed otherwise.
+ */
 function stagesBetween(
   before: { readonly basis: Basis; readonly result: Assessment },
   now: { readonly basis: Basis; readonly result: Assessment },
 ): readonly Stage[] {
   const changes = exchanges(before, now).filter(({ isChanged }) => isChanged);
   const stages: Stage[] = [{ cause: 'method', result: before.result }];
+  if (changes.length === 0) stages.push({ cause: 'method', result: now.result });
   let basis = before.basis;
   changes.forEach(({ cause, exchange }, place) => {
     basis = exchange(basis);
