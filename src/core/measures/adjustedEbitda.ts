@@ -8,7 +8,7 @@ import { bridgeFigure, bridgeSubtotal, type BridgeLine } from './bridge.ts';
 import type { AddBack, MeasureDefinition, MeasureRequest } from './definition.ts';
 import { ebitdaIn } from './ebitda.ts';
 import { ebitdaChecks } from './ebitdaChecks.ts';
-import { leaseRentIn } from './leaseRent.ts';
+import { LEASE_RENT, leaseRentIn } from './leaseRent.ts';
 
 export interface Earnings {
   /** Adjusted EBITDA, as the covenant defines it. */
@@ -35,11 +35,7 @@ export function adjustedEbitda(request: MeasureRequest): Earnings {
       ])
     : reported.ebitda;
   const checks = reported.ebitda.kind === 'value' ? ebitdaChecks(request, reported.ebitda) : [];
-  const bridge = [
-    ...reported.bridge,
-    ...checks,
-    ...(rent ? bridgeFigure('Rent of leases, by the rules at signing', rent, -1) : []),
-  ];
+  const bridge = [...reported.bridge, ...checks, ...(rent ? bridgeFigure(LEASE_RENT, rent, -1) : [])];
   const addBacks = addBacksWithin(request.months, request.addBacks, request.date);
   if (ebitda.kind !== 'value') return { reading: ebitda, addBacksTaken: ZERO, bridge };
   if (addBacks.length === 0)

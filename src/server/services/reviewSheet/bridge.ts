@@ -1,12 +1,13 @@
 /** Section 9: the way from reported to covenant EBITDA, each add-back with its evidence, the cap, the source cells. */
 import type { BridgeRow, CovenantView } from '../../../contracts/borrowers.ts';
 import type { SheetBlock, SheetCell, SheetColumn } from '../../../contracts/reviewSheet.ts';
-import { plainDate, type PlainDate } from '../../../core/calendar/plainDate.ts';
+import { plainDate } from '../../../core/calendar/plainDate.ts';
 import { dayText } from '../../../core/calendar/printDay.ts';
 import type { AddBack, Covenant } from '../../../core/covenants/covenant.ts';
 import { COUNTERFACTUAL_WORDS, testedInWords, wouldHaveBeen } from '../../../core/covenants/wording.ts';
 import { addBacksWithin, allowAddBacks } from '../../../core/measures/addBacks.ts';
 import { monthsOfFlow } from '../../../core/measures/annualised.ts';
+import { LEASE_RENT } from '../../../core/measures/leaseRent.ts';
 import { Decimal, decimal } from '../../../core/money/decimal.ts';
 import { formatMoney, formatShare, formatShareLevel } from '../../../core/money/print.ts';
 import { absent, amountCell, notRecorded, textCell } from './cells.ts';
@@ -67,12 +68,13 @@ const beginsWith = (rows: readonly BridgeRow[], start: readonly BridgeRow[]): bo
 function bridgeBlocks(material: SheetMaterial, bridge: Bridge): readonly SheetBlock[] {
   const { covenant, testDate, rows, alsoFor } = bridge;
   const terms = termsOf(material, covenant);
-  const recorded = terms ? addBacksOn(terms, plainDate(testDate)) : [];
+  const months = terms ? monthsOfFlow(terms.definition, terms, plainDate(testDate)) : 12;
+  const recorded = terms ? addBacksWithin(months, terms.addBacks, plainDate(testDate)) : [];
   const addBackRows = rows.filter(({ kind }) => kind === 'add-back');
   return [
     {
       kind: 'table',
-      caption: `${covenantName(covenant)}, twelve months to ${dayText(testDate)}, ${covenant.currency}`,
+      caption: `${covenantName(covenant)}, ${months === 12 ? 'twelve' : months} months to ${dayText(testDate)}, ${covenant.currency}`,
       columns: COLUMNS,
       rows: rows.map((row) => bridgeRow(material, row, recordedOf(row, addBackRows, recorded))),
     },
@@ -86,10 +88,6 @@ function bridgeBlocks(material: SheetMaterial, bridge: Bridge): readonly SheetBl
     },
   ];
 }
-
-/** Over the months of the test, which are fewer where the agreement annualises the first ones. */
-const addBacksOn = (terms: Covenant, testDate: PlainDate): readonly AddBack[] =>
-  addBacksWithin(monthsOfFlow(terms.definition, terms, testDate), terms.addBacks, testDate);
 
 /** The add-backs of a bridge stand in the order in which they are recorded. */
 function recordedOf(
@@ -138,10 +136,11 @@ function capLine(
 ): string {
   const reported = rows.find(({ kind, label }) => kind === 'subtotal' && label.endsWith('EBITDA'));
   if (addBackCap === null || !reported) return 'No cap on add-backs is recorded.';
+  const rent = rows.find(({ label }) => label === LEASE_RENT);
   const sumOf = (capped: boolean) =>
     Decimal.sum(0, ...recorded.filter((one) => one.capped === capped).map(({ amount }) => amount));
   const { limit, allowed } = allowAddBacks({
-    ebitda: decimal(reported.amount),
+    ebitda: decimal(reported.amount).plus(decimal(rent?.amount ?? 0)),
     uncapped: sumOf(false),
     capped: sumOf(true),
     terms: { cap: addBackCap, basis: addBackCapBasis },

@@ -261,6 +261,22 @@ test('the bridge leads from net income to covenant EBITDA with cap, evidence and
   ]);
 });
 
+// Own arithmetic: half of 10 less 2 of rent, not half of 10.
+test('the cap is taken of EBITDA after the rent that the rules at signing take from it', () => {
+  const [leverage] = COVENANTS;
+  const frozen = {
+    ...leverage!,
+    definition: { ...leverage!.definition, accounting: 'frozen', addBackCap: decimal('0.5') },
+  } as const;
+  const statements = buildYear('2025-12-31', { ebitda: 10, debt: 30, cash: 0 }).map((statement) =>
+    statement.months === 0
+      ? statement
+      : { ...statement, amounts: { ...statement.amounts, rent_paid: decimal(-2) } },
+  );
+  const [cap] = textsOf(reviewSheet(buildMaterial({ covenants: [frozen], statements })), 9);
+  expect(cap).toContain('Cap on add-backs 50\u00a0% of EBITDA before the capped add-backs: EUR 4.');
+});
+
 test('just passing is k of n tests with its days', () => {
   const near = reviewSheet(
     buildMaterial({
