@@ -47,11 +47,15 @@ export interface AccountsAt {
  */
 export function accountsAt(book: StatementBook, quarterEnd: PlainDate): AccountsAt {
   const read: (readonly InputUsed[])[] = [];
-  const usedIds = new Set<number>();
+  // Put together only where it is asked for: most figures are read more than once.
+  const usedIds = (): ReadonlySet<number> => {
+    const ids = new Set<number>();
+    for (const inputs of new Set(read)) for (const { statementId } of inputs) ids.add(statementId);
+    return ids;
+  };
   const sample = (reading: Reading): number | undefined => {
     if (reading.kind !== 'value') return undefined;
     read.push(reading.inputs);
-    for (const { statementId } of reading.inputs) usedIds.add(statementId);
     return toSample(reading.value);
   };
   const samples = samplesOf(book);
@@ -69,7 +73,6 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
       const found = samples(route, line, dateOf(back.months));
       if (found === null) return undefined;
       read.push(found.inputs);
-      for (const id of found.statementIds) usedIds.add(id);
       return found.value;
     };
   return {
@@ -84,7 +87,7 @@ export function accountsAt(book: StatementBook, quarterEnd: PlainDate): Accounts
     hasBalanceSheet: ({ months }) => book.statementOf(dateOf(months), 0) !== null,
     isMissing: (line) => lastTwelveMonths(book, line, quarterEnd).kind === 'missing',
     sample,
-    used: () => [...usedIds].flatMap((id) => book.statementById(id) ?? []),
+    used: () => [...usedIds()].flatMap((id) => book.statementById(id) ?? []),
     cells: () => read.flat(),
   };
 }

@@ -21,8 +21,6 @@ export type Route = keyof typeof ROUTES;
 export interface Sample {
   readonly value: number;
   readonly inputs: readonly InputUsed[];
-  /** Of the inputs, each once. */
-  readonly statementIds: readonly number[];
 }
 
 type Samples = (route: Route, line: LineItemCode, date: PlainDate) => Sample | null;
@@ -60,7 +58,6 @@ function readOnce(book: StatementBook): Samples {
 const sampleOf = (value: Decimal, inputs: readonly InputUsed[]): Sample => ({
   value: toSample(value),
   inputs,
-  statementIds: [...new Set(inputs.map(({ statementId }) => statementId))],
 });
 
 /** The inner map under the key, made on first sight. */
