@@ -47,6 +47,9 @@ export function QualitySummary({
           {latest.score === null ? 'no score' : Math.round(latest.score)}
         </h3>
       )}
+      {latest?.score === null && quality.headline !== null && (
+        <p>{latest.noScoreReason} The headline is of the quarter ends before it.</p>
+      )}
       {latest && <BlockList blocks={latest.blocks} />}
       {quality.explanations.length > 0 && (
         <ul className="explanations">
