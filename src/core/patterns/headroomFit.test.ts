@@ -3,6 +3,7 @@ import { expect, test } from 'vitest';
 import { normalCdf, normalDensity } from '../statistics/normalDistribution.ts';
 import { fitHeadrooms } from './headroomFit.ts';
 import { headroomGrid, headroomSample, NEAR_LINE, nearProbabilities } from './headroomGrid.ts';
+import { roomFor } from './headroomLikelihoods.ts';
 
 const grid = headroomGrid(NEAR_LINE);
 const headroom = fc.double({ min: -0.6, max: 0.9, noNaN: true });
@@ -54,6 +55,36 @@ test('does not see where within the window the near tests lie', () => {
     fit(lying(near)).chances.map(({ passing: onSide, failing: off }) => onSide / (onSide + off)),
   );
   passing!.forEach((share, k) => expect(share).toBeCloseTo(failing![k]!, 3));
+});
+
+test('a group fitted without holding the likelihoods gives the same figures', () => {
+  const samples = Array.from({ length: 30 }, (_, k) =>
+    headroomSample([k / 50 - 0.1, k / 60, 0.01, 0.2], NEAR_LINE),
+  );
+  expect(fitHeadrooms(grid, samples, roomFor(grid, 1))).toEqual(fitHeadrooms(grid, samples));
+});
+
+test('a series far from its peers is weighed as exactly, though likelihood and prior hardly meet', () => {
+  const peers = Array.from({ length: 2_000 }, (_, k) =>
+    Array.from({ length: 60 }, (_, n) => 0.1 + (k % 3) / 1e3 + n / 1e4),
+  );
+  const far = Array.from({ length: 60 }, (_, n) => 0.75 + n / 1e4);
+  const { chances, prior } = fit([far, ...peers]);
+  const logWeights = [...grid.means].flatMap((mean) =>
+    [...grid.logSpreads].map((logSpread) => {
+      const squares = far.reduce((sum, value) => sum + ((value - mean) / Math.exp(logSpread)) ** 2, 0);
+      return (
+        -0.5 * (far.length * logSpread + squares / 2) -
+        ((mean - prior.mean) / prior.meanSpread) ** 2 / 2 -
+        ((logSpread - prior.logSpread) / prior.logSpreadSpread) ** 2 / 2
+      );
+    }),
+  );
+  const heaviest = Math.max(...logWeights);
+  const weights = logWeights.map((logWeight) => Math.exp(logWeight - heaviest));
+  const sum = weights.reduce((total, weight) => total + weight);
+  const passing = weights.reduce((total, weight, cell) => total + weight * grid.passing[cell]!, 0) / sum;
+  expect(chances[0]!.passing / passing).toBeCloseTo(1, 9);
 });
 
 test('the window is closed on its left and open on its right', () => {

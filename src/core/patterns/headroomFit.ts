@@ -1,4 +1,12 @@
+/** Where the headrooms of a peer group lie, with the window around the limit left out of the question. */
 import type { HeadroomGrid, HeadroomSample } from './headroomGrid.ts';
+import {
+  likelihoodsOfGroup,
+  likelihoodWriter,
+  NEGLIGIBLE,
+  roomFor,
+  weightOf,
+} from './headroomLikelihoods.ts';
 
 /** Normal priors of a peer group over the mean of headroom and over the log of its spread. */
 export interface HeadroomPrior {
@@ -20,8 +28,6 @@ export interface HeadroomFit {
   readonly prior: HeadroomPrior;
 }
 
-/** Likelihoods are taken to this power: LTM ratios share three of four quarters with their neighbour. */
-const TEMPERING = 0.5;
 const PASSES = 3;
 const LEAST = {
   meanSpread: 0.02,
@@ -30,8 +36,8 @@ const LEAST = {
   logSpreadVariance: 0.01,
   spread: 0.01,
 };
-/** Cells lighter than the heaviest by e^45 add nothing that a double could hold. */
-const NEGLIGIBLE = 45;
+/** Above this sum of weights the likelihoods left out, lighter than their heaviest by e^90, are negligible. */
+const LEAST_SUM = Math.exp(-NEGLIGIBLE);
 
 /**
  * Fits a normal headroom to every series of a peer group by empirical Bayes, with the window around the limit
@@ -39,20 +45,25 @@ const NEGLIGIBLE = 45;
  *
  * Posterior weights on the grid from the tempered likelihood and the group's prior; the prior is refitted from the
  * posteriors, three passes, of which the third's weights are kept. Steps: series x 765 x 3, whatever their length.
+ * `room` is memory to work in, overwritten: one for many groups.
  * Source: methods.md Part C 5.2. Throws RangeError for an empty group.
  *
  * @example fitHeadrooms({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] }, [{ passing: 1, failing: 0, outside: 2, sumOutside: 0.3, sumOfSquaresOutside: 0.05, median: 0.1, robustSpread: 0.1 }]).chances[0].passing // => 0.05
  */
-export function fitHeadrooms(grid: HeadroomGrid, samples: readonly HeadroomSample[]): HeadroomFit {
+export function fitHeadrooms(
+  grid: HeadroomGrid,
+  samples: readonly HeadroomSample[],
+  room: Float64Array = roomFor(grid, samples.length),
+): HeadroomFit {
   if (samples.length === 0) throw new RangeError('fitHeadrooms needs at least one series');
-  const weigher = weigherOf(grid);
+  const weigher = weigherOf(grid, samples, room);
   let prior = startingPrior(samples);
-  for (let pass = 1; ; pass += 1) {
+  for (let pass = 1; pass < PASSES; pass += 1) {
     weigher.take(prior);
-    const posteriors = samples.map((sample) => weigher.weigh(sample));
-    if (pass === PASSES) return { chances: posteriors, prior };
-    prior = refitted(posteriors);
+    prior = refitted(samples.map((_, k) => weigher.moments(k)));
   }
+  weigher.take(prior);
+  return { chances: samples.map((_, k) => weigher.chances(k)), prior };
 }
 
 function startingPrior(samples: readonly HeadroomSample[]): HeadroomPrior {
@@ -68,7 +79,7 @@ function startingPrior(samples: readonly HeadroomSample[]): HeadroomPrior {
   };
 }
 
-interface Posterior extends NearChances {
+interface Posterior {
   readonly mean: number;
   readonly meanVariance: number;
   readonly logSpread: number;
@@ -94,85 +105,108 @@ function momentsOf(values: readonly number[]): { readonly mean: number; readonly
   return { mean, variance: values.reduce((sum, value) => sum + (value - mean) ** 2, 0) / values.length };
 }
 
-/** Weighs the cells for one series after another, in one piece of memory. */
-function weigherOf({ means, logSpreads, passing, failing, logNear }: HeadroomGrid): {
-  take: (prior: HeadroomPrior) => void;
-  weigh: (sample: HeadroomSample) => Posterior;
-} {
+interface Weigher {
+  /** Weighs with this prior from now on. */
+  readonly take: (prior: HeadroomPrior) => void;
+  readonly moments: (series: number) => Posterior;
+  readonly chances: (series: number) => NearChances;
+}
+
+/**
+ * Weighs the cells for one series after another, where most of the time of a whole book is spent: a weight is the
+ * likelihood of the series, taken once, times the prior of the pass, taken once for all series.
+ */
+function weigherOf(grid: HeadroomGrid, samples: readonly HeadroomSample[], room: Float64Array): Weigher {
+  const { means, logSpreads, passing, failing } = grid;
   const spreads = logSpreads.length;
-  const halfPrecisions = logSpreads.map((logSpread) => Math.exp(-2 * logSpread) / 2);
-  const priors = new Float64Array(logNear.length);
-  const exponents = new Float64Array(logNear.length);
-  const heaviestOfMean = new Float64Array(means.length);
+  const cells = means.length * spreads;
+  const logPriors = new Float64Array(cells);
+  const priors = new Float64Array(cells);
+  const weights = new Float64Array(cells);
+  const likelihoodOf = likelihoodWriter(grid);
+  const likelihoodsOf = likelihoodsOfGroup(grid, samples, likelihoodOf, room);
 
   const take = (prior: HeadroomPrior): void => {
-    for (let m = 0; m < means.length; m += 1)
-      for (let s = 0; s < spreads; s += 1)
-        priors[m * spreads + s] =
+    let heaviest = -Infinity;
+    for (let m = 0, cell = 0; m < means.length; m += 1)
+      for (let s = 0; s < spreads; s += 1, cell += 1) {
+        const logPrior =
           -(((means[m]! - prior.mean) / prior.meanSpread) ** 2) / 2 -
           ((logSpreads[s]! - prior.logSpread) / prior.logSpreadSpread) ** 2 / 2;
-  };
-
-  const heaviestOf = (sample: HeadroomSample): number => {
-    const { outside: count, sumOutside, sumOfSquaresOutside } = sample;
-    const near = TEMPERING * (sample.passing + sample.failing);
-    let heaviest = -Infinity;
-    for (let m = 0, cell = 0; m < means.length; m += 1) {
-      const mean = means[m]!;
-      const squares = sumOfSquaresOutside - 2 * mean * sumOutside + count * mean * mean;
-      let heaviestHere = -Infinity;
-      for (let s = 0; s < spreads; s += 1, cell += 1) {
-        const outside = count * logSpreads[s]! + squares * halfPrecisions[s]!;
-        const exponent = priors[cell]! + near * logNear[cell]! - TEMPERING * outside;
-        exponents[cell] = exponent;
-        if (exponent > heaviestHere) heaviestHere = exponent;
+        logPriors[cell] = logPrior;
+        if (logPrior > heaviest) heaviest = logPrior;
       }
-      heaviestOfMean[m] = heaviestHere;
-      if (heaviestHere > heaviest) heaviest = heaviestHere;
-    }
-    return heaviest;
+    for (let cell = 0; cell < cells; cell += 1) priors[cell] = weightOf(logPriors[cell]! - heaviest);
   };
 
-  // Sums in variables of their own: most of the time of a whole book is spent here.
-  const weigh = (sample: HeadroomSample): Posterior => {
-    const heaviest = heaviestOf(sample);
-    let sumOfWeights = 0;
-    let sumPassing = 0;
-    let sumFailing = 0;
+  /** Fills `weights` between two cells and gives these and the sum; elsewhere they are negligible. */
+  const weigh = (series: number): Weighed => {
+    const { held, at, from, to } = likelihoodsOf(series);
+    let sum = 0;
+    for (let cell = from; cell < to; cell += 1) {
+      const weight = held[at + cell]! * priors[cell]!;
+      weights[cell] = weight;
+      sum += weight;
+    }
+    return sum > LEAST_SUM ? { from, to, sum } : weighInLogs(samples[series]!);
+  };
+
+  // Where the prior lies so far from the likelihood that their product would lose its digits.
+  const weighInLogs = (sample: HeadroomSample): Weighed => {
+    const heaviest = likelihoodOf(sample, logPriors, weights);
+    let sum = 0;
+    for (let cell = 0; cell < cells; cell += 1) {
+      const weight = Math.exp(weights[cell]! - heaviest);
+      weights[cell] = weight;
+      sum += weight;
+    }
+    return { from: 0, to: cells, sum };
+  };
+
+  const moments = (series: number): Posterior => {
+    const { from, to, sum } = weigh(series);
     let sumMean = 0;
     let sumMeanSquare = 0;
     let sumLogSpread = 0;
     let sumLogSpreadSquare = 0;
-    for (let m = 0; m < means.length; m += 1) {
-      if (heaviestOfMean[m]! - heaviest < -NEGLIGIBLE) continue;
-      const mean = means[m]!;
-      for (let s = 0, cell = m * spreads; s < spreads; s += 1, cell += 1) {
-        const exponent = exponents[cell]! - heaviest;
-        if (exponent < -NEGLIGIBLE) continue;
-        const weight = Math.exp(exponent);
-        const logSpread = logSpreads[s]!;
-        const weightedMean = weight * mean;
-        const weightedLogSpread = weight * logSpread;
-        sumOfWeights += weight;
-        sumPassing += weight * passing[cell]!;
-        sumFailing += weight * failing[cell]!;
-        sumMean += weightedMean;
-        sumMeanSquare += weightedMean * mean;
+    for (let m = Math.trunc(from / spreads), cell = from; cell < to; m += 1) {
+      let ofMean = 0;
+      for (let s = 0; s < spreads; s += 1, cell += 1) {
+        const weight = weights[cell]!;
+        const weightedLogSpread = weight * logSpreads[s]!;
+        ofMean += weight;
         sumLogSpread += weightedLogSpread;
-        sumLogSpreadSquare += weightedLogSpread * logSpread;
+        sumLogSpreadSquare += weightedLogSpread * logSpreads[s]!;
       }
+      sumMean += ofMean * means[m]!;
+      sumMeanSquare += ofMean * means[m]! * means[m]!;
     }
-    const mean = sumMean / sumOfWeights;
-    const logSpread = sumLogSpread / sumOfWeights;
+    const mean = sumMean / sum;
+    const logSpread = sumLogSpread / sum;
     return {
-      passing: sumPassing / sumOfWeights,
-      failing: sumFailing / sumOfWeights,
       mean,
-      meanVariance: sumMeanSquare / sumOfWeights - mean * mean,
+      meanVariance: sumMeanSquare / sum - mean * mean,
       logSpread,
-      logSpreadVariance: sumLogSpreadSquare / sumOfWeights - logSpread * logSpread,
+      logSpreadVariance: sumLogSpreadSquare / sum - logSpread * logSpread,
     };
   };
 
-  return { take, weigh };
+  const chances = (series: number): NearChances => {
+    const { from, to, sum } = weigh(series);
+    let sumPassing = 0;
+    let sumFailing = 0;
+    for (let cell = from; cell < to; cell += 1) {
+      sumPassing += weights[cell]! * passing[cell]!;
+      sumFailing += weights[cell]! * failing[cell]!;
+    }
+    return { passing: sumPassing / sum, failing: sumFailing / sum };
+  };
+
+  return { take, moments, chances };
+}
+
+interface Weighed {
+  readonly from: number;
+  readonly to: number;
+  readonly sum: number;
 }

@@ -7,6 +7,7 @@ import {
   type HeadroomSample,
   type NearLine,
 } from './headroomGrid.ts';
+import { roomFor } from './headroomLikelihoods.ts';
 import { FEWEST_NEAR, nearLineEvidence, type NearLineEvidence } from './nearLineEvidence.ts';
 
 /** The headrooms of one borrower under one covenant, as shares of the level. */
@@ -97,14 +98,17 @@ function fitByPeers(
   near: NearLine,
 ): readonly PeerFit[] {
   const grid = headroomGrid(near);
+  const groups = groupedBy(series.keys(), (k) => series[k]!.sector);
+  const room = roomFor(grid, Math.max(0, ...[...groups.values()].map(({ length }) => length)));
   const fits = new Array<PeerFit>(series.length);
   const leaning: number[] = [];
-  for (const members of groupedBy(series.keys(), (k) => series[k]!.sector).values()) {
+  for (const members of groups.values()) {
     if (members.length < FEWEST_PEERS) leaning.push(...members);
     else
       fitHeadrooms(
         grid,
         members.map((k) => samples[k]!),
+        room,
       ).chances.forEach((chances, place) => {
         fits[members[place]!] = { chances, peers: 'sector', peerCount: members.length };
       });
