@@ -1,8 +1,9 @@
 /** What the figures said before a restatement and what they say after it. */
 import { addDays, daysBetween, type PlainDate } from '../calendar/plainDate.ts';
 import { isSamePeriodEnd, reportingMonthEnd } from '../calendar/fiscalYear.ts';
+import type { Covenant } from '../covenants/covenant.ts';
 import { isMet, isNotMet, type Outcome } from '../covenants/covenantTest.ts';
-import { testCovenant } from '../covenants/testCovenant.ts';
+import { underlyingOutcomeOf } from '../covenants/testCovenant.ts';
 import { ebitdaOfTwelveMonths } from '../measures/ebitda.ts';
 import type { Decimal } from '../money/decimal.ts';
 import { STATEMENT_SCOPES, type Statement } from '../statements/statement.ts';
@@ -39,16 +40,48 @@ export interface Restatement {
  *
  * @example restatementsOf(nightOf({ ebitda: 12, debt: 45, cash: 6 })) // => []
  */
-export const restatementsOf = (context: AlertContext): readonly Restatement[] =>
-  restatementDays(context).map((day) => {
-    const before = openBooks(context.inputs, addDays(day.receivedOn, -1));
-    const after = openBooks(context.inputs, day.receivedOn);
+export function restatementsOf(context: AlertContext): readonly Restatement[] {
+  const knownOn = knowledgeOf(context);
+  return restatementDays(context).map((day) => {
+    const before = knownOn(addDays(day.receivedOn, -1));
+    const after = knownOn(day.receivedOn);
     return {
       receivedOn: day.receivedOn,
-      earnings: earningsMoves(before, after, day),
+      earnings: earningsMoves(before.books, after.books, day),
       outcomes: outcomeMoves(context, before, after, day),
     };
   });
+}
+
+/** The books as they were known, and the outcomes that they give. */
+interface Knowledge {
+  readonly books: Books;
+  readonly outcomeOf: (covenant: Covenant, testDate: PlainDate) => Outcome;
+}
+
+/** What was known on a day, opened once for all days on which it was the same. */
+function knowledgeOf({ inputs, policy }: AlertContext): (day: PlainDate) => Knowledge {
+  const receivedOn = [...new Set(inputs.statements.map((statement) => statement.receivedOn))].sort();
+  const opened = new Map<PlainDate | null, Knowledge>();
+  return (day) => {
+    const lastReceivedOn = receivedOn.findLast((received) => received <= day) ?? null;
+    const known = opened.get(lastReceivedOn);
+    if (known) return known;
+    const books = openBooks(inputs, day);
+    const outcomes = new Map<string, Outcome>();
+    const outcomeOf = (covenant: Covenant, testDate: PlainDate): Outcome => {
+      const key = `${covenant.id} ${testDate}`;
+      const outcome =
+        outcomes.get(key) ??
+        underlyingOutcomeOf(covenant, books[covenant.scope], testDate, policy, inputs.rates);
+      outcomes.set(key, outcome);
+      return outcome;
+    };
+    const knowledge = { books, outcomeOf };
+    opened.set(lastReceivedOn, knowledge);
+    return knowledge;
+  };
+}
 
 interface RestatementDay {
   readonly receivedOn: PlainDate;
@@ -101,9 +134,9 @@ function earningsMoves(
 }
 
 function outcomeMoves(
-  { inputs, tests, policy, asOf }: AlertContext,
-  before: Books,
-  after: Books,
+  { inputs, tests }: AlertContext,
+  before: Knowledge,
+  after: Knowledge,
   { receivedOn, earliestPeriodEnd }: RestatementDay,
 ): readonly OutcomeMove[] {
   return inputs.covenants.flatMap((covenant) => {
@@ -111,10 +144,8 @@ function outcomeMoves(
       (test) =>
         test.covenantId === covenant.id && test.testDate >= earliestPeriodEnd && test.testDate < receivedOn,
     );
-    const outcomeFrom = (books: Books, testDate: PlainDate): Outcome =>
-      testCovenant(covenant, books[covenant.scope], testDate, policy, asOf, inputs.rates).underlyingOutcome;
     return dates.flatMap(({ testDate }) => {
-      const [was, is] = [outcomeFrom(before, testDate), outcomeFrom(after, testDate)];
+      const [was, is] = [before.outcomeOf(covenant, testDate), after.outcomeOf(covenant, testDate)];
       if (standing(was) === null || standing(was) === standing(is)) return [];
       return [{ covenantId: covenant.id, testDate, before: was, after: is }];
     });

@@ -37,11 +37,8 @@ export function testCovenant(
   asOf: PlainDate,
   rates: readonly CurrencyRate[] = [],
 ): CovenantTest {
-  const figures = figuresOf(covenant, book, testDate, rates);
-  const inForce = levelInForce(covenant.levels, testDate);
+  const { figures, sprung, nothing } = groundsOf(covenant, book, testDate, rates);
   const { level } = figures;
-  const sprung = covenant.springing && springingOn(covenant.springing, book, testDate);
-  const nothing = notSprung(sprung, withoutResult(covenant, testDate, inForce, figures), figures);
   const { measure, operator, roundingPlaces } = covenant;
   const common = {
     covenantId: covenant.id,
@@ -68,6 +65,40 @@ export function testCovenant(
     ...common,
     ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf, lastDay }),
   };
+}
+
+/**
+ * The outcome underneath of a test, whatever was waived, without all that is shown of it.
+ *
+ * @example underlyingOutcomeOf(covenant, book, '2026-09-30', POLICY_VERSION_1) // => 'met'
+ */
+export function underlyingOutcomeOf(
+  covenant: Covenant,
+  book: StatementBook,
+  testDate: PlainDate,
+  policy: Policy,
+  rates: readonly CurrencyRate[] = [],
+): Outcome {
+  const { figures, nothing } = groundsOf(covenant, book, testDate, rates);
+  if (nothing) return nothing.outcome;
+  const { measure, operator, roundingPlaces } = covenant;
+  const { sides, level } = figures;
+  if (!sides || !level) throw new Error(`covenant ${covenant.id} on ${testDate}: no sides or no level`);
+  return thinOrNot(holdAgainstLevel(MEASURES[measure], sides, { operator, level, roundingPlaces }), policy);
+}
+
+/** What a test rests on, and why there is no result where there is none. */
+function groundsOf(
+  covenant: Covenant,
+  book: StatementBook,
+  testDate: PlainDate,
+  rates: readonly CurrencyRate[],
+): { readonly figures: Figures; readonly sprung: SpringingOn | null; readonly nothing: Held | null } {
+  const figures = figuresOf(covenant, book, testDate, rates);
+  const inForce = levelInForce(covenant.levels, testDate);
+  const sprung = covenant.springing && springingOn(covenant.springing, book, testDate);
+  const nothing = notSprung(sprung, withoutResult(covenant, testDate, inForce, figures), figures);
+  return { figures, sprung, nothing };
 }
 
 /** What only the tests beside it, the undertakings and the other figures of the borrower can tell: withRights, assess. */
