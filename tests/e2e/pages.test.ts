@@ -14,7 +14,7 @@ const NARROW_BY_NIGHT = { width: 390, height: 844, colorScheme: 'dark' } as cons
 const VIEWS = [WIDE_BY_DAY, NARROW_BY_NIGHT];
 
 /** Where tables begin to fold and where a phone ends. */
-const WIDTHS = [1440, 1024, 960, 768, 390, 320];
+const WIDTHS = [1440, 1024, 1000, 768, 390, 320];
 
 /** The pages are the same for every role but for their buttons: each page's rules are run in both views. */
 const ROLES = [

@@ -81,17 +81,13 @@ export const currentStatements = (
  *
  * @example inForceByPeriodEnd(versionsByPeriod(statements)).at(-1)?.months // => 9
  */
-export const inForceByPeriodEnd = (versions: ReturnType<typeof versionsByPeriod>): readonly Statement[] =>
+const inForceByPeriodEnd = (versions: ReturnType<typeof versionsByPeriod>): readonly Statement[] =>
   [...versions.values()]
     .flatMap((byEnd) => [...byEnd.values()].map(inForce))
     .sort((a, b) => compareText(a.periodEnd, b.periodEnd) || a.months - b.months);
 
-/**
- * The statement in force among versions of one period.
- *
- * @example inForce([statements[0]]).months // => 9
- */
-export const inForce = ([first, ...others]: Versions): Statement => others.reduce(better, first);
+/** The statement in force among versions of one period. */
+const inForce = ([first, ...others]: Versions): Statement => others.reduce(better, first);
 
 function better(one: Statement, other: Statement): Statement {
   const order =
