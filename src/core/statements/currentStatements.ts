@@ -81,7 +81,7 @@ export const currentStatements = (
  *
  * @example inForceByPeriodEnd(versionsByPeriod(statements)).at(-1)?.months // => 9
  */
-const inForceByPeriodEnd = (versions: ReturnType<typeof versionsByPeriod>): readonly Statement[] =>
+export const inForceByPeriodEnd = (versions: ReturnType<typeof versionsByPeriod>): readonly Statement[] =>
   [...versions.values()]
     .flatMap((byEnd) => [...byEnd.values()].map(inForce))
     .sort((a, b) => compareText(a.periodEnd, b.periodEnd) || a.months - b.months);
