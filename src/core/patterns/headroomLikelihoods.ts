@@ -8,7 +8,11 @@ export const NEGLIGIBLE = 45;
 /** Likelihoods of a larger group are not held for the next pass: 6 kB a series. */
 const MOST_HELD = 4_000;
 
-/** Memory in which groups of up to so many series can be fitted one after another. */
+/**
+ * Memory in which groups of up to so many series can be fitted one after another.
+ *
+ * @example roomFor({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] }, 3).length // => 3
+ */
 export const roomFor = ({ logNear: { length: cells } }: HeadroomGrid, series: number): Float64Array =>
   new Float64Array(cells * (series > MOST_HELD ? 1 : series));
 
@@ -20,7 +24,12 @@ interface Likelihoods {
   readonly to: number;
 }
 
-/** The tempered likelihoods of every series, held for all passes unless the group is too large for that. */
+/**
+ * The tempered likelihoods of every series, the largest of each being one; held for all passes unless `held` is too
+ * small for that.
+ *
+ * @example likelihoodsOfGroup({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] }, [{ passing: 0, failing: 0, outside: 1, sumOutside: 0.1, sumOfSquaresOutside: 0.01, median: 0.1, robustSpread: 0.1 }], likelihoodWriter({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] }), roomFor({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] }, 1))(0).held[0] // => 1
+ */
 export function likelihoodsOfGroup(
   grid: HeadroomGrid,
   samples: readonly HeadroomSample[],
@@ -66,12 +75,21 @@ function layLikelihoods(
   return { from, to };
 }
 
-/** Nought where it is too light to count beside a heaviest of one, so that nothing is multiplied with traces. */
+/**
+ * The weight of an exponent, nought where it is too light to count beside a heaviest of one: so nothing is multiplied
+ * with traces.
+ *
+ * @example weightOf(-91) // => 0
+ */
 export const weightOf = (exponent: number): number => (exponent < -2 * NEGLIGIBLE ? 0 : Math.exp(exponent));
 
-/** Writes the tempered log likelihood of every cell, added to what stands in `base`, and gives the largest. */
 type LikelihoodWriter = (sample: HeadroomSample, base: Float64Array, into: Float64Array) => number;
 
+/**
+ * Writes the tempered log likelihood of every cell, added to what stands in `base`, and gives the largest.
+ *
+ * @example likelihoodWriter({ means: [0.1], logSpreads: [-2], passing: [0.05], failing: [0.1], logNear: [-1.9] })({ passing: 0, failing: 0, outside: 1, sumOutside: 0.1, sumOfSquaresOutside: 0.01, median: 0.1, robustSpread: 0.1 }, [0], [0]) // => 1
+ */
 export function likelihoodWriter({ means, logSpreads, logNear }: HeadroomGrid): LikelihoodWriter {
   const spreads = logSpreads.length;
   const halfPrecisions = logSpreads.map((logSpread) => Math.exp(-2 * logSpread) / 2);
