@@ -38,11 +38,17 @@ export type Shaped = Pick<Measure, 'shape' | 'earningsSide' | 'withoutCharge' | 
 
 /**
  * Holds a result against a level: the verdict, and every form of headroom.
+ * `knownRatio` is what the sides came to against another level already: it is not divided again.
  *
  * @example holdAgainstLevel(netLeverage, { numerator: decimal(42), denominator: decimal(15) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }).headroom.mayFall // => 0.2
  */
-export function holdAgainstLevel(measure: Shaped, sides: Sides, terms: Terms): Held {
-  const verdict = verdictOn(measure, sides, terms);
+export function holdAgainstLevel(
+  measure: Shaped,
+  sides: Sides,
+  terms: Terms,
+  knownRatio: Decimal | null = null,
+): Held {
+  const verdict = verdictOn(measure, sides, terms, knownRatio);
   const { tested } = verdict;
   const forms = tested === null ? NO_HEADROOM : formsOf(measure.shape, sides, tested, terms);
   return { ...verdict, headroom: { ...forms, fallOf: fallOf(measure) } };
@@ -71,12 +77,17 @@ function formsOf(
  *
  * @example verdictOn(netLeverage, { numerator: decimal(45), denominator: decimal(12) }, { operator: '<=', level: decimal('3.5'), roundingPlaces: null }).outcome // => 'not met'
  */
-export function verdictOn(measure: Shaped, sides: Sides, terms: Terms): Verdict {
+export function verdictOn(
+  measure: Shaped,
+  sides: Sides,
+  terms: Terms,
+  knownRatio: Decimal | null = null,
+): Verdict {
   switch (measure.shape) {
     case 'burden':
-      return onBurden(measure, sides, terms);
+      return onBurden(measure, sides, terms, knownRatio);
     case 'cover':
-      return onCover(measure, sides, terms);
+      return onCover(measure, sides, terms, knownRatio);
     case 'amount':
       return compared(sides.numerator, terms);
     default:
@@ -88,10 +99,11 @@ function onBurden(
   { words, withoutCharge }: Shaped,
   { numerator: burden, denominator: carrier }: Sides,
   terms: Terms,
+  knownRatio: Decimal | null,
 ): Verdict {
   if (!carrier || !isMaximum(terms.operator)) return doesNotFit(terms.operator);
   if (carrier.gt(0)) {
-    const ratio = burden.div(carrier);
+    const ratio = knownRatio ?? burden.div(carrier);
     if (burden.gt(0)) return compared(ratio, terms);
     if (withoutCharge === 'met') return { ...compared(ratio, terms), reason: `no ${words.otherSide}` };
     return { ...withoutRatio('met, net cash', 'net cash'), tested: ratio };
@@ -105,9 +117,10 @@ function onCover(
   { words, withoutCharge }: Shaped,
   { numerator: covers, denominator: charge }: Sides,
   terms: Terms,
+  knownRatio: Decimal | null,
 ): Verdict {
   if (!charge || isMaximum(terms.operator)) return doesNotFit(terms.operator);
-  if (charge.gt(0)) return compared(covers.div(charge), terms);
+  if (charge.gt(0)) return compared(knownRatio ?? covers.div(charge), terms);
   const nothing = `no ${words.charge} to cover`;
   return covers.gt(0) || withoutCharge === 'met'
     ? withoutRatio('met, no charge to cover', nothing)

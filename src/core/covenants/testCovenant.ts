@@ -5,8 +5,8 @@ import { formatDay } from '../calendar/printDay.ts';
 import type { CurrencyRate } from '../measures/definition.ts';
 import { MEASURES } from '../measures/index.ts';
 import type { Measure } from '../measures/measured.ts';
+import type { Decimal } from '../money/decimal.ts';
 import type { Policy } from '../policy.ts';
-import { daysOfFlow, DAYS_OF_LONGEST_YEAR, lengthInWords } from '../statements/periodLength.ts';
 import type { StatementBook } from '../statements/statementBook.ts';
 import { withoutAddBacks } from './counterfactual.ts';
 import type { Covenant, Waiver } from './covenant.ts';
@@ -16,6 +16,7 @@ import { fallOf, NO_HEADROOM, type Sides } from './headroom.ts';
 import { holdAgainstLevel, verdictOn, type Held, type Terms } from './holdAgainstLevel.ts';
 import { hasResult } from './latestLiveTest.ts';
 import { laterLevels, levelInForce } from './levels.ts';
+import { remarks } from './remarks.ts';
 import { springingOn, type SpringingOn } from './springing.ts';
 import { withoutResult } from './withoutResult.ts';
 
@@ -38,14 +39,16 @@ export function testCovenant(
   rates: readonly CurrencyRate[] = [],
 ): CovenantTest {
   const { figures, sprung, nothing } = groundsOf(covenant, book, testDate, rates);
-  const { level } = figures;
-  const { measure, operator, roundingPlaces } = covenant;
-  const common = {
+  const { measure, operator } = covenant;
+  const said = nothing
+    ? nothingSaid(nothing, covenant)
+    : withResult(covenant, book, figures, { testDate, policy, asOf });
+  return {
     covenantId: covenant.id,
     measure,
     testDate,
     operator,
-    level,
+    level: figures.level,
     nextLevel: nextLevelOf(covenant, testDate),
     numerator: figures.sides?.numerator ?? null,
     denominator: figures.sides?.denominator ?? null,
@@ -53,18 +56,45 @@ export function testCovenant(
     inputs: [...figures.inputs, ...figures.levelInputs],
     earnings: figures.sides?.earnings ?? null,
     missing: figures.missing,
-    ...STANDING_LATER,
     springing: sprung?.standing ?? null,
+    // Only the tests beside it, the undertakings and the other figures of the borrower can tell: withRights, assess.
+    roomInDeviations: null,
+    cure: null,
+    isFirstUnderReset: false,
+    tested: said.tested,
+    outcome: said.outcome,
+    underlyingOutcome: said.underlyingOutcome,
+    reason: said.reason,
+    headroom: said.headroom,
+    againstLaterLevels: said.againstLaterLevels,
+    justPassing: said.justPassing,
+    counterfactuals: said.counterfactuals,
+    otherAccounting: said.otherAccounting,
+    waiver: said.waiver,
   };
-  if (nothing) return { ...common, ...nothingSaid(nothing, covenant) };
-  if (!figures.sides || !level)
-    throw new Error(`covenant ${covenant.id} on ${testDate}: no sides or no level`);
-  const terms = { operator, level, roundingPlaces };
+}
+
+function withResult(
+  covenant: Covenant,
+  book: StatementBook,
+  figures: Figures,
+  {
+    testDate,
+    policy,
+    asOf,
+  }: { readonly testDate: PlainDate; readonly policy: Policy; readonly asOf: PlainDate },
+): Said {
+  const { sides, level } = figures;
+  if (!sides || !level) throw new Error(`covenant ${covenant.id} on ${testDate}: no sides or no level`);
+  const { operator, roundingPlaces } = covenant;
   const lastDay = lastDayOfResult(covenant, book, testDate);
-  return {
-    ...common,
-    ...resultSaid(covenant, figures, figures.sides, terms, { testDate, policy, asOf, lastDay }),
-  };
+  return resultSaid(
+    covenant,
+    figures,
+    sides,
+    { operator, level, roundingPlaces },
+    { testDate, policy, asOf, lastDay },
+  );
 }
 
 /**
@@ -100,9 +130,6 @@ function groundsOf(
   const nothing = notSprung(sprung, withoutResult(covenant, testDate, inForce, figures), figures);
   return { figures, sprung, nothing };
 }
-
-/** What only the tests beside it, the undertakings and the other figures of the borrower can tell: withRights, assess. */
-const STANDING_LATER = { roomInDeviations: null, cure: null, isFirstUnderReset: false } as const;
 
 /**
  * Below its share of drawings a covenant is not tested, whatever its figures came to; where the drawings are not
@@ -178,7 +205,7 @@ function resultSaid(
     waiver: waiver && { grantedOn: waiver.grantedOn, until: waiver.until, conditions: waiver.conditions },
     reason: remarks(covenant, held, figures, waiver ? null : ranOut(granted)),
     headroom: held.headroom,
-    againstLaterLevels: hasResult(held) ? againstLater(covenant, on, sides) : [],
+    againstLaterLevels: hasResult(held) ? againstLater(covenant, on, sides, held.tested) : [],
     justPassing: isJustPassing(held, on.policy),
     otherAccounting: byTodaysRules(measure, figures, terms),
     counterfactuals: hasResult(held) ? withoutAddBacks(measure, sides, terms, figures.addBacksTaken) : [],
@@ -195,34 +222,6 @@ function byTodaysRules(
   const { tested, outcome } = verdictOn(measure, otherSides, terms);
   const { numerator, denominator } = otherSides;
   return { accounting: 'current', numerator, denominator, tested, outcome };
-}
-
-/** Why the outcome is what it is, and what it rests on; null where there is nothing to say. */
-function remarks(
-  { roundingPlaces }: Covenant,
-  held: Held,
-  figures: Figures,
-  waiverGone: string | null,
-): string | null {
-  const said = [
-    held.reason,
-    waiverGone,
-    held.roundingDecides ? `at the ${roundingPlaces} decimal places that the agreement rounds to` : null,
-    ...(hasResult(held) ? [...figures.remarks, ...restsOnWhat(figures)] : []),
-  ].filter((remark) => remark !== null);
-  return said.length > 0 ? said.join('; ') : null;
-}
-
-function restsOnWhat({ statements, inputs }: Figures): readonly (string | null)[] {
-  const frameworks = [...new Set(statements.map(({ framework }) => framework))].sort();
-  const days = daysOfFlow(statements, inputs);
-  return [
-    statements.some(({ tie }) => tie === 'does-not-tie') ? 'rests on figures that do not tie' : null,
-    frameworks.length > 1
-      ? `rests on ${frameworks.length === 2 ? 'two' : frameworks.length} accounting frameworks: ${frameworks.join(', ')}`
-      : null,
-    days !== null && days > DAYS_OF_LONGEST_YEAR ? `rests on ${lengthInWords(days)}` : null,
-  ];
 }
 
 function nextLevelOf({ levels }: Covenant, testDate: PlainDate): CovenantTest['nextLevel'] {
@@ -258,11 +257,17 @@ function againstLater(
   covenant: Covenant,
   { testDate, lastDay }: { readonly testDate: PlainDate; readonly lastDay: PlainDate | null },
   sides: Sides,
+  tested: Decimal | null,
 ): CovenantTest['againstLaterLevels'] {
   return laterLevels(covenant.levels, testDate).flatMap(({ from, level }) => {
     if (level === null || (lastDay !== null && from > lastDay)) return [];
     const { operator, roundingPlaces } = covenant;
-    const held = holdAgainstLevel(MEASURES[covenant.measure], sides, { operator, level, roundingPlaces });
+    const held = holdAgainstLevel(
+      MEASURES[covenant.measure],
+      sides,
+      { operator, level, roundingPlaces },
+      tested,
+    );
     const { mayFall, shareOfLevel, moneyLeft, otherSideMayRise } = held.headroom;
     return [{ from, level, outcome: held.outcome, mayFall, shareOfLevel, moneyLeft, otherSideMayRise }];
   });
