@@ -15,6 +15,7 @@ import { lenderDay } from './lenderDay.ts';
 import { earliestChange } from './policyDays.ts';
 import { readPolicyProposal, type StoredPolicyProposal } from './policyRows.ts';
 import { changedNames } from './proposePolicy.ts';
+import { whyNotDecided } from './whyNotDecided.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 interface Decided {
@@ -46,7 +47,7 @@ export function decidePolicy(
       text: decision.text,
       now: actor.now,
     });
-    if (!decided) return refusal(proposal, request.version, actor.person.id);
+    if (!decided) return whyNotDecided(proposal, request.version, actor.person.id);
 
     const applied =
       state === 'approved'
@@ -117,7 +118,7 @@ export function withdrawPolicy(
         detail: 'Only the person who proposed this can withdraw it. Nothing was changed.',
       });
     if (!(await withdrawProposal(tx, { ...request, personId: actor.person.id })))
-      return refusal(proposal, request.version, null);
+      return whyNotDecided(proposal, request.version, null);
     await audit(tx, actor, {
       action: 'withdraw-policy',
       subjectKind: 'proposal',
@@ -129,23 +130,5 @@ export function withdrawPolicy(
       after: { state: 'withdrawn' },
     });
     return ok({ id: proposal.id });
-  });
-}
-
-function refusal(proposal: PolicyProposalRecord, version: number, deciderId: number | null): Outcome<never> {
-  if (proposal.state !== 'proposed')
-    return err({
-      kind: 'conflict',
-      detail: `This proposal was ${proposal.state}${proposal.decidedBy ? ` by ${proposal.decidedBy}` : ''}. Nothing was changed.`,
-    });
-  if (deciderId !== null && proposal.proposedById === deciderId)
-    return err({
-      kind: 'not-allowed',
-      detail: 'You proposed this; a committee member who is somebody else decides it. Nothing was changed.',
-    });
-  return err({
-    kind: 'stale',
-    detail: `This proposal changed since you opened it (you saw version ${version}). Nothing was changed. Read it again and decide.`,
-    currentVersion: proposal.version,
   });
 }

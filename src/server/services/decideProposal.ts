@@ -17,6 +17,7 @@ import { changeEntry, insertEntry, standingEntry } from '../db/repositories/watc
 import type { Transaction } from 'sequelize';
 import type { PersonActor } from './actor.ts';
 import { lenderDay } from './lenderDay.ts';
+import { whyNotDecided } from './whyNotDecided.ts';
 import { audit, write, type Outcome } from './write.ts';
 
 const stored = z.string().transform((text) => newWatchlistProposal.parse(JSON.parse(text)));
@@ -38,7 +39,7 @@ export function decideProposal(
       text: decision.text,
       now: actor.now,
     });
-    if (!decided) return refusal(proposal, request.version, actor.person.id);
+    if (!decided) return whyNotDecided(proposal, request.version, actor.person.id);
 
     const content = stored.parse(proposal.content);
     if (state === 'approved') {
@@ -72,7 +73,7 @@ export function withdrawProposal(
         detail: 'Only the person who proposed this can withdraw it. Nothing was changed.',
       });
     if (!(await withdrawRecord(tx, { ...request, personId: actor.person.id })))
-      return refusal(proposal, request.version, null);
+      return whyNotDecided(proposal, request.version, null);
     await release(tx, actor, stored.parse(proposal.content), { what: 'Proposal withdrawn', text: '' });
     await audit(tx, actor, {
       action: 'withdraw-proposal',
@@ -137,22 +138,4 @@ async function release(
   const state = alert.takenBy === null ? 'raised' : 'taken';
   const moved = await moveAlert(tx, { ...event, alert, state, personId: actor.person.id, now: actor.now });
   if (!moved) throw new Error(`alert ${alert.id} was held and moved all the same`);
-}
-
-function refusal(proposal: ProposalRecord, version: number, deciderId: number | null): Outcome<never> {
-  if (proposal.state !== 'proposed')
-    return err({
-      kind: 'conflict',
-      detail: `This proposal was ${proposal.state}${proposal.decidedBy ? ` by ${proposal.decidedBy}` : ''}. Nothing was changed.`,
-    });
-  if (deciderId !== null && proposal.proposedById === deciderId)
-    return err({
-      kind: 'not-allowed',
-      detail: 'You proposed this; another committee member decides it. Nothing was changed.',
-    });
-  return err({
-    kind: 'stale',
-    detail: `This proposal changed since you opened it (you saw version ${version}). Nothing was changed. Read it again and decide.`,
-    currentVersion: proposal.version,
-  });
 }
