@@ -1,12 +1,8 @@
 import { dayText } from '../../core/calendar/printDay.ts';
 import { useState } from 'react';
 import { proposalDecision, type ProposalRow } from '../../contracts/watchlist.ts';
-import { HUMAN_DECISION_REQUIRED } from '../../core/cautions.ts';
-import { Button } from '../ui/Button.tsx';
-import { Dialog, DialogActions } from '../ui/Dialog.tsx';
-import { ErrorState } from '../ui/ErrorState.tsx';
-import { TextArea } from '../ui/Field.tsx';
-import { Caution } from '../ui/States.tsx';
+import { DecisionForm } from '../ui/DecisionForm.tsx';
+import { Dialog } from '../ui/Dialog.tsx';
 import { useSending } from '../ui/useSending.ts';
 
 interface DecideProposalProps {
@@ -47,29 +43,17 @@ export function DecideProposal({ proposal, onClose, onDone }: DecideProposalProp
             Review sheet of {proposal.borrowerName}
           </a>
         </p>
-        <TextArea
-          label="Reason for the decision"
-          rows={3}
-          value={text}
-          error={fault}
-          onChange={(event) => setText(event.target.value)}
+        <DecisionForm
+          reason={text}
+          fault={fault}
+          onReason={setText}
+          problem={sending.problem}
+          busy={sending.busy}
+          agreeLabel="Approve"
+          onAgree={() => void decide('approve')}
+          onDecline={() => void decide('decline')}
+          onClose={onClose}
         />
-        {sending.problem && <ErrorState problem={sending.problem} />}
-        <Caution>{HUMAN_DECISION_REQUIRED}</Caution>
-        <DialogActions>
-          <Button onClick={onClose}>Leave it</Button>
-          <Button busy={sending.busy} onClick={() => void decide('decline')}>
-            Decline
-          </Button>
-          <Button
-            look="primary"
-            busy={sending.busy}
-            busyLabel="Sending…"
-            onClick={() => void decide('approve')}
-          >
-            Approve
-          </Button>
-        </DialogActions>
       </div>
     </Dialog>
   );
